@@ -157,17 +157,19 @@ describe("notebook files", () => {
     expect(await readdir(folder)).toEqual(["a.ipynb"]);
   });
 
-  it.skipIf(process.platform === "win32")("keeps the old file when the disk refuses — oracle: file size limit", async () => {
-    const file = path.join(folder, "a.ipynb");
-    await writeFile(file, "old");
-    const module = new URL("../../../dist/kernel/notebook/file.js", import.meta.url);
-    const script = `import { writeAtomically } from ${JSON.stringify(module.href)};
+  it.skipIf(process.platform === "win32")(
+    "keeps the old file when the disk refuses — oracle: file size limit",
+    async () => {
+      const file = path.join(folder, "a.ipynb");
+      await writeFile(file, "old");
+      const module = new URL("../../../dist/kernel/notebook/file.js", import.meta.url);
+      const script = `import { writeAtomically } from ${JSON.stringify(module.href)};
       await writeAtomically(${JSON.stringify(file)}, "x".repeat(1e6)).catch((error) => process.stdout.write(error.message));`;
-    const limited = `trap "" XFSZ; ulimit -f 64; exec "$0" --input-type=module -e "$1"`;
-    const { stdout } = spawnSync("bash", ["-c", limited, process.execPath, script], { encoding: "utf8" });
-    expect(stdout).toBe(`${file}: larger than files may be here`);
-    expect(await readFile(file, "utf8")).toBe("old");
-    expect(await readdir(folder)).toEqual(["a.ipynb"]);
-  });
-});
+      const limited = `trap "" XFSZ; ulimit -f 64; exec "$0" --input-type=module -e "$1"`;
+      const { stdout } = spawnSync("bash", ["-c", limited, process.execPath, script], { encoding: "utf8" });
+      expect(stdout).toBe(`${file}: larger than files may be here`);
+      expect(await readFile(file, "utf8")).toBe("old");
+      expect(await readdir(folder)).toEqual(["a.ipynb"]);
+    },
+  );
 });

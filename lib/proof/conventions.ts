@@ -53,7 +53,10 @@ const ROWS = {
   },
   j: { item: "j", text: "j = 1728 g2³/Δ, so j(i) = 1728" },
   nome: { item: "nome", text: "q_θ = exp(πiτ) and q_mod = exp(2πiτ), always named" },
-  theta: { item: "theta", text: "{ v } is the argument of sin πv and { z } that of sin z; derivatives are in the named variable" },
+  theta: {
+    item: "theta",
+    text: "{ v } is the argument of sin πv and { z } that of sin z; derivatives are in the named variable",
+  },
   modulus: {
     item: "modulus",
     text: "parameter m = k², m1 = 1 − m; Π(n; φ | m) has the factor 1 − n sin²φ",

@@ -1,7 +1,7 @@
 // Set-up that every command of a fresh clone goes through: packages from the lock file, then the build.
 // Plain JavaScript, because nothing is installed or built when it runs.
 import { spawnSync } from "node:child_process";
-import { existsSync, readdirSync, statSync } from "node:fs";
+import { existsSync, lstatSync, readdirSync, readFileSync, statSync, utimesSync } from "node:fs";
 import { createRequire } from "node:module";
 import path from "node:path";
 import { fileURLToPath } from "node:url";
@@ -16,21 +16,50 @@ function newest(folder) {
     .reduce((latest, entry) => Math.max(latest, age(path.join(entry.parentPath ?? entry.path, entry.name))), 0);
 }
 
+/** Packages by place in node_modules, with their versions, as a lock file tells them. */
+function packagesOf(lockFile) {
+  try {
+    return JSON.parse(readFileSync(lockFile, "utf8")).packages ?? {};
+  } catch {
+    return {};
+  }
+}
+
+/** Is every package of the lock file there, in its version? (Optional ones are for other platforms.) */
+function isInstalled() {
+  const installed = packagesOf(at("node_modules", ".package-lock.json"));
+  return Object.entries(packagesOf(at("package-lock.json"))).every(
+    ([place, { version, optional }]) => place === "" || optional || installed[place]?.version === version,
+  );
+}
+
+/** `npm ci` through a link would empty the folder that others use. */
+function refuseLinkedFolder() {
+  if (!lstatSync(at("node_modules"), { throwIfNoEntry: false })?.isSymbolicLink()) return;
+  process.stderr.write(
+    "halfperiod: node_modules is a link and its packages do not fit; install them where it points to\n",
+  );
+  process.exit(1);
+}
+
+/** Runs a program; its own words are shown only if it fails. */
 function run(command, args, why) {
   process.stderr.write(`halfperiod: ${why}\n`);
   const shell = process.platform === "win32";
-  const { status, error } = spawnSync(command, args, { cwd: root, stdio: ["ignore", 2, 2], shell });
+  const { status, error, stdout, stderr } = spawnSync(command, args, { cwd: root, encoding: "utf8", shell });
   if (error || status !== 0) {
+    process.stderr.write(`${stdout ?? ""}${stderr ?? ""}`);
     process.stderr.write(`halfperiod: ${command} ${args.join(" ")} failed${error ? ` (${error.message})` : ""}\n`);
     process.exit(1);
   }
 }
 
-/** Installs the packages of the lock file if they are missing or older than it, and builds if a source is newer. */
+/** Installs the packages of the lock file if one is missing or of another version, and builds if a source is newer. */
 export function setUp() {
   const sourcesHere = existsSync(at("lib", "index.ts"));
   if (!sourcesHere) return; // an installed package ships its build
-  if (age(at("node_modules", ".package-lock.json")) < age(at("package-lock.json"))) {
+  if (!isInstalled()) {
+    refuseLinkedFolder();
     run("npm", ["ci", "--no-audit", "--no-fund"], "installing packages from the lock file");
   }
   const built = age(at("dist", ".tsbuildinfo"));
@@ -38,6 +67,7 @@ export function setUp() {
   if (built < sources) {
     const tsc = createRequire(at("package.json")).resolve("typescript/bin/tsc");
     run(process.execPath, [tsc, "-p", "tsconfig.json"], "building");
+    utimesSync(at("dist", ".tsbuildinfo"), new Date(), new Date()); // the compiler leaves it alone if nothing changed
   }
 }
 

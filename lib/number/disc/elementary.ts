@@ -1,0 +1,152 @@
+// Roots, exponential and trigonometric functions of discs.
+import { BranchError } from "../../proof/errors.ts";
+import * as real from "../ball/arithmetic.ts";
+import { type Ball, containsZero as ballContainsZero, sign } from "../ball/data.ts";
+import { exp as ballExp, radiusExponent } from "../ball/exp.ts";
+import { sinhCosh } from "../ball/hyperbolic.ts";
+import { sinCos as ballSinCos } from "../ball/trig.ts";
+import { absBig, bitLength, DOWN, pow2, scaledRadius, shift, UP } from "../fixed/bits.ts";
+import { sqrtNear } from "../fixed/isqrt.ts";
+import { mulBall, widenBy } from "./arithmetic.ts";
+import {
+  along,
+  below,
+  containsZero,
+  type Disc,
+  finish,
+  finishScaled,
+  fromBall,
+  fromBalls,
+  hypotSize,
+  imag,
+  imaginary,
+  isZero,
+  zero,
+} from "./data.ts";
+
+/** How a disc that meets the cut of a function is treated. */
+export interface CutOptions {
+  /** "continuous" goes on from the midpoint across the cut. */
+  readonly cut?: "continuous";
+}
+
+/**
+ * Principal √x, real part >= 0.
+ *
+ * Branch   cut along the negative real axis, which belongs to the upper side: √(−4) = 2i for an exactly real argument. A disc
+ *          that meets the cut throws, unless `{ cut: "continuous" }`.
+ * Error    |√(m+t) − √m| <= |√m|·ε/(1 + √(1−ε)) with ε = r/|m|; the root of the midpoint within 5 units.
+ * Throws   BranchError for a disc that meets the cut, or holds 0 without being 0.
+ */
+export function sqrt(x: Disc, prec: number, options: CutOptions = {}): Disc {
+  if (x.axis === "real") {
+    const s = sign(along(x));
+    if (s === -1) return imaginary(real.sqrt(real.neg(along(x)), prec));
+    if (s !== undefined) return fromBall(real.sqrt(along(x), prec));
+  }
+  if (isZero(x)) return zero;
+  if (containsZero(x) || (options.cut !== "continuous" && meetsCut(x))) throw onCut("sqrt", x);
+  return sqrtPlane(x, prec);
+}
+
+/** Whether a disc off the real axis meets the half-line of numbers <= 0. */
+export function meetsCut(x: Disc): boolean {
+  if (x.axis === "real") return false;
+  if (containsZero(x)) return true;
+  if (!ballContainsZero(imag(x))) return false;
+  return x.re < 0n;
+}
+
+export function onCut(subject: string, x: Disc): BranchError {
+  return new BranchError({
+    subject,
+    given: containsZero(x) ? "an enclosure that holds 0" : "an enclosure that meets the negative real axis",
+    expected: "one that is away from the cut",
+    hint: 'Give a sharper argument, or { cut: "continuous" } to go on across the cut from the midpoint.',
+  });
+}
+
+function sqrtPlane(x: Disc, prec: number): Disc {
+  const length = Math.max(bitLength(x.re, prec), bitLength(x.im, prec));
+  let up = 2 * (prec + 3) - length;
+  if ((x.exp - up) % 2 !== 0) up += 1;
+  const a = up >= 0 ? x.re << shift(up) : x.re >> shift(-up);
+  const b = up >= 0 ? x.im << shift(up) : x.im >> shift(-up);
+  const { re, im } = sqrtFixed(a, b);
+  const exp = (x.exp - up) / 2;
+  if (x.rad === 0) {
+    const exact = up >= 0 && re * re - im * im === a && 2n * re * im === b;
+    return finish(re, im, exp, exact ? 0 : 7, prec);
+  }
+  const m = hypotSize(x.re, x.im, prec);
+  const part = scaledRadius(x.rad, -m.e) / below(m.d);
+  const s = hypotSize(re, im, prec);
+  const err = ((s.d + 7) * part) / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN);
+  return finishScaled(re, im, exp, (err + 7 * pow2(-s.e)) * UP, s.e, prec);
+}
+
+/**
+ * √(a + ib) with real part >= 0 for integers, the larger of which has at least 8 bits.
+ * Error    r = |a + ib| within 2; u = √((r + |a|)/2) within 2 + 2/u, and u >= |root|/√2; v = |b|/2u within (v/u)·3 + 1 <= 4: under 6 units in all.
+ */
+function sqrtFixed(a: bigint, b: bigint): { re: bigint; im: bigint } {
+  const r = sqrtNear(a * a + b * b);
+  const u = sqrtNear((r + absBig(a)) >> 1n);
+  const v = absBig(b) / (2n * u);
+  if (a >= 0n) return { re: u, im: b < 0n ? -v : v };
+  return { re: v, im: b < 0n ? -u : u };
+}
+
+/**
+ * e^x.
+ * Error    that of the real factors, and |e^m|·(e^δ − 1) <= |e^m|·2δ for a radius δ <= 1; beyond, |e^m|·e^δ around 0.
+ */
+export function exp(x: Disc, prec: number): Disc {
+  if (x.axis === "real") return fromBall(ballExp(along(x), prec));
+  const work = prec + 6;
+  const angle = ballSinCos({ man: x.im, exp: x.exp, rad: x.axis === "imaginary" ? x.rad : 0 }, work);
+  const turn = fromBalls(angle.cos, angle.sin, work);
+  if (x.axis === "imaginary") return fromBalls(angle.cos, angle.sin, prec);
+  const size = ballExp({ man: x.re, exp: x.exp, rad: 0 }, work);
+  return moved(mulBall(turn, size, work), size, x, prec);
+}
+
+/** y widened by rate·2δ, where the function moves at most at `rate`·e^δ within the radius δ of x. */
+function moved(y: Disc, rate: Ball, x: Disc, prec: number): Disc {
+  if (x.rad === 0) return finish(y.re, y.im, y.exp, y.rad, prec);
+  const delta: Ball = { man: BigInt(Math.ceil(x.rad)), exp: x.exp, rad: 0 };
+  // e^δ − 1 <= 2δ for δ <= 1; else e^δ itself.
+  const factor = radiusExponent(x) <= 0 ? real.ldexp(delta, 1) : ballExp(delta, 32);
+  return widenBy(y, real.mul(rate, factor, 32), prec, false);
+}
+
+export interface SinCos {
+  readonly sin: Disc;
+  readonly cos: Disc;
+}
+
+/**
+ * sin x and cos x together, sin(a + bi) = sin a cosh b + i cos a sinh b, cos(a + bi) = cos a cosh b − i sin a sinh b.
+ * Error    that of the real factors; both functions move at most at the rate cosh(|b| + δ) <= e^(|b| + δ).
+ */
+export function sinCos(x: Disc, prec: number): SinCos {
+  if (x.axis === "real") {
+    const { sin, cos } = ballSinCos(along(x), prec);
+    return { sin: fromBall(sin), cos: fromBall(cos) };
+  }
+  if (x.axis === "imaginary") {
+    const { sinh, cosh } = sinhCosh(along(x), prec);
+    return { sin: imaginary(sinh), cos: fromBall(cosh) };
+  }
+  const work = prec + 8;
+  const { sin: s, cos: c } = ballSinCos({ man: x.re, exp: x.exp, rad: 0 }, work);
+  const { sinh: sh, cosh: ch } = sinhCosh({ man: x.im, exp: x.exp, rad: 0 }, work);
+  const rate = ballExp({ man: absBig(x.im), exp: x.exp, rad: 0 }, 32);
+  const sin = fromBalls(real.mul(s, ch, work), real.mul(c, sh, work), work);
+  const cos = fromBalls(real.mul(c, ch, work), real.neg(real.mul(s, sh, work)), work);
+  return { sin: movedOff(sin, rate, x, prec), cos: movedOff(cos, rate, x, prec) };
+}
+
+function movedOff(y: Disc, rate: Ball, x: Disc, prec: number): Disc {
+  return x.rad === 0 ? y : moved(y, rate, x, prec);
+}

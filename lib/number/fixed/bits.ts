@@ -1,0 +1,123 @@
+// Sizes of BigInts and the doubles that bound them. Everything that an error bound is made of goes through here.
+
+/** One outward step for a chain of up to eight nonnegative double operations: each errs by at most 2^-53 relatively. */
+export const UP = 1 + 2 ** -48;
+/** The same for a lower bound. */
+export const DOWN = 1 - 2 ** -48;
+
+const view = new Float64Array(1);
+const words = new Uint32Array(view.buffer);
+const HIGH = new Uint8Array(new Float64Array([-2]).buffer)[7] ? 1 : 0;
+
+/** Smallest e with |x| < 2^e, for a finite double x that is not 0 and not subnormal; -1022 for those. */
+export function exponent(x: number): number {
+  view[0] = x;
+  return ((words[HIGH]! >>> 20) & 2047) - 1022;
+}
+
+/** 2^k as a double, for use in upper bounds: never less than 2^k while k <= 1023, at least 2^-1000. */
+export function pow2(k: number): number {
+  if (k > 1023) return Infinity;
+  if (k < -1000) k = -1000;
+  words[HIGH] = (k + 1023) << 20;
+  words[1 - HIGH] = 0;
+  return view[0]!;
+}
+
+/** rad·2^k as an upper bound; a radius 0 stays 0 whatever k is. */
+export function scaledRadius(rad: number, k: number): number {
+  return rad === 0 ? 0 : rad * pow2(k);
+}
+
+// Where |n| needs more than 1023 bits a bound is a double times a power of two; `size` leaves the power here.
+let power = 0;
+
+/**
+ * A double d and an integer e (read it at once with `sizePower`) with |n| <= d·2^e, relative excess under 2^-50.
+ * A good `hint` for the number of bits makes this O(1) for long n.
+ */
+export function size(n: bigint, hint: number): number {
+  let d = Number(n);
+  power = 0;
+  if (d === Infinity || d === -Infinity) {
+    let low = hint - 512;
+    d = low > 0 ? Number(n >> shift(low)) : Infinity;
+    if (!(Math.abs(d) < Infinity && Math.abs(d) > 2 ** 60)) {
+      low = bitLength(n, hint) - 512;
+      d = Number(n >> shift(low));
+    }
+    power = low;
+  }
+  // Number() rounds to nearest, and the shift lost less than one unit of a number above 2^60.
+  d = Math.abs(d) * (1 + 2 ** -51);
+  if (d < 2 ** 500) return d;
+  power += 500;
+  return d * 2 ** -500;
+}
+
+/** The exponent that belongs to the last result of `size`. */
+export function sizePower(): number {
+  return power;
+}
+
+const shifts: bigint[] = [];
+
+/** A shift count as a BigInt; the small ones are kept, because making a BigInt costs as much as a short shift. */
+export function shift(k: number): bigint {
+  if (k >= 8192 || k < 0) return BigInt(k);
+  const kept = shifts[k];
+  if (kept !== undefined) return kept;
+  for (let j = shifts.length; j <= k; j++) shifts[j] = BigInt(j);
+  return shifts[k]!;
+}
+
+/**
+ * Number of bits of |n|: the smallest e with |n| < 2^e; 0 for 0. `hint` is a guess that makes long n cheap; a wrong
+ * one costs time only.
+ */
+export function bitLength(n: bigint, hint = 0): number {
+  const d = Number(n);
+  if (d === 0) return 0;
+  if (d !== Infinity && d !== -Infinity) return doubleLength(n, d, 0);
+  const low = hint - 512;
+  if (low > 0) {
+    const t = n >> shift(low);
+    const e = Number(t);
+    if (e !== Infinity && e !== -Infinity && (e > 2 ** 60 || e < -(2 ** 60))) return doubleLength(t, e, low);
+  }
+  const m = n < 0n ? -n : n;
+  const hex = m.toString(16);
+  return 4 * hex.length - 4 + (32 - Math.clz32(Number.parseInt(hex[0]!, 16)));
+}
+
+function doubleLength(n: bigint, d: number, low: number): number {
+  view[0] = d;
+  const high = words[HIGH]!;
+  const e = ((high >>> 20) & 2047) - 1022;
+  // Only a power of two can be the result of rounding up past one; then look at the bits.
+  if ((high & 0xfffff) === 0 && words[1 - HIGH] === 0 && e > 53) {
+    return low + ((n < 0n ? -n : n) >> shift(e - 1) ? e : e - 1);
+  }
+  return low + e;
+}
+
+/** n·2^k, rounded down for negative k. */
+export function scaled(n: bigint, k: number): bigint {
+  return k >= 0 ? n << shift(k) : n >> shift(-k);
+}
+
+export function absBig(n: bigint): bigint {
+  return n < 0n ? -n : n;
+}
+
+/** Number of zero bits at the low end of n, n not 0. */
+export function trailingZeros(n: bigint): number {
+  let count = 0;
+  for (let step = 64; ; step *= 2) {
+    const low = BigInt.asUintN(step, n);
+    if (low !== 0n) {
+      count = bitLength(low & -low) - 1;
+      return count;
+    }
+  }
+}

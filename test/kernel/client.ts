@@ -1,0 +1,188 @@
+// A client of the protocol for the tests, written from the protocol's text and not from the kernel's code: it has its own
+// framing and signing, so that a fault of the kernel's codec cannot hide behind itself.
+import { createHmac, randomUUID } from "node:crypto";
+import { createServer } from "node:net";
+import { Dealer, Request, Subscriber } from "zeromq";
+
+export interface ConnectionFields {
+  transport: string;
+  ip: string;
+  shell_port: number;
+  iopub_port: number;
+  stdin_port: number;
+  control_port: number;
+  hb_port: number;
+  signature_scheme: string;
+  key: string;
+}
+
+export interface Received {
+  readonly prefix: readonly Buffer[];
+  readonly signature: string;
+  readonly header: Record<string, unknown> & { msg_type: string; msg_id: string };
+  readonly parent: Record<string, unknown>;
+  readonly metadata: Record<string, unknown>;
+  // biome-ignore lint/suspicious/noExplicitAny: contents are read field by field and each field is then asserted
+  readonly content: Record<string, any>;
+  readonly buffers: readonly Buffer[];
+}
+
+export interface Exchange {
+  readonly id: string;
+  readonly reply: Received;
+  /** What was published with this request as parent, busy and idle included. */
+  readonly published: readonly Received[];
+}
+
+/** Fields of a connection file with free ports. */
+export async function freeConnection(): Promise<ConnectionFields> {
+  const servers = await Promise.all(Array.from({ length: 5 }, listening));
+  const ports = servers.map((server) => (server.address() as { port: number }).port);
+  await Promise.all(servers.map((server) => new Promise((resolve) => server.close(resolve))));
+  const [shell_port, iopub_port, stdin_port, control_port, hb_port] = ports as [number, number, number, number, number];
+  const fixed = { transport: "tcp", ip: "127.0.0.1", signature_scheme: "hmac-sha256", key: randomUUID() };
+  return { ...fixed, shell_port, iopub_port, stdin_port, control_port, hb_port };
+}
+
+function listening(): Promise<ReturnType<typeof createServer>> {
+  return new Promise((resolve) => {
+    const server = createServer();
+    server.listen(0, "127.0.0.1", () => resolve(server));
+  });
+}
+
+const DELIMITER = Buffer.from("<IDS|MSG>");
+
+/** One client with its own session: shell, control, stdin, iopub and heartbeat. */
+export class Client {
+  readonly session: string = randomUUID();
+  readonly shell: Dealer;
+  readonly control: Dealer;
+  readonly stdin: Dealer;
+  readonly iopub = new Subscriber({ linger: 0, receiveHighWaterMark: 0 });
+  readonly heartbeat = new Request({ linger: 0, receiveTimeout: 2000 });
+  /** All that came on iopub, in order. */
+  readonly published: Received[] = [];
+  readonly replies: Received[] = [];
+  readonly questions: Received[] = [];
+  private readonly fields: ConnectionFields;
+  private readonly waiting = new Set<() => void>();
+
+  constructor(fields: ConnectionFields) {
+    this.fields = fields;
+    const options = { routingId: this.session, linger: 0 };
+    this.shell = new Dealer(options);
+    this.control = new Dealer(options);
+    this.stdin = new Dealer(options);
+  }
+
+  /** Connects, and waits for the welcome of iopub unless told not to listen. */
+  async connect({ listen = true } = {}): Promise<this> {
+    const address = (port: number) => `${this.fields.transport}://${this.fields.ip}:${port}`;
+    this.shell.connect(address(this.fields.shell_port));
+    this.control.connect(address(this.fields.control_port));
+    this.stdin.connect(address(this.fields.stdin_port));
+    this.heartbeat.connect(address(this.fields.hb_port));
+    this.collect(this.shell, this.replies);
+    this.collect(this.control, this.replies);
+    this.collect(this.stdin, this.questions);
+    if (!listen) return this;
+    this.iopub.connect(address(this.fields.iopub_port));
+    this.iopub.subscribe("");
+    this.collect(this.iopub, this.published);
+    await this.until(() => this.published.some(({ header }) => header.msg_type === "iopub_welcome"));
+    return this;
+  }
+
+  close(): void {
+    for (const socket of [this.shell, this.control, this.stdin, this.iopub, this.heartbeat]) socket.close();
+  }
+
+  header(type: string): Record<string, unknown> & { msg_id: string } {
+    const date = new Date().toISOString();
+    return { msg_id: randomUUID(), session: this.session, username: "test", date, msg_type: type, version: "5.5" };
+  }
+
+  /** Frames of a signed message; `key` and `parent` may be wrong on purpose. */
+  frames(header: object, content: unknown, { key = this.fields.key, parent = {}, metadata = {} } = {}): Buffer[] {
+    const parts = [header, parent, metadata, content].map((part) => Buffer.from(JSON.stringify(part)));
+    return [DELIMITER, Buffer.from(sign(key, parts)), ...parts];
+  }
+
+  async send(channel: "shell" | "control" | "stdin", type: string, content: object, parent: object = {}) {
+    const header = this.header(type);
+    await this[channel].send(this.frames(header, content, { parent }));
+    return header.msg_id;
+  }
+
+  /** Sends a request and waits for its reply and its idle. */
+  async request(channel: "shell" | "control", type: string, content: object = {}): Promise<Exchange> {
+    return this.exchange(await this.send(channel, type, content));
+  }
+
+  execute(code: string, options: object = {}): Promise<Exchange> {
+    return this.request("shell", "execute_request", { code, ...options });
+  }
+
+  /** Waits for the reply and the idle of a request that was sent. */
+  async exchange(id: string): Promise<Exchange> {
+    const reply = await this.until(() => this.replies.find(({ parent }) => parent.msg_id === id));
+    await this.idle(id);
+    return { id, reply, published: this.of(id) };
+  }
+
+  idle(id: string): Promise<true> {
+    return this.until(() => this.of(id).some(({ content }) => content.execution_state === "idle") || undefined);
+  }
+
+  /** What was published so far with the request as parent. */
+  of(id: string): Received[] {
+    return this.published.filter(({ parent }) => parent.msg_id === id);
+  }
+
+  /** The first value that is neither undefined nor false, looked for at each message that comes. */
+  until<T>(look: () => T | undefined | false, ms = 5000): Promise<T> {
+    return new Promise((resolve, reject) => {
+      const again = () => {
+        const found = look();
+        if (found === undefined || found === false) return;
+        clearTimeout(timer);
+        this.waiting.delete(again);
+        resolve(found);
+      };
+      const timer = setTimeout(() => {
+        this.waiting.delete(again);
+        const seen = this.published.map(({ header, content }) => content.execution_state ?? header.msg_type);
+        reject(new Error(`nothing such came in ${ms} ms; published: ${seen.join(" ")}`));
+      }, ms);
+      this.waiting.add(again);
+      again();
+    });
+  }
+
+  private async collect(socket: AsyncIterable<Buffer[]>, into: Received[]): Promise<void> {
+    for await (const frames of socket) {
+      into.push(read(frames, this.fields.key));
+      for (const look of [...this.waiting]) look();
+    }
+  }
+}
+
+/** What a request published, in short: states, and types of messages. */
+export function summary(published: readonly Received[]): string[] {
+  return published.map(({ header, content }) => content.execution_state ?? header.msg_type);
+}
+
+function read(frames: readonly Buffer[], key: string): Received {
+  const at = frames.findIndex((frame) => frame.equals(DELIMITER));
+  const [signature, ...rest] = frames.slice(at + 1) as [Buffer, ...Buffer[]];
+  const parts = rest.slice(0, 4);
+  if (signature.toString() !== sign(key, parts)) throw new Error("the kernel signed wrongly");
+  const [header, parent, metadata, content] = parts.map((part) => JSON.parse(part.toString("utf8")));
+  const prefix = frames.slice(0, at);
+  return { prefix, signature: signature.toString(), header, parent, metadata, content, buffers: rest.slice(4) };
+}
+
+function sign(key: string, parts: readonly Buffer[]): string {
+  return key === "" ? "" : createHmac("sha256", key).update(Buffer.concat(parts)).digest("hex");
+}

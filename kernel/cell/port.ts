@@ -96,5 +96,9 @@ export interface CellSession {
 export interface CellSessionOptions {
   /** Folder of the notebook: imports resolve from it. */
   readonly cwd: string;
-  readonly onEvent: (event: CellEvent) => void;
+  /**
+   * Hears every event, in order. While a promise it gave is open the session takes no more output from the child, so
+   * that a cell that prints faster than it can be sent waits in its print call.
+   */
+  readonly onEvent: (event: CellEvent) => void | Promise<void>;
 }

@@ -1,0 +1,16 @@
+import type { MimeBundle } from "../../cell/port.ts";
+import { requiredText } from "../fields.ts";
+import { toUnits } from "../positions.ts";
+import { type Handler, within } from "../service.ts";
+
+const LIMIT = 4000;
+
+/** inspect_request: what the name at the cursor is. */
+export const inspectRequest: Handler = async (request, service) => {
+  const code = requiredText(request.content, "code");
+  const offset = toUnits(code, request.content.cursor_pos);
+  const detail = request.content.detail_level === 1 ? 1 : 0;
+  const asked = service.cells().then((cells) => cells.inspect(code, offset, detail));
+  const data = await within<MimeBundle | undefined>(LIMIT, asked, undefined);
+  return { content: { status: "ok", found: data !== undefined, data: data ?? {}, metadata: {} } };
+};

@@ -1,0 +1,138 @@
+// The kernel put together: wire, lanes, output, cells; and its end.
+import type { CellSession, CellSessionOptions } from "../cell/port.ts";
+import type { Connection } from "../wire/connection.ts";
+import { log } from "../wire/log.ts";
+import type { Message } from "../wire/message.ts";
+import { openWire, type Wire } from "../wire/wire.ts";
+import { dispatch } from "./dispatch.ts";
+import { abortedAnswer } from "./handler/execute.ts";
+import { controlHandlers, shellHandlers } from "./handler/table.ts";
+import { createHistory } from "./history.ts";
+import { createLane } from "./lane.ts";
+import { createOutput, type Output } from "./output.ts";
+import { createPrompts, type Prompts } from "./prompts.ts";
+import { createRuns, type Runs } from "./runs.ts";
+import { type Service, within } from "./service.ts";
+
+export interface KernelOptions {
+  /** Loads and makes the session of the cells; called once, after the sockets are served. */
+  readonly createCells: (options: CellSessionOptions) => Promise<CellSession>;
+}
+
+export interface Kernel {
+  /** Stops the running cell, as a signal does. */
+  interrupt(): void;
+  /** Ends the kernel; the second call does nothing. */
+  end(): void;
+  /** Resolves when the sockets are closed and the cells have ended, or have had their time. */
+  readonly ended: Promise<void>;
+}
+
+/** A cell that prints faster than it can be sent waits when so many bytes are on the way. */
+const PENDING_BYTES = 8_000_000;
+/** How long the first cell waits for a listener, in ms. */
+const AUDIENCE = 250;
+/** How long the end may take, in ms. Hosts kill after 2.5 s. */
+const ENDING = 1500;
+
+/**
+ * Starts the kernel on a connection and returns as soon as it answers; the cells are loaded behind.
+ *
+ * Throws   ProtocolError if a socket cannot be bound.
+ */
+export async function startKernel(connection: Connection, options: KernelOptions): Promise<Kernel> {
+  const wire = await openWire(connection);
+  const output = createOutput((outgoing, topic) => wire.publish(outgoing, topic));
+  const prompts = createPrompts({
+    send(identities, outgoing) {
+      output.flush();
+      return wire.send("stdin", identities, outgoing);
+    },
+    answer: (value) => void cells().then((session) => session.answerInput(value)),
+  });
+  const runs = createRuns(output, prompts);
+  const cells = once(() => startCells(options, wire, runs));
+  const { end, ended } = ending(wire, cells);
+  const service: Service = {
+    output,
+    runs,
+    history: createHistory(),
+    executionCount: 0,
+    cells,
+    audience: once(() => within(AUDIENCE, wire.subscribed, undefined)),
+    async abortQueued() {
+      await arrived(wire);
+      abortCells();
+    },
+    interrupt: () => void cells().then((session) => session.interrupt(), ignore),
+    end,
+  };
+  const abortCells = serveRequests(wire, output, prompts, service);
+  output.publish("status", { execution_state: "starting" }, undefined);
+  setImmediate(() => cells().catch((error) => log(`the cells cannot be loaded: ${error?.stack ?? error}`)));
+  return { interrupt: service.interrupt, end, ended };
+}
+
+async function startCells(options: KernelOptions, wire: Wire, runs: Runs): Promise<CellSession> {
+  const session = await options.createCells({
+    cwd: process.cwd(),
+    onEvent(event) {
+      runs.report(event);
+      return wire.pendingBytes > PENDING_BYTES ? wire.published() : undefined;
+    },
+  });
+  session.start();
+  return session;
+}
+
+/** Lets requests in; gives a function that marks the waiting cells as not to be run. */
+function serveRequests(wire: Wire, output: Output, prompts: Prompts, service: Service): () => void {
+  const control = createLane((request) =>
+    dispatch("control", request, () => controlHandlers.get(typeOf(request))?.(request, service), { wire, output }),
+  );
+  const shell = createLane((request, aborted) => {
+    const answering = () => (aborted ? abortedAnswer(service) : shellHandlers.get(typeOf(request))?.(request, service));
+    return dispatch("shell", request, answering, { wire, output });
+  });
+  wire.serve({ control: control.add, shell: shell.add, stdin: prompts.answer });
+  return () => shell.abort("execute_request");
+}
+
+function ending(wire: Wire, cells: () => Promise<CellSession>): Pick<Kernel, "end" | "ended"> {
+  let finish = ignore;
+  const ended = new Promise<void>((resolve) => {
+    finish = resolve;
+  });
+  const end = once(async () => {
+    const shutdown = cells().then((session) => session.shutdown());
+    await within(ENDING, Promise.allSettled([shutdown, wire.close()]), undefined);
+    finish();
+  });
+  return { end, ended };
+}
+
+/** Looks for messages until none has come for one look, so that what was sent back to back is here. In ms, and looks. */
+const LOOK = 4;
+const LOOKS = 25;
+
+async function arrived(wire: Wire): Promise<void> {
+  for (let look = 0, count = -1; look < LOOKS && count !== wire.shellCount; look += 1) {
+    count = wire.shellCount;
+    await new Promise((resolve) => setTimeout(resolve, LOOK));
+  }
+}
+
+function typeOf(request: Message): string {
+  return request.header.msg_type;
+}
+
+/** The same promise for every caller. */
+function once<T>(start: () => Promise<T>): () => Promise<T> {
+  let promise: Promise<T> | undefined;
+  return () => {
+    promise ??= start();
+    return promise;
+  };
+}
+
+function ignore(): void {}

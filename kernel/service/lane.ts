@@ -1,0 +1,28 @@
+// A lane serves the requests of one channel one after the other, in the order of arrival.
+import type { Message } from "../wire/message.ts";
+
+export interface Lane {
+  add(request: Message): void;
+  /** Marks the requests of a type that wait now: they are answered without being carried out. */
+  abort(type: string): void;
+}
+
+/** Serves with `serve`, which must not reject; `aborted` tells it that the request was marked. */
+export function createLane(serve: (request: Message, aborted: boolean) => Promise<void>): Lane {
+  const waiting: { readonly request: Message; aborted: boolean }[] = [];
+  let running = false;
+  const run = async () => {
+    running = true;
+    for (let next = waiting.shift(); next; next = waiting.shift()) await serve(next.request, next.aborted);
+    running = false;
+  };
+  return {
+    add(request) {
+      waiting.push({ request, aborted: false });
+      if (!running) void run();
+    },
+    abort(type) {
+      for (const item of waiting) if (item.request.header.msg_type === type) item.aborted = true;
+    },
+  };
+}

@@ -1,0 +1,60 @@
+// The cells that have run, and where their output belongs: a timer may print long after its cell is idle.
+import type { CellEvent, MimeBundle } from "../cell/port.ts";
+import { log } from "../wire/log.ts";
+import type { Parent } from "../wire/message.ts";
+import type { Output } from "./output.ts";
+import type { Prompts } from "./prompts.ts";
+
+export interface Run extends Parent {
+  /** Number of the run, rising; names it in the events of the cells. */
+  readonly cell: number;
+  readonly silent: boolean;
+  readonly allowStdin: boolean;
+}
+
+export interface Runs {
+  /** Registers the run of a request. */
+  open(request: Parent, options: { readonly silent: boolean; readonly allowStdin: boolean }): Run;
+  /** Ends the flow of a run: no prompt of it stays open. Its late output is still published. */
+  close(run: Run): void;
+  /** Publishes what a cell reports, with the request that started it as parent. */
+  report(event: CellEvent): void;
+}
+
+/** Runs remembered: the parent of a late print costs some hundred bytes each. */
+const REMEMBERED = 100_000;
+
+export function createRuns(output: Output, prompts: Prompts): Runs {
+  const runs = new Map<number, Run>();
+  let count = 0;
+  return {
+    open({ identities, headerBytes }, options) {
+      count += 1;
+      runs.delete(count - REMEMBERED);
+      // a copy: the frame may be a window on a much larger piece of received bytes
+      const run = { cell: count, identities, headerBytes: Buffer.from(headerBytes), ...options };
+      runs.set(count, run);
+      return run;
+    },
+    close(run) {
+      prompts.close(run.cell);
+    },
+    report(event) {
+      const run = runs.get(event.cell);
+      if (!run) log(`output of a cell that is not known: ${event.type}`);
+      else if (event.type === "input") prompts.ask(run, event.prompt, event.password);
+      else if (!run.silent) publishEvent(event, run, output);
+    },
+  };
+}
+
+function publishEvent(event: Exclude<CellEvent, { type: "input" }>, run: Run, output: Output): void {
+  if (event.type === "stream") output.stream(event.name, event.text, run);
+  else if (event.type === "clear") output.publish("clear_output", { wait: event.wait }, run);
+  else output.publish(event.update ? "update_display_data" : "display_data", displayContent(event), run);
+}
+
+function displayContent(event: CellEvent & { type: "display" }): MimeBundle {
+  const transient = event.displayId === undefined ? {} : { display_id: event.displayId };
+  return { data: event.data, metadata: event.metadata, transient };
+}

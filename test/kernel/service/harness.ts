@@ -1,0 +1,47 @@
+// A kernel in this process, with fake cells, and clients on real sockets.
+
+import { type Kernel, startKernel } from "../../../kernel/service/kernel.ts";
+import { parseConnection } from "../../../kernel/wire/connection.ts";
+import { Client, type ConnectionFields, freeConnection } from "../client.ts";
+import { FakeCells } from "./fake_cells.ts";
+
+export interface TestKernel {
+  readonly kernel: Kernel;
+  readonly fields: ConnectionFields;
+  readonly client: Client;
+  readonly cells: FakeCells;
+  /** Another client, connected. */
+  another(): Promise<Client>;
+  stop(): Promise<void>;
+}
+
+export async function startTestKernel(change: Partial<ConnectionFields> = {}): Promise<TestKernel> {
+  const fields = { ...(await freeConnection()), ...change };
+  let cells: FakeCells | undefined;
+  const kernel = await startKernel(parseConnection(JSON.stringify(fields), "test.json"), {
+    createCells: async (options) => {
+      cells = new FakeCells(options);
+      return cells;
+    },
+  });
+  const clients: Client[] = [];
+  const another = async () => {
+    const client = await new Client(fields).connect();
+    clients.push(client);
+    return client;
+  };
+  const client = await another();
+  await client.request("shell", "kernel_info_request");
+  return {
+    kernel,
+    fields,
+    client,
+    cells: cells!,
+    another,
+    async stop() {
+      for (const each of clients) each.close();
+      kernel.end();
+      await kernel.ended;
+    },
+  };
+}

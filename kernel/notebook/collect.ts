@@ -13,8 +13,6 @@ export interface CellOutputs {
   readonly outputs: readonly Output[];
   /** Takes one message; false if the message is not about outputs. */
   take(message: OutputMessage): boolean;
-  /** Adds an output of the client's own, such as the news that the kernel died. */
-  append(output: Output): void;
 }
 
 /** Collects the outputs of a notebook's cells; displays may be updated from any later cell. */
@@ -46,7 +44,7 @@ export class OutputCollector {
       if (output) append(output, displayIdOf(content));
       return output !== undefined;
     };
-    return { outputs, take, append };
+    return { outputs, take };
   }
 
   #remember(displayId: string, list: Output[]): void {

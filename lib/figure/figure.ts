@@ -45,7 +45,7 @@ export class Figure {
 }
 
 // `svg:root` matches only where the drawing is a document of its own (there the page's ink is unknown).
-const STANDALONE = "svg:root{color:#1b1b1b}svg:root>.paper{fill:#fffefa}@media print{svg:root>.paper{fill:none}}";
+const STANDALONE = "svg:root{color:#1b1b1b}svg:root .paper{fill:#fffefa}@media print{svg:root .paper{fill:none}}";
 
 function document(parts: FigureParts): string {
   const inner = [node("style", {}, STANDALONE), node("rect", PAPER), ...parts.body];
@@ -64,7 +64,7 @@ function document(parts: FigureParts): string {
         "aria-labelledby": `${id}-title`,
         "aria-describedby": `${id}-desc`,
         style: "max-width:100%;height:auto",
-        "font-family": "'STIX Two Text','Latin Modern Roman','Libertinus Serif','Times New Roman',Times,serif",
+        "font-family": "STIX Two Text, Latin Modern Roman, Libertinus Serif, Times New Roman, Times, serif",
         "font-size": 15,
         fill: "none",
         stroke: "none",

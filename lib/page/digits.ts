@@ -1,0 +1,95 @@
+// Digits on a page: how a printed number is grouped, broken over lines and aligned. What the digits are is decided
+// where numbers are printed; here is typesetting only.
+
+/** A decimal number taken apart. */
+export interface Decimal {
+  readonly negative: boolean;
+  readonly integer: string;
+  /** Digits behind the point, possibly none. */
+  readonly fraction: string;
+  /** Power of ten the number is multiplied by, 0 if there is none. */
+  readonly exponent: number;
+  /** True: more digits can be asked for, shown by dots. */
+  readonly continues: boolean;
+  /** Radius of a measured number, such as "1e-6". */
+  readonly radius?: string;
+}
+
+/** Takes text such as -12.5e-30 apart; undefined if it is no decimal number. */
+export function parseDecimal(text: string): Decimal | undefined {
+  const match = /^([-−]?)(\d+)(?:\.(\d*))?(\.\.\.)?(?:e([+-]?\d+))?(\.\.\.)?(?: ?± ?(\S+))?$/.exec(text.trim());
+  if (!match) return undefined;
+  const [, sign = "", integer = "", fraction = "", dots, exponent = "0", lateDots, radius] = match;
+  return {
+    negative: sign !== "",
+    integer,
+    fraction,
+    exponent: Number(exponent),
+    continues: dots !== undefined || lateDots !== undefined,
+    ...(radius === undefined ? {} : { radius }),
+  };
+}
+
+/** Groups of five behind the point, as tables of functions have them. */
+export function fractionGroups(fraction: string): string[] {
+  return fraction.length <= 5 ? (fraction === "" ? [] : [fraction]) : (fraction.match(/.{1,5}/g) ?? []);
+}
+
+/** Groups of three before the point; four digits stand together. */
+export function integerGroups(integer: string): string[] {
+  if (integer.length <= 4) return [integer];
+  const first = integer.length % 3;
+  const rest = integer.slice(first).match(/.{3}/g) ?? [];
+  return first === 0 ? rest : [integer.slice(0, first), ...rest];
+}
+
+/** Groups a line may hold: about a page width. */
+const GROUPS_A_LINE = 10;
+
+/** A whole number for TeX, broken over lines where it is longer than a page is wide. */
+export function texInteger(text: string): string {
+  const negative = /^[-−]/.test(text);
+  const groups = integerGroups(text.replace(/^[-−]/, ""));
+  return lines(`${negative ? "-" : ""}`, groups, 20);
+}
+
+/** The number for TeX: groups set off by thin spaces, lines of fifty digits, the exponent as a power of ten. */
+export function texDecimal(decimal: Decimal, groupsALine = GROUPS_A_LINE): string {
+  const head = `${decimal.negative ? "-" : ""}${integerGroups(decimal.integer).join("\\,")}`;
+  const groups = fractionGroups(decimal.fraction);
+  const dots = decimal.continues ? "\\ldots" : "";
+  const power = decimal.exponent === 0 ? "" : ` \\cdot 10^{${decimal.exponent}}`;
+  const radius = decimal.radius === undefined ? "" : ` \\pm ${texRadius(decimal.radius)}`;
+  const last = groups.length === 0 ? `${head}${dots}` : `${groups[groups.length - 1]}${dots}`;
+  const body = groups.length === 0 ? last : lines(`${head}.`, [...groups.slice(0, -1), last], groupsALine);
+  return `${body}${power}${radius}`;
+}
+
+/** The number on one line of TeX, however long. */
+export function texDecimalLine(decimal: Decimal): string {
+  return texDecimal(decimal, Number.POSITIVE_INFINITY);
+}
+
+/** The number as text, ungrouped: it can be read back. */
+export function plainDecimal(decimal: Decimal): string {
+  const { negative, integer, fraction, exponent, continues, radius } = decimal;
+  const digits = `${negative ? "-" : ""}${integer}${fraction === "" ? "" : `.${fraction}`}${continues ? "..." : ""}`;
+  return `${digits}${exponent === 0 ? "" : `e${exponent}`}${radius === undefined ? "" : ` ± ${radius}`}`;
+}
+
+function texRadius(radius: string): string {
+  const match = /^([\d.]+)e([+-]?\d+)$/.exec(radius);
+  if (!match) return radius;
+  const power = `10^{${Number(match[2])}}`;
+  return match[1] === "1" ? power : `${match[1]} \\cdot ${power}`;
+}
+
+function lines(head: string, groups: readonly string[], width: number): string {
+  if (groups.length <= width) return head + groups.join("\\,");
+  const rows: string[] = [];
+  for (let start = 0; start < groups.length; start += width) {
+    const row = groups.slice(start, start + width).join("\\,");
+    rows.push(start === 0 ? head + row : `\\phantom{${head}}${row}`);
+  }
+  return `\\begin{array}{l} ${rows.join(" \\\\ ")} \\end{array}`;
+}

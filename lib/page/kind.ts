@@ -1,0 +1,50 @@
+import type { ConventionKey } from "../proof/conventions.ts";
+import type { Decimal } from "./digits.ts";
+
+/** JSON with every number written as a string. */
+export type Data = string | boolean | null | readonly Data[] | { readonly [key: string]: Data };
+
+/** A value in a cell of a table. */
+export type Cell =
+  /** A decimal number, real or complex: digits stand under digits. */
+  | { readonly kind: "number"; readonly re?: Decimal; readonly im?: Decimal }
+  | { readonly kind: "formula"; readonly text: string; readonly tex: string }
+  | { readonly kind: "words"; readonly text: string };
+
+/** How values inside a value are shown; handed to each renderer. */
+export interface Show {
+  text(value: unknown): string;
+  /** A formula without delimiters. */
+  tex(value: unknown): string;
+  cell(value: unknown): Cell;
+  data(value: unknown): Data;
+}
+
+/** How one class of values is shown. */
+export interface Kind<T> {
+  /** One line, or several; ungrouped, so that it can be read back. */
+  text(value: T, show: Show): string;
+  /** A formula without delimiters; kinds without one are shown by their text or their HTML. */
+  tex?(value: T, show: Show): string;
+  /** Running text with $formulas$, in place of one displayed formula. */
+  prose?(value: T, show: Show): string;
+  html?(value: T, show: Show): string;
+  svg?(value: T): string;
+  cell?(value: T, show: Show): Cell;
+  /** The rows of the conventions that a reader needs beside this value. */
+  conventions?(value: T): readonly ConventionKey[];
+  data(value: T, show: Show): Data;
+}
+
+/** A class as a key: abstract ones and those with private constructors too. */
+export type ClassOf<T> = abstract new (...parameters: never) => T;
+
+export interface KindEntry {
+  readonly of: ClassOf<object>;
+  readonly kind: Kind<never>;
+}
+
+/** One line of the table of kinds; the types of class and renderer are matched here and nowhere else. */
+export function entry<T extends object>(of: { readonly prototype: T }, kind: Kind<T>): KindEntry {
+  return { of: of as unknown as ClassOf<object>, kind: kind as unknown as Kind<never> };
+}

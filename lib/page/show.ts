@@ -1,0 +1,137 @@
+// How any value is shown, plain JavaScript values included; dispatches on the table of kinds.
+
+import type { ConventionKey } from "../proof/conventions.ts";
+import { type Decimal, parseDecimal, texInteger } from "./digits.ts";
+import type { Cell, Data, Kind, Show } from "./kind.ts";
+import { KINDS } from "./kinds.ts";
+import { plainText } from "./plain.ts";
+import { isRecord } from "./table.ts";
+import { array, texName, texProse } from "./tex.ts";
+
+/** The kind of a value of the library; undefined for all others. Subclasses share the kind of their class. */
+export function kindOf(value: unknown): Kind<unknown> | undefined {
+  if (typeof value !== "object" && typeof value !== "function") return undefined;
+  if (value === null) return undefined;
+  return KINDS.find(({ of }) => value instanceof of)?.kind as Kind<unknown> | undefined;
+}
+
+/** Lists and records longer than this are shown as text. */
+const MOST_PARTS = 200;
+
+/** The parts of a list or a plain record that holds library values (directly or in such lists); else undefined. */
+export function partsOf(value: unknown, depth = 0): readonly (readonly [name: string, part: unknown])[] | undefined {
+  if (depth > 3 || typeof value !== "object" || value === null) return undefined;
+  const list = Array.isArray(value);
+  if (!list && !isRecord(value)) return undefined;
+  const keys = list ? Array.from(value, (_, k) => String(k)) : Object.keys(value);
+  if (keys.length === 0 || keys.length > MOST_PARTS) return undefined;
+  const parts = keys.map((key) => [key, ownValue(value, key)] as const);
+  return parts.every(([, part]) => isShowable(part, depth)) && parts.some(([, part]) => holdsLibraryValue(part, depth))
+    ? parts
+    : undefined;
+}
+
+/** A property that is a value; getters are not run. */
+function ownValue(holder: object, key: string): unknown {
+  return Object.getOwnPropertyDescriptor(holder, key)?.value;
+}
+
+function isShowable(part: unknown, depth: number): boolean {
+  if (typeof part === "bigint" || typeof part === "string") return true;
+  if (typeof part === "number") return Number.isSafeInteger(part);
+  return holdsLibraryValue(part, depth);
+}
+
+function holdsLibraryValue(part: unknown, depth: number): boolean {
+  return hasTex(part) || partsOf(part, depth + 1) !== undefined;
+}
+
+function hasTex(value: unknown): boolean {
+  return kindOf(value)?.tex !== undefined;
+}
+
+export const show: Show = {
+  text(value) {
+    const kind = kindOf(value);
+    if (kind) return kind.text(value, show);
+    return plainText(value, (inner) => (inner === value ? undefined : kindOf(inner)?.text(inner, show)));
+  },
+
+  tex(value) {
+    const kind = kindOf(value);
+    if (kind?.tex) return kind.tex(value, show);
+    if (typeof value === "bigint" || (typeof value === "number" && Number.isSafeInteger(value))) {
+      return texInteger(String(value));
+    }
+    if (typeof value === "string") return texProse(value);
+    const parts = partsOf(value);
+    if (parts) return Array.isArray(value) ? listTex(parts) : recordTex(parts);
+    return texProse(show.text(value));
+  },
+
+  cell(value) {
+    const kind = kindOf(value);
+    if (kind?.cell) return kind.cell(value, show);
+    if (kind?.tex) return { kind: "formula", text: kind.text(value, show), tex: kind.tex(value, show) };
+    if (typeof value === "bigint" || typeof value === "number") return numberCell(value);
+    if (partsOf(value)) return { kind: "formula", text: show.text(value), tex: show.tex(value) };
+    return { kind: "words", text: typeof value === "string" ? value : show.text(value) };
+  },
+
+  data(value) {
+    return dataOf(value, 0);
+  },
+};
+
+function numberCell(value: bigint | number): Cell {
+  const re: Decimal | undefined = parseDecimal(String(value));
+  const exact = typeof value === "bigint" || Number.isSafeInteger(value);
+  return re && exact ? { kind: "number", re } : { kind: "words", text: show.text(value) };
+}
+
+function listTex(parts: readonly (readonly [string, unknown])[]): string {
+  const items = parts.map(([, part]) => show.tex(part));
+  const long = items.some((item) => item.length > 60) || items.join("").length > 120;
+  if (!long) return `\\left( ${items.join(",\\; ")} \\right)`;
+  return `\\left( ${array(
+    "l",
+    items.map((item, k) => [k + 1 < items.length ? `${item},` : item]),
+  )} \\right)`;
+}
+
+function recordTex(parts: readonly (readonly [string, unknown])[]): string {
+  return array(
+    "rcl",
+    parts.map(([name, part]) => [texName(name), "=", show.tex(part)]),
+  );
+}
+
+/** Rows of the conventions that a value, or the parts of a list or record, need. */
+export function conventionsOf(value: unknown): ConventionKey[] {
+  const own = kindOf(value)?.conventions?.(value) ?? [];
+  const inner = (partsOf(value) ?? []).flatMap(([, part]) => conventionsOf(part));
+  return [...new Set([...own, ...inner])];
+}
+
+function dataOf(value: unknown, depth: number): Data {
+  const kind = kindOf(value);
+  if (kind) return kind.data(value, show);
+  if (typeof value === "bigint") return { kind: "integer", value: String(value) };
+  if (typeof value === "number") {
+    return Number.isSafeInteger(value)
+      ? { kind: "integer", value: String(value) }
+      : { kind: "double", value: String(value) };
+  }
+  if (typeof value === "string" || typeof value === "boolean") return value;
+  if (depth < 4 && Array.isArray(value) && value.length <= MOST_PARTS)
+    return value.map((part) => dataOf(part, depth + 1));
+  if (depth < 4 && isRecord(value)) return recordData(value, depth);
+  return null;
+}
+
+function recordData(value: object, depth: number): Data {
+  const entries = Object.keys(value)
+    .slice(0, MOST_PARTS)
+    .map((key): [string, Data] => [key, dataOf(ownValue(value, key), depth + 1)]);
+  return Object.fromEntries(entries);
+}

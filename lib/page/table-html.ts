@@ -1,0 +1,91 @@
+// A table as HTML: digits are text set in figures of equal width, so they read without a mathematics renderer too, and
+// are copied ungrouped; formulas stand in $...$, which the front ends typeset.
+
+import { type Decimal, fractionGroups, integerGroups } from "./digits.ts";
+import { escapeHtml } from "./html.ts";
+import type { Cell, Show } from "./kind.ts";
+import type { Table } from "./table.ts";
+import { type Column, layout, type NumberWidths } from "./table-layout.ts";
+import { texName } from "./tex.ts";
+
+const RULE = "1px solid currentColor";
+const STYLE = {
+  table: `border-collapse:collapse;border:0;border-top:${RULE};border-bottom:${RULE};font-variant-numeric:tabular-nums lining-nums;margin:.4em 0`,
+  caption: "caption-side:top;text-align:left;padding:0 .6em .4em 0;color:inherit",
+  head: `text-align:left;vertical-align:bottom;padding:.25em 1.2em .25em 0;border:0;border-bottom:${RULE};font-weight:normal`,
+  cell: "text-align:left;vertical-align:baseline;padding:.2em 1.2em .2em 0;border:0;white-space:nowrap;font-weight:normal",
+  words: "text-align:left;vertical-align:baseline;padding:.2em 1.2em .2em 0;border:0;font-weight:normal",
+} as const;
+
+export function tableHtml(table: Table, show: Show): string {
+  const { columns, rows, omitted } = layout(table, show);
+  const caption =
+    table.caption === "" ? "" : `<caption style="${STYLE.caption}">${escapeHtml(table.caption)}</caption>`;
+  const named = columns.some(({ head }) => head !== "");
+  const heads = columns.map(({ head }) => `<th scope="col" style="${STYLE.head}">${headHtml(head)}</th>`);
+  const rowHeads = rows.length > 0 && rows.every((row) => row[0] && row[0].kind !== "number" && row[0].text !== "");
+  const body = rows.map(
+    (row) => `<tr>${columns.map((column, k) => cell(row[k], column, rowHeads && k === 0)).join("")}</tr>`,
+  );
+  const rest =
+    omitted > 0 ? `<tr><td colspan="${columns.length}" style="${STYLE.words}">... ${omitted} more rows</td></tr>` : "";
+  const head = named ? `<thead><tr>${heads.join("")}</tr></thead>` : "";
+  return `<table style="${STYLE.table}">${caption}${head}<tbody>${body.join("")}${rest}</tbody></table>`;
+}
+
+function headHtml(head: string): string {
+  if (head.includes("$")) return escapeHtml(head);
+  const tex = texName(head);
+  return tex.startsWith("\\text") || head === "" ? escapeHtml(head) : `$${tex}$`;
+}
+
+function cell(content: Cell | undefined, column: Column, isHead: boolean): string {
+  if (!content || content.kind === "words") {
+    const text = escapeHtml(content?.text ?? "");
+    return tableCell(text, STYLE.words, isHead);
+  }
+  const inner = content.kind === "formula" ? `$${escapeHtml(content.tex)}$` : numberHtml(content, column);
+  return tableCell(inner, STYLE.cell, isHead);
+}
+
+function tableCell(html: string, style: string, isHead: boolean): string {
+  return isHead ? `<th scope="row" style="${style}">${html}</th>` : `<td style="${style}">${html}</td>`;
+}
+
+function numberHtml(number: Cell & { readonly kind: "number" }, column: Column): string {
+  const re = number.re ? decimalHtml(number.re, column.re) : "";
+  if (!number.im) return re;
+  const sign = number.im.negative ? "−" : "+";
+  const joint = number.re ? ` ${sign} ` : number.im.negative ? "−" : "";
+  const im = decimalHtml({ ...number.im, negative: false }, column.im && { ...column.im, signed: false });
+  return `${re}${joint}${im} <i>i</i>`;
+}
+
+function decimalHtml(decimal: Decimal, widths: NumberWidths | undefined): string {
+  const whole = `${decimal.negative ? "−" : ""}${spaced(integerGroups(decimal.integer))}`;
+  const room = widths ? widths.integer + (widths.signed ? 1 : 0) : 0;
+  // One ch is the width of the digit 0, so this holds in any face with equal figures.
+  const integer =
+    room > 1
+      ? `<span style="display:inline-block;min-width:${room}ch;text-align:right">${whole}</span>`
+      : `<span>${whole}</span>`;
+  const fraction = decimal.fraction === "" ? "" : `.${spaced(fractionGroups(decimal.fraction))}`;
+  const dots = decimal.continues ? "..." : "";
+  const power = decimal.exponent === 0 ? "" : ` · 10<sup>${String(decimal.exponent).replace("-", "−")}</sup>`;
+  const radius = decimal.radius === undefined ? "" : radiusHtml(decimal, widths);
+  return `${integer}${fraction}${dots}${power}${radius}`;
+}
+
+function radiusHtml(decimal: Decimal, widths: NumberWidths | undefined): string {
+  const missing = Math.max(0, (widths?.fraction ?? 0) - decimal.fraction.length);
+  const blank = missing === 0 ? "" : `<span style="display:inline-block;width:${missing}ch"></span>`;
+  const [mantissa = "", power] = (decimal.radius ?? "").split("e");
+  const times = mantissa === "1" ? "" : `${mantissa} · `;
+  return `${blank} ± ${power === undefined ? mantissa : `${times}10<sup>${power.replace("-", "−")}</sup>`}`;
+}
+
+/** Groups set apart by space that is not copied. */
+function spaced(groups: readonly string[]): string {
+  const [first = "", ...rest] = groups;
+  return first + rest.map((group) => `<span style="margin-left:.18em">${group}</span>`).join("");
+}

@@ -1,0 +1,71 @@
+// The measures of a table that text, TeX and HTML share: which columns hold numbers, and how wide their parts are.
+
+import type { Decimal } from "./digits.ts";
+import type { Cell, Show } from "./kind.ts";
+import type { Table } from "./table.ts";
+import { texName } from "./tex.ts";
+
+/** Widths in digits of the parts of the numbers in a column. */
+export interface NumberWidths {
+  /** Digits before the point, with a place for a sign where one number has it. */
+  readonly integer: number;
+  readonly signed: boolean;
+  readonly fraction: number;
+}
+
+export interface Column {
+  readonly head: string;
+  /** Absent: the column holds other things than numbers. */
+  readonly re?: NumberWidths;
+  readonly im?: NumberWidths;
+}
+
+export interface Layout {
+  readonly columns: readonly Column[];
+  readonly rows: readonly (readonly Cell[])[];
+  /** Rows that are left out at the end. */
+  readonly omitted: number;
+}
+
+const MOST_ROWS = 1000;
+
+export function layout(table: Table, show: Show): Layout {
+  const rows = table.rows.slice(0, MOST_ROWS).map((row) => row.map((value) => cellOf(value, show)));
+  const width = Math.max(table.columns.length, ...rows.map((row) => row.length));
+  const columns = Array.from({ length: width }, (_, k) =>
+    column(
+      table.columns[k] ?? "",
+      rows.map((row) => row[k]),
+    ),
+  );
+  return { columns, rows, omitted: table.rows.length - rows.length };
+}
+
+function cellOf(value: unknown, show: Show): Cell {
+  if (value === undefined || value === null) return { kind: "words", text: "" };
+  if (typeof value !== "string") return show.cell(value);
+  return isSymbol(value) ? { kind: "formula", text: value, tex: texName(value) } : { kind: "words", text: value };
+}
+
+/** The name of a quantity, such as x, ω1 or g_2. */
+function isSymbol(text: string): boolean {
+  return /^\p{L}_?\d*′*$/u.test(text);
+}
+
+function column(head: string, cells: readonly (Cell | undefined)[]): Column {
+  const numbers = cells.flatMap((cell) => (cell?.kind === "number" ? [cell] : []));
+  const others = cells.filter((cell) => cell && cell.kind !== "number" && cell.text !== "");
+  if (numbers.length === 0 || others.length > 0) return { head };
+  const re = widths(numbers.flatMap((cell) => cell.re ?? []));
+  const im = widths(numbers.flatMap((cell) => cell.im ?? []));
+  return { head, ...(re ? { re } : {}), ...(im ? { im } : {}) };
+}
+
+function widths(decimals: readonly Decimal[]): NumberWidths | undefined {
+  if (decimals.length === 0) return undefined;
+  return {
+    integer: Math.max(...decimals.map(({ integer }) => integer.length)),
+    signed: decimals.some(({ negative }) => negative),
+    fraction: Math.max(...decimals.map(({ fraction }) => fraction.length)),
+  };
+}

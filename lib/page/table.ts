@@ -1,0 +1,81 @@
+// Tables as values: the rows a user gives, kept as they are; how they look is decided when they are shown.
+
+/** A row: a list of cells, or cells by the name of their column. */
+export type Row = readonly unknown[] | Readonly<Record<string, unknown>>;
+
+export interface TableOptions {
+  readonly caption?: string;
+  /** Heads of the columns; for rows by name, also which of them and in which order. */
+  readonly columns?: readonly string[];
+}
+
+/** A table of values. */
+export class Table {
+  readonly caption: string;
+  /** Empty if the columns have no names. */
+  readonly columns: readonly string[];
+  readonly rows: readonly (readonly unknown[])[];
+
+  constructor(rows: readonly (readonly unknown[])[], columns: readonly string[], caption: string) {
+    this.rows = rows;
+    this.columns = columns;
+    this.caption = caption;
+  }
+}
+
+/**
+ * A table of values with their digits under each other, one row a list or a record of cells. Names of columns and the
+ * caption may hold $formulas$.
+ *
+ * A single record gives a table of two columns, its names and its values.
+ *
+ * Error    none of its own: each number is printed as it would be alone.
+ * Throws   TypeError if the rows are not lists or records, or not as long as the list of columns.
+ * @example table([{ n: 1, x: P.x }, { n: 2, x: (2 * P).x }], { caption: "Multiples of $P$" })
+ */
+export function table(rows: readonly Row[] | Readonly<Record<string, unknown>>, options: TableOptions = {}): Table {
+  const caption = options.caption ?? "";
+  if (!Array.isArray(rows)) {
+    if (!isRecord(rows)) throw new TypeError(`table: expected a list of rows, got ${describe(rows)}`);
+    return new Table(Object.entries(rows), options.columns ?? [], caption);
+  }
+  const lists = rows as readonly unknown[];
+  if (lists.length > 0 && lists.every(isRecord)) return fromRecords(lists, options.columns, caption);
+  if (!lists.every((row) => Array.isArray(row))) {
+    const wrong = lists.find((row) => !Array.isArray(row));
+    throw new TypeError(
+      `table: expected every row to be a list of cells (or every row a record), got ${describe(wrong)}`,
+    );
+  }
+  const cells = lists as readonly (readonly unknown[])[];
+  const width = options.columns?.length;
+  const odd = cells.find((row) => width !== undefined && row.length !== width);
+  if (odd) throw new TypeError(`table: expected ${width} cells in each row, one a column, got a row of ${odd.length}`);
+  return new Table(
+    cells.map((row) => [...row]),
+    options.columns ?? [],
+    caption,
+  );
+}
+
+function fromRecords(
+  rows: readonly Readonly<Record<string, unknown>>[],
+  wanted: readonly string[] | undefined,
+  caption: string,
+): Table {
+  const columns = wanted ?? [...new Set(rows.flatMap((row) => Object.keys(row)))];
+  const cells = rows.map((row) => columns.map((column) => (Object.hasOwn(row, column) ? row[column] : undefined)));
+  return new Table(cells, columns, caption);
+}
+
+/** A plain record: neither a list nor a value of a class. */
+export function isRecord(value: unknown): value is Readonly<Record<string, unknown>> {
+  if (typeof value !== "object" || value === null || Array.isArray(value)) return false;
+  const prototype: unknown = Object.getPrototypeOf(value);
+  return prototype === null || Object.getPrototypeOf(prototype) === null;
+}
+
+function describe(value: unknown): string {
+  if (typeof value === "string") return JSON.stringify(value.slice(0, 40));
+  return typeof value === "object" && value !== null ? "an object" : String(value);
+}

@@ -1,7 +1,75 @@
-// The command. Each verb lives in the folder that does the work; this file only chooses.
+// The command. Each verb lives in the folder that does the work; this file only chooses, and loads what it chose.
+import { type Console, EXIT } from "./notebook/command/console.ts";
+
+interface Command {
+  readonly usage: string;
+  readonly purpose: string;
+  run(args: readonly string[], console: Console): Promise<number>;
+}
+
+const COMMANDS: Readonly<Record<string, Command>> = {
+  demo: {
+    usage: "demo [--to FOLDER]",
+    purpose: "run the notebooks that come along; executed notebooks and pages go to ./output",
+    run: async (args, console) => (await import("./notebook/command/demo.ts")).demoCommand(args, console),
+  },
+  run: {
+    usage: "run NOTEBOOK... [--to FILE|FOLDER] [--limit SECONDS]",
+    purpose: "run all cells in a fresh kernel and keep the outputs",
+    run: async (args, console) => (await import("./notebook/command/run.ts")).runCommand(args, console),
+  },
+  export: {
+    usage: "export NOTEBOOK [--as html] [--to FILE]",
+    purpose: "write a page that opens anywhere and prints well",
+    run: async (args, console) => (await import("./notebook/command/export.ts")).exportCommand(args, console),
+  },
+};
 
 /** Runs `halfperiod <args>` and gives the exit code. */
-export async function main(args: readonly string[]): Promise<number> {
-  process.stderr.write(`halfperiod: no such command: ${args.join(" ")}\n`);
-  return 2;
+export async function main(args: readonly string[], console: Console = standardConsole()): Promise<number> {
+  const [name, ...rest] = args;
+  if (name === undefined || name === "help" || name === "--help" || name === "-h") {
+    console.out.write(usage());
+    return EXIT.ok;
+  }
+  if (name === "--version") {
+    const { packageVersion } = await import("./service/info.ts");
+    console.out.write(`${packageVersion()}\n`);
+    return EXIT.ok;
+  }
+  const command = Object.hasOwn(COMMANDS, name) ? COMMANDS[name] : undefined;
+  if (!command) {
+    console.err.write(`halfperiod: no command "${name}"; expected ${Object.keys(COMMANDS).join(", ")}\n`);
+    return EXIT.usage;
+  }
+  if (rest.includes("--help") || rest.includes("-h")) {
+    console.out.write(`halfperiod ${command.usage}\n  ${command.purpose}\n`);
+    return EXIT.ok;
+  }
+  return attempt(() => command.run(rest, console), console);
+}
+
+/** Known complaints in one line and a code of their own; anything else is a fault of ours and keeps its stack. */
+async function attempt(action: () => Promise<number>, { err }: Console): Promise<number> {
+  try {
+    return await action();
+  } catch (error) {
+    const { name, message, stack } = error instanceof Error ? error : new Error(String(error));
+    if (name === "Interrupted") {
+      err.write(`halfperiod: ${message}\n`);
+      return EXIT.interrupted;
+    }
+    const expected = ["UsageError", "NotebookError", "KernelLost", "InstallError"].includes(name);
+    err.write(`halfperiod: ${expected ? message : stack}\n`);
+    return EXIT.usage;
+  }
+}
+
+function usage(): string {
+  const rows = Object.values(COMMANDS).map(({ usage, purpose }) => `  halfperiod ${usage}\n      ${purpose}\n`);
+  return `halfperiod: a notebook kernel for cubic curves, lattices and elliptic functions, with proved digits\n\n${rows.join("")}`;
+}
+
+function standardConsole(): Console {
+  return { out: process.stdout, err: process.stderr };
 }

@@ -13,6 +13,8 @@ export interface CellOutputs {
   readonly outputs: readonly Output[];
   /** Takes one message; false if the message is not about outputs. */
   take(message: OutputMessage): boolean;
+  /** Adds an output of the client's own, such as the news that the kernel died. */
+  append(output: Output): void;
 }
 
 /** Collects the outputs of a notebook's cells; displays may be updated from any later cell. */
@@ -44,7 +46,7 @@ export class OutputCollector {
       if (output) append(output, displayIdOf(content));
       return output !== undefined;
     };
-    return { outputs, take };
+    return { outputs, take, append };
   }
 
   #remember(displayId: string, list: Output[]): void {

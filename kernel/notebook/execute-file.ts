@@ -1,0 +1,61 @@
+// A notebook file, run from beginning to end in a kernel of its own.
+import path from "node:path";
+import { KernelClient } from "./client.ts";
+import { readNotebook } from "./file.ts";
+import type { LaunchOptions } from "./launch.ts";
+import { type Screen, showProgress } from "./progress.ts";
+import { type Run, runNotebook } from "./run.ts";
+
+export interface ExecuteFileOptions {
+  /** Where progress is shown. */
+  readonly screen: Screen;
+  /** Milliseconds a cell may take. */
+  readonly limit?: number | undefined;
+  /** Another kernel than this package's. */
+  readonly command?: LaunchOptions["command"];
+}
+
+/** The run was stopped from outside, by Ctrl-C or a signal; nothing was written. */
+export class Interrupted extends Error {
+  constructor() {
+    super("interrupted; nothing was written");
+    this.name = "Interrupted";
+  }
+}
+
+/** Reads the notebook, runs it in a fresh kernel started in its folder, and ends that kernel whatever happens. */
+export async function executeFile(file: string, { screen, limit, command }: ExecuteFileOptions): Promise<Run> {
+  const notebook = await readNotebook(file);
+  const progress = showProgress(path.basename(file), screen);
+  const stop = stopOnSignals();
+  try {
+    const client = await KernelClient.start({
+      cwd: path.dirname(path.resolve(file)),
+      ...(command ? { command } : {}),
+    });
+    try {
+      return await Promise.race([stop.stopped, runNotebook(notebook, client, { ...progress, limit })]);
+    } finally {
+      await client.shutdown();
+    }
+  } finally {
+    stop.release();
+    progress.end();
+  }
+}
+
+function stopOnSignals(): { readonly stopped: Promise<never>; release(): void } {
+  let stop = () => {};
+  const stopped = new Promise<never>((_, reject) => {
+    stop = () => reject(new Interrupted());
+  });
+  stopped.catch(() => {});
+  const signals = ["SIGINT", "SIGTERM", "SIGHUP"] as const;
+  for (const signal of signals) process.on(signal, stop);
+  return {
+    stopped,
+    release() {
+      for (const signal of signals) process.off(signal, stop);
+    },
+  };
+}

@@ -1,0 +1,213 @@
+// Carlson's integrals of the third kind and its degenerate case: RJ and RD.
+import type { Disc } from "../number/disc.ts";
+import * as disc from "../number/disc.ts";
+import { DomainError } from "../proof/errors.ts";
+import { closedUnderConjugation, fallOf, halved, refuseZeros, rootsOf, type Triple } from "./carlson-duplication.ts";
+import { carlsonRC, carlsonRF, rcNearOne, rootOfMean } from "./carlson-first.ts";
+import { carlsonSeries, farEnough, termCount } from "./carlson-series.ts";
+import { ontoReal } from "./enclosure.ts";
+
+const FIVE = { man: 5n, exp: 0, rad: 0 };
+
+/**
+ * RD(x, y, z) = (3/2) ∫_0^∞ dt / (√((t+x)(t+y)) (t+z)^(3/2)).
+ *
+ * Domain   x, y, z off the negative real axis, z ≠ 0, at most one of x and y 0.
+ * Branch   as RF.
+ * Error    enclosure, relative, about 2^−prec for exact arguments.
+ * Cost     as RF and a quotient a step.
+ * Throws   as RF.
+ * Source   DLMF 19.16.5, 19.36.2 and the algorithm below it; Carlson 1995, section 4.
+ */
+export function carlsonRD(x: Disc, y: Disc, z: Disc, prec: number, real = false): Disc {
+  refuseZeros("RD", [z], 0);
+  refuseZeros("RD", [x, y], 1);
+  const roots = rootsOf("RD", [x, y, z], prec + 24) as unknown as Triple;
+  const value = rdOfRoots(roots, prec, [x, y, z]);
+  return closedUnderConjugation([x, y], real) && z.axis === "real" ? ontoReal(value) : value;
+}
+
+/** RD(a², b², c²) for roots with positive real part; a or b may be 0. */
+export function rdOfRoots(roots: Triple, prec: number, squares?: Triple): Disc {
+  const wp = prec + 24;
+  const [x, y, z] = squares ?? (roots.map((a) => disc.sqr(a, wp)) as unknown as Triple);
+  const zx = disc.sub(z, x, wp);
+  const zy = disc.sub(z, y, wp);
+  // A = (x + y + 3z)/5: 5(A − z) = −(zx + zy), A − x = (A − z) + zx.
+  const last = disc.neg(disc.add(zx, zy, wp));
+  const gaps = [
+    disc.add(last, disc.mulInt(zx, 5, wp), wp),
+    disc.add(last, disc.mulInt(zy, 5, wp), wp),
+    last,
+    last,
+    last,
+  ];
+  const terms = termCount(wp);
+  let r = roots;
+  let sum: Disc = disc.zero;
+  let step = 0;
+  while (!farEnough(fallOf(gaps, weighted(r, r[2], 3, 32), step), terms, wp)) {
+    const [a, b, c] = r;
+    // √z (z + λ) = c (c + a)(c + b)
+    const bottom = disc.mul(disc.mul(disc.add(c, a, wp), disc.add(c, b, wp), wp), c, wp);
+    sum = disc.add(sum, disc.ldexp(disc.inv(bottom, wp), -2 * step), wp);
+    r = halved(r, wp);
+    step++;
+  }
+  const rest = lastTerm(gaps, weighted(r, r[2], 3, wp), r[2], step, terms, wp);
+  return disc.add(disc.mulInt(sum, 3, wp), rest, prec + 2);
+}
+
+/** a² + b² + (weight)·p² with p the root that counts more; RJ adds c² in the caller. */
+function weighted([a, b]: readonly [Disc, Disc, ...Disc[]], p: Disc, weight: number, wp: number): Disc {
+  const two = disc.add(disc.sqr(a, wp), disc.sqr(b, wp), wp);
+  return disc.add(two, disc.mulInt(disc.sqr(p, wp), weight, wp), wp);
+}
+
+/** 4^−n A^(−3/2) times the series, with `total` = 5 A and A near root². */
+function lastTerm(gaps: readonly Disc[], total: Disc, root: Disc, step: number, terms: number, wp: number): Disc {
+  const fall = Math.min(fallOf(gaps, total, step), 2 * wp);
+  const scaled = gaps.map((g) => disc.ldexp(disc.div(g, total, wp), -2 * step));
+  const series = carlsonSeries(3, scaled, fall, terms, wp);
+  const mean = disc.divBall(total, FIVE, wp);
+  return disc.ldexp(disc.div(series, disc.mul(mean, rootOfMean(root, mean, wp), wp), wp), -2 * step);
+}
+
+/**
+ * RJ(x, y, z, p) = (3/2) ∫_0^∞ dt / (√((t+x)(t+y)(t+z)) (t+p)).
+ *
+ * Domain   at most one of x, y, z is 0, p ≠ 0, and one of: all four in one open half plane that is reached without crossing the cut
+ *          (such as Re > 0); x, y, z real and not negative; two of x, y, z conjugate and the third real and not negative; p equal to one of the
+ *          others (then RD). For p < 0 and real x, y, z >= 0 the value is Cauchy's principal value.
+ * Branch   as RF.
+ * Error    enclosure, relative, about 2^−prec for exact arguments; a principal value near its zero has an absolute error of that size.
+ * Cost     as RF, with four roots and an RC of falling cost a step.
+ * Throws   as RF; DomainError outside the domain.
+ * Source   DLMF 19.16.2, 19.36(i), 19.20.14; Carlson 1995, section 3 with its conditions on the arguments.
+ */
+export function carlsonRJ(x: Disc, y: Disc, z: Disc, p: Disc, prec: number, real = false): Disc {
+  refuseZeros("RJ", [p], 0);
+  refuseZeros("RJ", [x, y, z], 1);
+  const others = [x, y, z] as const;
+  const twin = others.findIndex((w) => disc.isZero(disc.sub(w, p, prec)));
+  if (twin >= 0) {
+    const rest = others.filter((_, k) => k !== twin);
+    return carlsonRD(rest[0]!, rest[1]!, p, prec, real);
+  }
+  if (p.axis === "real" && p.re < 0n && !disc.containsZero(p)) return principalRJ(x, y, z, disc.neg(p), prec);
+  const closed = closedUnderConjugation(others, real) && others.every((w) => w.axis !== "real" || w.re >= 0n);
+  if (!closed && !inRightHalf([x, y, z, p])) return rotatedRJ(x, y, z, p, prec);
+  const value = duplicatedRJ(x, y, z, p, prec);
+  return closed && p.axis === "real" ? ontoReal(value) : value;
+}
+
+function inRightHalf(arguments_: readonly Disc[]): boolean {
+  return arguments_.every((w) => disc.isZero(w) || w.re >= BigInt(Math.ceil(w.rad)));
+}
+
+function duplicatedRJ(x: Disc, y: Disc, z: Disc, p: Disc, prec: number): Disc {
+  const wp = prec + 32;
+  const [a, b, c, s] = rootsOf("RJ", [x, y, z, p], wp) as [Disc, Disc, Disc, Disc];
+  const [px, py, pz] = [disc.sub(p, x, wp), disc.sub(p, y, wp), disc.sub(p, z, wp)];
+  // A = (x + y + z + 2p)/5: 5(A − p) = −(px + py + pz).
+  const last = disc.neg(disc.add(disc.add(px, py, wp), pz, wp));
+  const gap = (d: Disc) => disc.add(last, disc.mulInt(d, 5, wp), wp);
+  const gaps = [gap(px), gap(py), gap(pz), last, last];
+  const delta = disc.mul(disc.mul(px, py, wp), pz, wp);
+  const terms = termCount(wp);
+  let r: Triple = [a, b, c];
+  let root = s;
+  let sum: Disc = disc.zero;
+  let step = 0;
+  const total = (bits: number) => disc.add(weighted(r, root, 2, bits), disc.sqr(r[2], bits), bits);
+  while (!farEnough(fallOf(gaps, total(32), step), terms, wp)) {
+    // Term m is 6·4^−m/d RC(1, 1 + 4^−3m δ/d²).
+    const d = disc.mul(disc.mul(disc.add(root, r[0], wp), disc.add(root, r[1], wp), wp), disc.add(root, r[2], wp), wp);
+    const e = disc.ldexp(disc.div(delta, disc.sqr(d, wp), wp), -6 * step);
+    sum = disc.add(sum, disc.ldexp(disc.div(rcNearOne(e, wp), d, wp), -2 * step), wp);
+    root = halvedLast(r, root, wp);
+    r = halved(r, wp);
+    step++;
+  }
+  return disc.add(disc.mulInt(sum, 6, wp), lastTerm(gaps, total(wp), root, step, terms, wp), prec + 2);
+}
+
+/** √((p + λ)/4) from the roots. */
+function halvedLast([a, b, c]: Triple, s: Disc, wp: number): Disc {
+  const lambda = disc.add(disc.mul(a, disc.add(b, c, wp), wp), disc.mul(b, c, wp), wp);
+  return disc.sqrt(disc.ldexp(disc.add(disc.sqr(s, wp), lambda, wp), -2), wp);
+}
+
+/**
+ * All four arguments turned into the right half plane by a factor k: RJ is homogeneous of degree −3/2, and the value goes along
+ * as long as no argument crosses the cut on the way, that is, arg w + arg k ∈ (−π/2, π/2) as real numbers.
+ */
+function rotatedRJ(x: Disc, y: Disc, z: Disc, p: Disc, prec: number): Disc {
+  const wp = prec + 16;
+  const all = [x, y, z, p];
+  const angles = all.filter((w) => !disc.isZero(w)).map((w) => Math.atan2(...flipped(disc.toDouble(w))));
+  const middle = (Math.max(...angles) + Math.min(...angles)) / 2;
+  const spread = Math.max(...angles) - Math.min(...angles);
+  const factor: Disc = { re: unit(Math.cos(middle)), im: unit(-Math.sin(middle)), exp: -30, rad: 0, axis: "plane" };
+  const turned = all.map((w) => disc.mul(w, factor, wp));
+  // The angles are only read in doubles: 3.1 < π leaves room for their error, and the half plane is checked on the discs.
+  if (!(spread < 3.1) || !inRightHalf(turned)) throw outside();
+  const value = duplicatedRJ(turned[0]!, turned[1]!, turned[2]!, turned[3]!, wp);
+  return disc.mul(value, disc.mul(factor, disc.sqrt(factor, wp), wp), prec + 2);
+}
+
+function flipped([re, im]: [number, number]): [number, number] {
+  return [im, re];
+}
+
+function unit(x: number): bigint {
+  return BigInt(Math.round(x * 2 ** 30));
+}
+
+function outside(): DomainError {
+  return new DomainError({
+    subject: "RJ",
+    given: "arguments that no half plane holds without a part of the cut",
+    expected:
+      "x, y, z, p in one half plane, or x, y, z real and not negative, or two of them conjugate and the third not negative",
+    hint: "Shift the integral: RJ is ∫_0^T plus RJ(x + T, y + T, z + T, p + T).",
+  });
+}
+
+/**
+ * Cauchy's principal value of RJ(x, y, z, −q), q > 0, for real x, y, z >= 0: with x <= y <= z and p = (z(x + y + q) − xy)/(z + q),
+ * (q + z) RJ(x, y, z, −q) = (p − z) RJ(x, y, z, p) − 3 RF(x, y, z) + 3 √(xyz/(xy + pq)) RC(xy + pq, pq)   (DLMF 19.20.14).
+ */
+function principalRJ(x: Disc, y: Disc, z: Disc, q: Disc, prec: number): Disc {
+  if ([x, y, z].some((w) => w.axis !== "real")) {
+    throw new DomainError({
+      subject: "RJ",
+      given: "a negative last argument with others that are not real",
+      expected: "x, y, z real and not negative for a principal value",
+      argument: "p",
+    });
+  }
+  const wp = prec + 16;
+  const [low, mid, top] = [x, y, z].sort((a, b) => order(a, b, wp)) as [Disc, Disc, Disc];
+  const xy = disc.mul(low, mid, wp);
+  const qz = disc.add(q, top, wp);
+  const p = disc.div(
+    disc.add(disc.mul(top, disc.add(mid, q, wp), wp), disc.mul(low, disc.sub(top, mid, wp), wp), wp),
+    qz,
+    wp,
+  );
+  // p − z = (z(x + y + q) − xy − z(z + q))/(z + q) = −(z − x)(z − y)/(z + q)
+  const away = disc.neg(disc.div(disc.mul(disc.sub(top, low, wp), disc.sub(top, mid, wp), wp), qz, wp));
+  const pq = disc.mul(p, q, wp);
+  const sum = disc.add(xy, pq, wp);
+  const first = disc.mul(away, carlsonRJ(low, mid, top, p, wp), wp);
+  const second = disc.mulInt(carlsonRF(low, mid, top, wp), 3, wp);
+  const root = disc.sqrt(disc.div(disc.mul(xy, top, wp), sum, wp), wp);
+  const third = disc.mulInt(disc.mul(root, carlsonRC(sum, pq, wp), wp), 3, wp);
+  return disc.div(disc.add(disc.sub(first, second, wp), third, wp), qz, prec + 2);
+}
+
+function order(a: Disc, b: Disc, wp: number): number {
+  const d = disc.sub(a, b, wp);
+  return d.re > 0n ? 1 : d.re < 0n ? -1 : 0;
+}

@@ -90,7 +90,8 @@ function mulLong(x: Ball, y: Ball, man: bigint, prec: number): Ball {
   const ea = sizePower();
   const b = size(y.man, prec);
   const eb = sizePower();
-  const unit = Math.max(ea, eb);
+  // Each power belongs to the other factor's radius, and counts only with it: pow2 does not go below 2^-1000.
+  const unit = Math.max(y.rad === 0 ? 0 : ea, x.rad === 0 ? 0 : eb);
   const err =
     a * scaledRadius(y.rad, ea - unit) + b * scaledRadius(x.rad, eb - unit) + x.rad * scaledRadius(y.rad, -unit);
   return finishScaled(man, x.exp + y.exp, err * UP, unit, prec);
@@ -143,7 +144,7 @@ function quotient(x: Ball, y: Ball, q: bigint, up: number, exp: number, prec: nu
   // |y| − r_y in units of 2^eb, rounded down; y does not hold 0, but the doubles may not show it.
   const low = (b - scaledRadius(y.rad, -eb)) * DOWN;
   if (!(low > b * 2 ** -40)) return quotientWide(x, y, prec);
-  const unit = Math.max(up - eb, ea - eb);
+  const unit = Math.max(x.rad === 0 ? 0 : up, y.rad === 0 ? 0 : ea) - eb;
   const err = (scaledRadius(x.rad, up - eb - unit) + a * scaledRadius(y.rad, ea - eb - unit)) / low;
   if (unit <= 0) return finish(q, exp, (err * pow2(unit) + 1) * UP, prec);
   return finishScaled(q, exp, (err + pow2(-unit)) * UP, unit, prec);

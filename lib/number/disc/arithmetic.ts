@@ -103,7 +103,8 @@ function productEnd(x: Disc, y: Disc, re: bigint, im: bigint, prec: number): Dis
   if (x.rad === 0 && y.rad === 0) return finish(re, im, exp, 0, prec);
   const a = hypotSize(x.re, x.im, prec);
   const b = hypotSize(y.re, y.im, prec);
-  const unit = Math.max(a.e, b.e);
+  // Each power belongs to the other factor's radius, and counts only with it: pow2 does not go below 2^-1000.
+  const unit = Math.max(y.rad === 0 ? 0 : a.e, x.rad === 0 ? 0 : b.e);
   if (unit === 0) return finishScaled(re, im, exp, (a.d * y.rad + b.d * x.rad + x.rad * y.rad) * UP, 0, prec);
   const err =
     a.d * scaledRadius(y.rad, a.e - unit) + b.d * scaledRadius(x.rad, b.e - unit) + x.rad * scaledRadius(y.rad, -unit);
@@ -198,7 +199,7 @@ function divPlane(x: Disc, y: Disc, prec: number): Disc {
   }
   const q = hypotSize(qr, qi, prec);
   // In units of 2^unit: r_x·2^up/|y| and (|q| + 2) r_y/|y|.
-  const unit = Math.max(up, q.e) - bound.e;
+  const unit = Math.max(x.rad === 0 ? 0 : up, y.rad === 0 ? 0 : q.e) - bound.e;
   const err = (scaledRadius(x.rad, up - bound.e - unit) + (q.d + 2) * scaledRadius(y.rad, q.e - bound.e - unit)) / low;
   return finishScaled(qr, qi, exp, (err + 1.415 * pow2(-unit)) * UP, unit, prec);
 }

@@ -90,6 +90,10 @@ export function finish(re: bigint, im: bigint, exp: number, err: number, prec: n
 
 /** `finish` for an error of err·2^unit ulps. */
 export function finishScaled(re: bigint, im: bigint, exp: number, err: number, unit: number, prec: number): Disc {
+  // With the error near 1 its unit tells its size.
+  const lift = exponent(err);
+  err *= pow2(-lift);
+  unit += lift;
   const scaledErr = err * pow2(unit) * UP;
   if (unit < 900 && scaledErr < 2 ** 1000) return finish(re, im, exp, scaledErr, prec);
   const drop = unit - 40;

@@ -1,0 +1,173 @@
+// The elliptic logarithm: z mod Λ with ℘(z) = x and ℘′(z) = y.
+//
+// Refinement by the group law. Let Q = (X, Y) = (℘, ℘′)(z*) for a z* near z. With the reciprocal slope κ of the chord through (x, y)
+// and −Q, κ = (x − X)/(y + Y) = (y − Y)/(4(x² + xX + X²) − g2), the difference (x, y) − Q has abscissa 1/(4κ²) − s, s = x + X, and
+//     T = −2 x_D/y_D = 2κ (1 − 4sκ²)/(1 − 4κ²(2x + X) + 4yκ³).
+// T = (z − z*)(1 + O((z − z*)⁴)), so one evaluation multiplies the number of digits by five, and no quotient of small numbers is
+// taken: κ may be an enclosure of 0.
+//
+// Certificate, in units of which every nonzero period has length at least 1. Discs of radius 1/2 around the periods are disjoint, so
+// at most 4R² + 4R nonzero periods have |ω| < R, and Σ'|ω|^−4 <= ∫ 4R^−5 (4R² + 4R) dR = 40/3. Pairing ω with −ω, for |z| <= 1/8
+//     |z² ℘(z) − 1| <= |z|⁴ Σ' (3 + 1/64)/(1 − 1/64)² |ω|^−4,   |−z³ ℘′(z)/2 − 1| <= |z|⁴ Σ' (3 + 1/64)/(1 − 1/64)³ |ω|^−4,
+// both at most 43|z|⁴. So |℘| < 65 on |z| = 1/8, and as ℘ takes each value twice, |℘(z_D)| >= 65 puts z_D (mod Λ) into |z| < 1/8.
+// There |T − z_D| <= 87 |z_D|⁵ <= 128 |T|⁵.
+
+import type { Ball } from "../number/ball.ts";
+import * as ball from "../number/ball.ts";
+import type { Disc } from "../number/disc.ts";
+import * as disc from "../number/disc.ts";
+import { PrecisionError } from "../proof/errors.ts";
+import { midpoint } from "./enclosure.ts";
+import { type ReducedLattice, reducedInvariants, reducedRoots } from "./reduced.ts";
+import { weierstrass } from "./weierstrass.ts";
+
+/** A point (x, y) with y² = 4x³ − g2 x − g3. */
+export interface CubicPoint {
+  readonly x: Disc;
+  readonly y: Disc;
+}
+
+/**
+ * z with ℘(z) = x and ℘′(z) = y, in or beside the cell around 0 of the reduced basis.
+ *
+ * Domain   points of the curve; the enclosures must hold one.
+ * Branch   the sign of y settles that of z; z is determined modulo Λ and the midpoint is near the cell around 0.
+ * Error    an enclosure, certified by the group law (header); its radius follows from those of x and y.
+ * Cost     a little more than one evaluation of ℘ and ℘′ at full precision.
+ * Throws   PrecisionError if x and y are too coarse, or satisfy the equation for no point.
+ * @param   g2 an enclosure of g2, by the caller's best route
+ */
+export function ellipticLogarithm(l: ReducedLattice, g2: Disc, point: CubicPoint, prec: number): Disc {
+  // τ has Im τ >= 0.84 and |Re τ| near or under 1/2: every period is at least 3/4 |r1|.
+  const context = { l, g2, unit: ball.ldexp(ball.mulInt(disc.abs(l.r1, 53), 3n, 53), -2) };
+  let z = start(l, point);
+  for (const bits of schedule(prec)) z = midpoint(disc.round(step(context, point, z, bits + 16), bits + 16));
+  const found = certifiedStep(context, point, z, prec + 16);
+  if (!found) throw notFound();
+  return disc.round(found, prec);
+}
+
+interface Context {
+  readonly l: ReducedLattice;
+  readonly g2: Disc;
+  readonly unit: Ball;
+}
+
+/** Precisions of the steps before the last: a fifth at a time, with four bits of slack for the constant of the error term. */
+function schedule(prec: number): number[] {
+  const steps: number[] = [];
+  for (let p = Math.ceil((prec + 16) / 5) + 8; p > 36; p = Math.ceil(p / 5) + 8) {
+    steps.unshift(p);
+    if (p <= 60) break;
+  }
+  return steps;
+}
+
+interface Difference {
+  readonly kappa: Disc;
+  readonly s: Disc;
+  readonly T: Disc;
+}
+
+function difference({ l, g2 }: Context, { x, y }: CubicPoint, z: Disc, wp: number): Difference {
+  const at = weierstrass(l, z, wp, ["wp", "prime"]);
+  const [X, Y] = [at.wp!, at.prime!];
+  const s = disc.add(x, X, wp);
+  const kappa = reciprocalSlope(g2, { x, y }, { x: X, y: Y }, s, wp);
+  const four = disc.ldexp(disc.sqr(kappa, wp), 2);
+  const top = disc.sub(disc.one, disc.mul(s, four, wp), wp);
+  const inner = disc.sub(disc.mul(y, kappa, wp), disc.add(s, x, wp), wp);
+  const bottom = disc.add(disc.one, disc.mul(four, inner, wp), wp);
+  return { kappa, s, T: disc.mul(disc.ldexp(kappa, 1), disc.div(top, bottom, wp), wp) };
+}
+
+/** κ by the quotient whose denominator is the larger one beside its scale. */
+function reciprocalSlope(g2: Disc, p: CubicPoint, q: CubicPoint, s: Disc, wp: number): Disc {
+  const sum = disc.add(p.y, q.y, wp);
+  const square = disc.sub(disc.sqr(s, wp), disc.mul(p.x, q.x, wp), wp);
+  const slope = disc.sub(disc.ldexp(square, 2), g2, wp);
+  // y + Y ≈ 2y and the other is about 2℘″: y is the smaller one near points of order two only, where |y|³ << |℘″|².
+  if (3 * (disc.magnitude(sum) - 1) >= 2 * (disc.magnitude(slope) - 1) - 6) {
+    return disc.div(disc.sub(p.x, q.x, wp), sum, wp);
+  }
+  return disc.div(disc.sub(p.y, q.y, wp), slope, wp);
+}
+
+function step(context: Context, point: CubicPoint, z: Disc, wp: number): Disc {
+  return disc.add(z, difference(context, point, z, wp).T, wp);
+}
+
+function certifiedStep(context: Context, point: CubicPoint, z: Disc, wp: number): Disc | undefined {
+  const { kappa, s, T } = difference(context, point, z, wp);
+  // |x_D| >= 1/(4|κ|²) − |s| >= 65/unit²
+  const bound = ball.add(disc.abs(s, 53), ball.div(ball.fromInt(65), ball.mul(context.unit, context.unit, 53), 53), 53);
+  const k = disc.abs(kappa, 53);
+  const limit = ball.ldexp(ball.mul(ball.mul(k, k, 53), bound, 53), 2);
+  if (!(ball.compare(limit, ball.one) === -1)) return undefined;
+  const size = ball.upper(disc.abs(T, 53));
+  if (ball.isZero(size)) return z;
+  const ratio = ball.div(size, context.unit, 53);
+  const fourth = ball.pow(ratio, 4, 53);
+  const rest = ball.ldexp(ball.mul(size, fourth, 53), 7);
+  return disc.widenBy(disc.add(z, T, wp), rest, wp);
+}
+
+function notFound(): PrecisionError {
+  return new PrecisionError({
+    subject: "elliptic logarithm",
+    given: "values of ℘ and ℘′ that fit no point of the curve, or are too coarse",
+    expected: "x and y with y² = 4x³ − g2 x − g3",
+    hint: "Check the equation at (x, y), or give more digits.",
+  });
+}
+
+type Pair = readonly [number, number];
+
+/**
+ * A start for z. Where |x r1²| is large, −2x/y. Else Carlson's duplication for RF(x−e1, x−e2, x−e3) (DLMF 19.25.35) in doubles, the
+ * sign settled by ℘′ there; a root taken on its cut counts as just above it, one path of integration as good as any other.
+ */
+function start(l: ReducedLattice, { x, y }: CubicPoint): Disc {
+  const wp = 120;
+  const square = disc.sqr(l.r1, wp);
+  const scaled = disc.mul(x, square, wp);
+  if (disc.magnitude(scaled) > 20) return midpoint(disc.neg(disc.ldexp(disc.div(x, y, 60), 1)));
+  const differences = reducedRoots(l).map((e) => disc.toDouble(disc.mul(disc.sub(x, e, wp), square, wp)) as Pair);
+  const v = carlson(differences as [Pair, Pair, Pair]);
+  const z = disc.mul(disc.fromBalls(ball.fromDouble(v[0]), ball.fromDouble(v[1])), midpoint(l.r1), 60);
+  const prime = weierstrass(l, midpoint(z), 60, ["prime"]).prime!;
+  const agree = disc.mul(prime, disc.conj(y), 60);
+  return midpoint(agree.re >= 0n ? z : disc.neg(z));
+}
+
+function root([a, b]: Pair): Pair {
+  const r = Math.hypot(a, b);
+  if (r === 0) return [0, 0];
+  if (a >= 0) {
+    const u = Math.sqrt((r + a) / 2);
+    return [u, b / (2 * u)];
+  }
+  const v = Math.sqrt((r - a) / 2);
+  return b >= 0 ? [b / (2 * v), v] : [-b / (2 * v), -v];
+}
+
+const times = ([a, b]: Pair, [c, d]: Pair): Pair => [a * c - b * d, a * d + b * c];
+
+function carlson([a, b, c]: [Pair, Pair, Pair]): Pair {
+  let args = [a, b, c];
+  for (let n = 0; n < 60; n++) {
+    const [p, q, r] = args.map(root) as [Pair, Pair, Pair];
+    const [pq, qr, rp] = [times(p, q), times(q, r), times(r, p)];
+    const lambda: Pair = [pq[0] + qr[0] + rp[0], pq[1] + qr[1] + rp[1]];
+    args = args.map((s): Pair => [(s[0] + lambda[0]) / 4, (s[1] + lambda[1]) / 4]);
+  }
+  const mean: Pair = [(args[0]![0] + args[1]![0] + args[2]![0]) / 3, (args[0]![1] + args[1]![1] + args[2]![1]) / 3];
+  const [u, w] = root(mean);
+  const n = u * u + w * w;
+  return [u / n, -w / n];
+}
+
+/** g2 by theta constants, for callers that know no better. */
+export function thetaG2(l: ReducedLattice): Disc {
+  return reducedInvariants(l).g2;
+}

@@ -1,6 +1,17 @@
 // Sums, products, quotients and roots of balls. Inputs are any balls, results have about prec bits (see `finish`).
 import { BranchError, DomainError, PoleError } from "../../proof/errors.ts";
-import { bitLength, DOWN, pow2, scaledRadius, shift, size, sizePower, trailingZeros, UP } from "../fixed/bits.ts";
+import {
+  bitLength,
+  DOWN,
+  exponent,
+  pow2,
+  scaledRadius,
+  shift,
+  size,
+  sizePower,
+  trailingZeros,
+  UP,
+} from "../fixed/bits.ts";
 import { sqrtNear } from "../fixed/isqrt.ts";
 import {
   type Ball,
@@ -99,6 +110,10 @@ function mulLong(x: Ball, y: Ball, man: bigint, prec: number): Ball {
 
 /** `finish` for an error of err·2^unit ulps. */
 export function finishScaled(man: bigint, exp: number, err: number, unit: number, prec: number): Ball {
+  // With the error near 1 its unit tells its size.
+  const lift = exponent(err);
+  err *= pow2(-lift);
+  unit += lift;
   const scaledErr = err * pow2(unit);
   if (unit < 900 && scaledErr < 2 ** 1000) return finish(man, exp, unit < 0 ? scaledErr * UP : scaledErr, prec);
   // Most of the unit may go at once: the error keeps at least 2^30 of its ulps, or the mantissa its prec bits.

@@ -11,6 +11,8 @@ describe("quotients keep their accuracy at every length — oracle: the bits ask
       expect(ball.bits(ball.inv(y, prec))).toBeGreaterThan(prec - 6);
       const x = disc.fromRational(Rational.parse("0.000003"), prec, Rational.parse("0.000012"));
       expect(disc.bits(disc.divBall(x, y, prec))).toBeGreaterThan(prec - 6);
+      const short = ball.fromRational(Rational.parse("0.3"), 50);
+      expect(ball.bits(ball.div(short, y, prec))).toBeGreaterThan(45);
       expect(disc.bits(disc.inv(x, prec))).toBeGreaterThan(prec - 6);
     });
   }

@@ -7,16 +7,19 @@ import { openWire, type Wire } from "../wire/wire.ts";
 import { dispatch } from "./dispatch.ts";
 import { abortedAnswer } from "./handler/execute.ts";
 import { controlHandlers, shellHandlers } from "./handler/table.ts";
-import { createHistory } from "./history.ts";
+import { type HistoryFile, openHistory } from "./history/store.ts";
 import { createLane } from "./lane.ts";
 import { createOutput, type Output } from "./output.ts";
 import { createPrompts, type Prompts } from "./prompts.ts";
 import { createRuns, type Runs } from "./runs.ts";
-import { type Service, within } from "./service.ts";
+import type { Service } from "./service.ts";
+import { within } from "./within.ts";
 
 export interface KernelOptions {
   /** Loads and makes the session of the cells; called once, after the sockets are served. */
   readonly createCells: (options: CellSessionOptions) => Promise<CellSession>;
+  /** Where the history is kept; absent: nowhere. */
+  readonly historyFile?: HistoryFile;
 }
 
 export interface Kernel {
@@ -52,11 +55,16 @@ export async function startKernel(connection: Connection, options: KernelOptions
   });
   const runs = createRuns(output, prompts);
   const cells = once(() => startCells(options, wire, runs));
-  const { end, ended } = ending(wire, cells);
+  const history = once(() => openHistory(options.historyFile));
+  const { end, ended } = ending([
+    async () => (await cells()).shutdown(),
+    async () => (await history()).close(),
+    () => wire.close(),
+  ]);
   const service: Service = {
     output,
     runs,
-    history: createHistory(),
+    history,
     executionCount: 0,
     cells,
     audience: once(() => within(AUDIENCE, wire.subscribed, undefined)),
@@ -69,7 +77,10 @@ export async function startKernel(connection: Connection, options: KernelOptions
   };
   const abortCells = serveRequests(wire, output, prompts, service);
   output.publish("status", { execution_state: "starting" }, undefined);
-  setImmediate(() => cells().catch((error) => log(`the cells cannot be loaded: ${error?.stack ?? error}`)));
+  setImmediate(() => {
+    cells().catch((error) => log(`the cells cannot be loaded: ${error?.stack ?? error}`));
+    void history();
+  });
   return { interrupt: service.interrupt, end, ended };
 }
 
@@ -98,14 +109,14 @@ function serveRequests(wire: Wire, output: Output, prompts: Prompts, service: Se
   return () => shell.abort("execute_request");
 }
 
-function ending(wire: Wire, cells: () => Promise<CellSession>): Pick<Kernel, "end" | "ended"> {
+/** Does all of `steps` at once when `end` is called first, and waits no longer than a host would. */
+function ending(steps: readonly (() => Promise<void>)[]): Pick<Kernel, "end" | "ended"> {
   let finish = ignore;
   const ended = new Promise<void>((resolve) => {
     finish = resolve;
   });
   const end = once(async () => {
-    const shutdown = cells().then((session) => session.shutdown());
-    await within(ENDING, Promise.allSettled([shutdown, wire.close()]), undefined);
+    await within(ENDING, Promise.allSettled(steps.map((step) => step())), undefined);
     finish();
   });
   return { end, ended };

@@ -3,6 +3,7 @@ import type { CellSession, CellSessionOptions } from "../cell/port.ts";
 import { readConnection } from "../wire/connection.ts";
 import { handleSignals, watchParent } from "../wire/lifetime.ts";
 import { log } from "../wire/log.ts";
+import { createHistoryFile, historyFolder } from "./history/file.ts";
 import { startKernel } from "./kernel.ts";
 
 /** Loads the cells. */
@@ -28,7 +29,9 @@ async function main(): Promise<number> {
   process.on("uncaughtException", (error) => log(`kernel: ${error?.stack ?? error}`));
   const connection = readConnection(file);
   if (connection.key === "") log("the connection has no key: whoever reaches its ports can run code here.");
-  const kernel = await startKernel(connection, { createCells });
+  const folder = historyFolder(process.env, process.platform);
+  const historyFile = folder === undefined ? {} : { historyFile: createHistoryFile(folder) };
+  const kernel = await startKernel(connection, { createCells, ...historyFile });
   handleSignals({ interrupt: kernel.interrupt, end: kernel.end });
   watchParent(kernel.end);
   await kernel.ended;

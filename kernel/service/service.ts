@@ -1,14 +1,15 @@
 // What a handler may use, and what it gives back.
 import type { CellSession, ErrorReport } from "../cell/port.ts";
 import type { Json, Message } from "../wire/message.ts";
-import type { History } from "./history.ts";
+import type { History } from "./history/store.ts";
 import type { Output } from "./output.ts";
 import type { Runs } from "./runs.ts";
 
 export interface Service {
   readonly output: Output;
-  readonly history: History;
   readonly runs: Runs;
+  /** What was entered, also in earlier sessions. */
+  history(): Promise<History>;
   /** The cells, loaded after the sockets are served. Rejects if they cannot be loaded. */
   cells(): Promise<CellSession>;
   /** Resolves when somebody listens to iopub, or after a moment: a client may send its first cell before that. */
@@ -44,19 +45,4 @@ export function failure(error: unknown): { readonly status: "error" } & ErrorRep
     evalue: isError ? error.message : String(error),
     traceback: [],
   };
-}
-
-/** The promise, or `otherwise` if it takes more than `ms` or rejects. */
-export async function within<T>(ms: number, promise: Promise<T>, otherwise: T): Promise<T> {
-  let timer: NodeJS.Timeout | undefined;
-  const limit = new Promise<T>((resolve) => {
-    timer = setTimeout(() => resolve(otherwise), ms);
-  });
-  try {
-    return await Promise.race([promise, limit]);
-  } catch {
-    return otherwise;
-  } finally {
-    clearTimeout(timer);
-  }
 }

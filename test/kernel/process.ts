@@ -42,7 +42,7 @@ export function connectionFile(text: string): string {
 export function startWith(args: readonly string[], env: NodeJS.ProcessEnv = {}) {
   const child = spawn(process.execPath, [KERNEL_ENTRY, ...args], {
     stdio: ["ignore", "pipe", "pipe"],
-    env: { ...process.env, ...env },
+    env: { ...process.env, HALFPERIOD_HISTORY: "off", ...env },
     detached: true,
   });
   let text = "";

@@ -1,7 +1,8 @@
 import type { CompletionList } from "../../cell/port.ts";
 import { requiredText } from "../fields.ts";
 import { toCodePoints, toUnits } from "../positions.ts";
-import { type Handler, within } from "../service.ts";
+import type { Handler } from "../service.ts";
+import { within } from "../within.ts";
 
 /** Consoles wait 5 s for completions; people do not, but the first one may have to wait for the compiler. */
 const LIMIT = 4000;

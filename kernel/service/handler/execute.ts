@@ -28,7 +28,7 @@ export const executeRequest: Handler = async (request, service) => {
   const count = service.executionCount;
   const run = service.runs.open(request, options);
   if (!options.silent) service.output.publish("execute_input", { code: options.code, execution_count: count }, run);
-  const entry = options.stored ? service.history.add(count, options.code) : undefined;
+  const entry = options.stored ? (await service.history()).add(count, options.code) : undefined;
   const outcome = await runCell(options, run, count, service);
   service.runs.close(run);
   if (!options.silent) publishOutcome(outcome, run, count, service);

@@ -1,7 +1,8 @@
 import type { MimeBundle } from "../../cell/port.ts";
 import { requiredText } from "../fields.ts";
 import { toUnits } from "../positions.ts";
-import { type Handler, within } from "../service.ts";
+import type { Handler } from "../service.ts";
+import { within } from "../within.ts";
 
 const LIMIT = 4000;
 

@@ -1,6 +1,7 @@
 import type { Completeness } from "../../cell/port.ts";
 import { requiredText } from "../fields.ts";
-import { type Handler, within } from "../service.ts";
+import type { Handler } from "../service.ts";
+import { within } from "../within.ts";
 
 /** Consoles give the feature up for good after one answer that took a second. */
 const LIMIT = 800;

@@ -100,7 +100,7 @@ it("ends within two seconds of its host's death, but only if the host asked for 
     const file = connectionFile(JSON.stringify(await freeConnection()));
     const code = `
       const { spawn } = require("node:child_process");
-      const env = { ...process.env, ${bound ? "JPY_PARENT_PID: String(process.pid)" : ""} };
+      const env = { ...process.env, HALFPERIOD_HISTORY: "off", ${bound ? "JPY_PARENT_PID: String(process.pid)" : ""} };
       const kernel = spawn(process.execPath, [${JSON.stringify(KERNEL_ENTRY)}, "-f", ${JSON.stringify(file)}],
         { stdio: "ignore", detached: true, env });
       process.stdout.write(String(kernel.pid));

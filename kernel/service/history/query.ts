@@ -1,36 +1,8 @@
-// What was entered: the stored cells, and the questions that front ends ask about them.
-import type { Json } from "../wire/message.ts";
-import { flag, optionalNumber, optionalText } from "./fields.ts";
-
-export interface Entry {
-  readonly session: number;
-  readonly line: number;
-  readonly input: string;
-  output: string | null;
-}
-
-export interface History {
-  /** Number of this session. */
-  readonly session: number;
-  add(line: number, input: string): Entry;
-  /** All entries, oldest first; of this session and those before. */
-  entries(): readonly Entry[];
-}
-
-/** History of this process only. */
-export function createHistory(earlier: readonly Entry[] = []): History {
-  const session = (earlier.at(-1)?.session ?? 0) + 1;
-  const all = [...earlier];
-  return {
-    session,
-    add(line, input) {
-      const entry: Entry = { session, line, input, output: null };
-      all.push(entry);
-      return entry;
-    },
-    entries: () => all,
-  };
-}
+// The questions that front ends ask about what was entered.
+import type { Json } from "../../wire/message.ts";
+import { flag, optionalNumber, optionalText } from "../fields.ts";
+import { globMatcher } from "./glob.ts";
+import type { Entry, History } from "./store.ts";
 
 /**
  * Entries that a history_request asks for, oldest first, as the wire has them. Fields may be missing or null; an access
@@ -82,33 +54,4 @@ function range(request: Json, history: History): readonly Entry[] {
   const start = fromEnd(optionalNumber(request, "start") ?? 1);
   const stop = fromEnd(optionalNumber(request, "stop") ?? lines);
   return entries.filter((entry) => entry.line >= start && entry.line < stop);
-}
-
-/**
- * Matcher of a glob over the whole text: * is any run of characters, ? one. Two pointers and one step back to the last
- * star: no pattern makes it exponential.
- */
-export function globMatcher(pattern: string): (text: string) => boolean {
-  const glob = [...pattern];
-  return (source) => {
-    const text = [...source];
-    let at = 0;
-    let here = 0;
-    let star = -1;
-    let mark = 0;
-    while (here < text.length) {
-      if (glob[at] === "*") {
-        star = at++;
-        mark = here;
-      } else if (at < glob.length && (glob[at] === "?" || glob[at] === text[here])) {
-        at += 1;
-        here += 1;
-      } else if (star >= 0) {
-        at = star + 1;
-        here = ++mark;
-      } else return false;
-    }
-    while (glob[at] === "*") at += 1;
-    return at === glob.length;
-  };
 }

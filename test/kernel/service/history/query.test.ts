@@ -1,15 +1,22 @@
 import fc from "fast-check";
 import { expect, it } from "vitest";
-import { answerHistory, createHistory, globMatcher } from "../../../kernel/service/history.ts";
+import { globMatcher } from "../../../../kernel/service/history/glob.ts";
+import { answerHistory } from "../../../../kernel/service/history/query.ts";
+import { openHistory } from "../../../../kernel/service/history/store.ts";
 
-function filled() {
-  const earlier = ["old 1", "old 2"].map((input, at) => ({ session: 4, line: at + 1, input, output: null }));
-  const history = createHistory(earlier);
+async function filled() {
+  const entries = ["old 1", "old 2"].map((input, at) => ({ session: 4, line: at + 1, input, output: null }));
+  const history = await openHistory({
+    load: async () => ({ session: 5, entries }),
+    append: () => {},
+    close: async () => {},
+  });
   for (const [at, input] of ["E", "L = E.lattice()", "E", "π"].entries()) history.add(at + 1, input);
   history.entries()[2]!.output = "y² = x³ − x";
   return history;
 }
-const ask = (request: object) => answerHistory(request as Record<string, unknown>, filled());
+const history = await filled();
+const ask = (request: object) => answerHistory(request as Record<string, unknown>, history);
 
 it("tail gives the last n, oldest first, over sessions — oracle: protocol", () => {
   expect(ask({ hist_access_type: "tail", n: 5 })).toEqual([

@@ -2,6 +2,7 @@
 import { type Console, EXIT } from "./notebook/command/console.ts";
 
 interface Command {
+  /** Behind the word halfperiod. */
   readonly usage: string;
   readonly purpose: string;
   run(args: readonly string[], console: Console): Promise<number>;
@@ -22,6 +23,16 @@ const COMMANDS: Readonly<Record<string, Command>> = {
     usage: "export NOTEBOOK [--as html] [--to FILE]",
     purpose: "write a page that opens anywhere and prints well",
     run: async (args, console) => (await import("./notebook/command/export.ts")).exportCommand(args, console),
+  },
+  install: {
+    usage: "install [--at DIR | --everyone] [--name NAME] [--set VARIABLE=VALUE]...",
+    purpose: "make the kernel known to notebook front ends, of this user or in DIR/kernels; again: repair",
+    run: async (args) => (await import("./service/install/install.ts")).install(args),
+  },
+  remove: {
+    usage: "remove [--at DIR | --everyone] [--name NAME]",
+    purpose: "take the kernel away from where install put it",
+    run: async (args) => (await import("./service/install/install.ts")).remove(args),
   },
 };
 
@@ -59,7 +70,7 @@ async function attempt(action: () => Promise<number>, { err }: Console): Promise
       err.write(`halfperiod: ${message}\n`);
       return EXIT.interrupted;
     }
-    const expected = ["UsageError", "NotebookError", "KernelLost", "InstallError"].includes(name);
+    const expected = ["UsageError", "NotebookError", "KernelLost"].includes(name);
     err.write(`halfperiod: ${expected ? message : stack}\n`);
     return EXIT.usage;
   }

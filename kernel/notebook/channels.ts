@@ -22,6 +22,8 @@ export interface Channels {
 
 /** Time between two heartbeats, in ms. */
 const BEAT = 2000;
+/** Time between two tries to reach a kernel that has not bound its ports yet, in ms. */
+const RETRY = 15;
 
 /** Connects to a kernel. `onMessage` hears every message with a right signature, in order of arrival on each channel. */
 export function openChannels(
@@ -29,10 +31,11 @@ export function openChannels(
   onMessage: (channel: IncomingChannel, message: Message) => void,
 ): Channels {
   // Shell and stdin of one client share an identity: that is how the kernel finds the one whom to ask for input.
-  const options = { routingId: randomBytes(8).toString("hex"), linger: 0 };
+  const shared = { linger: 0, reconnectInterval: RETRY };
+  const options = { ...shared, routingId: randomBytes(8).toString("hex") };
   const sockets = { shell: new Dealer(options), control: new Dealer(options), stdin: new Dealer(options) };
-  const iopub = new Subscriber({ linger: 0, receiveHighWaterMark: 0 });
-  const hb = new Dealer({ linger: 0 });
+  const iopub = new Subscriber({ ...shared, receiveHighWaterMark: 0 });
+  const hb = new Dealer(shared);
   const encoder = createEncoder(createSigner(connection.hash, connection.key), "halfperiod");
   const queues = mapValues(sockets, (socket): SendQueue => createSendQueue(socket, () => undefined));
   const connected = Promise.all([...Object.values(sockets), iopub, hb].map(handshake));

@@ -5,7 +5,7 @@ import { mkdtemp, rm, writeFile } from "node:fs/promises";
 import net from "node:net";
 import os from "node:os";
 import path from "node:path";
-import { packageRoot } from "../service/info.ts";
+import { kernelEntry } from "../service/install/kernelspec.ts";
 import { CHANNELS, type Connection, parseConnection } from "../wire/connection.ts";
 
 const HOST = "127.0.0.1";
@@ -41,7 +41,7 @@ export interface KernelProcess {
 
 /** The command that starts the built kernel of this package, without the connection file. */
 export function kernelCommand(): readonly string[] {
-  return [process.execPath, path.join(packageRoot, "dist", "kernel", "service", "main.js")];
+  return [process.execPath, kernelEntry];
 }
 
 /** Starts a kernel process on free ports. The connection file is readable by this user only, in a folder of its own. */
@@ -87,7 +87,7 @@ async function connectionText(): Promise<string> {
 }
 
 /** Ports that were free a moment ago, all different. */
-async function freePorts(count: number): Promise<number[]> {
+export async function freePorts(count: number): Promise<number[]> {
   const servers = await Promise.all(Array.from({ length: count }, listen));
   const ports = servers.map((server) => (server.address() as net.AddressInfo).port);
   await Promise.all(servers.map((server) => new Promise((resolve) => server.close(resolve))));

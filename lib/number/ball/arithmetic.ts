@@ -235,11 +235,14 @@ export function sqrt(x: Ball, prec: number): Ball {
     return finish(root, exp, 3, prec);
   }
   const m = sizeBelow(x.man, prec);
-  const part = (x.rad * pow2(-sizePower())) / m;
+  const em = sizePower();
+  const part = scaledRadius(x.rad, -em) / m;
   const s = size(root, prec) + 2;
-  const unit = sizePower();
-  const err = (s * part) / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN);
-  return finishScaled(root, exp, (err * UP + 3 * pow2(-unit)) * UP, unit, prec);
+  // The relative error may lie below the doubles, so its power of two stays apart; `part` bounds it in the denominator.
+  const unit = sizePower() - em;
+  const err = (((s / m) * x.rad) / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN)) * UP;
+  if (unit <= 0) return finish(root, exp, (err * pow2(unit) + 3) * UP, prec);
+  return finishScaled(root, exp, (err + 3 * pow2(-unit)) * UP, unit, prec);
 }
 
 function sqrtAtZero(x: Ball, prec: number): Ball {

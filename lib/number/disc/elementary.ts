@@ -81,8 +81,12 @@ function sqrtPlane(x: Disc, prec: number): Disc {
   const m = hypotSize(x.re, x.im, prec);
   const part = scaledRadius(x.rad, -m.e) / below(m.d);
   const s = hypotSize(re, im, prec);
-  const err = ((s.d + 7) * part) / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN);
-  return finishScaled(re, im, exp, (err + 7 * pow2(-s.e)) * UP, s.e, prec);
+  // The relative error may lie below the doubles, so its power of two stays apart; `part` bounds it in the denominator.
+  const unit = s.e - m.e;
+  const relative = x.rad / below(m.d);
+  const err = (((s.d + 7) * relative) / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN)) * UP;
+  if (unit <= 0) return finish(re, im, exp, (err * pow2(unit) + 7) * UP, prec);
+  return finishScaled(re, im, exp, (err + 7 * pow2(-unit)) * UP, unit, prec);
 }
 
 /**

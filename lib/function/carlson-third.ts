@@ -95,19 +95,29 @@ export function carlsonRJ(x: Disc, y: Disc, z: Disc, p: Disc, prec: number, real
     return carlsonRD(rest[0]!, rest[1]!, p, prec, real);
   }
   if (p.axis === "real" && p.re < 0n && !disc.containsZero(p)) return principalRJ(x, y, z, disc.neg(p), prec);
-  const closed = closedUnderConjugation(others, real) && others.every((w) => w.axis !== "real" || w.re >= 0n);
-  if (!closed && !inRightHalf([x, y, z, p])) return rotatedRJ(x, y, z, p, prec);
-  const value = duplicatedRJ(x, y, z, p, prec);
-  return closed && p.axis === "real" ? ontoReal(value) : value;
+  const roots = rootsOf("RJ", [x, y, z, p], prec + 32) as unknown as Four;
+  return rjOfRoots(roots, [x, y, z, p], prec, closedUnderConjugation(others, real));
+}
+
+export type Four = readonly [Disc, Disc, Disc, Disc];
+
+/**
+ * RJ of the squares of four roots with positive real part; one of the first three may be 0, or cross 0 together with its disc.
+ * `closed`: the first three squares are closed under conjugation.
+ */
+export function rjOfRoots(roots: Four, squares: Four, prec: number, closed: boolean): Disc {
+  const sure = closed && squares.slice(0, 3).every((w) => w.axis !== "real" || w.re >= 0n);
+  if (!sure && !inRightHalf(squares)) return rotatedRJ(roots, squares, prec);
+  const value = duplicatedRJ(roots, squares, prec);
+  return sure && squares[3].axis === "real" ? ontoReal(value) : value;
 }
 
 function inRightHalf(arguments_: readonly Disc[]): boolean {
   return arguments_.every((w) => disc.isZero(w) || w.re >= BigInt(Math.ceil(w.rad)));
 }
 
-function duplicatedRJ(x: Disc, y: Disc, z: Disc, p: Disc, prec: number): Disc {
+function duplicatedRJ([a, b, c, s]: Four, [x, y, z, p]: Four, prec: number): Disc {
   const wp = prec + 32;
-  const [a, b, c, s] = rootsOf("RJ", [x, y, z, p], wp) as [Disc, Disc, Disc, Disc];
   const [px, py, pz] = [disc.sub(p, x, wp), disc.sub(p, y, wp), disc.sub(p, z, wp)];
   // A = (x + y + z + 2p)/5: 5(A − p) = −(px + py + pz).
   const last = disc.neg(disc.add(disc.add(px, py, wp), pz, wp));
@@ -142,18 +152,18 @@ function halvedLast([a, b, c]: Triple, s: Disc, wp: number): Disc {
  * All four arguments turned into the right half plane by a factor k: RJ is homogeneous of degree −3/2, and the value goes along
  * as long as no argument crosses the cut on the way, that is, arg w + arg k ∈ (−π/2, π/2) as real numbers.
  */
-function rotatedRJ(x: Disc, y: Disc, z: Disc, p: Disc, prec: number): Disc {
+function rotatedRJ(roots: Four, squares: Four, prec: number): Disc {
   const wp = prec + 16;
-  const all = [x, y, z, p];
-  const angles = all.filter((w) => !disc.isZero(w)).map((w) => Math.atan2(...flipped(disc.toDouble(w))));
+  const angles = squares.filter((w) => !disc.containsZero(w)).map((w) => Math.atan2(...flipped(disc.toDouble(w))));
   const middle = (Math.max(...angles) + Math.min(...angles)) / 2;
   const spread = Math.max(...angles) - Math.min(...angles);
   const factor: Disc = { re: unit(Math.cos(middle)), im: unit(-Math.sin(middle)), exp: -30, rad: 0, axis: "plane" };
-  const turned = all.map((w) => disc.mul(w, factor, wp));
+  const root = disc.sqrt(factor, wp);
+  const turned = squares.map((w) => disc.mul(w, factor, wp)) as unknown as Four;
   // The angles are only read in doubles: 3.1 < π leaves room for their error, and the half plane is checked on the discs.
   if (!(spread < 3.1) || !inRightHalf(turned)) throw outside();
-  const value = duplicatedRJ(turned[0]!, turned[1]!, turned[2]!, turned[3]!, wp);
-  return disc.mul(value, disc.mul(factor, disc.sqrt(factor, wp), wp), prec + 2);
+  const value = duplicatedRJ(roots.map((a) => disc.mul(a, root, wp)) as unknown as Four, turned, wp);
+  return disc.mul(value, disc.mul(factor, root, wp), prec + 2);
 }
 
 function flipped([re, im]: [number, number]): [number, number] {

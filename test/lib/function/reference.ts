@@ -51,3 +51,13 @@ function show(value: Disc): string {
   const [re, im] = disc.toDouble(value);
   return `${re} + ${im}i ± ${value.rad}·2^${value.exp}`;
 }
+
+/** x and 1 − x of a decimal or a pair of them, both at prec bits from the exact numbers. */
+export function readWithComplement(text: Text, prec: number): { readonly x: Disc; readonly x1: Disc } {
+  const re = Rational.parse(typeof text === "string" ? text : text.re);
+  const im = typeof text === "string" ? Rational.zero : Rational.parse(text.im);
+  return {
+    x: disc.fromRational(re, prec, im),
+    x1: disc.fromRational(Rational.one.minus(re), prec, im.neg()),
+  };
+}

@@ -1,0 +1,28 @@
+// The points of a model over a given x or y.
+
+import { type Field, fraction, square, sum } from "../algebra/field.ts";
+import type { Univariate } from "../algebra/univariate.ts";
+import { type Coefficients, residual } from "./weierstrass.ts";
+
+/**
+ * The points with the given x: none, one (of order two) or two, the one with the larger square root first.
+ * Domain   characteristic not 2.
+ */
+export function pointsOverX<T>(F: Field<T>, a: Coefficients<T>, x: T): (readonly [T, T])[] {
+  const [a1, , a3] = a;
+  const linear = F.add(F.mul(a1, x), a3);
+  // (2y + a1x + a3)² = (a1x + a3)² + 4(x³ + a2x² + a4x + a6)
+  const four = F.fromInt(4n);
+  const discriminant = F.sub(square(F, linear), F.mul(four, residual(F, a, x, F.zero)));
+  const root = F.sqrt(discriminant);
+  if (root === undefined) return [];
+  const half = fraction(F, 1n, 2n);
+  const at = (r: T): readonly [T, T] => [x, F.mul(half, F.sub(r, linear))];
+  return F.isZero(root) ? [at(root)] : [at(root), at(F.neg(root))];
+}
+
+/** x³ + a2x² + (a4 − a1y)x + a6 − y² − a3y, whose roots are the x of the points with the given y. */
+export function cubicOverY<T>(F: Field<T>, [a1, a2, a3, a4, a6]: Coefficients<T>, y: T): Univariate<T> {
+  const constant = sum(F, a6, F.neg(square(F, y)), F.neg(F.mul(a3, y)));
+  return [constant, F.sub(a4, F.mul(a1, y)), a2, F.one];
+}

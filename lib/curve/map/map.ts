@@ -1,0 +1,128 @@
+// Rational maps between models, given by forms; verified by exact substitution; taken at every point.
+
+import type { Field } from "../../algebra/field.ts";
+import {
+  degree,
+  divideBy,
+  evaluate,
+  evaluateIn,
+  isZero,
+  mapCoefficients,
+  multiply,
+  type Polynomial,
+  substitute,
+  subtract,
+  unpack,
+  variable,
+} from "../../algebra/multivariate.ts";
+import { constantSeries, orderOf, type Series, seriesRing } from "../../algebra/series.ts";
+import { branchAt, type Coordinates, type Model, normalise } from "./model.ts";
+
+/** P ↦ (forms at P): one form a letter of the target, of weighted degree proportional to that letter's weight. */
+export interface FormMap<T> {
+  readonly from: Model<T>;
+  readonly to: Model<T>;
+  readonly forms: readonly Polynomial<T>[];
+}
+
+/**
+ * The image of a point. Where all forms vanish the image is read from the curve's series at the point: a rational map
+ * from a smooth curve extends to it.
+ */
+export function applyMap<T>(map: FormMap<T>, P: Coordinates<T>): Coordinates<T> {
+  const F = map.from.field;
+  const direct = map.forms.map((f) => evaluate(F, f, P));
+  const vanishing = direct.every((c, k) => F.isZero(c) || map.to.weights[k] !== 1);
+  return vanishing ? imageBySeries(map, P) : normalise(map.to, direct);
+}
+
+/** True if the formula itself cannot take the point. */
+export function isExceptional<T>(map: FormMap<T>, P: Coordinates<T>): boolean {
+  const F = map.from.field;
+  return map.forms.every((f, k) => map.to.weights[k] !== 1 || F.isZero(evaluate(F, f, P)));
+}
+
+function imageBySeries<T>(map: FormMap<T>, P: Coordinates<T>): Coordinates<T> {
+  const { to } = map;
+  const F = to.field;
+  for (let length = 6; length <= seriesLimit(map); length *= 2) {
+    const image = formsOnBranch(map, P, length);
+    // Among the letters of weight one some form is not identically zero, and y of weight two vanishes twice as fast.
+    const order = Math.min(...image.map((s, k) => (to.weights[k] === 1 ? orderOf(F, s) : Infinity)));
+    const known = to.weights.every((weight) => weight * order < length);
+    if (known)
+      return normalise(
+        to,
+        image.map((s, k) => s[order * to.weights[k]!]!),
+      );
+  }
+  throw new Error("a map of curves has forms that all vanish on the curve");
+}
+
+/** A form of degree d meets a curve of degree n in dn points, so a longer zero means it vanishes on the curve. */
+function seriesLimit<T>({ from, forms }: FormMap<T>): number {
+  return 4 * Math.max(...forms.map(degree)) * curveDegree(from) + 24;
+}
+
+function curveDegree<T>({ equations }: Model<T>): number {
+  return equations.reduce((product, f) => product * degree(f), 1);
+}
+
+function formsOnBranch<T>({ from, forms }: FormMap<T>, P: Coordinates<T>, length: number): Series<T>[] {
+  const F = from.field;
+  const branch = branchAt(from, P, length);
+  if (!branch) throw new Error("the curve is smooth, so every point has a branch");
+  const ring = seriesRing(F, length);
+  return forms.map((f) => evaluateIn(f, branch.coordinates, ring, (c) => constantSeries(F, c, length)));
+}
+
+/** True if a form in the letters of the model vanishes on the whole curve (a curve with one equation). */
+export function vanishesOn<T>(model: Model<T>, f: Polynomial<T>): boolean {
+  return isZero(divideBy(model.field, f, model.equations[0]!).remainder);
+}
+
+/** A form with multiples of the curve's equation taken away. */
+export function reduceForm<T>(model: Model<T>, f: Polynomial<T>): Polynomial<T> {
+  return model.equations.length === 1 ? divideBy(model.field, f, model.equations[0]!).remainder : f;
+}
+
+/** Exact substitution: the image of the general point satisfies every equation of the target. */
+export function landsOnTarget<T>({ from, to, forms }: FormMap<T>): boolean {
+  return to.equations.every((g) => vanishesOn(from, substitute(from.field, g, forms)));
+}
+
+/** The map that first does one, then another; forms reduced by the equation of the curve it starts from. */
+export function composeMaps<T>(first: FormMap<T>, second: FormMap<T>): FormMap<T> {
+  const F = first.from.field;
+  const forms = second.forms.map((f) => reduceForm(first.from, substitute(F, f, first.forms)));
+  return { from: first.from, to: second.to, forms };
+}
+
+/** True if the map is the identity of its curve: the forms are proportional to the letters, as functions on it. */
+export function isIdentity<T>({ from, forms }: FormMap<T>): boolean {
+  const F = from.field;
+  const letters = from.variables.map((name) => variable(F, from.variables, name));
+  const k = from.weights.lastIndexOf(1);
+  const cross = letters.map((letter, l) => {
+    const weight = from.weights[l]!;
+    const left = multiply(F, letter, powerOf(F, forms[k]!, weight));
+    return subtract(F, left, multiply(F, powerOf(F, letters[k]!, weight), forms[l]!));
+  });
+  return cross.every((f) => vanishesOn(from, f)) && !vanishesOn(from, forms[k]!);
+}
+
+function powerOf<T>(F: Field<T>, f: Polynomial<T>, n: number): Polynomial<T> {
+  return n === 1 ? f : multiply(F, f, f);
+}
+
+/** The map with its forms carried to another field, and the models given there. */
+export function carryForms<S, T>(F: Field<T>, forms: readonly Polynomial<S>[], carry: (c: S) => T): Polynomial<T>[] {
+  return forms.map((f) => mapCoefficients(F, f, carry));
+}
+
+/** Weighted degree of a form in the letters of a model. */
+export function weightedDegree<T>(model: Model<T>, f: Polynomial<T>): number {
+  const key = [...f.terms.keys()][0];
+  if (key === undefined) return 0;
+  return unpack(key, model.variables.length).reduce((total, n, k) => total + n * model.weights[k]!, 0);
+}

@@ -19,6 +19,11 @@ const COMMANDS: Readonly<Record<string, Command>> = {
     purpose: "run all cells in a fresh kernel and keep the outputs",
     run: async (args, console) => (await import("./notebook/command/run.ts")).runCommand(args, console),
   },
+  check: {
+    usage: "check NOTEBOOK... [--limit SECONDS] [--report FILE]",
+    purpose: "run again and compare with what is stored, by mathematics; the files stay as they are",
+    run: async (args, console) => (await import("./notebook/command/check.ts")).checkCommand(args, console),
+  },
   export: {
     usage: "export NOTEBOOK [--as html] [--to FILE]",
     purpose: "write a page that opens anywhere and prints well",

@@ -1,8 +1,8 @@
 // Restart and run all: every code cell in order in a fresh kernel, outputs collected, the first failure stops the run.
-import type { KernelClient } from "./client.ts";
-import { KernelLost } from "./client.ts";
+import { type KernelClient, KernelLost } from "./client.ts";
 import { OutputCollector } from "./collect.ts";
 import { type Cell, type CodeCell, type ErrorOutput, hasTag, isCode, type Notebook, type Output } from "./format.ts";
+import { stamped } from "./stamp.ts";
 
 /** Tag by which a notebook's author says that a cell is meant to fail. */
 const MAY_FAIL = "raises-exception";
@@ -61,7 +61,7 @@ export async function runNotebook(notebook: Notebook, client: KernelClient, opti
   }
   // Outputs are read last: a later cell may have updated an earlier display.
   const cells = finish.map((cell) => cell());
-  const executed = { ...notebook, metadata: stampedMetadata(notebook, client), cells };
+  const executed = stamped({ ...notebook, metadata: namedMetadata(notebook, client), cells });
   return { notebook: executed, reports, total, ...(failure ? { failure } : {}) };
 }
 
@@ -123,7 +123,7 @@ function errorOutput(ename: string, evalue: string): ErrorOutput {
 }
 
 /** What front ends store of the kernel, so that the file opens with it everywhere. */
-function stampedMetadata(notebook: Notebook, client: KernelClient): Notebook["metadata"] {
+function namedMetadata(notebook: Notebook, client: KernelClient): Notebook["metadata"] {
   const { language_info } = client.info;
   const kernelspec = notebook.metadata.kernelspec ?? {
     display_name: "halfperiod (TypeScript)",

@@ -1,20 +1,48 @@
-// What a run has shown, in a few words: from the values that travel as data beside the readable outputs.
+// What a run has shown, in a few words.
 import { packageVersion } from "../service/info.ts";
 import type { Notebook } from "./format.ts";
+import { readStamp } from "./stamp.ts";
+import { type Tally, tally } from "./values.ts";
 
-/** Rows of label and text: claims, digits. */
-export function summaryLines(_notebook: Notebook): [label: string, text: string][] {
-  return [];
+const MET = ["proved", "certified"] as const;
+const OPEN = ["conjectured", "undecided", "refuted"] as const;
+
+/** Rows of label and text: claims, numbers. */
+export function summaryLines(notebook: Notebook): [label: string, text: string][] {
+  const found = tally(notebook);
+  const rows: [string, string][] = [];
+  if (found.claims.size > 0) rows.push(["claims", claimsText(found)]);
+  if (found.exactNumbers + found.enclosedNumbers > 0) rows.push(["numbers", numbersText(found)]);
+  return rows;
 }
 
 /** The same on one line, to follow a count of cells. */
 export function summarise(notebook: Notebook): string {
   return summaryLines(notebook)
-    .map(([label, text]) => `; ${label} ${text}`)
+    .map(([label, text]) => `; ${label}: ${text}`)
     .join("");
 }
 
-/** The line at the end of a page. */
-export function colophon(_notebook: Notebook): string {
-  return `Computed by halfperiod ${packageVersion()}, conventions of edition 1.`;
+function claimsText({ claims, certified }: Tally): string {
+  const count = (kinds: readonly string[]) => kinds.reduce((sum, kind) => sum + (claims.get(kind) ?? 0), 0);
+  const named = (kinds: readonly string[]) =>
+    kinds.filter((kind) => claims.has(kind)).map((kind) => `${claims.get(kind)} ${kind}${extent(kind, certified)}`);
+  const met = `${count(MET)} of ${count([...MET, ...OPEN])} met`;
+  return [met, ...named(MET), ...named(OPEN)].join(", ");
+}
+
+function extent(kind: string, certified: number | undefined): string {
+  return kind === "certified" && certified !== undefined ? ` to ${certified} digits` : "";
+}
+
+function numbersText({ exactNumbers, enclosedNumbers, digits }: Tally): string {
+  const enclosed = enclosedNumbers > 0 ? [`${enclosedNumbers} with ${digits} or more proved digits`] : [];
+  return [`${exactNumbers} exact`, ...enclosed].join(", ");
+}
+
+/** The line at the end of a page: what computed it, by which conventions, when. */
+export function colophon(notebook: Notebook): string {
+  const { version = packageVersion(), edition = "1", date } = readStamp(notebook) ?? {};
+  const day = date === undefined ? "" : `, on ${date.slice(0, 10)}`;
+  return `Computed by halfperiod ${version} with the conventions of edition ${edition}${day}.`;
 }

@@ -1,0 +1,123 @@
+// Stored numbers compared as what they are: exact ones equal or not, enclosures apart or overlapping. All of it in exact
+// rational arithmetic on the decimals of the file.
+import { Rational } from "../../../lib/number/rational.ts";
+import { SAME, type Verdict, verdict } from "./verdict.ts";
+
+/** A number's data: its kind and strings. */
+export type NumberData = Readonly<Record<string, unknown>>;
+
+interface Enclosed {
+  readonly re: Rational;
+  readonly im: Rational;
+  /** 0 for an exact value. */
+  readonly radius: Rational;
+}
+
+const ZERO = Rational.zero;
+const KINDS = new Set(["rational", "quadratic", "real", "complex"]);
+
+export function isNumberData(data: unknown): data is NumberData {
+  return typeof data === "object" && data !== null && KINDS.has(String((data as NumberData).kind));
+}
+
+/**
+ * Compares a stored number with a fresh one.
+ *
+ * `digits` is what the fresh run was asked for, if less than what is stored: an enclosure that is wider only for that
+ * reason is the same. Quadratic numbers are compared exactly with each other only.
+ */
+export function compareNumbers(stored: NumberData, fresh: NumberData, where: string, digits = Infinity): Verdict {
+  if (JSON.stringify(stored) === JSON.stringify(fresh)) return SAME;
+  const [before, now] = [enclosed(stored), enclosed(fresh)];
+  if (!before || !now) return verdict("differs", `${where}: was ${show(stored)}, is ${show(fresh)}`);
+  if (!overlaps(before, now))
+    return verdict("differs", `${where}: was ${show(stored)}, is ${show(fresh)}${relation(before, now)}`);
+  const [had, has] = [accuracy(before), accuracy(now)];
+  if (has >= Math.min(had, digits) - 1) return SAME;
+  return verdict("weaker", `${where}: ${has} digits are proved, ${had} were`);
+}
+
+/** Decimal digits that a number's data prove, relative to its size; Infinity if it is exact. */
+export function digitsOf(data: NumberData): number {
+  const value = enclosed(data);
+  return value ? accuracy(value) : Number.POSITIVE_INFINITY;
+}
+
+function enclosed(data: NumberData): Enclosed | undefined {
+  const part = (field: string) => Rational.parse(String(data[field]));
+  try {
+    if (data.kind === "rational") return { re: part("value"), im: ZERO, radius: ZERO };
+    if (data.kind === "real") return { re: part("middle"), im: ZERO, radius: part("radius") };
+    if (data.kind === "complex") return { re: part("re"), im: part("im"), radius: part("radius") };
+  } catch {
+    return undefined; // no number after all
+  }
+  return undefined;
+}
+
+/** Can both be true of one value? Squares, since distances of rational points need not be rational. */
+function overlaps(a: Enclosed, b: Enclosed): boolean {
+  const reach = a.radius.plus(b.radius);
+  return distanceSquared(a, b).compare(reach.times(reach)) <= 0;
+}
+
+function distanceSquared(a: Enclosed, b: Enclosed): Rational {
+  const re = a.re.minus(b.re);
+  const im = a.im.minus(b.im);
+  return re.times(re).plus(im.times(im));
+}
+
+/** Decimal digits of the middle that the radius leaves; Infinity if exact. */
+function accuracy({ re, im, radius }: Enclosed): number {
+  if (radius.num === 0n) return Infinity;
+  const size = re.abs().compare(im.abs()) >= 0 ? re.abs() : im.abs();
+  const ratio = size.div(radius);
+  return ratio.num === 0n ? 0 : Math.max(0, decimalLength(ratio.num) - decimalLength(ratio.den));
+}
+
+function decimalLength(n: bigint): number {
+  return n.toString().length;
+}
+
+/** What the eye looks for first: the other sign, the conjugate, a factor of two. */
+function relation(before: Enclosed, now: Enclosed): string {
+  const changes: readonly [string, (x: Enclosed) => Enclosed][] = [
+    ["the sign changed", (x) => ({ ...x, re: x.re.neg(), im: x.im.neg() })],
+    ["it is the complex conjugate", (x) => ({ ...x, im: x.im.neg() })],
+    ["it is twice as large", (x) => scaled(x, Rational.of(2n))],
+    ["it is half as large", (x) => scaled(x, Rational.of(1n, 2n))],
+  ];
+  const found = changes.find(([, change]) => overlaps(change(before), now));
+  return found ? ` (${found[0]})` : "";
+}
+
+function scaled({ re, im, radius }: Enclosed, factor: Rational): Enclosed {
+  return { re: re.times(factor), im: im.times(factor), radius: radius.times(factor) };
+}
+
+function show(data: NumberData): string {
+  const short = (text: unknown) => decimalShort(String(text));
+  switch (data.kind) {
+    case "rational":
+      return String(data.value);
+    case "quadratic":
+      return `${data.a} + ${data.b}√${data.d}`;
+    case "real":
+      return short(data.middle);
+    default:
+      return `${short(data.re)} + ${short(data.im)} i`;
+  }
+}
+
+/** "12345e-3" as 12.345, to some twenty digits. */
+function decimalShort(text: string): string {
+  const match = /^(-?)(\d+)(?:e(-?\d+))?$/.exec(text);
+  if (!match) return text;
+  const [, sign = "", digits = "", exponent = "0"] = match;
+  const point = digits.length + Number(exponent);
+  if (point > 20 || point < -6) return `${sign}${digits[0]}.${digits.slice(1, 20)}e${point - 1}`;
+  const padded = point <= 0 ? digits.padStart(digits.length - point + 1, "0") : digits.padEnd(point, "0");
+  const whole = Math.max(point, 1);
+  const fraction = padded.slice(whole, whole + 20);
+  return `${sign}${padded.slice(0, whole)}${fraction ? `.${fraction}` : ""}`;
+}

@@ -1,0 +1,71 @@
+import { describe, expect, it } from "vitest";
+import type { Cell, Notebook } from "../../../kernel/notebook/format.ts";
+import { changesSince, makeStamp, readStamp, stamped } from "../../../kernel/notebook/stamp.ts";
+import { colophon, summaryLines } from "../../../kernel/notebook/summary.ts";
+import { VALUE_TYPE } from "../../../kernel/notebook/values.ts";
+import { VALUE_TYPE as LIBRARY_TYPE } from "../../../lib/page/bundle.ts";
+
+const cell = (source: string, ...values: unknown[]): Cell => ({
+  cell_type: "code",
+  metadata: {},
+  source,
+  execution_count: 1,
+  outputs: values.map((value) => ({ output_type: "display_data", data: { [VALUE_TYPE]: value }, metadata: {} })),
+});
+const notebook = (...cells: Cell[]): Notebook => ({ nbformat: 4, nbformat_minor: 5, metadata: {}, cells });
+const claim = (name: string, standing: object) => ({
+  kind: "claim",
+  name,
+  lhs: { kind: "rational", value: "1" },
+  standing,
+});
+
+describe("the values of a notebook, counted", () => {
+  it("is the type that the library writes", () => expect(VALUE_TYPE).toBe(LIBRARY_TYPE));
+
+  it("counts claims once a name, the last word first, and the digits that the numbers prove", () => {
+    const lines = summaryLines(
+      notebook(
+        cell("a", claim("one", { kind: "undecided" }), [claim("one", { kind: "proved" })]),
+        cell("b", claim("two", { kind: "certified", digits: "48" }), claim("three", { kind: "refuted" })),
+        cell("c", { kind: "lattice", periods: [{ kind: "real", middle: "123456789e-8", radius: "1e-8" }] }),
+        cell("d", { kind: "rational", value: "1/2" }),
+      ),
+    );
+    expect(Object.fromEntries(lines)).toEqual({
+      claims: "2 of 3 met, 1 proved, 1 certified to 48 digits, 1 refuted",
+      numbers: "1 exact, 1 with 8 or more proved digits",
+    });
+  });
+});
+
+describe("the stamp of a run", () => {
+  const plain = notebook(cell("const a = 1; // one\nf( a )"));
+  it("is read back and says nothing while nothing changes", () => {
+    const kept = stamped(plain);
+    const stamp = readStamp(kept);
+    expect(stamp && changesSince(stamp, kept)).toEqual([]);
+    expect(colophon(kept)).toMatch(
+      /^Computed by halfperiod 0\.1\.0 with the conventions of edition 1, on \d{4}-\d\d-\d\d\.$/,
+    );
+    expect(readStamp(plain)).toBeUndefined();
+  });
+
+  it("notices an edit but no new layout and no new comment; strings count as they stand", () => {
+    const stamp = makeStamp(plain);
+    expect(changesSince(stamp, notebook(cell("const a=1;\n\nf(a)  /* done */")))).toEqual([]);
+    expect(changesSince(stamp, notebook(cell("const a = 2; f(a)")))).toEqual([
+      "the code was edited after the stored run",
+    ]);
+    expect(makeStamp(notebook(cell('"a b"'))).code).not.toBe(makeStamp(notebook(cell('"ab"'))).code);
+    expect(makeStamp(notebook(cell("a"), cell("b"))).code).not.toBe(makeStamp(notebook(cell("b"), cell("a"))).code);
+  });
+
+  it("names other versions", () => {
+    const stamp = { ...makeStamp(plain), version: "0.0.9", edition: "0" };
+    expect(changesSince(stamp, plain)).toEqual([
+      "halfperiod: 0.0.9 then, 0.1.0 now",
+      "conventions, edition: 0 then, 1 now",
+    ]);
+  });
+});

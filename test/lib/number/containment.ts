@@ -7,7 +7,7 @@ import { LibraryError } from "../../../lib/proof/errors.ts";
 import { anyExponent, exact, type Pointed, pointed, precision, resized } from "./cases.ts";
 
 /** Runs an operation; undefined if it refuses the argument with one of the library's own errors. */
-function attempt<T>(f: () => T): T | undefined {
+export function attempt<T>(f: () => T): T | undefined {
   try {
     return f();
   } catch (error) {

@@ -43,7 +43,8 @@ export {
 } from "./ball/data.ts";
 export { exp, ln } from "./ball/exp.ts";
 export { cosh, sinh, sinhCosh, tanh } from "./ball/hyperbolic.ts";
-export { sinCos } from "./ball/trig.ts";
+export { floor } from "./ball/integer.ts";
+export { type SinCos, sinCos } from "./ball/trig.ts";
 
 import type { Ball } from "./ball/data.ts";
 import { sinCos } from "./ball/trig.ts";

@@ -1,17 +1,6 @@
 // Sums, products, quotients and roots of balls. Inputs are any balls, results have about prec bits (see `finish`).
 import { BranchError, DomainError, PoleError } from "../../proof/errors.ts";
-import {
-  bitLength,
-  DOWN,
-  exponent,
-  pow2,
-  scaledRadius,
-  shift,
-  size,
-  sizePower,
-  trailingZeros,
-  UP,
-} from "../fixed/bits.ts";
+import { bitLength, DOWN, exponent, pow2, scaledRadius, shift, size, sizePower, trailingZeros, UP } from "../fixed/bits.ts";
 import { sqrtNear } from "../fixed/isqrt.ts";
 import {
   type Ball,
@@ -101,8 +90,7 @@ function mulLong(x: Ball, y: Ball, man: bigint, prec: number): Ball {
   const ea = sizePower();
   const b = size(y.man, prec);
   const eb = sizePower();
-  // Each power belongs to the other factor's radius, and counts only with it: pow2 does not go below 2^-1000.
-  const unit = Math.max(y.rad === 0 ? 0 : ea, x.rad === 0 ? 0 : eb);
+  const unit = Math.max(y.rad > 0 ? ea : 0, x.rad > 0 ? eb : 0);
   const err =
     a * scaledRadius(y.rad, ea - unit) + b * scaledRadius(x.rad, eb - unit) + x.rad * scaledRadius(y.rad, -unit);
   return finishScaled(man, x.exp + y.exp, err * UP, unit, prec);
@@ -119,6 +107,12 @@ export function finishScaled(man: bigint, exp: number, err: number, unit: number
   // Most of the unit may go at once: the error keeps at least 2^30 of its ulps, or the mantissa its prec bits.
   const drop = Math.max(unit - 40, 0);
   return finish(man >> shift(drop), exp + drop, (err * pow2(unit - drop) + 1) * UP, prec);
+}
+
+/** `finish` for an error of err·2^unit + few ulps. Bounds that were cut at 2^-1000 do not matter: err >= 2^-500. */
+function finishScaledPlus(man: bigint, exp: number, err: number, unit: number, few: number, prec: number): Ball {
+  if (unit <= 0) return finish(man, exp, (err * pow2(unit) + few) * UP, prec);
+  return finishScaled(man, exp, (err + few * pow2(-unit)) * UP, unit, prec);
 }
 
 /** x·n for an integer n, exact before the rounding. */
@@ -159,10 +153,9 @@ function quotient(x: Ball, y: Ball, q: bigint, up: number, exp: number, prec: nu
   // |y| − r_y in units of 2^eb, rounded down; y does not hold 0, but the doubles may not show it.
   const low = (b - scaledRadius(y.rad, -eb)) * DOWN;
   if (!(low > b * 2 ** -40)) return quotientWide(x, y, prec);
-  const unit = Math.max(x.rad === 0 ? 0 : up, y.rad === 0 ? 0 : ea) - eb;
+  const unit = (y.rad === 0 ? up : x.rad === 0 ? ea : Math.max(up, ea)) - eb;
   const err = (scaledRadius(x.rad, up - eb - unit) + a * scaledRadius(y.rad, ea - eb - unit)) / low;
-  if (unit <= 0) return finish(q, exp, (err * pow2(unit) + 1) * UP, prec);
-  return finishScaled(q, exp, (err + pow2(-unit)) * UP, unit, prec);
+  return finishScaledPlus(q, exp, err, unit, 1, prec);
 }
 
 // The divisor's radius is nearly its size: take the quotients of the ends.
@@ -238,11 +231,10 @@ export function sqrt(x: Ball, prec: number): Ball {
   const em = sizePower();
   const part = scaledRadius(x.rad, -em) / m;
   const s = size(root, prec) + 2;
-  // The relative error may lie below the doubles, so its power of two stays apart; `part` bounds it in the denominator.
   const unit = sizePower() - em;
-  const err = (((s / m) * x.rad) / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN)) * UP;
-  if (unit <= 0) return finish(root, exp, (err * pow2(unit) + 3) * UP, prec);
-  return finishScaled(root, exp, (err + 3 * pow2(-unit)) * UP, unit, prec);
+  // s·r/m without the powers of two, which `part` alone may round up to 2^-1000.
+  const err = (s * x.rad) / m / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN);
+  return finishScaledPlus(root, exp, err * UP, unit, 3, prec);
 }
 
 function sqrtAtZero(x: Ball, prec: number): Ball {

@@ -2,7 +2,7 @@
 import { DomainError, PoleError } from "../../proof/errors.ts";
 import * as real from "../ball/arithmetic.ts";
 import { type Ball, fromInt } from "../ball/data.ts";
-import { bitLength, DOWN, pow2, scaledRadius, shift, UP } from "../fixed/bits.ts";
+import { bitLength, DOWN, scaledRadius, shift, UP } from "../fixed/bits.ts";
 import {
   along,
   below,
@@ -10,6 +10,7 @@ import {
   type Disc,
   finish,
   finishScaled,
+  finishScaledPlus,
   fromBall,
   fromBalls,
   hypotSize,
@@ -103,9 +104,9 @@ function productEnd(x: Disc, y: Disc, re: bigint, im: bigint, prec: number): Dis
   if (x.rad === 0 && y.rad === 0) return finish(re, im, exp, 0, prec);
   const a = hypotSize(x.re, x.im, prec);
   const b = hypotSize(y.re, y.im, prec);
-  // Each power belongs to the other factor's radius, and counts only with it: pow2 does not go below 2^-1000.
-  const unit = Math.max(y.rad === 0 ? 0 : a.e, x.rad === 0 ? 0 : b.e);
-  if (unit === 0) return finishScaled(re, im, exp, (a.d * y.rad + b.d * x.rad + x.rad * y.rad) * UP, 0, prec);
+  const unit = Math.max(y.rad > 0 ? a.e : 0, x.rad > 0 ? b.e : 0);
+  if (unit === 0 && a.e === 0 && b.e === 0)
+    return finishScaled(re, im, exp, (a.d * y.rad + b.d * x.rad + x.rad * y.rad) * UP, 0, prec);
   const err =
     a.d * scaledRadius(y.rad, a.e - unit) + b.d * scaledRadius(x.rad, b.e - unit) + x.rad * scaledRadius(y.rad, -unit);
   return finishScaled(re, im, exp, err * UP, unit, prec);
@@ -199,9 +200,9 @@ function divPlane(x: Disc, y: Disc, prec: number): Disc {
   }
   const q = hypotSize(qr, qi, prec);
   // In units of 2^unit: r_x·2^up/|y| and (|q| + 2) r_y/|y|.
-  const unit = Math.max(x.rad === 0 ? 0 : up, y.rad === 0 ? 0 : q.e) - bound.e;
+  const unit = (y.rad === 0 ? up : x.rad === 0 ? q.e : Math.max(up, q.e)) - bound.e;
   const err = (scaledRadius(x.rad, up - bound.e - unit) + (q.d + 2) * scaledRadius(y.rad, q.e - bound.e - unit)) / low;
-  return finishScaled(qr, qi, exp, (err + 1.415 * pow2(-unit)) * UP, unit, prec);
+  return finishScaledPlus(qr, qi, exp, err, unit, 1.415, prec);
 }
 
 /** 1/x. Throws PoleError if x holds 0. */

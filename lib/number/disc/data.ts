@@ -101,6 +101,20 @@ export function finishScaled(re: bigint, im: bigint, exp: number, err: number, u
   return finish(re >> s, im >> s, exp + drop, (err * pow2(unit - drop) + 1.415) * UP, prec);
 }
 
+/** `finish` for an error of err·2^unit + few ulps. Bounds that were cut at 2^-1000 do not matter: err >= 2^-500. */
+export function finishScaledPlus(
+  re: bigint,
+  im: bigint,
+  exp: number,
+  err: number,
+  unit: number,
+  few: number,
+  prec: number,
+): Disc {
+  if (unit <= 0) return finish(re, im, exp, (err * pow2(unit) + few) * UP, prec);
+  return finishScaled(re, im, exp, (err + few * pow2(-unit)) * UP, unit, prec);
+}
+
 /** An upper bound of |re + i·im| as a double times 2^sizePower. */
 export function hypotSize(re: bigint, im: bigint, hint: number): { readonly d: number; readonly e: number } {
   const a = size(re, hint);

@@ -5,7 +5,7 @@ import { type Ball, containsZero as ballContainsZero, sign } from "../ball/data.
 import { exp as ballExp, radiusExponent } from "../ball/exp.ts";
 import { sinhCosh } from "../ball/hyperbolic.ts";
 import { sinCos as ballSinCos } from "../ball/trig.ts";
-import { absBig, bitLength, DOWN, pow2, scaledRadius, shift, UP } from "../fixed/bits.ts";
+import { absBig, bitLength, DOWN, scaledRadius, shift, UP } from "../fixed/bits.ts";
 import { sqrtNear } from "../fixed/isqrt.ts";
 import { mulBall, widenBy } from "./arithmetic.ts";
 import {
@@ -14,7 +14,7 @@ import {
   containsZero,
   type Disc,
   finish,
-  finishScaled,
+  finishScaledPlus,
   fromBall,
   fromBalls,
   hypotSize,
@@ -81,12 +81,8 @@ function sqrtPlane(x: Disc, prec: number): Disc {
   const m = hypotSize(x.re, x.im, prec);
   const part = scaledRadius(x.rad, -m.e) / below(m.d);
   const s = hypotSize(re, im, prec);
-  // The relative error may lie below the doubles, so its power of two stays apart; `part` bounds it in the denominator.
-  const unit = s.e - m.e;
-  const relative = x.rad / below(m.d);
-  const err = (((s.d + 7) * relative) / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN)) * UP;
-  if (unit <= 0) return finish(re, im, exp, (err * pow2(unit) + 7) * UP, prec);
-  return finishScaled(re, im, exp, (err + 7 * pow2(-unit)) * UP, unit, prec);
+  const err = ((s.d + 7) * x.rad) / below(m.d) / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN);
+  return finishScaledPlus(re, im, exp, err * UP, s.e - m.e, 7, prec);
 }
 
 /**

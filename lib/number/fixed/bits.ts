@@ -50,9 +50,11 @@ export function size(n: bigint, hint: number): number {
   }
   // Number() rounds to nearest, and the shift lost less than one unit of a number above 2^60.
   d = Math.abs(d) * (1 + 2 ** -51);
+  // Kept in [2^200, 2^500) if long: squares stay finite, and one unit more or less is nothing.
   if (d < 2 ** 500) return d;
-  power += 500;
-  return d * 2 ** -500;
+  const less = d < 2 ** 800 ? 300 : 600;
+  power += less;
+  return d * (less === 300 ? 2 ** -300 : 2 ** -600);
 }
 
 /** The exponent that belongs to the last result of `size`. */

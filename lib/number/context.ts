@@ -1,0 +1,72 @@
+// How many digits are asked for. Read once at each public entry; everything below takes a precision in bits.
+import { DomainError } from "../proof/errors.ts";
+
+interface Context {
+  readonly digits: number;
+  /** Bits that a running `atDigits` works with; absent otherwise. */
+  readonly bits?: number;
+}
+
+const MOST_DIGITS = 1_000_000;
+let settled: Context = { digits: 20 };
+let passing: Context | undefined;
+
+/** How many proved digits a display has. */
+export function provedDigits(): number;
+/**
+ * Asks for n proved digits in every display and every new value from now on.
+ * Domain   an integer from 1 to 1,000,000. Throws DomainError otherwise; the old setting then stays.
+ */
+export function provedDigits(n: number): number;
+export function provedDigits(n?: number): number {
+  if (n === undefined) return (passing ?? settled).digits;
+  settled = { digits: checkedDigits("provedDigits", n) };
+  return n;
+}
+
+/** Throws DomainError unless n is a number of digits that can be asked for. */
+export function checkedDigits(subject: string, n: number): number {
+  if (Number.isSafeInteger(n) && n >= 1 && n <= MOST_DIGITS) return n;
+  throw new DomainError({
+    subject,
+    given: `${n} digits`,
+    expected: `an integer from 1 to ${MOST_DIGITS}`,
+    hint: n > MOST_DIGITS ? "A million digits is the most that is computed here." : "",
+    argument: "n",
+  });
+}
+
+/** Bits that hold n decimal digits. */
+export function bitsOf(digits: number): number {
+  // The double above log2 10.
+  return Math.ceil(digits * 3.3219280948873626);
+}
+
+/** Bits that new values are computed with: the proved digits and a margin that a few operations use up. */
+export function workingPrecision(): number {
+  const now = passing ?? settled;
+  return now.bits ?? bitsOf(now.digits) + 32;
+}
+
+/** The most bits that are tried for n digits of one value. */
+export function mostBits(digits: number): number {
+  return 64 * digits + 4096;
+}
+
+/**
+ * Runs f with another context. The context ends with the call; should the call be cut off without unwinding, it ends
+ * with the current task at the latest.
+ */
+export function within<T>(context: { readonly digits: number; readonly bits?: number }, f: () => T): T {
+  const outer = passing;
+  const mine: Context = context;
+  passing = mine;
+  queueMicrotask(() => {
+    if (passing === mine) passing = undefined;
+  });
+  try {
+    return f();
+  } finally {
+    passing = outer;
+  }
+}

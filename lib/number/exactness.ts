@@ -1,0 +1,83 @@
+// Exact arithmetic of rational and quadratic numbers as far as it stays within one field and within bounds.
+import { bitLength } from "./fixed/bits.ts";
+import { isqrt } from "./fixed/isqrt.ts";
+import type { Exact } from "./origin.ts";
+import { Quadratic } from "./quadratic.ts";
+import { Rational } from "./rational.ts";
+
+/** Exact values longer than this (in bits) go on as enclosures with an origin: an iteration would double them each time. */
+const LONGEST = 20_000;
+
+type Pair = readonly [Rational, Rational] | readonly [Quadratic, Quadratic];
+
+function joined(x: Exact, y: Exact): Pair | undefined {
+  if (x instanceof Rational) {
+    if (y instanceof Rational) return [x, y];
+    return [Quadratic.of(x, 0, y.d), y];
+  }
+  if (y instanceof Rational) return [x, Quadratic.of(y, 0, x.d)];
+  return x.d === y.d ? [x, y] : undefined;
+}
+
+/** A quadratic number without irrational part as a rational one; undefined if too long to carry on. */
+export function settled(x: Exact): Exact | undefined {
+  if (x instanceof Quadratic) {
+    if (x.isRational()) return settled(x.a);
+    return fits(x.a) && fits(x.b) ? x : undefined;
+  }
+  return fits(x) ? x : undefined;
+}
+
+function fits(q: Rational): boolean {
+  return bitLength(q.num) < LONGEST && bitLength(q.den) < LONGEST;
+}
+
+export type Field = "plus" | "minus" | "times" | "div";
+
+/** x + y, x − y, x·y or x/y if both are exact numbers of one field. Division by exact 0 throws PoleError. */
+export function combine(method: Field, x: Exact | undefined, y: Exact | undefined): Exact | undefined {
+  if (!x || !y) return undefined;
+  if (x instanceof Rational && y instanceof Rational) return settled(x[method](y));
+  const pair = joined(x, y);
+  return pair && settled((pair[0] as Quadratic)[method](pair[1] as Quadratic));
+}
+
+/** x^n, if it stays short. */
+export function power(x: Exact | undefined, n: number): Exact | undefined {
+  if (!x) return undefined;
+  const size =
+    x instanceof Rational
+      ? bitLength(x.num) + bitLength(x.den)
+      : bitLength(x.a.num) + bitLength(x.b.num) + bitLength(x.a.den * x.b.den) + bitLength(x.d);
+  if (size * Math.abs(n) > LONGEST) return undefined;
+  return settled(x.pow(n));
+}
+
+/** The principal root of a rational number that is short: rational, or b√d. */
+export function root(x: Exact | undefined): Exact | undefined {
+  if (!(x instanceof Rational)) return undefined;
+  if (bitLength(x.num) > 128 || bitLength(x.den) > 128) return rationalRoot(x);
+  const negative = x.num < 0n;
+  const whole = rationalRoot(x.abs());
+  if (whole) return negative ? Quadratic.of(0, whole, -1) : whole;
+  return settled(Quadratic.of(0, Rational.of(1n, x.den), x.num * x.den));
+}
+
+function rationalRoot(x: Rational): Rational | undefined {
+  if (x.num < 0n) return undefined;
+  const n = isqrt(x.num);
+  const d = isqrt(x.den);
+  return n * n === x.num && d * d === x.den ? Rational.of(n, d) : undefined;
+}
+
+/** Whether two exact numbers are equal: of one field by comparison, of different fields only if both are rational. */
+export function sameExact(x: Exact, y: Exact): boolean {
+  const pair = joined(x, y);
+  if (!pair) return x instanceof Quadratic && x.equals(y);
+  return (pair[0] as Quadratic).equals(pair[1] as Quadratic);
+}
+
+/** Whether the exact number is real. */
+export function isRealExact(x: Exact): boolean {
+  return x instanceof Rational || x.d > 0n || x.isRational();
+}

@@ -1,6 +1,17 @@
 // Sums, products, quotients and roots of balls. Inputs are any balls, results have about prec bits (see `finish`).
 import { BranchError, DomainError, PoleError } from "../../proof/errors.ts";
-import { bitLength, DOWN, exponent, pow2, scaledRadius, shift, size, sizePower, trailingZeros, UP } from "../fixed/bits.ts";
+import {
+  bitLength,
+  DOWN,
+  exponent,
+  pow2,
+  scaledRadius,
+  shift,
+  size,
+  sizePower,
+  trailingZeros,
+  UP,
+} from "../fixed/bits.ts";
 import { sqrtNear } from "../fixed/isqrt.ts";
 import {
   type Ball,

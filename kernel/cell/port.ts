@@ -101,4 +101,6 @@ export interface CellSessionOptions {
    * that a cell that prints faster than it can be sent waits in its print call.
    */
   readonly onEvent: (event: CellEvent) => void | Promise<void>;
+  /** Limit of the heap of the cells in MB; absent: Node's own. */
+  readonly memoryLimit?: number;
 }

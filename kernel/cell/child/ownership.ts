@@ -1,0 +1,22 @@
+// Which cell a piece of running code belongs to, also long after the cell has ended.
+import { AsyncLocalStorage } from "node:async_hooks";
+
+/** The start of a cell, carried by everything that it starts. */
+export interface Owner {
+  readonly cell: number;
+  readonly allowStdin: boolean;
+}
+
+const storage = new AsyncLocalStorage<Owner>();
+let latest: Owner = { cell: 0, allowStdin: false };
+
+/** Runs `body` as the start of a cell. */
+export function own<T>(owner: Owner, body: () => T): T {
+  latest = owner;
+  return storage.run(owner, body);
+}
+
+/** The cell that started the running code; the latest one where that is not known. */
+export function currentOwner(): Owner {
+  return storage.getStore() ?? latest;
+}

@@ -1,0 +1,98 @@
+// The watchdog: a worker that stops the main thread when the kernel asks, and ends the group when the kernel is gone.
+import { Session } from "node:inspector";
+import { Socket } from "node:net";
+import { type MessagePort, workerData } from "node:worker_threads";
+import { LineReader } from "../lines.ts";
+import type { InterruptCommand } from "../messages.ts";
+import { CELL, FIRING, PHASE, PONG, SYNC, type WatchdogMessage } from "./shared.ts";
+
+const DESCRIPTOR = 5;
+const STEP = 50;
+/** After so many refused tries a stop takes code inside Node's own functions too. */
+const PATIENCE = 30;
+const SIGNAL_TIME = 1000;
+const UNCONDITIONAL_AFTER = 3000;
+const KILL_AFTER = 5000;
+
+const { port, state, group } = workerData as { port: MessagePort; state: SharedArrayBuffer; group: boolean };
+const shared = new Int32Array(state);
+let session: Session | undefined;
+let pings = 0;
+let stopping = 0;
+
+function killAll(): void {
+  if (group) {
+    try {
+      process.kill(-process.pid, "SIGKILL");
+    } catch {
+      // Not the leader of a group of its own.
+    }
+  }
+  process.kill(process.pid, "SIGKILL");
+}
+
+const pause = (time: number) => new Promise<void>((resolve) => setTimeout(resolve, time));
+
+function post(message: WatchdogMessage): void {
+  port.postMessage(message);
+}
+
+/** Whether cell `number` runs, or has yet to begin. */
+function isOpen(number: number): boolean {
+  const running = Atomics.load(shared, CELL);
+  return running === number || (running === 0 && stopping === number && Atomics.load(shared, PONG) < pings);
+}
+
+/** Stops cell `number` by ever stronger means. */
+async function interrupt(number: number): Promise<void> {
+  if (stopping === number) return;
+  stopping = number;
+  const began = Date.now();
+  fireSignal();
+  post({ kind: "soft", cell: number });
+  ping(number);
+  await pause(STEP);
+  for (let tries = 0; isOpen(number); tries++) {
+    const elapsed = Date.now() - began;
+    if (elapsed > KILL_AFTER) killAll();
+    const firing = Atomics.load(shared, PHASE) === FIRING && elapsed < SIGNAL_TIME;
+    if (Atomics.load(shared, PONG) < pings && !firing) stop(number, level(elapsed, tries));
+    else fireSignal();
+    if (Atomics.load(shared, PONG) >= pings) ping(number);
+    await pause(STEP);
+  }
+  if (stopping === number) stopping = 0;
+}
+
+function level(elapsed: number, tries: number): 0 | 1 | 2 {
+  if (elapsed > UNCONDITIONAL_AFTER) return 2;
+  return tries > PATIENCE ? 1 : 0;
+}
+
+/** SIGINT to this process, only while the main thread is inside the boundary that it breaks. */
+function fireSignal(): void {
+  if (process.platform === "win32") return;
+  if (Atomics.compareExchange(shared, PHASE, SYNC, FIRING) === SYNC) process.kill(process.pid, "SIGINT");
+}
+
+function ping(number: number): void {
+  pings++;
+  post({ kind: "ping", cell: number, number: pings });
+}
+
+/** Never awaits the reply: it may not come. */
+function stop(number: number, strength: 0 | 1 | 2): void {
+  if (!session) {
+    session = new Session();
+    session.connectToMainThread();
+  }
+  session.post("Runtime.evaluate", { expression: `__cells.stop(${number}, ${strength})`, silent: true });
+}
+
+const reader = new LineReader();
+const socket = new Socket({ fd: DESCRIPTOR, readable: true, writable: false });
+socket.on("data", (chunk: Buffer) => {
+  for (const line of reader.push(chunk)) void interrupt((JSON.parse(line) as InterruptCommand).cell);
+});
+socket.on("end", killAll);
+socket.on("error", killAll);

@@ -1,0 +1,95 @@
+// The types process as the session uses it: questions and answers, and a fresh process when one is lost.
+import type { ChildProcess } from "node:child_process";
+import { launchTypes } from "./launch.ts";
+import { encodeLine, LineReader } from "./lines.ts";
+import type { CommittedCell, TypesAnswers, TypesCommand, TypesReply } from "./messages.ts";
+
+interface Waiting {
+  readonly resolve: (answer: unknown) => void;
+  readonly reject: (reason: Error) => void;
+}
+
+/** The types process was ended, or fell: the question has no answer. */
+export class TypesLost extends Error {}
+
+/** Client of one notebook's types process. */
+export class TypesClient {
+  readonly #cwd: string;
+  readonly #committed = new Map<number, CommittedCell>();
+  readonly #waiting = new Map<number, Waiting>();
+  #process: ChildProcess | undefined;
+  #ids = 0;
+  #closed = false;
+
+  constructor(cwd: string) {
+    this.#cwd = cwd;
+  }
+
+  start(): void {
+    if (this.#process || this.#closed) return;
+    const process = launchTypes(this.#cwd);
+    this.#process = process;
+    const reader = new LineReader();
+    process.stdout?.on("data", (chunk: Buffer) => {
+      for (const line of reader.push(chunk)) this.#receive(JSON.parse(line) as TypesReply);
+    });
+    process.stdin?.on("error", () => {});
+    process.on("error", () => this.#lost(process));
+    process.on("exit", () => this.#lost(process));
+    for (const [cell, declarations] of this.#committed) {
+      this.ask({ kind: "restore", cell, declarations }).catch(() => {});
+    }
+  }
+
+  ask<C extends TypesCommand>(command: C): Promise<TypesAnswers[C["kind"]]> {
+    this.start();
+    const id = ++this.#ids;
+    return new Promise((resolve, reject) => {
+      if (!this.#process) return reject(new TypesLost("the session has ended"));
+      this.#waiting.set(id, { resolve: resolve as (answer: unknown) => void, reject });
+      this.#process.stdin?.write(encodeLine({ id, ...command }));
+    });
+  }
+
+  /** Records what a cell defined, here too: a fresh process is told again. */
+  async commit(cell: number, defined: readonly string[], complete: boolean): Promise<void> {
+    const committed = await this.ask({ kind: "commit", cell, defined, complete });
+    if (committed) this.#committed.set(cell, committed);
+  }
+
+  /** Forgets every name. */
+  reset(): Promise<null> {
+    this.#committed.clear();
+    return this.ask({ kind: "reset" });
+  }
+
+  /** Ends the process, whatever it does; the next question starts another. */
+  restart(): void {
+    const process = this.#process;
+    if (!process) return;
+    process.kill("SIGKILL");
+    this.#lost(process);
+    this.start();
+  }
+
+  close(): void {
+    this.#closed = true;
+    this.#process?.kill("SIGKILL");
+  }
+
+  #receive(reply: TypesReply): void {
+    if (!("id" in reply)) return;
+    const waiting = this.#waiting.get(reply.id);
+    this.#waiting.delete(reply.id);
+    if ("failure" in reply) waiting?.reject(new Error(reply.failure));
+    else waiting?.resolve(reply.answer);
+  }
+
+  #lost(process: ChildProcess): void {
+    if (this.#process !== process) return;
+    this.#process = undefined;
+    const waiting = [...this.#waiting.values()];
+    this.#waiting.clear();
+    for (const { reject } of waiting) reject(new TypesLost("the type checker has ended"));
+  }
+}

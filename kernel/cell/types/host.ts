@@ -1,0 +1,217 @@
+// What the language service reads: the files of the cells from memory, everything else from disk.
+
+import { existsSync, readFileSync } from "node:fs";
+import { isBuiltin } from "node:module";
+import { dirname, join } from "node:path";
+import { fileURLToPath } from "node:url";
+import { cellNumber, LIBRARY } from "./notebook.ts";
+import { type TS, ts } from "./typescript.ts";
+
+/** Modules of Node itself are declared by the node types; there is no file to look for. */
+const NOT_FOUND: TS.ResolvedModuleWithFailedLookupLocations = { resolvedModule: undefined };
+
+interface CellFile {
+  version: number;
+  snapshot: TS.IScriptSnapshot;
+}
+
+/** Where the library's declarations and the node types are. */
+export interface Places {
+  /** Folder of the notebook. */
+  readonly cwd: string;
+  /** `index.d.ts` of the library. */
+  readonly library: string;
+  /** Folder that holds `@types/node`. */
+  readonly typeRoots: readonly string[];
+}
+
+/** Strict, save where strictness only annoys in a notebook. */
+export function compilerOptions(places: Places): TS.CompilerOptions {
+  return {
+    target: ts.ScriptTarget.ES2023,
+    module: ts.ModuleKind.ESNext,
+    moduleResolution: ts.ModuleResolutionKind.Bundler,
+    customConditions: ["node"],
+    lib: ["lib.es2023.d.ts"],
+    types: ["node"],
+    typeRoots: [...places.typeRoots],
+    strict: true,
+    skipLibCheck: true,
+    declaration: true,
+    sourceMap: true,
+    preserveConstEnums: true,
+    resolveJsonModule: true,
+    esModuleInterop: true,
+    rewriteRelativeImportExtensions: true,
+    allowUnreachableCode: true,
+    allowUnusedLabels: true,
+    newLine: ts.NewLineKind.LineFeed,
+    noErrorTruncation: false,
+    forceConsistentCasingInFileNames: true,
+  };
+}
+
+/** Host of the language service of one notebook. */
+export class NotebookHost implements TS.LanguageServiceHost {
+  readonly #places: Places;
+  readonly #options: TS.CompilerOptions;
+  readonly #cells = new Map<number, CellFile>();
+  readonly #disk = new Map<string, TS.IScriptSnapshot | undefined>();
+  readonly #resolutions: TS.ModuleResolutionCache;
+  readonly #settled = new Map<string, TS.ResolvedModuleWithFailedLookupLocations>();
+  readonly #libraryFolder: string;
+  #version = 0;
+  /** A module was missing: it may be there for the next cell. */
+  #forget = false;
+  #root: string[] = [];
+
+  constructor(places: Places) {
+    this.#places = places;
+    this.#options = compilerOptions(places);
+    this.#libraryFolder = dirname(places.library);
+    this.#resolutions = ts.createModuleResolutionCache(places.cwd, (name) => name, this.#options);
+  }
+
+  /** Absolute name of the file of a cell: in the notebook's folder, so that relative imports resolve. */
+  cellFile(cell: number): string {
+    return join(this.#places.cwd, `halfperiod-cell-${cell}.ts`);
+  }
+
+  /** Sets the text of a cell's file, and makes it the root of the next program if asked. */
+  setCell(cell: number, text: string, root: boolean): void {
+    if (this.#forget) this.#resolutions.clear();
+    this.#forget = false;
+    this.#version++;
+    this.#cells.set(cell, { version: this.#version, snapshot: ts.ScriptSnapshot.fromString(text) });
+    if (root) this.#root = [this.cellFile(cell)];
+  }
+
+  dropCell(cell: number): void {
+    this.#cells.delete(cell);
+  }
+
+  cellText(cell: number): string | undefined {
+    const snapshot = this.#cells.get(cell)?.snapshot;
+    return snapshot?.getText(0, snapshot.getLength());
+  }
+
+  getCompilationSettings(): TS.CompilerOptions {
+    return this.#options;
+  }
+
+  getScriptFileNames(): string[] {
+    return this.#root;
+  }
+
+  getScriptVersion(file: string): string {
+    return String(this.#cell(file)?.version ?? 0);
+  }
+
+  getScriptSnapshot(file: string): TS.IScriptSnapshot | undefined {
+    const cell = this.#cell(file);
+    if (cell) return cell.snapshot;
+    if (this.#disk.has(file)) return this.#disk.get(file);
+    const snapshot = existsSync(file) ? ts.ScriptSnapshot.fromString(readFileSync(file, "utf8")) : undefined;
+    // Files of the user beside the notebook may change; those of packages do not.
+    if (this.#isSettled(file)) this.#disk.set(file, snapshot);
+    return snapshot;
+  }
+
+  getCurrentDirectory(): string {
+    return this.#places.cwd;
+  }
+
+  getDefaultLibFileName(options: TS.CompilerOptions): string {
+    return ts.getDefaultLibFilePath(options);
+  }
+
+  getNewLine(): string {
+    return "\n";
+  }
+
+  fileExists(file: string): boolean {
+    return this.#cell(file) !== undefined || ts.sys.fileExists(file);
+  }
+
+  readFile(file: string, encoding?: string): string | undefined {
+    return ts.sys.readFile(file, encoding);
+  }
+
+  directoryExists(directory: string): boolean {
+    return ts.sys.directoryExists(directory);
+  }
+
+  getDirectories(directory: string): string[] {
+    return ts.sys.getDirectories(directory);
+  }
+
+  realpath(file: string): string {
+    return this.#cell(file) ? file : (ts.sys.realpath?.(file) ?? file);
+  }
+
+  /** Shared with the program, which else reads the package.json above every file again and again. */
+  getModuleResolutionCache(): TS.ModuleResolutionCache {
+    return this.#resolutions;
+  }
+
+  resolveModuleNameLiterals(
+    literals: readonly TS.StringLiteralLike[],
+    containingFile: string,
+    redirected: TS.ResolvedProjectReference | undefined,
+    options: TS.CompilerOptions,
+  ): readonly TS.ResolvedModuleWithFailedLookupLocations[] {
+    const settled = this.#isSettled(containingFile);
+    return literals.map(({ text }) => {
+      const own = this.#ownModule(text);
+      if (own)
+        return {
+          resolvedModule: { resolvedFileName: own, extension: extensionOf(own), isExternalLibraryImport: false },
+        };
+      if (isBuiltin(text)) return NOT_FOUND;
+      const key = `${text} ${containingFile}`;
+      const known = settled ? this.#settled.get(key) : undefined;
+      if (known) return known;
+      const found = ts.resolveModuleName(text, containingFile, options, this, this.#resolutions, redirected);
+      if (settled) this.#settled.set(key, found);
+      else if (!found.resolvedModule) this.#forget = true;
+      return found;
+    });
+  }
+
+  /** Files of packages and of the library do not change while a notebook runs; those of the user may. */
+  #isSettled(file: string): boolean {
+    return file.includes("/node_modules/") || file.startsWith(this.#libraryFolder);
+  }
+
+  #ownModule(specifier: string): string | undefined {
+    if (specifier === LIBRARY) return this.#places.library;
+    const cell = cellNumber(specifier);
+    return cell !== undefined && this.#cells.has(cell) ? this.cellFile(cell) : undefined;
+  }
+
+  #cell(file: string): CellFile | undefined {
+    const number = cellNumber(file);
+    return number === undefined ? undefined : this.#cells.get(number);
+  }
+}
+
+function extensionOf(file: string): TS.Extension {
+  return file.endsWith(".d.ts") ? ts.Extension.Dts : ts.Extension.Ts;
+}
+
+/** The places as they are in an installation: this file is dist/kernel/cell/types/host.js. */
+export function defaultPlaces(cwd: string, here: string = import.meta.url): Places {
+  const root = fileURLToPath(new URL("../../../../", here));
+  const library = fileURLToPath(new URL("../../../lib/index.d.ts", here));
+  return { cwd, library, typeRoots: typeRootsFrom(root) };
+}
+
+/** `node_modules/@types` of a folder and of those above it. */
+function typeRootsFrom(folder: string): string[] {
+  const roots: string[] = [];
+  for (let up = folder; ; up = dirname(up)) {
+    const candidate = join(up, "node_modules", "@types");
+    if (existsSync(candidate)) roots.push(candidate);
+    if (dirname(up) === up) return roots;
+  }
+}

@@ -1,0 +1,93 @@
+// The names of the notebook as the checker sees them: which cell defined a name last, and how a later cell gets it.
+import type { Declared, NameKind } from "./outline.ts";
+
+/** A name that a cell has defined. */
+export interface NotebookName extends Declared {
+  /** Number of the cell whose file exports it. */
+  readonly cell: number;
+}
+
+/** Import specifier of the file of a cell; the host resolves it. */
+export function cellSpecifier(cell: number): string {
+  return `./halfperiod-cell-${cell}`;
+}
+
+/** The number in the specifier or file name of a cell. */
+export function cellNumber(specifier: string): number | undefined {
+  const match = /(?:^|[\\/])halfperiod-cell-(\d+)(?:\.d)?(?:\.[jt]s)?$/.exec(specifier);
+  return match ? Number(match[1]) : undefined;
+}
+
+export const LIBRARY = "halfperiod";
+
+const ASSIGNABLE: ReadonlySet<NameKind> = new Set<NameKind>(["let", "var"]);
+
+/** Names of earlier cells; a later definition of a name replaces an earlier one. */
+export class NotebookNames {
+  readonly #names = new Map<string, NotebookName>();
+
+  get(name: string): NotebookName | undefined {
+    return this.#names.get(name);
+  }
+
+  values(): IterableIterator<NotebookName> {
+    return this.#names.values();
+  }
+
+  define(cell: number, declared: Iterable<Declared>): void {
+    for (const one of declared) if (one.kind !== "using") this.#names.set(one.name, { ...one, cell });
+  }
+
+  clear(): void {
+    this.#names.clear();
+  }
+
+  /** Cells whose files are still needed by a name. */
+  cells(): Set<number> {
+    return new Set([...this.#names.values()].map((name) => name.cell));
+  }
+}
+
+export interface Surroundings {
+  /** Text behind the user's text: imports of what it uses, exports of what it defines. */
+  readonly text: string;
+  /** Names that come from the library. */
+  readonly library: ReadonlySet<string>;
+  /** Names of earlier cells that are there. */
+  readonly notebook: readonly NotebookName[];
+}
+
+/**
+ * Surroundings of a cell.
+ *
+ * `wanted` are the words of the cell (or every name, for completion); names that the cell declares are its own.
+ * `exported` are names that the text exports by itself.
+ */
+export function surroundings(
+  wanted: (name: string) => boolean,
+  own: ReadonlyMap<string, Declared>,
+  notebook: NotebookNames,
+  libraryNames: Iterable<string>,
+): Surroundings {
+  const lines: string[] = ["", ";export {};"];
+  const used: NotebookName[] = [];
+  for (const name of notebook.values()) {
+    if (own.has(name.name) || !wanted(name.name)) continue;
+    used.push(name);
+    lines.push(importLine(name));
+  }
+  const library = new Set<string>();
+  for (const name of libraryNames) {
+    if (!own.has(name) && !notebook.get(name) && wanted(name)) library.add(name);
+  }
+  if (library.size > 0) lines.push(`import { ${[...library].join(", ")} } from "${LIBRARY}";`);
+  const exports = [...own.values()].filter((declared) => declared.kind !== "using").map((declared) => declared.name);
+  if (exports.length > 0) lines.push(`export { ${exports.join(", ")} };`);
+  return { text: lines.join("\n"), library, notebook: used };
+}
+
+function importLine(name: NotebookName): string {
+  const from = cellSpecifier(name.cell);
+  if (!ASSIGNABLE.has(name.kind)) return `import { ${name.name} } from "${from}";`;
+  return `declare let ${name.name}: typeof import("${from}").${name.name};`;
+}

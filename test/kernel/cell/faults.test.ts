@@ -1,0 +1,53 @@
+// Faults that end the process of the cells: the session goes on, and says what happened.
+import { spawnSync } from "node:child_process";
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { TestNotebook } from "./notebook.ts";
+
+let notebook: TestNotebook;
+beforeAll(() => {
+  notebook = new TestNotebook({ memoryLimit: 96 });
+});
+afterAll(() => notebook.session.shutdown());
+
+/** State letter of a process; a dead one may wait for its collector as Z. */
+function stateOf(pid: number): string {
+  const told = spawnSync("ps", ["-o", "stat=", "-p", String(pid)], { encoding: "utf8" }).stdout.trim();
+  return told === "" ? "gone" : told.slice(0, 1);
+}
+
+describe("faults", () => {
+  it.each([
+    ["process.exit(3)", "status 3"],
+    ["process.abort()", "SIGABRT"],
+    ["process.kill(process.pid, 'SIGSEGV'); for (;;) {}", "SIGSEGV"],
+    ["const hog: number[][] = []; for (;;) hog.push(new Array(100000).fill(1.5))", "ran out of memory"],
+  ])("%s", async (code, words) => {
+    await notebook.run("let held = 1");
+    const error = await notebook.error(code);
+    expect(error).toContain("SessionEnded");
+    expect(error).toContain(words);
+    expect(error).toContain("variables are lost");
+    expect(await notebook.error("held")).toContain("TS2304");
+    expect(await notebook.value("let held = 2; held")).toBe("2");
+  });
+
+  it("a child that floods does not hang the session", async () => {
+    const code =
+      "import { spawnSync } from 'node:child_process'; spawnSync('head', ['-c', '3000000', '/dev/zero'], { stdio: 'inherit' }).status";
+    expect(await notebook.value(code)).toBe("0");
+  });
+
+  it("process.chdir and a closed stdout harm no later cell", async () => {
+    await notebook.run("process.chdir('/'); process.stdout.end(); import { closeSync } from 'node:fs'; closeSync(1)");
+    expect(await notebook.value("console.log('still'); 5")).toBe("5");
+    expect(notebook.output("stdout", notebook.last)).toBe("still\n");
+  });
+
+  it("shutdown ends the children of cells", async () => {
+    const other = new TestNotebook();
+    const pid = Number(await other.value("import { spawn } from 'node:child_process'; spawn('sleep', ['1000']).pid"));
+    await other.session.shutdown();
+    await new Promise((resolve) => setTimeout(resolve, 100));
+    expect(stateOf(pid)).toMatch(/^(gone|Z)$/);
+  });
+});

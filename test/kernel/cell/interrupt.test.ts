@@ -1,0 +1,63 @@
+// Interrupts: each way to hang once, the place shown, and a short soak. The long soak is in interrupt.slow.test.ts.
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { plain, TestNotebook } from "./notebook.ts";
+import { HANGING, soak } from "./soak.ts";
+
+let notebook: TestNotebook;
+beforeAll(async () => {
+  notebook = new TestNotebook();
+  await notebook.value("let ticks = 0, finals = 0; let kept = 'kept'");
+});
+afterAll(() => notebook.session.shutdown());
+
+async function interrupted(code: string, delay: number): Promise<string> {
+  setTimeout(() => notebook.session.interrupt(), delay);
+  const outcome = await notebook.run(code);
+  if (outcome.status !== "error") throw new Error("the cell ended by itself");
+  expect(outcome.ename).toBe("Interrupted");
+  return plain(outcome.traceback.join("\n"));
+}
+
+describe("interrupt", () => {
+  it.each(HANGING)("%s: stopped, state kept", async (_name, code) => {
+    await interrupted(code, 150);
+    expect(await notebook.value("kept")).toBe('"kept"');
+  });
+
+  it("the place where it hung is shown", async () => {
+    const trace = await interrupted("function stuck() {\n  for (;;) ticks++;\n}\nawait null;\nstuck();", 200);
+    expect(trace).toContain(`stuck, in cell ${notebook.last}, line 2`);
+    expect(trace).toContain("> 2 |   for (;;) ticks++;");
+  });
+
+  it("finally runs when an await is interrupted", async () => {
+    await notebook.value("finals = 0");
+    await interrupted("try { await new Promise(() => {}) } finally { finals = 7 }", 100);
+    expect(await notebook.value("finals")).toBe("7");
+  });
+
+  it("without a running cell it does nothing to the next", async () => {
+    notebook.session.interrupt();
+    expect(await notebook.value("await new Promise((r) => setTimeout(() => r(kept), 50))")).toBe('"kept"');
+  });
+
+  it("twice in a row is once", async () => {
+    setTimeout(() => notebook.session.interrupt(), 100);
+    await interrupted("for (;;) {}", 101);
+    expect(await notebook.value("kept")).toBe('"kept"');
+  });
+
+  it("a loop that an earlier cell left running does not block the session", async () => {
+    await notebook.run("setTimeout(() => { for (;;) ticks++ }, 1)");
+    await interrupted("1", 300);
+    expect(await notebook.value("kept")).toBe('"kept"');
+  });
+});
+
+describe("soak", () => {
+  it("40 cells interrupted at random with an async hook on: each ends as interrupted, with the state whole", async () => {
+    const own = new TestNotebook();
+    await soak(own, { rounds: 40, seed: 20261201, hook: true });
+    await own.session.shutdown();
+  }, 120_000);
+});

@@ -1,0 +1,68 @@
+// A notebook for tests: cells in, outcomes and output out, on real processes.
+import { mkdtempSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import type { CellEvent, CellSession, ExecuteOutcome, ExecuteRequest } from "../../../kernel/cell/port.ts";
+import { createCellSession } from "../../../kernel/cell/session.ts";
+
+export class TestNotebook {
+  readonly events: CellEvent[] = [];
+  readonly cwd: string;
+  readonly session: CellSession;
+  #cell = 0;
+
+  constructor(options: { cwd?: string; memoryLimit?: number } = {}) {
+    this.cwd = options.cwd ?? mkdtempSync(join(tmpdir(), "cells-"));
+    this.session = createCellSession({
+      cwd: this.cwd,
+      onEvent: (event) => void this.events.push(event),
+      ...(options.memoryLimit !== undefined && { memoryLimit: options.memoryLimit }),
+    });
+    this.session.start();
+  }
+
+  /** Number of the last cell that was run. */
+  get last(): number {
+    return this.#cell;
+  }
+
+  run(code: string, more: Partial<ExecuteRequest> = {}): Promise<ExecuteOutcome> {
+    const cell = ++this.#cell;
+    const defaults = { executionCount: cell, silent: false, allowStdin: false, userExpressions: {} };
+    return this.session.execute({ ...defaults, ...more, code, cell });
+  }
+
+  /** Text of the value of a cell; "" for none. Fails with the traceback if the cell does. */
+  async value(code: string): Promise<string> {
+    const outcome = await this.run(code);
+    if (outcome.status === "error") throw new Error(plain(outcome.traceback.join("\n")));
+    return String(outcome.result?.data["text/plain"] ?? "");
+  }
+
+  /** The error of a cell, "ename: evalue". Fails if the cell does not. */
+  async error(code: string): Promise<string> {
+    const outcome = await this.run(code);
+    if (outcome.status !== "error") throw new Error(`no error, but ${outcome.result?.data["text/plain"]}`);
+    return `${outcome.ename}: ${outcome.evalue}`;
+  }
+
+  async traceback(code: string): Promise<string> {
+    const outcome = await this.run(code);
+    if (outcome.status !== "error") throw new Error("no error");
+    return plain(outcome.traceback.join("\n"));
+  }
+
+  /** What a stream has said, of one cell or of all. */
+  output(name: "stdout" | "stderr", cell?: number): string {
+    return this.events
+      .filter((event) => event.type === "stream" && event.name === name && (cell === undefined || event.cell === cell))
+      .map((event) => (event as { text: string }).text)
+      .join("");
+  }
+}
+
+/** Without colours. */
+export function plain(text: string): string {
+  // biome-ignore lint/suspicious/noControlCharactersInRegex: the colours are control characters
+  return text.replace(/\u001b\[\d+m/g, "");
+}

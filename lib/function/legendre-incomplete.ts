@@ -6,7 +6,6 @@
 // Elsewhere f(φ + kπ) = f(φ) + 2k f(π/2) for each of them. The integrals are functions of the root c, not of c²: where an enclosure
 // of c crosses 0 the formulas go on analytically, so that the whole number k may be read off the midpoint.
 
-import type { Ball } from "../number/ball.ts";
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
@@ -24,7 +23,7 @@ import {
   completePi,
   type Modulus,
 } from "./legendre-complete.ts";
-import { roundedQuotient } from "./matrix.ts";
+import { nearest } from "./nearest.ts";
 
 const THREE = { man: 3n, exp: 0, rad: 0 };
 
@@ -63,11 +62,6 @@ function reduced(phi: Disc, wp: number): { rest: Disc; halfTurns: bigint } {
   if (halfTurns === 0n) return { rest: phi, halfTurns };
   const shift = disc.fromBall(ball.mulInt(pi, halfTurns, wp + Math.max(0, disc.magnitude(phi)) + 8));
   return { rest: disc.sub(phi, shift, wp), halfTurns };
-}
-
-/** Nearest integer to the midpoint. */
-function nearest(x: Ball): bigint {
-  return x.exp >= 0 ? x.man << BigInt(x.exp) : roundedQuotient(x.man, 1n << BigInt(-x.exp));
 }
 
 /** 1 − m s² = c² + m1 s², by the form that cancels less. */

@@ -34,7 +34,8 @@ export async function executeFile(file: string, { screen, limit, command }: Exec
       ...(command ? { command } : {}),
     });
     try {
-      return await Promise.race([stop.stopped, runNotebook(notebook, client, { ...progress, limit })]);
+      const { signal, stopped } = stop;
+      return await Promise.race([stopped, runNotebook(notebook, client, { ...progress, limit, signal })]);
     } finally {
       await client.shutdown();
     }
@@ -44,18 +45,28 @@ export async function executeFile(file: string, { screen, limit, command }: Exec
   }
 }
 
-function stopOnSignals(): { readonly stopped: Promise<never>; release(): void } {
-  let stop = () => {};
+interface Stop {
+  readonly signal: AbortSignal;
+  /** Rejects with Interrupted when a signal comes. */
+  readonly stopped: Promise<never>;
+  release(): void;
+}
+
+function stopOnSignals(): Stop {
+  const controller = new AbortController();
+  const { signal } = controller;
   const stopped = new Promise<never>((_, reject) => {
-    stop = () => reject(new Interrupted());
+    signal.addEventListener("abort", () => reject(new Interrupted()));
   });
   stopped.catch(() => {});
+  const stop = () => controller.abort();
   const signals = ["SIGINT", "SIGTERM", "SIGHUP"] as const;
-  for (const signal of signals) process.on(signal, stop);
+  for (const name of signals) process.on(name, stop);
   return {
+    signal,
     stopped,
     release() {
-      for (const signal of signals) process.off(signal, stop);
+      for (const name of signals) process.off(name, stop);
     },
   };
 }

@@ -27,6 +27,7 @@ export interface RunEvents {
 export interface RunOptions extends RunEvents {
   /** Milliseconds a cell may take; no limit if absent. */
   readonly limit?: number | undefined;
+  /** Stops the run between cells; whoever aborts also ends the kernel, which ends the cell. */
   readonly signal?: AbortSignal;
 }
 
@@ -53,6 +54,7 @@ export async function runNotebook(notebook: Notebook, client: KernelClient, opti
       options.signal?.throwIfAborted();
       options.onCell?.(reports.length + 1, total, cell.source);
       const { report, executed } = await runCell(cell, reports.length + 1, client, collector, options);
+      options.signal?.throwIfAborted();
       reports.push(report);
       finish.push(executed);
       options.onReport?.(report);

@@ -1,6 +1,21 @@
-// The names that a cell sees. Each comes from the file that says what it does; keep the groups, one line a file.
+// The names that a cell sees. Each comes from the file that says what it does; a blank line parts the groups.
 
 // Pages
 export { Figure } from "./figure/figure.ts";
+export * as figure from "./figure/figures.ts";
+// Numbers
+export { provedDigits } from "./number/context.ts";
+export { complex, enclose, exact, rational, real } from "./number/convert.ts";
+export { Quadratic, quadratic } from "./number/quadratic.ts";
+export { Rational } from "./number/rational.ts";
+export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/values.ts";
+// Claims
+export { claims } from "./page/claims.ts";
 export { type Row, Table, type TableOptions, table } from "./page/table.ts";
 export { tex, typeset } from "./page/typeset.ts";
+export { claim } from "./surface/claim.ts";
+export { Claim, type Relation } from "./surface/claim-value.ts";
+// Curves
+export { Curve } from "./surface/curve.ts";
+export { curve } from "./surface/make-curve.ts";
+export { Point } from "./surface/point.ts";

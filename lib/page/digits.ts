@@ -93,3 +93,11 @@ function lines(head: string, groups: readonly string[], width: number): string {
   }
   return `\\begin{array}{l} ${rows.join(" \\\\ ")} \\end{array}`;
 }
+
+/** At most `digits` significant digits; what is cut off is within one unit of the last digit kept, and shown by dots. */
+export function shortened(decimal: Decimal, digits: number): Decimal {
+  const leadingZeros = decimal.integer === "0" ? (/^0*/.exec(decimal.fraction)?.[0].length ?? 0) : 0;
+  const room = decimal.integer === "0" ? digits + leadingZeros : Math.max(0, digits - decimal.integer.length);
+  if (decimal.fraction.length <= room || decimal.radius !== undefined) return decimal;
+  return { ...decimal, fraction: decimal.fraction.slice(0, room), continues: true };
+}

@@ -1,9 +1,29 @@
 // The one table of how each class of values is shown. A class must stand above the classes it extends.
 
 import { Figure } from "../figure/figure.ts";
+import { Quadratic } from "../number/quadratic.ts";
+import { Rational } from "../number/rational.ts";
+import { Complex, Real } from "../number/values.ts";
+import { Claim } from "../surface/claim-value.ts";
+import { Curve } from "../surface/curve.ts";
+import { Point } from "../surface/point.ts";
+import { claimKind } from "./claim-kind.ts";
+import { curveKind, pointKind } from "./curve-kind.ts";
+import { quadraticKind, rationalKind } from "./exact-kind.ts";
 import { figureKind } from "./figure-kind.ts";
 import { entry, type KindEntry } from "./kind.ts";
+import { complexKind, realKind } from "./number-kind.ts";
 import { Table } from "./table.ts";
 import { tableKind } from "./table-kind.ts";
 
-export const KINDS: readonly KindEntry[] = [entry(Table, tableKind), entry(Figure, figureKind)];
+export const KINDS: readonly KindEntry[] = [
+  entry(Real, realKind),
+  entry(Complex, complexKind),
+  entry(Rational, rationalKind),
+  entry(Quadratic, quadraticKind),
+  entry(Point, pointKind),
+  entry(Curve, curveKind),
+  entry(Claim, claimKind),
+  entry(Table, tableKind),
+  entry(Figure, figureKind),
+];

@@ -116,10 +116,10 @@ export function conventionsOf(value: unknown): ConventionKey[] {
 function dataOf(value: unknown, depth: number): Data {
   const kind = kindOf(value);
   if (kind) return kind.data(value, show);
-  if (typeof value === "bigint") return { kind: "integer", value: String(value) };
+  if (typeof value === "bigint") return { kind: "rational", value: String(value) };
   if (typeof value === "number") {
     return Number.isSafeInteger(value)
-      ? { kind: "integer", value: String(value) }
+      ? { kind: "rational", value: String(value) }
       : { kind: "double", value: String(value) };
   }
   if (typeof value === "string" || typeof value === "boolean") return value;

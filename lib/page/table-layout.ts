@@ -15,7 +15,7 @@ export interface NumberWidths {
 
 export interface Column {
   readonly head: string;
-  /** Absent: the column holds other things than numbers. */
+  /** Absent: the column holds no numbers. */
   readonly re?: NumberWidths;
   readonly im?: NumberWidths;
 }
@@ -54,8 +54,6 @@ function isSymbol(text: string): boolean {
 
 function column(head: string, cells: readonly (Cell | undefined)[]): Column {
   const numbers = cells.flatMap((cell) => (cell?.kind === "number" ? [cell] : []));
-  const others = cells.filter((cell) => cell && cell.kind !== "number" && cell.text !== "");
-  if (numbers.length === 0 || others.length > 0) return { head };
   const re = widths(numbers.flatMap((cell) => cell.re ?? []));
   const im = widths(numbers.flatMap((cell) => cell.im ?? []));
   return { head, ...(re ? { re } : {}), ...(im ? { im } : {}) };

@@ -10,14 +10,20 @@ export interface Equation<T> {
 }
 
 /** "x^3 - 189*x - 999"; "0" for the zero polynomial. */
-export function plainPolynomial<T>(F: Field<T>, f: Polynomial<T>): string {
-  const terms = sortedTerms(f).map(({ coefficient, exponents }) => plainTerm(F, f.variables, coefficient, exponents));
+export function plainPolynomial<T>(F: Field<T>, f: Polynomial<T>, ordered = sortedTerms(f)): string {
+  const terms = ordered.map(({ coefficient, exponents }) => plainTerm(F, f.variables, coefficient, exponents));
   if (terms.length === 0) return "0";
   return terms.map(({ sign, text }, k) => (k === 0 ? (sign === "-" ? `-${text}` : text) : ` ${sign} ${text}`)).join("");
 }
 
 export function plainEquation<T>(F: Field<T>, { left, right }: Equation<T>): string {
-  return `${plainPolynomial(F, left)} = ${plainPolynomial(F, right)}`;
+  return `${plainPolynomial(F, left, leadingSide(left))} = ${plainPolynomial(F, right)}`;
+}
+
+/** The terms of the left side of a long form in their usual order: y^2 before x*y. */
+export function leadingSide<T>(f: Polynomial<T>): ReturnType<typeof sortedTerms<T>> {
+  const last = f.variables.length - 1;
+  return sortedTerms(f).sort((s, t) => (t.exponents[last] ?? 0) - (s.exponents[last] ?? 0));
 }
 
 function plainTerm<T>(F: Field<T>, variables: readonly string[], coefficient: T, exponents: readonly number[]) {

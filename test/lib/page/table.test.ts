@@ -45,8 +45,8 @@ describe("tables", () => {
       kind: "table",
       columns: ["n", "x", "note"],
       rows: [
-        [{ kind: "integer", value: "1" }, { kind: "integer", value: "7" }, "start"],
-        [{ kind: "integer", value: "-20" }, { kind: "integer", value: "-1234567" }, "<i>far</i> & 50%"],
+        [{ kind: "rational", value: "1" }, { kind: "rational", value: "7" }, "start"],
+        [{ kind: "rational", value: "-20" }, { kind: "rational", value: "-1234567" }, "<i>far</i> & 50%"],
       ],
     });
   });

@@ -1,0 +1,2 @@
+// What a cell finds under `figure`.
+export { curve } from "./curve-figure.ts";

@@ -1,0 +1,58 @@
+import { Complex, Real } from "../number/values.ts";
+import type { Claim } from "../surface/claim-value.ts";
+import type { Kind, Show } from "./kind.ts";
+import { shortTex, shortText } from "./short.ts";
+import { standingProse, standingTex, standingText } from "./standing.ts";
+import { texProse } from "./tex.ts";
+
+const RELATIONS: Readonly<Record<Claim["relation"], string>> = {
+  "=": "=",
+  "≠": "\\ne",
+  "<": "<",
+  "≤": "\\le",
+  on: "\\text{ on }",
+  in: "\\in",
+  homothetic: "\\text{ homothetic to }",
+};
+
+export const claimKind: Kind<Claim> = {
+  text: (claim, show) =>
+    `${claim.name.replace(/\$/g, "")}: ${statementText(claim, show)}   ${standingText(claim.standing)}${inputs(claim)}`,
+  tex: (claim, show) =>
+    `${texProse(claim.name)}{:}\\; ${statementTex(claim, show)} \\quad ${standingTex(claim.standing)}`,
+  // Running text, so that a line that is too long for the page can break between words.
+  prose: (claim, show) => {
+    const plain = claim.name.includes("$") || /^[\p{L}\d ,.;:()'-]*$/u.test(claim.name);
+    const name = plain ? claim.name : `$${texProse(claim.name)}$`;
+    return `${name}: $\\displaystyle ${statementTex(claim, show)}$ — ${standingProse(claim.standing)}${inputs(claim)}`;
+  },
+  // In a table the name and the standing have columns of their own.
+  cell: (claim, show) => ({ kind: "formula", text: statementText(claim, show), tex: statementTex(claim, show) }),
+  data: (claim, show) => ({
+    kind: "claim",
+    name: claim.name,
+    lhs: show.data(claim.lhs),
+    relation: claim.relation,
+    rhs: show.data(claim.rhs),
+    standing: standingData(claim),
+  }),
+};
+
+function standingData({ standing }: Claim): { readonly [key: string]: string } {
+  return Object.fromEntries(Object.entries(standing).map(([key, value]) => [key, String(value)]));
+}
+
+/** The measured inputs that the statement rests on. */
+function inputs({ lhs, rhs }: Claim): string {
+  const all = [lhs, rhs].flatMap((side) => (side instanceof Real || side instanceof Complex ? side.inputs : []));
+  return all.length === 0 ? "" : `, for the measured ${[...new Set(all)].join(", ")}`;
+}
+
+function statementText(claim: Claim, show: Show): string {
+  const relation = claim.relation === "homothetic" ? "homothetic to" : claim.relation;
+  return `${shortText(claim.lhs, show)} ${relation} ${shortText(claim.rhs, show)}`;
+}
+
+function statementTex(claim: Claim, show: Show): string {
+  return `${shortTex(claim.lhs, show)} ${RELATIONS[claim.relation]} ${shortTex(claim.rhs, show)}`;
+}

@@ -1,0 +1,35 @@
+import type { Standing } from "../proof/standing.ts";
+import { texProse } from "./tex.ts";
+
+/** The standing in one or two words. */
+export function standingHead(standing: Standing): string {
+  return standing.kind === "certified" ? `certified to ${standing.digits} digits` : standing.kind;
+}
+
+/** A standing in words, the word that counts first. */
+export function standingText(standing: Standing): string {
+  switch (standing.kind) {
+    case "proved":
+      return `proved (${standing.argument})`;
+    case "certified": {
+      const { digits, bits } = standing;
+      return `certified to ${digits} digits (the sides agree within 10^-${digits}; computed with ${bits} bits, again with ${2 * bits})`;
+    }
+    case "conjectured":
+      return `conjectured (${standing.evidence})`;
+    case "undecided":
+      return `undecided (${standing.tried})`;
+    case "refuted":
+      return `refuted (${standing.evidence})`;
+  }
+}
+
+/** The same as running text with its powers of ten as formulas. */
+export function standingProse(standing: Standing): string {
+  return standingText(standing).replace(/10\^(-?\d+)/g, (_, power: string) => `$10^{${power}}$`);
+}
+
+/** The same as a formula. */
+export function standingTex(standing: Standing): string {
+  return texProse(standingProse(standing));
+}

@@ -1,0 +1,109 @@
+// A claim about points, curves or lists, taken apart into relations between numbers.
+
+import { Quadratic } from "../number/quadratic.ts";
+import { Rational } from "../number/rational.ts";
+import { Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
+import { LibraryError } from "../proof/errors.ts";
+import { type Standing, weakest } from "../proof/standing.ts";
+import { numberStanding } from "./claim-number.ts";
+import type { Relation } from "./claim-value.ts";
+import { Curve } from "./curve.ts";
+import { Point } from "./point.ts";
+
+/** What a claim can be about: numbers, values of the library, and lists or records of them. */
+export type Claimed =
+  | ComplexNumeric
+  | { readonly field: object }
+  | { readonly curve: object }
+  | readonly Claimed[]
+  | { readonly [part: string]: Claimed };
+
+/** How a statement about two values is known. */
+export function standingOf(lhs: unknown, relation: Relation, rhs: unknown): Standing {
+  if (relation === "on") return onStanding(lhs, rhs);
+  const [a, b] = [numberOf(lhs), numberOf(rhs)];
+  if (a && b && relation !== "in" && relation !== "homothetic") return numberStanding(a, relation, b);
+  if (relation !== "=" && relation !== "≠") throw unsuited(lhs, relation, rhs);
+  if (lhs instanceof Curve && rhs instanceof Curve)
+    return decided(lhs.equals(rhs), relation, "equations compared over the same field");
+  if (lhs instanceof Point && rhs instanceof Point) return pointStanding(lhs, relation, rhs);
+  return partsStanding(lhs, relation, rhs);
+}
+
+/** A number of the library or the language; undefined for other values. */
+export function numberOf(value: unknown): Real | Complex | undefined {
+  if (value instanceof Real || value instanceof Complex) return value;
+  const foreign = typeof value === "object" && value !== null && !Array.isArray(value) && "toFixed" in value;
+  const number = value instanceof Rational || value instanceof Quadratic || foreign;
+  const plain = typeof value === "number" || typeof value === "bigint" || typeof value === "string";
+  return number || plain ? scalar(value as ComplexNumeric, "claim") : undefined;
+}
+
+function decided(same: boolean, relation: "=" | "≠", argument: string): Standing {
+  if (same === (relation === "=")) return { kind: "proved", argument };
+  return { kind: "refuted", evidence: `${argument}: they are ${same ? "the same" : "different"}` };
+}
+
+function pointStanding(P: Point<unknown>, relation: "=" | "≠", Q: Point<unknown>): Standing {
+  if (!P.curve.equals(Q.curve)) return decided(false, relation, "points of different curves");
+  const [p, q] = [P.coordinates, Q.coordinates];
+  if (!p || !q) return decided(p === q, relation, "the point at infinity compared");
+  return partsStanding(p, relation, q);
+}
+
+/** Part by part: all must be equal, or one apart. */
+function partsStanding(lhs: unknown, relation: "=" | "≠", rhs: unknown): Standing {
+  const [a, b] = [partsOf(lhs), partsOf(rhs)];
+  if (!a || !b) throw unsuited(lhs, relation, rhs);
+  if (a.length !== b.length) return decided(false, relation, `${a.length} parts and ${b.length} parts`);
+  const names = a.map(([name]) => name).join();
+  if (names !== b.map(([name]) => name).join()) return decided(false, relation, "names of the parts compared");
+  const standings = a.map(([, part], k) => standingOf(part, relation, b[k]?.[1]));
+  return relation === "=" ? allEqual(standings) : anyApart(standings);
+}
+
+function allEqual(standings: readonly Standing[]): Standing {
+  const low = weakest(standings);
+  // Where all parts are proved, the argument is that of the first.
+  return low.kind === "proved" ? (standings[0] ?? low) : low;
+}
+
+function partsOf(value: unknown): (readonly [string, unknown])[] | undefined {
+  if (Array.isArray(value)) return value.map((part, k) => [String(k), part]);
+  if (typeof value !== "object" || value === null) return undefined;
+  const plain = Object.getPrototypeOf(value) === Object.prototype || Object.getPrototypeOf(value) === null;
+  return plain ? Object.entries(value).sort(([s], [t]) => (s < t ? -1 : 1)) : undefined;
+}
+
+/** A list differs from another if one of its parts does. */
+function anyApart(standings: readonly Standing[]): Standing {
+  const shown = standings.find(({ kind }) => kind === "proved");
+  if (shown) return shown;
+  const open = standings.find(({ kind }) => kind !== "refuted");
+  return open ?? { kind: "refuted", evidence: "all parts are the same" };
+}
+
+/** A point, or a list of two coordinates, put into the equation of a curve. */
+function onStanding(lhs: unknown, rhs: unknown): Standing {
+  if (!(rhs instanceof Curve)) throw unsuited(lhs, "on", rhs);
+  const coordinates = lhs instanceof Point ? lhs.coordinates : lhs;
+  if (lhs instanceof Point && !coordinates) return { kind: "proved", argument: "O lies on every curve" };
+  if (!Array.isArray(coordinates) || coordinates.length !== 2) throw unsuited(lhs, "on", rhs);
+  try {
+    rhs.point(coordinates[0], coordinates[1]);
+    return { kind: "proved", argument: "exact substitution into the equation" };
+  } catch (error) {
+    if (error instanceof LibraryError) return { kind: "refuted", evidence: error.given };
+    throw error;
+  }
+}
+
+function unsuited(lhs: unknown, relation: Relation, rhs: unknown): TypeError {
+  return new TypeError(`claim: "${relation}" is not defined between ${described(lhs)} and ${described(rhs)}`);
+}
+
+function described(value: unknown): string {
+  if (Array.isArray(value)) return `a list of ${value.length}`;
+  if (typeof value === "object" && value !== null) return `a ${value.constructor?.name ?? "record"}`;
+  return String(value);
+}

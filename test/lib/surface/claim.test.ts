@@ -1,0 +1,146 @@
+import { afterEach, beforeEach, describe, expect, it } from "vitest";
+import { provedDigits } from "../../../lib/number/context.ts";
+import { complex, enclose, real } from "../../../lib/number/convert.ts";
+import { bundle } from "../../../lib/page/bundle.ts";
+import { claim } from "../../../lib/surface/claim.ts";
+import { claimList } from "../../../lib/surface/claim-list.ts";
+import { curve } from "../../../lib/surface/make-curve.ts";
+
+const before = provedDigits();
+beforeEach(() => {
+  provedDigits(50);
+});
+afterEach(() => {
+  provedDigits(before);
+});
+
+const [two, three, six] = [2, 3, 6].map((n) => real(n).sqrt()) as [Roots, Roots, Roots];
+type Roots = ReturnType<ReturnType<typeof real>["sqrt"]>;
+
+describe("claims about numbers", () => {
+  it("exact equals exact is proved, and refuted otherwise with both values", () => {
+    expect(claim("a", two.times(two), "=", 2).standing).toEqual({ kind: "proved", argument: "exact arithmetic" });
+    expect(claim("b", "1/3", "=", "0.3333").standing).toMatchObject({ kind: "refuted" });
+    expect(claim("c", "1/3", "≠", "0.3333").standing.kind).toBe("proved");
+    expect(claim("d", 5n, "≠", 5).standing.kind).toBe("refuted");
+  });
+
+  it("√2·√3 = √6 is certified to the digits asked for, never called equal — oracle: the identity", () => {
+    const { standing } = claim("product", two.times(three), "=", six);
+    expect(standing).toMatchObject({ kind: "certified", digits: 50 });
+    provedDigits(80);
+    expect(claim("product", two.times(three), "=", six).standing).toMatchObject({ kind: "certified", digits: 80 });
+  });
+
+  it("a difference in the 60th digit is found though 50 are asked for — oracle: made so by hand", () => {
+    const { standing } = claim("near", two.times(three), "=", six.plus("1e-60"));
+    expect(standing.kind).toBe("refuted");
+    const evidence = standing.kind === "refuted" ? standing.evidence : "";
+    // √6 = 2.44948...; the digits shown go just past the place where the sides part.
+    const shown = evidence.match(/2\.4494\d+/g) ?? [];
+    expect(shown.length).toBe(2);
+    expect(shown[0]).not.toBe(shown[1]);
+    expect(evidence).toContain("10^-6");
+  });
+
+  it("tiny numbers do not agree by being tiny, and agree in digits of their own", () => {
+    const tiny = two.times(three).times("1e-80");
+    expect(claim("t1", tiny, "=", six.times("2e-80")).standing.kind).toBe("refuted");
+    expect(claim("t2", tiny, "=", six.times("1e-80")).standing).toMatchObject({ kind: "certified" });
+    const { standing } = claim("t3", tiny, "=", six.times("1e-80"));
+    expect(standing.kind === "certified" && standing.digits).toBeGreaterThanOrEqual(129);
+  });
+
+  it("large numbers are compared behind the point too", () => {
+    const big = two.times(three).times("1e30");
+    expect(claim("big", big, "=", six.times("1e30")).standing).toMatchObject({ kind: "certified", digits: 50 });
+  });
+
+  it("a residual that is 0 by an identity is certified against exact 0", () => {
+    const residual = two.times(three).minus(six);
+    expect(claim("zero", residual, "=", 0).standing).toMatchObject({ kind: "certified", digits: 50 });
+    expect(claim("not zero", residual, "≠", 0).standing.kind).toBe("undecided");
+    expect(claim("not below", residual, "<", 0).standing.kind).toBe("undecided");
+  });
+
+  it("order is proved by enclosures that are apart; equal exact numbers are at most each other", () => {
+    expect(claim("o1", two, "<", three).standing.kind).toBe("proved");
+    expect(claim("o2", three, "≤", two).standing.kind).toBe("refuted");
+    expect(claim("o3", "1/2", "≤", "2/4").standing.kind).toBe("proved");
+    expect(claim("o4", "1/2", "<", "2/4").standing.kind).toBe("refuted");
+    expect(() => claim("o5", complex(0, 1), "<", 1)).toThrow(/real numbers/);
+  });
+
+  it("measured input certifies only what its radius allows", () => {
+    const x = enclose("1.25", "1e-6");
+    const { standing } = claim("m", x, "=", "1.2500003");
+    expect(standing.kind).toBe("certified");
+    expect(standing.kind === "certified" && standing.digits).toBeLessThanOrEqual(5);
+    expect(claim("m2", x, "=", "1.26").standing.kind).toBe("refuted");
+    expect(claim("m3", x, "≠", "1.26").standing.kind).toBe("proved");
+    expect(claim("m4", enclose("1", "3"), "=", "2").standing.kind).toBe("undecided");
+  });
+
+  it("complex numbers: i·√2·√3 = √6·i", () => {
+    expect(claim("i", complex(0, two).times(three), "=", complex(0, six)).standing.kind).toBe("certified");
+  });
+});
+
+describe("claims about points, curves and lists", () => {
+  const E = curve`y^2 + y = x^3 - x`;
+  const P = E.point(0, 0);
+
+  it("the group law: P + (−1, −1) = (2, −3) is proved — oracle: chord by hand", () => {
+    expect(claim("sum", P.plus(E.point(-1, -1)), "=", E.point(2, -3)).standing.kind).toBe("proved");
+    expect(claim("sum", P.plus(P), "=", E.point(2, -3)).standing.kind).toBe("refuted");
+    expect(claim("inverse", P.plus(P.neg()), "=", E.origin).standing.kind).toBe("proved");
+    expect(claim("not O", P, "≠", E.origin).standing.kind).toBe("proved");
+  });
+
+  it("on a curve by substitution, off it with the residual", () => {
+    expect(claim("on", [1, 0], "on", E).standing.kind).toBe("proved");
+    expect(claim("off", [1, 1], "on", E).standing).toMatchObject({ kind: "refuted" });
+    expect(claim("point", P, "on", E).standing.kind).toBe("proved");
+  });
+
+  it("lists by their parts: the weakest counts, one refuted part refutes", () => {
+    expect(claim("l", [two.times(three), 1], "=", [six, 1]).standing.kind).toBe("certified");
+    expect(claim("l", [two.times(three), 1], "=", [six, 2]).standing.kind).toBe("refuted");
+    expect(claim("l", [1, 2], "=", [1]).standing.kind).toBe("refuted");
+    expect(claim("l", { a: 1, b: "1/2" }, "=", { b: "0.5", a: 1 }).standing.kind).toBe("proved");
+    expect(claim("l", [1, 2], "≠", [1, 3]).standing.kind).toBe("proved");
+  });
+
+  it("curves are compared by their equations", () => {
+    expect(claim("same", E, "=", curve({ a: [0, 0, 1, -1, 0] })).standing.kind).toBe("proved");
+  });
+
+  it("what cannot be compared is refused", () => {
+    expect(() => claim("x", E, "=", 1)).toThrow(TypeError);
+    expect(() => claim("x", 1, "on", 2)).toThrow(/"on" is not defined/);
+  });
+});
+
+describe("claims on a page", () => {
+  it("one line with its standing in words", () => {
+    const shown = bundle(claim("product", two.times(three), "=", six));
+    expect(shown?.["text/plain"]).toMatch(
+      /^product: 2\.44948974278\.\.\. = 2\.44948974278\.\.\. {3}certified to 50 digits \(the sides agree within 10\^-50; computed with \d+ bits, again with \d+\)$/,
+    );
+    expect(shown?.["text/latex"]).toMatch(/^product: \$\\displaystyle .*\$ — certified to 50 digits .*\$10\^\{-50\}\$/);
+    expect(shown?.["application/vnd.halfperiod.value+json"]).toMatchObject({
+      kind: "claim",
+      standing: { kind: "certified", digits: "50" },
+    });
+  });
+
+  it("the list keeps one claim a name, the last, in the order of the first", () => {
+    claim("first", 1, "=", 2);
+    claim("second", 1, "=", 1);
+    claim("first", 1, "=", 1);
+    const names = claimList().map(({ name }) => name);
+    expect(names.filter((name) => name === "first").length).toBe(1);
+    expect(names.indexOf("first")).toBeLessThan(names.indexOf("second"));
+    expect(claimList().find(({ name }) => name === "first")?.standing.kind).toBe("proved");
+  });
+});

@@ -19,6 +19,7 @@ export {
   widen,
   widenBy,
 } from "./ball/arithmetic.ts";
+export { acos, asin, atan, atan2 } from "./ball/atan.ts";
 export { compare, contains, overlaps } from "./ball/compare.ts";
 export { ln2, pi } from "./ball/constants.ts";
 export {
@@ -42,8 +43,10 @@ export {
   zero,
 } from "./ball/data.ts";
 export { exp, ln } from "./ball/exp.ts";
+export { eulerGamma, gammaRational } from "./ball/gamma.ts";
 export { cosh, sinh, sinhCosh, tanh } from "./ball/hyperbolic.ts";
 export { floor } from "./ball/integer.ts";
+export { acosh, asinh, atanh, nthRoot, power, tan } from "./ball/power.ts";
 export { type SinCos, sinCos } from "./ball/trig.ts";
 
 import type { Ball } from "./ball/data.ts";

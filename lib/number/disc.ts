@@ -42,3 +42,4 @@ export {
   zero,
 } from "./disc/data.ts";
 export { exp, type SinCos, sinCos, sqrt } from "./disc/elementary.ts";
+export { acos, arg, asin, atan, ln, power, sinhCosh, tan } from "./disc/log.ts";

@@ -60,6 +60,7 @@ export const ABS: Operation = {
     return isDisc(value) ? disc.abs(value, prec) : ball.abs(value);
   },
 };
+export const ARG: Operation = shadow("arg", (x, prec) => disc.arg(x, prec));
 export const RE: Operation = shadow("re", disc.real);
 export const IM: Operation = shadow("im", disc.imag);
 /** re + i·im of two real numbers. */

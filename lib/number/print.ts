@@ -98,6 +98,11 @@ function far(x: Ball, digits: number): DecimalParts | undefined {
   return found && { ...found, exponent: found.exponent + e, ellipsis: true };
 }
 
+/** 0 ± r for an enclosure that holds 0: nothing is known but a bound of its size. */
+export function aroundZero(x: Ball): DecimalParts {
+  return withRadius({ man: 0n, exp: x.exp, rad: Number(absBig(x.man)) + x.rad + 1 });
+}
+
 /** The parts of x with the last digit at 10^-places; undefined if x is not known well enough. */
 export function atPlaces(x: Ball, places: number): DecimalParts | undefined {
   if (ball.isZero(x)) return { sign: "", digits: "0", exponent: 0, ellipsis: false };
@@ -144,7 +149,7 @@ export function withRadius(x: Ball): DecimalParts {
   return {
     sign: n < 0n ? "-" : "",
     digits: text,
-    exponent: n === 0n ? place : text.length - 1 + place,
+    exponent: n === 0n ? 0 : text.length - 1 + place,
     ellipsis: false,
     radius: { digits: shown, exponent: total.length - 1 + place },
   };

@@ -55,6 +55,7 @@ export class Rational {
   /** Throws PoleError for a zero divisor. */
   div(other: Rational | bigint | number): Rational {
     const q = rational(other);
+    if (q.num === 0n) throw zeroDivisor();
     return Rational.of(this.num * q.den, this.den * q.num);
   }
 
@@ -64,6 +65,7 @@ export class Rational {
 
   /** Throws PoleError for 0. */
   inv(): Rational {
+    if (this.num === 0n) throw zeroDivisor();
     return Rational.of(this.den, this.num);
   }
 
@@ -157,6 +159,15 @@ export class Rational {
     const value = match[4] === undefined ? top : top.div(decimalValue(match[4], match[5]));
     return match[1] === "-" || match[1] === "−" ? value.neg() : value;
   }
+}
+
+function zeroDivisor(): PoleError {
+  return new PoleError({
+    subject: "div",
+    given: "the divisor 0",
+    expected: "a divisor away from 0",
+    argument: "divisor",
+  });
 }
 
 function badPosition(text: string): number {

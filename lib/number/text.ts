@@ -6,7 +6,15 @@ import { bitsOf } from "./context.ts";
 import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
 import { asBall, asDisc, displayLimit, evaluate, mayPass, type Node, refinable } from "./origin.ts";
-import { atPlaces, type DecimalParts, plainParts, rationalParts, significant, withRadius } from "./print.ts";
+import {
+  aroundZero,
+  atPlaces,
+  type DecimalParts,
+  plainParts,
+  rationalParts,
+  significant,
+  withRadius,
+} from "./print.ts";
 import { Quadratic } from "./quadratic.ts";
 import { Rational } from "./rational.ts";
 
@@ -27,7 +35,10 @@ function byRadius(x: Node): boolean {
 export function decimal(x: Node, digits: number): DecimalParts {
   if (x.exact instanceof Rational) return rationalParts(x.exact, digits);
   if (byRadius(x)) return withRadius(asBall(x.enclosure));
-  return risen(x, digits, (e) => significant(e, digits)) ?? withRadius(asBall(bestOf(x, digits)));
+  const known = risen(x, digits, (e) => significant(e, digits));
+  if (known) return known;
+  const best = asBall(bestOf(x, digits));
+  return ball.containsZero(best) ? aroundZero(best) : withRadius(best);
 }
 
 function risen<T>(x: Node, digits: number, show: (e: Ball) => T | undefined): T | undefined {

@@ -9,7 +9,7 @@ import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
 import { combine, type Field, isRealExact, power, root } from "./exactness.ts";
 import { type ForeignComplex, type ForeignReal, leafOf } from "./leaf.ts";
-import { ABS, CONJ, DIV, IM, JOIN, MINUS, NEG, PLUS, POWER, RE, SQRT, TIMES } from "./operations.ts";
+import { ABS, ARG, CONJ, DIV, IM, JOIN, MINUS, NEG, PLUS, POWER, RE, SQRT, TIMES } from "./operations.ts";
 import {
   asDisc,
   DEEPEST,
@@ -70,11 +70,16 @@ abstract class Value implements Node {
 
 /** A real number: exact, or an enclosure that more digits can be asked of. */
 export class Real extends Value {
-  readonly ball: Ball;
+  protected readonly kept: Ball;
 
   constructor(enclosure: Ball, birth: Birth) {
     super(birth);
-    this.ball = enclosure;
+    this.kept = enclosure;
+  }
+
+  /** The enclosure as data. */
+  get ball(): Ball {
+    return this.kept;
   }
 
   /** Reads anything that stands for a real number; see `leafOf`. Throws TypeError for a complex one. */
@@ -283,6 +288,11 @@ export class Complex extends Value {
 
   neg(): Complex {
     return complexOf(apply(NEG, [this], this.exact?.neg()));
+  }
+
+  /** The argument in (−π, π]; errors as for the function `arg`. */
+  arg(): Real {
+    return realOf(apply(ARG, [this]));
   }
 
   conj(): Complex {

@@ -1,0 +1,283 @@
+// The functions of numbers that a user calls. Each reads the precision of the context once and is the origin of its result.
+import { DomainError, PrecisionError } from "../proof/errors.ts";
+import * as ball from "./ball.ts";
+import { bitsOf, checkedDigits, mostBits, within } from "./context.ts";
+import * as disc from "./disc.ts";
+import { power as exactPower, root } from "./exactness.ts";
+import { ARG, binary, realOnly, SQRT, unary } from "./operations.ts";
+import { accuracy, asBall, mayPass, type Operation } from "./origin.ts";
+import { Rational } from "./rational.ts";
+import { apply, Complex, type ComplexNumeric, type Numeric, Real, scalar } from "./values.ts";
+
+const EXP = unary("exp", ball.exp, disc.exp);
+const LN = unary("ln", ball.ln, (x, prec) => disc.ln(x, prec));
+const SIN = unary("sin", ball.sin, (x, prec) => disc.sinCos(x, prec).sin);
+const COS = unary("cos", ball.cos, (x, prec) => disc.sinCos(x, prec).cos);
+const TAN = unary("tan", ball.tan, disc.tan);
+const SINH = unary("sinh", ball.sinh, (x, prec) => disc.sinhCosh(x, prec).sinh);
+const COSH = unary("cosh", ball.cosh, (x, prec) => disc.sinhCosh(x, prec).cosh);
+const TANH = unary("tanh", ball.tanh, (x, prec) => {
+  const { sinh: s, cosh: c } = disc.sinhCosh(x, prec + 6);
+  return disc.div(s, c, prec);
+});
+const ASIN = unary("asin", ball.asin, disc.asin);
+const ACOS = unary("acos", ball.acos, disc.acos);
+const ATAN = unary("atan", ball.atan, disc.atan);
+const ASINH = realOnly("asinh", ball.asinh);
+const ACOSH = realOnly("acosh", ball.acosh);
+const ATANH = realOnly("atanh", ball.atanh);
+const AGM = binary("agm", ball.agm, disc.agm);
+const POW = binary("pow", ball.power, (x, y, prec) => disc.power(x, y, prec));
+const ATAN2: Operation = {
+  name: "atan2",
+  evaluate: ([y, x], at, prec) => ball.atan2(asBall(at(y)), asBall(at(x)), prec),
+};
+const ROOT: Operation = {
+  name: "nthRoot",
+  evaluate: ([x, n], at, prec) => ball.nthRoot(asBall(at(x)), n as number, prec),
+};
+const GAMMA: Operation = { name: "gamma", evaluate: ([q], _at, prec) => ball.gammaRational(q as Rational, prec) };
+
+function one(operation: Operation, x: ComplexNumeric, exact?: (x: Rational) => Rational | undefined): Real | Complex {
+  const value = scalar(x, operation.name);
+  const known = exact && value.exact instanceof Rational ? exact(value.exact) : undefined;
+  const result = apply(operation, [value], known);
+  return known && value instanceof Complex && result instanceof Real ? Complex.from(result) : result;
+}
+
+const at =
+  (point: number, value: number) =>
+  (x: Rational): Rational | undefined =>
+    x.equals(point) ? Rational.of(value) : undefined;
+
+/**
+ * The square root >= 0 of a real number >= 0; the principal root, real part >= 0, of a complex one.
+ * Throws DomainError for a negative real number (complex(x) has a root), BranchError for an enclosure that holds both signs or meets the cut.
+ * @example sqrt(2)   // 1.4142135623730950488...
+ */
+export function sqrt(x: Numeric): Real;
+export function sqrt(x: ComplexNumeric): Real | Complex;
+export function sqrt(x: ComplexNumeric): Real | Complex {
+  const value = scalar(x, "sqrt");
+  if (value instanceof Real) return value.sqrt();
+  return apply(SQRT, [value], root(value.exact));
+}
+
+/** e^x; exactly 1 for x = 0. */
+export function exp(x: Numeric): Real;
+export function exp(x: ComplexNumeric): Real | Complex;
+export function exp(x: ComplexNumeric): Real | Complex {
+  return one(EXP, x, at(0, 1));
+}
+
+/**
+ * The natural logarithm of a positive number, or the principal one of a complex number: imaginary part in (−π, π], the negative real
+ * axis belongs to the upper side.
+ * Throws DomainError for 0 and for a negative real number, BranchError for an enclosure that meets the cut.
+ */
+export function ln(x: Numeric): Real;
+export function ln(x: ComplexNumeric): Real | Complex;
+export function ln(x: ComplexNumeric): Real | Complex {
+  return one(LN, x, at(1, 0));
+}
+
+/** sin x, x in radians. */
+export function sin(x: Numeric): Real;
+export function sin(x: ComplexNumeric): Real | Complex;
+export function sin(x: ComplexNumeric): Real | Complex {
+  return one(SIN, x, at(0, 0));
+}
+
+/** cos x, x in radians. */
+export function cos(x: Numeric): Real;
+export function cos(x: ComplexNumeric): Real | Complex;
+export function cos(x: ComplexNumeric): Real | Complex {
+  return one(COS, x, at(0, 1));
+}
+
+/** tan x, x in radians. Throws PoleError where the cosine cannot be told from 0. */
+export function tan(x: Numeric): Real;
+export function tan(x: ComplexNumeric): Real | Complex;
+export function tan(x: ComplexNumeric): Real | Complex {
+  return one(TAN, x, at(0, 0));
+}
+
+export function sinh(x: Numeric): Real;
+export function sinh(x: ComplexNumeric): Real | Complex;
+export function sinh(x: ComplexNumeric): Real | Complex {
+  return one(SINH, x, at(0, 0));
+}
+
+export function cosh(x: Numeric): Real;
+export function cosh(x: ComplexNumeric): Real | Complex;
+export function cosh(x: ComplexNumeric): Real | Complex {
+  return one(COSH, x, at(0, 1));
+}
+
+export function tanh(x: Numeric): Real;
+export function tanh(x: ComplexNumeric): Real | Complex;
+export function tanh(x: ComplexNumeric): Real | Complex {
+  return one(TANH, x, at(0, 0));
+}
+
+/** asin x in [−π/2, π/2] for a real x of [−1, 1]; of a complex one with cuts along the real axis beyond ±1. */
+export function asin(x: Numeric): Real;
+export function asin(x: ComplexNumeric): Real | Complex;
+export function asin(x: ComplexNumeric): Real | Complex {
+  return one(ASIN, x, at(0, 0));
+}
+
+/** acos x in [0, π] for a real x of [−1, 1]; of a complex one with cuts along the real axis beyond ±1. */
+export function acos(x: Numeric): Real;
+export function acos(x: ComplexNumeric): Real | Complex;
+export function acos(x: ComplexNumeric): Real | Complex {
+  return one(ACOS, x, at(1, 0));
+}
+
+/** atan x in (−π/2, π/2) for a real x; of a complex one with cuts along the imaginary axis beyond ±i. */
+export function atan(x: Numeric): Real;
+export function atan(x: ComplexNumeric): Real | Complex;
+export function atan(x: ComplexNumeric): Real | Complex {
+  return one(ATAN, x, at(0, 0));
+}
+
+export function asinh(x: Numeric): Real {
+  return apply(ASINH, [Real.from(x)]) as Real;
+}
+
+/** The value >= 0, for x >= 1. */
+export function acosh(x: Numeric): Real {
+  return apply(ACOSH, [Real.from(x)]) as Real;
+}
+
+/** For |x| < 1. */
+export function atanh(x: Numeric): Real {
+  return apply(ATANH, [Real.from(x)]) as Real;
+}
+
+/** The angle of the point (x, y), in (−π, π]; of a negative x with exact y = 0 it is π. Throws BranchError where the enclosures meet the cut. */
+export function atan2(y: Numeric, x: Numeric): Real {
+  return apply(ATAN2, [Real.from(y), Real.from(x)]) as Real;
+}
+
+/** The argument in (−π, π], the negative real axis belonging to the upper side. Throws DomainError for 0, BranchError on the cut. */
+export function arg(x: ComplexNumeric): Real {
+  const value = scalar(x, "arg");
+  const positive = value.exact instanceof Rational && value.exact.num > 0n;
+  return apply(ARG, [value], positive ? Rational.zero : undefined) as Real;
+}
+
+/** |x|. */
+export function abs(x: ComplexNumeric): Real {
+  return scalar(x, "abs").abs();
+}
+
+/** The complex conjugate. */
+export function conj(x: ComplexNumeric): Complex {
+  return Complex.from(x).conj();
+}
+
+/** x^y: an integer power by products, any other by exp(y·ln x), principal. */
+export function pow(x: Numeric, y: Numeric): Real;
+export function pow(x: ComplexNumeric, y: ComplexNumeric): Real | Complex;
+export function pow(x: ComplexNumeric, y: ComplexNumeric): Real | Complex {
+  const base = scalar(x, "pow");
+  const exponent = scalar(y, "pow");
+  if (exponent.exact instanceof Rational && exponent.exact.den === 1n) return base.pow(Number(exponent.exact.num));
+  const half =
+    exponent.exact instanceof Rational && exponent.exact.den === 2n && base.exact instanceof Rational
+      ? root(base.exact)
+      : undefined;
+  return apply(POW, [base, exponent], half && exactPower(half, Number((exponent.exact as Rational).num)));
+}
+
+/** The n-th root of a real number: >= 0 of one >= 0; of a negative one for odd n only. */
+export function nthRoot(x: Numeric, n: number): Real {
+  return apply(ROOT, [Real.from(x), n]) as Real;
+}
+
+/**
+ * Arithmetic-geometric mean: of two positive numbers, or of complex ones with the right choice of every root (|a' − b'| <= |a' + b'|).
+ * Throws DomainError for a negative real number, BranchError where the choice stays open.
+ */
+export function agm(a: Numeric, b: Numeric): Real;
+export function agm(a: ComplexNumeric, b: ComplexNumeric): Real | Complex;
+export function agm(a: ComplexNumeric, b: ComplexNumeric): Real | Complex {
+  return apply(AGM, [scalar(a, "agm"), scalar(b, "agm")]);
+}
+
+/** Γ(x) for an exact rational x that is not 0, −1, −2, ... Throws PoleError there, DomainError for other arguments. */
+export function gamma(x: Numeric): Real {
+  const q = Real.from(x).exact;
+  if (!(q instanceof Rational)) {
+    throw new DomainError({
+      subject: "gamma",
+      given: `${x}`,
+      expected: "an exact rational number",
+      hint: 'Write gamma("1/4").',
+    });
+  }
+  return apply(GAMMA, [q], factorial(q)) as Real;
+}
+
+function factorial(q: Rational): Rational | undefined {
+  if (q.den !== 1n || q.num <= 0n || q.num > 500n) return undefined;
+  let product = 1n;
+  for (let k = 2n; k < q.num; k++) product *= k;
+  return Rational.of(product);
+}
+
+/**
+ * The result of f, run again at rising precision until it has n proved digits.
+ * Error    a result that rests on measured input comes back as sharp as that allows.
+ * Throws   PrecisionError when 64n + 4096 bits did not do; what f itself throws at the last attempt.
+ * @example atDigits(50, () => sqrt(2).minus("1.414"))
+ */
+export function atDigits<T>(n: number, f: () => T): T {
+  checkedDigits("atDigits", n);
+  const limit = mostBits(n);
+  let best = -1;
+  for (let bits = bitsOf(n) + 32; ; bits = Math.min(2 * bits, limit)) {
+    const result = attempt(n, bits, f, bits >= limit);
+    if (result) {
+      const reached = leastAccuracy(result.value);
+      if (reached >= bitsOf(n) + 1 || resting(result.value)) return shownTo(result.value, n);
+      best = Math.max(best, reached);
+    }
+    if (bits >= limit) break;
+  }
+  throw new PrecisionError({
+    subject: "atDigits",
+    given: `${Math.max(0, Math.floor(best * 0.30103))} proved digits after working with ${limit} bits`,
+    expected: `${n} proved digits`,
+    hint: "A result that is exactly 0 needs an exact argument.",
+  });
+}
+
+function attempt<T>(digits: number, bits: number, f: () => T, last: boolean): { readonly value: T } | undefined {
+  try {
+    return { value: within({ digits, bits }, f) };
+  } catch (error) {
+    if (last || !mayPass(error)) throw error;
+    return undefined;
+  }
+}
+
+/** The least relative accuracy of the numbers in a result: a value, or an array of them; other things count as exact. */
+function leastAccuracy(x: unknown): number {
+  if (x instanceof Real || x instanceof Complex) return x.exact ? Infinity : accuracy(x.enclosure);
+  if (Array.isArray(x)) return Math.min(Infinity, ...x.map(leastAccuracy));
+  return Infinity;
+}
+
+/** Whether a result rests on measured input, so that more bits do not help. */
+function resting(x: unknown): boolean {
+  if (x instanceof Real || x instanceof Complex) return x.standing === "measured" || x.standing === "double";
+  return Array.isArray(x) && x.some(resting);
+}
+
+function shownTo<T>(x: T, digits: number): T {
+  if (x instanceof Real) return new Real(x.ball, { ...x, asked: digits }) as T;
+  if (x instanceof Complex) return new Complex(x.disc, { ...x, asked: digits }) as T;
+  return Array.isArray(x) ? (x.map((y: unknown) => shownTo(y, digits)) as T) : x;
+}

@@ -6,8 +6,35 @@ export * as figure from "./figure/figures.ts";
 // Numbers
 export { provedDigits } from "./number/context.ts";
 export { complex, enclose, exact, rational, real } from "./number/convert.ts";
+export {
+  abs,
+  acos,
+  acosh,
+  agm,
+  arg,
+  asin,
+  asinh,
+  atan,
+  atan2,
+  atanh,
+  atDigits,
+  conj,
+  cos,
+  cosh,
+  exp,
+  gamma,
+  ln,
+  nthRoot,
+  pow,
+  sin,
+  sinh,
+  sqrt,
+  tan,
+  tanh,
+} from "./number/functions.ts";
 export { Quadratic, quadratic } from "./number/quadratic.ts";
 export { Rational } from "./number/rational.ts";
+export { eulerGamma, i, π } from "./number/symbols.ts";
 export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/values.ts";
 // Claims
 export { claims } from "./page/claims.ts";

@@ -12,7 +12,7 @@ export function summaryLines(notebook: Notebook): [label: string, text: string][
   const found = tally(notebook);
   const rows: [string, string][] = [];
   if (found.claims.size > 0) rows.push(["claims", claimsText(found)]);
-  if (found.exactNumbers + found.enclosedNumbers > 0) rows.push(["numbers", numbersText(found)]);
+  if (found.exactNumbers + found.definedNumbers + found.measuredNumbers > 0) rows.push(["numbers", numbersText(found)]);
   return rows;
 }
 
@@ -35,9 +35,11 @@ function extent(kind: string, certified: number | undefined): string {
   return kind === "certified" && certified !== undefined ? ` to ${certified} digits` : "";
 }
 
-function numbersText({ exactNumbers, enclosedNumbers, digits }: Tally): string {
-  const enclosed = enclosedNumbers > 0 ? [`${enclosedNumbers} with ${digits} or more proved digits`] : [];
-  return [`${exactNumbers} exact`, ...enclosed].join(", ");
+function numbersText({ exactNumbers, definedNumbers, measuredNumbers, digits }: Tally): string {
+  const parts = [`${exactNumbers} exact`];
+  if (definedNumbers > 0) parts.push(`${definedNumbers} with ${digits} or more proved digits`);
+  if (measuredNumbers > 0) parts.push(`${measuredNumbers} measured`);
+  return parts.join(", ");
 }
 
 /** The line at the end of a page: what computed it, by which conventions, when. */

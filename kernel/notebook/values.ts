@@ -1,5 +1,5 @@
 // The values that travel as data beside the readable outputs of a notebook, counted.
-import { digitsOf, isNumberData } from "./check/number-data.ts";
+import { digitsOf, isNumberData, type NumberData } from "./check/number-data.ts";
 import { isCode, type Notebook } from "./format.ts";
 
 /** MIME type of a value as data: JSON in which every number is a string. */
@@ -11,31 +11,36 @@ export interface Tally {
   /** Least number of digits to which a claim is certified; undefined if none is. */
   readonly certified?: number;
   readonly exactNumbers: number;
-  readonly enclosedNumbers: number;
-  /** Least number of digits proved of an enclosed number; undefined if there is none. */
+  /** With exact input behind them, so that more digits can be asked for. */
+  readonly definedNumbers: number;
+  /** With a measurement or a double behind them. */
+  readonly measuredNumbers: number;
+  /** Least number of digits proved of a defined number; undefined if there is none. */
   readonly digits?: number;
 }
 
 /** Counts what a notebook's outputs claim and prove. */
 export function tally(notebook: Notebook): Tally {
   const claims = new Map<string, Readonly<Record<string, unknown>>>();
-  const accuracies: number[] = [];
+  const numbers: NumberData[] = [];
   for (const value of storedValues(notebook)) {
     visit(value, (part) => {
       if (part.kind === "claim") claims.set(String(part.name), asFields(part.standing));
-      else if (isNumberData(part)) accuracies.push(digitsOf(part));
+      else if (isNumberData(part)) numbers.push(part);
     });
   }
-  const enclosed = accuracies.filter(Number.isFinite);
+  const exact = numbers.filter((number) => digitsOf(number) === Number.POSITIVE_INFINITY);
+  const defined = numbers.filter((number) => !exact.includes(number) && number.standing === "defined");
   const certified = [...claims.values()].filter(({ kind }) => kind === "certified").map(({ digits }) => Number(digits));
   const standings = new Map<string, number>();
   for (const { kind } of claims.values()) standings.set(String(kind), (standings.get(String(kind)) ?? 0) + 1);
   return {
     claims: standings,
-    exactNumbers: accuracies.length - enclosed.length,
-    enclosedNumbers: enclosed.length,
+    exactNumbers: exact.length,
+    definedNumbers: defined.length,
+    measuredNumbers: numbers.length - exact.length - defined.length,
     ...(certified.length > 0 ? { certified: Math.min(...certified) } : {}),
-    ...(enclosed.length > 0 ? { digits: Math.min(...enclosed) } : {}),
+    ...(defined.length > 0 ? { digits: Math.min(...defined.map(digitsOf)) } : {}),
   };
 }
 

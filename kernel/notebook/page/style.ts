@@ -66,8 +66,12 @@ const PRINT = `
   .code pre, pre.shown, .said, .failure pre { font-size: 7.8pt; white-space: pre-wrap; overflow-wrap: anywhere; }
   .shown, pre, section.prose math.tml-display { overflow: visible; }
   .code, figure, table, .shown, .failure { break-inside: avoid; }
+  .code { break-after: avoid; }
+  section.step { margin: 1rem 0 1.1rem; }
+  figure { margin: 0.6rem auto; }
+  figure svg, figure img { max-width: 84%; }
   a { color: inherit; text-decoration: none; }
-  footer { break-inside: avoid; }
+  footer { break-inside: avoid; break-before: avoid; margin-top: 1.6rem; }
 }
 `;
 

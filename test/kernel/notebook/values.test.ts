@@ -28,13 +28,17 @@ describe("the values of a notebook, counted", () => {
       notebook(
         cell("a", claim("one", { kind: "undecided" }), [claim("one", { kind: "proved" })]),
         cell("b", claim("two", { kind: "certified", digits: "48" }), claim("three", { kind: "refuted" })),
-        cell("c", { kind: "lattice", periods: [{ kind: "real", middle: "123456789e-8", radius: "1e-8" }] }),
+        cell("c", {
+          kind: "lattice",
+          periods: [{ kind: "real", standing: "defined", middle: "123456789e-8", radius: "1e-8" }],
+        }),
+        cell("e", { kind: "real", standing: "measured", middle: "125e-2", radius: "1e-3" }),
         cell("d", { kind: "rational", value: "1/2" }),
       ),
     );
     expect(Object.fromEntries(lines)).toEqual({
       claims: "2 of 3 met, 1 proved, 1 certified to 48 digits, 1 refuted",
-      numbers: "1 exact, 1 with 8 or more proved digits",
+      numbers: "1 exact, 1 with 8 or more proved digits, 1 measured",
     });
   });
 });

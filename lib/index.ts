@@ -1,9 +1,8 @@
-// The names that a cell sees. Each comes from the file that says what it does; a blank line parts the groups.
+// The names that a cell sees. Each comes from the file that says what it does. (A heading that stands alone keeps the
+// sorting of names within its group.)
 
-// Pages
-export { Figure } from "./figure/figure.ts";
-export * as figure from "./figure/figures.ts";
 // Numbers
+
 export { provedDigits } from "./number/context.ts";
 export { complex, enclose, exact, rational, real } from "./number/convert.ts";
 export {
@@ -36,13 +35,22 @@ export { Quadratic, quadratic } from "./number/quadratic.ts";
 export { Rational } from "./number/rational.ts";
 export { eulerGamma, i, π } from "./number/symbols.ts";
 export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/values.ts";
-// Claims
-export { claims } from "./page/claims.ts";
-export { type Row, Table, type TableOptions, table } from "./page/table.ts";
-export { tex, typeset } from "./page/typeset.ts";
-export { claim } from "./surface/claim.ts";
-export { Claim, type Relation } from "./surface/claim-value.ts";
-// Curves
+
+// Lattices and curves
+
 export { Curve } from "./surface/curve.ts";
 export { curve } from "./surface/make-curve.ts";
 export { Point } from "./surface/point.ts";
+
+// Claims
+
+export { claims } from "./page/claims.ts";
+export { claim } from "./surface/claim.ts";
+export { Claim, type Relation } from "./surface/claim-value.ts";
+
+// Figures and pages
+
+export { Figure } from "./figure/figure.ts";
+export * as figure from "./figure/figures.ts";
+export { type Row, Table, type TableOptions, table } from "./page/table.ts";
+export { tex, typeset } from "./page/typeset.ts";

@@ -1,7 +1,9 @@
 // Small readings of discs that the functions share.
+import type { Ball } from "../number/ball.ts";
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
+import { roundedQuotient } from "./matrix.ts";
 
 /** The centre as an exact disc on the same axis. */
 export function midpoint(d: Disc): Disc {
@@ -29,4 +31,9 @@ export function ontoReal(d: Disc): Disc {
 /** The same on the imaginary axis. */
 export function ontoImaginary(d: Disc): Disc {
   return disc.imaginary(disc.imag(d));
+}
+
+/** Nearest integer to the midpoint of x; a half goes up. */
+export function nearestInteger(x: Ball): bigint {
+  return x.exp >= 0 ? x.man << BigInt(x.exp) : roundedQuotient(x.man, 1n << BigInt(-x.exp));
 }

@@ -13,7 +13,7 @@ import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { PoleError } from "../proof/errors.ts";
-import { roundedQuotient } from "./matrix.ts";
+import { nearestInteger } from "./enclosure.ts";
 import type { ReducedLattice } from "./reduced.ts";
 import { thetaSums } from "./theta-sums.ts";
 
@@ -26,11 +26,6 @@ export interface CellArgument {
   readonly m2: bigint;
 }
 
-/** Nearest integer to the midpoint of x. */
-function nearest(x: Ball): bigint {
-  return x.exp >= 0 ? x.man << BigInt(x.exp) : roundedQuotient(x.man, 1n << BigInt(-x.exp));
-}
-
 /**
  * z brought into the cell by a lattice vector that is chosen from midpoints; an identity whatever the choice.
  *
@@ -39,9 +34,9 @@ function nearest(x: Ball): bigint {
 export function toCell(l: ReducedLattice, z: Disc, prec: number): CellArgument {
   const v = disc.div(z, l.r1, prec + 8);
   const height = disc.imag(l.tau);
-  const m2 = nearest(ball.div(disc.imag(v), height, 53 + bitsAbove(v)));
+  const m2 = nearestInteger(ball.div(disc.imag(v), height, 53 + bitsAbove(v)));
   const sheared = m2 === 0n ? v : disc.sub(v, disc.mulInt(l.tau, m2, prec + 8), prec + 8);
-  const m1 = nearest(disc.real(sheared));
+  const m1 = nearestInteger(disc.real(sheared));
   if (m1 === 0n && m2 === 0n) return { rest: z, v, m1, m2 };
   const shift = combination(l.r1, l.r2, m1, m2, prec + 8);
   const rest = disc.sub(z, shift, prec + 8);
@@ -166,12 +161,25 @@ function shiftedSigma(l: ReducedLattice, at: CellArgument, sigma: Disc, prec: nu
   return (m1 | m2) & 1n ? disc.neg(value) : value;
 }
 
-function pole(at: CellArgument): PoleError {
-  return new PoleError({
-    subject: "Weierstrass function",
-    given: `an argument that is, or cannot be told from, the lattice point ${at.m1}·r1 + ${at.m2}·r2 of the reduced basis`,
-    expected: "an argument away from the lattice",
-    hint: "℘, ℘′ and ζ have poles there; give an argument with more digits, or look at the Laurent series.",
-    argument: "z",
-  });
+/** A pole at m1 r1 + m2 r2 of the reduced basis. */
+export class LatticePointError extends PoleError {
+  readonly m1: bigint;
+  readonly m2: bigint;
+
+  constructor(m1: bigint, m2: bigint, where: string) {
+    super({
+      subject: "Weierstrass function",
+      given: `an argument that is, or cannot be told from, the lattice point ${where}`,
+      expected: "an argument away from the lattice",
+      hint: "℘, ℘′ and ζ have poles there, which their Laurent series describe; an argument near one needs more digits.",
+      argument: "z",
+    });
+    this.name = "PoleError";
+    this.m1 = m1;
+    this.m2 = m2;
+  }
+}
+
+function pole({ m1, m2 }: CellArgument): PoleError {
+  return new LatticePointError(m1, m2, `${m1}·r1 + ${m2}·r2 of the reduced basis`);
 }

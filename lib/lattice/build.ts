@@ -3,6 +3,7 @@
 import { type Gram, IDENTITY } from "../function/matrix.ts";
 import * as ball from "../number/ball.ts";
 import * as disc from "../number/disc.ts";
+import type { NumberStanding } from "../number/origin.ts";
 import type { Rational } from "../number/rational.ts";
 import { DomainError, UndecidedError } from "../proof/errors.ts";
 import { complexPeriods, type PeriodPair, realPeriods } from "./agm-periods.ts";
@@ -16,7 +17,15 @@ import {
 } from "./canonical.ts";
 import { cubicRoots } from "./cubic.ts";
 import type { Conjugation, PeriodLattice } from "./period-lattice.ts";
-import { discOf, type ExactComplex, exactComplex, exactRational, isReal, type Quantity } from "./quantity.ts";
+import {
+  discOf,
+  type ExactComplex,
+  exactComplex,
+  exactRational,
+  isReal,
+  type Quantity,
+  standingOf,
+} from "./quantity.ts";
 
 /** Precisions at which discrete choices are tried, in bits. */
 export const LADDER: readonly number[] = [64, 128, 256, 512, 1024, 2048, 4096, 8192, 16384];
@@ -36,15 +45,16 @@ export function latticeOfPeriods(w1: Quantity, w2: Quantity): PeriodLattice {
   const exact = exactPair(w1, w2);
   const conjugation = exact ? exactConjugation(exact) : axisConjugation(w1, w2);
   const given = { kind: "periods", w1, w2 } as const;
+  const standing = jointly(w1, w2);
   const rational = exact && exactGram(exact);
   for (const prec of BOUNDARY_LADDER) {
     const basis = { w1: discOf(w1, prec), w2: discOf(w2, prec) };
     const canonical = canonicalFrom(basis, prec, rational);
-    if (canonical) return real({ given, ...canonical }, conjugation);
+    if (canonical) return real({ given, standing, ...canonical }, conjugation);
   }
   const prec = BOUNDARY_LADDER.at(-1)!;
   const basis = { w1: discOf(w1, prec), w2: discOf(w2, prec) };
-  return real({ given, ...canonicalUndecided(basis, prec) }, conjugation);
+  return real({ given, standing, ...canonicalUndecided(basis, prec) }, conjugation);
 }
 
 function real(lattice: PeriodLattice, conjugation: Conjugation | undefined): PeriodLattice {
@@ -91,6 +101,12 @@ function realRatio(given: string, expected: string): DomainError {
     hint: "Give one of them an imaginary part.",
     argument: "periods",
   });
+}
+
+/** The form |Xω1 + Yω2|² up to a factor, with integers, where the periods are exact. */
+export function exactForm(w1: Quantity, w2: Quantity): Gram | undefined {
+  const exact = exactPair(w1, w2);
+  return exact && exactGram(exact);
 }
 
 type ExactPair = readonly [ExactComplex, ExactComplex];
@@ -169,16 +185,24 @@ export function latticeOfInvariants(g2: Quantity, g3: Quantity): PeriodLattice {
 }
 
 function anchored(
-  given: PeriodLattice["given"],
+  given: Extract<PeriodLattice["given"], { kind: "invariants" }>,
   basis: PeriodPair,
   { toReduced, boundary }: Pick<PeriodLattice, "toReduced" | "boundary">,
   prec: number,
 ): PeriodLattice {
-  return { given, toReduced: IDENTITY, boundary, anchor: transformed(basis, toReduced, prec) };
+  const standing = jointly(given.g2, given.g3);
+  return { given, standing, toReduced: IDENTITY, boundary, anchor: transformed(basis, toReduced, prec) };
+}
+
+/** The standing of what is built on two numbers; "exact" counts as input of the defined kind. */
+function jointly(x: Quantity, y: Quantity): NumberStanding {
+  const both = [standingOf(x), standingOf(y)];
+  return both.includes("double") ? "double" : both.includes("measured") ? "measured" : "defined";
 }
 
 function realInvariants(g2: Quantity, g3: Quantity): PeriodLattice {
   const given = { kind: "invariants", g2, g3 } as const;
+  const standing = jointly(g2, g3);
   const delta = signOnLadder((prec) => disc.real(discriminant(g2, g3, prec)));
   if (delta === 0) throw degenerate();
   if (delta === undefined) throw singularOrNot();
@@ -188,13 +212,13 @@ function realInvariants(g2: Quantity, g3: Quantity): PeriodLattice {
   const s3 = signOnLadder((prec) => disc.real(discOf(g3, prec)));
   // For Δ > 0 the sign of g2 is not asked.
   if (s3 !== undefined && (s2 !== undefined || delta > 0)) {
-    return { given, ...canonicalReal(delta, s2 ?? 1, s3), conjugation, components };
+    return { given, standing, ...canonicalReal(delta, s2 ?? 1, s3), conjugation, components };
   }
   const prec = 256;
   const enclosed = discriminant(g2, g3, prec);
   const basis = realPeriods(cubicRoots(discOf(g2, prec), discOf(g3, prec), enclosed, prec), components, prec);
   const canonical = canonicalFrom(basis, prec) ?? canonicalUndecided(basis, prec);
-  return { given, ...canonical, conjugation, components };
+  return { given, standing, ...canonical, conjugation, components };
 }
 
 function signOnLadder(value: (prec: number) => ball.Ball): Sign | undefined {

@@ -2,6 +2,7 @@
 // except an anchor that recognises the chosen basis of a complex lattice again.
 
 import type { Matrix } from "../function/matrix.ts";
+import type { NumberStanding } from "../number/origin.ts";
 import type { PeriodPair } from "./agm-periods.ts";
 import type { Quantity } from "./quantity.ts";
 
@@ -22,6 +23,8 @@ export interface Conjugation {
 
 export interface PeriodLattice {
   readonly given: Given;
+  /** How the given numbers are known; results inherit it. */
+  readonly standing: NumberStanding;
   /** From the lattice's own basis to the reduced one; acts on τ. */
   readonly toReduced: Matrix;
   /**

@@ -3,9 +3,11 @@
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
+import { asDisc, type Node, type NumberStanding, refinable, refineEnclosure } from "../number/origin.ts";
+import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
 
-export type Quantity = Rational | ExactComplex | Disc;
+export type Quantity = Rational | ExactComplex | Node;
 
 /** real + imag·√(−root), root a positive integer (1 for Gaussian numbers). */
 export interface ExactComplex {
@@ -14,10 +16,17 @@ export interface ExactComplex {
   readonly root: bigint;
 }
 
+function isExactComplex(q: Quantity): q is ExactComplex {
+  return "root" in q;
+}
+
 /** An enclosure with about prec bits, if the number has them. */
 export function discOf(q: Quantity, prec: number): Disc {
   if (q instanceof Rational) return disc.fromRational(q, prec);
-  if (!("root" in q)) return q;
+  if (!isExactComplex(q)) {
+    const exact = exactComplex(q);
+    return exact ? discOf(exact, prec) : asDisc(refineEnclosure(q, prec));
+  }
   if (q.root === 1n) return disc.fromRational(q.real, prec, q.imag);
   const height = ball.mul(ball.fromRational(q.imag, prec + 8), ball.sqrt(ball.fromInt(q.root), prec + 8), prec + 8);
   return disc.fromBalls(ball.fromRational(q.real, prec + 8), height, prec);
@@ -25,21 +34,41 @@ export function discOf(q: Quantity, prec: number): Disc {
 
 /** The exact rational value, if it is known. */
 export function exactRational(q: Quantity): Rational | undefined {
-  if (q instanceof Rational) return q;
-  return "root" in q && q.imag.sign() === 0 ? q.real : undefined;
+  const exact = exactComplex(q);
+  return exact && exact.imag.sign() === 0 ? exact.real : undefined;
 }
 
+/** The exact value in an imaginary quadratic field, if it is known. */
 export function exactComplex(q: Quantity): ExactComplex | undefined {
   if (q instanceof Rational) return { real: q, imag: Rational.zero, root: 1n };
-  return "root" in q ? q : undefined;
+  if (isExactComplex(q)) return q;
+  const { exact } = q;
+  if (exact instanceof Rational) return { real: exact, imag: Rational.zero, root: 1n };
+  if (!(exact instanceof Quadratic)) return undefined;
+  if (exact.isRational()) return { real: exact.a, imag: Rational.zero, root: 1n };
+  return exact.d < 0n ? { real: exact.a, imag: exact.b, root: -exact.d } : undefined;
 }
 
 export function isReal(q: Quantity): boolean {
-  if (q instanceof Rational) return true;
-  return "root" in q ? q.imag.sign() === 0 : q.axis === "real";
+  const exact = exactComplex(q);
+  if (exact) return exact.imag.sign() === 0;
+  return asDisc((q as Node).enclosure).axis === "real";
 }
 
 /** Whether more digits can be had by asking for them. */
 export function isRefinable(q: Quantity): boolean {
-  return q instanceof Rational || "root" in q || q.rad === 0;
+  return q instanceof Rational || isExactComplex(q) || refinable(q);
+}
+
+/** How the number is known. */
+export function standingOf(q: Quantity): NumberStanding {
+  return q instanceof Rational || isExactComplex(q) ? "exact" : q.standing;
+}
+
+/** A short text of the number, for messages. */
+export function textOf(q: Quantity): string {
+  if (!(q instanceof Rational) && isExactComplex(q)) {
+    return q.imag.sign() === 0 ? `${q.real}` : `${q.real} + ${q.imag}√−${q.root}`;
+  }
+  return `${q}`;
 }

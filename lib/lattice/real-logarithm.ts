@@ -1,5 +1,6 @@
 // The elliptic logarithm of a real point of a lattice in its real basis, on the circle of its component.
 
+import { nearestInteger } from "../function/enclosure.ts";
 import type { Ball } from "../number/ball.ts";
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
@@ -59,12 +60,8 @@ function ontoCircle(lattice: PeriodLattice, z: Disc, component: "identity" | "bo
   const wp = prec + 8;
   const half = component === "bounded" ? disc.ldexp(w2, -1) : disc.zero;
   const rest = disc.sub(z, half, wp);
-  const n = ball.round(ball.div(disc.imag(rest), disc.imag(w2), 64), 64);
-  const lifted = disc.real(disc.sub(rest, disc.mulInt(w2, nearest(n), wp), wp));
-  const m = nearest(ball.div(lifted, disc.real(w1), 64));
+  const n = nearestInteger(ball.div(disc.imag(rest), disc.imag(w2), 64));
+  const lifted = disc.real(disc.sub(rest, disc.mulInt(w2, n, wp), wp));
+  const m = nearestInteger(ball.div(lifted, disc.real(w1), 64));
   return ball.sub(lifted, ball.mulInt(disc.real(w1), m, wp), wp);
-}
-
-function nearest(x: Ball): bigint {
-  return BigInt(Math.round(ball.toDouble(x)));
 }

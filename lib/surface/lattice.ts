@@ -1,0 +1,340 @@
+import { latticeOfInvariants, latticeOfPeriods, orientation } from "../lattice/build.ts";
+import { rationalRoot } from "../lattice/exact-roots.ts";
+import {
+  AREA,
+  COORDINATE,
+  DISCRIMINANT,
+  INVARIANT,
+  J,
+  LOGARITHM,
+  QUASI_PERIOD,
+  REDUCED_TAU,
+  ROOT,
+  TAU,
+} from "../lattice/operations.ts";
+import type { PeriodLattice } from "../lattice/period-lattice.ts";
+import { exactRational, type Quantity } from "../lattice/quantity.ts";
+import { type Shape, shapeOf } from "../lattice/shape.ts";
+import type { Exact } from "../number/origin.ts";
+import { Rational } from "../number/rational.ts";
+import { apply, Complex, type ComplexNumeric, type Numeric, Real, scalar } from "../number/values.ts";
+import type { ConventionKey } from "../proof/conventions.ts";
+import { DomainError, UndecidedError } from "../proof/errors.ts";
+import { EllipticFunction, QuasiPeriodicFunction } from "./elliptic-function.ts";
+import { TorusPoint } from "./torus-point.ts";
+
+/** The ways to give a lattice; numbers of one pair or triple are given together. */
+export type LatticeInput =
+  | { readonly periods: readonly [ComplexNumeric, ComplexNumeric] }
+  | { readonly halfPeriods: readonly [ComplexNumeric, ComplexNumeric] }
+  | { readonly tau: ComplexNumeric }
+  | { readonly invariants: readonly [ComplexNumeric, ComplexNumeric] }
+  | { readonly roots: readonly [ComplexNumeric, ComplexNumeric, ComplexNumeric] }
+  | { readonly j: ComplexNumeric };
+
+/** A matrix [[a, b], [c, d]] that acts on τ: new τ = (aτ + b)/(cτ + d), (ω2′, ω1′) = (aω2 + bω1, cω2 + dω1). */
+export type IntegerMatrix = readonly [readonly [bigint, bigint], readonly [bigint, bigint]];
+
+/** The reduced basis of a lattice. */
+export interface ReducedBasis {
+  readonly periods: readonly [TorusPoint, TorusPoint];
+  readonly tau: Complex;
+  /** From the lattice's own basis. */
+  readonly matrix: IntegerMatrix;
+  /** Whether τ is inside the fundamental domain, on its boundary by an exact argument, or too near to tell. */
+  readonly boundary: "inside" | "on" | "undecided";
+}
+
+/** A complex number in the coordinates of a lattice. */
+export interface Location {
+  /** z = r·ω1 + s·ω2. */
+  readonly r: Real;
+  readonly s: Real;
+  /** A nearest lattice point; of two as near the choice is by midpoints. */
+  readonly nearest: TorusPoint;
+  /** z minus the nearest lattice point. */
+  readonly rest: Complex;
+}
+
+/** A lattice Λ = Zω1 + Zω2 of full periods in the complex plane, with its functions. */
+export class Lattice {
+  readonly data: PeriodLattice;
+  /** What was done to the input, where something was: a swap of the periods, a rescaling. */
+  readonly notice: string | undefined;
+  /** ℘ as a function: L.wp(z), L.wp.prime(z). */
+  readonly wp: EllipticFunction;
+  /** Weierstrass ζ, ζ(z + ω_k) = ζ(z) + η_k. */
+  readonly zeta: QuasiPeriodicFunction;
+  /** Weierstrass σ. */
+  readonly sigma: QuasiPeriodicFunction;
+
+  constructor(data: PeriodLattice, notice?: string) {
+    this.data = data;
+    this.notice = notice;
+    this.wp = new EllipticFunction(data, "wp");
+    this.zeta = new QuasiPeriodicFunction(data, "zeta");
+    this.sigma = new QuasiPeriodicFunction(data, "sigma");
+  }
+
+  /** The same as wp. */
+  get ℘(): EllipticFunction {
+    return this.wp;
+  }
+
+  /** The full periods ω1, ω2, Im(ω2/ω1) > 0, as exact points: ω1/3 stays one. */
+  get periods(): readonly [TorusPoint, TorusPoint] {
+    return [this.at(1, 0), this.at(0, 1)];
+  }
+
+  /** ω1/2, (ω1+ω2)/2, ω2/2: the points where ℘ is e1, e2, e3. */
+  get halfPeriods(): readonly [TorusPoint, TorusPoint, TorusPoint] {
+    const half = Rational.of(1, 2);
+    return [this.at(half, 0), this.at(half, half), this.at(0, half)];
+  }
+
+  /** The point r·ω1 + s·ω2 with exact rational coordinates. Throws TypeError for others: add a number to a point instead. */
+  at(r: Numeric, s: Numeric): TorusPoint {
+    return new TorusPoint(this.data, [coordinate(r), coordinate(s)]);
+  }
+
+  /** ω2/ω1. */
+  get tau(): Complex {
+    return Complex.from(apply(TAU, [this.data], exactTau(this.data)));
+  }
+
+  /** g2, g3 of ℘′² = 4℘³ − g2 ℘ − g3: as given, or computed. */
+  get invariants(): readonly [Real | Complex, Real | Complex] {
+    const { given } = this.data;
+    if (given.kind === "invariants") return [given.g2 as Real | Complex, given.g3 as Real | Complex];
+    return [apply(INVARIANT, [this.data, 2]), apply(INVARIANT, [this.data, 3])];
+  }
+
+  /** e1 = ℘(ω1/2), e2 = ℘((ω1+ω2)/2), e3 = ℘(ω2/2); rational ones exactly. */
+  get roots(): readonly [Real | Complex, Real | Complex, Real | Complex] {
+    const root = (index: 1 | 2 | 3) => apply(ROOT, [this.data, index], rationalRoot(this.data, index));
+    return [root(1), root(2), root(3)];
+  }
+
+  /** Δ = g2³ − 27 g3². */
+  get discriminant(): Real | Complex {
+    const exact = rationalInvariants(this.data);
+    return apply(DISCRIMINANT, [this.data], exact && delta(exact));
+  }
+
+  /** j = 1728 g2³/Δ. */
+  get j(): Real | Complex {
+    const exact = rationalInvariants(this.data);
+    return apply(J, [this.data], exact?.[0].pow(3).times(1728).div(delta(exact)));
+  }
+
+  /** η1, η2 of the full periods: η1 ω2 − η2 ω1 = 2πi. */
+  get quasiPeriods(): readonly [Real | Complex, Real | Complex] {
+    return [apply(QUASI_PERIOD, [this.data, 1]), apply(QUASI_PERIOD, [this.data, 2])];
+  }
+
+  /** The area of a period cell. */
+  get area(): Real {
+    return apply(AREA, [this.data]) as Real;
+  }
+
+  /**
+   * "square", "hexagonal", "rectangular", "rhombic" or "general", decided exactly.
+   * Throws UndecidedError where the enclosures allow more than one.
+   */
+  get shape(): Shape {
+    const shape = shapeOf(this.data);
+    if (shape) return shape;
+    throw new UndecidedError({
+      subject: "shape",
+      given: "periods that cannot be told from those of a more symmetric lattice",
+      expected: "a lattice given exactly",
+      hint: "Give the lattice by exact periods, τ, invariants or j.",
+    });
+  }
+
+  /** Number of components of the real curve: 1 or 2; undefined for a lattice that is not known to be its own conjugate. */
+  get realComponents(): 1 | 2 | undefined {
+    return this.data.components;
+  }
+
+  /** The basis with τ in the fundamental domain, and the matrix that leads to it. */
+  get reduced(): ReducedBasis {
+    const { toReduced, boundary } = this.data;
+    const { a, b, c, d } = toReduced;
+    const matrix: IntegerMatrix = [
+      [a, b],
+      [c, d],
+    ];
+    const tau = Complex.from(apply(REDUCED_TAU, [this.data], exactReducedTau(this.data)));
+    return { periods: [this.at(d, c), this.at(b, a)], tau, matrix, boundary };
+  }
+
+  /** z in the coordinates of the basis, with a nearest lattice point. */
+  locate(z: ComplexNumeric): Location {
+    const number = scalar(z, "locate");
+    const r = apply(COORDINATE, [this.data, number, 1]) as Real;
+    const s = apply(COORDINATE, [this.data, number, 2]) as Real;
+    const { a, b, c, d } = this.data.toReduced;
+    const [m, n] = nearestByMidpoint(this, r, s);
+    const nearest = this.at(d * m + b * n, c * m + a * n);
+    return { r, s, nearest, rest: Complex.from(number.minus(Complex.from(nearest))) };
+  }
+
+  /**
+   * z modulo the lattice with ℘(z) = x and ℘′(z) = y.
+   *
+   * Domain   y² = 4x³ − g2 x − g3; enclosures have to allow it.
+   * Branch   a representative near the cell around 0 of the reduced basis; the sign of y settles that of z.
+   * Throws   PrecisionError if x and y fit no point.
+   */
+  logarithm(x: ComplexNumeric, y: ComplexNumeric): Complex {
+    return Complex.from(apply(LOGARITHM, [this.data, scalar(x, "logarithm"), scalar(y, "logarithm")]));
+  }
+
+  /** The conventions that the numbers of this lattice rest on. */
+  get conventions(): readonly ConventionKey[] {
+    const { given, components } = this.data;
+    if (given.kind === "periods") return ["cubic", "periods"];
+    return ["cubic", "periods", components ? "realBasis" : "signOfPeriods"];
+  }
+
+  toString(): string {
+    const [w1, w2] = this.periods;
+    return `lattice with ${w1}, ${w2}`;
+  }
+}
+
+function coordinate(x: Numeric): Rational {
+  const { exact } = scalar(x, "at");
+  if (exact instanceof Rational) return exact;
+  throw new TypeError(
+    `at: the coordinate ${x} is not an exact rational number; add a number to a point instead, as in L.at(1/3, 0).plus(x)`,
+  );
+}
+
+/** Coordinates in the reduced basis of a nearest lattice point, from doubles: exact for all that doubles tell apart. */
+function nearestByMidpoint(lattice: Lattice, r: Real, s: Real): [bigint, bigint] {
+  const { a, b, c, d } = lattice.data.toReduced;
+  const inReduced = (x: Real, p: bigint, y: Real, q: bigint) => x.times(p).plus(y.times(q));
+  const x = inReduced(r, a, s, -b);
+  const y = inReduced(r, -c, s, d);
+  const [u, v] = [x.plus(Rational.of(1, 2)).midpoint.floor()!, y.plus(Rational.of(1, 2)).midpoint.floor()!];
+  const [fx, fy] = [x.minus(u).toDouble(), y.minus(v).toDouble()];
+  const [tr, ti] = lattice.reduced.tau.toDouble();
+  let best: [bigint, bigint] = [u, v];
+  let least = Number.POSITIVE_INFINITY;
+  for (const k of [0, -1, 1]) {
+    for (const l of [0, -1, 1]) {
+      const [p, q] = [fx - k + (fy - l) * tr, (fy - l) * ti];
+      if (p * p + q * q < least) {
+        least = p * p + q * q;
+        best = [u + BigInt(k), v + BigInt(l)];
+      }
+    }
+  }
+  return best;
+}
+
+function rationalInvariants({ given }: PeriodLattice): readonly [Rational, Rational] | undefined {
+  if (given.kind !== "invariants") return undefined;
+  const [g2, g3] = [exactRational(given.g2), exactRational(given.g3)];
+  return g2 && g3 && [g2, g3];
+}
+
+function delta([g2, g3]: readonly [Rational, Rational]): Rational {
+  return g2.pow(3).minus(g3.pow(2).times(27));
+}
+
+function exactTau({ given }: PeriodLattice): Exact | undefined {
+  if (given.kind !== "periods") return undefined;
+  return (given.w2 as Complex).div(given.w1 as Complex).exact;
+}
+
+function exactReducedTau(data: PeriodLattice): Exact | undefined {
+  const tau = exactTau(data);
+  if (!tau || tau instanceof Rational) return undefined;
+  const { a, b, c, d } = data.toReduced;
+  return tau.times(a).plus(b).div(tau.times(c).plus(d));
+}
+
+/**
+ * A lattice from its full periods, half-periods, τ, invariants g2 and g3, roots e1, e2, e3, or j.
+ *
+ * Domain   periods independent over R; Im τ > 0; g2³ ≠ 27 g3²; distinct roots with sum 0. Numbers count as typed, and exactly.
+ * Branch   periods keep the given basis, swapped with a notice if Im(ω2/ω1) < 0. Invariants, roots and j give the real basis if they
+ *          are real, else the reduced one. j gives g2 = g3 = 27j/(j − 1728), for 0 and 1728 the lattices (0, 1) and (1, 0).
+ * Throws   DomainError for dependent periods, Im τ <= 0, a multiple root, roots with another sum.
+ */
+export function lattice(input: LatticeInput): Lattice {
+  const keys = Object.keys(input);
+  if (keys.length !== 1) {
+    throw new TypeError(
+      `lattice: got { ${keys.join(", ")} }; expected exactly one of periods, halfPeriods, tau, invariants, roots, j`,
+    );
+  }
+  if ("periods" in input) return fromPeriods(input.periods);
+  if ("halfPeriods" in input) {
+    return fromPeriods(input.halfPeriods.map((w) => scalar(w, "lattice").times(2)) as [Complex, Complex]);
+  }
+  if ("tau" in input) return fromTau(input.tau);
+  if ("invariants" in input) return fromInvariants(...input.invariants);
+  if ("roots" in input) return fromRoots(input.roots);
+  if ("j" in input) return fromJ(input.j);
+  throw new TypeError(`lattice: got { ${keys[0]} }; expected periods, halfPeriods, tau, invariants, roots or j`);
+}
+
+function fromPeriods([first, second]: readonly [ComplexNumeric, ComplexNumeric]): Lattice {
+  const [w1, w2] = [scalar(first, "lattice"), scalar(second, "lattice")];
+  if (orientation(w1, w2) > 0) return new Lattice(latticeOfPeriods(w1, w2));
+  return new Lattice(
+    latticeOfPeriods(w2, w1),
+    "Im(ω2/ω1) < 0 as given, so the periods were exchanged: the matrix of the change is [[0, 1], [1, 0]].",
+  );
+}
+
+function fromTau(given: ComplexNumeric): Lattice {
+  const tau = scalar(given, "lattice");
+  if (tau instanceof Real || orientation(Rational.one, tau) < 0) {
+    throw new DomainError({
+      subject: "lattice",
+      given: `τ = ${tau}`,
+      expected: "Im τ > 0",
+      hint:
+        tau instanceof Real
+          ? "Two periods with a real ratio make no lattice."
+          : "The conjugate of τ, or −τ, may be meant.",
+      argument: "tau",
+    });
+  }
+  return new Lattice(latticeOfPeriods(Real.from(1), tau));
+}
+
+function fromInvariants(g2: ComplexNumeric, g3: ComplexNumeric, notice?: string): Lattice {
+  const given: [Quantity, Quantity] = [scalar(g2, "lattice"), scalar(g3, "lattice")];
+  return new Lattice(latticeOfInvariants(...given), notice);
+}
+
+function fromRoots(given: readonly [ComplexNumeric, ComplexNumeric, ComplexNumeric]): Lattice {
+  const [e1, e2, e3] = given.map((e) => scalar(e, "lattice")) as [Complex, Complex, Complex];
+  const sum = e1.plus(e2).plus(e3);
+  if (sum.exact ? !(sum.exact instanceof Rational && sum.exact.sign() === 0) : !sum.overlaps(0)) {
+    throw new DomainError({
+      subject: "lattice",
+      given: `roots with the sum ${sum}`,
+      expected: "e1 + e2 + e3 = 0",
+      hint: "Subtract a third of the sum from each.",
+      argument: "roots",
+    });
+  }
+  const g2 = e1.times(e2).plus(e1.times(e3)).plus(e2.times(e3)).times(-4);
+  return fromInvariants(g2, e1.times(e2).times(e3).times(4));
+}
+
+function fromJ(given: ComplexNumeric): Lattice {
+  const j = scalar(given, "lattice");
+  const exact = j.exact instanceof Rational ? j.exact : undefined;
+  if (exact?.sign() === 0) return fromInvariants(0, 1, "j = 0 has the lattices with g2 = 0; this one has g3 = 1.");
+  if (exact?.equals(1728)) return fromInvariants(1, 0, "j = 1728 has the lattices with g3 = 0; this one has g2 = 1.");
+  const g = j.times(27).div(j.minus(1728));
+  return fromInvariants(g, g, "j fixes a lattice up to a factor; this one has g2 = g3 = 27j/(j − 1728).");
+}

@@ -54,3 +54,15 @@ export { Figure } from "./figure/figure.ts";
 export * as figure from "./figure/figures.ts";
 export { type Row, Table, type TableOptions, table } from "./page/table.ts";
 export { tex, typeset } from "./page/typeset.ts";
+
+// Lattices
+export { EllipticFunction, QuasiPeriodicFunction } from "./surface/elliptic-function.ts";
+export {
+  type IntegerMatrix,
+  Lattice,
+  type LatticeInput,
+  type Location,
+  lattice,
+  type ReducedBasis,
+} from "./surface/lattice.ts";
+export { TorusPoint } from "./surface/torus-point.ts";

@@ -8,6 +8,7 @@
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
+import { radiusMagnitude } from "./enclosure.ts";
 import { thetaConstants } from "./theta-sums.ts";
 
 export interface ReducedLattice {
@@ -43,7 +44,7 @@ export function reducedLattice(r1: Disc, r2: Disc, prec: number): ReducedLattice
   const tau = disc.div(r2, r1, wp);
   const q = disc.exp(disc.mulI(disc.mulBall(tau, pi, wp + 8)), wp);
   const q2 = disc.sqr(q, wp);
-  const sums = thetaConstants(q, wp);
+  const sums = thetaConstants(q, Math.max(64, Math.min(wp, 48 - radiusMagnitude(q))));
   const fourthPower = (x: Disc) => disc.sqr(disc.sqr(x, wp), wp);
   const theta2 = disc.mul(disc.ldexp(q, 4), fourthPower(sums.half2), wp);
   const scale = disc.sqr(disc.div(disc.fromBall(pi), r1, wp), wp);

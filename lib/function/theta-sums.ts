@@ -13,7 +13,7 @@
 // Tail. From the first omitted index N >= 1 the terms fall at least by the factor ((2N+3)/(2N+1))³ |q²| max(|t|, |u||q²|)
 // <= 4.7 · 0.01 · 0.2 < 1/2, so the tail of S_k is at most twice its first term.
 
-import type { Disc } from "../number/disc.ts";
+import { type Disc, finish } from "../number/disc/data.ts";
 import { pow2, shift as shiftBy } from "../number/fixed/bits.ts";
 import { PrecisionError } from "../proof/errors.ts";
 
@@ -49,9 +49,19 @@ export function absUpper(x: Fixed, wp: number): number {
   return (Math.sqrt(a * a + b * b) + x.err * pow2(-wp)) * UP;
 }
 
-/** Sum number k as a disc with the exponent −wp. */
+/** A sum as a disc; a wide one loses the bits under its radius. */
 function disc(re: bigint, im: bigint, err: number, wp: number): Disc {
-  return { re, im, exp: -wp, rad: Math.max(1, Math.ceil(err)), axis: "plane" };
+  if (!(err < 2 ** 900)) throw tooCoarse("an argument or a period ratio known too coarsely", "narrower enclosures");
+  return finish(re, im, -wp, Math.max(1, err), wp + 64);
+}
+
+function tooCoarse(given: string, expected: string): PrecisionError {
+  return new PrecisionError({
+    subject: "theta series",
+    given,
+    expected,
+    hint: "Give the argument or the periods with more digits.",
+  });
 }
 
 /**
@@ -70,12 +80,10 @@ export function thetaSums(u: Disc, t: Disc, q2: Disc, order: number, wp: number)
   const U = toFixed(u, wp);
   const [bq, bt, bu] = [absUpper(Q, wp), absUpper(T, wp), absUpper(U, wp)];
   if (!(bq < 0.01 && bt < 0.2 && bu < 4)) {
-    throw new PrecisionError({
-      subject: "theta series",
-      given: "an argument or a period ratio known too coarsely to be brought into one period cell",
-      expected: "an enclosure that is small beside the cell",
-      hint: "Give the argument or the periods with more digits.",
-    });
+    throw tooCoarse(
+      "an argument or a period ratio known too coarsely to be brought into one period cell",
+      "an enclosure that is small beside the cell",
+    );
   }
   let ar = 1n << shift;
   let ai = 0n;
@@ -180,12 +188,10 @@ export function thetaConstants(q: Disc, wp: number): ThetaConstants {
   const Q = toFixed(q, wp);
   const bq = absUpper(Q, wp);
   if (!(bq < 0.1)) {
-    throw new PrecisionError({
-      subject: "theta constants",
-      given: "a period ratio known too coarsely to be reduced",
-      expected: "a nome with |q| < 0.1 over its whole enclosure",
-      hint: "Give the periods with more digits.",
-    });
+    throw tooCoarse(
+      "a period ratio known too coarsely to be reduced",
+      "a nome with |q| < 0.1 over its whole enclosure",
+    );
   }
   const one = 1n << shift;
   // P = q^n, M = q^(n(n+1)), R = q^(n²)

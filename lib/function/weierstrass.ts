@@ -13,7 +13,7 @@ import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { PoleError } from "../proof/errors.ts";
-import { nearestInteger } from "./enclosure.ts";
+import { nearestInteger, radiusMagnitude } from "./enclosure.ts";
 import type { ReducedLattice } from "./reduced.ts";
 import { thetaSums } from "./theta-sums.ts";
 
@@ -83,7 +83,7 @@ export function atCell(
   const poles = wanted.some((name) => name !== "sigma");
   if (poles && disc.containsZero(v)) throw pole(at);
   const near = Math.max(0, -disc.magnitude(v));
-  const wp = prec + 24 + Math.min(near, 64 * prec);
+  const wp = sharpness(l, v, prec + 24 + Math.min(near, 64 * prec));
   const order = wanted.includes("prime") ? 3 : wanted.includes("wp") ? 2 : wanted.includes("zeta") ? 1 : 0;
   const pi = ball.pi(wp + 8);
   const { u, inverse } = phases(v, pi, wp);
@@ -102,6 +102,12 @@ export function atCell(
   }
   if (wanted.includes("sigma")) out.sigma = shiftedSigma(l, at, odd(cellSigma(l, v, sums[0]!, pi, wp)), prec);
   return out;
+}
+
+/** wp, or what the enclosures of v and q allow and a few bits more. */
+function sharpness(l: ReducedLattice, v: Disc, wp: number): number {
+  const coarse = Math.max(radiusMagnitude(v), radiusMagnitude(l.q2));
+  return Math.max(64, Math.min(wp, 48 - coarse));
 }
 
 /** u = exp(2πiv) and 1/u from one real exponential and one sine with cosine. */
@@ -161,14 +167,14 @@ function shiftedSigma(l: ReducedLattice, at: CellArgument, sigma: Disc, prec: nu
   return (m1 | m2) & 1n ? disc.neg(value) : value;
 }
 
-/** A pole at m1 r1 + m2 r2 of the reduced basis. */
+/** A pole at a lattice point, with its coordinates in the basis of whoever throws. */
 export class LatticePointError extends PoleError {
   readonly m1: bigint;
   readonly m2: bigint;
 
-  constructor(m1: bigint, m2: bigint, where: string) {
+  constructor(m1: bigint, m2: bigint, where: string, subject = "Weierstrass function") {
     super({
-      subject: "Weierstrass function",
+      subject,
       given: `an argument that is, or cannot be told from, the lattice point ${where}`,
       expected: "an argument away from the lattice",
       hint: "℘, ℘′ and ζ have poles there, which their Laurent series describe; an argument near one needs more digits.",

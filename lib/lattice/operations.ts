@@ -114,7 +114,7 @@ export const COORDINATE = operation("coordinate", (lattice, [z, index], at, prec
 /** [lattice, z]: a Weierstrass function at a number. */
 function atNumber(name: string, wanted: Wanted): Operation {
   return operation(name, (lattice, [z], at, prec) =>
-    persistent(lattice, z, at, prec, (x, bits) => weierstrassValues(lattice, x, bits, [wanted])[wanted]!),
+    persistent(lattice, name, z, at, prec, (x, bits) => weierstrassValues(lattice, x, bits, [wanted])[wanted]!),
   );
 }
 
@@ -123,13 +123,21 @@ function atPoint(name: string, wanted: Wanted): Operation {
   return operation(name, (lattice, [r, s, rest], at, prec) => {
     const where = [r as Rational, s as Rational] as const;
     if (rest === undefined) return valuesAtPoint(lattice, where, undefined, prec, [wanted])[wanted]!;
-    return persistent(lattice, rest, at, prec, (x, bits) => valuesAtPoint(lattice, where, x, bits, [wanted])[wanted]!);
+    return persistent(
+      lattice,
+      name,
+      rest,
+      at,
+      prec,
+      (x, bits) => valuesAtPoint(lattice, where, x, bits, [wanted])[wanted]!,
+    );
   });
 }
 
 /** Tries again with more bits of the argument where a pole cannot be told from it. */
 function persistent(
   lattice: PeriodLattice,
+  name: string,
   z: unknown,
   at: At,
   prec: number,
@@ -141,16 +149,17 @@ function persistent(
       return evaluate(x, bits);
     } catch (error) {
       if (!(error instanceof LatticePointError)) throw error;
-      if (!isNode(z) || !refinable(z) || bits > 8 * prec + 4096) throw named(lattice, error);
+      if (!isNode(z) || !refinable(z) || bits > 8 * prec + 4096) throw named(lattice, error, name);
       x = asDisc(refineEnclosure(z, 2 * bits));
     }
   }
 }
 
 /** The pole in coordinates of the own basis. */
-function named(lattice: PeriodLattice, { m1, m2 }: LatticePointError): LatticePointError {
+function named(lattice: PeriodLattice, { m1, m2 }: LatticePointError, name: string): LatticePointError {
   const { a, b, c, d } = lattice.toReduced;
-  return new LatticePointError(m1, m2, latticePointText(m1 * d + m2 * b, m1 * c + m2 * a));
+  const [m, n] = [m1 * d + m2 * b, m1 * c + m2 * a];
+  return new LatticePointError(m, n, latticePointText(m, n), name);
 }
 
 /** The operations of each Weierstrass function: at a number, and at a point with exact coordinates. */

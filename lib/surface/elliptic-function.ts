@@ -1,6 +1,8 @@
-import type { Wanted } from "../function/weierstrass.ts";
+import { LatticePointError, type Wanted } from "../function/weierstrass.ts";
+import { rationalRoot } from "../lattice/exact-roots.ts";
 import { WEIERSTRASS } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
+import { Rational } from "../number/rational.ts";
 import { apply, type Complex, type ComplexNumeric, type Real, scalar } from "../number/values.ts";
 import { Callable } from "./callable.ts";
 import { TorusPoint } from "./torus-point.ts";
@@ -35,9 +37,24 @@ export class QuasiPeriodicFunction extends Callable {
 }
 
 function evaluate(lattice: PeriodLattice, kind: Wanted, z: ComplexNumeric): Real | Complex {
-  if (z instanceof TorusPoint && z.lattice === lattice) {
-    const rest = z.remainder ? [z.remainder] : [];
-    return apply(WEIERSTRASS[kind].point, [lattice, ...z.coordinates, ...rest]);
+  if (!(z instanceof TorusPoint && z.lattice === lattice)) {
+    return apply(WEIERSTRASS[kind].number, [lattice, scalar(z, kind)]);
   }
-  return apply(WEIERSTRASS[kind].number, [lattice, scalar(z, kind)]);
+  if (z.isLatticePoint && kind !== "sigma") throw poleAt(z, kind);
+  const rest = z.remainder ? [z.remainder] : [];
+  return apply(WEIERSTRASS[kind].point, [lattice, ...z.coordinates, ...rest], exactValue(z, kind));
+}
+
+/** Values that symmetry alone settles: ℘′ at the half-periods (and ℘ there, if it is rational), σ at lattice points. */
+function exactValue(z: TorusPoint, kind: Wanted): Rational | undefined {
+  if (kind === "sigma") return z.isLatticePoint ? Rational.zero : undefined;
+  if (z.order !== 2n || kind === "zeta") return undefined;
+  if (kind === "prime") return Rational.zero;
+  const [first, second] = z.coordinates.map((q) => !q.isInteger());
+  return rationalRoot(z.lattice, first ? (second ? 2 : 1) : 3);
+}
+
+function poleAt(z: TorusPoint, kind: string): LatticePointError {
+  const [m, n] = z.coordinates;
+  return new LatticePointError(m.num, n.num, z.name, kind);
 }

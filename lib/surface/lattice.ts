@@ -13,7 +13,7 @@ import {
   TAU,
 } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
-import { exactRational, type Quantity } from "../lattice/quantity.ts";
+import type { Quantity } from "../lattice/quantity.ts";
 import { type Shape, shapeOf } from "../lattice/shape.ts";
 import type { Exact } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
@@ -117,14 +117,13 @@ export class Lattice {
 
   /** Δ = g2³ − 27 g3². */
   get discriminant(): Real | Complex {
-    const exact = rationalInvariants(this.data);
-    return apply(DISCRIMINANT, [this.data], exact && delta(exact));
+    return apply(DISCRIMINANT, [this.data], exactDiscriminant(this)?.exact);
   }
 
   /** j = 1728 g2³/Δ. */
   get j(): Real | Complex {
-    const exact = rationalInvariants(this.data);
-    return apply(J, [this.data], exact?.[0].pow(3).times(1728).div(delta(exact)));
+    const exact = exactDiscriminant(this);
+    return apply(J, [this.data], exact && this.invariants[0].pow(3).times(1728).div(exact).exact);
   }
 
   /** η1, η2 of the full periods: η1 ω2 − η2 ω1 = 2πi. */
@@ -235,14 +234,11 @@ function nearestByMidpoint(lattice: Lattice, r: Real, s: Real): [bigint, bigint]
   return best;
 }
 
-function rationalInvariants({ given }: PeriodLattice): readonly [Rational, Rational] | undefined {
-  if (given.kind !== "invariants") return undefined;
-  const [g2, g3] = [exactRational(given.g2), exactRational(given.g3)];
-  return g2 && g3 && [g2, g3];
-}
-
-function delta([g2, g3]: readonly [Rational, Rational]): Rational {
-  return g2.pow(3).minus(g3.pow(2).times(27));
+/** Δ, where g2 and g3 are exact. */
+function exactDiscriminant({ invariants: [g2, g3] }: Lattice): Real | Complex | undefined {
+  if (!g2.exact || !g3.exact) return undefined;
+  const value = g2.pow(3).minus(g3.pow(2).times(27));
+  return value.exact ? value : undefined;
 }
 
 function exactTau({ given }: PeriodLattice): Exact | undefined {

@@ -10,7 +10,7 @@ import { texName } from "./tex.ts";
 
 const RULE = "1px solid currentColor";
 const STYLE = {
-  table: `border-collapse:collapse;border:0;border-top:${RULE};border-bottom:${RULE};font-variant-numeric:tabular-nums lining-nums;margin:.4em 0`,
+  table: `table-layout:auto;width:auto;border-collapse:collapse;border:0;border-top:${RULE};border-bottom:${RULE};font-variant-numeric:tabular-nums lining-nums;margin:.4em 0`,
   caption: "caption-side:top;text-align:left;padding:0 .6em .4em 0;color:inherit",
   head: `text-align:left;vertical-align:bottom;padding:.25em 1.2em .25em 0;border:0;border-bottom:${RULE};font-weight:normal`,
   cell: "text-align:left;vertical-align:baseline;padding:.2em 1.2em .2em 0;border:0;white-space:nowrap;font-weight:normal",

@@ -68,8 +68,7 @@ const PRINT = `
   .code, figure, table, .shown, .failure { break-inside: avoid; }
   .code { break-after: avoid; }
   section.step { margin: 1rem 0 1.1rem; }
-  figure { margin: 0.6rem auto; }
-  figure svg, figure img { max-width: 84%; }
+  figure { margin: 0.6rem auto; max-width: 84%; }
   a { color: inherit; text-decoration: none; }
   footer { break-inside: avoid; break-before: avoid; margin-top: 1.6rem; }
 }

@@ -39,8 +39,18 @@ export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/value
 // Lattices and curves
 
 export { Curve } from "./surface/curve.ts";
+export { EllipticFunction, QuasiPeriodicFunction } from "./surface/elliptic-function.ts";
+export {
+  type IntegerMatrix,
+  Lattice,
+  type LatticeInput,
+  type Location,
+  lattice,
+  type ReducedBasis,
+} from "./surface/lattice.ts";
 export { curve } from "./surface/make-curve.ts";
 export { Point } from "./surface/point.ts";
+export { TorusPoint } from "./surface/torus-point.ts";
 
 // Claims
 
@@ -54,15 +64,3 @@ export { Figure } from "./figure/figure.ts";
 export * as figure from "./figure/figures.ts";
 export { type Row, Table, type TableOptions, table } from "./page/table.ts";
 export { tex, typeset } from "./page/typeset.ts";
-
-// Lattices
-export { EllipticFunction, QuasiPeriodicFunction } from "./surface/elliptic-function.ts";
-export {
-  type IntegerMatrix,
-  Lattice,
-  type LatticeInput,
-  type Location,
-  lattice,
-  type ReducedBasis,
-} from "./surface/lattice.ts";
-export { TorusPoint } from "./surface/torus-point.ts";

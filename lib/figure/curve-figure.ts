@@ -2,18 +2,18 @@ import type { Curve } from "../surface/curve.ts";
 import { Point } from "../surface/point.ts";
 import { drawCurve } from "./curve-picture.ts";
 import { chooseWindow } from "./curve-window.ts";
-import { type RealInput, realDouble } from "./doubles.ts";
+import { type RealInput, realDouble, realWindow } from "./doubles.ts";
 import type { PlaneEquation } from "./fibre.ts";
 import type { Figure } from "./figure.ts";
-import type { Window } from "./frame.ts";
 import type { Mark } from "./marks.ts";
+import { type Named, namedEntries } from "./named.ts";
 
 /** A point to be marked: of a curve, or of the plane by its coordinates. */
 export type PlanePoint = Point | readonly [RealInput, RealInput];
 
 export interface CurveFigureOptions {
   /** Points to be marked, by their names: { P, Q }. A list gives them the names P1, P2, ... */
-  readonly points?: Readonly<Record<string, PlanePoint>> | readonly PlanePoint[];
+  readonly points?: Named<PlanePoint>;
   /** Two points: the line through them (the tangent if they are the same), its third point, and their sum. */
   readonly chord?: readonly [Point, Point];
   /** Further lines, each through two points. */
@@ -42,18 +42,18 @@ const NOTHING: Extras = { marks: [], lines: [], segments: [], remarks: [] };
  */
 export function curve(E: Curve, options: CurveFigureOptions = {}): Figure {
   const equation = equationOf(E);
-  const named = namedPoints(options.points);
+  const named = namedEntries(options.points, (_, k) => `P_${k + 1}`);
   const extras = [chordOf(E, named, options.chord), linesOf(options.lines)];
   const marks = [...named.flatMap(markOf), ...extras.flatMap((extra) => extra.marks)];
   return drawCurve({
     title: `Real points of ${E}`,
     equation,
-    window:
-      windowOf(options) ??
-      chooseWindow(
-        equation,
-        marks.map((mark) => mark.at),
-      ),
+    window: options.window
+      ? realWindow("figure.curve", options.window)
+      : chooseWindow(
+          equation,
+          marks.map((mark) => mark.at),
+        ),
     axisNames: { x: "x", y: "y" },
     marks: once(marks),
     lines: extras.flatMap((extra) => extra.lines),
@@ -79,13 +79,7 @@ function equationOf(E: Curve): PlaneEquation {
   return { rows: [[-a6, -a4, -a2, -1], [a3, a1], [1]] };
 }
 
-type Named = readonly [name: string, point: PlanePoint];
-
-function namedPoints(points: CurveFigureOptions["points"]): Named[] {
-  if (points === undefined) return [];
-  if (!Array.isArray(points)) return Object.entries(points as Readonly<Record<string, PlanePoint>>);
-  return (points as readonly PlanePoint[]).map((point, k): Named => [`P_${k + 1}`, point]);
-}
+type NamedPoint = readonly [name: string, point: PlanePoint];
 
 function plainPoint(point: PlanePoint): Plain | undefined {
   const coordinates = point instanceof Point ? point.coordinates : point;
@@ -93,7 +87,7 @@ function plainPoint(point: PlanePoint): Plain | undefined {
   return [realDouble("figure.curve", coordinates[0]), realDouble("figure.curve", coordinates[1])];
 }
 
-function markOf([label, point]: Named): Mark[] {
+function markOf([label, point]: NamedPoint): Mark[] {
   const at = plainPoint(point);
   return at ? [{ at, label }] : [];
 }
@@ -113,7 +107,7 @@ function linesOf(lines: CurveFigureOptions["lines"] = []): Extras {
 const UPRIGHT = "The line is upright: it meets the curve again only at O, the sum of the two points.";
 
 /** The chord or tangent, its third point R and the sum −R with the line of reflection. */
-function chordOf(E: Curve, named: readonly Named[], chord: CurveFigureOptions["chord"]): Extras {
+function chordOf(E: Curve, named: readonly NamedPoint[], chord: CurveFigureOptions["chord"]): Extras {
   if (!chord) return NOTHING;
   const [P, Q] = chord;
   const first = nameOf(named, P, "P");
@@ -141,7 +135,7 @@ function chordOf(E: Curve, named: readonly Named[], chord: CurveFigureOptions["c
   };
 }
 
-function nameOf(named: readonly Named[], point: Point, otherwise: string): string {
+function nameOf(named: readonly NamedPoint[], point: Point, otherwise: string): string {
   return named.find(([, other]) => other instanceof Point && other.equals(point))?.[0] ?? otherwise;
 }
 
@@ -157,14 +151,4 @@ function along(E: Curve, [x, y]: Plain): Plain {
 /** Each place once: a point that is named twice keeps its first name. */
 function once(marks: readonly Mark[]): Mark[] {
   return marks.filter((mark, k) => marks.findIndex(({ at }) => at[0] === mark.at[0] && at[1] === mark.at[1]) === k);
-}
-
-function windowOf({ window }: CurveFigureOptions): Window | undefined {
-  if (!window) return undefined;
-  const side = ([low, high]: readonly [RealInput, RealInput]): [number, number] => {
-    const [a, b] = [realDouble("figure.curve", low), realDouble("figure.curve", high)];
-    if (!(a < b)) throw new RangeError(`figure.curve: window from ${a} to ${b}; expected the lower end first`);
-    return [a, b];
-  };
-  return { x: side(window.x), y: side(window.y) };
 }

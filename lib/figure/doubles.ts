@@ -7,6 +7,7 @@ import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
 import type { ComplexNumeric, Numeric } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
+import type { Window } from "./frame.ts";
 
 /** A real number that can be drawn. */
 export type RealInput = Numeric | Quadratic;
@@ -24,6 +25,19 @@ export function complexDouble(subject: string, value: unknown): [number, number]
   if (!Number.isFinite(re) || !Number.isFinite(im))
     throw refusal(subject, value, "a number within the range of a drawing");
   return [re, im];
+}
+
+/** The ends of a window, each lower end first. */
+export function realWindow(
+  subject: string,
+  window: { readonly x: readonly [RealInput, RealInput]; readonly y: readonly [RealInput, RealInput] },
+): Window {
+  const side = ([low, high]: readonly [RealInput, RealInput]): [number, number] => {
+    const [a, b] = [realDouble(subject, low), realDouble(subject, high)];
+    if (!(a < b)) throw new RangeError(`${subject}: window from ${a} to ${b}; expected the lower end first`);
+    return [a, b];
+  };
+  return { x: side(window.x), y: side(window.y) };
 }
 
 function rawDouble(subject: string, value: unknown): readonly [number, number] {

@@ -1,6 +1,6 @@
 import { weakest } from "../proof/standing.ts";
 import { claimList } from "../surface/claim-list.ts";
-import { standingHead, standingText } from "./standing.ts";
+import { standingBrief, standingHead } from "./standing.ts";
 import { type Table, table } from "./table.ts";
 
 /**
@@ -15,7 +15,7 @@ export function claims(): Table {
   const counts = [...new Set(kinds)].map((kind) => `${kinds.filter((other) => other === kind).length} ${kind}`);
   const together = list.length === 0 ? "" : `; together ${standingHead(weakest(list.map(({ standing }) => standing)))}`;
   return table(
-    list.map((claim) => [claim.name, claim, standingText(claim.standing)]),
+    list.map((claim) => [claim.name, claim, standingBrief(claim.standing)]),
     { columns: ["claim", "statement", "standing"], caption: `Claims: ${counts.join(", ") || "none"}${together}` },
   );
 }

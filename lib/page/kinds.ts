@@ -6,21 +6,29 @@ import { Rational } from "../number/rational.ts";
 import { Complex, Real } from "../number/values.ts";
 import { Claim } from "../surface/claim-value.ts";
 import { Curve } from "../surface/curve.ts";
+import { EllipticFunction, QuasiPeriodicFunction } from "../surface/elliptic-function.ts";
+import { Lattice } from "../surface/lattice.ts";
 import { Point } from "../surface/point.ts";
+import { TorusPoint } from "../surface/torus-point.ts";
 import { claimKind } from "./claim-kind.ts";
 import { curveKind, pointKind } from "./curve-kind.ts";
 import { quadraticKind, rationalKind } from "./exact-kind.ts";
 import { figureKind } from "./figure-kind.ts";
 import { entry, type KindEntry } from "./kind.ts";
+import { functionKind, latticeKind, torusPointKind } from "./lattice-kind.ts";
 import { complexKind, realKind } from "./number-kind.ts";
 import { Table } from "./table.ts";
 import { tableKind } from "./table-kind.ts";
 
 export const KINDS: readonly KindEntry[] = [
+  entry(TorusPoint, torusPointKind),
   entry(Real, realKind),
   entry(Complex, complexKind),
   entry(Rational, rationalKind),
   entry(Quadratic, quadraticKind),
+  entry(Lattice, latticeKind),
+  entry(EllipticFunction, functionKind),
+  entry(QuasiPeriodicFunction, functionKind),
   entry(Point, pointKind),
   entry(Curve, curveKind),
   entry(Claim, claimKind),

@@ -1,12 +1,29 @@
 // Which conventions a number rests on: read off the record of how it was built.
 
+import type { PeriodLattice } from "../lattice/period-lattice.ts";
 import { isNode } from "../number/origin.ts";
 import { type ConventionKey, conventionOrder } from "../proof/conventions.ts";
 
 /** Rows that the result of an operation needs beside it, by the name of the operation. */
-const ROWS: Readonly<Record<string, readonly ConventionKey[]>> = {};
+const ROWS: Readonly<Record<string, readonly ConventionKey[]>> = {
+  point: ["periods"],
+  "period ratio": ["periods"],
+  "reduced period ratio": ["fundamentalDomain"],
+  invariant: ["cubic"],
+  root: ["roots"],
+  "quasi-period": ["quasiPeriods"],
+  discriminant: ["discriminant"],
+  j: ["j"],
+  wp: ["cubic"],
+  "wp.prime": ["cubic"],
+  zeta: ["quasiPeriods"],
+  "elliptic logarithm": ["cubic"],
+};
 
-/** A record longer than this is not read to its end: the rows of the last operations matter most. */
+/** Operations whose result depends on the basis that was chosen where none was given. */
+const BASIS_DEPENDENT = new Set(["point", "period ratio", "quasi-period"]);
+
+/** A record longer than this is not read to its end. */
 const MOST_STEPS = 2000;
 
 export function numberConventions(x: unknown): readonly ConventionKey[] {
@@ -17,8 +34,17 @@ export function numberConventions(x: unknown): readonly ConventionKey[] {
     const node = open.pop();
     if (!isNode(node) || seen.has(node) || !node.origin) continue;
     seen.add(node);
-    for (const key of ROWS[node.origin.operation.name] ?? []) found.add(key);
-    open.push(...node.origin.operands);
+    const { operation, operands } = node.origin;
+    for (const key of ROWS[operation.name] ?? []) found.add(key);
+    if (BASIS_DEPENDENT.has(operation.name)) found.add(basisRow(operands[0]) ?? "periods");
+    open.push(...operands);
   }
   return conventionOrder(found);
+}
+
+/** The row on the chosen basis, for a lattice that was not given by its periods. */
+function basisRow(operand: unknown): ConventionKey | undefined {
+  const lattice = operand as Partial<PeriodLattice> | undefined;
+  if (lattice?.given?.kind !== "invariants") return undefined;
+  return lattice.components ? "realBasis" : "signOfPeriods";
 }

@@ -1,7 +1,10 @@
 // Values in a line of text: long numbers cut to a dozen digits, long formulas left out.
 
+import * as ball from "../number/ball.ts";
+import * as disc from "../number/disc.ts";
+import { isDisc } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
-import { Real } from "../number/values.ts";
+import { Complex, Real } from "../number/values.ts";
 import { type Decimal, plainDecimal, shortened, texDecimalLine } from "./digits.ts";
 import type { Cell, Show } from "./kind.ts";
 import { texWords } from "./tex.ts";
@@ -12,6 +15,8 @@ const LONGEST_TEX = 300;
 
 export function shortText(value: unknown, show: Show): string {
   if (isList(value)) return `(${value.map((part) => shortText(part, show)).join(", ")})`;
+  const hidden = hiddenZero(value);
+  if (hidden !== undefined) return `0 ± 1e${hidden}`;
   const number = numberOf(value, show);
   if (number) return join(number, plainDecimal, " i");
   const text = show.text(value).replace(/\s*\n\s*/g, " ");
@@ -20,6 +25,8 @@ export function shortText(value: unknown, show: Show): string {
 
 export function shortTex(value: unknown, show: Show): string {
   if (isList(value)) return `\\left( ${value.map((part) => shortTex(part, show)).join(",\\; ")} \\right)`;
+  const hidden = hiddenZero(value);
+  if (hidden !== undefined) return `0 \\pm 10^{${hidden}}`;
   const number = numberOf(value, show);
   if (number) return join(number, texDecimalLine, "\\,i");
   const tex = show.tex(value);
@@ -28,13 +35,31 @@ export function shortTex(value: unknown, show: Show): string {
 
 type NumberCell = Cell & { readonly kind: "number" };
 
-/** The parts of a decimal number, cut; undefined for other values and for long integers, which stay as they are. */
+/** The parts of a decimal number, cut to the same place; undefined for other values. */
 function numberOf(value: unknown, show: Show): NumberCell | undefined {
   const cell = show.cell(isLongFraction(value) ? Real.from(value).digits(DIGITS) : value);
   if (cell.kind !== "number") return undefined;
-  const cut = (decimal: Decimal | undefined): Decimal | undefined => decimal && shortened(decimal, DIGITS);
+  const parts = [cell.re, cell.im].filter((part) => part !== undefined).map((part) => shortened(part, DIGITS));
+  const places = Math.min(...parts.map(({ fraction }) => fraction.length));
+  const cut = (decimal: Decimal | undefined): Decimal | undefined =>
+    decimal && (parts.length === 2 ? toPlaces(decimal, places) : shortened(decimal, DIGITS));
   const [re, im] = [cut(cell.re), cut(cell.im)];
   return { kind: "number", ...(re ? { re } : {}), ...(im ? { im } : {}) };
+}
+
+/** Cut so many places behind the point; what ends before stays. */
+function toPlaces(decimal: Decimal, places: number): Decimal {
+  if (decimal.fraction.length <= places) return decimal;
+  return { ...decimal, fraction: decimal.fraction.slice(0, places), continues: true };
+}
+
+/** For a number that its enclosure cannot tell from 0: n with |x| < 10^n. */
+function hiddenZero(value: unknown): number | undefined {
+  if (!(value instanceof Real || value instanceof Complex) || value.exact) return undefined;
+  const { enclosure } = value;
+  if (!(isDisc(enclosure) ? disc.containsZero(enclosure) : ball.containsZero(enclosure))) return undefined;
+  const size = isDisc(enclosure) ? disc.magnitude(enclosure) : ball.magnitude(enclosure);
+  return value.standing === "measured" || !Number.isFinite(size) ? undefined : Math.ceil(size * 0.30103);
 }
 
 /** An exact fraction that would fill the line: its first digits say more. */

@@ -18,7 +18,7 @@ export function kindOf(value: unknown): Kind<unknown> | undefined {
 /** Lists and records longer than this are shown as text. */
 const MOST_PARTS = 200;
 
-/** The parts of a list or a plain record that holds library values (directly or in such lists); else undefined. */
+/** The parts of a list or a plain record of library values, bigints, and lists and records of them; else undefined. */
 export function partsOf(value: unknown, depth = 0): readonly (readonly [name: string, part: unknown])[] | undefined {
   if (depth > 3 || typeof value !== "object" || value === null) return undefined;
   const list = Array.isArray(value);
@@ -26,7 +26,7 @@ export function partsOf(value: unknown, depth = 0): readonly (readonly [name: st
   const keys = list ? Array.from(value, (_, k) => String(k)) : Object.keys(value);
   if (keys.length === 0 || keys.length > MOST_PARTS) return undefined;
   const parts = keys.map((key) => [key, ownValue(value, key)] as const);
-  return parts.every(([, part]) => isShowable(part, depth)) && parts.some(([, part]) => holdsLibraryValue(part, depth))
+  return parts.every(([, part]) => isShowable(part, depth)) && parts.some(([, part]) => isTypeset(part, depth))
     ? parts
     : undefined;
 }
@@ -36,18 +36,13 @@ function ownValue(holder: object, key: string): unknown {
   return Object.getOwnPropertyDescriptor(holder, key)?.value;
 }
 
+/** Words and safe integers may stand beside values that are typeset, but are not typeset on their own. */
 function isShowable(part: unknown, depth: number): boolean {
-  if (typeof part === "bigint" || typeof part === "string") return true;
-  if (typeof part === "number") return Number.isSafeInteger(part);
-  return holdsLibraryValue(part, depth);
+  return typeof part === "string" || Number.isSafeInteger(part) || isTypeset(part, depth);
 }
 
-function holdsLibraryValue(part: unknown, depth: number): boolean {
-  return hasTex(part) || partsOf(part, depth + 1) !== undefined;
-}
-
-function hasTex(value: unknown): boolean {
-  return kindOf(value)?.tex !== undefined;
+function isTypeset(part: unknown, depth: number): boolean {
+  return typeof part === "bigint" || kindOf(part)?.tex !== undefined || partsOf(part, depth + 1) !== undefined;
 }
 
 export const show: Show = {
@@ -90,6 +85,12 @@ function numberCell(value: bigint | number): Cell {
 }
 
 function listTex(parts: readonly (readonly [string, unknown])[]): string {
+  const matrix = matrixRows(parts.map(([, part]) => part));
+  if (matrix)
+    return `\\left( ${array(
+      "r".repeat(matrix[0]?.length ?? 1),
+      matrix.map((row) => row.map(show.tex)),
+    )} \\right)`;
   const items = parts.map(([, part]) => show.tex(part));
   const long = items.some((item) => item.length > 60) || items.join("").length > 120;
   if (!long) return `\\left( ${items.join(",\\; ")} \\right)`;
@@ -97,6 +98,13 @@ function listTex(parts: readonly (readonly [string, unknown])[]): string {
     "l",
     items.map((item, k) => [k + 1 < items.length ? `${item},` : item]),
   )} \\right)`;
+}
+
+/** Rows of integers, all of one length: a matrix. */
+function matrixRows(parts: readonly unknown[]): (readonly bigint[])[] | undefined {
+  const rows = parts.filter((row): row is bigint[] => Array.isArray(row) && row.every((n) => typeof n === "bigint"));
+  const width = rows[0]?.length ?? 0;
+  return rows.length === parts.length && width > 0 && rows.every((row) => row.length === width) ? rows : undefined;
 }
 
 function recordTex(parts: readonly (readonly [string, unknown])[]): string {

@@ -6,6 +6,11 @@ export function standingHead(standing: Standing): string {
   return standing.kind === "certified" ? `certified to ${standing.digits} digits` : standing.kind;
 }
 
+/** The standing with its argument, where that is short. */
+export function standingBrief(standing: Standing): string {
+  return standing.kind === "proved" ? `proved (${standing.argument})` : standingHead(standing);
+}
+
 /** A standing in words, the word that counts first. */
 export function standingText(standing: Standing): string {
   switch (standing.kind) {

@@ -30,7 +30,7 @@ export function tableHtml(table: Table, show: Show): string {
   const rest =
     omitted > 0 ? `<tr><td colspan="${columns.length}" style="${STYLE.words}">... ${omitted} more rows</td></tr>` : "";
   const head = named ? `<thead><tr>${heads.join("")}</tr></thead>` : "";
-  return `<table style="${STYLE.table}">${caption}${head}<tbody>${body.join("")}${rest}</tbody></table>`;
+  return `<div style="overflow-x:auto"><table style="${STYLE.table}">${caption}${head}<tbody>${body.join("")}${rest}</tbody></table></div>`;
 }
 
 function headHtml(head: string): string {

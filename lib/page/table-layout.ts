@@ -1,5 +1,7 @@
 // The measures of a table that text, TeX and HTML share: which columns hold numbers, and how wide their parts are.
 
+import { Complex, Real } from "../number/values.ts";
+import { PrecisionError } from "../proof/errors.ts";
 import type { Decimal } from "./digits.ts";
 import type { Cell, Show } from "./kind.ts";
 import type { Table } from "./table.ts";
@@ -30,7 +32,9 @@ export interface Layout {
 const MOST_ROWS = 1000;
 
 export function layout(table: Table, show: Show): Layout {
-  const rows = table.rows.slice(0, MOST_ROWS).map((row) => row.map((value) => cellOf(value, show)));
+  const rows = table.rows
+    .slice(0, MOST_ROWS)
+    .map((row) => row.map((value) => cellOf(withDigits(value, table.digits), show)));
   const width = Math.max(table.columns.length, ...rows.map((row) => row.length));
   const columns = Array.from({ length: width }, (_, k) =>
     column(
@@ -45,6 +49,18 @@ function cellOf(value: unknown, show: Show): Cell {
   if (value === undefined || value === null) return { kind: "words", text: "" };
   if (typeof value !== "string") return show.cell(value);
   return isSymbol(value) ? { kind: "formula", text: value, tex: texName(value) } : { kind: "words", text: value };
+}
+
+/** The value asked for so many digits, if it is a number that is not exact. */
+function withDigits(value: unknown, digits: number | undefined): unknown {
+  if (digits === undefined || !(value instanceof Real || value instanceof Complex) || value.exact) return value;
+  // A hidden 0 has no digits of its own to ask for.
+  try {
+    return value.digits(digits);
+  } catch (error) {
+    if (error instanceof PrecisionError) return value;
+    throw error;
+  }
 }
 
 /** The name of a quantity, such as x, ω1 or g_2. */

@@ -7,6 +7,8 @@ export interface TableOptions {
   readonly caption?: string;
   /** Heads of the columns; for rows by name, also which of them and in which order. */
   readonly columns?: readonly string[];
+  /** Digits that numbers show which are not exact; else as many as each would show alone. */
+  readonly digits?: number;
 }
 
 /** A table of values. */
@@ -15,11 +17,13 @@ export class Table {
   /** Empty if the columns have no names. */
   readonly columns: readonly string[];
   readonly rows: readonly (readonly unknown[])[];
+  readonly digits: number | undefined;
 
-  constructor(rows: readonly (readonly unknown[])[], columns: readonly string[], caption: string) {
+  constructor(rows: readonly (readonly unknown[])[], options: TableOptions) {
     this.rows = rows;
-    this.columns = columns;
-    this.caption = caption;
+    this.columns = options.columns ?? [];
+    this.caption = options.caption ?? "";
+    this.digits = options.digits;
   }
 }
 
@@ -34,13 +38,12 @@ export class Table {
  * @example table([{ n: 1, x: P.x }, { n: 2, x: (2 * P).x }], { caption: "Multiples of $P$" })
  */
 export function table(rows: readonly Row[] | Readonly<Record<string, unknown>>, options: TableOptions = {}): Table {
-  const caption = options.caption ?? "";
   if (!Array.isArray(rows)) {
     if (!isRecord(rows)) throw new TypeError(`table: expected a list of rows, got ${describe(rows)}`);
-    return new Table(Object.entries(rows), options.columns ?? [], caption);
+    return new Table(Object.entries(rows), options);
   }
   const lists = rows as readonly unknown[];
-  if (lists.length > 0 && lists.every(isRecord)) return fromRecords(lists, options.columns, caption);
+  if (lists.length > 0 && lists.every(isRecord)) return fromRecords(lists, options);
   if (!lists.every((row) => Array.isArray(row))) {
     const wrong = lists.find((row) => !Array.isArray(row));
     throw new TypeError(
@@ -53,19 +56,14 @@ export function table(rows: readonly Row[] | Readonly<Record<string, unknown>>, 
   if (odd) throw new TypeError(`table: expected ${width} cells in each row, one a column, got a row of ${odd.length}`);
   return new Table(
     cells.map((row) => [...row]),
-    options.columns ?? [],
-    caption,
+    options,
   );
 }
 
-function fromRecords(
-  rows: readonly Readonly<Record<string, unknown>>[],
-  wanted: readonly string[] | undefined,
-  caption: string,
-): Table {
-  const columns = wanted ?? [...new Set(rows.flatMap((row) => Object.keys(row)))];
+function fromRecords(rows: readonly Readonly<Record<string, unknown>>[], options: TableOptions): Table {
+  const columns = options.columns ?? [...new Set(rows.flatMap((row) => Object.keys(row)))];
   const cells = rows.map((row) => columns.map((column) => (Object.hasOwn(row, column) ? row[column] : undefined)));
-  return new Table(cells, columns, caption);
+  return new Table(cells, { ...options, columns });
 }
 
 /** A plain record: neither a list nor a value of a class. */

@@ -50,7 +50,8 @@ const SUBSCRIPTS = "₀₁₂₃₄₅₆₇₈₉";
 
 /**
  * Words inside mathematics. Characters with a meaning in TeX leave the \text, since old renderers show a backslash
- * inside it as it stands; Greek letters and signs become commands, so that any TeX engine has them.
+ * inside it as it stands; Greek letters and signs become commands, so that any TeX engine has them, and digits behind a
+ * Greek letter are its index.
  */
 export function texWords(words: string): string {
   let out = "";
@@ -59,10 +60,15 @@ export function texWords(words: string): string {
     if (run !== "") out += `\\text{${run}}`;
     run = "";
   };
-  for (const character of words.replace(/[\p{Cc}\s]+/gu, " ")) {
+  for (const token of words.replace(/[\p{Cc}\s]+/gu, " ").match(/\p{Script=Greek}\d+|./gsu) ?? []) {
+    const character = [...token][0] ?? "";
     const subscript = SUBSCRIPTS.indexOf(character);
-    const command = subscript >= 0 ? `_${subscript}` : COMMANDS[character];
-    if (command === undefined) run += character;
+    const indexed =
+      token.length > character.length
+        ? `${COMMANDS[character]?.trim() ?? ""}_{${token.slice(character.length)}}`
+        : undefined;
+    const command = subscript >= 0 ? `_${subscript}` : (indexed ?? COMMANDS[character]);
+    if (command === undefined) run += token;
     else {
       flush();
       out += command;

@@ -1,0 +1,72 @@
+import type { Rational } from "../number/rational.ts";
+import type { EllipticFunction, QuasiPeriodicFunction } from "../surface/elliptic-function.ts";
+import type { Lattice } from "../surface/lattice.ts";
+import type { TorusPoint } from "../surface/torus-point.ts";
+import type { Kind, Show } from "./kind.ts";
+import { numberConventions } from "./number-conventions.ts";
+import { complexKind } from "./number-kind.ts";
+import { array, small, texWords } from "./tex.ts";
+
+export const latticeKind: Kind<Lattice> = {
+  text: (L) => {
+    const notice = L.notice ? [L.notice] : [];
+    return ["lattice", ...L.periods.map((w) => `  ${w}`), ...notice].join("\n");
+  },
+  tex: (L, show) => {
+    const rows = L.periods.map((w, k) => [`\\omega_${k + 1}`, "=", valueTex(w, show)]);
+    const periods = array("rcl", rows);
+    return L.notice ? array("l", [[periods], [small(texWords(L.notice))]]) : periods;
+  },
+  conventions: (L) => L.conventions,
+  data: (L, show) => ({ kind: "lattice", periods: L.periods.map((w) => show.data(w)) }),
+};
+
+/** A point of the torus: its exact coordinates, and the number. */
+export const torusPointKind: Kind<TorusPoint> = {
+  text: (z) => String(z),
+  tex: (z, show) => {
+    const name = coordinatesTex(z.coordinates);
+    const rest = z.remainder ? `${name === "0" ? "" : `${name} + `}${show.tex(z.remainder)}` : name;
+    return rest === "0" ? "0" : `${rest} = ${valueTex(z, show)}`;
+  },
+  cell: (z, show) => complexKind.cell!(z, show),
+  conventions: (z) => numberConventions(z),
+  data: (z, show) => ({
+    kind: "point of a torus",
+    coordinates: z.coordinates.map(String),
+    value: complexKind.data(z, show),
+  }),
+};
+
+function valueTex(z: TorusPoint, show: Show): string {
+  return complexKind.tex!(z, show);
+}
+
+/** r ω1 + s ω2 over one denominator. */
+function coordinatesTex([r, s]: readonly [Rational, Rational]): string {
+  const den = (r.den * s.den) / gcd(r.den, s.den);
+  const [m, n] = [(r.num * den) / r.den, (s.num * den) / s.den];
+  const terms = [term(m, "\\omega_1"), term(n, "\\omega_2")].filter((text) => text !== "");
+  const sum = terms.join(" + ").replace("+ -", "- ");
+  if (sum === "") return "0";
+  return den === 1n ? sum : `\\frac{${sum}}{${den}}`;
+}
+
+function term(k: bigint, name: string): string {
+  if (k === 0n) return "";
+  return k === 1n ? name : k === -1n ? `-${name}` : `${k}${name}`;
+}
+
+function gcd(a: bigint, b: bigint): bigint {
+  return b === 0n ? a : gcd(b, a % b);
+}
+
+const SYMBOLS = { wp: ["℘", "\\wp"], prime: ["℘′", "\\wp'"], zeta: ["ζ", "\\zeta"], sigma: ["σ", "\\sigma"] } as const;
+
+/** A function of a lattice: its name; it is called with a number. */
+export const functionKind: Kind<EllipticFunction | QuasiPeriodicFunction> = {
+  text: (f) => `${SYMBOLS[f.kind][0]}, a function of z`,
+  tex: (f) => `z \\mapsto ${SYMBOLS[f.kind][1]}(z)`,
+  conventions: (f) => (f.kind === "zeta" ? ["quasiPeriods"] : f.kind === "sigma" ? [] : ["cubic"]),
+  data: (f) => ({ kind: "function", name: f.kind }),
+};

@@ -1,4 +1,6 @@
 // `$rt` of one running cell: what the rewritten code calls.
+import { Rational } from "../../../lib/number/rational.ts";
+import { operators } from "../../../lib/surface/operators.ts";
 import type { Box } from "./box.ts";
 import type { Modules } from "./modules.ts";
 
@@ -31,6 +33,47 @@ class Target {
     this.#execution.def(this.#box, value);
   }
 }
+
+/** A member of an object that a compound assignment changes: its old value is read before the other operand. */
+class Member {
+  readonly #object: Record<PropertyKey, unknown>;
+  readonly #key: PropertyKey;
+  readonly #old: unknown;
+
+  constructor(object: unknown, key: unknown) {
+    this.#object = object as Record<PropertyKey, unknown>;
+    this.#key = typeof key === "symbol" ? key : String(key);
+    this.#old = this.#object[this.#key];
+  }
+
+  add(value: unknown): unknown {
+    return this.#set(operators.add(this.#old, value));
+  }
+
+  sub(value: unknown): unknown {
+    return this.#set(operators.sub(this.#old, value));
+  }
+
+  mul(value: unknown): unknown {
+    return this.#set(operators.mul(this.#old, value));
+  }
+
+  div(value: unknown): unknown {
+    return this.#set(operators.div(this.#old, value));
+  }
+
+  pow(value: unknown): unknown {
+    return this.#set(operators.pow(this.#old, value));
+  }
+
+  #set(value: unknown): unknown {
+    this.#object[this.#key] = value;
+    return value;
+  }
+}
+
+/** Exact literals by their text: a loop makes each once. */
+const literals = new Map<string, Rational>();
 
 /** One run of one cell. */
 export class Execution {
@@ -65,14 +108,33 @@ export class Execution {
     if (!this.defined.has(box.name)) this.def(box, undefined);
   }
 
+  /** The operators, where an operand is or may be a library value. */
+  readonly op = operators;
+
+  into(object: unknown, key: unknown): Member {
+    return new Member(object, key);
+  }
+
+  /** The exact number of a literal, "3/7". */
+  rational(text: string): Rational {
+    const known = literals.get(text);
+    if (known) return known;
+    const value = Rational.parse(text);
+    literals.set(text, value);
+    return value;
+  }
+
   result(value: unknown): void {
     this.value = value;
   }
 
   /** A promise that settles as the given one does, and is rejected by an interrupt. */
   aw<T>(awaited: T | PromiseLike<T>): Promise<T> {
+    // What an ended cell left behind goes no further.
+    if (this.closed) return new Promise<T>(() => {});
     return new Promise<T>((resolve, reject) => {
-      if (this.#interrupted) reject(new Interrupted());
+      // Through the event loop: a loop that catches everything must not become a storm of promises.
+      if (this.#interrupted) setImmediate(() => reject(new Interrupted()));
       this.#waiting.add(reject);
       const settled = Promise.resolve(awaited);
       settled.then(

@@ -17,7 +17,7 @@ import type { Shown } from "./value.ts";
 type RunCommand = Extract<ChildCommand, { kind: "run" }>;
 
 /** How long an interrupted cell may take for its `finally` parts. */
-const GRACE = 1000;
+const GRACE = 300;
 const SIGNAL_TIME = 1000;
 
 /** What the stop protocol has done last. */

@@ -17,6 +17,11 @@ interface Piece {
   readonly copied: boolean;
 }
 
+/** Edits in the order of their places; those at one place keep the order in which they were made. */
+export function inOrder(edits: readonly Edit[]): Edit[] {
+  return [...edits].sort((a, b) => a.start - b.start);
+}
+
 /** A text after edits, with the way there and back. */
 export class EditedText {
   readonly text: string;

@@ -5,6 +5,7 @@ import { isBuiltin } from "node:module";
 import { dirname, join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { cellNumber, LIBRARY } from "./notebook.ts";
+import { OPERATORS } from "./operators.ts";
 import { type TS, ts } from "./typescript.ts";
 
 /** Modules of Node itself are declared by the node types; there is no file to look for. */
@@ -70,6 +71,11 @@ export class NotebookHost implements TS.LanguageServiceHost {
     this.#options = compilerOptions(places);
     this.#libraryFolder = dirname(places.library);
     this.#resolutions = ts.createModuleResolutionCache(places.cwd, (name) => name, this.#options);
+  }
+
+  /** Folder of the library's declarations. */
+  get libraryFolder(): string {
+    return this.#libraryFolder;
   }
 
   /** Absolute name of the file of a cell: in the notebook's folder, so that relative imports resolve. */
@@ -185,6 +191,7 @@ export class NotebookHost implements TS.LanguageServiceHost {
 
   #ownModule(specifier: string): string | undefined {
     if (specifier === LIBRARY) return this.#places.library;
+    if (specifier === OPERATORS) return join(this.#libraryFolder, "surface", "operators.d.ts");
     const cell = cellNumber(specifier);
     return cell !== undefined && this.#cells.has(cell) ? this.cellFile(cell) : undefined;
   }

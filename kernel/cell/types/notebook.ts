@@ -38,6 +38,10 @@ export class NotebookNames {
     for (const one of declared) if (one.kind !== "using") this.#names.set(one.name, { ...one, cell });
   }
 
+  get size(): number {
+    return this.#names.size;
+  }
+
   clear(): void {
     this.#names.clear();
   }
@@ -57,11 +61,15 @@ export interface Surroundings {
   readonly notebook: readonly NotebookName[];
 }
 
+/** Whether a cell can meet a value of the library: by a name of it, or of an earlier cell, or by an import. */
+export function seesLibrary(around: Surroundings, words: ReadonlySet<string>): boolean {
+  return around.library.size > 0 || around.notebook.length > 0 || words.has(LIBRARY);
+}
+
 /**
  * Surroundings of a cell.
  *
  * `wanted` are the words of the cell (or every name, for completion); names that the cell declares are its own.
- * `exported` are names that the text exports by itself.
  */
 export function surroundings(
   wanted: (name: string) => boolean,

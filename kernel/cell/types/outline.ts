@@ -26,6 +26,10 @@ export interface Outline {
   readonly declared: ReadonlyMap<string, Declared>;
   /** Every identifier in the text; a superset of the names that it refers to. */
   readonly words: ReadonlySet<string>;
+  /** Every string literal: module names among them. */
+  readonly texts: ReadonlySet<string>;
+  /** A `var` stands inside a block or a loop. */
+  readonly nestedVar: boolean;
 }
 
 /** Parses a cell. Syntax errors are in `source.parseDiagnostics` of the result (see `syntaxErrors`). */
@@ -34,8 +38,9 @@ export function outline(code: string): Outline {
   const declared = new Map<string, Declared>();
   for (const statement of source.statements) declareStatement(statement, declared);
   const words = new Set<string>();
-  walk(source, words, declared);
-  return { source, declared, words };
+  const texts = new Set<string>();
+  const nestedVar = walk(source, words, texts, declared);
+  return { source, declared, words, texts, nestedVar };
 }
 
 /** Syntax errors of a parsed file. */
@@ -113,11 +118,15 @@ function isTypeNamespace(node: TS.ModuleDeclaration): boolean {
   );
 }
 
-/** Collects identifiers, and `var` names outside functions. */
-function walk(root: TS.Node, words: Set<string>, declared: Map<string, Declared>): void {
+/** Collects identifiers, strings, and `var` names outside functions; answers whether one is inside a block. */
+function walk(root: TS.Node, words: Set<string>, texts: Set<string>, declared: Map<string, Declared>): boolean {
+  let nested = false;
   const visit = (node: TS.Node, inFunction: boolean): void => {
     if (ts.isIdentifier(node)) words.add(node.text);
+    else if (ts.isStringLiteral(node)) texts.add(node.text);
     else if (!inFunction && ts.isVariableDeclarationList(node) && listKind(node) === "var") {
+      const atTop = ts.isVariableStatement(node.parent) && node.parent.parent === root;
+      if (!atTop) nested = true;
       const ambient = ts.isVariableStatement(node.parent) && hasModifier(node.parent, ts.SyntaxKind.DeclareKeyword);
       for (const { name } of node.declarations) {
         bindingNames(name, (text) => declared.set(text, { name: text, kind: "var", ambient }));
@@ -127,4 +136,5 @@ function walk(root: TS.Node, words: Set<string>, declared: Map<string, Declared>
     ts.forEachChild(node, (child) => visit(child, inside));
   };
   visit(root, false);
+  return nested;
 }

@@ -1,14 +1,28 @@
 // One notebook as the compiler sees it: check and emit a cell, remember what it defined, answer questions.
 import type { CheckResult, CommittedCell, EmittedCell } from "../messages.ts";
 import { type Finding, findings, typeScriptError } from "./diagnostics.ts";
-import { EditedText } from "./edits.ts";
+import { type Edit, EditedText, inOrder } from "./edits.ts";
 import { exportEdits } from "./exports.ts";
 import { NotebookHost, type Places } from "./host.ts";
-import { NotebookNames, surroundings } from "./notebook.ts";
+import { NotebookNames, seesLibrary, surroundings } from "./notebook.ts";
+import { emitOperators } from "./operator-emit.ts";
+import { operatorFindings } from "./operator-findings.ts";
+import { hasOperators, operatorEdits, operatorImport, operatorPrefix } from "./operators.ts";
 import { type Declared, type Outline, outline, syntaxErrors } from "./outline.ts";
 import { rewriteCell } from "./rewrite.ts";
 import { type SourceMapData, toUserMap } from "./sourcemap.ts";
 import { type TS, ts } from "./typescript.ts";
+import { Values } from "./values.ts";
+
+/** A cell as it is checked. */
+interface Prepared {
+  readonly edited: EditedText;
+  /** Text behind the edited one. */
+  readonly around: string;
+  readonly library: ReadonlySet<string>;
+  /** Name of the operators' module in the text, if it has operators that could meet a library value. */
+  readonly operators: string | undefined;
+}
 
 interface Pending {
   readonly declared: readonly Declared[];
@@ -49,22 +63,54 @@ export class NotebookTypes {
     if (syntax.length > 0) return this.#failed(code, executionCount, findings(syntax, new EditedText(code, [])));
     const exported = exportEdits(parsed.source);
     if (exported.refusals.length > 0) return this.#failed(code, executionCount, exported.refusals);
-    const edited = new EditedText(code, exported.edits);
+    const prepared = this.#prepare(code, parsed, exported.edits);
+    const file = this.host.cellFile(cell);
+    this.host.setCell(cell, prepared.edited.text + prepared.around, true);
+    const found = this.#findings(file, code, prepared);
+    if (found.length > 0) {
+      this.host.dropCell(cell);
+      return this.#failed(code, executionCount, found);
+    }
+    return { status: "ok", emitted: this.#emit(cell, code, prepared, parsed) };
+  }
+
+  /** The text to check: operators as calls where library values may be met, and what stands around. */
+  #prepare(code: string, parsed: Outline, exported: readonly Edit[]): Prepared {
     const around = surroundings(
       (name) => parsed.words.has(name),
       parsed.declared,
       this.names,
       this.#visibleLibrary(parsed),
     );
-    const file = this.host.cellFile(cell);
-    this.host.setCell(cell, edited.text + around.text, true);
-    const diagnostics = [...this.service.getSyntacticDiagnostics(file), ...this.service.getSemanticDiagnostics(file)];
-    const found = findings(diagnostics, edited);
-    if (found.length > 0) {
-      this.host.dropCell(cell);
-      return this.#failed(code, executionCount, found);
-    }
-    return { status: "ok", emitted: this.#emit(cell, code, edited, parsed, around.library) };
+    const directed = seesLibrary(around, parsed.texts) && hasOperators(parsed.source);
+    if (!directed)
+      return {
+        edited: new EditedText(code, exported),
+        around: around.text,
+        library: around.library,
+        operators: undefined,
+      };
+    const operators = operatorPrefix(code);
+    return {
+      edited: new EditedText(code, inOrder([...exported, ...operatorEdits(parsed.source, operators)])),
+      around: `${around.text}\n${operatorImport(operators)}`,
+      library: around.library,
+      operators,
+    };
+  }
+
+  #findings(file: string, code: string, { edited, operators, library }: Prepared): Finding[] {
+    const found = findings(
+      [...this.service.getSyntacticDiagnostics(file), ...this.service.getSemanticDiagnostics(file)],
+      edited,
+    );
+    if (operators === undefined && library.size === 0 && this.names.size === 0) return found;
+    const program = this.service.getProgram() as TS.Program;
+    const values = new Values(program.getTypeChecker(), this.host.libraryFolder);
+    const source = program.getSourceFile(file) as TS.SourceFile;
+    const own = operatorFindings(source, operators ?? "", values, edited, code);
+    // What follows from an impossible operation is said once, at the operation.
+    return own.length === 0 ? found : [...own, ...found.filter((one) => !followsFromOperator(one))];
   }
 
   /** Records what a cell that ran has defined; undefined if it was not checked here. */
@@ -102,13 +148,19 @@ export class NotebookTypes {
     return { status: "error", ...typeScriptError(code, executionCount, found) };
   }
 
-  #emit(cell: number, code: string, edited: EditedText, parsed: Outline, library: ReadonlySet<string>): EmittedCell {
+  #emit(cell: number, code: string, prepared: Prepared, parsed: Outline): EmittedCell {
+    const { edited, library, operators } = prepared;
     const program = this.service.getProgram() as TS.Program;
     const source = program.getSourceFile(this.host.cellFile(cell)) as TS.SourceFile;
-    const rewriting = rewriteCell(source, program.getTypeChecker(), edited.text.length, library);
+    const checker = program.getTypeChecker();
+    const emit =
+      operators === undefined ? undefined : emitOperators(operators, new Values(checker, this.host.libraryFolder));
+    const rewriting = rewriteCell(source, checker, edited.text.length, library, emit);
     const output = emitFiles(program, source, rewriting.transformer);
     const declared = [...parsed.declared.values()];
-    this.#pending.set(cell, { declared, text: output.declarations ?? this.host.cellText(cell) ?? "" });
+    // A `var` inside a block is no part of the declarations that the compiler writes.
+    const frozen = parsed.nestedVar ? undefined : output.declarations;
+    this.#pending.set(cell, { declared, text: frozen ?? this.host.cellText(cell) ?? "" });
     const map = toUserMap(JSON.parse(output.map) as SourceMapData, edited, code);
     return { script: output.script, map, prefix: rewriting.prefix, boxes: rewriting.boxes, notices: [] };
   }
@@ -123,6 +175,13 @@ export class NotebookTypes {
     this.host.dropCell(0);
     return module ? checker.getExportsOfModule(module).map((symbol) => symbol.name) : [];
   }
+}
+
+/** The compiler's own words for operands that are no numbers. */
+const OPERAND_CODES = new Set(["TS2356", "TS2362", "TS2363", "TS2365", "TS2367"]);
+
+function followsFromOperator(one: Finding): boolean {
+  return one.message.includes("NoOp<") || OPERAND_CODES.has(one.code);
 }
 
 interface Output {

@@ -1,7 +1,7 @@
 import { Complex, Real } from "../number/values.ts";
 import type { Claim } from "../surface/claim-value.ts";
 import type { Kind, Show } from "./kind.ts";
-import { shortTex, shortText } from "./short.ts";
+import { LINE_DIGITS, shortTex, shortText } from "./short.ts";
 import { standingProse, standingTex, standingText } from "./standing.ts";
 import { texProse } from "./tex.ts";
 
@@ -27,7 +27,11 @@ export const claimKind: Kind<Claim> = {
     return `${name}: $\\displaystyle ${statementTex(claim, show)}$ — ${standingProse(claim.standing)}${inputs(claim)}`;
   },
   // In a table the name and the standing have columns of their own.
-  cell: (claim, show) => ({ kind: "formula", text: statementText(claim, show), tex: statementTex(claim, show) }),
+  cell: (claim, show) => ({
+    kind: "formula",
+    text: statementText(claim, show, CELL_DIGITS),
+    tex: statementTex(claim, show, CELL_DIGITS),
+  }),
   data: (claim, show) => ({
     kind: "claim",
     name: claim.name,
@@ -48,11 +52,13 @@ function inputs({ lhs, rhs }: Claim): string {
   return all.length === 0 ? "" : `, for the measured ${[...new Set(all)].join(", ")}`;
 }
 
-function statementText(claim: Claim, show: Show): string {
+const CELL_DIGITS = 6;
+
+function statementText(claim: Claim, show: Show, digits = LINE_DIGITS): string {
   const relation = claim.relation === "homothetic" ? "homothetic to" : claim.relation;
-  return `${shortText(claim.lhs, show)} ${relation} ${shortText(claim.rhs, show)}`;
+  return `${shortText(claim.lhs, show, digits)} ${relation} ${shortText(claim.rhs, show, digits)}`;
 }
 
-function statementTex(claim: Claim, show: Show): string {
-  return `${shortTex(claim.lhs, show)} ${RELATIONS[claim.relation]} ${shortTex(claim.rhs, show)}`;
+function statementTex(claim: Claim, show: Show, digits = LINE_DIGITS): string {
+  return `${shortTex(claim.lhs, show, digits)} ${RELATIONS[claim.relation]} ${shortTex(claim.rhs, show, digits)}`;
 }

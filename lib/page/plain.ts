@@ -19,9 +19,6 @@ export type Inner = (value: object) => string | undefined;
  * Numbers that are not whole are named for what they are, since none of their digits is proved.
  */
 export function plainText(value: unknown, inner: Inner = () => undefined, limits: PlainLimits = LIMITS): string {
-  if (typeof value === "number" && !Number.isInteger(value) && Number.isFinite(value)) {
-    return `${value}   (a double, not proved)`;
-  }
   if (typeof value === "string") return quoted(value, limits.total);
   return new Writer(inner, limits).whole(value);
 }
@@ -31,6 +28,7 @@ class Writer {
   readonly #limits: PlainLimits;
   readonly #path: object[] = [];
   #left: number;
+  #doubles = 0;
 
   constructor(inner: Inner, limits: PlainLimits) {
     this.#inner = inner;
@@ -40,7 +38,8 @@ class Writer {
 
   whole(value: unknown): string {
     const text = this.#write(value, 0);
-    return text.length > this.#limits.total ? `${text.slice(0, this.#limits.total)} ...` : text;
+    const cut = text.length > this.#limits.total ? `${text.slice(0, this.#limits.total)} ...` : text;
+    return this.#doubles === 0 ? cut : `${cut}   (${this.#doubles === 1 ? "a double" : "doubles"}, not proved)`;
   }
 
   #write(value: unknown, depth: number): string {
@@ -56,6 +55,7 @@ class Writer {
       case "bigint":
         return `${value}n`;
       case "number":
+        if (Number.isFinite(value) && !Number.isInteger(value)) this.#doubles++;
         return Object.is(value, -0) ? "-0" : String(value);
       case "symbol":
         return value.toString();

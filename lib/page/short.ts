@@ -1,4 +1,4 @@
-// Values in a line of text: long numbers cut to a dozen digits, long formulas left out.
+// Values in a line of text: long numbers cut to a few digits, long formulas left out.
 
 import * as ball from "../number/ball.ts";
 import * as disc from "../number/disc.ts";
@@ -9,25 +9,25 @@ import { type Decimal, plainDecimal, shortened, texDecimalLine } from "./digits.
 import type { Cell, Show } from "./kind.ts";
 import { texWords } from "./tex.ts";
 
-const DIGITS = 12;
+export const LINE_DIGITS = 12;
 const LONGEST_TEXT = 100;
 const LONGEST_TEX = 300;
 
-export function shortText(value: unknown, show: Show): string {
-  if (isList(value)) return `(${value.map((part) => shortText(part, show)).join(", ")})`;
+export function shortText(value: unknown, show: Show, digits = LINE_DIGITS): string {
+  if (isList(value)) return `(${value.map((part) => shortText(part, show, digits)).join(", ")})`;
   const hidden = hiddenZero(value);
   if (hidden !== undefined) return `0 ± 1e${hidden}`;
-  const number = numberOf(value, show);
+  const number = numberOf(value, show, digits);
   if (number) return join(number, plainDecimal, " i");
   const text = show.text(value).replace(/\s*\n\s*/g, " ");
   return text.length <= LONGEST_TEXT ? text : `${text.slice(0, LONGEST_TEXT)} ...`;
 }
 
-export function shortTex(value: unknown, show: Show): string {
-  if (isList(value)) return `\\left( ${value.map((part) => shortTex(part, show)).join(",\\; ")} \\right)`;
+export function shortTex(value: unknown, show: Show, digits = LINE_DIGITS): string {
+  if (isList(value)) return `\\left( ${value.map((part) => shortTex(part, show, digits)).join(",\\; ")} \\right)`;
   const hidden = hiddenZero(value);
   if (hidden !== undefined) return `0 \\pm 10^{${hidden}}`;
-  const number = numberOf(value, show);
+  const number = numberOf(value, show, digits);
   if (number) return join(number, texDecimalLine, "\\,i");
   const tex = show.tex(value);
   return tex.length <= LONGEST_TEX ? tex : texWords("(too long for a line)");
@@ -36,13 +36,13 @@ export function shortTex(value: unknown, show: Show): string {
 type NumberCell = Cell & { readonly kind: "number" };
 
 /** The parts of a decimal number, cut to the same place; undefined for other values. */
-function numberOf(value: unknown, show: Show): NumberCell | undefined {
-  const cell = show.cell(isLongFraction(value) ? Real.from(value).digits(DIGITS) : value);
+function numberOf(value: unknown, show: Show, digits: number): NumberCell | undefined {
+  const cell = show.cell(isLongFraction(value) ? Real.from(value).digits(digits) : value);
   if (cell.kind !== "number") return undefined;
-  const parts = [cell.re, cell.im].filter((part) => part !== undefined).map((part) => shortened(part, DIGITS));
+  const parts = [cell.re, cell.im].filter((part) => part !== undefined).map((part) => shortened(part, digits));
   const places = Math.min(...parts.map(({ fraction }) => fraction.length));
   const cut = (decimal: Decimal | undefined): Decimal | undefined =>
-    decimal && (parts.length === 2 ? toPlaces(decimal, places) : shortened(decimal, DIGITS));
+    decimal && (parts.length === 2 ? toPlaces(decimal, places) : shortened(decimal, digits));
   const [re, im] = [cut(cell.re), cut(cell.im)];
   return { kind: "number", ...(re ? { re } : {}), ...(im ? { im } : {}) };
 }

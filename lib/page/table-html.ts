@@ -41,11 +41,16 @@ function headHtml(head: string): string {
 
 function cell(content: Cell | undefined, column: Column, isHead: boolean): string {
   if (!content || content.kind === "words") {
-    const text = escapeHtml(content?.text ?? "");
+    const text = wordsHtml(content?.text ?? "");
     return tableCell(text, STYLE.words, isHead);
   }
   const inner = content.kind === "formula" ? `$${escapeHtml(content.tex)}$` : numberHtml(content, column);
   return tableCell(inner, STYLE.cell, isHead);
+}
+
+/** Words, with the digits behind a Greek letter as its index. */
+function wordsHtml(text: string): string {
+  return escapeHtml(text).replace(/(\p{Script=Greek})(\d+)/gu, "<i>$1</i><sub>$2</sub>");
 }
 
 function tableCell(html: string, style: string, isHead: boolean): string {

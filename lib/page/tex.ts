@@ -75,7 +75,7 @@ export function texWords(words: string): string {
     }
   }
   flush();
-  return out;
+  return out.trimEnd();
 }
 
 /** Text that may hold $formulas$, as mathematics: the formulas as they stand, the words around them as words. */

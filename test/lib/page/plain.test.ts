@@ -17,7 +17,8 @@ describe("plain JavaScript values as text", () => {
     expect(plainText([])).toBe("[]");
     expect(plainText({})).toBe("{}");
     expect(plainText(new Array(2))).toBe("[(empty), (empty)]");
-    expect(plainText(new Float64Array([0.5, 2]))).toBe("Float64Array [0.5, 2]");
+    expect(plainText(new Float64Array([0.5, 2]))).toBe("Float64Array [0.5, 2]   (a double, not proved)");
+    expect(plainText([1, [0.1, 0.2]])).toBe("[1, [0.1, 0.2]]   (doubles, not proved)");
     expect(plainText([undefined, Symbol("s"), function f() {}, class A {}])).toBe(
       "[undefined, Symbol(s), function f, class A]",
     );

@@ -2,7 +2,7 @@
 // so that neither Markdown nor the cleaning of HTML sees them.
 import MarkdownIt from "markdown-it";
 import type { Bundle } from "../format.ts";
-import { formulaAt, mathml } from "./mathematics.ts";
+import { clings, formulaAt, mathml, WORD_JOINER } from "./mathematics.ts";
 import { sanitise } from "./sanitise.ts";
 
 // Private-use characters stand for a formula: mark, number, mark.
@@ -18,7 +18,9 @@ export function markdownHtml(source: string, attachments: Readonly<Record<string
   };
   const html = renderer(keep, attachments).render(source.replace(/[\uE0F0\uE0F1]/g, ""));
   const putBack = (text: string) =>
-    text.replace(/>/g, "&gt;").replace(/\uE0F0(\d+)\uE0F1/g, (_, index) => formulas[Number(index)] ?? "");
+    text.replace(/>/g, "&gt;").replace(/\uE0F0(\d+)\uE0F1(?=(.?))/g, (_, index, next) => {
+      return `${formulas[Number(index)] ?? ""}${clings(next) ? WORD_JOINER : ""}`;
+    });
   return sanitise(html, { text: putBack });
 }
 

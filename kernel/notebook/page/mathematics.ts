@@ -18,6 +18,14 @@ export function mathml(tex: string, display: boolean): string {
   }
 }
 
+/** Put between a formula and the punctuation behind it, so that no line begins with a comma. */
+export const WORD_JOINER = "\u2060";
+
+/** Does a text behind a formula begin with what has to stay on the formula's line? */
+export function clings(text: string): boolean {
+  return /^[.,;:!?)\]’”»]/.test(text);
+}
+
 const OPENERS: readonly {
   readonly open: RegExp;
   readonly close: (opener: RegExpExecArray) => string;

@@ -2,7 +2,7 @@
 import type { Bundle, Output } from "../format.ts";
 import { decodeEntities, escapeHtml } from "./escape.ts";
 import { markdownHtml } from "./markdown.ts";
-import { mathml, splitFormulas } from "./mathematics.ts";
+import { clings, mathml, splitFormulas, WORD_JOINER } from "./mathematics.ts";
 import { sanitise } from "./sanitise.ts";
 import { plainText } from "./terminal.ts";
 
@@ -18,7 +18,7 @@ export interface Place {
 const RENDERERS: readonly (readonly [mime: string, render: Renderer])[] = [
   ["image/svg+xml", (svg, place) => figure(svg, place)],
   ["text/html", (html, { name }) => `<div class="shown">${fragment(html, name)}</div>`],
-  ["text/latex", (tex) => `<div class="shown">${latexHtml(tex)}</div>`],
+  ["text/latex", (tex) => latexHtml(tex)],
   ["text/markdown", (markdown) => `<div class="prose">${markdownHtml(markdown)}</div>`],
   ["image/png", (data, { label }) => picture("image/png", data, label)],
   ["image/jpeg", (data, { label }) => picture("image/jpeg", data, label)],
@@ -70,14 +70,19 @@ function fragment(html: string, name: string): string {
   return sanitise(html, { idPrefix: `${name}-`, text });
 }
 
-/** LaTeX as an output: formulas in delimiters with text between them, or one bare formula. */
+/** LaTeX as an output: formulas in delimiters, set apart or in a sentence, or one bare formula. */
 function latexHtml(tex: string): string {
-  const pieces = splitFormulas(tex);
-  return pieces.some((piece) => piece.kind === "formula") ? runHtml(tex) : mathml(tex, true);
+  const pieces = splitFormulas(tex.trim());
+  if (!pieces.some((piece) => piece.kind === "formula")) return `<div class="shown">${mathml(tex, true)}</div>`;
+  const isSentence = pieces.some((piece) => piece.kind === "text" && piece.text.trim() !== "");
+  return `<div class="${isSentence ? "stated" : "shown"}">${runHtml(tex)}</div>`;
 }
 
 function runHtml(text: string): string {
-  return splitFormulas(text)
-    .map((piece) => (piece.kind === "text" ? escapeHtml(piece.text) : mathml(piece.tex, piece.display)))
-    .join("");
+  const pieces = splitFormulas(text);
+  const set = pieces.map((piece, index) => {
+    if (piece.kind === "formula") return mathml(piece.tex, piece.display);
+    return `${index > 0 && clings(piece.text) ? WORD_JOINER : ""}${escapeHtml(piece.text)}`;
+  });
+  return set.join("");
 }

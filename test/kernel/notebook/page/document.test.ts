@@ -39,6 +39,12 @@ describe("markdown cells", () => {
     expect(html).toContain('display="block"');
   });
 
+  it("keeps punctuation on the line of the formula before it", () => {
+    expect(markdownHtml("so $a$, $b$$c$ and $d$")).toMatch(/<\/math>\u2060, <math.*<\/math><math.*<\/math> and/s);
+    const page = body(notebookPage(notebook(code("x", result({ "text/latex": "so $a$; it is" }))), { name: "a" }));
+    expect(page).toMatch(/class="stated">so <math.*<\/math>\u2060; it is/s);
+  });
+
   it("marks table headers, shows an unreadable formula as its source, drops scripts", () => {
     expect(markdownHtml("|a|\n|-|\n|1|")).toContain('<th scope="col">');
     expect(markdownHtml("$\\frac{1$")).toContain('<code class="unread"');

@@ -2,7 +2,7 @@
 // so that neither Markdown nor the cleaning of HTML sees them.
 import MarkdownIt from "markdown-it";
 import type { Bundle } from "../format.ts";
-import { clings, formulaAt, mathml, WORD_JOINER } from "./mathematics.ts";
+import { formulaAt, joined, mathml } from "./mathematics.ts";
 import { sanitise } from "./sanitise.ts";
 
 // Private-use characters stand for a formula: mark, number, mark.
@@ -17,10 +17,14 @@ export function markdownHtml(source: string, attachments: Readonly<Record<string
     return `${OPEN}${formulas.length - 1}${CLOSE}`;
   };
   const html = renderer(keep, attachments).render(source.replace(/[\uE0F0\uE0F1]/g, ""));
-  const putBack = (text: string) =>
-    text.replace(/>/g, "&gt;").replace(/\uE0F0(\d+)\uE0F1(?=(.?))/g, (_, index, next) => {
-      return `${formulas[Number(index)] ?? ""}${clings(next) ? WORD_JOINER : ""}`;
+  const putBack = (text: string) => {
+    const [first = "", ...behind] = text.replace(/>/g, "&gt;").split(OPEN);
+    const set = behind.map((part) => {
+      const [index = "", following = ""] = part.split(CLOSE);
+      return joined(formulas[Number(index)] ?? "", following);
     });
+    return first + set.join("");
+  };
   return sanitise(html, { text: putBack });
 }
 

@@ -18,12 +18,15 @@ export function mathml(tex: string, display: boolean): string {
   }
 }
 
-/** Put between a formula and the punctuation behind it, so that no line begins with a comma. */
-export const WORD_JOINER = "\u2060";
+/** What has to stay on the line of the formula before it. */
+const CLINGING = /^[.,;:!?)\]’”»]+/;
 
-/** Does a text behind a formula begin with what has to stay on the formula's line? */
-export function clings(text: string): boolean {
-  return /^[.,;:!?)\]’”»]/.test(text);
+/** A formula in a line with the text that follows it, of which the punctuation is kept on the formula's line. */
+export function joined(formula: string, following: string): string {
+  const [mark = ""] = CLINGING.exec(following) ?? [];
+  return mark === ""
+    ? formula + following
+    : `<span class="joined">${formula}${mark}</span>${following.slice(mark.length)}`;
 }
 
 const OPENERS: readonly {

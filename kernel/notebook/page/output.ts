@@ -2,7 +2,7 @@
 import type { Bundle, Output } from "../format.ts";
 import { decodeEntities, escapeHtml } from "./escape.ts";
 import { markdownHtml } from "./markdown.ts";
-import { clings, mathml, splitFormulas, WORD_JOINER } from "./mathematics.ts";
+import { joined, mathml, splitFormulas } from "./mathematics.ts";
 import { sanitise } from "./sanitise.ts";
 import { plainText } from "./terminal.ts";
 
@@ -79,10 +79,9 @@ function latexHtml(tex: string): string {
 }
 
 function runHtml(text: string): string {
-  const pieces = splitFormulas(text);
-  const set = pieces.map((piece, index) => {
-    if (piece.kind === "formula") return mathml(piece.tex, piece.display);
-    return `${index > 0 && clings(piece.text) ? WORD_JOINER : ""}${escapeHtml(piece.text)}`;
-  });
-  return set.join("");
+  return splitFormulas(text).reduceRight((rest, piece) => {
+    if (piece.kind === "text") return escapeHtml(piece.text) + rest;
+    const formula = mathml(piece.tex, piece.display);
+    return piece.display ? formula + rest : joined(formula, rest);
+  }, "");
 }

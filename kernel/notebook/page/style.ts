@@ -53,6 +53,7 @@ tbody th { font-weight: 400; }
 caption { caption-side: bottom; color: var(--soft); font-size: 0.9em; padding-top: 0.5rem; text-wrap: balance; }
 footer { margin-top: 4rem; padding-top: 0.8rem; border-top: 1px solid var(--line); color: var(--soft); font-size: 0.85rem; }
 footer p { margin: 0; hyphens: none; }
+.joined { white-space: nowrap; }
 math { font-family: ${MATHEMATICS}; }
 mo.tml-prime, math .mathscr { font-family: inherit; }
 math.tml-display { margin-block: 0.2rem; }

@@ -62,5 +62,5 @@ export { Claim, type Relation } from "./surface/claim-value.ts";
 
 export { Figure } from "./figure/figure.ts";
 export * as figure from "./figure/figures.ts";
-export { type Row, Table, type TableOptions, table } from "./page/table.ts";
+export { type Row, Table, type TableOptions, type TableValue, table } from "./page/table.ts";
 export { tex, typeset } from "./page/typeset.ts";

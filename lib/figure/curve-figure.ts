@@ -42,7 +42,7 @@ const NOTHING: Extras = { marks: [], lines: [], segments: [], remarks: [] };
  */
 export function curve(E: Curve, options: CurveFigureOptions = {}): Figure {
   const equation = equationOf(E);
-  const named = namedEntries(options.points, (_, k) => `P_${k + 1}`);
+  const named = namedEntries(options.points, (_, k) => `P${k + 1}`);
   const extras = [chordOf(E, named, options.chord), linesOf(options.lines)];
   const marks = [...named.flatMap(markOf), ...extras.flatMap((extra) => extra.marks)];
   return drawCurve({

@@ -4,6 +4,7 @@ import { clipSegment, type Stroke } from "./clip.ts";
 import type { PlaneEquation } from "./fibre.ts";
 import { Figure, type FigureData } from "./figure.ts";
 import { axes, type Frame, makeFrame, type Window } from "./frame.ts";
+import { spoken } from "./label.ts";
 import { type Locus, traceLocus } from "./locus.ts";
 import { dots, fullLine, type Mark, placeLabels } from "./marks.ts";
 import { node, pathData, type SvgNode } from "./svg.ts";
@@ -73,7 +74,7 @@ function describe(picture: CurvePicture, locus: Locus): string {
     open > 0 ? `${open} ${open === 1 ? "branch" : "branches"} that leave${open === 1 ? "s" : ""} the window` : "",
     locus.isolated.length > 0 ? `${locus.isolated.length} isolated point` : "",
   ].filter((part) => part !== "");
-  const points = picture.marks.map(({ label, at }) => `${label} near (${near(at[0])}, ${near(at[1])})`);
+  const points = picture.marks.map(({ label, at }) => `${spoken(label)} near (${near(at[0])}, ${near(at[1])})`);
   return [
     `Real points for ${picture.axisNames.x} from ${near(x[0])} to ${near(x[1])} and ${picture.axisNames.y} from ${near(y[0])} to ${near(y[1])}: ${parts.join(", ") || "none"}.`,
     ...(points.length > 0 ? [`Marked: ${points.join("; ")}.`] : []),

@@ -18,7 +18,7 @@ export interface DomainFigureOptions {
  * @example figure.fundamentalDomain({ points: { A: L, B: M } })
  */
 export function fundamentalDomain(options: DomainFigureOptions = {}): Figure {
-  const named = namedEntries(options.points, (_, k) => `τ_${k + 1}`);
+  const named = namedEntries(options.points, (_, k) => `τ${k + 1}`);
   const marks = named.map(([label, value]) => {
     const tau = value instanceof Lattice ? value.reduced.tau : value;
     const at = complexDouble("figure.fundamentalDomain", tau);

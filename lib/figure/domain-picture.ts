@@ -2,6 +2,7 @@
 
 import { Figure, type FigureData } from "./figure.ts";
 import { axes, type Frame, makeFrame, type Pixel } from "./frame.ts";
+import { spoken } from "./label.ts";
 import { dots, type Mark, placeLabels } from "./marks.ts";
 import { node, pathData, type SvgNode } from "./svg.ts";
 
@@ -84,7 +85,7 @@ function edges(frame: Frame): SvgNode[] {
 
 function describe(shown: readonly Mark[], above: readonly Mark[], remarks: readonly string[]): string {
   const near = ({ label, at }: Mark): string =>
-    `${label} near ${Number(at[0].toPrecision(4))} + ${Number(at[1].toPrecision(4))} i`;
+    `${spoken(label)} near ${Number(at[0].toPrecision(4))} + ${Number(at[1].toPrecision(4))} i`;
   return [
     "The part of the upper half plane with −1/2 ≤ Re τ < 1/2 and |τ| ≥ 1, shaded; the border drawn solid belongs to it (left line, left half of the arc), the dashed one does not.",
     ...(shown.length > 0 ? [`Marked: ${shown.map(near).join("; ")}.`] : []),

@@ -7,14 +7,22 @@ interface Run {
   readonly low: boolean;
 }
 
-const TOKEN = /\s+|_\{[^}]*\}|_[^\s{]|\p{L}[\p{L}′']*|[^\s_\p{L}]+|_/gu;
+const TOKEN = /\s+|_\{[^}]*\}|_[^\s{]|(?<=(?<!\p{L})\p{L})\d+|\p{L}[\p{L}′']*|[^\s_\p{L}]+|_/gu;
 
 function runs(label: string, low = false): Run[] {
-  return (label.match(TOKEN) ?? []).flatMap((token) => {
+  return [...label.matchAll(TOKEN)].flatMap(({ 0: token, index: at }) => {
     if (!low && token.length > 1 && token.startsWith("_")) return runs(token.replace(/^_\{?|\}$/g, ""), true);
+    // Digits right behind a single letter are its index: ω1, P12.
+    if (!low && /^\d+$/.test(token) && /(?<!\p{L})\p{L}$/u.test(label.slice(0, at)))
+      return [{ text: token, italic: false, low: true }];
     if (/^\p{L}/u.test(token)) return [{ text: token, italic: /^\p{L}[′']*$/u.test(token), low }];
     return [{ text: token.replace(/-/g, "−"), italic: false, low }];
   });
+}
+
+/** The label as words: "ω_1" is read as "ω1". */
+export function spoken(label: string): string {
+  return label.replace(/_\{([^}]*)\}|_/g, "$1");
 }
 
 /** Width of a label in pixels, estimated from the usual widths of a serif face; used only to keep labels apart. */
@@ -22,7 +30,7 @@ export function labelWidth(label: string, size = 15): number {
   return runs(label).reduce((sum, run) => sum + [...run.text].length * size * (run.low ? 0.36 : 0.52), 0);
 }
 
-/** A label such as "ω_1", "P + Q", "Re z" or "-R" as a text node, the text starting at (x, y) on its base line. */
+/** A label such as "ω1", "z_P", "P + Q", "Re z" or "-R" as a text node, the text starting at (x, y) on its base line. */
 export function mathLabel(
   label: string,
   x: number,

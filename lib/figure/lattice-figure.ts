@@ -25,7 +25,7 @@ export function lattice(L: Lattice, options: LatticeFigureOptions = {}): Figure 
   return drawLattice({
     title: "Period lattice",
     periods: [w1, w2],
-    periodNames: ["ω_1", "ω_2"],
+    periodNames: ["ω1", "ω2"],
     marks: named.map(([label, z]) => ({ at: complexDouble("figure.lattice", z), label })),
     ...(options.window ? { window: realWindow("figure.lattice", options.window) } : {}),
     remarks: [],
@@ -38,5 +38,5 @@ export function lattice(L: Lattice, options: LatticeFigureOptions = {}): Figure 
 }
 
 function nameOf(z: ComplexNumeric, index: number): string {
-  return z instanceof TorusPoint && !z.remainder ? z.name.replace(/ω([12])/g, "ω_$1") : `z_${index + 1}`;
+  return z instanceof TorusPoint && !z.remainder ? z.name : `z${index + 1}`;
 }

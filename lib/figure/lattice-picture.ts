@@ -2,6 +2,7 @@
 
 import { Figure, type FigureData } from "./figure.ts";
 import { axes, type Frame, inside, makeFrame, type Pixel, type Window } from "./frame.ts";
+import { spoken } from "./label.ts";
 import { dots, fullLine, type LabelRequest, type Mark, placeLabels } from "./marks.ts";
 import { node, pathData, type SvgNode } from "./svg.ts";
 
@@ -187,13 +188,11 @@ function arrow(from: Pixel, to: Pixel): SvgNode {
 function describe(picture: LatticePicture, count: number): string {
   const near = ([x, y]: Point): string =>
     `${Number(x.toPrecision(4))} ${y < 0 ? "−" : "+"} ${Number(Math.abs(y).toPrecision(4))} i`;
-  const periods = picture.periods.map(
-    (period, k) => `${picture.periodNames[k]?.replace("_", "")} near ${near(period)}`,
-  );
+  const periods = picture.periods.map((period, k) => `${picture.periodNames[k]} near ${near(period)}`);
   return [
     `The period lattice in the plane of z with ${periods.join(" and ")}; the cell they span is shaded${count > 0 ? ` and ${count} lattice points are shown` : ""}.`,
     ...(picture.marks.length > 0
-      ? [`Marked: ${picture.marks.map(({ label, at }) => `${label} near ${near(at)}`).join("; ")}.`]
+      ? [`Marked: ${picture.marks.map(({ label, at }) => `${spoken(label)} near ${near(at)}`).join("; ")}.`]
       : []),
     ...picture.remarks,
   ].join(" ");

@@ -9,15 +9,10 @@ export function namedEntries<T>(
   nameAt: (value: T, index: number) => string,
 ): (readonly [name: string, value: T])[] {
   if (named === undefined) return [];
-  if (!isList(named)) return Object.entries(named).map(([name, value]) => [indexed(name), value]);
+  if (!isList(named)) return Object.entries(named);
   return named.map((value, k) => [nameAt(value, k), value]);
 }
 
 function isList<T>(named: Named<T>): named is readonly T[] {
   return Array.isArray(named);
-}
-
-/** A name such as z1, P12 or ω2 with its digits as an index. */
-export function indexed(name: string): string {
-  return name.replace(/^(\p{L})(\d+)$/u, "$1_{$2}");
 }

@@ -1,7 +1,7 @@
 // Which conventions a number rests on: read off the record of how it was built.
 
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
-import { isNode } from "../number/origin.ts";
+import { isDisc, isNode } from "../number/origin.ts";
 import { type ConventionKey, conventionOrder } from "../proof/conventions.ts";
 
 /** Rows that the result of an operation needs beside it, by the name of the operation. */
@@ -23,6 +23,9 @@ const ROWS: Readonly<Record<string, readonly ConventionKey[]>> = {
 /** Operations whose result depends on the basis that was chosen where none was given. */
 const BASIS_DEPENDENT = new Set(["point", "period ratio", "quasi-period"]);
 
+/** Functions with a cut, which matters for complex arguments only. */
+const CUT = new Set(["arg", "ln", "sqrt"]);
+
 /** A record longer than this is not read to its end. */
 const MOST_STEPS = 2000;
 
@@ -37,9 +40,14 @@ export function numberConventions(x: unknown): readonly ConventionKey[] {
     const { operation, operands } = node.origin;
     for (const key of ROWS[operation.name] ?? []) found.add(key);
     if (BASIS_DEPENDENT.has(operation.name)) found.add(basisRow(operands[0]) ?? "periods");
+    if (CUT.has(operation.name) && isOffAxis(operands[0])) found.add("branch");
     open.push(...operands);
   }
   return conventionOrder(found);
+}
+
+function isOffAxis(operand: unknown): boolean {
+  return isNode(operand) && isDisc(operand.enclosure) && operand.enclosure.axis !== "real";
 }
 
 /** The row on the chosen basis, for a lattice that was not given by its periods. */

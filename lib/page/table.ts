@@ -1,7 +1,12 @@
 // Tables as values: the rows a user gives, kept as they are; how they look is decided when they are shown.
 
+import type { ComplexNumeric } from "../number/values.ts";
+
+/** What a cell may hold: numbers (literals count exactly as typed), values of the library, words, anything else. */
+export type TableValue = ComplexNumeric | object | boolean | null | undefined;
+
 /** A row: a list of cells, or cells by the name of their column. */
-export type Row = readonly unknown[] | Readonly<Record<string, unknown>>;
+export type Row = readonly TableValue[] | Readonly<Record<string, TableValue>>;
 
 export interface TableOptions {
   readonly caption?: string;
@@ -37,7 +42,7 @@ export class Table {
  * Throws   TypeError if the rows are not lists or records, or not as long as the list of columns.
  * @example table([{ n: 1, x: P.x }, { n: 2, x: (2 * P).x }], { caption: "Multiples of $P$" })
  */
-export function table(rows: readonly Row[] | Readonly<Record<string, unknown>>, options: TableOptions = {}): Table {
+export function table(rows: readonly Row[] | Readonly<Record<string, TableValue>>, options: TableOptions = {}): Table {
   if (!Array.isArray(rows)) {
     if (!isRecord(rows)) throw new TypeError(`table: expected a list of rows, got ${describe(rows)}`);
     return new Table(Object.entries(rows), options);

@@ -110,11 +110,10 @@ function apart(a: ClaimNumber, b: ClaimNumber): Standing {
   return { kind: "undecided", tried: `enclosures that overlap up to ${LADDER.at(-1)} bits` };
 }
 
-function order(a: ClaimNumber, relation: Relation, b: ClaimNumber): Standing {
+function order(left: ClaimNumber, relation: Relation, right: ClaimNumber): Standing {
+  const [a, b] = [realOf(left), realOf(right)];
+  if (!a || !b) throw new TypeError(`claim: "${relation}" is for real numbers; got ${left} and ${right}`);
   const difference = b.minus(a);
-  if (!(a instanceof Real && b instanceof Real)) {
-    throw new TypeError(`claim: "${relation}" is for real numbers; got ${a} and ${b}`);
-  }
   for (const bits of LADDER) {
     const d = attempt(() => asBall(evaluate(difference, bits)));
     const sign = d && ball.sign(d);
@@ -127,6 +126,12 @@ function order(a: ClaimNumber, relation: Relation, b: ClaimNumber): Standing {
     if (!refinable(difference)) break;
   }
   return { kind: "undecided", tried: `enclosures that overlap up to ${LADDER.at(-1)} bits` };
+}
+
+/** A real number, also one that comes as a complex one known to be real, such as a real period. */
+function realOf(x: ClaimNumber): Real | undefined {
+  if (x instanceof Real) return x;
+  return x.isReal ? x.re : undefined;
 }
 
 /** The value, or undefined where more bits may help. */

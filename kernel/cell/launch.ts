@@ -1,6 +1,7 @@
 // How the two processes of a session are started.
 import { type ChildProcess, spawn } from "node:child_process";
-import { fileURLToPath } from "node:url";
+import { join } from "node:path";
+import { BUILT, usableSnapshot } from "./snapshot/file.ts";
 
 /** Flags of the cells' process: what interrupts need (see child/stop.ts), and two warnings less. */
 const CELL_FLAGS = [
@@ -11,11 +12,8 @@ const CELL_FLAGS = [
   "--disable-warning=DEP0111",
 ];
 
-/** The built file of an entry, also when this file runs from source. */
 function entry(name: string): string {
-  const here = import.meta.url;
-  const built = here.endsWith(".ts") ? new URL(`../../dist/kernel/cell/${name}`, here) : new URL(`./${name}`, here);
-  return fileURLToPath(built);
+  return join(BUILT, "kernel", "cell", name);
 }
 
 /** Starts the process that runs the user's code, in a process group of its own. */
@@ -28,10 +26,14 @@ export function launchCells(cwd: string, memoryLimit?: number): ChildProcess {
   });
 }
 
-/** Starts the process that checks cells. */
-export function launchTypes(cwd: string): ChildProcess {
-  return spawn(process.execPath, ["--disable-warning=ExperimentalWarning", entry("types/main.js"), cwd], {
+/** Starts the process that checks cells; from the start-up snapshot if there is one and it is wanted. */
+export function launchTypes(cwd: string, wantSnapshot: boolean): { process: ChildProcess; fromSnapshot: boolean } {
+  const snapshot = wantSnapshot ? usableSnapshot() : undefined;
+  const start = snapshot === undefined ? [entry("types/main.js")] : ["--snapshot-blob", snapshot];
+  const child = spawn(process.execPath, ["--disable-warning=ExperimentalWarning", ...start, cwd], {
     cwd,
-    stdio: ["pipe", "pipe", "inherit"],
+    // A snapshot that does not fit is refused with words that help nobody: the plain start follows.
+    stdio: ["pipe", "pipe", snapshot === undefined ? "inherit" : "ignore"],
   });
+  return { process: child, fromSnapshot: snapshot !== undefined };
 }

@@ -5,6 +5,7 @@ import { encodeLine, LineReader } from "./lines.ts";
 import type { CommittedCell, TypesAnswers, TypesCommand, TypesReply } from "./messages.ts";
 
 interface Waiting {
+  readonly line: string;
   readonly resolve: (answer: unknown) => void;
   readonly reject: (reason: Error) => void;
 }
@@ -19,6 +20,9 @@ export class TypesClient {
   readonly #waiting = new Map<number, Waiting>();
   #process: ChildProcess | undefined;
   #ids = 0;
+  #ready = false;
+  /** False once a snapshot has not started. */
+  #trustSnapshot = true;
   #closed = false;
 
   constructor(cwd: string) {
@@ -27,18 +31,35 @@ export class TypesClient {
 
   start(): void {
     if (this.#process || this.#closed) return;
-    const process = launchTypes(this.#cwd);
+    this.#launch();
+    for (const [cell, declarations] of this.#committed) {
+      this.ask({ kind: "restore", cell, declarations }).catch(() => {});
+    }
+  }
+
+  #launch(): void {
+    const { process, fromSnapshot } = launchTypes(this.#cwd, this.#trustSnapshot);
     this.#process = process;
+    this.#ready = false;
     const reader = new LineReader();
     process.stdout?.on("data", (chunk: Buffer) => {
       for (const line of reader.push(chunk)) this.#receive(JSON.parse(line) as TypesReply);
     });
     process.stdin?.on("error", () => {});
-    process.on("error", () => this.#lost(process));
-    process.on("exit", () => this.#lost(process));
-    for (const [cell, declarations] of this.#committed) {
-      this.ask({ kind: "restore", cell, declarations }).catch(() => {});
-    }
+    const ended = () => {
+      if (fromSnapshot && !this.#ready && this.#process === process) this.#startPlain();
+      else this.#lost(process);
+    };
+    process.on("error", ended);
+    process.on("exit", ended);
+  }
+
+  /** The snapshot does not fit this Node: the same questions go to a process without it. */
+  #startPlain(): void {
+    this.#trustSnapshot = false;
+    if (this.#closed) return;
+    this.#launch();
+    for (const { line } of this.#waiting.values()) this.#process?.stdin?.write(line);
   }
 
   ask<C extends TypesCommand>(command: C): Promise<TypesAnswers[C["kind"]]> {
@@ -46,8 +67,9 @@ export class TypesClient {
     const id = ++this.#ids;
     return new Promise((resolve, reject) => {
       if (!this.#process) return reject(new TypesLost("the session has ended"));
-      this.#waiting.set(id, { resolve: resolve as (answer: unknown) => void, reject });
-      this.#process.stdin?.write(encodeLine({ id, ...command }));
+      const line = encodeLine({ id, ...command });
+      this.#waiting.set(id, { line, resolve: resolve as (answer: unknown) => void, reject });
+      this.#process.stdin?.write(line);
     });
   }
 
@@ -78,7 +100,10 @@ export class TypesClient {
   }
 
   #receive(reply: TypesReply): void {
-    if (!("id" in reply)) return;
+    if (!("id" in reply)) {
+      this.#ready = true;
+      return;
+    }
     const waiting = this.#waiting.get(reply.id);
     this.#waiting.delete(reply.id);
     if ("failure" in reply) waiting?.reject(new Error(reply.failure));

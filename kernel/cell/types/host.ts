@@ -3,7 +3,6 @@
 import { existsSync, readFileSync } from "node:fs";
 import { isBuiltin } from "node:module";
 import { dirname, join } from "node:path";
-import { fileURLToPath } from "node:url";
 import { cellNumber, LIBRARY } from "./notebook.ts";
 import { OPERATORS } from "./operators.ts";
 import { type TS, ts } from "./typescript.ts";
@@ -52,15 +51,20 @@ export function compilerOptions(places: Places): TS.CompilerOptions {
   };
 }
 
+// Files of packages and of the library, shared by the notebooks of a process; a snapshot keeps them.
+const disk = new Map<string, TS.IScriptSnapshot | undefined>();
+const settledModules = new Map<string, TS.ResolvedModuleWithFailedLookupLocations>();
+/** Parsed files, shared in the same way. */
+export const registry: TS.DocumentRegistry = ts.createDocumentRegistry();
+
 /** Host of the language service of one notebook. */
 export class NotebookHost implements TS.LanguageServiceHost {
   readonly #places: Places;
   readonly #options: TS.CompilerOptions;
   readonly #cells = new Map<number, CellFile>();
-  readonly #disk = new Map<string, TS.IScriptSnapshot | undefined>();
   readonly #resolutions: TS.ModuleResolutionCache;
-  readonly #settled = new Map<string, TS.ResolvedModuleWithFailedLookupLocations>();
   readonly #libraryFolder: string;
+  readonly #operatorsFile: string;
   #version = 0;
   /** A module was missing: it may be there for the next cell. */
   #forget = false;
@@ -70,6 +74,7 @@ export class NotebookHost implements TS.LanguageServiceHost {
     this.#places = places;
     this.#options = compilerOptions(places);
     this.#libraryFolder = dirname(places.library);
+    this.#operatorsFile = join(this.#libraryFolder, "surface", "operators.d.ts");
     this.#resolutions = ts.createModuleResolutionCache(places.cwd, (name) => name, this.#options);
   }
 
@@ -89,7 +94,8 @@ export class NotebookHost implements TS.LanguageServiceHost {
     this.#forget = false;
     this.#version++;
     this.#cells.set(cell, { version: this.#version, snapshot: ts.ScriptSnapshot.fromString(text) });
-    if (root) this.#root = [this.cellFile(cell)];
+    // The library is always part of the program: else its parsed files are dropped by every cell that does not use it.
+    if (root) this.#root = [this.cellFile(cell), this.#places.library, this.#operatorsFile];
   }
 
   dropCell(cell: number): void {
@@ -116,10 +122,10 @@ export class NotebookHost implements TS.LanguageServiceHost {
   getScriptSnapshot(file: string): TS.IScriptSnapshot | undefined {
     const cell = this.#cell(file);
     if (cell) return cell.snapshot;
-    if (this.#disk.has(file)) return this.#disk.get(file);
+    if (disk.has(file)) return disk.get(file);
     const snapshot = existsSync(file) ? ts.ScriptSnapshot.fromString(readFileSync(file, "utf8")) : undefined;
     // Files of the user beside the notebook may change; those of packages do not.
-    if (this.#isSettled(file)) this.#disk.set(file, snapshot);
+    if (this.#isSettled(file)) disk.set(file, snapshot);
     return snapshot;
   }
 
@@ -175,10 +181,10 @@ export class NotebookHost implements TS.LanguageServiceHost {
         };
       if (isBuiltin(text)) return NOT_FOUND;
       const key = `${text} ${containingFile}`;
-      const known = settled ? this.#settled.get(key) : undefined;
+      const known = settled ? settledModules.get(key) : undefined;
       if (known) return known;
       const found = ts.resolveModuleName(text, containingFile, options, this, this.#resolutions, redirected);
-      if (settled) this.#settled.set(key, found);
+      if (settled) settledModules.set(key, found);
       else if (!found.resolvedModule) this.#forget = true;
       return found;
     });
@@ -191,7 +197,7 @@ export class NotebookHost implements TS.LanguageServiceHost {
 
   #ownModule(specifier: string): string | undefined {
     if (specifier === LIBRARY) return this.#places.library;
-    if (specifier === OPERATORS) return join(this.#libraryFolder, "surface", "operators.d.ts");
+    if (specifier === OPERATORS) return this.#operatorsFile;
     const cell = cellNumber(specifier);
     return cell !== undefined && this.#cells.has(cell) ? this.cellFile(cell) : undefined;
   }
@@ -206,11 +212,9 @@ function extensionOf(file: string): TS.Extension {
   return file.endsWith(".d.ts") ? ts.Extension.Dts : ts.Extension.Ts;
 }
 
-/** The places as they are in an installation: this file is dist/kernel/cell/types/host.js. */
-export function defaultPlaces(cwd: string, here: string = import.meta.url): Places {
-  const root = fileURLToPath(new URL("../../../../", here));
-  const library = fileURLToPath(new URL("../../../lib/index.d.ts", here));
-  return { cwd, library, typeRoots: typeRootsFrom(root) };
+/** The places of an installation with the given root, for a notebook in `cwd`. */
+export function placesOf(root: string, cwd: string): Places {
+  return { cwd, library: join(root, "dist", "lib", "index.d.ts"), typeRoots: typeRootsFrom(root) };
 }
 
 /** `node_modules/@types` of a folder and of those above it. */

@@ -89,8 +89,8 @@ export function surroundings(
     if (!own.has(name) && !notebook.get(name) && wanted(name)) library.add(name);
   }
   if (library.size > 0) lines.push(`import { ${[...library].join(", ")} } from "${LIBRARY}";`);
-  const exports = [...own.values()].filter((declared) => declared.kind !== "using").map((declared) => declared.name);
-  if (exports.length > 0) lines.push(`export { ${exports.join(", ")} };`);
+  const exported = [...own.values()].filter((declared) => declared.kind !== "using").map((declared) => declared.name);
+  if (exported.length > 0) lines.push(`export { ${exported.join(", ")} };`);
   return { text: lines.join("\n"), library, notebook: used };
 }
 

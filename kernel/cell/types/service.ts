@@ -3,7 +3,7 @@ import type { CheckResult, CommittedCell, EmittedCell } from "../messages.ts";
 import { type Finding, findings, typeScriptError } from "./diagnostics.ts";
 import { type Edit, EditedText, inOrder } from "./edits.ts";
 import { exportEdits } from "./exports.ts";
-import { NotebookHost, type Places } from "./host.ts";
+import { NotebookHost, type Places, registry } from "./host.ts";
 import { NotebookNames, seesLibrary, surroundings } from "./notebook.ts";
 import { emitOperators } from "./operator-emit.ts";
 import { operatorFindings } from "./operator-findings.ts";
@@ -40,7 +40,7 @@ export class NotebookTypes {
 
   constructor(places: Places) {
     this.host = new NotebookHost(places);
-    this.service = ts.createLanguageService(this.host, ts.createDocumentRegistry());
+    this.service = ts.createLanguageService(this.host, registry);
   }
 
   /** Loads library and node types, so that the first cell need not. */

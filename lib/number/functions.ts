@@ -102,18 +102,21 @@ export function tan(x: ComplexNumeric): Real | Complex {
   return one(TAN, x, at(0, 0));
 }
 
+/** Hyperbolic sine, entire; exactly real on a real argument. */
 export function sinh(x: Numeric): Real;
 export function sinh(x: ComplexNumeric): Real | Complex;
 export function sinh(x: ComplexNumeric): Real | Complex {
   return one(SINH, x, at(0, 0));
 }
 
+/** Hyperbolic cosine, entire; exactly real on a real argument. */
 export function cosh(x: Numeric): Real;
 export function cosh(x: ComplexNumeric): Real | Complex;
 export function cosh(x: ComplexNumeric): Real | Complex {
   return one(COSH, x, at(0, 1));
 }
 
+/** Hyperbolic tangent. Throws PoleError where the enclosure holds a pole iπ/2 + kiπ. */
 export function tanh(x: Numeric): Real;
 export function tanh(x: ComplexNumeric): Real | Complex;
 export function tanh(x: ComplexNumeric): Real | Complex {
@@ -141,6 +144,7 @@ export function atan(x: ComplexNumeric): Real | Complex {
   return one(ATAN, x, at(0, 0));
 }
 
+/** Inverse hyperbolic sine: ln(x + √(x² + 1)), the principal values of both. */
 export function asinh(x: Numeric): Real {
   return apply(ASINH, [Real.from(x)]) as Real;
 }

@@ -8,6 +8,7 @@ export type TableValue = ComplexNumeric | object | boolean | null | undefined;
 /** A row: a list of cells, or cells by the name of their column. */
 export type Row = readonly TableValue[] | Readonly<Record<string, TableValue>>;
 
+/** How a table is headed and how many digits its numbers show. */
 export interface TableOptions {
   readonly caption?: string;
   /** Heads of the columns; for rows by name, also which of them and in which order. */

@@ -4,8 +4,8 @@ import { toCodePoints, toUnits } from "../positions.ts";
 import type { Handler } from "../service.ts";
 import { within } from "../within.ts";
 
-/** Consoles wait 5 s for completions; people do not, but the first one may have to wait for the compiler. */
-const LIMIT = 4000;
+/** For the first one, which may have to wait for the compiler on a slow machine; later ones take some ms. */
+const LIMIT = 10_000;
 /** Longer lists help nobody and slow every front end. */
 const MOST = 500;
 

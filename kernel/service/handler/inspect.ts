@@ -4,7 +4,8 @@ import { toUnits } from "../positions.ts";
 import type { Handler } from "../service.ts";
 import { within } from "../within.ts";
 
-const LIMIT = 4000;
+/** For the first one, which may have to wait for the compiler on a slow machine; later ones take some ms. */
+const LIMIT = 10_000;
 
 /** inspect_request: what the name at the cursor is. */
 export const inspectRequest: Handler = async (request, service) => {

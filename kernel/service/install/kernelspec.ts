@@ -1,7 +1,6 @@
 // The kernelspec: the folder by which a front end knows the kernel and starts it.
 import { existsSync, readFileSync } from "node:fs";
 import path from "node:path";
-import { PROTOCOL_VERSION } from "../../wire/codec.ts";
 import { KERNEL_NAME, LANGUAGE, packageRoot, packageVersion } from "../info.ts";
 
 export interface Kernelspec {
@@ -10,7 +9,6 @@ export interface Kernelspec {
   readonly language: string;
   readonly interrupt_mode: "message";
   readonly env: Readonly<Record<string, string>>;
-  readonly kernel_protocol_version: string;
   readonly metadata: Readonly<Record<string, unknown>>;
 }
 
@@ -30,7 +28,6 @@ export function kernelspec(env: Readonly<Record<string, string>>): Kernelspec {
     language: LANGUAGE,
     interrupt_mode: "message",
     env,
-    kernel_protocol_version: PROTOCOL_VERSION,
     metadata: { debugger: false, [KERNEL_NAME]: { installer: true, version: packageVersion() } },
   };
 }

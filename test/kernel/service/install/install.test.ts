@@ -46,7 +46,6 @@ it("writes a kernelspec that hosts take: these keys and no others — oracle: sc
     language: "typescript",
     interrupt_mode: "message",
     env: {},
-    kernel_protocol_version: "5.5",
     metadata: expect.objectContaining({ halfperiod: expect.anything() }),
   });
   for (const file of argv.slice(0, 2)) expect(path.isAbsolute(file) && existsSync(file)).toBe(true);

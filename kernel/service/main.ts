@@ -8,8 +8,7 @@ import { startKernel } from "./kernel.ts";
 
 /** Loads the cells. */
 async function createCells(options: CellSessionOptions): Promise<CellSession> {
-  const file = "../cell/session.js";
-  const { createCellSession } = (await import(file)) as { createCellSession(o: CellSessionOptions): CellSession };
+  const { createCellSession } = await import("../cell/session.ts");
   return createCellSession(options);
 }
 

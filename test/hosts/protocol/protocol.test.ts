@@ -1,0 +1,35 @@
+import path from "node:path";
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { type HostPlace, makePlace, missing, PYTHON, root, run } from "../hosts.ts";
+
+const absent = missing(
+  { module: "jupyter_client", debianPackage: "python3-jupyter-client" },
+  { module: "jupyter_kernel_test", debianPackage: "python3-jupyter-kernel-test" },
+);
+if (absent) console.warn(`skipped, ${absent}`);
+
+describe.skipIf(absent !== "")("the protocol, seen from outside", () => {
+  let place: HostPlace;
+  beforeAll(() => {
+    place = makePlace();
+  });
+  afterAll(() => place?.remove());
+
+  const python = (script: string, ...args: string[]) =>
+    run(PYTHON, ["-W", "ignore", path.join(root, "test/hosts/protocol", script), ...args], {
+      ...place.env,
+      HALFPERIOD_HISTORY: "off",
+    });
+
+  it("passes the front ends' own test of kernels — oracle: jupyter_kernel_test", async () => {
+    await expect(python("kernel_test.py")).resolves.toBeDefined();
+  }, 120_000);
+
+  it.each(["Execute", "Output", "Requests", "Control", "Process"])(
+    "keeps the protocol's rules: %s — oracle: the text of each rule, asked through jupyter_client",
+    async (group) => {
+      await expect(python("conformance.py", group)).resolves.toBeDefined();
+    },
+    300_000,
+  );
+});

@@ -22,41 +22,67 @@ export function primitivePart(f: Univariate<Rational>): IntegerPolynomial {
 /**
  * The rational roots of f, ascending and without repetition, complete.
  *
- * Method   f is made squarefree; with leading coefficient a, every root r gives an integer root a·r of the monic
- *          polynomial a^(n−1) f(x/a); those are found modulo a prime where the polynomial stays squarefree and lifted
- *          past twice Fujiwara's bound on the roots.
+ * Method   with leading coefficient a, every root r gives an integer root a·r of the monic polynomial a^(n−1) f(x/a); those
+ *          are found modulo a prime where all roots are simple and lifted past twice Fujiwara's bound on the roots. Where
+ *          no small prime has only simple roots, the repeated factors of f are taken out first.
  * Domain   f ≠ 0.
  */
 export function rationalRoots(f: Univariate<Rational>): Rational[] {
   if (f.length <= 1) return [];
-  const common = gcdUni(Q, f, deriveUni(Q, f));
-  const squarefree = primitivePart(common.length > 1 ? divideUni(Q, f, common).quotient : f);
-  const lead = squarefree.at(-1)!;
-  const degree = squarefree.length - 1;
-  const monic = squarefree.map((c, k) => (k === degree ? 1n : c * lead ** BigInt(degree - 1 - k)));
-  const roots = integerRootsOfMonic(monic).map((root) => Rational.of(root, lead));
-  return roots.sort((a, b) => a.compare(b));
+  return rootsIfSimple(f) ?? rootsIfSimple(squarefreeFactor(f)) ?? failed();
 }
 
-/** Integer roots of a monic squarefree integer polynomial. */
-function integerRootsOfMonic(f: IntegerPolynomial): bigint[] {
-  const bound = rootBound(f);
-  for (const p of primesUpTo(1000)) {
-    const prime = BigInt(p);
-    const roots = simpleRootsModulo(f, prime);
-    if (!roots) continue;
-    return roots.map((root) => liftRoot(f, root, prime, 2n * bound)).filter((root) => valueAt(f, root) === 0n);
-  }
-  throw new Error("some prime below 1000 keeps a squarefree polynomial of a curve without double roots");
+function squarefreeFactor(f: Univariate<Rational>): Univariate<Rational> {
+  return divideUni(Q, f, gcdUni(Q, f, deriveUni(Q, f))).quotient;
 }
+
+function failed(): never {
+  throw new Error("some prime below 1000 keeps the roots of a squarefree polynomial of a curve simple");
+}
+
+function rootsIfSimple(f: Univariate<Rational>): Rational[] | undefined {
+  const integral = primitivePart(f);
+  const lead = integral.at(-1)!;
+  const degree = integral.length - 1;
+  const monic = integral.map((c, k) => (k === degree ? 1n : c * lead ** BigInt(degree - 1 - k)));
+  const roots = integerRootsOfMonic(monic)?.map((root) => Rational.of(root, lead));
+  return roots?.sort((a, b) => a.compare(b));
+}
+
+/** Integer roots of a monic integer polynomial, or undefined if every prime tried has a multiple root. */
+function integerRootsOfMonic(f: IntegerPolynomial): bigint[] | undefined {
+  let best: { readonly prime: bigint; readonly roots: readonly number[] } | undefined;
+  let found = 0;
+  for (const p of primesUpTo(1000)) {
+    if (p < f.length) continue;
+    const roots = simpleRootsModulo(f, p);
+    if (!roots) continue;
+    if (!best || roots.length < best.roots.length) best = { prime: BigInt(p), roots };
+    if (roots.length === 0) return [];
+    if (++found >= PRIMES_COMPARED) break;
+  }
+  if (!best) return undefined;
+  const { prime, roots } = best;
+  const bound = 2n * rootBound(f);
+  return roots.map((root) => liftRoot(f, BigInt(root), prime, bound)).filter((root) => valueAt(f, root) === 0n);
+}
+
+/** Of so many primes the one with the fewest roots is lifted: most polynomials have none modulo one of them. */
+const PRIMES_COMPARED = 5;
 
 /** All roots of f modulo p, or undefined if one of them is double. */
-function simpleRootsModulo(f: IntegerPolynomial, p: bigint): bigint[] | undefined {
-  const reduced = f.map((c) => modulo(c, p));
-  const roots: bigint[] = [];
-  for (let x = 0n; x < p; x++) {
-    if (reduced.reduceRight((total, c) => (total * x + c) % p, 0n) !== 0n) continue;
-    if (derivativeAt(reduced, x) % p === 0n) return undefined;
+function simpleRootsModulo(f: IntegerPolynomial, p: number): number[] | undefined {
+  const P = BigInt(p);
+  const reduced = f.map((c) => Number(modulo(c, P)));
+  const roots: number[] = [];
+  for (let x = 0; x < p; x++) {
+    let [value, slope] = [0, 0];
+    for (let k = reduced.length - 1; k >= 0; k--) {
+      slope = (slope * x + value) % p;
+      value = (value * x + reduced[k]!) % p;
+    }
+    if (value !== 0) continue;
+    if (slope === 0) return undefined;
     roots.push(x);
   }
   return roots;

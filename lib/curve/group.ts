@@ -30,7 +30,8 @@ export function slopeOf<T>(F: Field<T>, a: Coefficients<T>, P: readonly [T, T], 
   const [x1, y1] = P;
   const [x2, y2] = Q;
   const dx = F.sub(x2, x1);
-  if (!F.isZero(dx)) return F.mul(F.sub(y2, y1), F.inv(dx));
+  // One object is one number, also where an enclosure of x − x cannot show it.
+  if (x1 !== x2 && !F.isZero(dx)) return F.mul(F.sub(y2, y1), F.inv(dx));
   const denominator = sum(F, y1, y2, F.mul(a1, x1), a3); // zero exactly if Q = −P
   if (F.isZero(denominator)) return undefined;
   const numerator = sum(F, scale(F, 3, F.mul(x1, x1)), scale(F, 2, F.mul(a2, x1)), a4, F.neg(F.mul(a1, y1)));

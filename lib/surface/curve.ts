@@ -8,6 +8,7 @@ import { pointsOverX } from "../curve/lift.ts";
 import { type Coefficients, type Invariants, invariantsOf, jInvariant, residual } from "../curve/weierstrass.ts";
 import { primitive, type Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
+import { carry } from "./fields.ts";
 import { type ExactInput, elementOf } from "./input.ts";
 import { Point } from "./point.ts";
 
@@ -87,6 +88,12 @@ export class Curve<T = Rational> {
   /** The points with the given x over the field of the curve: none, one of order two, or two, P and −P. */
   pointsWith({ x }: { readonly x: ExactInput | T }): Point<T>[] {
     return pointsOverX(this.field, this.a, this.#element("x", x)).map((P) => new Point(this, P));
+  }
+
+  /** The same equation over a larger field. */
+  carriedTo<U>(field: Field<U>): Curve<U> {
+    if (field.name === this.field.name) return this as unknown as Curve<U>;
+    return new Curve(field, this.a.map((c) => carry(c, field)) as unknown as Coefficients<U>);
   }
 
   /** True if the two are the same equation over the same field. */

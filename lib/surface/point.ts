@@ -1,14 +1,15 @@
 // A point of an elliptic curve, as a user holds it.
 
-import type { Field } from "../algebra/field.ts";
+import { rationalOrder } from "../arithmetic/order.ts";
 import { type Affine, addPoints, multiplyPoint, negatePoint, orderUpTo, samePoint } from "../curve/group.ts";
-import type { Coefficients } from "../curve/weierstrass.ts";
 import { primitive, type Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 import type { Curve } from "./curve.ts";
+import { carry, type Join, joinFields } from "./fields.ts";
 
 /** A point (x, y) of a curve, or its origin O. Immutable. Made by `E.point(x, y)`, `E.origin` and the group law. */
 export class Point<T = Rational> {
+  /** The curve over the field of the coordinates. */
   readonly curve: Curve<T>;
   readonly #affine: Affine<T>;
 
@@ -37,63 +38,72 @@ export class Point<T = Rational> {
     return this.#affinePart("y")[1];
   }
 
-  /** P + Q: the chord (or tangent) meets the curve in a third point, whose negative is the sum. Source: Silverman AEC III.2. */
-  plus(other: Point<T>): Point<T> {
-    this.#requireSameCurve(other, "plus");
-    return this.#made(addPoints(this.#field, this.#a, this.#affine, other.#affine));
+  /**
+   * P + Q: the chord (or tangent) meets the curve in a third point, whose negative is the sum. Points over Q and over R or C of one
+   * curve add over the larger field.
+   *
+   * Throws   DomainError for points of two curves; UndecidedError if enclosures do not tell whether Q is P or −P.
+   * Source   Silverman AEC III.2.3.
+   */
+  plus<U>(other: Point<U>): Point<Join<T, U>> {
+    const { curve, P, Q } = this.#joined(other, "plus");
+    return new Point(curve, addPoints(curve.field, curve.a, P, Q));
   }
 
-  minus(other: Point<T>): Point<T> {
-    this.#requireSameCurve(other, "minus");
-    return this.plus(other.neg());
+  minus<U>(other: Point<U>): Point<Join<T, U>> {
+    const { curve, P, Q } = this.#joined(other, "minus");
+    return new Point(curve, addPoints(curve.field, curve.a, P, negatePoint(curve.field, curve.a, Q)));
   }
 
   neg(): Point<T> {
-    return this.#made(negatePoint(this.#field, this.#a, this.#affine));
+    const { field, a } = this.curve;
+    return new Point(this.curve, negatePoint(field, a, this.#affine));
   }
 
   /** n·P for any integer n; the digits of a multiple of a point of infinite order grow as n². */
   times(n: bigint | number): Point<T> {
-    return this.#made(multiplyPoint(this.#field, this.#a, integer("times", n), this.#affine));
+    const { field, a } = this.curve;
+    return new Point(this.curve, multiplyPoint(field, a, integer("times", n), this.#affine));
   }
 
   /**
-   * The least n >= 1 with n·P = O, or Infinity, proved: over Q no torsion point has an order above 12.
-   * Source: Mazur 1977 (Silverman AEC VIII.7.5).
+   * The least n >= 1 with n·P = O, or Infinity, proved: over Q no torsion point has an order above 12, over a quadratic field
+   * none above 18.
+   * Throws   DomainError for enclosure coordinates, which cannot show an order.
+   * Source   Mazur 1977 (Silverman AEC VIII.7.5); Kamienny 1992.
    */
   order(): number {
-    return orderUpTo(this.#field, this.#a, this.#affine, LARGEST_RATIONAL_ORDER) ?? Infinity;
+    const { field, a } = this.curve;
+    if (!this.#affine) return 1;
+    if (field.name === "Q") {
+      return rationalOrder(a as never, this.#affine as never);
+    }
+    if (field.name.startsWith("Q(")) return orderUpTo(field, a, this.#affine, 18) ?? Infinity;
+    throw new DomainError({
+      subject: "order",
+      given: `the point ${this} over ${field.name}`,
+      expected: "exact coordinates",
+      hint: "An enclosure of a torsion point also holds points of infinite order.",
+    });
   }
 
-  equals(other: Point<T>): boolean {
-    this.#requireSameCurve(other, "equals");
-    return samePoint(this.#field, this.#affine, other.#affine);
+  /** Throws DomainError for points of two curves, UndecidedError if enclosures leave it open. */
+  equals<U>(other: Point<U>): boolean {
+    const { curve, P, Q } = this.#joined(other, "equals");
+    return samePoint(curve.field, P, Q);
   }
 
   /** "(0, -1)" or "O". */
   toString(): string {
-    return this.#affine ? `(${this.#affine.map((c) => this.#field.format(c)).join(", ")})` : "O";
+    return this.#affine ? `(${this.#affine.map((c) => this.curve.field.format(c)).join(", ")})` : "O";
   }
 
-  toJSON(): { readonly kind: "point"; readonly curve: unknown; readonly coordinates: readonly string[] | null } {
-    const coordinates = this.#affine?.map((c) => this.#field.format(c)) ?? null;
-    return { kind: "point", curve: this.curve, coordinates };
+  toJSON(): { readonly kind: "point"; readonly curve: unknown; readonly coordinates: readonly unknown[] | null } {
+    return { kind: "point", curve: this.curve, coordinates: this.#affine ?? null };
   }
 
   [Symbol.toPrimitive](hint: string): string {
     return primitive(hint, this, "point");
-  }
-
-  get #field(): Field<T> {
-    return this.curve.field;
-  }
-
-  get #a(): Coefficients<T> {
-    return this.curve.a;
-  }
-
-  #made(affine: Affine<T>): Point<T> {
-    return new Point(this.curve, affine);
   }
 
   #affinePart(argument: string): readonly [T, T] {
@@ -106,18 +116,35 @@ export class Point<T = Rational> {
     });
   }
 
-  #requireSameCurve(other: Point<T>, subject: string): void {
-    if (this.curve === other.curve || this.curve.equals(other.curve)) return;
-    throw new DomainError({
-      subject,
-      given: `a point of ${this.curve} and a point of ${other.curve}`,
-      expected: "two points of one curve",
-      hint: "Carry one of them over by a map first.",
-    });
+  /** Both points over one field, on one curve. */
+  #joined<U>(other: Point<U>, subject: string) {
+    type V = Join<T, U>;
+    const mine = this.curve as unknown as Curve<V>;
+    const theirs = other.curve as unknown as Curve<V>;
+    if (mine === theirs || (mine.field.name === theirs.field.name && mine.equals(theirs))) {
+      return { curve: mine, P: this.#affine as unknown as Affine<V>, Q: other.coordinates as unknown as Affine<V> };
+    }
+    const field = joinFields(mine.field, theirs.field);
+    const curve = field && mine.carriedTo(field);
+    if (!curve || !sameModel(mine, theirs)) throw twoCurves(subject, mine, theirs);
+    const lift = (P: Affine<unknown>): Affine<V> => P && [carry(P[0], field), carry(P[1], field)];
+    return { curve, P: lift(this.#affine), Q: lift(other.coordinates) };
   }
 }
 
-const LARGEST_RATIONAL_ORDER = 12;
+/** Equal coefficients as numbers, whatever fields the curves are written over. */
+function sameModel<V>(mine: Curve<V>, theirs: Curve<V>): boolean {
+  return mine.a.every((c, k) => mine.field.format(c) === theirs.field.format(theirs.a[k]!));
+}
+
+function twoCurves(subject: string, mine: unknown, theirs: unknown): DomainError {
+  return new DomainError({
+    subject,
+    given: `a point of ${mine} and a point of ${theirs}`,
+    expected: "two points of one curve",
+    hint: "Carry one of them over by a map first.",
+  });
+}
 
 function integer(subject: string, n: bigint | number): bigint {
   if (typeof n === "bigint") return n;

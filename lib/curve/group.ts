@@ -1,6 +1,7 @@
 // The group law on a long Weierstrass model over any field.
 
-import { type Field, scale, sum } from "../algebra/field.ts";
+import { type Field, sum } from "../algebra/field.ts";
+import { UndecidedError } from "../proof/errors.ts";
 import type { Coefficients } from "./weierstrass.ts";
 
 /** An affine point (x, y), or undefined for the point O at infinity. */
@@ -24,18 +25,34 @@ export function addPoints<T>(F: Field<T>, a: Coefficients<T>, P: Affine<T>, Q: A
   return [x, F.neg(sum(F, y, F.mul(a1, x), a3))];
 }
 
-/** Slope of the chord through P and Q, or of the tangent; undefined if the line is vertical. */
+/**
+ * Slope of the chord through P and Q, or of the tangent; undefined if the line is vertical.
+ *
+ * Where x1 ≠ x2 is known the chord's formula serves; else (x1² + x1x2 + x2² + a2(x1 + x2) + a4 − a1y1)/(y1 + y2 + a1x2 + a3), which is
+ * the same slope for all P ≠ −Q, the tangent's for P = Q. So enclosures of two near points still add.
+ */
 export function slopeOf<T>(F: Field<T>, a: Coefficients<T>, P: readonly [T, T], Q: readonly [T, T]): T | undefined {
   const [a1, a2, a3, a4] = a;
   const [x1, y1] = P;
   const [x2, y2] = Q;
   const dx = F.sub(x2, x1);
-  // One object is one number, also where an enclosure of x − x cannot show it.
-  if (x1 !== x2 && !F.isZero(dx)) return F.mul(F.sub(y2, y1), F.inv(dx));
-  const denominator = sum(F, y1, y2, F.mul(a1, x1), a3); // zero exactly if Q = −P
+  const sameX = x1 === x2 || zeroIfKnown(F, dx); // one object is one number
+  if (sameX === false) return F.mul(F.sub(y2, y1), F.inv(dx));
+  const denominator = sum(F, y1, y2, F.mul(a1, x2), a3); // zero for Q = −P; with x1 = x2 only then
   if (F.isZero(denominator)) return undefined;
-  const numerator = sum(F, scale(F, 3, F.mul(x1, x1)), scale(F, 2, F.mul(a2, x1)), a4, F.neg(F.mul(a1, y1)));
+  const squares = sum(F, F.mul(x1, F.add(x1, x2)), F.mul(x2, x2));
+  const numerator = sum(F, squares, F.mul(a2, F.add(x1, x2)), a4, F.neg(F.mul(a1, y1)));
   return F.mul(numerator, F.inv(denominator));
+}
+
+/** Whether a is zero, or undefined where enclosures leave it open. */
+function zeroIfKnown<T>(F: Field<T>, a: T): boolean | undefined {
+  try {
+    return F.isZero(a);
+  } catch (error) {
+    if (error instanceof UndecidedError) return undefined;
+    throw error;
+  }
 }
 
 /** n·P for any integer n, by the non-adjacent form of n (about a third of the steps are additions). */

@@ -7,10 +7,14 @@ import { type Equation, plainEquation, plainPolynomial } from "../curve/equation
 import { pointsOverX } from "../curve/lift.ts";
 import { type Coefficients, type Invariants, invariantsOf, jInvariant, residual } from "../curve/weierstrass.ts";
 import { primitive, type Rational } from "../number/rational.ts";
+import type { Complex, ComplexNumeric, Numeric, Real } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
-import { carry } from "./fields.ts";
+import { type Coordinate, carry } from "./fields.ts";
 import { type ExactInput, elementOf } from "./input.ts";
+import type { Lattice } from "./lattice.ts";
 import { Point } from "./point.ts";
+import type { TorusPoint } from "./torus-point.ts";
+import { exponentialOf, latticeOf, logarithmOf, noTorus } from "./uniformise.ts";
 
 /** What a curve was read from, where that is not the long form itself. */
 export interface Reading<T> {
@@ -31,6 +35,7 @@ export class Curve<T = Rational> {
   /** The equation the curve was given by, if it had to be rescaled. */
   readonly given: Reading<T> | undefined;
   readonly #invariants: Invariants<T>;
+  #lattice: Lattice | undefined; // made on first use, and only ever set complete
 
   /** The model must be nonsingular: `curve` checks it and explains a singular one. */
   constructor(field: Field<T>, a: Coefficients<T>, given?: Reading<T>) {
@@ -88,6 +93,52 @@ export class Curve<T = Rational> {
   /** The points with the given x over the field of the curve: none, one of order two, or two, P and −P. */
   pointsWith({ x }: { readonly x: ExactInput | T }): Point<T>[] {
     return pointsOverX(this.field, this.a, this.#element("x", x)).map((P) => new Point(this, P));
+  }
+
+  /**
+   * The period lattice Λ of dx/(2y + a1x + a3): C/Λ is the curve by x = ℘(z) − b2/12, 2y + a1x + a3 = ℘′(z), with g2 = c4/12 and
+   * g3 = c6/216. In the real basis (ω1 > 0 the least real period) for a curve over Q or R.
+   *
+   * Domain   curves over Q, a quadratic field in its embedding, R or C.
+   * Error    each digit shown is proved; more come on request, since the curve is exact.
+   */
+  lattice(): Lattice {
+    this.#lattice ??= latticeOf(this.#analytic("lattice"));
+    return this.#lattice;
+  }
+
+  /** Number of components of the real curve: 2 if Δ > 0, 1 if Δ < 0; undefined for a curve that is not real. */
+  get components(): 1 | 2 | undefined {
+    return this.lattice().realComponents;
+  }
+
+  /**
+   * z modulo Λ with exponential(z) = P.
+   *
+   * Branch   z = r·ω1 + s·ω2 with r and s in (−1/2, 1/2]: a real point has a real z on the component of O and z = ω2/2 + t on the
+   *          bounded one; points with 2y + a1x + a3 < 0 near O have small positive z. A torsion point over Q gives an exact point of
+   *          the torus, such as 3ω1/7.
+   * Throws   DomainError for a point of another curve, PrecisionError if its coordinates are too coarse.
+   */
+  logarithm(P: Point<unknown>): Real | Complex | TorusPoint {
+    const E = this.#analytic("logarithm");
+    const Q = P.minus(this.origin as Point<unknown>) as Point<Coordinate>; // checks that the curve is the same
+    return logarithmOf(E, this.lattice(), Q);
+  }
+
+  /**
+   * The point at z: real coordinates for real z, and for the exact points of the real torus; O for an exact lattice point.
+   * Throws   PoleError for a number that cannot be told from a lattice point.
+   */
+  exponential(z: Numeric): Point<Real>;
+  exponential(z: ComplexNumeric): Point<Real> | Point<Complex>;
+  exponential(z: ComplexNumeric): Point<Real> | Point<Complex> {
+    return exponentialOf(this.#analytic("exponential"), this.lattice(), z) as Point<Real>;
+  }
+
+  #analytic(subject: string): Curve<Coordinate> {
+    if (this.field.characteristic !== 0n) throw noTorus(subject, this);
+    return this as unknown as Curve<Coordinate>;
   }
 
   /** The same equation over a larger field. */

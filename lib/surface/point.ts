@@ -2,10 +2,15 @@
 
 import { rationalOrder } from "../arithmetic/order.ts";
 import { type Affine, addPoints, multiplyPoint, negatePoint, orderUpTo, samePoint } from "../curve/group.ts";
+import { valueData } from "../number/json.ts";
 import { primitive, type Rational } from "../number/rational.ts";
+import { Complex, Real } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
 import type { Curve } from "./curve.ts";
 import { carry, type Join, joinFields } from "./fields.ts";
+
+/** An exact coordinate as text, an enclosure as its data. */
+export type CoordinateData = string | ReturnType<typeof valueData>;
 
 /** A point (x, y) of a curve, or its origin O. Immutable. Made by `E.point(x, y)`, `E.origin` and the group law. */
 export class Point<T = Rational> {
@@ -98,8 +103,14 @@ export class Point<T = Rational> {
     return this.#affine ? `(${this.#affine.map((c) => this.curve.field.format(c)).join(", ")})` : "O";
   }
 
-  toJSON(): { readonly kind: "point"; readonly curve: unknown; readonly coordinates: readonly unknown[] | null } {
-    return { kind: "point", curve: this.curve, coordinates: this.#affine ?? null };
+  toJSON(): {
+    readonly kind: "point";
+    readonly curve: unknown;
+    readonly coordinates: readonly CoordinateData[] | null;
+  } {
+    const { field } = this.curve;
+    const data = (c: T) => (c instanceof Real || c instanceof Complex ? valueData(c) : field.format(c));
+    return { kind: "point", curve: this.curve.toJSON(), coordinates: this.#affine?.map(data) ?? null };
   }
 
   [Symbol.toPrimitive](hint: string): string {

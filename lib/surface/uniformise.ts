@@ -1,0 +1,116 @@
+// From a curve to its torus and back: what `E.lattice()`, `E.logarithm(P)` and `E.exponential(z)` delegate to.
+
+import { rationalOrder } from "../arithmetic/order.ts";
+import { COMPLEX_LOGARITHM, canonicalPlace, REAL_LOGARITHM, realPlace, torsionIndex } from "../curve/uniformisation.ts";
+import type { PeriodLattice } from "../lattice/period-lattice.ts";
+import { workingPrecision } from "../number/context.ts";
+import { decide } from "../number/ladder.ts";
+import { asBall, asDisc, evaluate } from "../number/origin.ts";
+import { Rational } from "../number/rational.ts";
+import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
+import { DomainError } from "../proof/errors.ts";
+import type { Curve } from "./curve.ts";
+import type { Coordinate } from "./fields.ts";
+import { coordinateOf, fieldOf, joinFields } from "./fields.ts";
+import { type Lattice, lattice } from "./lattice.ts";
+import { Point } from "./point.ts";
+import { TorusPoint } from "./torus-point.ts";
+
+/** The lattice of dx/(2y + a1x + a3): invariants c4/12 and c6/216, in the real basis if the curve is real. */
+export function latticeOf({ c4, c6 }: Curve<Coordinate>): Lattice {
+  return lattice({ invariants: [scalar(c4, "lattice").div(12), scalar(c6, "lattice").div(216)] });
+}
+
+/** ℘ and ℘′ at a point: x + b2/12 and 2y + a1x + a3. */
+function torusPlane(E: Curve<Coordinate>, [x, y]: readonly [Coordinate, Coordinate]) {
+  const F = E.field;
+  const [a1, , a3] = E.a;
+  const twelfth = F.inv(F.fromInt(12n));
+  const wp = F.add(x, F.mul(twelfth, E.b[0]));
+  const prime = F.add(F.mul(F.fromInt(2n), y), F.add(F.mul(a1, x), a3));
+  return { wp, prime };
+}
+
+/**
+ * z with E.exponential(z) = P, in the coordinates r·ω1 + s·ω2 of L with r and s in (−1/2, 1/2].
+ *
+ * A torsion point over Q gives an exact point of the torus; a real point a real number t, or ω2/2 + t on the bounded component.
+ */
+export function logarithmOf(E: Curve<Coordinate>, L: Lattice, P: Point<Coordinate>): Real | Complex | TorusPoint {
+  if (!P.coordinates) return L.at(0, 0);
+  const { wp, prime } = torusPlane(P.curve, P.coordinates);
+  const [x, y] = [scalar(wp, "logarithm"), scalar(prime, "logarithm")];
+  if (!(x instanceof Real) || !(y instanceof Real) || !L.realComponents) return complexLogarithm(L, x, y);
+  const order =
+    E.field.name === "Q" && P.curve.field.name === "Q" ? rationalOrder(E.a as never, P.coordinates as never) : Infinity;
+  if (order === 2) return halfPeriod(L, x);
+  const { bounded, index } = placeOf(L.data, x, y, order);
+  if (index !== undefined) return L.at(Rational.of(index, order), bounded ? Rational.of(1, 2) : 0);
+  const t = apply(REAL_LOGARITHM, [L.data, x, y]) as Real;
+  return bounded ? new TorusPoint(L.data, [Rational.zero, Rational.of(1, 2)], t) : t;
+}
+
+/** The component of a real point, and for torsion of order n the k with t = kω1/n, decided on the ladder. */
+function placeOf(L: PeriodLattice, x: Real, y: Real, order: number) {
+  return decide("logarithm", (prec) => {
+    const place = realPlace(L, asBall(evaluate(x, prec)), asBall(evaluate(y, prec)), prec);
+    if (!place) return undefined;
+    const index = Number.isFinite(order) ? torsionIndex(L, place.t, order, prec) : undefined;
+    return { bounded: place.bounded, index };
+  });
+}
+
+function halfPeriod(L: Lattice, x: Real): TorusPoint {
+  if (L.realComponents === 1) return L.halfPeriods[0];
+  const index = decide("logarithm", () => {
+    const hits = L.roots.map((e) => e.overlaps(x));
+    return hits.filter(Boolean).length === 1 ? hits.indexOf(true) : undefined;
+  });
+  return L.halfPeriods[index]!;
+}
+
+function complexLogarithm(L: Lattice, x: Real | Complex, y: Real | Complex): Complex {
+  const prec = workingPrecision();
+  const place = canonicalPlace(L.data, asDisc(evaluate(x, prec)), asDisc(evaluate(y, prec)), prec);
+  const anchor = new Complex(place, { standing: "exact" }).midpoint;
+  return Complex.from(apply(COMPLEX_LOGARITHM, [L.data, x, y, anchor]));
+}
+
+/**
+ * The point at z: x = ℘(z) − b2/12, y = (℘′(z) − a1x − a3)/2, with real coordinates where z is known to be on the real curve.
+ * O for a lattice point that is known exactly.
+ * Throws   PoleError for a z that cannot be told from a lattice point.
+ */
+export function exponentialOf(E: Curve<Coordinate>, L: Lattice, z: ComplexNumeric): Point<Coordinate> {
+  if (isLatticePoint(z)) return E.origin;
+  const b2 = scalar(E.b[0], "exponential");
+  const [a1, , a3] = E.a;
+  const wp = L.wp(z);
+  const x = wp.minus(b2.div(12));
+  const y = L.wp.prime(z).minus(x.times(a1)).minus(a3).div(2);
+  const [px, py] = [coordinateOf(x, "exponential"), coordinateOf(y, "exponential")];
+  const field = joinFields(joinFields(fieldOf(px), fieldOf(py))!, E.field)!;
+  const curve = E.carriedTo(field);
+  return new Point(curve, [lift(px, field.name), lift(py, field.name)]);
+}
+
+function lift(value: Coordinate, name: string): Coordinate {
+  if (name === "R") return Real.from(value as Rational | Real);
+  return name === "C" ? Complex.from(value) : value;
+}
+
+function isLatticePoint(z: ComplexNumeric): boolean {
+  if (z instanceof TorusPoint) return z.isLatticePoint;
+  const { exact } = scalar(z, "exponential");
+  return exact instanceof Rational && exact.sign() === 0;
+}
+
+/** The refusal of a lattice for a curve over a field without embedding into C. */
+export function noTorus(subject: string, E: { toString(): string }): DomainError {
+  return new DomainError({
+    subject,
+    given: `${E}`,
+    expected: "a curve over Q, a quadratic field, R or C",
+    hint: "A curve over a finite field has no periods.",
+  });
+}

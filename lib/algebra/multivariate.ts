@@ -88,7 +88,10 @@ export function coefficient<T>(F: Field<T>, f: Polynomial<T>, exponents: readonl
   return f.terms.get(pack(exponents)) ?? F.zero;
 }
 
-/** Terms with their exponents, highest total degree first, then lexicographically: the order they are printed in. */
+/**
+ * Terms with their exponents in the order they are printed in: highest total degree first, of one degree the highest single power
+ * (u³ + v³ + uvw, y² + xy), then by the letters.
+ */
 export function sortedTerms<T>(f: Polynomial<T>): { readonly coefficient: T; readonly exponents: number[] }[] {
   const list = [...f.terms].map(([key, coefficient]) => ({
     key,
@@ -96,7 +99,10 @@ export function sortedTerms<T>(f: Polynomial<T>): { readonly coefficient: T; rea
     exponents: unpack(key, f.variables.length),
   }));
   const total = (exponents: readonly number[]) => exponents.reduce((a, b) => a + b, 0);
-  list.sort((s, t) => total(t.exponents) - total(s.exponents) || t.key - s.key);
+  const highest = (exponents: readonly number[]) => Math.max(...exponents);
+  list.sort(
+    (s, t) => total(t.exponents) - total(s.exponents) || highest(t.exponents) - highest(s.exponents) || t.key - s.key,
+  );
   return list.map(({ coefficient, exponents }) => ({ coefficient, exponents }));
 }
 

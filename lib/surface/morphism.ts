@@ -1,0 +1,160 @@
+// Maps between curves: one type for changes of model, cubics and quartics to Weierstrass form, isogenies, isomorphisms, twists.
+
+import { pullbackConstant } from "../curve/map/differential.ts";
+import { type Formula, formulaOf } from "../curve/map/formula.ts";
+import { applyMap, composeMaps, type FormMap, isExceptional, isIdentity, landsOnTarget } from "../curve/map/map.ts";
+import { primitive } from "../number/rational.ts";
+import { DomainError } from "../proof/errors.ts";
+import type { Standing } from "../proof/standing.ts";
+import { Curve } from "./curve.ts";
+import { type AnyVariety, coordinatesOn, type PointOf, pointOn } from "./space.ts";
+
+/** What a map is made of. */
+export interface MorphismData<T> {
+  readonly map: FormMap<T>;
+  readonly degree: number;
+  /** What the map is called in a sentence: "change of model", "isogeny of degree 3". */
+  readonly title: string;
+  /** A point of the source by which the constant of the differential is read; O of a Weierstrass model if absent. */
+  readonly basePoint?: readonly T[];
+  /** The inverse of an isomorphism, made on demand. */
+  readonly inverse?: () => MorphismData<T>;
+}
+
+/** The functions on points, whose instances get the methods of their class. */
+class Base {
+  constructor(call: (P: never) => unknown) {
+    const callable = (P: never) => call(P);
+    // biome-ignore lint/correctness/noConstructorReturn: an instance is itself a function, and its class's methods are its methods
+    return Object.setPrototypeOf(callable, new.target.prototype);
+  }
+}
+
+const OnPoints = Base as unknown as abstract new <A, B>(call: (P: A) => B) => (P: A) => B;
+
+/**
+ * A map of curves that is called on points: phi(P), also where its formula gives 0/0: there the image is read from the curve's power
+ * series. Immutable.
+ */
+export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve> extends OnPoints<
+  PointOf<V>,
+  PointOf<W>
+> {
+  readonly from: V;
+  readonly to: W;
+  readonly degree: number;
+  readonly title: string;
+  /** The forms behind the formula, and how the inverse is made. */
+  readonly data: MorphismData<unknown>;
+
+  constructor(from: V, to: W, data: MorphismData<unknown>) {
+    super((P) => image<V, W>(from, to, data.map, P));
+    this.from = from;
+    this.to = to;
+    this.degree = data.degree;
+    this.title = data.title;
+    this.data = data;
+  }
+
+  /** The formula as data: each letter of the target as a quotient in lowest terms, or proportional forms. */
+  get formula(): Formula<unknown> {
+    return formulaOf(this.data.map, lettersOf(this.from), lettersOf(this.to));
+  }
+
+  /** c with φ*ω′ = c·ω for the invariant differentials, dx/(2y + a1x + a3) on a long Weierstrass form. */
+  get factor(): unknown {
+    const { map, basePoint } = this.data;
+    const F = map.from.field;
+    return pullbackConstant(map, basePoint ?? [F.zero, F.one, F.zero]);
+  }
+
+  /** The inverse of an isomorphism. Throws DomainError for a map of degree above 1. */
+  get inverse(): Morphism<W, V> {
+    const data = this.data.inverse?.();
+    if (!data) {
+      throw new DomainError({
+        subject: "inverse",
+        given: `a ${this.title}`,
+        expected: "an isomorphism",
+        hint: this.degree > 1 ? "An isogeny has a dual: phi.dual()." : "",
+      });
+    }
+    return new Morphism(this.to, this.from, data);
+  }
+
+  /** True if the formula itself cannot take the point (the map still can). */
+  isExceptional(P: PointOf<V>): boolean {
+    return isExceptional(this.data.map, coordinatesOn(this.from, P as never, "isExceptional"));
+  }
+
+  /** This map after another: phi.compose(psi) takes P to phi(psi(P)). */
+  compose<U extends AnyVariety>(first: Morphism<U, V>): Morphism<U, W> {
+    requireSame(first.to, this.from);
+    const map = composeMaps(first.data.map, this.data.map);
+    const [inner, outer] = [first.data.inverse, this.data.inverse];
+    const inverse =
+      inner && outer
+        ? () => composed(outer(), inner(), `inverse of a ${this.title} after a ${first.title}`)
+        : undefined;
+    const data: MorphismData<unknown> = {
+      map,
+      degree: this.degree * first.degree,
+      title: `${this.title} after a ${first.title}`,
+      ...(first.data.basePoint ? { basePoint: first.data.basePoint } : {}),
+      ...(inverse ? { inverse } : {}),
+    };
+    return new Morphism(first.from, this.to, data);
+  }
+
+  /**
+   * Exact substitution: the general image point satisfies the target's equation, and for an isomorphism both compositions are
+   * the identity. "proved", or "refuted" with what fails.
+   */
+  verify(): Standing {
+    const { map, inverse } = this.data;
+    if (!landsOnTarget(map))
+      return { kind: "refuted", evidence: "the image does not satisfy the equation of the target" };
+    if (!inverse) return { kind: "proved", argument: "exact substitution in the target's equation" };
+    const back = inverse().map;
+    const identities = landsOnTarget(back) && isIdentity(composeMaps(map, back)) && isIdentity(composeMaps(back, map));
+    return identities
+      ? { kind: "proved", argument: "exact substitution in both equations, and both compositions are the identity" }
+      : { kind: "refuted", evidence: "the map and its inverse do not compose to the identity" };
+  }
+
+  /** "change of model from y^2 = ... to y^2 = ...". */
+  override toString(): string {
+    return `${this.title} from ${this.from} to ${this.to}`;
+  }
+
+  [Symbol.toPrimitive](hint: string): string {
+    return primitive(hint, this, "map");
+  }
+}
+
+function composed(first: MorphismData<unknown>, second: MorphismData<unknown>, title: string): MorphismData<unknown> {
+  return { map: composeMaps(first.map, second.map), degree: 1, title };
+}
+
+function image<V extends AnyVariety, W extends AnyVariety>(
+  from: V,
+  to: W,
+  map: FormMap<unknown>,
+  P: PointOf<V>,
+): PointOf<W> {
+  const coordinates = coordinatesOn(from, P as never, "a map");
+  return pointOn(to, applyMap(map, coordinates)) as PointOf<W>;
+}
+
+function lettersOf(variety: AnyVariety): readonly string[] {
+  return variety instanceof Curve ? ["x", "y"] : variety.letters;
+}
+
+function requireSame(target: AnyVariety, source: AnyVariety): void {
+  if (target === source || `${target}` === `${source}`) return;
+  throw new DomainError({
+    subject: "compose",
+    given: `a map to ${target} followed by a map from ${source}`,
+    expected: "maps that meet on one curve",
+  });
+}

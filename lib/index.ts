@@ -38,6 +38,7 @@ export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/value
 
 // Lattices and curves
 
+export { type Line, PlaneCubic, type ThroughPoint } from "./surface/cubic.ts";
 export { Curve } from "./surface/curve.ts";
 export { EllipticFunction, QuasiPeriodicFunction } from "./surface/elliptic-function.ts";
 export {
@@ -48,9 +49,14 @@ export {
   lattice,
   type ReducedBasis,
 } from "./surface/lattice.ts";
+export { cubic } from "./surface/make-cubic.ts";
 export { curve } from "./surface/make-curve.ts";
+export { quartic } from "./surface/make-quartic.ts";
+export { Morphism } from "./surface/morphism.ts";
 export { Point } from "./surface/point.ts";
+export { Quartic } from "./surface/quartic.ts";
 export { TorusPoint } from "./surface/torus-point.ts";
+export { PlanePoint } from "./surface/variety.ts";
 
 // Claims
 

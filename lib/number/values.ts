@@ -262,11 +262,11 @@ export class Complex extends Value {
   }
 
   get re(): Real {
-    return realOf(apply(RE, [this], part(this.exact, "re")));
+    return realOf(apply(RE, [this], this.disc.axis === "imaginary" ? Rational.zero : part(this.exact, "re")));
   }
 
   get im(): Real {
-    return realOf(apply(IM, [this], part(this.exact, "im")));
+    return realOf(apply(IM, [this], this.disc.axis === "real" ? Rational.zero : part(this.exact, "im")));
   }
 
   plus(other: ComplexNumeric): Complex {

@@ -12,7 +12,7 @@ import { DomainError } from "../proof/errors.ts";
 import { type Coordinate, carry } from "./fields.ts";
 import { type ExactInput, elementOf } from "./input.ts";
 import type { Lattice } from "./lattice.ts";
-import { Point } from "./point.ts";
+import { type AnyPoint, Point } from "./point.ts";
 import type { TorusPoint } from "./torus-point.ts";
 import { exponentialOf, latticeOf, logarithmOf, noTorus } from "./uniformise.ts";
 
@@ -120,9 +120,9 @@ export class Curve<T = Rational> {
    *          the torus, such as 3ω1/7.
    * Throws   DomainError for a point of another curve, PrecisionError if its coordinates are too coarse.
    */
-  logarithm(P: Point<unknown>): Real | Complex | TorusPoint {
+  logarithm(P: AnyPoint): Real | Complex | TorusPoint {
     const E = this.#analytic("logarithm");
-    const Q = P.minus(this.origin as Point<unknown>) as Point<Coordinate>; // checks that the curve is the same
+    const Q = P.minus(this.origin) as Point<Coordinate>; // checks that the curve is the same
     return logarithmOf(E, this.lattice(), Q);
   }
 

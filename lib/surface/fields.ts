@@ -11,16 +11,15 @@ import { Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts"
 /** A coordinate in characteristic 0. */
 export type Coordinate = Rational | Quadratic | Real | Complex;
 
-/** The coordinates of a sum: the larger of the two fields. */
-export type Join<A, B> = [A] extends [B]
-  ? B
-  : [B] extends [A]
-    ? A
-    : Complex extends A | B
-      ? Complex
-      : Real extends A | B
-        ? Real
-        : A | B;
+/** The coordinates of a sum of points: the larger of the two fields; never for fields that have nothing in common. */
+export type Join<A, B> = [A] extends [B] ? ([B] extends [A] ? A : Larger<A, B>) : Larger<A, B>;
+type Larger<A, B> = [A | B] extends [Coordinate]
+  ? [Complex] extends [A | B]
+    ? Complex
+    : [Real] extends [A | B]
+      ? Real
+      : Quadratic
+  : never;
 
 /** The field a number belongs to: Q or Q(√d) for exact ones, else R or C. */
 export function fieldOf(value: Coordinate): Field<Coordinate> {

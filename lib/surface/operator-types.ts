@@ -4,6 +4,8 @@
 import type { Quadratic } from "../number/quadratic.ts";
 import type { Rational } from "../number/rational.ts";
 import type { Complex, Real } from "../number/values.ts";
+import type { Join } from "./fields.ts";
+import type { Point } from "./point.ts";
 
 /** No value: the operands have no such sum, product, ... */
 export interface NoOp<Operator extends string, A, B> {
@@ -105,8 +107,26 @@ type Meeting<A, B> = A extends IsComplex
             ? Quadratic
             : Rational;
 
+/** Points of elliptic curves add over the larger of their fields. */
+interface IsPoint {
+  readonly isOrigin: boolean;
+  readonly coordinates: unknown;
+}
+type FieldOf<P extends IsPoint> = Exclude<P["coordinates"], undefined> extends readonly [infer T, unknown] ? T : never;
+type PointSum<O extends string, A extends IsPoint, B extends IsPoint> = [Join<FieldOf<A>, FieldOf<B>>] extends [never]
+  ? NoOp<O, A, B>
+  : Point<Join<FieldOf<A>, FieldOf<B>>>;
+
 /** By a method of the left operand. */
-type Own<O extends "+" | "-" | "*" | "/", A, B> = O extends "+"
+type Own<O extends "+" | "-" | "*" | "/", A, B> = O extends "+" | "-"
+  ? A extends IsPoint
+    ? B extends IsPoint
+      ? PointSum<O, A, B>
+      : Method<O, A, B>
+    : Method<O, A, B>
+  : Method<O, A, B>;
+
+type Method<O extends "+" | "-" | "*" | "/", A, B> = O extends "+"
   ? A extends { plus(other: infer P): infer R }
     ? Fitting<B, P, R, Reflected<O, A, B>>
     : Reflected<O, A, B>

@@ -12,6 +12,9 @@ import { carry, type Join, joinFields } from "./fields.ts";
 /** An exact coordinate as text, an enclosure as its data. */
 export type CoordinateData = string | ReturnType<typeof valueData>;
 
+// biome-ignore lint/suspicious/noExplicitAny: a point names its field in both directions, so no other argument fits points over all fields
+export type AnyPoint = Point<any>;
+
 /** A point (x, y) of a curve, or its origin O. Immutable. Made by `E.point(x, y)`, `E.origin` and the group law. */
 export class Point<T = Rational> {
   /** The curve over the field of the coordinates. */

@@ -15,12 +15,12 @@ const COMMANDS: Readonly<Record<string, Command>> = {
     run: async (args, console) => (await import("./notebook/command/demo.ts")).demoCommand(args, console),
   },
   run: {
-    usage: "run NOTEBOOK... [--to FILE|FOLDER] [--limit SECONDS]",
+    usage: "run NOTEBOOK... [--to FILE|FOLDER] [--digits N] [--limit SECONDS]",
     purpose: "run all cells in a fresh kernel and keep the outputs",
     run: async (args, console) => (await import("./notebook/command/run.ts")).runCommand(args, console),
   },
   check: {
-    usage: "check NOTEBOOK... [--limit SECONDS] [--report FILE]",
+    usage: "check NOTEBOOK... [--digits N] [--limit SECONDS] [--report FILE]",
     purpose: "run again and compare with what is stored, by mathematics; the files stay as they are",
     run: async (args, console) => (await import("./notebook/command/check.ts")).checkCommand(args, console),
   },

@@ -11,6 +11,8 @@ export interface ExecuteFileOptions {
   readonly screen: Screen;
   /** Milliseconds a cell may take. */
   readonly limit?: number | undefined;
+  /** Proved digits to ask for, over what the notebook says. */
+  readonly digits?: number | undefined;
   /** Another kernel than this package's. */
   readonly command?: LaunchOptions["command"];
 }
@@ -24,7 +26,7 @@ export class Interrupted extends Error {
 }
 
 /** Reads the notebook, runs it in a fresh kernel started in its folder, and ends that kernel whatever happens. */
-export async function executeFile(file: string, { screen, limit, command }: ExecuteFileOptions): Promise<Run> {
+export async function executeFile(file: string, { screen, limit, digits, command }: ExecuteFileOptions): Promise<Run> {
   const notebook = await readNotebook(file);
   const progress = showProgress(path.basename(file), screen);
   const stop = stopOnSignals();
@@ -32,6 +34,7 @@ export async function executeFile(file: string, { screen, limit, command }: Exec
     const client = await KernelClient.start({
       cwd: path.dirname(path.resolve(file)),
       ...(command ? { command } : {}),
+      ...(digits === undefined ? {} : { env: { HALFPERIOD_DIGITS: String(digits) } }),
     });
     try {
       const { signal, stopped } = stop;

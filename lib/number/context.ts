@@ -10,6 +10,7 @@ interface Context {
 const MOST_DIGITS = 1_000_000;
 let settled: Context = { digits: 20 };
 let passing: Context | undefined;
+let fixed = false;
 
 /** How many proved digits a display has. */
 export function provedDigits(): number;
@@ -20,8 +21,15 @@ export function provedDigits(): number;
 export function provedDigits(n: number): number;
 export function provedDigits(n?: number): number {
   if (n === undefined) return (passing ?? settled).digits;
-  settled = { digits: checkedDigits("provedDigits", n) };
+  const digits = checkedDigits("provedDigits", n);
+  if (!fixed) settled = { digits };
   return n;
+}
+
+/** Asks for n digits whatever `provedDigits` is told later: a reader's wish that goes before the author's. */
+export function fixDigits(n: number): void {
+  settled = { digits: checkedDigits("fixDigits", n) };
+  fixed = true;
 }
 
 /** Throws DomainError unless n is a number of digits that can be asked for. */

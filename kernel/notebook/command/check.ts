@@ -5,9 +5,9 @@ import { executeFile } from "../execute-file.ts";
 import { readNotebook, writeAtomically } from "../file.ts";
 import type { Notebook } from "../format.ts";
 import { changesSince, readStamp } from "../stamp.ts";
-import { type Console, EXIT, readArguments, readLimit, UsageError } from "./console.ts";
+import { type Console, EXIT, readArguments, readDigits, readLimit, UsageError } from "./console.ts";
 
-export const CHECK_USAGE = "halfperiod check NOTEBOOK... [--limit SECONDS] [--report FILE]";
+export const CHECK_USAGE = "halfperiod check NOTEBOOK... [--digits N] [--limit SECONDS] [--report FILE]";
 
 interface Checked {
   readonly file: string;
@@ -19,14 +19,15 @@ interface Checked {
 
 /** Checks notebooks; the files are not touched. 0 if all that is stored still stands, 1 if not. */
 export async function checkCommand(args: readonly string[], { out, err }: Console): Promise<number> {
-  const { values, positionals } = readArguments(args, { values: ["limit", "report"] }, CHECK_USAGE);
+  const { values, positionals } = readArguments(args, { values: ["digits", "limit", "report"] }, CHECK_USAGE);
   if (positionals.length === 0) throw new UsageError("no notebook given", CHECK_USAGE);
   const limit = readLimit(values.limit, CHECK_USAGE);
+  const digits = readDigits(values.digits, CHECK_USAGE);
   const all: Checked[] = [];
   for (const file of positionals) {
     const stored = await readNotebook(file);
-    const { notebook } = await executeFile(file, { screen: err, limit });
-    const checked = check(file, stored, notebook);
+    const { notebook } = await executeFile(file, { screen: err, limit, digits });
+    const checked = check(file, stored, notebook, digits);
     out.write(describe(checked));
     all.push(checked);
   }
@@ -34,8 +35,8 @@ export async function checkCommand(args: readonly string[], { out, err }: Consol
   return all.every(({ finding }) => stands(finding)) ? EXIT.ok : EXIT.failed;
 }
 
-function check(file: string, stored: Notebook, fresh: Notebook): Checked {
-  const cells = compareNotebooks(stored, fresh);
+function check(file: string, stored: Notebook, fresh: Notebook, digits: number | undefined): Checked {
+  const cells = compareNotebooks(stored, fresh, digits === undefined ? {} : { digits });
   const stamp = readStamp(stored);
   return { file, finding: worst(cells).finding, since: stamp ? changesSince(stamp, stored) : [], cells };
 }

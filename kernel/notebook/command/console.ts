@@ -60,6 +60,13 @@ export function readLimit(text: string | undefined, usage: string): number | und
   return limit * 1000;
 }
 
+/** Proved digits of an option. */
+export function readDigits(text: string | undefined, usage: string): number | undefined {
+  if (text === undefined) return undefined;
+  if (!/^[1-9]\d{0,5}$/.test(text)) throw new UsageError(`--digits ${text}; expected a count, such as 80`, usage);
+  return Number(text);
+}
+
 /** The cell that stopped a run, with its error, as a person reads it in a terminal. */
 export function failedCell(name: string, total: number, { position, status, source, error }: CellReport): string {
   const code = source.split("\n").map((line, index) => `  ${String(index + 1).padStart(3)}  ${line}`);

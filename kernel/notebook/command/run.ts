@@ -5,20 +5,21 @@ import { executeFile } from "../execute-file.ts";
 import { writeNotebook } from "../file.ts";
 import { seconds } from "../progress.ts";
 import { summarise } from "../summary.ts";
-import { type Console, EXIT, failedCell, readArguments, readLimit, UsageError } from "./console.ts";
+import { type Console, EXIT, failedCell, readArguments, readDigits, readLimit, UsageError } from "./console.ts";
 
-export const RUN_USAGE = "halfperiod run NOTEBOOK... [--to FILE|FOLDER] [--limit SECONDS]";
+export const RUN_USAGE = "halfperiod run NOTEBOOK... [--to FILE|FOLDER] [--digits N] [--limit SECONDS]";
 
 /** Runs notebooks and writes their outputs into them, or elsewhere with --to. A run that fails writes nothing. */
 export async function runCommand(args: readonly string[], { out, err }: Console): Promise<number> {
-  const { values, positionals } = readArguments(args, { values: ["to", "limit"] }, RUN_USAGE);
+  const { values, positionals } = readArguments(args, { values: ["to", "digits", "limit"] }, RUN_USAGE);
   if (positionals.length === 0) throw new UsageError("no notebook given", RUN_USAGE);
   const limit = readLimit(values.limit, RUN_USAGE);
+  const digits = readDigits(values.digits, RUN_USAGE);
   const targetOf = await targets(positionals, values.to);
   let code: number = EXIT.ok;
   for (const file of positionals) {
     const started = performance.now();
-    const run = await executeFile(file, { screen: err, limit });
+    const run = await executeFile(file, { screen: err, limit, digits });
     if (run.failure) {
       err.write(failedCell(file, run.total, run.failure));
       code = EXIT.failed;

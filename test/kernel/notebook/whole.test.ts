@@ -81,6 +81,16 @@ describe("halfperiod run, check and export with the real kernel", { timeout: 60_
     ]);
   });
 
+  it("asks for other digits than the notebook: fewer are the same, not weaker; more are more", () => {
+    write("a.ipynb", "provedDigits(40); π.div(3)");
+    const more = halfperiod("run", "a.ipynb", "--digits", "70");
+    expect(more).toMatchObject({ status: 0, stdout: expect.stringMatching(/1 with [78]\d or more/) });
+    const fewer = halfperiod("check", "a.ipynb", "--digits", "25");
+    expect(fewer).toMatchObject({ status: 0, stdout: "a.ipynb: stands (1 cells: 1 same)\n" });
+    const asWritten = halfperiod("check", "a.ipynb");
+    expect(asWritten).toMatchObject({ status: 1, stdout: expect.stringContaining("digits are proved, ") });
+  });
+
   it("stops on Ctrl-C in an endless cell, says so, writes nothing, leaves no process", async () => {
     const file = write("a.ipynb", "1", "while (true) {}");
     const before = read(file);

@@ -20,6 +20,8 @@ export interface Death {
 
 const FATAL_HEAP = /FATAL ERROR: .*(?:heap|memory|allocation)|<--- Last few GCs --->/;
 
+const PEEK_TIME = 150;
+
 /** Node says this at exit because the stop protocol holds an inspector session; no debugger is there. */
 const INSPECTOR_NOTE = "Waiting for the debugger to disconnect...\n";
 
@@ -31,6 +33,8 @@ export class CellsClient {
   readonly #died: Promise<Death>;
   #done: ((done: Done | Death) => void) | undefined;
   #cell = 0;
+  #peeks = 0;
+  readonly #peeking = new Map<number, (text: string | undefined) => void>();
   #outOfMemory = false;
   #words = "";
   #busy: Promise<unknown> = Promise.resolve();
@@ -77,6 +81,26 @@ export class CellsClient {
 
   answer(value: string | null): void {
     this.#send({ kind: "answer", value });
+  }
+
+  /** The value of a variable as text; undefined while a cell runs, or if there is no answer in time. */
+  peek(name: string): Promise<string | undefined> {
+    if (this.#done || !this.alive) return Promise.resolve(undefined);
+    const id = ++this.#peeks;
+    return new Promise((resolve) => {
+      const late = setTimeout(() => this.#peeked(id, undefined), PEEK_TIME);
+      this.#peeking.set(id, (text) => {
+        clearTimeout(late);
+        resolve(text);
+      });
+      this.#send({ kind: "peek", id, name });
+    });
+  }
+
+  #peeked(id: number, text: string | undefined): void {
+    const waiting = this.#peeking.get(id);
+    this.#peeking.delete(id);
+    waiting?.(text);
   }
 
   /** Asks the watchdog to stop a cell. */
@@ -133,6 +157,7 @@ export class CellsClient {
       // Behind the output that is still on its way to the reader.
       void this.#busy.then(() => done?.(report));
     } else if (report.kind === "leaving") this.#words = report.words;
+    else if (report.kind === "peeked") this.#peeked(report.id, report.text);
     else if (report.kind !== "ready") {
       const { kind, ...rest } = report;
       this.#emit({ type: kind, ...rest } as CellEvent, pipe);

@@ -1,5 +1,6 @@
 // What the processes of a session say to each other.
 import type { Completeness, CompletionList, ErrorReport, MimeBundle } from "./port.ts";
+import type { Inspection } from "./types/inspect.ts";
 import type { SourceMapData } from "./types/sourcemap.ts";
 
 /** A cell ready to run. */
@@ -42,7 +43,7 @@ export interface TypesAnswers {
   reset: null;
   restore: null;
   complete: CompletionList;
-  inspect: MimeBundle | null;
+  inspect: Inspection | null;
   isComplete: Completeness;
 }
 
@@ -64,7 +65,9 @@ export type ChildCommand =
       /** Of a user expression: events and names are not wanted. */
       readonly quiet: boolean;
     }
-  | { readonly kind: "answer"; readonly value: string | null };
+  | { readonly kind: "answer"; readonly value: string | null }
+  /** Asks for the value of a variable, as text. */
+  | { readonly kind: "peek"; readonly id: number; readonly name: string };
 
 /** From the child, on descriptor 4. */
 export type ChildReport =
@@ -81,6 +84,7 @@ export type ChildReport =
   | { readonly kind: "clear"; readonly cell: number; readonly wait: boolean }
   | { readonly kind: "input"; readonly cell: number; readonly prompt: string; readonly password: boolean }
   | { readonly kind: "leaving"; readonly words: string }
+  | { readonly kind: "peeked"; readonly id: number; readonly text: string }
   | {
       readonly kind: "done";
       readonly cell: number;

@@ -26,6 +26,13 @@ export function createCellSession(options: CellSessionOptions): CellSession {
   return new NotebookSession(options);
 }
 
+/** The current value behind what the types say. */
+function withValue(data: MimeBundle, value: string): MimeBundle {
+  const plain = `${data["text/plain"]}\n\n= ${value}`;
+  const markdown = `${data["text/markdown"]}\n\n\`\`\`text\n= ${value}\n\`\`\``;
+  return { ...data, "text/plain": plain, "text/markdown": markdown };
+}
+
 /** One cell on its way. */
 interface Current {
   readonly cell: number;
@@ -96,7 +103,9 @@ class NotebookSession implements CellSession {
 
   async inspect(code: string, offset: number, detail: 0 | 1): Promise<MimeBundle | undefined> {
     const found = await this.#types.ask({ kind: "inspect", code, offset, detail }).catch(() => null);
-    return found ?? undefined;
+    if (!found) return undefined;
+    const value = found.name === undefined ? undefined : await this.#cells?.peek(found.name);
+    return value === undefined ? found.data : withValue(found.data, value);
   }
 
   isComplete(code: string): Promise<Completeness> {

@@ -15,6 +15,7 @@ import { Runner } from "./runner.ts";
 import { PONG, SHARED_LENGTH, type WatchdogMessage } from "./shared.ts";
 import { Stopper } from "./stop.ts";
 import { captureStreams } from "./streams.ts";
+import { guardTimers } from "./timers.ts";
 import { formatter } from "./value.ts";
 
 const cwd = process.argv[2] ?? process.cwd();
@@ -66,6 +67,7 @@ function readCommands(runner: Runner, answer: (value: string | null) => void): v
     for (const line of reader.push(chunk)) {
       const command = JSON.parse(line) as ChildCommand;
       if (command.kind === "run") runner.run(command);
+      else if (command.kind === "peek") runner.peek(command.id, command.name);
       else answer(command.value);
     }
   });
@@ -75,6 +77,7 @@ function main(): void {
   process.chdir(cwd);
   reportStrays();
   captureStreams(reporter);
+  guardTimers();
   const modules = new Modules(cwd, library);
   const bundle = formatter(bundler);
   const stops = new Stopper({ frames, shared, critical: () => reporter.critical });

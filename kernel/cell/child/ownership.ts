@@ -5,10 +5,12 @@ import { AsyncLocalStorage } from "node:async_hooks";
 export interface Owner {
   readonly cell: number;
   readonly allowStdin: boolean;
+  /** The cell was interrupted: its timers do nothing more. */
+  stopped: boolean;
 }
 
 const storage = new AsyncLocalStorage<Owner>();
-let latest: Owner = { cell: 0, allowStdin: false };
+let latest: Owner = { cell: 0, allowStdin: false, stopped: false };
 
 /** Runs `body` as the start of a cell. */
 export function own<T>(owner: Owner, body: () => T): T {

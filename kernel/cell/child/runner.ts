@@ -9,7 +9,7 @@ import { Execution, Interrupted } from "./execution.ts";
 import { failure, frameLines } from "./failure.ts";
 import type { Frame, Frames } from "./frames.ts";
 import type { Modules } from "./modules.ts";
-import { own } from "./ownership.ts";
+import { type Owner, own } from "./ownership.ts";
 import type { Reporter } from "./report.ts";
 import { CELL, FIRING, IDLE, LEFT, PHASE, SYNC } from "./shared.ts";
 import type { Shown } from "./value.ts";
@@ -19,6 +19,8 @@ type RunCommand = Extract<ChildCommand, { kind: "run" }>;
 /** How long an interrupted cell may take for its `finally` parts. */
 const GRACE = 300;
 const SIGNAL_TIME = 1000;
+const INTERRUPTED = "Interrupted";
+const LONGEST_PEEK = 2000;
 
 /** What the stop protocol has done last. */
 export interface Stops {
@@ -41,6 +43,7 @@ export interface RunnerParts {
 interface Running {
   readonly command: RunCommand;
   readonly execution: Execution;
+  readonly owner: Owner;
   interruptedAt: number;
 }
 
@@ -70,7 +73,8 @@ export class Runner {
     const { cell, emitted } = command;
     const { modules, boxes, shared } = this.#parts;
     const execution = new Execution(modules);
-    const running: Running = { command, execution, interruptedAt: 0 };
+    const owner = { cell, allowStdin: command.allowStdin, stopped: false };
+    const running: Running = { command, execution, owner, interruptedAt: 0 };
     this.#running = running;
     Atomics.store(shared, CELL, cell);
     if (this.#interruptEarly === cell || this.#parts.stops.stopped === cell) {
@@ -80,7 +84,7 @@ export class Runner {
     try {
       const body = this.#compile(command);
       const args = emitted.boxes.map((box) => boxes.get(box.name, box.origin));
-      own({ cell, allowStdin: command.allowStdin }, () => {
+      own(owner, () => {
         const attempt = this.#guarded(() => body.call(undefined, execution, ...args), running);
         if (attempt) this.#follow(running, attempt);
       });
@@ -174,6 +178,7 @@ export class Runner {
   #finish(running: Running, error?: ErrorReport, result?: Shown): void {
     if (running.execution.closed) return;
     running.execution.closed = true;
+    running.owner.stopped = error?.ename === INTERRUPTED;
     const { shared, reporter } = this.#parts;
     if (this.#running === running) {
       this.#running = undefined;
@@ -183,6 +188,14 @@ export class Runner {
     const { cell } = running.command;
     const defined = [...running.execution.defined];
     reporter.send({ kind: "done", cell, defined, ...(error && { error }), ...(result && { result }) });
+  }
+
+  /** Reports the text of a variable; formatting runs no code of the user. */
+  peek(id: number, name: string): void {
+    const { boxes, bundle, reporter } = this.#parts;
+    const { v } = boxes.get(name, "notebook");
+    const text = v === undefined ? "undefined" : String(bundle(v).data["text/plain"]);
+    reporter.send({ kind: "peeked", id, text: text.slice(0, LONGEST_PEEK) });
   }
 
   /** First step of an interrupt, from the watchdog: rejects what the cell awaits. */
@@ -211,7 +224,7 @@ export class Runner {
 export function interruptReport(place: readonly Frame[]): ErrorReport {
   const evalue = "the cell was stopped; variables keep the values that they had at that moment";
   return {
-    ename: "Interrupted",
+    ename: INTERRUPTED,
     evalue,
     traceback: [`\u001b[31mInterrupted\u001b[0m: ${evalue}`, ...frameLines(place)],
   };

@@ -13,6 +13,8 @@ export interface Draft {
   readonly file: string;
   readonly edited: EditedText;
   readonly parsed: Outline;
+  /** Name of the operators' module in the text. */
+  readonly operators: string;
 }
 
 /** Puts the text of a draft before the checker. */
@@ -23,5 +25,5 @@ export function draft(types: NotebookTypes, code: string): Draft {
   const edited = new EditedText(code, inOrder(edits));
   const around = surroundings(() => true, parsed.declared, types.names, types.libraryNames());
   types.host.setCell(DRAFT, `${edited.text}${around.text}\n${operatorImport(operators)}`, true);
-  return { file: types.host.cellFile(DRAFT), edited, parsed };
+  return { file: types.host.cellFile(DRAFT), edited, parsed, operators };
 }

@@ -10,15 +10,28 @@ export class TestNotebook {
   readonly cwd: string;
   readonly session: CellSession;
   #cell = 0;
+  #hear: () => void = () => {};
 
   constructor(options: { cwd?: string; memoryLimit?: number } = {}) {
     this.cwd = options.cwd ?? mkdtempSync(join(tmpdir(), "cells-"));
     this.session = createCellSession({
       cwd: this.cwd,
-      onEvent: (event) => void this.events.push(event),
+      onEvent: (event) => {
+        this.events.push(event);
+        this.#hear();
+      },
       ...(options.memoryLimit !== undefined && { memoryLimit: options.memoryLimit }),
     });
     this.session.start();
+  }
+
+  /** Waits until the last cell has reported something. */
+  async begun(): Promise<void> {
+    while (!this.events.some((event) => event.cell === this.#cell)) {
+      await new Promise<void>((resolve) => {
+        this.#hear = resolve;
+      });
+    }
   }
 
   /** Number of the last cell that was run. */

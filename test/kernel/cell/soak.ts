@@ -69,7 +69,9 @@ export async function soak(notebook: TestNotebook, { rounds, seed, hook }: SoakO
     const [name, code] = HANGING[Math.floor(next() * HANGING.length)] as (typeof HANGING)[number];
     const delay = Math.floor(next() * next() * 80);
     let asked = 0;
-    const running = notebook.run(code);
+    // The mark is printed when the cell begins: the delay is of its run, not of its check.
+    const running = notebook.run(`process.stdout.write("begun"); ${code}`);
+    await notebook.begun();
     setTimeout(() => {
       asked = Date.now();
       notebook.session.interrupt();

@@ -40,7 +40,7 @@ export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/value
 
 export { type Line, PlaneCubic, type ThroughPoint } from "./surface/cubic.ts";
 export { Curve } from "./surface/curve.ts";
-export { EllipticFunction, QuasiPeriodicFunction } from "./surface/elliptic-function.ts";
+export { EllipticFunction, type FunctionPoint } from "./surface/elliptic-function.ts";
 export {
   type IntegerMatrix,
   Lattice,
@@ -49,12 +49,14 @@ export {
   lattice,
   type ReducedBasis,
 } from "./surface/lattice.ts";
+export { LaurentExpansion } from "./surface/laurent-expansion.ts";
 export { cubic } from "./surface/make-cubic.ts";
 export { curve } from "./surface/make-curve.ts";
 export { quartic } from "./surface/make-quartic.ts";
 export { Morphism } from "./surface/morphism.ts";
 export { Point } from "./surface/point.ts";
 export { Quartic } from "./surface/quartic.ts";
+export { QuasiPeriodicFunction } from "./surface/quasi-periodic-function.ts";
 export { TorusPoint } from "./surface/torus-point.ts";
 export { PlanePoint } from "./surface/variety.ts";
 

@@ -21,8 +21,9 @@ import { invariants, periods, quasiPeriods, reduced, roots } from "./context.ts"
 import { latticePointText } from "./coordinates-text.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
 import { exactRational } from "./quantity.ts";
+import { logarithm } from "./real-logarithm.ts";
 import { pointAt, valuesAtPoint } from "./torus.ts";
-import { logarithm, weierstrassValues } from "./values.ts";
+import { weierstrassValues } from "./values.ts";
 
 function real(d: Disc): Enclosure {
   return d.axis === "real" ? disc.along(d) : d;
@@ -135,7 +136,7 @@ function atPoint(name: string, wanted: Wanted): Operation {
 }
 
 /** Tries again with more bits of the argument where a pole cannot be told from it. */
-function persistent(
+export function persistent(
   lattice: PeriodLattice,
   name: string,
   z: unknown,

@@ -8,7 +8,7 @@ import * as disc from "../number/disc.ts";
 import { PrecisionError } from "../proof/errors.ts";
 import { periods, roots } from "./context.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
-import { logarithm } from "./values.ts";
+import { planeLogarithm } from "./values.ts";
 
 /** z = t on the identity component, z = t + ω2/2 on the bounded one; −ω1/2 <= t <= ω1/2 up to the radius. */
 export interface RealLogarithm {
@@ -22,7 +22,7 @@ export interface RealLogarithm {
  * Domain   a lattice in its real basis (given by real invariants), x and y real.
  * Branch   the representative nearest to 0 or to ω2/2; y < 0 for small t > 0.
  * Error    an enclosure of t, about 2^−prec relative to it where x and y have the digits.
- * Cost     that of `logarithm`.
+ * Cost     that of `planeLogarithm`.
  * Throws   PrecisionError if the enclosures do not tell the component or fit no point.
  */
 export function realLogarithm(lattice: PeriodLattice, x: Ball, y: Ball, prec: number): RealLogarithm {
@@ -30,7 +30,7 @@ export function realLogarithm(lattice: PeriodLattice, x: Ball, y: Ball, prec: nu
   const point = { x: disc.fromBall(x), y: disc.fromBall(y) };
   let wp = prec;
   for (;;) {
-    const t = ontoCircle(lattice, logarithm(lattice, point, wp), component, wp);
+    const t = ontoCircle(lattice, planeLogarithm(lattice, point, wp), component, wp);
     // t near 0 on a long cell may have lost bits to the shift; not more than wp again.
     if (ball.bits(t) >= prec - 4 || wp > prec) return { component, t: ball.round(t, prec) };
     wp = prec + Math.max(16, prec - ball.bits(t));
@@ -64,4 +64,27 @@ function ontoCircle(lattice: PeriodLattice, z: Disc, component: "identity" | "bo
   const lifted = disc.real(disc.sub(rest, disc.mulInt(w2, n, wp), wp));
   const m = nearestInteger(ball.div(lifted, disc.real(w1), 64));
   return ball.sub(lifted, ball.mulInt(disc.real(w1), m, wp), wp);
+}
+
+/**
+ * z modulo Λ with ℘(z) = x and ℘′(z) = y.
+ *
+ * Branch   for real x and y and a lattice in its real basis, t or t + ω2/2 with a real t as in `realLogarithm`; with imaginary y a number
+ *          whose real part is a multiple of ω1/2; else a representative near the cell around 0 of the reduced basis.
+ * Error    and the rest as for `planeLogarithm`.
+ */
+export function logarithm(lattice: PeriodLattice, point: { readonly x: Disc; readonly y: Disc }, prec: number): Disc {
+  const { x, y } = point;
+  const symmetric = lattice.given.kind === "invariants" && lattice.components !== undefined && x.axis === "real";
+  if (symmetric && y.axis === "real") {
+    const { component, t } = realLogarithm(lattice, disc.along(x), disc.along(y), prec + 8);
+    if (component === "identity") return disc.fromBall(ball.round(t, prec));
+    return disc.add(disc.fromBall(t), disc.ldexp(periods(lattice, prec + 8).w2, -1), prec);
+  }
+  const z = planeLogarithm(lattice, point, prec + 8);
+  if (!symmetric || y.axis !== "imaginary") return disc.round(z, prec);
+  const half = ball.ldexp(disc.real(periods(lattice, prec + 8).w1), -1);
+  const k = nearestInteger(ball.div(disc.real(z), half, 64));
+  const re = ball.mulInt(half, k, prec + 8);
+  return disc.round(disc.add(disc.fromBall(re), disc.imaginary(disc.imag(z)), prec + 8), prec);
 }

@@ -45,14 +45,18 @@ export function exponential(lattice: PeriodLattice, z: Disc, prec: number): { re
 }
 
 /**
- * z modulo Λ with ℘(z) = x and ℘′(z) = y, as an enclosure near the cell around 0 of the reduced basis.
+ * z modulo Λ with ℘(z) = x and ℘′(z) = y, as an enclosure near the cell around 0 of the reduced basis; see `logarithm` for real points.
  *
  * Domain   points of ℘′² = 4℘³ − g2 ℘ − g3, as enclosures that hold one.
  * Branch   the sign of y decides between z and −z.
  * Error    certified by the group law; see function/inverse.ts.
  * Throws   PrecisionError where x and y are too coarse or belong to no point.
  */
-export function logarithm(lattice: PeriodLattice, point: { readonly x: Disc; readonly y: Disc }, prec: number): Disc {
+export function planeLogarithm(
+  lattice: PeriodLattice,
+  point: { readonly x: Disc; readonly y: Disc },
+  prec: number,
+): Disc {
   const wp = prec + 16;
   return ellipticLogarithm(reduced(lattice, wp), invariants(lattice, wp + 32).g2, point, prec);
 }

@@ -1,60 +1,275 @@
-import { LatticePointError, type Wanted } from "../function/weierstrass.ts";
+import type { Wanted } from "../function/weierstrass.ts";
 import { rationalRoot } from "../lattice/exact-roots.ts";
-import { WEIERSTRASS } from "../lattice/operations.ts";
+import { type DivisorPoint, divisorOf } from "../lattice/field/divisor.ts";
+import {
+  addElements,
+  constantElement,
+  deriveElement,
+  type Element,
+  fieldOf,
+  invElement,
+  isZeroElement,
+  mulElements,
+  negElement,
+  sameElement,
+  wpElement,
+} from "../lattice/field/element.ts";
+import { type Expression, expressionOf, PLACE, VALUE, VALUE_AT_POINT } from "../lattice/field/operations.ts";
+import { exactOf } from "../lattice/field/scalar.ts";
+import { elementText } from "../lattice/field/text.ts";
+import { LOGARITHM, WEIERSTRASS } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
 import { Rational } from "../number/rational.ts";
-import { apply, type Complex, type ComplexNumeric, type Real, scalar } from "../number/values.ts";
+import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
+import type { ConventionKey } from "../proof/conventions.ts";
+import { DomainError, UndecidedError } from "../proof/errors.ts";
 import { Callable } from "./callable.ts";
+import { constantValue, scalarOf } from "./constant.ts";
+import { rememberDivisorPoint } from "./divisor-points.ts";
+import { type LaurentExpansion, laurentExpansion, valueAtLatticePoint } from "./laurent-expansion.ts";
 import { TorusPoint } from "./torus-point.ts";
 
-/** An elliptic function of a lattice: a value that is called as f(z). */
+/** A zero or a pole: a point of the torus, with its multiplicity. */
+export interface FunctionPoint {
+  readonly point: TorusPoint | Complex;
+  readonly multiplicity: number;
+}
+
+/**
+ * An elliptic function of a lattice: a value that is called as f(z), computed with exactly, and asked for its zeros, poles and series.
+ * It is kept as (A(℘) + B(℘)℘′)/D(℘).
+ */
 export class EllipticFunction extends Callable {
   readonly lattice: PeriodLattice;
-  readonly kind: "wp" | "prime";
+  readonly expression: Expression;
 
-  constructor(lattice: PeriodLattice, kind: "wp" | "prime") {
-    super((z) => evaluate(lattice, kind, z));
-    this.lattice = lattice;
-    this.kind = kind;
+  constructor(element: Element) {
+    const expression = expressionOf(element);
+    super((z) => evaluate(expression, z));
+    this.lattice = element.field.lattice;
+    this.expression = expression;
   }
 
-  /** ℘′ for ℘. */
+  /** ℘ of a lattice. */
+  static wp(lattice: PeriodLattice): EllipticFunction {
+    return new EllipticFunction(wpElement(fieldOf(lattice)));
+  }
+
+  plus(other: EllipticFunction | ComplexNumeric): EllipticFunction {
+    return new EllipticFunction(addElements(this.element, elementOf(this, other)));
+  }
+
+  minus(other: EllipticFunction | ComplexNumeric): EllipticFunction {
+    return new EllipticFunction(addElements(this.element, negElement(elementOf(this, other))));
+  }
+
+  times(other: EllipticFunction | ComplexNumeric): EllipticFunction {
+    return new EllipticFunction(mulElements(this.element, elementOf(this, other)));
+  }
+
+  /** Throws DomainError for the zero function. */
+  div(other: EllipticFunction | ComplexNumeric): EllipticFunction {
+    return new EllipticFunction(mulElements(this.element, inverse(elementOf(this, other))));
+  }
+
+  neg(): EllipticFunction {
+    return new EllipticFunction(negElement(this.element));
+  }
+
+  /** An integer power. */
+  pow(n: number): EllipticFunction {
+    if (!Number.isSafeInteger(n)) {
+      throw new DomainError({ subject: "pow", given: `the exponent ${n}`, expected: "an integer", argument: "n" });
+    }
+    const base = n < 0 ? inverse(this.element) : this.element;
+    let result = constantElement(base.field, base.field.ring.one);
+    for (let k = 0; k < Math.abs(n); k++) result = mulElements(result, base);
+    return new EllipticFunction(result);
+  }
+
+  /** The derivative by z: ℘′ for ℘. */
   get prime(): EllipticFunction {
-    return new EllipticFunction(this.lattice, "prime");
+    return this.derivative(1);
+  }
+
+  /** The n-th derivative by z, n >= 0. */
+  derivative(n = 1): EllipticFunction {
+    if (!(Number.isSafeInteger(n) && n >= 0)) {
+      throw new DomainError({ subject: "derivative", given: `n = ${n}`, expected: "an integer n >= 0", argument: "n" });
+    }
+    let element = this.element;
+    for (let k = 0; k < n; k++) element = deriveElement(element);
+    return new EllipticFunction(element);
+  }
+
+  /**
+   * Whether both are the same function: yes by equal normal forms, no by different ones over exact numbers or by disjoint values.
+   * Throws UndecidedError if neither can be shown, TypeError for functions of different lattices.
+   */
+  equals(other: EllipticFunction | ComplexNumeric): boolean {
+    const difference = addElements(this.element, negElement(elementOf(this, other)));
+    if (isZeroElement(difference)) return true;
+    return !differs(new EllipticFunction(difference));
+  }
+
+  /** Number of poles in a cell with multiplicity, which is that of the zeros; 0 for a constant. */
+  get order(): number {
+    return this.poles.reduce((sum, { multiplicity }) => sum + multiplicity, 0);
+  }
+
+  /** The zeros of a cell; none for a constant. Exact half-periods and lattice points come as exact points. */
+  get zeros(): readonly FunctionPoint[] {
+    return this.divisor(1);
+  }
+
+  get poles(): readonly FunctionPoint[] {
+    return this.divisor(-1);
+  }
+
+  private divisor(sign: 1 | -1): FunctionPoint[] {
+    if (isZeroElement(this.element)) {
+      throw new DomainError({ subject: "zeros", given: "the function 0", expected: "a function that is not 0" });
+    }
+    const { atOrigin, points } = divisorOf(this.element);
+    const list = points
+      .filter(({ order }) => order * sign > 0)
+      .map((at) => ({ point: pointOf(this, at), multiplicity: Math.abs(at.order) }));
+    const origin = {
+      point: new TorusPoint(this.lattice, [Rational.zero, Rational.zero]),
+      multiplicity: atOrigin * sign,
+    };
+    return origin.multiplicity > 0 ? [origin, ...list] : list;
+  }
+
+  /**
+   * The Laurent series at p with n coefficients from the leading one, exact where the function and the point are.
+   * Throws PoleError where a pole cannot be told from p: take p from `poles`.
+   */
+  laurent(p: ComplexNumeric, n = 8): LaurentExpansion {
+    return laurentExpansion(this.expression, p, n);
+  }
+
+  /** The coefficient of 1/(z − p). */
+  residue(p: ComplexNumeric): Real | Complex {
+    return laurentExpansion(this.expression, p, 1).residue;
+  }
+
+  /**
+   * z with ℘(z) = w; for ℘ only.
+   *
+   * Branch   z modulo the lattice is fixed up to sign by w; `prime`, the value of ℘′ there, settles the sign. Without it ℘′ = −√(4w³ − g2 w − g3)
+   *          by the principal root, so that a large w > 0 has a small z > 0.
+   */
+  inverse(w: ComplexNumeric, options: { readonly prime?: ComplexNumeric } = {}): Complex {
+    if (!sameElement(this.element, wpElement(this.element.field))) {
+      throw new DomainError({
+        subject: "inverse",
+        given: `${this}`,
+        expected: "the function ℘",
+        hint: "Solve for ℘ first.",
+      });
+    }
+    const x = scalar(w, "inverse");
+    const prime = options.prime === undefined ? principalPrime(this, x) : scalar(options.prime, "inverse");
+    return Complex.from(apply(LOGARITHM, [this.lattice, x, prime]));
+  }
+
+  get element(): Element {
+    return this.expression.element;
+  }
+
+  get conventions(): readonly ConventionKey[] {
+    return ["cubic"];
+  }
+
+  /** The function as a formula in ℘ and ℘′. */
+  override toString(): string {
+    return elementText(this.element);
   }
 }
 
-/** ζ or σ: not elliptic, but with a known change under each period. */
-export class QuasiPeriodicFunction extends Callable {
-  readonly lattice: PeriodLattice;
-  readonly kind: "zeta" | "sigma";
-
-  constructor(lattice: PeriodLattice, kind: "zeta" | "sigma") {
-    super((z) => evaluate(lattice, kind, z));
-    this.lattice = lattice;
-    this.kind = kind;
-  }
+function inverse(element: Element): Element {
+  if (!isZeroElement(element)) return invElement(element);
+  throw new DomainError({ subject: "div", given: "the function 0 as divisor", expected: "a function that is not 0" });
 }
 
-function evaluate(lattice: PeriodLattice, kind: Wanted, z: ComplexNumeric): Real | Complex {
+function elementOf(f: EllipticFunction, other: EllipticFunction | ComplexNumeric): Element {
+  if (other instanceof EllipticFunction) {
+    if (other.lattice === f.lattice) return other.element;
+    throw new TypeError("elliptic function: got functions of two lattices; expected functions of one lattice");
+  }
+  const { field } = f.element;
+  const { scalar: value, constants } = scalarOf(field, scalar(other, "elliptic function"));
+  return constantElement(field, value, constants);
+}
+
+/** Whether a function whose normal form is not 0 is not the function 0: no by a nonzero value, for named constants may be related. */
+function differs(f: EllipticFunction): true {
+  const { A, B } = f.element;
+  if ([...A, ...B].every((c) => [...c.values()].every(({ powers }) => powers.length === 0))) return true;
+  for (const [r, s] of [
+    [1n, 3n],
+    [2n, 7n],
+    [3n, 11n],
+  ] as const) {
+    const value = f(new TorusPoint(f.lattice, [Rational.of(r, 5n), Rational.of(s, 13n)]));
+    if (!value.overlaps(0)) return true;
+  }
+  throw new UndecidedError({
+    subject: "elliptic function",
+    given: `two functions whose difference ${f} cannot be told from 0`,
+    expected: "functions that an exact argument or their values tell apart",
+  });
+}
+
+function pointOf(f: EllipticFunction, at: DivisorPoint): TorusPoint | Complex {
+  const half = Rational.of(1, 2);
+  const zero = Rational.zero;
+  if (at.halfPeriod)
+    return new TorusPoint(f.lattice, [at.halfPeriod === 3 ? zero : half, at.halfPeriod === 1 ? zero : half]);
+  const point = Complex.from(apply(PLACE, [f.expression, at]));
+  rememberDivisorPoint(point, at);
+  return point;
+}
+
+function principalPrime(wp: EllipticFunction, x: Real | Complex): Real | Complex {
+  const square = wp.prime.pow(2);
+  const value = squareAt(square.element, x);
+  return (value instanceof Real && value.sign() !== -1 ? value.sqrt() : Complex.from(value).sqrt()).neg();
+}
+
+/** 4x³ − g2 x − g3 at a number. */
+function squareAt({ field, A }: Element, x: Real | Complex): Real | Complex {
+  const expression = expressionOf(constantElement(field, field.ring.zero));
+  return A.reduceRight<Real | Complex>((sum, c) => sum.times(x).plus(constantValue(expression, c)), Real.from(0));
+}
+
+function evaluate(expression: Expression, z: ComplexNumeric): Real | Complex {
+  const { element } = expression;
+  const { lattice } = element.field;
+  const kind = weierstrassKind(element);
   if (!(z instanceof TorusPoint && z.lattice === lattice)) {
-    return apply(WEIERSTRASS[kind].number, [lattice, scalar(z, kind)]);
+    const number = scalar(z, "elliptic function");
+    return kind ? apply(WEIERSTRASS[kind].number, [lattice, number]) : apply(VALUE, [expression, number]);
   }
-  if (z.isLatticePoint && kind !== "sigma") throw poleAt(z, kind);
-  const rest = z.remainder ? [z.remainder] : [];
-  return apply(WEIERSTRASS[kind].point, [lattice, ...z.coordinates, ...rest], exactValue(z, kind));
+  if (z.isLatticePoint) return valueAtLatticePoint(expression, z, kind ?? "elliptic function");
+  const at = [...z.coordinates, ...(z.remainder ? [z.remainder] : [])];
+  if (kind) return apply(WEIERSTRASS[kind].point, [lattice, ...at], exactValue(z, kind));
+  return apply(VALUE_AT_POINT, [expression, ...at]);
 }
 
-/** Values that symmetry alone settles: ℘′ at the half-periods (and ℘ there, if it is rational), σ at lattice points. */
+/** ℘ and ℘′ themselves have operations of their own. */
+function weierstrassKind({ A, B, D }: Element): "wp" | "prime" | undefined {
+  if (D.length !== 1) return undefined;
+  const isOne = (c: Element["A"][number] | undefined) => c !== undefined && exactOf(c)?.toString() === "1";
+  if (B.length === 0 && A.length === 2 && A[0]!.size === 0 && isOne(A[1])) return "wp";
+  return A.length === 0 && B.length === 1 && isOne(B[0]) ? "prime" : undefined;
+}
+
+/** Values that symmetry alone settles: ℘′ is 0 at the half-periods, ℘ a root, exactly if it is rational. */
 function exactValue(z: TorusPoint, kind: Wanted): Rational | undefined {
-  if (kind === "sigma") return z.isLatticePoint ? Rational.zero : undefined;
-  if (z.order !== 2n || kind === "zeta") return undefined;
+  if (z.order !== 2n || kind === "zeta" || kind === "sigma") return undefined;
   if (kind === "prime") return Rational.zero;
   const [first, second] = z.coordinates.map((q) => !q.isInteger());
   return rationalRoot(z.lattice, first ? (second ? 2 : 1) : 3);
-}
-
-function poleAt(z: TorusPoint, kind: string): LatticePointError {
-  const [m, n] = z.coordinates;
-  return new LatticePointError(m.num, n.num, z.name, kind);
 }

@@ -20,7 +20,8 @@ import { Rational } from "../number/rational.ts";
 import { apply, Complex, type ComplexNumeric, type Numeric, Real, scalar } from "../number/values.ts";
 import type { ConventionKey } from "../proof/conventions.ts";
 import { DomainError, UndecidedError } from "../proof/errors.ts";
-import { EllipticFunction, QuasiPeriodicFunction } from "./elliptic-function.ts";
+import { EllipticFunction } from "./elliptic-function.ts";
+import { QuasiPeriodicFunction } from "./quasi-periodic-function.ts";
 import { TorusPoint } from "./torus-point.ts";
 
 /** The ways to give a lattice; numbers of one pair or triple are given together. */
@@ -71,7 +72,7 @@ export class Lattice {
   constructor(data: PeriodLattice, notice?: string) {
     this.data = data;
     this.notice = notice;
-    this.wp = new EllipticFunction(data, "wp");
+    this.wp = EllipticFunction.wp(data);
     this.zeta = new QuasiPeriodicFunction(data, "zeta");
     this.sigma = new QuasiPeriodicFunction(data, "sigma");
   }

@@ -1,0 +1,109 @@
+// Values of elliptic functions, their zeros and their series, as operations that a value records.
+
+import type { Disc } from "../../number/disc.ts";
+import * as disc from "../../number/disc.ts";
+import { type At, asDisc, type Enclosure, type NumberStanding, type Operation } from "../../number/origin.ts";
+import type { Rational } from "../../number/rational.ts";
+import { invariants } from "../context.ts";
+import { persistent } from "../operations.ts";
+import { standingOf } from "../quantity.ts";
+import { valuesAtPoint } from "../torus.ts";
+import { weierstrassValues } from "../values.ts";
+import { discField } from "./disc-field.ts";
+import { coordinatesOf, type DivisorPoint, placeOf } from "./divisor.ts";
+import type { Element } from "./element.ts";
+import { polynomialDisc, scalarDisc, valueAt } from "./evaluate.ts";
+import { type Parts, seriesAtOrigin, seriesAtPoint } from "./laurent.ts";
+import type { Constants, Scalar } from "./scalar.ts";
+
+/** An element with its standing, as an operand. */
+export interface Expression {
+  readonly element: Element;
+  readonly standing: NumberStanding;
+}
+
+export function expressionOf(element: Element): Expression {
+  const all = [element.field.lattice.standing, ...[...element.constants.values()].map(standingOf)];
+  const standing = all.includes("double") ? "double" : all.includes("measured") ? "measured" : "defined";
+  return { element, standing };
+}
+
+function real(d: Disc): Enclosure {
+  return d.axis === "real" ? disc.along(d) : d;
+}
+
+function operation(
+  name: string,
+  evaluate: (element: Element, rest: readonly unknown[], at: At, prec: number) => Disc,
+): Operation {
+  return {
+    name,
+    evaluate: ([e, ...rest], at, prec) => real(evaluate((e as Expression).element, rest, at, prec)),
+  };
+}
+
+const PAIR = ["wp", "prime"] as const;
+
+/** [expression, z]. */
+export const VALUE = operation("elliptic function", (f, [z], at, prec) =>
+  persistent(f.field.lattice, "elliptic function", z, at, prec, (x, bits) => {
+    const { wp, prime } = weierstrassValues(f.field.lattice, x, bits + 16, PAIR);
+    return valueAt(f, wp!, prime!, bits);
+  }),
+);
+
+/** [expression, r, s] or [expression, r, s, number]. */
+export const VALUE_AT_POINT = operation("elliptic function", (f, [r, s, rest], at, prec) => {
+  const where = [r as Rational, s as Rational] as const;
+  const evaluate = (x: Disc | undefined, bits: number) => {
+    const { wp, prime } = valuesAtPoint(f.field.lattice, where, x, bits + 16, PAIR);
+    return valueAt(f, wp!, prime!, bits);
+  };
+  if (rest === undefined) return evaluate(undefined, prec);
+  return persistent(f.field.lattice, "elliptic function", rest, at, prec, evaluate);
+});
+
+/** [expression, divisor point]: its place in the plane. */
+export const PLACE = operation("zero or pole", (_f, [point], _at, prec) => placeOf(point as DivisorPoint, prec));
+
+/** [expression, scalar]: a named constant. */
+export const CONSTANT = operation("constant", (f, [s], _at, prec) =>
+  scalarDisc(f.field.lattice, f.constants as Constants, s as Scalar, prec),
+);
+
+/** Where a series is taken: at the lattice points, at a known zero or pole, at a half-period or at a number. */
+export type Centre =
+  | { readonly kind: "origin" }
+  | { readonly kind: "divisor"; readonly point: DivisorPoint; readonly zeros: number; readonly poles: number }
+  | {
+      readonly kind: "point";
+      readonly r: Rational;
+      readonly s: Rational;
+      readonly zeros: number;
+      readonly poles: number;
+    }
+  | { readonly kind: "number" };
+
+/** [expression, centre, k] or [expression, centre, k, number]: coefficient number k from the leading one. */
+export const COEFFICIENT = operation("series coefficient", (f, [centre, k, number], at, prec) => {
+  const index = k as number;
+  const wp = prec + 32 + 4 * index;
+  const F = discField(wp);
+  const { g2, g3 } = invariants(f.field.lattice, wp);
+  const poly = (p: Element["A"]) => polynomialDisc(f, p, wp);
+  const parts: Parts<Disc> = { A: poly(f.A), B: poly(f.B), D: poly(f.D), g2, g3 };
+  const c = centre as Centre;
+  if (c.kind === "origin") return disc.round(seriesAtOrigin(F, parts, index + 1).coefficients[index]!, prec);
+  const { x, y } = centreValues(f, c, number === undefined ? undefined : asDisc(at(number)), wp);
+  const [zeros, poles] = c.kind === "number" ? [0, 0] : [c.zeros, c.poles];
+  return disc.round(seriesAtPoint(F, parts, x, y, zeros, poles, index + 1).coefficients[index]!, prec);
+});
+
+function centreValues(f: Element, c: Centre, number: Disc | undefined, wp: number): { x: Disc; y: Disc } {
+  if (c.kind === "divisor") return coordinatesOf(c.point, wp);
+  const values =
+    c.kind === "point"
+      ? valuesAtPoint(f.field.lattice, [c.r, c.s], number, wp, PAIR)
+      : weierstrassValues(f.field.lattice, number!, wp, PAIR);
+  return { x: values.wp!, y: values.prime! };
+}

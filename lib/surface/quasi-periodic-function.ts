@@ -1,0 +1,50 @@
+import { LatticePointError } from "../function/weierstrass.ts";
+import { QUASI_PERIOD, WEIERSTRASS } from "../lattice/operations.ts";
+import type { PeriodLattice } from "../lattice/period-lattice.ts";
+import { Rational } from "../number/rational.ts";
+import { apply, type Complex, type ComplexNumeric, type Real, scalar } from "../number/values.ts";
+import type { ConventionKey } from "../proof/conventions.ts";
+import { Callable } from "./callable.ts";
+import { EllipticFunction } from "./elliptic-function.ts";
+import { TorusPoint } from "./torus-point.ts";
+
+/** Weierstrass ζ or σ: a value that is called as f(z); not elliptic, but with a known change under each period. */
+export class QuasiPeriodicFunction extends Callable {
+  readonly lattice: PeriodLattice;
+  readonly kind: "zeta" | "sigma";
+
+  constructor(lattice: PeriodLattice, kind: "zeta" | "sigma") {
+    super((z) => evaluate(lattice, kind, z));
+    this.lattice = lattice;
+    this.kind = kind;
+  }
+
+  /** η1, η2: ζ(z + ω_k) = ζ(z) + η_k and σ(z + ω_k) = −exp(η_k (z + ω_k/2)) σ(z). */
+  get quasiPeriods(): readonly [Real | Complex, Real | Complex] {
+    return [apply(QUASI_PERIOD, [this.lattice, 1]), apply(QUASI_PERIOD, [this.lattice, 2])];
+  }
+
+  /** ζ′ = −℘ for ζ; the logarithmic derivative ζ for σ. */
+  get derivative(): EllipticFunction {
+    if (this.kind === "zeta") return EllipticFunction.wp(this.lattice).neg();
+    throw new TypeError("sigma.derivative: σ′ = ζσ is not elliptic; L.zeta is the logarithmic derivative of σ");
+  }
+
+  get conventions(): readonly ConventionKey[] {
+    return ["cubic", "quasiPeriods"];
+  }
+
+  override toString(): string {
+    return this.kind === "zeta" ? "ζ" : "σ";
+  }
+}
+
+function evaluate(lattice: PeriodLattice, kind: "zeta" | "sigma", z: ComplexNumeric): Real | Complex {
+  if (!(z instanceof TorusPoint && z.lattice === lattice)) {
+    return apply(WEIERSTRASS[kind].number, [lattice, scalar(z, kind)]);
+  }
+  const [m, n] = z.coordinates;
+  if (z.isLatticePoint && kind === "zeta") throw new LatticePointError(m.num, n.num, z.name, kind);
+  const rest = z.remainder ? [z.remainder] : [];
+  return apply(WEIERSTRASS[kind].point, [lattice, m, n, ...rest], z.isLatticePoint ? Rational.zero : undefined);
+}

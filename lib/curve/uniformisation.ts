@@ -2,8 +2,7 @@
 
 import { periods } from "../lattice/context.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
-import { realLogarithm } from "../lattice/real-logarithm.ts";
-import { logarithm } from "../lattice/values.ts";
+import { logarithm, realLogarithm } from "../lattice/real-logarithm.ts";
 import type { Ball } from "../number/ball.ts";
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";

@@ -1,6 +1,7 @@
 import type { Rational } from "../number/rational.ts";
-import type { EllipticFunction, QuasiPeriodicFunction } from "../surface/elliptic-function.ts";
+import type { EllipticFunction } from "../surface/elliptic-function.ts";
 import type { Lattice } from "../surface/lattice.ts";
+import type { QuasiPeriodicFunction } from "../surface/quasi-periodic-function.ts";
 import type { TorusPoint } from "../surface/torus-point.ts";
 import type { Kind, Show } from "./kind.ts";
 import { numberConventions } from "./number-conventions.ts";
@@ -61,12 +62,26 @@ function gcd(a: bigint, b: bigint): bigint {
   return b === 0n ? a : gcd(b, a % b);
 }
 
-const SYMBOLS = { wp: ["℘", "\\wp"], prime: ["℘′", "\\wp'"], zeta: ["ζ", "\\zeta"], sigma: ["σ", "\\sigma"] } as const;
-
-/** A function of a lattice: its name; it is called with a number. */
+/** A function of a lattice, by its formula in ℘ and ℘′; it is called with a number. */
 export const functionKind: Kind<EllipticFunction | QuasiPeriodicFunction> = {
-  text: (f) => `${SYMBOLS[f.kind][0]}, a function of z`,
-  tex: (f) => `z \\mapsto ${SYMBOLS[f.kind][1]}(z)`,
-  conventions: (f) => (f.kind === "zeta" ? ["quasiPeriods"] : f.kind === "sigma" ? [] : ["cubic"]),
-  data: (f) => ({ kind: "function", name: f.kind }),
+  text: (f) => `${f}, a function of z`,
+  tex: (f) => `z \\mapsto ${formulaTex(String(f))}`,
+  conventions: (f) => f.conventions,
+  data: (f) => ({ kind: "function", formula: String(f) }),
 };
+
+const DIGITS = "⁰¹²³⁴⁵⁶⁷⁸⁹";
+
+/** The text of a formula as TeX: symbols by their macros, raised digits as exponents, names like g2 with an index. */
+function formulaTex(text: string): string {
+  return text
+    .replace(new RegExp(`[${DIGITS}]+`, "g"), (raised) => `^{${[...raised].map((d) => DIGITS.indexOf(d)).join("")}}`)
+    .replace(/\b([gec])(\d+)\b/g, "$1_{$2}")
+    .replaceAll("℘′", "\\wp'(z)")
+    .replaceAll("℘", "\\wp(z)")
+    .replaceAll("ζ", "\\zeta(z)")
+    .replaceAll("σ", "\\sigma(z)")
+    .replaceAll("ω", "\\omega")
+    .replaceAll("·", "\\,")
+    .replaceAll("−", "-");
+}

@@ -31,7 +31,7 @@ export class QuasiPeriodicFunction extends Callable {
   }
 
   get conventions(): readonly ConventionKey[] {
-    return ["cubic", "quasiPeriods"];
+    return this.kind === "zeta" ? ["quasiPeriods"] : [];
   }
 
   override toString(): string {

@@ -1,19 +1,15 @@
 import { BranchError, DomainError } from "../../proof/errors.ts";
-import { add, div, hull, ldexp, mul, round, sqrt, sub, widenBy } from "./arithmetic.ts";
-import { type Ball, bits, fromInt, isZero, lowerPositive, magnitude, one, sign, upper, zero } from "./data.ts";
-
-/** agm(1+x, 1−x) = 1 − Σ b_n x^(2n): numerators over 2^14 of b_1 .. b_4. */
-const TAIL: readonly number[] = [4096, 1280, 704, 469];
+import { agmFixed } from "../fixed/agm.ts";
+import { bitLength, pow2, scaled, size, sizePower, UP } from "../fixed/bits.ts";
+import { add, hull, ldexp, mul, sqrt } from "./arithmetic.ts";
+import { type Ball, bits, finish, isZero, lowerPositive, magnitude, sign, sizeBelow, upper, zero } from "./data.ts";
 
 /**
  * Arithmetic-geometric mean of two numbers >= 0; agm(x, 0) = 0.
  *
- * Error    each step is a sum and a root of balls, and relative errors do not grow (both means are monotone and homogeneous);
- *          the tail by the bound below.
- * Cost     log2(prec) + log2|ln(a/b)| roots; stops at |a − b| < 2^(−prec/10) with five terms.
+ * Error    that of the kernel, and the larger of the two relative radii, since the mean is monotone and homogeneous.
+ * Cost     log2(prec) + log2|ln(a/b)| roots.
  * Throws   DomainError for a negative number, BranchError for an enclosure that holds 0.
- * Source   1/agm(1+x, 1−x) = (2/π)K(x) = Σ (C(2n,n)/4^n)² x^(2n), whose coefficients are log-convex, so that the reciprocal is
- *          1 − Σ b_n x^(2n) with b_n >= 0 (Kaluza 1928) and Σ b_n = 1: the terms from n = 5 on are under x^10 for |x| < 1.
  */
 export function agm(a: Ball, b: Ball, prec: number): Ball {
   if (isZero(a) || isZero(b)) return zero;
@@ -27,30 +23,35 @@ export function agm(a: Ball, b: Ball, prec: number): Ball {
     }
   }
   if (Math.min(bits(a), bits(b)) < 8) return agmWide(a, b);
-  const work = prec + 16;
-  let x = round(a, work);
-  let y = round(b, work);
-  for (;;) {
-    const sum = add(x, y, work);
-    const difference = sub(x, y, work);
-    if (isZero(difference)) return round(x, prec);
-    const near = magnitude(sum) - 1 - magnitude(difference);
-    if (10 * near > work || near > Math.min(bits(x), bits(y)) - 4) return closed(sum, difference, work, prec);
-    y = sqrt(mul(x, y, work), work);
-    x = ldexp(sum, -1);
-  }
+  return near(a, b, Math.min(prec, Math.max(bits(a), 8) + 8, Math.max(bits(b), 8) + 8));
 }
 
-/** (a + b)/2 · agm(1 + z, 1 − z) with z = (a − b)/(a + b). */
-function closed(sum: Ball, difference: Ball, work: number, prec: number): Ball {
-  const z = div(difference, sum, work);
-  const u = mul(z, z, work);
-  let series: Ball = zero;
-  for (let n = TAIL.length - 1; n >= 0; n--) {
-    series = mul(u, add(ldexp(fromInt(TAIL[n]!), -14), series, work), work);
+/** Steps in enclosures until the two are within a factor 4 (relative errors of both then count), then the kernel. */
+function near(a: Ball, b: Ball, prec: number): Ball {
+  let x = a;
+  let y = b;
+  while (Math.abs(magnitude(x) - magnitude(y)) > 1) {
+    const mean = ldexp(add(x, y, prec + 16), -1);
+    y = sqrt(mul(x, y, prec + 16), prec + 16);
+    x = mean;
   }
-  const rest: Ball = { man: 1n, exp: 10 * magnitude(z), rad: 0 };
-  return round(mul(ldexp(sum, -1), widenBy(sub(one, series, work), rest, work), work), prec);
+  const work = prec + 24;
+  const exp = Math.max(x.exp + bitLength(x.man, prec), y.exp + bitLength(y.man, prec)) - work;
+  const p = scaled(x.man, x.exp - exp);
+  const q = scaled(y.man, y.exp - exp);
+  const mean = p > q ? agmFixed(p, q, work) : agmFixed(q, p, work);
+  // The kernel's 2^12 units, one unit of a quarter of the size for each cut, and the mean times the relative radius.
+  const err = 2 ** 12 + 8 + Math.max(moved(mean, x, prec), moved(mean, y, prec));
+  return finish(mean, exp, err * UP, prec);
+}
+
+/** An upper bound of mean·(radius of x)/|x|. */
+function moved(mean: bigint, x: Ball, prec: number): number {
+  if (x.rad === 0) return 0;
+  const m = size(mean, prec);
+  const power = sizePower();
+  const low = sizeBelow(x.man, prec);
+  return ((x.rad * m) / low) * pow2(power - sizePower()) * UP;
 }
 
 /** The mean grows with both arguments, so its values at the ends enclose it. */

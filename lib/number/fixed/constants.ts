@@ -31,7 +31,7 @@ export const ln2Fixed = keptConstant((prec) => machin(prec, LN2));
  *          each err by under 2 units of 2^-p-16 relatively. Together under one unit of 2^-p.
  * Source   D. and G. Chudnovsky (1988): 1/π = 12 Σ (−1)^k (6k)! (13591409 + 545140134 k) / ((3k)! k!³ 640320^(3k+3/2)).
  */
-function computePi(prec: number): bigint {
+export function computePi(prec: number): bigint {
   const work = prec + 16;
   const { q, t } = chudnovsky(0, Math.floor(work / 47) + 2);
   const root = sqrtNear(10005n << shift(2 * work));

@@ -1,64 +1,149 @@
 // exp in fixed point: arguments in [0, 1), results with an error under one unit.
 import { bitLength, shift } from "./bits.ts";
+import { EXP_FACTOR, factorialSum } from "./series.ts";
 
 /**
  * exp(x/2^prec)·2^prec for 0 <= x < 2^prec.
  *
- * Method   x/2^k, Taylor series in √N columns, k squarings.
- * Error    under 1 unit: with g = k + 2·log2(N) + 6 guard bits the series errs by at most 4N + 2m + 4 guard units (see
- *          `taylor`), each squaring doubles the relative error and adds a unit, so at most 2^k·(4N + 2m + 6)·e <= 2^g.
+ * Method   up to 4500 bits: leading bits of x by table, six at a time, then the series. Beyond: the leading 24 bits by binary splitting, the rest
+ *          halved k times, series, k squarings.
+ * Error    under 1 unit; see the two routines.
  * Source   D. M. Smith, Efficient multiple-precision evaluation of elementary functions, Math. Comp. 52 (1989), 131-134.
  */
 export function expFixed(x: bigint, prec: number): bigint {
-  const k = halvings(prec);
-  const guard = k + 2 * bitLength(BigInt(prec)) + 8;
-  const work = prec + guard;
-  let y = expTaylor((x << shift(guard)) >> shift(k), work, k);
-  for (let j = 0; j < k; j++) y = (y * y) >> shift(work);
-  return y >> shift(guard);
+  return prec <= TABLES_UP_TO ? byTables(x, prec) : bySquarings(x, prec);
 }
 
-/** Halvings that balance squarings and terms; measured: 1.1·p^(1/3)·... grows as the square root for short numbers. */
-function halvings(prec: number): number {
-  return Math.max(4, Math.round(1.1 * Math.sqrt(prec) * 0.5));
-}
+/** A table costs as much as a few evaluations to fill; above this its memory and filling do not pay (measured). */
+const TABLES_UP_TO = 4500;
 
-/** Terms that are needed for |t| < 2^-k: the first N with N·k + log2 N! > prec. */
-function terms(prec: number, k: number): number {
-  let n = 1;
-  for (let reached = k; reached < prec + 2; n++) reached += k + bitLength(BigInt(n)) - 1;
-  return n;
+/** Bits a level. */
+const STEP = 6;
+
+/** Levels that balance a product each against the terms they save (measured). */
+function levelsFor(prec: number): number {
+  return prec < 100 ? 2 : prec < 800 ? 3 : prec < 2000 ? 4 : 5;
 }
 
 /**
- * Σ t^n/n! for 0 <= t < 2^(work−k), k >= 2.
- * Error    below 4N + 2m + 4 units: each running term is cut by under a unit and then divided, so it errs by under 2; there are
- *          N of them, weighted by t^i with Σ t^i < 4/3; each power errs by under 2 and meets a factor below 2; the tail of
- *          terms that came out as 0 is under 4 units.
+ * With tables of exp(j/64^l): at most 5 factors.
+ * Error    a table value errs by under 128 units relatively (see `entry`), a product by one more, the series by under 16 + 16√N < 400 units;
+ *          12 guard bits hold 5·130 + 400 and the factor e of the result.
  */
-function expTaylor(t: bigint, work: number, k: number): bigint {
-  const columns = Math.max(1, Math.round(Math.sqrt(terms(work, k))));
+function byTables(x: bigint, prec: number): bigint {
+  const work = (prec + 12 + 63) & ~63;
   const w = shift(work);
-  const powers = powersOf(t, columns, w);
-  const sums: bigint[] = new Array(columns).fill(0n);
-  const step = powers[columns]!;
-  let a = 1n << w;
-  for (let n = 0; a > 0n; ) {
-    for (let i = 0; i < columns; i++) {
-      sums[i] = sums[i]! + a;
-      n++;
-      a /= BigInt(n);
-    }
-    a = (a * step) >> w;
-  }
+  const levels = levelsFor(prec);
+  const tables = tablesFor(work);
+  const full = x << shift(work - prec);
   let y = 0n;
-  for (let i = columns - 1; i > 0; i--) y += sums[i]! * powers[i]!;
-  return (y >> w) + sums[0]!;
+  let used = 0;
+  const lead = Number(full >> shift(work - STEP * levels));
+  for (let level = 1; level <= levels; level++) {
+    const j = Math.floor(lead / 2 ** (STEP * (levels - level))) % 64;
+    if (j === 0) continue;
+    const e = entry(tables, level, j);
+    y = used === 0 ? e : (y * e) >> w;
+    used++;
+  }
+  const t = BigInt.asUintN(work - STEP * levels, full);
+  const sum = factorialSum(t, work, STEP * levels, EXP_FACTOR);
+  return (used === 0 ? sum : (y * sum) >> w) >> shift(work - prec);
 }
 
-/** t^0 (unused), t, t², ... t^m in fixed point, each cut down; the error of each stays under 2 units for t < 1/2. */
-export function powersOf(t: bigint, m: number, w: bigint): bigint[] {
-  const powers = [1n, t];
-  for (let i = 2; i <= m; i++) powers[i] = (powers[i - 1]! * t) >> w;
-  return powers;
+/** exp(j/64^level) for one working precision, filled as asked for. */
+interface Tables {
+  readonly work: number;
+  readonly values: readonly (bigint | undefined)[][];
+}
+
+const kept = new Map<number, Tables>();
+const MOST_TABLES = 8;
+
+function tablesFor(work: number): Tables {
+  const known = kept.get(work);
+  if (known) return known;
+  if (kept.size >= MOST_TABLES) kept.delete(kept.keys().next().value!);
+  const fresh: Tables = { work, values: Array.from({ length: 6 }, () => []) };
+  kept.set(work, fresh);
+  return fresh;
+}
+
+/** By halves from exp(1/64^level): the relative errors of the factors add, so that of entry j is under 2j units. */
+function entry(tables: Tables, level: number, j: number): bigint {
+  const row = tables.values[level]!;
+  const known = row[j];
+  if (known !== undefined) return known;
+  const w = shift(tables.work);
+  let value: bigint;
+  if (j === 1) value = expOfPower(STEP * level, tables.work);
+  else {
+    const half = entry(tables, level, j >> 1);
+    const other = entry(tables, level, j - (j >> 1));
+    value = (half * other) >> w;
+  }
+  row[j] = value;
+  return value;
+}
+
+/** exp(2^-k) by shifts and short divisions, with 16 bits to spare: error under 1 unit. */
+function expOfPower(k: number, work: number): bigint {
+  let term = 1n << shift(work + 16);
+  let sum = 0n;
+  const s = shift(k);
+  for (let n = 1; term > 0n; n++) {
+    sum += term;
+    term = (term >> s) / shift(n);
+  }
+  return sum >> 16n;
+}
+
+/**
+ * With k halvings of what is left below the leading 24 bits, and k squarings.
+ * Error    the series errs by under 16 + 16√N units, each squaring doubles the relative error and adds a unit; the leading factor and the last
+ *          product add 4: with g = k + log2(N) + 12 guard bits under 1 unit of the result, which is below e.
+ */
+function bySquarings(x: bigint, prec: number): bigint {
+  const k = Math.max(2, Math.round(0.9 * Math.cbrt(prec)) - 12);
+  const guard = k + bitLength(BigInt(prec)) + 12;
+  const work = prec + guard;
+  const w = shift(work);
+  const lead = x >> shift(prec - LEAD);
+  const rest = BigInt.asUintN(prec - LEAD, x) << shift(guard);
+  let y = factorialSum(rest >> shift(k), work, LEAD + k, EXP_FACTOR);
+  for (let j = 0; j < k; j++) y = (y * y) >> w;
+  return ((y * expOfShort(lead, LEAD, work)) >> w) >> shift(guard);
+}
+
+const LEAD = 24;
+
+/** exp(a/2^b) for 0 <= a < 2^b by binary splitting: N terms with (a/2^b)^N/N! < 2^-work; error under 3 units. */
+function expOfShort(a: bigint, b: number, work: number): bigint {
+  if (a === 0n) return 1n << shift(work);
+  const size = b - bitLength(a);
+  let count = 2;
+  for (let reached = size; reached < work + 4; count++) reached += size + bitLength(BigInt(count)) - 1;
+  const { t, q } = split(a, b, 0, count);
+  return (1n << shift(work)) + (((t << shift(work)) / q) >> shift(b * count));
+}
+
+interface Split {
+  /** a^(high − low) */
+  readonly p: bigint;
+  /** (low + 1)...high */
+  readonly q: bigint;
+  /** Σ over the terms, times q·2^(b·(high − low)). */
+  readonly t: bigint;
+}
+
+function split(a: bigint, b: number, low: number, high: number): Split {
+  if (high - low === 1) return { p: a, q: BigInt(high), t: a };
+  const middle = (low + high) >> 1;
+  const left = split(a, b, low, middle);
+  const right = split(a, b, middle, high);
+  return {
+    p: left.p * right.p,
+    q: left.q * right.q,
+    t: ((left.t * right.q) << shift(b * (high - middle))) + left.p * right.t,
+  };
 }

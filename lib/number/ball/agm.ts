@@ -2,7 +2,7 @@ import { BranchError, DomainError } from "../../proof/errors.ts";
 import { agmFixed } from "../fixed/agm.ts";
 import { bitLength, pow2, scaled, size, sizePower, UP } from "../fixed/bits.ts";
 import { add, hull, ldexp, mul, sqrt } from "./arithmetic.ts";
-import { type Ball, bits, finish, isZero, lowerPositive, magnitude, sign, sizeBelow, upper, zero } from "./data.ts";
+import { type Ball, bits, finish, isZero, lowerPositive, sign, sizeBelow, upper, zero } from "./data.ts";
 
 /**
  * Arithmetic-geometric mean of two numbers >= 0; agm(x, 0) = 0.
@@ -13,27 +13,27 @@ import { type Ball, bits, finish, isZero, lowerPositive, magnitude, sign, sizeBe
  */
 export function agm(a: Ball, b: Ball, prec: number): Ball {
   if (isZero(a) || isZero(b)) return zero;
-  for (const x of [a, b]) {
-    if (sign(x) === -1) {
-      throw new DomainError({
-        subject: "agm",
-        given: "a negative number",
-        expected: "two numbers that are not negative",
-      });
-    }
+  if (sign(a) === -1 || sign(b) === -1) {
+    throw new DomainError({
+      subject: "agm",
+      given: "a negative number",
+      expected: "two numbers that are not negative",
+    });
   }
-  if (Math.min(bits(a), bits(b)) < 8) return agmWide(a, b);
-  return near(a, b, Math.min(prec, Math.max(bits(a), 8) + 8, Math.max(bits(b), 8) + 8));
+  const accuracy = Math.min(bits(a), bits(b));
+  return accuracy < 8 ? agmWide(a, b) : near(a, b, Math.min(prec, accuracy + 8));
 }
 
 /** Steps in enclosures until the two are within a factor 4 (relative errors of both then count), then the kernel. */
 function near(a: Ball, b: Ball, prec: number): Ball {
   let x = a;
   let y = b;
-  while (Math.abs(magnitude(x) - magnitude(y)) > 1) {
+  let apart = x.exp + bitLength(x.man, prec) - y.exp - bitLength(y.man, prec);
+  while (apart > 1 || apart < -1) {
     const mean = ldexp(add(x, y, prec + 16), -1);
     y = sqrt(mul(x, y, prec + 16), prec + 16);
     x = mean;
+    apart = x.exp + bitLength(x.man, prec) - y.exp - bitLength(y.man, prec);
   }
   const work = prec + 24;
   const exp = Math.max(x.exp + bitLength(x.man, prec), y.exp + bitLength(y.man, prec)) - work;

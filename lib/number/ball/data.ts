@@ -1,6 +1,18 @@
 // Real enclosures as data: construction, the one place where results are rounded outward, and what can be read off.
 import { DomainError } from "../../proof/errors.ts";
-import { absBig, bitLength, DOWN, exponent, pow2, shift, size, sizePower, trailingZeros, UP } from "../fixed/bits.ts";
+import {
+  absBig,
+  bitLength,
+  DOWN,
+  exponent,
+  lastDouble,
+  pow2,
+  shift,
+  size,
+  sizePower,
+  trailingZeros,
+  UP,
+} from "../fixed/bits.ts";
 import type { Rational } from "../rational.ts";
 
 /** The set {(man + t)·2^exp : |t| <= rad}. `rad` is 0 (exact) or at least 1, and at most 2^30 (up to a rounding). */
@@ -8,11 +20,14 @@ export interface Ball {
   readonly man: bigint;
   readonly exp: number;
   readonly rad: number;
+  /** A product leaves here what it knows of |man|: it lies within about·(1 ± blur). Others find out by `Number(man)`. */
+  readonly about?: number;
+  readonly blur?: number;
 }
 
 /** A radius above this drops mantissa bits. */
 export const MAX_RAD = 2 ** 30;
-const MAX_EXPONENT = 2 ** 45;
+export const MAX_EXPONENT = 2 ** 45;
 
 export const zero: Ball = { man: 0n, exp: 0, rad: 0 };
 export const one: Ball = { man: 1n, exp: 0, rad: 0 };
@@ -25,20 +40,27 @@ export const one: Ball = { man: 1n, exp: 0, rad: 0 };
 export function finish(man: bigint, exp: number, err: number, prec: number): Ball {
   if (!(exp < MAX_EXPONENT && exp > -MAX_EXPONENT)) throw overflow(exp);
   const length = bitLength(man, prec);
+  const about = lastDouble();
   let drop = length - prec;
-  if (err === 0) {
-    if (drop <= 0) return { man, exp, rad: 0 };
-    const spare = trailingZeros(man);
-    if (spare >= drop) return { man: man >> shift(spare), exp: exp + spare, rad: 0 };
-    return { man: man >> shift(drop), exp: exp + drop, rad: 1 };
-  }
+  if (err === 0) return exactly(man, exp, drop);
   if (!(err <= MAX_RAD)) {
     if (!(err < Infinity)) throw overflow(exp);
     const wide = exponent(err) - 30;
     if (wide > drop) drop = wide;
   }
   if (drop <= 4 && err <= MAX_RAD) return { man, exp, rad: Math.max(err, 1) };
-  return { man: man >> shift(drop), exp: exp + drop, rad: (err * pow2(-drop) + 1) * UP };
+  const kept = man >> shift(drop);
+  const rad = (err * pow2(-drop) + 1) * UP;
+  // A mantissa of 64 bits or more is about what it was: take the size that was just measured along.
+  if (length > 1000 || length - drop < 64) return { man: kept, exp: exp + drop, rad };
+  return { man: kept, exp: exp + drop, rad, about: Math.abs(about) * pow2(-drop), blur: 2 ** -51 };
+}
+
+function exactly(man: bigint, exp: number, drop: number): Ball {
+  if (drop <= 0) return { man, exp, rad: 0 };
+  const spare = trailingZeros(man);
+  if (spare >= drop) return { man: man >> shift(spare), exp: exp + spare, rad: 0 };
+  return { man: man >> shift(drop), exp: exp + drop, rad: 1 };
 }
 
 function overflow(exp: number): DomainError {

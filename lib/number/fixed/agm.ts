@@ -41,8 +41,11 @@ function closed(sum: bigint, difference: bigint, lost: number, work: number): bi
   const q = ((difference >> shift(cutDifference)) << shift(first)) / top;
   const u = (q * q) >> shift(first);
   const scale = first + 2 * (cutSum - cutDifference + 1);
-  let inner = TAIL[3]! << shift(bits(4) - 14);
-  for (let n = 3; n > 0; n--) {
+  // Terms below the last place are left out.
+  let last = 4;
+  while (last > 1 && 2 * last * lost > work + 10) last--;
+  let inner = TAIL[last - 1]! << shift(bits(last) - 14);
+  for (let n = last - 1; n > 0; n--) {
     const less = first - bits(n + 1);
     inner =
       (TAIL[n - 1]! << shift(bits(n) - 14)) + scaled((u >> shift(less)) * inner, bits(n) - bits(n + 1) - scale + less);

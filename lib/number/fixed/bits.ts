@@ -73,12 +73,20 @@ export function shift(k: number): bigint {
   return shifts[k]!;
 }
 
+let double = 0;
+
+/** The double nearest to the number that `bitLength` measured last; infinite for long ones. */
+export function lastDouble(): number {
+  return double;
+}
+
 /**
  * Number of bits of |n|: the smallest e with |n| < 2^e; 0 for 0. `hint` is a guess that makes long n cheap; a wrong
  * one costs time only.
  */
 export function bitLength(n: bigint, hint = 0): number {
   const d = Number(n);
+  double = d;
   if (d === 0) return 0;
   if (d !== Infinity && d !== -Infinity) return doubleLength(n, d, 0);
   const low = hint - 512;

@@ -23,8 +23,8 @@ function bitsBelow(n: number): number {
   return n >= 2 ** 31 ? 31 : 31 - Math.clz32(n);
 }
 
-/** Short sums go term by term. */
-const SHORT = 14;
+/** Sums of at most so many terms go term by term. */
+const SHORT = 16;
 
 /**
  * Σ_{n>=0} z^n/(factor(1)...factor(n)) in units of 2^-work, for |z| < 2^(work−r), r >= 2.
@@ -35,13 +35,32 @@ export function factorialSum(z: bigint, work: number, r: number, factor: Factor)
   return count <= SHORT ? shortSum(z, work, count, factor) : columnSum(z, work, r, count, factor);
 }
 
-/** By Horner's rule; each step errs by under 2 units and the error of the sum so far meets |z|/factor <= 1/4: under 3 units, and 2 for the tail. */
+/**
+ * By Horner's rule with kept coefficients; each is cut by under a unit, each step by one more, and the error of the sum so far
+ * meets |z| <= 1/4: under 3 units, and 2 for the tail.
+ */
 function shortSum(z: bigint, work: number, count: number, factor: Factor): bigint {
   const w = shift(work);
-  const one = 1n << w;
-  let sum = one;
-  for (let n = count; n > 0; n--) sum = one + ((z * sum) >> w) / shift(factor(n));
+  const c = coefficients(work, factor);
+  let sum = c[count]!;
+  for (let n = count - 1; n >= 0; n--) sum = c[n]! + ((z * sum) >> w);
   return sum;
+}
+
+const keptCoefficients = new Map<Factor, Map<number, readonly bigint[]>>();
+const MOST_KEPT = 16;
+
+/** 2^work/(factor(1)...factor(n)) for n = 0 .. SHORT. */
+function coefficients(work: number, factor: Factor): readonly bigint[] {
+  const byWork = keptCoefficients.get(factor) ?? new Map<number, readonly bigint[]>();
+  keptCoefficients.set(factor, byWork);
+  const known = byWork.get(work);
+  if (known) return known;
+  const list = [1n << shift(work)];
+  for (let n = 1; n <= SHORT; n++) list.push(list[n - 1]! / shift(factor(n)));
+  if (byWork.size >= MOST_KEPT) byWork.delete(byWork.keys().next().value!);
+  byWork.set(work, list);
+  return list;
 }
 
 /**

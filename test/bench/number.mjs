@@ -3,10 +3,9 @@
 // Same inputs and the same number of bits on all sides; every time is processor time, the best of many rounds after a warm-up.
 import { execFileSync, spawnSync } from "node:child_process";
 import { mkdtempSync } from "node:fs";
-import { tmpdir } from "node:os";
+import { cpus, tmpdir } from "node:os";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
-import { cpus } from "node:os";
 
 const here = fileURLToPath(new URL("./number/", import.meta.url));
 const ball = await import("../../dist/lib/number/ball.js");
@@ -64,24 +63,42 @@ function ours(digits) {
 }
 
 function parsed(text) {
-  return new Map(text.trim().split("\n").map((line) => line.split("\t")).map(([, name, ns]) => [name, Number(ns)]));
+  return new Map(
+    text
+      .trim()
+      .split("\n")
+      .map((line) => line.split("\t"))
+      .map(([, name, ns]) => [name, Number(ns)]),
+  );
 }
 
 function mpmath(digits) {
-  const run = spawnSync("/usr/bin/python3", [join(here, "yardstick.py"), String(digits), String(budget)], { encoding: "utf8" });
+  const run = spawnSync("/usr/bin/python3", [join(here, "yardstick.py"), String(digits), String(budget)], {
+    encoding: "utf8",
+  });
   return run.status === 0 ? parsed(run.stdout) : new Map();
 }
 
 function compiledArb() {
   const program = join(mkdtempSync(join(tmpdir(), "yardstick-")), "arb");
-  const built = spawnSync("cc", ["-O2", "-o", program, join(here, "yardstick.c"), "-lflint-arb", "-lflint", "-lgmp"], { encoding: "utf8" });
+  const built = spawnSync("cc", ["-O2", "-o", program, join(here, "yardstick.c"), "-lflint-arb", "-lflint", "-lgmp"], {
+    encoding: "utf8",
+  });
   return built.status === 0 ? program : undefined;
 }
 
 const program = compiledArb();
-const arb = (digits) => (program ? parsed(execFileSync(program, [String(digits), String(budget)], { encoding: "utf8" })) : new Map());
+const arb = (digits) =>
+  program ? parsed(execFileSync(program, [String(digits), String(budget)], { encoding: "utf8" })) : new Map();
 
-const time = (ns) => (ns === undefined ? "-" : ns < 1e4 ? `${ns.toFixed(0)} ns` : ns < 1e7 ? `${(ns / 1e3).toFixed(1)} µs` : `${(ns / 1e6).toFixed(1)} ms`);
+const time = (ns) =>
+  ns === undefined
+    ? "-"
+    : ns < 1e4
+      ? `${ns.toFixed(0)} ns`
+      : ns < 1e7
+        ? `${(ns / 1e3).toFixed(1)} µs`
+        : `${(ns / 1e6).toFixed(1)} ms`;
 const ratio = (a, b) => (b === undefined ? "-" : (a / b).toFixed(2));
 
 console.log(`${cpus()[0].model}, Node ${process.version}\n`);
@@ -99,6 +116,10 @@ for (const digits of digitList) {
 }
 if (digitList.includes(1000) && digitList.includes(10000)) {
   const slope = (name) => Math.log10(growth.get(`${name} 10000`) / growth.get(`${name} 1000`)).toFixed(2);
-  console.log(`\nGrowth from 1000 to 10,000 digits as a power of the digits: ${Object.keys(operations).map((n) => `${n} ${slope(n)}`).join(", ")}`);
+  console.log(
+    `\nGrowth from 1000 to 10,000 digits as a power of the digits: ${Object.keys(operations)
+      .map((n) => `${n} ${slope(n)}`)
+      .join(", ")}`,
+  );
 }
 if (sink === null) console.log(sink);

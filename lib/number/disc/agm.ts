@@ -41,6 +41,9 @@ export function agm(a: Disc, b: Disc, prec: number): Disc {
 
 function rightRoot(x: Disc, y: Disc, mean: Disc, work: number): Disc {
   const root = sqrt(mul(x, y, work), work, { cut: "continuous" });
+  // A few bits decide, as a rule.
+  const rough = sign(real(mul(round(root, 40), conj(round(mean, 40)), 40)));
+  if (rough !== undefined && rough !== 0) return rough === 1 ? root : neg(root);
   const product = mul(root, conj(mean), work);
   const choice = sign(real(product));
   if (choice === 1) return root;

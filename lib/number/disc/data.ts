@@ -170,9 +170,12 @@ export function isExact(d: Disc): boolean {
   return d.rad === 0;
 }
 
-/** |d|² of the centre against rad², exactly. */
+/** |d|² of the centre against rad² <= 2^62, exactly. */
 export function containsZero(d: Disc): boolean {
   if (d.rad === 0) return d.re === 0n && d.im === 0n;
+  const a = Number(d.re);
+  const b = Number(d.im);
+  if (!(Math.abs(a) < 2 ** 40 && Math.abs(b) < 2 ** 40)) return false;
   const r = BigInt(d.rad * 2 ** 52);
   return (d.re * d.re + d.im * d.im) << 104n <= r * r;
 }

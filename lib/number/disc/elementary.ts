@@ -6,7 +6,7 @@ import { exp as ballExp, radiusExponent } from "../ball/exp.ts";
 import { sinhCosh } from "../ball/hyperbolic.ts";
 import { sinCos as ballSinCos } from "../ball/trig.ts";
 import { absBig, bitLength, DOWN, scaledRadius, shift, UP } from "../fixed/bits.ts";
-import { sqrtNear } from "../fixed/isqrt.ts";
+import { complexSqrt } from "../fixed/complex-sqrt.ts";
 import { mulBall, widenBy } from "./arithmetic.ts";
 import {
   along,
@@ -72,7 +72,7 @@ function sqrtPlane(x: Disc, prec: number): Disc {
   if ((x.exp - up) % 2 !== 0) up += 1;
   const a = up >= 0 ? x.re << shift(up) : x.re >> shift(-up);
   const b = up >= 0 ? x.im << shift(up) : x.im >> shift(-up);
-  const { re, im } = sqrtFixed(a, b);
+  const { re, im } = complexSqrt(a, b);
   const exp = (x.exp - up) / 2;
   if (x.rad === 0) {
     const exact = up >= 0 && re * re - im * im === a && 2n * re * im === b;
@@ -83,18 +83,6 @@ function sqrtPlane(x: Disc, prec: number): Disc {
   const s = hypotSize(re, im, prec);
   const err = ((s.d + 7) * x.rad) / below(m.d) / (1 + Math.sqrt(Math.max(0, 1 - part * UP) * DOWN) * DOWN);
   return finishScaledPlus(re, im, exp, err * UP, s.e - m.e, 7, prec);
-}
-
-/**
- * √(a + ib) with real part >= 0 for integers, the larger of which has at least 8 bits.
- * Error    r = |a + ib| within 2; u = √((r + |a|)/2) within 2 + 2/u, and u >= |root|/√2; v = |b|/2u within (v/u)·3 + 1 <= 4: under 6 units in all.
- */
-function sqrtFixed(a: bigint, b: bigint): { re: bigint; im: bigint } {
-  const r = sqrtNear(a * a + b * b);
-  const u = sqrtNear((r + absBig(a)) >> 1n);
-  const v = absBig(b) / (2n * u);
-  if (a >= 0n) return { re: u, im: b < 0n ? -v : v };
-  return { re: v, im: b < 0n ? -u : u };
 }
 
 /**

@@ -89,15 +89,19 @@ export function bitLength(n: bigint, hint = 0): number {
   double = d;
   if (d === 0) return 0;
   if (d !== Infinity && d !== -Infinity) return doubleLength(n, d, 0);
-  const low = hint - 512;
-  if (low > 0) {
-    const t = n >> shift(low);
+  // Find a shift that leaves 1 to 1023 bits: the hint's, else by doubling and halving.
+  const m = absBig(n);
+  let low = Math.max(hint - 512, 512);
+  let short = 0;
+  let long = Infinity;
+  for (;;) {
+    const t = m >> shift(low);
     const e = Number(t);
-    if (e !== Infinity && e !== -Infinity && (e > 2 ** 60 || e < -(2 ** 60))) return doubleLength(t, e, low);
+    if (e !== 0 && e !== Infinity) return doubleLength(t, e, low);
+    if (e === 0) long = low;
+    else short = low;
+    low = long === Infinity ? 2 * low : (short + long) >> 1;
   }
-  const m = n < 0n ? -n : n;
-  const hex = m.toString(16);
-  return 4 * hex.length - 4 + (32 - Math.clz32(Number.parseInt(hex[0]!, 16)));
 }
 
 function doubleLength(n: bigint, d: number, low: number): number {
@@ -106,7 +110,7 @@ function doubleLength(n: bigint, d: number, low: number): number {
   const e = ((high >>> 20) & 2047) - 1022;
   // Only a power of two can be the result of rounding up past one; then look at the bits.
   if ((high & 0xfffff) === 0 && words[1 - HIGH] === 0 && e > 53) {
-    return low + ((n < 0n ? -n : n) >> shift(e - 1) ? e : e - 1);
+    return low + (absBig(n) >> shift(e - 1) ? e : e - 1);
   }
   return low + e;
 }

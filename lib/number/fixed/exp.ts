@@ -5,7 +5,7 @@ import { EXP_FACTOR, factorialSum } from "./series.ts";
 /**
  * exp(x/2^prec)·2^prec for 0 <= x < 2^prec.
  *
- * Method   up to 4500 bits: leading bits of x by table, six at a time, then the series. Beyond: the leading 24 bits by binary splitting, the rest
+ * Method   up to 8000 bits: leading bits of x by table, six at a time, then the series. Beyond: the leading 24 bits by binary splitting, the rest
  *          halved k times, series, k squarings.
  * Error    under 1 unit; see the two routines.
  * Source   D. M. Smith, Efficient multiple-precision evaluation of elementary functions, Math. Comp. 52 (1989), 131-134.
@@ -15,7 +15,7 @@ export function expFixed(x: bigint, prec: number): bigint {
 }
 
 /** A table costs as much as a few evaluations to fill; above this its memory and filling do not pay (measured). */
-const TABLES_UP_TO = 4500;
+const TABLES_UP_TO = 8000;
 
 /** Bits a level. */
 const STEP = 6;
@@ -104,7 +104,7 @@ function expOfPower(k: number, work: number): bigint {
  *          product add 4: with g = k + log2(N) + 12 guard bits under 1 unit of the result, which is below e.
  */
 function bySquarings(x: bigint, prec: number): bigint {
-  const k = Math.max(2, Math.round(0.9 * Math.cbrt(prec)) - 12);
+  const k = Math.max(4, Math.round(1.6 * Math.cbrt(prec)) - LEAD);
   const guard = k + bitLength(BigInt(prec)) + 12;
   const work = prec + guard;
   const w = shift(work);

@@ -11,13 +11,13 @@ export interface SinCosFixed {
 /**
  * sin and cos of x/2^prec, times 2^prec, for 0 <= x < 2^prec; error of each under 1 unit.
  *
- * Method   up to 4500 bits: leading bits by tables, six at a time, the rest by series. Beyond: k halvings and doublings.
+ * Method   up to 8000 bits: leading bits by tables, six at a time, the rest by series. Beyond: k halvings and doublings.
  */
 export function sinCosFixed(x: bigint, prec: number): SinCosFixed {
   return prec <= TABLES_UP_TO ? byTables(x, prec) : byDoublings(x, prec);
 }
 
-const TABLES_UP_TO = 4500;
+const TABLES_UP_TO = 8000;
 const STEP = 6;
 
 function levelsFor(prec: number): number {
@@ -112,7 +112,7 @@ function ofPower(k: number, work: number): SinCosFixed {
  *          guard bits hold 4^k·(40 + 16√N).
  */
 function byDoublings(x: bigint, prec: number): SinCosFixed {
-  const k = Math.max(6, Math.round(0.9 * Math.cbrt(prec)));
+  const k = Math.max(6, Math.round(0.75 * Math.cbrt(prec)));
   const guard = 2 * k + bitLength(BigInt(prec)) + 14;
   const work = prec + guard;
   const unit = 1n << shift(work);

@@ -14,14 +14,37 @@ export function chooseWindow(equation: PlaneEquation, marked: readonly Point[]):
   return degree === 2 && constantLead ? doubleCover(equation, marked) : general(equation, marked);
 }
 
-/** y² + ... = cubic in x: all turning points, and beyond the last one about as far as the roots are apart. */
+/** y² + ... = cubic or quartic in x: all turning points, and beyond the last ones some of the branches that run off. */
 function doubleCover(equation: PlaneEquation, marked: readonly Point[]): Window {
   const reach = bound(equation);
   const turns = turningX(equation, -reach, reach);
-  const beyond = Math.max(...turns, ...(turns.length === 0 ? [0] : [])) + 0.9 * rootScale(discriminantInY(equation));
-  const xs = [...turns, beyond, ...marked.map(([x]) => x)];
-  const x = padded(xs, 0.12);
-  return { x, y: padded([...marked.map(([, y]) => y), ...samples(equation, x).map(([, y]) => y)], 0.06) };
+  const xs = [...turns, ...marked.map(([x]) => x)];
+  const ys = marked.map(([, y]) => y);
+  const x = padded([...xs, ...beyond(discriminantInY(equation), turns)], 0.12);
+  const whole = padded([...ys, ...heights(equation, x)], 0.06);
+  // An oval that would be a speck beside the branches: closer up, with less of the branches.
+  const oval = padded([...ys, ...ovalHeights(equation, turns)], 2);
+  if (turns.length < 3 || oval[1] - oval[0] > 0.4 * (whole[1] - whole[0])) return { x, y: whole };
+  return { x: padded(xs, 0.12), y: oval };
+}
+
+function heights(equation: PlaneEquation, range: readonly [number, number]): number[] {
+  return samples(equation, range).map(([, y]) => y);
+}
+
+/** Heights of the oval of a cubic, between its first two turning points. */
+function ovalHeights(equation: PlaneEquation, [first = 0, second = 0]: readonly number[]): number[] {
+  return heights(equation, [first, second]);
+}
+
+/** How far to follow the branches that run off to infinity, about as far as the turning points are apart. */
+function beyond(discriminant: readonly number[], turns: readonly number[]): number[] {
+  const [first, last] = [Math.min(0, ...turns), Math.max(...turns, ...(turns.length === 0 ? [0] : []))];
+  // With one real root the two others are about as far to the right as it is to the left.
+  if (discriminant.length <= 4) return [last + (turns.length > 1 ? 0.9 : 2.2) * rootScale(discriminant)];
+  const spread = turns.length > 1 ? last - Math.min(...turns) : 2 * (Math.abs(first) + 1);
+  const open = (discriminant[4] ?? 0) > 0;
+  return open ? [Math.min(...turns, 0) - 0.2 * spread, last + 0.2 * spread] : [];
 }
 
 /** Size of the roots of a cubic about their mean, from its coefficients. */

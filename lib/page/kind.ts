@@ -40,11 +40,17 @@ export interface Kind<T> {
 export type ClassOf<T> = abstract new (...parameters: never) => T;
 
 export interface KindEntry {
-  readonly of: ClassOf<object>;
+  is(value: object): boolean;
   readonly kind: Kind<never>;
 }
 
 /** One line of the table of kinds; the types of class and renderer are matched here and nowhere else. */
 export function entry<T extends object>(of: { readonly prototype: T }, kind: Kind<T>): KindEntry {
-  return { of: of as unknown as ClassOf<object>, kind: kind as unknown as Kind<never> };
+  const maker = of as unknown as ClassOf<T>;
+  return { is: (value) => value instanceof maker, kind: kind as unknown as Kind<never> };
+}
+
+/** The same for data without a class, known by their shape. */
+export function shape<T extends object>(is: (value: object) => value is T, kind: Kind<T>): KindEntry {
+  return { is, kind: kind as unknown as Kind<never> };
 }

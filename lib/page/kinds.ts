@@ -8,16 +8,20 @@ import { Claim } from "../surface/claim-value.ts";
 import { Curve } from "../surface/curve.ts";
 import { EllipticFunction } from "../surface/elliptic-function.ts";
 import { Lattice } from "../surface/lattice.ts";
+import { Morphism } from "../surface/morphism.ts";
 import { Point } from "../surface/point.ts";
 import { QuasiPeriodicFunction } from "../surface/quasi-periodic-function.ts";
 import { TorusPoint } from "../surface/torus-point.ts";
+import { PlaneCurve, PlanePoint } from "../surface/variety.ts";
 import { claimKind } from "./claim-kind.ts";
 import { curveKind, pointKind } from "./curve-kind.ts";
 import { quadraticKind, rationalKind } from "./exact-kind.ts";
 import { figureKind } from "./figure-kind.ts";
-import { entry, type KindEntry } from "./kind.ts";
+import { entry, type KindEntry, shape } from "./kind.ts";
 import { functionKind, latticeKind, torusPointKind } from "./lattice-kind.ts";
+import { morphismKind } from "./morphism-kind.ts";
 import { complexKind, realKind } from "./number-kind.ts";
+import { isPolynomial, planeCurveKind, planePointKind, polynomialKind } from "./plane-kind.ts";
 import { Table } from "./table.ts";
 import { tableKind } from "./table-kind.ts";
 
@@ -32,6 +36,10 @@ export const KINDS: readonly KindEntry[] = [
   entry(QuasiPeriodicFunction, functionKind),
   entry(Point, pointKind),
   entry(Curve, curveKind),
+  entry(PlaneCurve, planeCurveKind),
+  entry(PlanePoint, planePointKind),
+  entry(Morphism, morphismKind),
+  shape(isPolynomial, polynomialKind),
   entry(Claim, claimKind),
   entry(Table, tableKind),
   entry(Figure, figureKind),

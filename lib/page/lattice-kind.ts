@@ -27,7 +27,11 @@ export const torusPointKind: Kind<TorusPoint> = {
   text: (z) => String(z),
   tex: (z, show) => {
     const name = coordinatesTex(z.coordinates);
-    const rest = z.remainder ? `${name === "0" ? "" : `${name} + `}${show.tex(z.remainder)}` : name;
+    const rest = z.remainder
+      ? name === "0"
+        ? show.tex(z.remainder)
+        : `${name} + ${show.tex(z.remainder)}`.replace("+ -", "- ")
+      : name;
     return rest === "0" ? "0" : `${rest} = ${valueTex(z, show)}`;
   },
   cell: (z, show) => complexKind.cell!(z, show),

@@ -18,6 +18,7 @@ const ROWS: Readonly<Record<string, readonly ConventionKey[]>> = {
   "wp.prime": ["cubic"],
   zeta: ["quasiPeriods"],
   "elliptic logarithm": ["cubic"],
+  "elliptic logarithm on its component": ["differential", "components"],
 };
 
 /** Operations whose result depends on the basis that was chosen where none was given. */

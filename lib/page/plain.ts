@@ -60,11 +60,19 @@ class Writer {
       case "symbol":
         return value.toString();
       case "function":
-        return functionText(value);
+        return this.#function(value);
       case "object":
         return value === null ? "null" : this.#object(value, depth);
       default:
         return String(value);
+    }
+  }
+
+  #function(value: object): string {
+    try {
+      return this.#inner(value) ?? functionText(value);
+    } catch {
+      return "a function that cannot be looked at";
     }
   }
 

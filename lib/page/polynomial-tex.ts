@@ -6,12 +6,15 @@ import { type Equation, leadingSide } from "../curve/equation/print.ts";
 import type { Show } from "./kind.ts";
 import { texName, texWords } from "./tex.ts";
 
+/** What typesetting needs of a field. */
+export type Coefficients<T> = Pick<Field<T>, "format" | "neg">;
+
 /** An element of a field: typeset by its class where it has one, else by the text of the field. */
-export function elementTex<T>(F: Field<T>, c: T, show: Show): string {
+export function elementTex<T>(F: Coefficients<T>, c: T, show: Show): string {
   return typeof c === "object" && c !== null ? show.tex(c) : texWords(F.format(c));
 }
 
-export function polynomialTex<T>(F: Field<T>, f: Polynomial<T>, show: Show, ordered = sortedTerms(f)): string {
+export function polynomialTex<T>(F: Coefficients<T>, f: Polynomial<T>, show: Show, ordered = sortedTerms(f)): string {
   const terms = ordered.map(({ coefficient, exponents }) => term(F, f.variables, coefficient, exponents, show));
   if (terms.length === 0) return "0";
   return terms
@@ -19,11 +22,11 @@ export function polynomialTex<T>(F: Field<T>, f: Polynomial<T>, show: Show, orde
     .join("");
 }
 
-export function equationTex<T>(F: Field<T>, { left, right }: Equation<T>, show: Show): string {
+export function equationTex<T>(F: Coefficients<T>, { left, right }: Equation<T>, show: Show): string {
   return `${polynomialTex(F, left, show, leadingSide(left))} = ${polynomialTex(F, right, show)}`;
 }
 
-function term<T>(F: Field<T>, variables: readonly string[], c: T, exponents: readonly number[], show: Show) {
+function term<T>(F: Coefficients<T>, variables: readonly string[], c: T, exponents: readonly number[], show: Show) {
   const text = F.format(c);
   // A coefficient that is itself a sum keeps its sign inside brackets.
   const sum = /.[+±]|\S\s*-|\s/.test(text.slice(1));

@@ -5,6 +5,7 @@ import * as disc from "../number/disc.ts";
 import { isDisc } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
 import { Complex, Real } from "../number/values.ts";
+import { Point } from "../surface/point.ts";
 import { type Decimal, plainDecimal, shortened, texDecimalLine } from "./digits.ts";
 import type { Cell, Show } from "./kind.ts";
 import { texWords } from "./tex.ts";
@@ -14,7 +15,8 @@ const LONGEST_TEXT = 100;
 const LONGEST_TEX = 300;
 
 export function shortText(value: unknown, show: Show, digits = LINE_DIGITS): string {
-  if (isList(value)) return `(${value.map((part) => shortText(part, show, digits)).join(", ")})`;
+  const list = listOf(value);
+  if (list) return `(${list.map((part) => shortText(part, show, digits)).join(", ")})`;
   const hidden = hiddenZero(value);
   if (hidden !== undefined) return `0 ± 1e${hidden}`;
   const number = numberOf(value, show, digits);
@@ -24,7 +26,8 @@ export function shortText(value: unknown, show: Show, digits = LINE_DIGITS): str
 }
 
 export function shortTex(value: unknown, show: Show, digits = LINE_DIGITS): string {
-  if (isList(value)) return `\\left( ${value.map((part) => shortTex(part, show, digits)).join(",\\; ")} \\right)`;
+  const list = listOf(value);
+  if (list) return `\\left( ${list.map((part) => shortTex(part, show, digits)).join(",\\; ")} \\right)`;
   const hidden = hiddenZero(value);
   if (hidden !== undefined) return `0 \\pm 10^{${hidden}}`;
   const number = numberOf(value, show, digits);
@@ -74,6 +77,8 @@ function join({ re, im }: NumberCell, write: (decimal: Decimal) => string, unit:
   return `${write(re)} ${im.negative ? "-" : "+"} ${write({ ...im, negative: false })}${unit}`;
 }
 
-function isList(value: unknown): value is readonly unknown[] {
-  return Array.isArray(value) && value.length <= 8;
+/** The parts of a short list, and the coordinates of a point. */
+function listOf(value: unknown): readonly unknown[] | undefined {
+  const list: unknown = value instanceof Point ? value.coordinates : value;
+  return Array.isArray(list) && list.length <= 8 ? list : undefined;
 }

@@ -12,7 +12,7 @@ import { array, texName, texProse } from "./tex.ts";
 export function kindOf(value: unknown): Kind<unknown> | undefined {
   if (typeof value !== "object" && typeof value !== "function") return undefined;
   if (value === null) return undefined;
-  return KINDS.find(({ of }) => value instanceof of)?.kind as Kind<unknown> | undefined;
+  return KINDS.find(({ is }) => is(value))?.kind as Kind<unknown> | undefined;
 }
 
 /** Lists and records longer than this are shown as text. */
@@ -38,7 +38,9 @@ function ownValue(holder: object, key: string): unknown {
 
 /** Words and safe integers may stand beside values that are typeset, but are not typeset on their own. */
 function isShowable(part: unknown, depth: number): boolean {
-  return typeof part === "string" || Number.isSafeInteger(part) || isTypeset(part, depth);
+  return (
+    ["string", "boolean", "undefined"].includes(typeof part) || Number.isSafeInteger(part) || isTypeset(part, depth)
+  );
 }
 
 function isTypeset(part: unknown, depth: number): boolean {

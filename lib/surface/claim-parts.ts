@@ -1,5 +1,6 @@
 // A claim about points, curves or lists, taken apart into relations between numbers.
 
+import { sameExact } from "../number/exactness.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
 import { Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
@@ -45,10 +46,19 @@ function decided(same: boolean, relation: "=" | "≠", argument: string): Standi
 }
 
 function pointStanding(P: Point<unknown>, relation: "=" | "≠", Q: Point<unknown>): Standing {
-  if (!P.curve.equals(Q.curve)) return decided(false, relation, "points of different curves");
+  if (!sameModel(P.curve, Q.curve)) return decided(false, relation, "points of different curves");
   const [p, q] = [P.coordinates, Q.coordinates];
   if (!p || !q) return decided(p === q, relation, "the point at infinity compared");
   return partsStanding(p, relation, q);
+}
+
+/** Whether two curves have the same coefficients, also where one is taken over a larger field. */
+function sameModel(E: Curve<unknown>, F: Curve<unknown>): boolean {
+  if (E.field.name === F.field.name) return E.equals(F);
+  return E.a.every((c, k) => {
+    const [x, y] = [numberOf(c)?.exact, numberOf(F.a[k])?.exact];
+    return x !== undefined && y !== undefined && sameExact(x, y);
+  });
 }
 
 /** Part by part: all must be equal, or one apart. */
@@ -86,11 +96,24 @@ function anyApart(standings: readonly Standing[]): Standing {
 /** A point, or a list of two coordinates, put into the equation of a curve. */
 function onStanding(lhs: unknown, rhs: unknown): Standing {
   if (!(rhs instanceof Curve)) throw unsuited(lhs, "on", rhs);
-  const coordinates = lhs instanceof Point ? lhs.coordinates : lhs;
+  const coordinates: unknown = lhs instanceof Point ? lhs.coordinates : lhs;
   if (lhs instanceof Point && !coordinates) return { kind: "proved", argument: "O lies on every curve" };
   if (!Array.isArray(coordinates) || coordinates.length !== 2) throw unsuited(lhs, "on", rhs);
+  const numbers = [...coordinates, ...rhs.a].map(numberOf);
+  if (!numbers.every((x) => x !== undefined)) return onExactly(coordinates, rhs);
+  const [x, y, a1, a2, a3, a4, a6] = numbers as [Num, Num, Num, Num, Num, Num, Num];
+  const left = y.times(y).plus(a1.times(x).times(y)).plus(a3.times(y));
+  const right = x.plus(a2).times(x).plus(a4).times(x).plus(a6);
+  const standing = numberStanding(left, "=", right);
+  return standing.kind === "proved" ? { kind: "proved", argument: "exact substitution into the equation" } : standing;
+}
+
+type Num = Real | Complex;
+
+/** Over other fields, such as F_p, the curve itself decides. */
+function onExactly(coordinates: readonly unknown[], E: Curve<unknown>): Standing {
   try {
-    rhs.point(coordinates[0], coordinates[1]);
+    E.point(coordinates[0], coordinates[1]);
     return { kind: "proved", argument: "exact substitution into the equation" };
   } catch (error) {
     if (error instanceof LibraryError) return { kind: "refuted", evidence: error.given };

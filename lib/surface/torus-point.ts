@@ -90,7 +90,7 @@ export class TorusPoint extends Complex {
   get name(): string {
     const exact = pointText(this.coordinates);
     if (!this.remainder) return exact;
-    return exact === "0" ? `${this.remainder}` : `${exact} + ${this.remainder}`;
+    return exact === "0" ? `${this.remainder}` : `${exact} + ${this.remainder}`.replace("+ -", "- ");
   }
 
   override toString(): string {

@@ -3,7 +3,9 @@ import * as figure from "../../../lib/figure/figures.ts";
 import { complex } from "../../../lib/number/convert.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
 import { lattice } from "../../../lib/surface/lattice.ts";
+import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
+import { quartic } from "../../../lib/surface/make-quartic.ts";
 import { elements } from "./normalise.ts";
 
 const E = curve`y^2 + y = x^3 - x`;
@@ -74,5 +76,43 @@ describe("figure.lattice and figure.fundamentalDomain", () => {
 
   it("what is no number is refused by name", () => {
     expect(() => figure.lattice(L, { points: { z: {} as never } })).toThrow(/figure\.lattice/);
+  });
+});
+
+describe("figure.curve of plane cubics and quartics", () => {
+  const C = cubic`u^3 + 2v^3 + 3w^3 = 6 u v w`;
+  const A = C.point({ u: 1, v: 1, w: 1 });
+
+  it("the tangent at (1:1:1) meets the cubic again at (1:−2:1) — oracle: substitution by hand", () => {
+    const picture = figure.curve(C, { points: { A }, chord: [A, A] });
+    expect(picture.alt).toContain("A near (1, 1); R near (1, -2)");
+    expect(picture.alt).toContain("for u from");
+    expect(picture.data.closed).toBe("1");
+  });
+
+  it("another letter can be put to 1, an unknown one is refused; points at infinity are named", () => {
+    expect(figure.curve(C, { chart: "u" }).alt).toContain("for v from");
+    expect(() => figure.curve(C, { chart: "x" })).toThrow(/letters u, v, w/);
+    const flex = cubic`x^3 + y^3 + z^3 = 5 x y z`;
+    const O = flex.point({ x: 1, y: -1, z: 0 });
+    expect(figure.curve(flex, { points: { O } }).alt).toContain("At infinity: O.");
+  });
+
+  it("y² = x⁴ − 5x² + 4: one oval between −1 and 1, two branches — oracle: its four real roots", () => {
+    const picture = figure.curve(quartic`y^2 = x^4 - 5x^2 + 4`);
+    expect(picture.alt).toContain("1 closed oval, 2 branches");
+  });
+
+  it("a point of another kind of curve is refused", () => {
+    expect(() => figure.curve(E, { points: { A: A as never } })).toThrow(/another kind/);
+  });
+});
+
+describe("windows that are chosen", () => {
+  it("an oval that would be a speck is looked at closely — fact: height of the oval near (−8, ±1)", () => {
+    const alt = figure.curve(curve`y^2 = x^3 - 189x - 999`).alt;
+    const [, low, high] = /y from (-?[\d.]+) to (-?[\d.]+)/.exec(alt) ?? [];
+    expect(Number(high) - Number(low)).toBeLessThan(30);
+    expect(alt).toContain("1 closed oval, 1 branch");
   });
 });

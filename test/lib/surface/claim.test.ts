@@ -103,6 +103,18 @@ describe("claims about points, curves and lists", () => {
     expect(claim("point", P, "on", E).standing.kind).toBe("proved");
   });
 
+  it("a point from the torus meets the exact one, and lies on the curve, to the digits asked for", () => {
+    const back = E.exponential(E.logarithm(P));
+    expect(claim("back", back, "=", P).standing).toMatchObject({ kind: "certified", digits: 50 });
+    expect(claim("back", back, "=", P.neg()).standing.kind).toBe("refuted");
+    expect(claim("on", back, "on", E).standing).toMatchObject({ kind: "certified" });
+    expect(claim("off", [back.x, 1], "on", E).standing.kind).toBe("refuted");
+  });
+
+  it("real periods compare as real numbers", () => {
+    expect(claim("period", E.lattice().periods[0], "<", 3).standing.kind).toBe("proved");
+  });
+
   it("lists by their parts: the weakest counts, one refuted part refutes", () => {
     expect(claim("l", [two.times(three), 1], "=", [six, 1]).standing.kind).toBe("certified");
     expect(claim("l", [two.times(three), 1], "=", [six, 2]).standing.kind).toBe("refuted");

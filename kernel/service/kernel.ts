@@ -4,6 +4,7 @@ import type { Connection } from "../wire/connection.ts";
 import { log } from "../wire/log.ts";
 import type { Message } from "../wire/message.ts";
 import { openWire, type Wire } from "../wire/wire.ts";
+import { type Brake, createBrake } from "./brake.ts";
 import { dispatch } from "./dispatch.ts";
 import { abortedAnswer } from "./handler/execute.ts";
 import { controlHandlers, shellHandlers } from "./handler/table.ts";
@@ -31,8 +32,6 @@ export interface Kernel {
   readonly ended: Promise<void>;
 }
 
-/** A cell that prints faster than it can be sent waits when so many bytes are on the way. */
-const PENDING_BYTES = 8_000_000;
 /** How long the first cell waits for a listener, in ms. */
 const AUDIENCE = 250;
 /** How long the end may take, in ms. Hosts kill after 2.5 s. */
@@ -54,7 +53,8 @@ export async function startKernel(connection: Connection, options: KernelOptions
     answer: (value) => void cells().then((session) => session.answerInput(value)),
   });
   const runs = createRuns(output, prompts);
-  const cells = once(() => startCells(options, wire, runs));
+  const brake = createBrake(wire);
+  const cells = once(() => startCells(options, runs, brake));
   const history = once(() => openHistory(options.historyFile));
   const { end, ended } = ending([
     async () => (await cells()).shutdown(),
@@ -72,7 +72,10 @@ export async function startKernel(connection: Connection, options: KernelOptions
       await arrived(wire);
       abortCells();
     },
-    interrupt: () => void cells().then((session) => session.interrupt(), ignore),
+    interrupt() {
+      brake.release();
+      void cells().then((session) => session.interrupt(), ignore);
+    },
     end,
   };
   const abortCells = serveRequests(wire, output, prompts, service);
@@ -84,12 +87,12 @@ export async function startKernel(connection: Connection, options: KernelOptions
   return { interrupt: service.interrupt, end, ended };
 }
 
-async function startCells(options: KernelOptions, wire: Wire, runs: Runs): Promise<CellSession> {
+async function startCells(options: KernelOptions, runs: Runs, brake: Brake): Promise<CellSession> {
   const session = await options.createCells({
     cwd: process.cwd(),
     onEvent(event) {
       runs.report(event);
-      return wire.pendingBytes > PENDING_BYTES ? wire.published() : undefined;
+      return brake.wait();
     },
   });
   session.start();

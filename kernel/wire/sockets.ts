@@ -6,7 +6,9 @@ import { CHANNELS, type Channel, type Connection, endpoint, socketFile } from ".
 import { ProtocolError } from "./errors.ts";
 
 /** How long a closed socket may go on sending what it holds, in ms. Without an end a stuck client would keep us alive. */
-const LINGER = 1000;
+const LINGER = 500;
+/** Messages that iopub holds for one subscriber before publishing waits for it: some MB of text. */
+const HELD = 64;
 
 export interface Sockets {
   readonly shell: Router;
@@ -50,7 +52,7 @@ export function closeSockets(sockets: Sockets, connection?: Connection): void {
 
 function createSockets(connection: Connection): Sockets {
   const shared = {
-    sendHighWaterMark: 0, // publishing never drops and never blocks; what limits a flood is the producer's wait
+    sendHighWaterMark: 0, // a reply is never dropped
     linger: 0,
     ipv6: connection.ip.includes(":"),
     backlog: 512,
@@ -62,7 +64,7 @@ function createSockets(connection: Connection): Sockets {
     shell: new Router(router),
     control: new Router(router),
     stdin: new Router(router),
-    iopub: new XPublisher({ ...shared, verbosity: "allSubs" }),
+    iopub: new XPublisher({ ...shared, verbosity: "allSubs", sendHighWaterMark: HELD, sendTimeout: 0, noDrop: true }),
     hb: new Router(router),
   };
 }

@@ -3,6 +3,7 @@ import { createEncoder, decode } from "./codec.ts";
 import type { Connection } from "./connection.ts";
 import { log, logDropped } from "./log.ts";
 import type { Message, Outgoing } from "./message.ts";
+import { patiently } from "./patience.ts";
 import { createSendQueue, type SendQueue } from "./queue.ts";
 import { createSigner, type Signer } from "./signer.ts";
 import { closeSockets, openSockets, type Sockets } from "./sockets.ts";
@@ -33,7 +34,7 @@ export interface Wire {
 export type Receivers = Readonly<Record<RequestChannel, (message: Message) => void>>;
 
 /** How long `close` waits for its queues, in ms; a socket that takes nothing must not hold up the end. */
-const CLOSING = 1000;
+const CLOSING = 500;
 
 /**
  * Binds the sockets of the connection; from then on heartbeats are echoed and subscribers welcomed until `close`.
@@ -48,7 +49,7 @@ export async function openWire(connection: Connection): Promise<Wire> {
     shell: queueFor(sockets, "shell"),
     control: queueFor(sockets, "control"),
     stdin: queueFor(sockets, "stdin"),
-    iopub: queueFor(sockets, "iopub"),
+    iopub: createSendQueue(patiently(sockets.iopub), (error) => logUnsent("iopub", error)),
     hb: queueFor(sockets, "hb"),
   };
   let shellCount = 0;
@@ -98,7 +99,11 @@ export async function openWire(connection: Connection): Promise<Wire> {
 }
 
 function queueFor(sockets: Sockets, channel: keyof Sockets): SendQueue {
-  return createSendQueue(sockets[channel], (error) => log(`${channel}: a message could not be sent (${error})`));
+  return createSendQueue(sockets[channel], (error) => logUnsent(channel, error));
+}
+
+function logUnsent(channel: string, error: unknown): void {
+  log(`${channel}: a message could not be sent (${error})`);
 }
 
 function receive(channel: string, frames: Buffer[], signer: Signer, receiver: (message: Message) => void): void {

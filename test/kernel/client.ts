@@ -2,7 +2,7 @@
 // framing and signing, so that a fault of the kernel's codec cannot hide behind itself.
 import { createHmac, randomUUID } from "node:crypto";
 import { createServer } from "node:net";
-import { Dealer, Request, Subscriber } from "zeromq";
+import { curveKeyPair, Dealer, Request, Subscriber } from "zeromq";
 
 export interface ConnectionFields {
   transport: string;
@@ -59,8 +59,8 @@ export class Client {
   readonly shell: Dealer;
   readonly control: Dealer;
   readonly stdin: Dealer;
-  readonly iopub = new Subscriber({ linger: 0, receiveHighWaterMark: 0 });
-  readonly heartbeat = new Request({ linger: 0, receiveTimeout: 2000 });
+  readonly iopub: Subscriber;
+  readonly heartbeat: Request;
   /** All that came on iopub, in order. */
   readonly published: Received[] = [];
   readonly replies: Received[] = [];
@@ -68,9 +68,13 @@ export class Client {
   private readonly fields: ConnectionFields;
   private readonly waiting = new Set<() => void>();
 
-  constructor(fields: ConnectionFields) {
+  /** `serverKey`: public key of a kernel whose sockets are encrypted. */
+  constructor(fields: ConnectionFields, serverKey?: string) {
     this.fields = fields;
-    const options = { routingId: this.session, linger: 0 };
+    const secure = serverKey ? encrypted(serverKey) : {};
+    this.iopub = new Subscriber({ linger: 0, receiveHighWaterMark: 0, ...secure });
+    this.heartbeat = new Request({ linger: 0, receiveTimeout: 2000, ...secure });
+    const options = { routingId: this.session, linger: 0, ...secure };
     this.shell = new Dealer(options);
     this.control = new Dealer(options);
     this.stdin = new Dealer(options);
@@ -78,7 +82,8 @@ export class Client {
 
   /** Connects, and waits for the welcome of iopub unless told not to listen. */
   async connect({ listen = true } = {}): Promise<this> {
-    const address = (port: number) => `${this.fields.transport}://${this.fields.ip}:${port}`;
+    const { transport, ip } = this.fields;
+    const address = (port: number) => `${transport}://${ip}${transport === "ipc" ? "-" : ":"}${port}`;
     this.shell.connect(address(this.fields.shell_port));
     this.control.connect(address(this.fields.control_port));
     this.stdin.connect(address(this.fields.stdin_port));
@@ -166,6 +171,11 @@ export class Client {
       for (const look of [...this.waiting]) look();
     }
   }
+}
+
+function encrypted(serverKey: string) {
+  const { publicKey, secretKey } = curveKeyPair();
+  return { curveServerKey: serverKey, curvePublicKey: publicKey, curveSecretKey: secretKey };
 }
 
 /** What a request published, in short: states, and types of messages. */

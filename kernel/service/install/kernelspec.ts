@@ -28,7 +28,11 @@ export function kernelspec(env: Readonly<Record<string, string>>): Kernelspec {
     language: LANGUAGE,
     interrupt_mode: "message",
     env,
-    metadata: { debugger: false, [KERNEL_NAME]: { installer: true, version: packageVersion() } },
+    metadata: {
+      debugger: false,
+      supported_encryption: ["curve"],
+      [KERNEL_NAME]: { installer: true, version: packageVersion() },
+    },
   };
 }
 

@@ -15,7 +15,8 @@ export interface TestKernel {
   stop(): Promise<void>;
 }
 
-export async function startTestKernel(change: Partial<ConnectionFields> = {}): Promise<TestKernel> {
+/** `change`: fields of the connection file; `serverKey`: the kernel's public key if they ask for encryption. */
+export async function startTestKernel(change: object = {}, serverKey?: string): Promise<TestKernel> {
   const fields = { ...(await freeConnection()), ...change };
   let cells: FakeCells | undefined;
   const kernel = await startKernel(parseConnection(JSON.stringify(fields), "test.json"), {
@@ -26,7 +27,7 @@ export async function startTestKernel(change: Partial<ConnectionFields> = {}): P
   });
   const clients: Client[] = [];
   const another = async () => {
-    const client = await new Client(fields).connect();
+    const client = await new Client(fields, serverKey).connect();
     clients.push(client);
     return client;
   };

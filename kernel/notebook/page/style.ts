@@ -46,7 +46,7 @@ pre.shown { text-align: left; font-size: 0.8rem; }
 figure { margin: 1.4rem auto; text-align: center; break-inside: avoid; }
 figure svg, figure img { max-width: 100%; height: auto; }
 .unread { border-bottom: 1px dotted var(--wrong); }
-table { border-collapse: collapse; margin: 1.1rem auto; font-size: 0.95em; border-block: 1px solid var(--ink); font-variant-numeric: lining-nums tabular-nums; }
+table { border-collapse: collapse; margin: 1.1rem auto; font-size: 0.9em; border-block: 1px solid var(--ink); font-variant-numeric: lining-nums tabular-nums; }
 th, td { padding: 0.28rem 0.85rem; text-align: left; vertical-align: baseline; }
 thead th { border-bottom: 1px solid var(--line); font-weight: 500; font-style: italic; }
 tbody th { font-weight: 400; }
@@ -55,6 +55,7 @@ footer { margin-top: 4rem; padding-top: 0.8rem; border-top: 1px solid var(--line
 footer p { margin: 0; hyphens: none; }
 .joined { white-space: nowrap; }
 math { font-family: ${MATHEMATICS}; }
+@supports (not (-moz-appearance: none)) { math { font-feature-settings: normal; } }
 mo.tml-prime, math .mathscr { font-family: inherit; }
 math.tml-display { margin-block: 0.2rem; }
 section.prose math.tml-display { overflow-x: auto; overflow-y: hidden; padding-block: 0.3rem; }

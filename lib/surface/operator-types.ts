@@ -6,6 +6,7 @@ import type { Rational } from "../number/rational.ts";
 import type { Complex, Real } from "../number/values.ts";
 import type { Join } from "./fields.ts";
 import type { Point } from "./point.ts";
+import type { TorusPoint } from "./torus-point.ts";
 
 /** No value: the operands have no such sum, product, ... */
 export interface NoOp<Operator extends string, A, B> {
@@ -18,6 +19,10 @@ type Any = any;
 
 interface IsComplex {
   readonly disc: unknown;
+}
+/** A point of a torus: complex, with exact coordinates that sums and rational factors keep. */
+interface IsTorusPoint extends IsComplex {
+  readonly coordinates: unknown;
 }
 interface IsReal {
   readonly ball: unknown;
@@ -74,22 +79,37 @@ type Arithmetic<O extends "+" | "-" | "*" | "/", A, B> = A extends number
   ? B extends number
     ? number
     : B extends Scalar
-      ? Meeting<A, B>
+      ? Meeting<O, A, B>
       : Reflected<O, A, B>
   : A extends bigint
     ? B extends bigint
       ? bigint
       : B extends Scalar
-        ? Meeting<A, B>
+        ? Meeting<O, A, B>
         : Reflected<O, A, B>
     : A extends Scalar
       ? B extends Scalar | Plain
-        ? Meeting<A, B>
+        ? Meeting<O, A, B>
         : Reflected<O, A, B>
       : Own<O, A, B>;
 
 /** The kind in which two numbers meet. */
-type Meeting<A, B> = A extends IsComplex
+type Meeting<O extends "+" | "-" | "*" | "/", A, B> = A extends IsTorusPoint
+  ? O extends "+" | "-"
+    ? TorusPoint
+    : B extends IsRational | Plain
+      ? TorusPoint
+      : Complex
+  : B extends IsTorusPoint
+    ? O extends "+" | "-"
+      ? TorusPoint
+      : O extends "*"
+        ? A extends IsRational | Plain
+          ? TorusPoint
+          : Complex
+        : Complex
+    : Numbers<A, B>;
+type Numbers<A, B> = A extends IsComplex
   ? Complex
   : B extends IsComplex
     ? Complex

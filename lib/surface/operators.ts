@@ -4,6 +4,7 @@
 // At run time plain values keep the language's meaning, numbers meet in the smallest kind that holds both, and every
 // other value answers by its methods plus, minus, times, div, neg, pow, compare.
 import { toNumber } from "../number/convert.ts";
+import { pow as power } from "../number/functions.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
 import { Complex, type ComplexNumeric, Real } from "../number/values.ts";
@@ -26,6 +27,8 @@ interface Operand {
   pow?(exponent: unknown): unknown;
   compare?(other: unknown): number | undefined;
 }
+
+const SCALARS: ReadonlySet<unknown> = new Set([Real, Complex, Rational, Quadratic]);
 
 const WORDS: Readonly<Record<Arithmetic | "pow" | "neg", string>> = {
   plus: "sum",
@@ -72,8 +75,7 @@ export function pow(a: unknown, b: unknown): unknown {
   const base = isScalar(a) || !isOperand(a) ? scalarOf(a) : a;
   const exponent = wholeExponent(b);
   if (exponent !== undefined && base.pow) return base.pow(exponent);
-  if (isScalar(base) && b instanceof Rational && b.den === 2n)
-    return (toNumber(base).sqrt() as Real).pow(Number(b.num));
+  if (isNumeric(a) && isNumeric(b)) return power(a, b);
   throw refusal("pow", a, b);
 }
 
@@ -110,12 +112,15 @@ export function ge(a: unknown, b: unknown): unknown {
 }
 
 function arithmetic(name: Arithmetic, a: unknown, b: unknown): unknown {
-  const scalars = isNumeric(a) && isNumeric(b);
-  if (scalars) return scalarArithmetic(name, a, b);
+  if (isPlainNumeric(a) && isPlainNumeric(b)) return scalarArithmetic(name, a, b);
   // A number meets a point or a function: the other one knows what to do with it.
   if (isOperand(a) && !isScalar(a) && a[name]) return a[name](b);
   if (isOperand(b) && !isScalar(b)) return reflected(name, a, b);
   throw refusal(name, a, b);
+}
+
+function isPlainNumeric(x: unknown): x is Scalar | bigint | number {
+  return isNumeric(x) && (!isNumber(x) || isScalar(x));
 }
 
 /** a op b by the methods of b. */
@@ -123,6 +128,7 @@ function reflected(name: Arithmetic, a: unknown, b: Operand): unknown {
   if (name === "plus" && b.plus) return b.plus(a);
   if (name === "times" && b.times) return b.times(a);
   if (name === "minus" && b.neg) return reflected("plus", a, b.neg() as Operand);
+  if (name === "div" && isNumeric(a) && isNumber(b)) return toNumber(a).div(b);
   if (name === "div" && b.inv) return reflected("times", a, b.inv() as Operand);
   throw refusal(name, a, b);
 }
@@ -183,12 +189,17 @@ function wholeExponent(x: unknown): number | undefined {
   return x instanceof Rational && x.isInteger() ? Number(x.num) : undefined;
 }
 
+/** A number of the library; a class that extends one, such as a point of a torus, has its own arithmetic. */
 function isScalar(x: unknown): x is Scalar {
+  return isNumber(x) && SCALARS.has(x.constructor);
+}
+
+function isNumber(x: unknown): x is Scalar {
   return x instanceof Real || x instanceof Complex || x instanceof Rational || x instanceof Quadratic;
 }
 
 function isNumeric(x: unknown): x is Scalar | bigint | number {
-  return typeof x === "number" || typeof x === "bigint" || isScalar(x);
+  return typeof x === "number" || typeof x === "bigint" || isNumber(x);
 }
 
 /** A value of the library: one that answers an operator by a method. */

@@ -7,7 +7,7 @@ let notebook: TestNotebook;
 beforeAll(async () => {
   notebook = new TestNotebook();
   await notebook.value("let ticks = 0, finals = 0; let kept = 'kept'");
-});
+}, 60_000);
 afterAll(() => notebook.session.shutdown());
 
 async function interrupted(code: string, delay: number): Promise<string> {

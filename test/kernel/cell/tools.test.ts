@@ -10,7 +10,7 @@ beforeAll(async () => {
   await notebook.value(
     "/** Counts. */\nfunction countUp(from: number) { return from + 1 }\nconst E = curve`y^2 + y = x^3 - x`, P = E.point(0, 0), w = real(2).sqrt(); let options = { depth: 3 }",
   );
-});
+}, 60_000);
 afterAll(() => notebook.session.shutdown());
 
 /** `|` marks the cursor. */

@@ -10,6 +10,7 @@ export default defineConfig({
           include: ["test/**/*.test.ts"],
           exclude: ["test/hosts/**", "**/*.slow.test.ts", "node_modules/**"],
           testTimeout: 30_000,
+          hookTimeout: 60_000,
         },
       },
       { test: { name: "slow", include: ["test/**/*.slow.test.ts"], testTimeout: 900_000 } },

@@ -39,6 +39,11 @@ const COMMANDS: Readonly<Record<string, Command>> = {
     purpose: "take the kernel away from where install put it",
     run: async (args) => (await import("./service/install/install.ts")).remove(args),
   },
+  diagnose: {
+    usage: "diagnose",
+    purpose: "which front ends find the kernel, whether it starts, how fast, and what to do if not",
+    run: async (args, console) => (await import("./notebook/command/diagnose.ts")).diagnoseCommand(args, console),
+  },
 };
 
 /** Runs `halfperiod <args>` and gives the exit code. */

@@ -59,7 +59,8 @@ export async function launchKernel({
     const [program = process.execPath, ...args] = command;
     const child = spawn(program, [...args, "-f", file], {
       cwd,
-      env: { ...process.env, ...env, JPY_PARENT_PID: String(process.pid) },
+      // what a command runs is not what the user entered, so it stays out of the history
+      env: { ...process.env, HALFPERIOD_HISTORY: "off", ...env, JPY_PARENT_PID: String(process.pid) },
       stdio: ["ignore", "ignore", "pipe"],
       // Its own group, so that a Ctrl-C meant for this program does not reach it first, and all of it can be ended.
       detached: process.platform !== "win32",

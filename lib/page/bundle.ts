@@ -1,6 +1,6 @@
 import { conventionTex, conventionText } from "./convention.ts";
 import { plainText } from "./plain.ts";
-import { conventionsOf, kindOf, partsOf, show } from "./show.ts";
+import { conventionsOf, isPlainNumber, kindOf, partsOf, show } from "./show.ts";
 import { display } from "./tex.ts";
 
 /** Representations of one thing by MIME type: strings, or unpacked JSON under types that end in +json. */
@@ -47,7 +47,7 @@ function whole(value: unknown): MimeBundle {
 function latexOf(value: unknown, notes: readonly string[]): string | undefined {
   const kind = kindOf(value);
   if (kind?.prose) return kind.prose(value, show);
-  const typeset = kind ? kind.tex !== undefined : typeof value === "bigint" || partsOf(value) !== undefined;
+  const typeset = kind ? kind.tex !== undefined : isPlainNumber(value) || partsOf(value) !== undefined;
   if (!typeset) return undefined;
   return display(show.tex(value), ...notes);
 }

@@ -1,6 +1,7 @@
 import { Complex, Real } from "../number/values.ts";
 import type { Claim } from "../surface/claim-value.ts";
 import type { Kind, Show } from "./kind.ts";
+import { prose } from "./prose.ts";
 import { LINE_DIGITS, shortTex, shortText } from "./short.ts";
 import { standingProse, standingTex, standingText } from "./standing.ts";
 import { texProse } from "./tex.ts";
@@ -22,9 +23,7 @@ export const claimKind: Kind<Claim> = {
     `${texProse(claim.name)}{:}\\; ${statementTex(claim, show)} \\quad ${standingTex(claim.standing)}`,
   // Running text, so that a line that is too long for the page can break between words.
   prose: (claim, show) => {
-    const plain = claim.name.includes("$") || /^[\p{L}\d ,.;:()'-]*$/u.test(claim.name);
-    const name = plain ? claim.name : `$${texProse(claim.name)}$`;
-    return `${name}: $\\displaystyle ${statementTex(claim, show)}$ — ${standingProse(claim.standing)}${inputs(claim)}`;
+    return `${prose(claim.name)}: $\\displaystyle ${statementTex(claim, show)}$ — ${standingProse(claim.standing)}${prose(inputs(claim))}`;
   },
   // In a table the name and the standing have columns of their own.
   cell: (claim, show) => ({

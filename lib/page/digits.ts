@@ -43,8 +43,19 @@ export function integerGroups(integer: string): string[] {
   return first === 0 ? rest : [integer.slice(0, first), ...rest];
 }
 
-/** Groups a line may hold: about a page width. */
+/** Groups a line may hold: about a page width; a few more are better than a short last line. */
 const GROUPS_A_LINE = 10;
+const MOST_GROUPS = 12;
+
+/** Groups in lines of at most `width`, a little less where the last line would be short. */
+export function inLines(groups: readonly string[], width: number): string[][] {
+  if (groups.length <= width) return [[...groups]];
+  const short = (w: number): boolean => groups.length % w !== 0 && groups.length % w < 3;
+  let each = width;
+  while (short(each) && each > Math.max(3, width - 3)) each--;
+  if (short(each)) each = width;
+  return Array.from({ length: Math.ceil(groups.length / each) }, (_, k) => groups.slice(k * each, (k + 1) * each));
+}
 
 /** A whole number for TeX, broken over lines where it is longer than a page is wide. */
 export function texInteger(text: string): string {
@@ -53,9 +64,16 @@ export function texInteger(text: string): string {
   return lines(`${negative ? "-" : ""}`, groups, 20);
 }
 
-/** The number for TeX: groups set off by thin spaces, lines of fifty digits, the exponent as a power of ten. */
-export function texDecimal(decimal: Decimal, groupsALine = GROUPS_A_LINE): string {
-  const head = `${decimal.negative ? "-" : ""}${integerGroups(decimal.integer).join("\\,")}`;
+/**
+ * The number for TeX: groups set off by thin spaces, lines of about fifty digits, the exponent as a power of ten. `sign` stands in
+ * place of the number's own.
+ */
+export function texDecimal(
+  decimal: Decimal,
+  groupsALine?: number | undefined,
+  sign = decimal.negative ? "-" : "",
+): string {
+  const head = `${sign}${integerGroups(decimal.integer).join("\\,")}`;
   const groups = fractionGroups(decimal.fraction);
   const dots = decimal.continues ? "\\ldots" : "";
   const power = decimal.exponent === 0 ? "" : ` \\cdot 10^{${decimal.exponent}}`;
@@ -84,14 +102,10 @@ function texRadius(radius: string): string {
   return match[1] === "1" ? power : `${match[1]} \\cdot ${power}`;
 }
 
-function lines(head: string, groups: readonly string[], width: number): string {
-  if (groups.length <= width) return head + groups.join("\\,");
-  const rows: string[] = [];
-  for (let start = 0; start < groups.length; start += width) {
-    const row = groups.slice(start, start + width).join("\\,");
-    rows.push(start === 0 ? head + row : `\\phantom{${head}}${row}`);
-  }
-  return `\\begin{array}{l} ${rows.join(" \\\\ ")} \\end{array}`;
+function lines(head: string, groups: readonly string[], width: number | undefined): string {
+  const rows = inLines(groups, width ?? (groups.length <= MOST_GROUPS ? MOST_GROUPS : GROUPS_A_LINE));
+  const set = rows.map((row, k) => `${k === 0 ? head : `\\phantom{${head}}`}${row.join("\\,")}`);
+  return set.length === 1 ? set.join("") : `\\begin{array}{l} ${set.join(" \\\\ ")} \\end{array}`;
 }
 
 /** At most `digits` significant digits; what is cut off is within one unit of the last digit kept, and shown by dots. */

@@ -29,14 +29,33 @@ export const quadraticKind: Kind<Quadratic> = {
   data: (x) => ({ ...x.toJSON() }),
 };
 
-function quadraticTex({ a, b, d }: Quadratic): string {
+/** (m + n√d) over one denominator; Gaussian numbers part by part. */
+export function quadraticTex({ a, b, d }: Quadratic): string {
   if (b.num === 0n) return rationalTex(a);
-  const root = d === -1n ? "i" : d < 0n ? `i\\sqrt{${-d}}` : `\\sqrt{${d}}`;
+  if (d === -1n) return gaussianTex(a, b);
+  const den = (a.den * b.den) / gcd(a.den, b.den);
+  const [m, n] = [(a.num * den) / a.den, (b.num * den) / b.den];
+  const root = d < 0n ? `i\\sqrt{${texInteger(String(-d))}}` : `\\sqrt{${texInteger(String(d))}}`;
+  const term = `${unit(n < 0n ? -n : n)}${root}`;
+  const top = m === 0n ? term : `${texInteger(String(m))} ${n < 0n ? "-" : "+"} ${term}`;
+  const sign = m === 0n && n < 0n ? "-" : "";
+  return den === 1n ? `${sign}${top}` : `${sign}${fraction(top, texInteger(String(den)))}`;
+}
+
+function gaussianTex(a: Rational, b: Rational): string {
   const size = b.abs();
-  const term = size.equals(1) ? root : `${rationalTex(size)}${d === -1n ? "\\," : ""}${root}`;
-  const negative = b.num < 0n;
-  if (a.num === 0n) return `${negative ? "-" : ""}${term}`;
-  return `${rationalTex(a)} ${negative ? "-" : "+"} ${term}`;
+  const term = size.equals(1) ? "i" : `${rationalTex(size)}\\,i`;
+  if (a.num === 0n) return `${b.num < 0n ? "-" : ""}${term}`;
+  return `${rationalTex(a)} ${b.num < 0n ? "-" : "+"} ${term}`;
+}
+
+/** A factor in front of a root, left out where it is 1. */
+function unit(n: bigint): string {
+  return n === 1n ? "" : texInteger(String(n));
+}
+
+function gcd(a: bigint, b: bigint): bigint {
+  return b === 0n ? a : gcd(b, a % b);
 }
 
 /** a + bi with integers a and b has digits to align. */

@@ -4,10 +4,16 @@ import type { Decimal } from "./digits.ts";
 /** JSON with every number written as a string. */
 export type Data = string | boolean | null | readonly Data[] | { readonly [key: string]: Data };
 
+/** A decimal number in a cell, real or complex: digits stand under digits. */
+export interface NumberCell {
+  readonly kind: "number";
+  readonly re?: Decimal;
+  readonly im?: Decimal;
+}
+
 /** A value in a cell of a table. */
 export type Cell =
-  /** A decimal number, real or complex: digits stand under digits. */
-  | { readonly kind: "number"; readonly re?: Decimal; readonly im?: Decimal }
+  | NumberCell
   | { readonly kind: "formula"; readonly text: string; readonly tex: string }
   | { readonly kind: "words"; readonly text: string };
 

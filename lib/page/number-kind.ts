@@ -3,6 +3,7 @@
 import { provedDigits } from "../number/context.ts";
 import { valueData } from "../number/json.ts";
 import { type DecimalParts, plainParts } from "../number/print.ts";
+import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
 import { complexDecimal, decimal } from "../number/text.ts";
 import { Complex, type Real } from "../number/values.ts";
@@ -15,8 +16,12 @@ import { array } from "./tex.ts";
 type Number = Real | Complex;
 
 export const realKind: Kind<Real> = {
-  text: textOf,
-  tex: (x, show) => exactTex(x, show) ?? texDecimal(realDecimal(x)),
+  text: (x) => (root(x) ? `${root(x)} = ${x}` : textOf(x)),
+  tex: (x, show) => {
+    const digits = () => texDecimal(realDecimal(x));
+    const exact = root(x);
+    return exactTex(x, show) ?? (exact ? `${show.tex(exact)} = ${digits()}` : digits());
+  },
   cell: (x, show) => exactCell(x, show) ?? { kind: "number", re: realDecimal(x) },
   conventions,
   data: (x) => ({ ...valueData(x) }),
@@ -51,6 +56,11 @@ function exactCell(x: Number, show: Show): Cell | undefined {
 
 function isShownExactly(x: Number): boolean {
   return x.asked === undefined && (x.exact instanceof Rational || (x.exact !== undefined && x instanceof Complex));
+}
+
+/** An exact root that is real, such as √30/10: shown with the digits that were asked for. */
+function root(x: Real): Quadratic | undefined {
+  return x.exact instanceof Quadratic && String(x.exact).length <= 60 ? x.exact : undefined;
 }
 
 /** A real number as its text has it, also where that is the text of a measured input; else from its digits. */

@@ -7,7 +7,7 @@ import { Rational } from "../number/rational.ts";
 import { Complex, Real } from "../number/values.ts";
 import { Point } from "../surface/point.ts";
 import { type Decimal, plainDecimal, shortened, texDecimalLine } from "./digits.ts";
-import type { Cell, Show } from "./kind.ts";
+import type { NumberCell, Show } from "./kind.ts";
 import { texWords } from "./tex.ts";
 
 export const LINE_DIGITS = 12;
@@ -35,8 +35,6 @@ export function shortTex(value: unknown, show: Show, digits = LINE_DIGITS): stri
   const tex = show.tex(value);
   return tex.length <= LONGEST_TEX ? tex : texWords("(too long for a line)");
 }
-
-type NumberCell = Cell & { readonly kind: "number" };
 
 /** The parts of a decimal number, cut to the same place; undefined for other values. */
 function numberOf(value: unknown, show: Show, digits: number): NumberCell | undefined {

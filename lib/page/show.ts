@@ -57,9 +57,7 @@ export const show: Show = {
   tex(value) {
     const kind = kindOf(value);
     if (kind?.tex) return kind.tex(value, show);
-    if (typeof value === "bigint" || (typeof value === "number" && Number.isSafeInteger(value))) {
-      return texInteger(String(value));
-    }
+    if (isPlainNumber(value)) return plainNumberTex(value);
     if (typeof value === "string") return texProse(value);
     const parts = partsOf(value);
     if (parts) return Array.isArray(value) ? listTex(parts) : recordTex(parts);
@@ -80,7 +78,21 @@ export const show: Show = {
   },
 };
 
+/** A bigint, an integer that a double holds exactly, or an infinity, such as the order of a point. */
+export function isPlainNumber(value: unknown): value is bigint | number {
+  if (typeof value === "bigint") return true;
+  return typeof value === "number" && (Number.isSafeInteger(value) || Math.abs(value) === Number.POSITIVE_INFINITY);
+}
+
+function plainNumberTex(value: bigint | number): string {
+  if (value === Number.POSITIVE_INFINITY) return "\\infty";
+  return value === Number.NEGATIVE_INFINITY ? "-\\infty" : texInteger(String(value));
+}
+
 function numberCell(value: bigint | number): Cell {
+  if (Math.abs(Number(value)) === Number.POSITIVE_INFINITY && typeof value === "number") {
+    return { kind: "formula", text: String(value), tex: plainNumberTex(value) };
+  }
   const re: Decimal | undefined = parseDecimal(String(value));
   const exact = typeof value === "bigint" || Number.isSafeInteger(value);
   return re && exact ? { kind: "number", re } : { kind: "words", text: show.text(value) };

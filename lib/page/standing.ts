@@ -1,4 +1,5 @@
 import type { Standing } from "../proof/standing.ts";
+import { prose } from "./prose.ts";
 import { texProse } from "./tex.ts";
 
 /** The standing in one or two words. */
@@ -31,7 +32,7 @@ export function standingText(standing: Standing): string {
 
 /** The same as running text with its powers of ten as formulas. */
 export function standingProse(standing: Standing): string {
-  return standingText(standing).replace(/10\^(-?\d+)/g, (_, power: string) => `$10^{${power}}$`);
+  return prose(standingText(standing));
 }
 
 /** The same as a formula. */

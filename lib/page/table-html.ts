@@ -1,11 +1,12 @@
 // A table as HTML: digits are text set in figures of equal width, so they read without a mathematics renderer too, and
 // are copied ungrouped; formulas stand in $...$, which the front ends typeset.
 
-import { type Decimal, fractionGroups, integerGroups } from "./digits.ts";
+import { type Decimal, fractionGroups, inLines, integerGroups } from "./digits.ts";
 import { escapeHtml } from "./html.ts";
-import type { Cell, Show } from "./kind.ts";
+import type { Cell, NumberCell, Show } from "./kind.ts";
 import type { Table } from "./table.ts";
-import { type Column, layout, type NumberWidths } from "./table-layout.ts";
+import { bothParts, type Column, type NumberWidths } from "./table-column.ts";
+import { layout } from "./table-layout.ts";
 import { texName } from "./tex.ts";
 
 const RULE = "1px solid currentColor";
@@ -54,31 +55,50 @@ function wordsHtml(text: string): string {
 }
 
 function tableCell(html: string, style: string, isHead: boolean): string {
-  return isHead ? `<th scope="row" style="${style}">${html}</th>` : `<td style="${style}">${html}</td>`;
+  return isHead
+    ? `<th scope="row" style="${style};white-space:nowrap">${html}</th>`
+    : `<td style="${style}">${html}</td>`;
 }
 
-function numberHtml(number: Cell & { readonly kind: "number" }, column: Column): string {
-  const re = number.re ? decimalHtml(number.re, column.re) : "";
-  if (!number.im) return re;
-  const sign = number.im.negative ? "−" : "+";
-  const joint = number.re ? ` ${sign} ` : number.im.negative ? "−" : "";
-  const im = decimalHtml({ ...number.im, negative: false }, column.im && { ...column.im, signed: false });
-  return `${re}${joint}${im} <i>i</i>`;
+function numberHtml({ re, im }: NumberCell, column: Column): string {
+  const { groups } = column;
+  const first = re ? decimalHtml(re, column.re, groups) : "";
+  if (!im) return first;
+  if (!column.stacked) {
+    const sign = im.negative ? "−" : "+";
+    const joint = re ? ` ${sign} ` : im.negative ? "−" : "";
+    const second = decimalHtml({ ...im, negative: false }, column.im && { ...column.im, signed: false }, groups);
+    return `${first}${joint}${second} <i>i</i>`;
+  }
+  const common = bothParts(column);
+  const above = re ? `${decimalHtml(re, common, groups)}<br>` : "";
+  return `${above}${decimalHtml(im, common, groups, im.negative ? "−" : re ? "+" : "")} <i>i</i>`;
 }
 
-function decimalHtml(decimal: Decimal, widths: NumberWidths | undefined): string {
-  const whole = `${decimal.negative ? "−" : ""}${spaced(integerGroups(decimal.integer))}`;
+function decimalHtml(
+  decimal: Decimal,
+  widths: NumberWidths | undefined,
+  groups: number,
+  sign = decimal.negative ? "−" : "",
+): string {
   const room = widths ? widths.integer + (widths.signed ? 1 : 0) : 0;
-  // One ch is the width of the digit 0, so this holds in any face with equal figures.
-  const integer =
-    room > 1
-      ? `<span style="display:inline-block;min-width:${room}ch;text-align:right">${whole}</span>`
-      : `<span>${whole}</span>`;
-  const fraction = decimal.fraction === "" ? "" : `.${spaced(fractionGroups(decimal.fraction))}`;
+  const [start = [], ...rest] = inLines(fractionGroups(decimal.fraction), groups);
+  const whole = padded(`${sign}${spaced(integerGroups(decimal.integer))}`, room);
+  const lines = rest.map((line) => `<br>${padded("", Math.max(1, room))}${HIDDEN_POINT}${spaced(line)}`);
+  const fraction = start.length === 0 ? "" : `.${spaced(start)}${lines.join("")}`;
   const dots = decimal.continues ? "..." : "";
   const power = decimal.exponent === 0 ? "" : ` · 10<sup>${String(decimal.exponent).replace("-", "−")}</sup>`;
   const radius = decimal.radius === undefined ? "" : radiusHtml(decimal, widths);
-  return `${integer}${fraction}${dots}${power}${radius}`;
+  return `${whole}${fraction}${dots}${power}${radius}`;
+}
+
+/** Where a number goes on in a further line, its digits stand under the first ones behind the point. */
+const HIDDEN_POINT = '<span style="visibility:hidden">.</span>';
+
+/** Set flush right in room for so many digits: one ch is the width of the digit 0, in any face with equal figures. */
+function padded(html: string, room: number): string {
+  if (room <= 1 && html !== "") return `<span>${html}</span>`;
+  return `<span style="display:inline-block;min-width:${room}ch;text-align:right">${html}</span>`;
 }
 
 function radiusHtml(decimal: Decimal, widths: NumberWidths | undefined): string {

@@ -5,22 +5,9 @@ import { PrecisionError } from "../proof/errors.ts";
 import type { Decimal } from "./digits.ts";
 import type { Cell, Show } from "./kind.ts";
 import type { Table } from "./table.ts";
+import type { Column, NumberWidths } from "./table-column.ts";
+import { fitted } from "./table-fit.ts";
 import { texName } from "./tex.ts";
-
-/** Widths in digits of the parts of the numbers in a column. */
-export interface NumberWidths {
-  /** Digits before the point, with a place for a sign where one number has it. */
-  readonly integer: number;
-  readonly signed: boolean;
-  readonly fraction: number;
-}
-
-export interface Column {
-  readonly head: string;
-  /** Absent: the column holds no numbers. */
-  readonly re?: NumberWidths;
-  readonly im?: NumberWidths;
-}
 
 export interface Layout {
   readonly columns: readonly Column[];
@@ -42,7 +29,7 @@ export function layout(table: Table, show: Show): Layout {
       rows.map((row) => row[k]),
     ),
   );
-  return { columns, rows, omitted: table.rows.length - rows.length };
+  return { columns: fitted(columns, rows), rows, omitted: table.rows.length - rows.length };
 }
 
 function cellOf(value: unknown, show: Show): Cell {
@@ -70,16 +57,21 @@ function isSymbol(text: string): boolean {
 
 function column(head: string, cells: readonly (Cell | undefined)[]): Column {
   const numbers = cells.flatMap((cell) => (cell?.kind === "number" ? [cell] : []));
-  const re = widths(numbers.flatMap((cell) => cell.re ?? []));
-  const im = widths(numbers.flatMap((cell) => cell.im ?? []));
-  return { head, ...(re ? { re } : {}), ...(im ? { im } : {}) };
+  const re = numberWidths(numbers.flatMap((cell) => cell.re ?? []));
+  const im = numberWidths(numbers.flatMap((cell) => cell.im ?? []));
+  return { head, stacked: false, groups: Number.POSITIVE_INFINITY, ...(re ? { re } : {}), ...(im ? { im } : {}) };
 }
 
-function widths(decimals: readonly Decimal[]): NumberWidths | undefined {
+function numberWidths(decimals: readonly Decimal[]): NumberWidths | undefined {
   if (decimals.length === 0) return undefined;
   return {
     integer: Math.max(...decimals.map(({ integer }) => integer.length)),
     signed: decimals.some(({ negative }) => negative),
     fraction: Math.max(...decimals.map(({ fraction }) => fraction.length)),
+    tail: Math.max(...decimals.map(tail)),
   };
+}
+
+function tail({ continues, exponent, radius }: Decimal): number {
+  return (continues ? 1.5 : 0) + (exponent === 0 ? 0 : 5) + (radius === undefined ? 0 : 9);
 }

@@ -1,7 +1,8 @@
-import { type Decimal, texDecimalLine } from "./digits.ts";
-import type { Cell, Show } from "./kind.ts";
+import { type Decimal, texDecimal } from "./digits.ts";
+import type { Cell, NumberCell, Show } from "./kind.ts";
 import type { Table } from "./table.ts";
-import { type Column, layout, type NumberWidths } from "./table-layout.ts";
+import { bothParts, type Column, type NumberWidths } from "./table-column.ts";
+import { layout } from "./table-layout.ts";
 import { array, texName, texProse, texWords } from "./tex.ts";
 
 /** The table as an array; digits that are missing are set as blanks of the same width. */
@@ -26,17 +27,29 @@ function cellTex(cell: Cell | undefined, column: Column): string {
   if (!cell) return "";
   if (cell.kind === "words") return cell.text === "" ? "" : texProse(cell.text);
   if (cell.kind === "formula") return cell.tex;
-  const re = cell.re ? aligned(cell.re, column.re) : "";
-  if (!cell.im) return re;
-  const { negative } = cell.im;
-  const joint = cell.re ? (negative ? " - " : " + ") : negative ? "-" : "";
-  const im = aligned({ ...cell.im, negative: false }, column.im && { ...column.im, signed: false });
-  return `${re}${joint}${im}\\,i`;
+  return numberTex(cell, column);
 }
 
-function aligned(decimal: Decimal, widths: NumberWidths | undefined): string {
-  const line = texDecimalLine(decimal);
+function numberTex({ re, im }: NumberCell, column: Column): string {
+  const first = re ? aligned(re, column.re, column.groups) : "";
+  if (!im) return first;
+  if (!column.stacked) {
+    const joint = re ? (im.negative ? " - " : " + ") : im.negative ? "-" : "";
+    const second = aligned({ ...im, negative: false }, column.im && { ...column.im, signed: false }, column.groups);
+    return `${first}${joint}${second}\\,i`;
+  }
+  const common = bothParts(column);
+  const above = re ? [[aligned(re, common, column.groups)]] : [];
+  const sign = im.negative ? "-" : re ? "+" : "";
+  return array("l", [...above, [`${aligned(im, common, column.groups, sign)}\\,i`]]);
+}
+
+/** The number with blanks in place of a sign and of digits that it does not have. */
+function aligned(decimal: Decimal, widths: NumberWidths | undefined, groups: number, sign?: string): string {
+  const shown = sign ?? (decimal.negative ? "-" : "");
+  const line = texDecimal(decimal, groups, shown);
   if (!widths) return line;
-  const blanks = `${widths.signed && !decimal.negative ? "-" : ""}${"0".repeat(widths.integer - decimal.integer.length)}`;
+  const missing = "0".repeat(Math.max(0, widths.integer - decimal.integer.length));
+  const blanks = `${widths.signed && shown === "" ? "-" : ""}${missing}`;
   return `${blanks === "" ? "" : `\\phantom{${blanks}}`}${line}`;
 }

@@ -1,7 +1,8 @@
 import { type Decimal, plainDecimal } from "./digits.ts";
 import type { Cell, Show } from "./kind.ts";
 import type { Table } from "./table.ts";
-import { type Column, layout, type NumberWidths } from "./table-layout.ts";
+import type { Column, NumberWidths } from "./table-column.ts";
+import { layout } from "./table-layout.ts";
 
 /** The table as lines of text, columns two spaces apart. */
 export function tableText(table: Table, show: Show): string {

@@ -2,8 +2,10 @@ import temml from "temml";
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import { provedDigits } from "../../../lib/number/context.ts";
 import { complex, enclose, exact, real } from "../../../lib/number/convert.ts";
+import { agm } from "../../../lib/number/functions.ts";
 import { Rational } from "../../../lib/number/rational.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
+import { parseDecimal, texDecimal } from "../../../lib/page/digits.ts";
 import { table } from "../../../lib/page/table.ts";
 
 /** First 60 decimals of √2, from the published expansion (OEIS A002193). */
@@ -25,22 +27,39 @@ const bare = (tex: string) =>
 
 describe("numbers on a page", () => {
   it("a defined number shows its digits with dots, in groups in TeX — oracle: published digits of √2", () => {
-    const root = real(2).sqrt();
-    expect(text(root)).toMatch(/^1\.41421356237\d+\.\.\.$/);
-    expect(SQRT2.startsWith(text(root).replace("...", ""))).toBe(true);
-    expect(bare(latex(root))).toBe(text(root).replace("...", "\\ldots"));
-    expect(latex(root)).toContain("1.41421\\,35623\\,73095");
+    const root = real(2).sqrt().times(real(1).plus(0));
+    const sum = agm(root, root);
+    expect(text(sum)).toMatch(/^1\.41421356237\d+\.\.\.$/);
+    expect(SQRT2.startsWith(text(sum).replace("...", ""))).toBe(true);
+    expect(bare(latex(sum))).toBe(text(sum).replace("...", "\\ldots"));
+    expect(latex(sum)).toContain("1.41421\\,35623\\,73095");
+  });
+
+  it("an exact root is shown as such, with its digits", () => {
+    expect(text(real("3/10").sqrt())).toMatch(/^1\/10 √30 = 0\.5477225\d+\.\.\.$/);
+    expect(latex(real("3/10").sqrt())).toContain("\\frac{\\sqrt{30}}{10} = 0.54772");
   });
 
   it("more digits than a line holds go on below, none lost — oracle: its own text", () => {
-    const root = real(2).sqrt().digits(133);
-    expect(bare(latex(root))).toBe(text(root).replace("...", "\\ldots"));
-    expect(latex(root)).toContain("\\phantom{1.}");
+    const number = agm(1, 2).digits(133);
+    expect(bare(latex(number))).toBe(text(number).replace("...", "\\ldots"));
+    expect(latex(number)).toContain("\\phantom{1.}");
+  });
+
+  it("no line is left with a digit or two: 51 to 60 places stay on one, 101 to 110 are shared out", () => {
+    const rows = (places: number) => {
+      const tex = texDecimal(parseDecimal(`0.${"7".repeat(places)}`)!);
+      return tex.split("\\\\").map((row) => row.replace(/\\phantom\{0\.\}/, "").match(/7/g)?.length ?? 0);
+    };
+    expect(rows(51)).toEqual([51]);
+    expect(rows(60)).toEqual([60]);
+    expect(rows(100)).toEqual([50, 50]);
+    expect(rows(101)).toEqual([45, 45, 11]);
   });
 
   it("exact numbers are fractions and roots", () => {
     expect(latex(real("-22/7"))).toBe("$\\displaystyle -\\frac{22}{7}$");
-    expect(latex(exact`(1+√5)/2`)).toBe("$\\displaystyle \\frac{1}{2} + \\frac{1}{2}\\sqrt{5}$");
+    expect(latex(exact`(1+√5)/2`)).toBe("$\\displaystyle \\frac{1 + \\sqrt{5}}{2}$");
     expect(latex(complex("1/2", "-3/4"))).toBe("$\\displaystyle \\frac{1}{2} - \\frac{3}{4}\\,i$");
     expect(latex(Rational.of(12345678n))).toBe("$\\displaystyle 12\\,345\\,678$");
   });
@@ -74,6 +93,28 @@ describe("numbers on a page", () => {
       [enclose("1.25", "1e-6")],
     ]);
     expect(text(numbers)).toBe(["   1.4142135...", "-282.84...", "   1.25      ± 1e-6"].join("\n"));
+  });
+
+  it("a table wider than a page puts parts under each other, then breaks digits — oracle: the digits themselves", () => {
+    const z = complex(agm(1, 2), agm(1, 3).neg());
+    const html = (value: unknown) => bundle(value)?.["text/html"] as string;
+    const breaks = (value: unknown) => html(value).match(/<br>/g)?.length ?? 0;
+    expect(breaks(table([["z", z]]))).toBe(1);
+    expect(html(table([["z", z]])).replace(/<[^>]*>/g, "")).toBe(
+      `${text(z).replace(" - ", "−").replace("z", "")}`.replace(/^/, "$z$"),
+    );
+    const two = table([[agm(1, 2), agm(1, 3)]]);
+    expect(breaks(two)).toBeGreaterThanOrEqual(2);
+    expect(bare(latex(two)).replace(/&|\\begin\{array\}\{ll\}/g, "")).toContain(
+      text(agm(1, 2)).replace("...", "\\ldots"),
+    );
+    expect(breaks(table([[agm(1, 2).digits(10), z.digits(10)]]))).toBe(0);
+  });
+
+  it("integers and infinity of the language are typeset", () => {
+    expect(latex(12345)).toBe("$\\displaystyle 12\\,345$");
+    expect(latex(Number.POSITIVE_INFINITY)).toBe("$\\displaystyle \\infty$");
+    expect(latex(0.5)).toBeUndefined();
   });
 
   it("data carry every number as text", () => {

@@ -1,0 +1,34 @@
+// Running text for text/latex: words stand as they are, where a reader of HTML and one of TeX see the same; everything else
+// becomes a formula.
+
+import { splitFormulas, texWords } from "./tex.ts";
+
+/** Characters that mean themselves in HTML and in TeX. */
+const SAFE = /^[A-Za-z0-9 ,.;:()'!?/+=@*[\]—-]*$/;
+
+/** Text, which may hold $formulas$, as running text with every other special character in a formula. */
+export function prose(text: string): string {
+  return splitFormulas(text)
+    .map((piece) => (piece.formula ? `$${piece.text}$` : words(piece.text)))
+    .join("");
+}
+
+function words(text: string): string {
+  return text
+    .replace(/\p{Cc}+/gu, " ")
+    .split(/( +)/)
+    .map((word) => (SAFE.test(word) ? word : special(word)))
+    .join("");
+}
+
+/** A word with its opening brackets and closing punctuation left outside the formula. */
+function special(word: string): string {
+  const [, before = "", core = "", after = ""] = /^([([]*)(.*?)([.,;:)\]]*)$/u.exec(word) ?? [];
+  return `${before}$${wordTex(core)}$${after}`;
+}
+
+/** A word with special characters: x^3, 10^-5 and 4*x are read as powers and products, others are set as words. */
+function wordTex(word: string): string {
+  if (!/^[\w^*+/().,=-]+$/.test(word) || !word.includes("^") || /\^(?![-\w])|[_]/.test(word)) return texWords(word);
+  return word.replace(/\^(-?\w+)/g, "^{$1}").replace(/\*/g, " ");
+}

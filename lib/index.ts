@@ -38,9 +38,11 @@ export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/value
 
 // Lattices and curves
 
+export { ComplexMultiplication } from "./surface/complex-multiplication.ts";
 export { type Line, PlaneCubic, type ThroughPoint } from "./surface/cubic.ts";
 export { Curve } from "./surface/curve.ts";
 export { EllipticFunction, type FunctionPoint } from "./surface/elliptic-function.ts";
+export { Homothety, homothety } from "./surface/homothety.ts";
 export {
   type IntegerMatrix,
   Lattice,

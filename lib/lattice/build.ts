@@ -8,6 +8,7 @@ import type { Rational } from "../number/rational.ts";
 import { DomainError, UndecidedError } from "../proof/errors.ts";
 import { complexPeriods, type PeriodPair, realPeriods } from "./agm-periods.ts";
 import {
+  type Canonical,
   canonicalFrom,
   canonicalReal,
   canonicalUndecided,
@@ -47,14 +48,18 @@ export function latticeOfPeriods(w1: Quantity, w2: Quantity): PeriodLattice {
   const given = { kind: "periods", w1, w2 } as const;
   const standing = jointly(w1, w2);
   const rational = exact && exactGram(exact);
+  const basis = (prec: number) => ({ w1: discOf(w1, prec), w2: discOf(w2, prec) });
+  return real({ given, standing, ...canonicalOnLadder(basis, conjugation !== undefined, rational) }, conjugation);
+}
+
+/** The canonical reduction of a basis that can be had at any precision, flagged where the ladder does not decide it. */
+export function canonicalOnLadder(basis: (prec: number) => PeriodPair, jReal: boolean, rational?: Gram): Canonical {
   for (const prec of BOUNDARY_LADDER) {
-    const basis = { w1: discOf(w1, prec), w2: discOf(w2, prec) };
-    const canonical = canonicalFrom(basis, prec, rational);
-    if (canonical) return real({ given, standing, ...canonical }, conjugation);
+    const canonical = canonicalFrom(basis(prec), prec, jReal, rational);
+    if (canonical) return canonical;
   }
   const prec = BOUNDARY_LADDER.at(-1)!;
-  const basis = { w1: discOf(w1, prec), w2: discOf(w2, prec) };
-  return real({ given, standing, ...canonicalUndecided(basis, prec) }, conjugation);
+  return canonicalUndecided(basis(prec), prec);
 }
 
 function real(lattice: PeriodLattice, conjugation: Conjugation | undefined): PeriodLattice {
@@ -177,7 +182,7 @@ export function latticeOfInvariants(g2: Quantity, g3: Quantity): PeriodLattice {
     if (disc.isZero(delta)) throw degenerate();
     if (disc.containsZero(delta)) continue;
     basis = complexPeriods(cubicRoots(discOf(g2, prec + 32), discOf(g3, prec + 32), delta, prec), prec);
-    const canonical = canonicalFrom(basis, prec);
+    const canonical = canonicalFrom(basis, prec, false);
     if (canonical) return anchored(given, basis, canonical, prec);
   }
   if (!basis) throw singularOrNot();
@@ -217,7 +222,7 @@ function realInvariants(g2: Quantity, g3: Quantity): PeriodLattice {
   const prec = 256;
   const enclosed = discriminant(g2, g3, prec);
   const basis = realPeriods(cubicRoots(discOf(g2, prec), discOf(g3, prec), enclosed, prec), components, prec);
-  const canonical = canonicalFrom(basis, prec) ?? canonicalUndecided(basis, prec);
+  const canonical = canonicalFrom(basis, prec, false) ?? canonicalUndecided(basis, prec);
   return { given, standing, ...canonical, conjugation, components };
 }
 

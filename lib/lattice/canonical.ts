@@ -79,9 +79,10 @@ export function matrixBits({ a, b, c, d }: Matrix): number {
 
 /** Length and inclination of an approximately reduced basis, as far as enclosures tell. */
 interface Position {
-  /** Sign of |τ| − 1 and of 1/2 − |Re τ|. */
+  /** Sign of |τ| − 1, of 1/2 − |Re τ| and of Re τ. */
   readonly arc: Sign | undefined;
   readonly side: Sign | undefined;
+  readonly lean: Sign | undefined;
 }
 
 function position({ w1, w2 }: PeriodPair, prec: number): Position {
@@ -91,6 +92,7 @@ function position({ w1, w2 }: PeriodPair, prec: number): Position {
   return {
     arc: ball.compare(C, A),
     side: ball.compare(A, ball.ldexp(ball.abs(B), 1)),
+    lean: ball.sign(B),
   };
 }
 
@@ -101,9 +103,11 @@ function squareLength(w: Disc, prec: number): Ball {
 /**
  * The canonical matrix from enclosures of a basis, if they decide it; undefined asks for more digits.
  *
- * Domain   `rational` is the exact form |Xω1 + Yω2|² up to a factor, where there is one: it settles every tie.
+ * Domain   `jReal` says that j is known to be real, as for a lattice that is its own conjugate: then τ is on the part of the boundary that
+ *          its enclosure meets, if that is one part only. `rational` is the exact form |Xω1 + Yω2|² up to a factor, where there is
+ *          one: it settles every tie.
  */
-export function canonicalFrom(basis: PeriodPair, prec: number, rational?: Gram): Canonical | undefined {
+export function canonicalFrom(basis: PeriodPair, prec: number, jReal: boolean, rational?: Gram): Canonical | undefined {
   if (rational) {
     const m = reduceForm(rational);
     const sign = signed(transformed(basis, m, prec), m, isSquare(rational, m), isHexagonal(rational, m));
@@ -112,9 +116,22 @@ export function canonicalFrom(basis: PeriodPair, prec: number, rational?: Gram):
   const m = midpointReduction(basis);
   const reduced = transformed(basis, m, prec);
   const at = position(reduced, prec);
-  if (at.arc !== 1 || at.side !== 1) return undefined;
-  const sign = signed(reduced, m, false, false);
-  return sign && { toReduced: sign, boundary: "inside" };
+  if (at.arc === 1 && at.side === 1) {
+    const sign = signed(reduced, m, false, false);
+    return sign && { toReduced: sign, boundary: "inside" };
+  }
+  const tied = jReal ? tieMatrix(at) : undefined;
+  if (!tied) return undefined;
+  const sign = signed(transformed(reduced, tied, prec), compose(tied, m), false, false);
+  return sign && { toReduced: sign, boundary: "on" };
+}
+
+/** For real j: onto Re τ = −1/2, or onto the left half of the arc. */
+function tieMatrix({ arc, side, lean }: Position): Matrix | undefined {
+  if (lean === undefined || lean === 0) return undefined;
+  if (arc === 1 && side === undefined) return lean < 0 ? IDENTITY : matrix(1, -1, 0, 1);
+  if (side === 1 && arc === undefined) return lean < 0 ? IDENTITY : matrix(0, -1, 1, 0);
+  return undefined;
 }
 
 /** What is left when the digits run out: the matrix of the midpoints, said to be undecided. */

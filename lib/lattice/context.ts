@@ -4,8 +4,10 @@ import { ontoReal } from "../function/enclosure.ts";
 import type { Matrix } from "../function/matrix.ts";
 import { type ReducedLattice, reducedInvariants, reducedLattice, reducedRoots } from "../function/reduced.ts";
 import { combination } from "../function/weierstrass.ts";
+import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
+import type { Rational } from "../number/rational.ts";
 import { PrecisionError } from "../proof/errors.ts";
 import { complexPeriods, type PeriodPair, realPeriods } from "./agm-periods.ts";
 import { discriminant } from "./build.ts";
@@ -52,6 +54,12 @@ export function periods(lattice: PeriodLattice, prec: number): PeriodPair {
 
 function computePeriods(lattice: PeriodLattice, prec: number): PeriodPair {
   const { given } = lattice;
+  if (given.kind === "points") {
+    const { w1, w2 } = periods(given.base, prec + 8);
+    const point = ([r, s]: readonly [Rational, Rational]) =>
+      disc.add(multiple(w1, r, prec + 8), multiple(w2, s, prec + 8), prec);
+    return { w1: point(given.rows[0]), w2: point(given.rows[1]) };
+  }
   if (given.kind === "periods") return { w1: discOf(given.w1, prec), w2: discOf(given.w2, prec) };
   const refinable = isRefinable(given.g2) && isRefinable(given.g3);
   let pair = meanPeriods(lattice, prec);
@@ -60,6 +68,12 @@ function computePeriods(lattice: PeriodLattice, prec: number): PeriodPair {
     pair = meanPeriods(lattice, wp);
   }
   return { w1: disc.round(pair.w1, prec), w2: disc.round(pair.w2, prec) };
+}
+
+/** q·w for a rational q. */
+export function multiple(w: Disc, q: Rational, prec: number): Disc {
+  if (q.sign() === 0) return disc.zero;
+  return disc.divBall(disc.mulInt(w, q.num, prec), ball.fromInt(q.den), prec);
 }
 
 function accuracy({ w1, w2 }: PeriodPair): number {

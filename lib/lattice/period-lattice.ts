@@ -3,13 +3,18 @@
 
 import type { Matrix } from "../function/matrix.ts";
 import type { NumberStanding } from "../number/origin.ts";
+import type { Rational } from "../number/rational.ts";
 import type { PeriodPair } from "./agm-periods.ts";
 import type { Quantity } from "./quantity.ts";
 
 /** What a lattice was given by. Periods are positively oriented here. */
 export type Given =
   | { readonly kind: "periods"; readonly w1: Quantity; readonly w2: Quantity }
-  | { readonly kind: "invariants"; readonly g2: Quantity; readonly g3: Quantity };
+  | { readonly kind: "invariants"; readonly g2: Quantity; readonly g3: Quantity }
+  | { readonly kind: "points"; readonly base: PeriodLattice; readonly rows: RationalRows };
+
+/** Periods as rational combinations of those of another lattice: ω1′ = rows[0]·(ω1, ω2), ω2′ = rows[1]·(ω1, ω2). */
+export type RationalRows = readonly [readonly [Rational, Rational], readonly [Rational, Rational]];
 
 /**
  * Integer action of complex conjugation on a basis: the conjugates of ω1 and ω2 are a11 ω1 + a12 ω2 and a21 ω1 + a22 ω2.

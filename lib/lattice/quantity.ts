@@ -3,6 +3,7 @@
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
+import { JOIN } from "../number/operations.ts";
 import { asDisc, type Node, type NumberStanding, refinable, refineEnclosure } from "../number/origin.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
@@ -43,10 +44,19 @@ export function exactComplex(q: Quantity): ExactComplex | undefined {
   if (q instanceof Rational) return { real: q, imag: Rational.zero, root: 1n };
   if (isExactComplex(q)) return q;
   const { exact } = q;
+  if (!exact) return joined(q);
   if (exact instanceof Rational) return { real: exact, imag: Rational.zero, root: 1n };
   if (!(exact instanceof Quadratic)) return undefined;
   if (exact.isRational()) return { real: exact.a, imag: Rational.zero, root: 1n };
   return exact.d < 0n ? { real: exact.a, imag: exact.b, root: -exact.d } : undefined;
+}
+
+/** a + i·b√d of exact parts, which no quadratic number of one record is. */
+function joined({ origin }: Node): ExactComplex | undefined {
+  if (origin?.operation !== JOIN) return undefined;
+  const [re, im] = origin.operands.map((part) => (part as Node).exact);
+  if (!(re instanceof Rational && im instanceof Quadratic && im.d > 0n && im.a.sign() === 0)) return undefined;
+  return { real: re, imag: im.b, root: im.d };
 }
 
 export function isReal(q: Quantity): boolean {

@@ -3,8 +3,9 @@
 import { reduceForm } from "../function/matrix.ts";
 import * as ball from "../number/ball.ts";
 import * as disc from "../number/disc.ts";
-import { exactForm, LADDER } from "./build.ts";
+import { LADDER } from "./build.ts";
 import { reduced } from "./context.ts";
+import { exactFormOf } from "./exact-form.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
 import { discOf, exactRational, type Quantity } from "./quantity.ts";
 
@@ -17,7 +18,7 @@ export type Shape = "square" | "hexagonal" | "rectangular" | "rhombic" | "genera
 export function shapeOf(lattice: PeriodLattice): Shape | undefined {
   const { given } = lattice;
   if (given.kind === "invariants") return shapeByInvariants(lattice, given.g2, given.g3);
-  const form = exactForm(given.w1, given.w2);
+  const form = exactFormOf(given);
   if (form) {
     const m = reduceForm(form);
     const value = (x: bigint, y: bigint, u: bigint, v: bigint) =>
@@ -53,6 +54,9 @@ function byEnclosure(lattice: PeriodLattice): Shape | undefined {
     const norm = disc.real(disc.mul(tau, disc.conj(tau), prec));
     const above = ball.compare(norm, ball.one) === 1;
     const inside = ball.compare(ball.ldexp(x, 1), ball.one) === -1;
+    // A tie that was decided exactly is one of a lattice with a reflection; one strict inequality rules out a corner or i.
+    const leaning = ball.sign(disc.real(tau)) !== undefined;
+    if (lattice.boundary === "on" && (above || (inside && leaning))) return "rhombic";
     if (!above || !inside) continue;
     if (tau.axis === "imaginary") return "rectangular";
     if (ball.sign(disc.real(tau)) !== undefined) return "general";

@@ -2,11 +2,10 @@
 
 import { ontoImaginary, ontoReal } from "../function/enclosure.ts";
 import { type Wanted, type WeierstrassValues, weierstrass } from "../function/weierstrass.ts";
-import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import type { Rational } from "../number/rational.ts";
-import { periods, reduced } from "./context.ts";
+import { multiple, periods, reduced } from "./context.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
 
 export type Coordinates = readonly [Rational, Rational];
@@ -15,11 +14,6 @@ export type Coordinates = readonly [Rational, Rational];
 export function pointAt(lattice: PeriodLattice, [r, s]: Coordinates, prec: number): Disc {
   const { w1, w2 } = periods(lattice, prec + 8);
   return disc.add(multiple(w1, r, prec + 8), multiple(w2, s, prec + 8), prec);
-}
-
-function multiple(w: Disc, q: Rational, prec: number): Disc {
-  if (q.sign() === 0) return disc.zero;
-  return disc.divBall(disc.mulInt(w, q.num, prec), ball.fromInt(q.den), prec);
 }
 
 /** The representative with coordinates in (−1/2, 1/2]. */

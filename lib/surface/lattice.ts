@@ -1,4 +1,5 @@
 import { latticeOfInvariants, latticeOfPeriods, orientation } from "../lattice/build.ts";
+import { complexMultiplication } from "../lattice/complex-multiplication.ts";
 import { rationalRoot } from "../lattice/exact-roots.ts";
 import {
   AREA,
@@ -14,12 +15,15 @@ import {
 } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
 import type { Quantity } from "../lattice/quantity.ts";
+import { determinant, generatedRows, latticeInCoordinates, type Rows } from "../lattice/related.ts";
 import { type Shape, shapeOf } from "../lattice/shape.ts";
+import type { Coordinates } from "../lattice/torus.ts";
 import type { Exact } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
 import { apply, Complex, type ComplexNumeric, type Numeric, Real, scalar } from "../number/values.ts";
 import type { ConventionKey } from "../proof/conventions.ts";
 import { DomainError, UndecidedError } from "../proof/errors.ts";
+import { ComplexMultiplication } from "./complex-multiplication.ts";
 import { EllipticFunction } from "./elliptic-function.ts";
 import { QuasiPeriodicFunction } from "./quasi-periodic-function.ts";
 import { TorusPoint } from "./torus-point.ts";
@@ -62,6 +66,8 @@ export class Lattice {
   readonly data: PeriodLattice;
   /** What was done to the input, where something was: a swap of the periods, a rescaling. */
   readonly notice: string | undefined;
+  /** For a sub- or overlattice: the lattice it was made from, its basis in coordinates of that one, and the index of the smaller one. */
+  readonly within: { readonly lattice: Lattice; readonly rows: Rows; readonly index: bigint } | undefined;
   /** ℘ as a function: L.wp(z), L.wp.prime(z). */
   readonly wp: EllipticFunction;
   /** Weierstrass ζ, ζ(z + ω_k) = ζ(z) + η_k. */
@@ -69,9 +75,10 @@ export class Lattice {
   /** Weierstrass σ. */
   readonly sigma: QuasiPeriodicFunction;
 
-  constructor(data: PeriodLattice, notice?: string) {
+  constructor(data: PeriodLattice, notice?: string, within?: Lattice["within"]) {
     this.data = data;
     this.notice = notice;
+    this.within = within;
     this.wp = EllipticFunction.wp(data);
     this.zeta = new QuasiPeriodicFunction(data, "zeta");
     this.sigma = new QuasiPeriodicFunction(data, "sigma");
@@ -191,10 +198,67 @@ export class Lattice {
     return Complex.from(apply(LOGARITHM, [this.data, scalar(x, "logarithm"), scalar(y, "logarithm")]));
   }
 
+  /** Whether z is a lattice point, by exact coordinates. Throws UndecidedError for a number that is near one. */
+  contains(z: ComplexNumeric): boolean {
+    if (z instanceof TorusPoint && z.lattice === this.data && !z.remainder) return z.isLatticePoint;
+    const { rest, nearest } = this.locate(z);
+    if (!rest.overlaps(0)) return false;
+    throw new UndecidedError({
+      subject: "contains",
+      given: `${z}, which cannot be told from ${nearest.name}`,
+      expected: "a point with exact coordinates, as L.at(1/2, 0)",
+    });
+  }
+
+  /**
+   * The lattice Λ + Zp + ...: this one with further points of finite order.
+   *
+   * Domain   points of this lattice with exact coordinates. Index, and matrix of the new basis in the old one, are in `within`.
+   * Throws   TypeError for a number: near a torsion point is not at one.
+   */
+  overlattice(...points: readonly TorusPoint[]): Lattice {
+    const rows = generatedRows(points.map((p) => exactCoordinates(this, p)));
+    return this.inCoordinates(rows);
+  }
+
+  /**
+   * The lattice with the basis (M11 ω1 + M12 ω2, M21 ω1 + M22 ω2).
+   * Domain   an integer matrix of determinant not 0; for a negative one the new periods are exchanged.
+   */
+  sublattice(matrix: readonly [readonly [Numeric, Numeric], readonly [Numeric, Numeric]]): Lattice {
+    const rows = matrix.map((row) => row.map(coordinate)) as unknown as Rows;
+    if (!rows.flat().every((q) => q.isInteger())) {
+      throw new DomainError({
+        subject: "sublattice",
+        given: `the matrix ${rows.map((row) => `[${row}]`)}`,
+        expected: "integers",
+        hint: "overlattice takes points with fractions.",
+        argument: "matrix",
+      });
+    }
+    return this.inCoordinates(rows);
+  }
+
+  private inCoordinates(rows: Rows): Lattice {
+    const data = latticeInCoordinates(this.data, rows);
+    const given = data.given as Extract<PeriodLattice["given"], { kind: "points" }>;
+    const ratio = determinant(given.rows);
+    const index = ratio.isInteger() ? ratio.num : ratio.den;
+    return new Lattice(data, undefined, { lattice: this, rows: given.rows, index });
+  }
+
+  /**
+   * Complex multiplication, by exact τ or j where there is one: the discriminant of the order, or why there is none. Enclosures alone
+   * give "consistent with" and "excluded".
+   */
+  complexMultiplication(): ComplexMultiplication {
+    return new ComplexMultiplication(complexMultiplication(this.data, this.j.exact));
+  }
+
   /** The conventions that the numbers of this lattice rest on. */
   get conventions(): readonly ConventionKey[] {
     const { given, components } = this.data;
-    if (given.kind === "periods") return ["cubic", "periods"];
+    if (given.kind !== "invariants") return ["cubic", "periods"];
     return ["cubic", "periods", components ? "realBasis" : "signOfPeriods"];
   }
 
@@ -202,6 +266,13 @@ export class Lattice {
     const [w1, w2] = this.periods;
     return `lattice with ${w1}, ${w2}`;
   }
+}
+
+function exactCoordinates(lattice: Lattice, p: TorusPoint): Coordinates {
+  if (p instanceof TorusPoint && p.lattice === lattice.data && !p.remainder) return p.coordinates;
+  throw new TypeError(
+    `overlattice: got ${p}, which is no point with exact coordinates in this lattice; expected one such as L.at(1/3, 0)`,
+  );
 }
 
 function coordinate(x: Numeric): Rational {

@@ -33,6 +33,12 @@ export function findings(diagnostics: readonly TS.Diagnostic[], edited: EditedTe
     .map((one) => finding(one, edited));
 }
 
+/** A finding in an edited text, at its place in the user's. */
+export function throughEdits(one: Finding, edited: EditedText): Finding {
+  const start = edited.toUser(one.start);
+  return { ...one, start, length: Math.max(1, edited.toUser(one.start + one.length) - start) };
+}
+
 function endInEdited(edited: EditedText): number {
   return edited.toEdited(edited.userLength);
 }

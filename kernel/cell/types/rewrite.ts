@@ -102,7 +102,8 @@ function cellFunction(source: TS.SourceFile, userEnd: number, pass: Pass, boxes:
   const user = source.statements.filter((statement) => statement.getStart(source) < userEnd);
   const head: TS.Statement[] = [];
   const body: TS.Statement[] = [];
-  for (const statement of user) rewriteStatement(statement, statement === user.at(-1), pass, head, body);
+  const last = user.findLast((statement) => !ts.isEmptyStatement(statement));
+  for (const statement of user) rewriteStatement(statement, statement === last, pass, head, body);
   const asynchronous = user.some(needsAsync);
   const parameter = (name: string) => factory.createParameterDeclaration(undefined, undefined, name);
   const cell = factory.createFunctionExpression(

@@ -1,6 +1,6 @@
 // One notebook as the compiler sees it: check and emit a cell, remember what it defined, answer questions.
 import type { CheckResult, CommittedCell, EmittedCell } from "../messages.ts";
-import { type Finding, findings, typeScriptError } from "./diagnostics.ts";
+import { type Finding, findings, throughEdits, typeScriptError } from "./diagnostics.ts";
 import { type Edit, EditedText, inOrder } from "./edits.ts";
 import { exportEdits } from "./exports.ts";
 import { NotebookHost, type Places, registry } from "./host.ts";
@@ -10,6 +10,7 @@ import { operatorFindings } from "./operator-findings.ts";
 import { hasOperators, operatorEdits, operatorImport, operatorPrefix } from "./operators.ts";
 import { type Declared, type Outline, outline, syntaxErrors } from "./outline.ts";
 import { rewriteCell } from "./rewrite.ts";
+import { finalObjectEdits, loopNotices, textNotices, withHint } from "./slips.ts";
 import { type SourceMapData, toUserMap } from "./sourcemap.ts";
 import { type TS, ts } from "./typescript.ts";
 import { Values } from "./values.ts";
@@ -58,20 +59,30 @@ export class NotebookTypes {
 
   /** Checks a cell; if it is right, emits what runs. */
   check(cell: number, executionCount: number, code: string): CheckResult {
-    const parsed = outline(code);
+    const typed = outline(code);
+    const braced = new EditedText(
+      code,
+      finalObjectEdits(code, typed, (text) => outline(text).source),
+    );
+    const text = braced.text;
+    const parsed = text === code ? typed : outline(text);
+    const failed = (found: readonly Finding[]): CheckResult => {
+      const shown = found.map((one) => withHint(throughEdits(one, braced), code));
+      return { status: "error", ...typeScriptError(code, executionCount, shown) };
+    };
     const syntax = syntaxErrors(parsed.source);
-    if (syntax.length > 0) return this.#failed(code, executionCount, findings(syntax, new EditedText(code, [])));
+    if (syntax.length > 0) return failed(findings(syntax, new EditedText(text, [])));
     const exported = exportEdits(parsed.source);
-    if (exported.refusals.length > 0) return this.#failed(code, executionCount, exported.refusals);
-    const prepared = this.#prepare(code, parsed, exported.edits);
-    const file = this.host.cellFile(cell);
+    if (exported.refusals.length > 0) return failed(exported.refusals);
+    const prepared = this.#prepare(text, parsed, exported.edits);
     this.host.setCell(cell, prepared.edited.text + prepared.around, true);
-    const found = this.#findings(file, code, prepared);
+    const found = this.#findings(this.host.cellFile(cell), text, prepared);
     if (found.length > 0) {
       this.host.dropCell(cell);
-      return this.#failed(code, executionCount, found);
+      return failed(found);
     }
-    return { status: "ok", emitted: this.#emit(cell, code, prepared, parsed) };
+    const emitted = this.#emit(cell, text, prepared, parsed);
+    return { status: "ok", emitted: { ...emitted, map: toUserMap(emitted.map, braced, code) } };
   }
 
   /** The text to check: operators as calls where library values may be met, and what stands around. */
@@ -83,18 +94,16 @@ export class NotebookTypes {
       this.#visibleLibrary(parsed),
     );
     const directed = seesLibrary(around, parsed.texts) && hasOperators(parsed.source);
-    if (!directed)
-      return {
-        edited: new EditedText(code, exported),
-        around: around.text,
-        library: around.library,
-        operators: undefined,
-      };
+    const { library } = around;
+    if (!directed) {
+      return { edited: new EditedText(code, exported), around: around.text, library, operators: undefined };
+    }
     const operators = operatorPrefix(code);
+    const edits = inOrder([...exported, ...operatorEdits(parsed.source, operators)]);
     return {
-      edited: new EditedText(code, inOrder([...exported, ...operatorEdits(parsed.source, operators)])),
+      edited: new EditedText(code, edits),
       around: `${around.text}\n${operatorImport(operators)}`,
-      library: around.library,
+      library,
       operators,
     };
   }
@@ -144,17 +153,13 @@ export class NotebookTypes {
     return this.libraryNames().filter((name) => parsed.words.has(name));
   }
 
-  #failed(code: string, executionCount: number, found: readonly Finding[]): CheckResult {
-    return { status: "error", ...typeScriptError(code, executionCount, found) };
-  }
-
   #emit(cell: number, code: string, prepared: Prepared, parsed: Outline): EmittedCell {
     const { edited, library, operators } = prepared;
     const program = this.service.getProgram() as TS.Program;
     const source = program.getSourceFile(this.host.cellFile(cell)) as TS.SourceFile;
     const checker = program.getTypeChecker();
-    const emit =
-      operators === undefined ? undefined : emitOperators(operators, new Values(checker, this.host.libraryFolder));
+    const values = new Values(checker, this.host.libraryFolder);
+    const emit = operators === undefined ? undefined : emitOperators(operators, values);
     const rewriting = rewriteCell(source, checker, edited.text.length, library, emit);
     const output = emitFiles(program, source, rewriting.transformer);
     const declared = [...parsed.declared.values()];
@@ -162,7 +167,9 @@ export class NotebookTypes {
     const frozen = parsed.nestedVar ? undefined : output.declarations;
     this.#pending.set(cell, { declared, text: frozen ?? this.host.cellText(cell) ?? "" });
     const map = toUserMap(JSON.parse(output.map) as SourceMapData, edited, code);
-    return { script: output.script, map, prefix: rewriting.prefix, boxes: rewriting.boxes, notices: [] };
+    const notices = textNotices(parsed, new Set(this.libraryNames()));
+    if (operators !== undefined) notices.push(...loopNotices(source, operators, values, checker));
+    return { script: output.script, map, prefix: rewriting.prefix, boxes: rewriting.boxes, notices };
   }
 
   #readLibraryNames(): readonly string[] {

@@ -28,6 +28,7 @@ const CASES: readonly Case[] = [
   ["no value of undefined", ["undefined"], ""],
   ["empty", [""], ""],
   ["a comment only", ["// nothing"], ""],
+  ["semicolons hide nothing", ["3;;"], "3"],
   ["a trailing comment", ["3 // three"], "3"],
   ["const, let and function persist", ["const c1 = 1; let l1 = 2; function f1() { return c1 + l1 }", "f1()"], "3"],
   ["a redeclaration with another type", ["let r1 = 1", "let r1 = 'one'", "r1.length"], "3"],

@@ -45,8 +45,13 @@ function cell(content: Cell | undefined, column: Column, isHead: boolean): strin
     const text = wordsHtml(content?.text ?? "");
     return tableCell(text, STYLE.words, isHead);
   }
-  const inner = content.kind === "formula" ? `$${escapeHtml(content.tex)}$` : numberHtml(content, column);
-  return tableCell(inner, STYLE.cell, isHead);
+  if (content.kind === "formula") return tableCell(`$${escapeHtml(content.tex)}$`, formulaStyle(content.text), isHead);
+  return tableCell(numberHtml(content, column), STYLE.cell, isHead);
+}
+
+/** Front ends that break long formulas measure the cell while it is still empty, so it has to have its width by itself. */
+function formulaStyle(text: string): string {
+  return `${STYLE.cell};min-width:${Math.min([...text].length, 50)}ch`;
 }
 
 /** Words, with the digits behind a Greek letter as its index. */

@@ -6,6 +6,7 @@ import { bitsOf, provedDigits } from "./context.ts";
 import * as disc from "./disc.ts";
 import { absBig, bitLength } from "./fixed/bits.ts";
 import { type Exact, isDisc, type NumberStanding, refinable, refineEnclosure } from "./origin.ts";
+import { decimalBounds } from "./print.ts";
 import { Quadratic } from "./quadratic.ts";
 import { Rational } from "./rational.ts";
 import { Complex, Real } from "./values.ts";
@@ -56,18 +57,11 @@ interface Scientific {
   readonly radius: string;
 }
 
-/** Middle as m·10^p with an integer m that keeps two digits of the radius, and the radius with two digits, rounded up over the rest. */
+/** With four digits of radius. */
 function scientific(x: Ball): Scientific {
   if (x.rad === 0) return exactDecimal(x);
-  const radius = Rational.of(BigInt(Math.ceil(x.rad * 2 ** 20)));
-  const unit = (k: number): Rational => (k >= 0 ? Rational.of(2n ** BigInt(k)) : Rational.of(1n, 2n ** BigInt(-k)));
-  const r = radius.times(unit(x.exp - 20));
-  const place = Math.floor((bitLength(r.num) - bitLength(r.den)) * 0.30103) - 2;
-  const ten = place >= 0 ? Rational.of(10n ** BigInt(place)) : Rational.of(1n, 10n ** BigInt(-place));
-  const mid = unit(x.exp).times(x.man).div(ten);
-  const m = mid.round();
-  const total = r.div(ten).plus(mid.minus(m).abs());
-  return { middle: `${m}e${place}`, radius: `${-total.neg().floor()}e${place}` };
+  const { middle, radius, place } = decimalBounds(x, 4);
+  return { middle: `${middle}e${place}`, radius: `${radius}e${place}` };
 }
 
 function exactDecimal(x: Ball): Scientific {

@@ -132,26 +132,40 @@ export function rationalParts(q: Rational, digits: number): DecimalParts {
   }
 }
 
-/**
- * Midpoint and radius in decimals, x within them: two digits of radius, rounded up, and the midpoint to the same place.
- */
+/** A middle and a radius as whole numbers of units 10^place, with every number of the enclosure within them. */
+export interface DecimalBounds {
+  readonly middle: bigint;
+  readonly radius: bigint;
+  readonly place: number;
+}
+
+/** Two to four digits of radius, rounded up over what the rounding of the middle leaves, and the middle to the same place. Not for exact balls. */
+export function decimalBounds(x: Ball, digits = 2): DecimalBounds {
+  const radius = dyadic(BigInt(Math.ceil(x.rad * 2 ** 20)), x.exp - 20);
+  const place = leading({ man: BigInt(Math.ceil(x.rad * 2 ** 20)), exp: x.exp - 20, rad: 0 }) + 1 - digits;
+  const unit = place >= 0 ? Rational.of(10n ** BigInt(place)) : Rational.of(1n, 10n ** BigInt(-place));
+  const middle = dyadic(x.man, x.exp).div(unit);
+  const n = middle.round();
+  const total = radius.div(unit).plus(middle.minus(n).abs());
+  return { middle: n, radius: -total.neg().floor(), place };
+}
+
+function dyadic(man: bigint, exp: number): Rational {
+  return exp >= 0 ? Rational.of(man << BigInt(exp)) : Rational.of(man, 1n << BigInt(-exp));
+}
+
+/** Midpoint and radius in decimals, x within them; see `decimalBounds`. */
 export function withRadius(x: Ball): DecimalParts {
   if (x.rad === 0) return exactParts(x);
-  const radius: Ball = { man: BigInt(Math.ceil(x.rad * 2 ** 20)), exp: x.exp - 20, rad: 0 };
-  const place = leading(radius) - 1;
-  // In units of 10^place: |mid − n| <= 1 for the truncation, counted in full by rounding the sum up.
-  const n = units(ball.midpoint(x), place, false);
-  const r = units(radius, place, true);
-  const off = offBy(ball.midpoint(x), n, place);
-  const total = (off ? r + 1n : r).toString();
+  const { middle: n, radius, place } = decimalBounds(x);
+  const total = radius.toString();
   const text = absBig(n).toString();
-  const shown = trimmed(total);
   return {
     sign: n < 0n ? "-" : "",
     digits: text,
     exponent: n === 0n ? 0 : text.length - 1 + place,
     ellipsis: false,
-    radius: { digits: shown, exponent: total.length - 1 + place },
+    radius: { digits: trimmed(total), exponent: total.length - 1 + place },
   };
 }
 
@@ -160,24 +174,7 @@ function trimmed(digits: string): string {
 }
 
 function exactParts(x: Ball): DecimalParts {
-  const q = x.exp >= 0 ? Rational.of(x.man << BigInt(x.exp)) : Rational.of(x.man, 1n << BigInt(-x.exp));
-  return rationalParts(q, Math.max(1, Math.ceil(Math.abs(x.exp) + bitLength(x.man)) + 2));
-}
-
-/** x in units of 10^place, rounded to nearest, or up. */
-function units(x: Ball, place: number, up: boolean): bigint {
-  const power = 10n ** BigInt(Math.abs(place));
-  let top = place < 0 ? x.man * power : x.man;
-  let bottom = place < 0 ? 1n : power;
-  if (x.exp >= 0) top <<= BigInt(x.exp);
-  else bottom <<= BigInt(-x.exp);
-  return up ? Rational.of(top, bottom).neg().floor() * -1n : Rational.of(top, bottom).round();
-}
-
-function offBy(x: Ball, n: bigint, place: number): boolean {
-  const unit = place >= 0 ? Rational.of(10n ** BigInt(place)) : Rational.of(1n, 10n ** BigInt(-place));
-  const value = x.exp >= 0 ? Rational.of(x.man << BigInt(x.exp)) : Rational.of(x.man, 1n << BigInt(-x.exp));
-  return !unit.times(n).equals(value);
+  return rationalParts(dyadic(x.man, x.exp), Math.max(1, Math.ceil(Math.abs(x.exp) + bitLength(x.man)) + 2));
 }
 
 /** "3.14159...", "1.25 ± 1e-6", "-2.5...e-10": ungrouped, and read back by `real`. */

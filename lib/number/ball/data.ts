@@ -57,6 +57,7 @@ export function finish(man: bigint, exp: number, err: number, prec: number): Bal
 }
 
 function exactly(man: bigint, exp: number, drop: number): Ball {
+  if (man === 0n) return zero;
   if (drop <= 0) return { man, exp, rad: 0 };
   const spare = trailingZeros(man);
   if (spare >= drop) return { man: man >> shift(spare), exp: exp + spare, rad: 0 };

@@ -62,6 +62,18 @@ export { QuasiPeriodicFunction } from "./surface/quasi-periodic-function.ts";
 export { TorusPoint } from "./surface/torus-point.ts";
 export { PlanePoint } from "./surface/variety.ts";
 
+// Integrals, Jacobi's functions, theta and modular functions
+
+export { carlson } from "./surface/carlson.ts";
+export { ClassPolynomial } from "./surface/class-polynomial.ts";
+export { Jacobi, jacobi } from "./surface/jacobi.ts";
+export { type CharacteristicInput, legendre } from "./surface/legendre.ts";
+export { type MatrixInput, modular } from "./surface/modular.ts";
+export type { ModulusInput } from "./surface/modulus.ts";
+export { Moved } from "./surface/moved.ts";
+export { QSeries } from "./surface/q-series.ts";
+export { type ThetaInput, theta, thetaLogarithmic } from "./surface/theta.ts";
+
 // Claims
 
 export { claims } from "./page/claims.ts";

@@ -121,13 +121,19 @@ function lowering(at: CellPoint, wp: number): Disc {
  * Domain   any u off the poles (zeros of qn(u), all of them simple), any m.
  * Branch   none: meromorphic in u, and single-valued in m.
  * Error    enclosures; relative away from zeros and poles.
- * Cost     two means, two exponentials, one theta series of √prec terms a letter.
+ * Cost     two means, two exponentials, one theta series of √prec terms a letter; the means only once if `contextOf` keeps them.
  * Throws   PoleError at a pole, or if the disc of u holds one.
  * Source   DLMF 22.2.4–22.2.9; for m = 0 and 1 DLMF 22.5(ii).
  */
-export function jacobiValues(names: readonly JacobiName[], u: Disc, modulus: Modulus, prec: number): Disc[] {
+export function jacobiValues(
+  names: readonly JacobiName[],
+  u: Disc,
+  modulus: Modulus,
+  prec: number,
+  contextOf: (modulus: Modulus, prec: number) => JacobiContext = jacobiContext,
+): Disc[] {
   if (disc.isZero(modulus.m) || disc.isZero(modulus.m1)) return names.map((name) => degenerate(name, u, modulus, prec));
-  const context = jacobiContext(modulus, prec + guard(u, prec));
+  const context = contextOf(modulus, prec + guard(u, prec));
   const point = jacobiPoint(context, u);
   return names.map((name) => {
     const [p, q] = [...name] as [JacobiLetter, JacobiLetter];

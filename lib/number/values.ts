@@ -11,6 +11,7 @@ import { combine, type Field, isRealExact, power, root } from "./exactness.ts";
 import { type ForeignComplex, type ForeignReal, leafOf } from "./leaf.ts";
 import { ABS, ARG, CONJ, DIV, IM, JOIN, MINUS, NEG, PLUS, POWER, RE, SQRT, TIMES } from "./operations.ts";
 import {
+  accuracy,
   asDisc,
   DEEPEST,
   depthOver,
@@ -430,7 +431,11 @@ function firstEvaluation(node: Node, prec: number): Enclosure {
       prec,
     );
   } catch (error) {
-    if (!mayPass(error) || !operands.some((x) => x instanceof Value && !x.exact && refinable(x))) throw error;
+    if (
+      !mayPass(error) ||
+      !operands.some((x) => x instanceof Value && accuracy(x.enclosure) !== Infinity && refinable(x))
+    )
+      throw error;
   }
   for (let bits = 2 * prec, k = 0; ; bits *= 2, k++) {
     try {

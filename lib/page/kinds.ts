@@ -5,11 +5,15 @@ import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
 import { Complex, Real } from "../number/values.ts";
 import { Claim } from "../surface/claim-value.ts";
+import { ClassPolynomial } from "../surface/class-polynomial.ts";
 import { Curve } from "../surface/curve.ts";
 import { EllipticFunction } from "../surface/elliptic-function.ts";
+import { Jacobi } from "../surface/jacobi.ts";
 import { Lattice } from "../surface/lattice.ts";
 import { Morphism } from "../surface/morphism.ts";
+import { Moved } from "../surface/moved.ts";
 import { Point } from "../surface/point.ts";
+import { QSeries } from "../surface/q-series.ts";
 import { QuasiPeriodicFunction } from "../surface/quasi-periodic-function.ts";
 import { TorusPoint } from "../surface/torus-point.ts";
 import { PlaneCurve, PlanePoint } from "../surface/variety.ts";
@@ -19,6 +23,7 @@ import { quadraticKind, rationalKind } from "./exact-kind.ts";
 import { figureKind } from "./figure-kind.ts";
 import { entry, type KindEntry, shape } from "./kind.ts";
 import { functionKind, latticeKind, torusPointKind } from "./lattice-kind.ts";
+import { classPolynomialKind, jacobiKind, movedKind, qSeriesKind } from "./modular-kind.ts";
 import { morphismKind } from "./morphism-kind.ts";
 import { complexKind, realKind } from "./number-kind.ts";
 import { isPolynomial, planeCurveKind, planePointKind, polynomialKind } from "./plane-kind.ts";
@@ -40,6 +45,10 @@ export const KINDS: readonly KindEntry[] = [
   entry(PlanePoint, planePointKind),
   entry(Morphism, morphismKind),
   shape(isPolynomial, polynomialKind),
+  entry(Jacobi, jacobiKind),
+  entry(ClassPolynomial, classPolynomialKind),
+  entry(QSeries, qSeriesKind),
+  entry(Moved, movedKind),
   entry(Claim, claimKind),
   entry(Table, tableKind),
   entry(Figure, figureKind),

@@ -19,7 +19,19 @@ const ROWS: Readonly<Record<string, readonly ConventionKey[]>> = {
   zeta: ["quasiPeriods"],
   "elliptic logarithm": ["cubic"],
   "elliptic logarithm on its component": ["differential", "components"],
+  ...rows(["modulus"], "complete K, complete E, complete D, complete B, complete Π"),
+  ...rows(["modulus"], "incomplete F, incomplete E, incomplete D, incomplete B, incomplete Π"),
+  ...rows(["modulus"], "sn, cn, dn, ns, nc, nd, sc, sd, cs, cd, ds, dc, am, Jacobi epsilon, Jacobi zeta"),
+  ...rows(["modulus"], "arcsn, arccn, arcdn, arcns, arcnc, arcnd, arcsc, arcsd, arccs, arccd, arcds, arcdc"),
+  ...rows(["theta"], "theta, theta logarithmic, theta characteristic"),
+  ...rows(["eisenstein"], "Eisenstein E, Eisenstein G, Eisenstein G2"),
+  "modular lambda": ["roots"],
 };
+
+/** The same rows for each of the names. */
+function rows(keys: readonly ConventionKey[], names: string): Record<string, readonly ConventionKey[]> {
+  return Object.fromEntries(names.split(", ").map((name) => [name, keys]));
+}
 
 /** Operations whose result depends on the basis that was chosen where none was given. */
 const BASIS_DEPENDENT = new Set(["point", "period ratio", "quasi-period"]);

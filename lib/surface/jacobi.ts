@@ -1,0 +1,201 @@
+import { AMPLITUDE, EPSILON, JACOBI, JACOBI_INVERSE, ZETA } from "../function/jacobi-operations.ts";
+import { COMPLETE } from "../function/operations.ts";
+import type { Operation } from "../number/origin.ts";
+import { Rational } from "../number/rational.ts";
+import { i } from "../number/symbols.ts";
+import { apply, Complex, type ComplexNumeric, type Real, scalar } from "../number/values.ts";
+import type { ConventionKey } from "../proof/conventions.ts";
+import { type ModulusInput, type ModulusPair, modulusPair } from "./modulus.ts";
+
+type Value = Real | Complex;
+
+/**
+ * Jacobi's functions of one modulus. All twelve are meromorphic in u and single-valued in m; pq = pn/qn for any two of the letters s, c, d, n.
+ * Values near m = 0 and m = 1 keep their digits where { m } or { m1 } says how near.
+ */
+export class Jacobi {
+  /** The parameter m = k² and m1 = 1 − m. */
+  readonly m: Value;
+  readonly m1: Value;
+
+  constructor({ m, m1 }: ModulusPair) {
+    this.m = m;
+    this.m1 = m1;
+  }
+
+  /** The quarter period K = K(m). Throws DomainError for real m > 1, PoleError for m = 1. */
+  get K(): Value {
+    return apply(COMPLETE.K, [this.m, this.m1]);
+  }
+
+  /** K′ = K(m1); iK′ is the other quarter period. Throws DomainError for real m < 0, PoleError for m = 0. */
+  get K1(): Value {
+    return apply(COMPLETE.K, [this.m1, this.m]);
+  }
+
+  /** The complete integrals E(m) and E(m1). */
+  get E(): Value {
+    return apply(COMPLETE.E, [this.m, this.m1]);
+  }
+
+  get E1(): Value {
+    return apply(COMPLETE.E, [this.m1, this.m]);
+  }
+
+  /** τ = iK′/K. */
+  get tau(): Complex {
+    return Complex.from(i.times(this.K1).div(this.K));
+  }
+
+  sn(u: ComplexNumeric): Value {
+    return this.value("sn", u);
+  }
+  cn(u: ComplexNumeric): Value {
+    return this.value("cn", u);
+  }
+  dn(u: ComplexNumeric): Value {
+    return this.value("dn", u);
+  }
+  /** 1/sn. */
+  ns(u: ComplexNumeric): Value {
+    return this.value("ns", u);
+  }
+  /** 1/cn. */
+  nc(u: ComplexNumeric): Value {
+    return this.value("nc", u);
+  }
+  /** 1/dn. */
+  nd(u: ComplexNumeric): Value {
+    return this.value("nd", u);
+  }
+  /** sn/cn. */
+  sc(u: ComplexNumeric): Value {
+    return this.value("sc", u);
+  }
+  /** sn/dn. */
+  sd(u: ComplexNumeric): Value {
+    return this.value("sd", u);
+  }
+  /** cn/sn. */
+  cs(u: ComplexNumeric): Value {
+    return this.value("cs", u);
+  }
+  /** cn/dn. */
+  cd(u: ComplexNumeric): Value {
+    return this.value("cd", u);
+  }
+  /** dn/sn. */
+  ds(u: ComplexNumeric): Value {
+    return this.value("ds", u);
+  }
+  /** dn/cn. */
+  dc(u: ComplexNumeric): Value {
+    return this.value("dc", u);
+  }
+
+  /**
+   * The amplitude am(u) = ∫_0^u dn, with sn = sin am.
+   * Domain   real u and m, or 0 <= m <= 1 and |Im u| < K′. Branch continuous from am 0 = 0. Throws DomainError outside. Source DLMF 22.16(i).
+   */
+  am(u: ComplexNumeric): Value {
+    return this.odd(AMPLITUDE, u);
+  }
+
+  /** ε(u) = ∫_0^u dn² = E(am u | m). Throws PoleError at the poles of dn. Source DLMF 22.16(ii). */
+  epsilon(u: ComplexNumeric): Value {
+    return this.odd(EPSILON, u);
+  }
+
+  /** Jacobi's zeta function Z(u) = ε(u) − u E/K, of period 2K. Source DLMF 22.16(iii). */
+  zeta(u: ComplexNumeric): Value {
+    return this.odd(ZETA, u);
+  }
+
+  // Inverses, by principal roots: for 0 < m < 1 and real x, u in [−K, K] for sn, sc, sd, ns, cs, ds, in [0, 2K] for cn, cd, nc, dc and in [0, K]
+  // for dn, nd. Throw DomainError for a real x that the function does not take on the real line. Source DLMF 22.15(ii).
+
+  arcsn(x: ComplexNumeric): Value {
+    return this.inverse("sn", x);
+  }
+  arccn(x: ComplexNumeric): Value {
+    return this.inverse("cn", x);
+  }
+  arcdn(x: ComplexNumeric): Value {
+    return this.inverse("dn", x);
+  }
+  arcns(x: ComplexNumeric): Value {
+    return this.inverse("ns", x);
+  }
+  arcnc(x: ComplexNumeric): Value {
+    return this.inverse("nc", x);
+  }
+  arcnd(x: ComplexNumeric): Value {
+    return this.inverse("nd", x);
+  }
+  arcsc(x: ComplexNumeric): Value {
+    return this.inverse("sc", x);
+  }
+  arcsd(x: ComplexNumeric): Value {
+    return this.inverse("sd", x);
+  }
+  arccs(x: ComplexNumeric): Value {
+    return this.inverse("cs", x);
+  }
+  arccd(x: ComplexNumeric): Value {
+    return this.inverse("cd", x);
+  }
+  arcds(x: ComplexNumeric): Value {
+    return this.inverse("ds", x);
+  }
+  arcdc(x: ComplexNumeric): Value {
+    return this.inverse("dc", x);
+  }
+
+  get conventions(): readonly ConventionKey[] {
+    return ["modulus"];
+  }
+
+  toString(): string {
+    return `Jacobi functions with m = ${this.m}`;
+  }
+
+  private value(name: string, given: ComplexNumeric): Value {
+    const u = scalar(given, name);
+    return apply(JACOBI[name]!, [u, this.m, this.m1], this.known(name, u));
+  }
+
+  /** What symmetry alone settles: the values at 0, and sn, cn, cd at K. */
+  private known(name: string, u: Value): Rational | undefined {
+    const [p, q] = name;
+    if (isZero(u) && q !== "s") return p === "s" ? Rational.zero : Rational.one;
+    const atK = u.origin?.operation === COMPLETE.K && u.origin.operands[0] === this.m;
+    if (!atK || q === "c") return undefined;
+    if (p === "c") return Rational.zero;
+    return name === "sn" || name === "ns" ? Rational.one : undefined;
+  }
+
+  private odd(operation: Operation, given: ComplexNumeric): Value {
+    const u = scalar(given, operation.name);
+    return apply(operation, [u, this.m, this.m1], isZero(u) ? Rational.zero : undefined);
+  }
+
+  private inverse(name: string, given: ComplexNumeric): Value {
+    const x = scalar(given, `arc${name}`);
+    return apply(JACOBI_INVERSE[name]!, [x, this.m, this.m1], isZero(x) && name[0] === "s" ? Rational.zero : undefined);
+  }
+}
+
+function isZero(x: Value): boolean {
+  return x.exact instanceof Rational && x.exact.sign() === 0;
+}
+
+/**
+ * Jacobi's functions for a modulus that is named: jacobi({ m }), jacobi({ m1 }) with m1 = 1 − m, jacobi({ k }), jacobi({ tau }), jacobi({ qTheta }),
+ * jacobi({ qMod }), jacobi({ roots: [e1, e2, e3] }).
+ *
+ * Throws   TypeError for a bare { q }, or unless exactly one name is used.
+ * @example jacobi({ m: "81/100" }).dn("1/5")   // 0.9840560289645665155...
+ */
+export function jacobi(input: ModulusInput): Jacobi {
+  return new Jacobi(modulusPair({ ...input }, "jacobi"));
+}

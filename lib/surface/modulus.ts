@@ -1,0 +1,122 @@
+import { LAMBDA } from "../function/modular-operations.ts";
+import { ln } from "../number/functions.ts";
+import { Rational } from "../number/rational.ts";
+import { i, π } from "../number/symbols.ts";
+import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
+import { DomainError } from "../proof/errors.ts";
+
+/** The ways to say which modulus is meant; a bare nome is refused, since two are in use. */
+export type ModulusInput =
+  /** Parameter m = k². */
+  | { readonly m: ComplexNumeric }
+  /** Complementary parameter m1 = 1 − m, for m near 1. */
+  | { readonly m1: ComplexNumeric }
+  /** Modulus k. */
+  | { readonly k: ComplexNumeric }
+  /** τ = iK′/K, m = λ(τ). */
+  | { readonly tau: ComplexNumeric }
+  /** q_θ = exp(πiτ). */
+  | { readonly qTheta: ComplexNumeric }
+  /** q_mod = exp(2πiτ). */
+  | { readonly qMod: ComplexNumeric }
+  /** Roots e1, e2, e3 of a cubic: m = (e2 − e3)/(e1 − e3). */
+  | { readonly roots: readonly [ComplexNumeric, ComplexNumeric, ComplexNumeric] };
+
+/** The parameter and its complement, each with all its digits. */
+export interface ModulusPair {
+  readonly m: Real | Complex;
+  readonly m1: Real | Complex;
+}
+
+const WAYS = ["m", "m1", "k", "tau", "qTheta", "qMod", "roots"] as const;
+
+/** The pair m, m1 that an input names. Throws TypeError unless exactly one of the ways is used. */
+export function modulusPair(input: Readonly<Record<string, unknown>>, subject: string): ModulusPair {
+  const used = WAYS.filter((way) => input[way] !== undefined);
+  if (used.length !== 1) throw refusal(input, used, subject);
+  const value = input[used[0]!];
+  switch (used[0]!) {
+    case "m":
+      return withComplement(scalar(value as ComplexNumeric, subject));
+    case "m1": {
+      const { m, m1 } = withComplement(scalar(value as ComplexNumeric, subject));
+      return { m: m1, m1: m };
+    }
+    case "k": {
+      const k = scalar(value as ComplexNumeric, subject);
+      return { m: k.pow(2), m1: times(plus(k, 1), plus(k.neg(), 1)) };
+    }
+    case "roots": {
+      const [e1, e2, e3] = (value as readonly ComplexNumeric[]).map((e) => scalar(e, subject)) as [
+        Complex,
+        Complex,
+        Complex,
+      ];
+      const bottom = e1.minus(e3);
+      return { m: e2.minus(e3).div(bottom), m1: e1.minus(e2).div(bottom) };
+    }
+    default: {
+      const tau = tauOf(input, subject);
+      return { m: apply(LAMBDA, [tau, "lambda"]), m1: apply(LAMBDA, [tau, "complement"]) };
+    }
+  }
+}
+
+function withComplement(m: Real | Complex): ModulusPair {
+  return { m, m1: plus(m.neg(), 1) };
+}
+
+function plus(x: Real | Complex, n: number): Real | Complex {
+  return x instanceof Real ? x.plus(n) : x.plus(n);
+}
+
+function times(x: Real | Complex, y: Real | Complex): Real | Complex {
+  return x instanceof Real ? x.times(y) : x.times(y);
+}
+
+function refusal(input: Readonly<Record<string, unknown>>, used: readonly string[], subject: string): TypeError {
+  if ("q" in input) return bareNome(subject);
+  const got = used.length > 1 ? `{ ${used.join(", ")} } together` : `{ ${Object.keys(input).join(", ")} }`;
+  return new TypeError(
+    `${subject}: got ${got}; expected one of { m } (= k²), { m1 } (= 1 − m), { k }, { tau }, { qTheta }, { qMod }, { roots }`,
+  );
+}
+
+/** Two nomes are in use, so a bare q says nothing. */
+export function bareNome(subject: string): TypeError {
+  return new TypeError(
+    `${subject}: got the nome q without a name; expected { qTheta } for q = exp(πiτ) or { qMod } for q = exp(2πiτ)`,
+  );
+}
+
+/**
+ * τ from { tau }, { qTheta } or { qMod }. From a nome it is the τ with Re τ in (−1, 1] (q_θ) or (−1/2, 1/2] (q_mod), which is where the
+ * fractional powers of the nome are principal.
+ */
+export function tauOf(input: Readonly<Record<string, unknown>>, subject: string): Complex {
+  const given = (["tau", "qTheta", "qMod"] as const).filter((way) => input[way] !== undefined);
+  if (given.length !== 1) {
+    if ("q" in input) throw bareNome(subject);
+    throw new TypeError(
+      `${subject}: got { ${Object.keys(input).join(", ")} }; expected one of { tau }, { qTheta }, { qMod }`,
+    );
+  }
+  const value = scalar(input[given[0]!] as ComplexNumeric, subject);
+  if (given[0] === "tau") return upperHalf(Complex.from(value), subject);
+  const log = ln(Complex.from(value));
+  const turns = given[0] === "qTheta" ? Rational.one : Rational.of(2);
+  return Complex.from(Complex.from(log).div(i.times(π.times(turns))));
+}
+
+/** τ itself, unless it is seen at once that Im τ <= 0. */
+export function upperHalf(tau: Complex, subject: string): Complex {
+  const low = tau.exact instanceof Rational || tau.disc.axis === "real" || (tau.disc.im < 0n && tau.disc.rad === 0);
+  if (!low) return tau;
+  throw new DomainError({
+    subject,
+    given: `τ = ${tau}`,
+    expected: "Im τ > 0",
+    hint: tau.disc.im < 0n ? "The conjugate of τ, or −τ, may be meant." : "",
+    argument: "tau",
+  });
+}

@@ -4,10 +4,13 @@ import type { Cell } from "./kind.ts";
 import type { Column, NumberWidths } from "./table-column.ts";
 
 /** Width of a page in digits. */
-const PAGE = 74;
+const PAGE = 78;
 /** Space between columns, and what a group of five digits takes with its gap. */
 const GAP = 2.4;
 const GROUP = 5.36;
+
+/** Words up to this length stay on one line. */
+export const SHORT_WORDS = 32;
 
 /** The columns with the mildest measures under which a row fits the page. */
 export function fitted(columns: readonly Column[], rows: readonly (readonly Cell[])[]): readonly Column[] {
@@ -35,8 +38,9 @@ export function fitted(columns: readonly Column[], rows: readonly (readonly Cell
 function width(column: Column, cells: readonly (Cell | undefined)[], first: boolean): number {
   const others = cells.map((cell) => {
     if (!cell || cell.kind === "number") return 0;
-    // Words wrap, but not in the first column, where they head their row; fractions are set over each other.
-    if (cell.kind === "words") return 0.85 * (first ? cell.text.length : Math.min(24, cell.text.length));
+    // Words wrap where they are many, but not in the first column, where they head their row.
+    if (cell.kind === "words") return 0.85 * (first ? cell.text.length : Math.min(SHORT_WORDS, cell.text.length));
+    // Fractions are set over each other.
     return 0.8 * Math.max(...cell.text.split("/").map((part) => part.length));
   });
   return Math.max(0.85 * Math.min(24, column.head.length), numberWidth(column), ...others);

@@ -6,6 +6,7 @@ import { escapeHtml } from "./html.ts";
 import type { Cell, NumberCell, Show } from "./kind.ts";
 import type { Table } from "./table.ts";
 import { bothParts, type Column, type NumberWidths } from "./table-column.ts";
+import { SHORT_WORDS } from "./table-fit.ts";
 import { layout } from "./table-layout.ts";
 import { texName } from "./tex.ts";
 
@@ -42,8 +43,9 @@ function headHtml(head: string): string {
 
 function cell(content: Cell | undefined, column: Column, isHead: boolean): string {
   if (!content || content.kind === "words") {
-    const text = wordsHtml(content?.text ?? "");
-    return tableCell(text, STYLE.words, isHead);
+    const text = content?.text ?? "";
+    const style = text.length <= SHORT_WORDS ? `${STYLE.words};white-space:nowrap` : STYLE.words;
+    return tableCell(wordsHtml(text), style, isHead);
   }
   if (content.kind === "formula") return tableCell(`$${escapeHtml(content.tex)}$`, formulaStyle(content.text), isHead);
   return tableCell(numberHtml(content, column), STYLE.cell, isHead);

@@ -47,7 +47,8 @@ function numberTex({ re, im }: NumberCell, column: Column): string {
 /** The number with blanks in place of a sign and of digits that it does not have. */
 function aligned(decimal: Decimal, widths: NumberWidths | undefined, groups: number, sign?: string): string {
   const shown = sign ?? (decimal.negative ? "-" : "");
-  const line = texDecimal(decimal, groups, shown);
+  // In braces a sign keeps to its number, whatever blanks stand before it.
+  const line = texDecimal(decimal, groups, shown === "" ? "" : `{${shown}}`);
   if (!widths) return line;
   const missing = "0".repeat(Math.max(0, widths.integer - decimal.integer.length));
   const blanks = `${widths.signed && shown === "" ? "-" : ""}${missing}`;

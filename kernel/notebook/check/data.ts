@@ -1,6 +1,8 @@
 // Values as data, compared by what they mean: numbers as enclosures, claims by their standing, the rest part by part.
-import { compareNumbers, isNumberData } from "./number-data.ts";
+import { basisChange } from "./basis.ts";
+import { compareNumbers, isNumberData, type NumberData } from "./number-data.ts";
 import { SAME, type Verdict, verdict, worst } from "./verdict.ts";
+import { brief, compareWords } from "./words.ts";
 
 type Fields = Readonly<Record<string, unknown>>;
 
@@ -12,8 +14,9 @@ export function compareData(stored: unknown, fresh: unknown, where = "value", di
   if (Array.isArray(stored) && Array.isArray(fresh)) return compareLists(stored, fresh, where, digits);
   if (isFields(stored) && isFields(fresh)) {
     if (stored.kind === "claim" && fresh.kind === "claim") return compareClaims(stored, fresh, where, digits);
-    return compareFields(stored, fresh, where, digits);
+    return namedBasis(stored, fresh, compareFields(stored, fresh, where, digits));
   }
+  if (typeof stored === "string" && typeof fresh === "string") return compareWords(stored, fresh, where, digits);
   if (stored === fresh) return SAME;
   return verdict("differs", `${where}: was ${brief(stored)}, is ${brief(fresh)}`);
 }
@@ -41,6 +44,18 @@ function isReordered(stored: readonly unknown[], fresh: readonly unknown[], digi
     if (at >= 0) left.splice(at, 1);
     return at >= 0;
   });
+}
+
+/** Adds to different periods that they span the same lattice, if they do. */
+function namedBasis(stored: Fields, fresh: Fields, found: Verdict): Verdict {
+  if (found.finding !== "differs" || !Array.isArray(stored.periods) || !Array.isArray(fresh.periods)) return found;
+  const change = basisChange(stored.periods.map(numberOf), fresh.periods.map(numberOf));
+  return change === undefined ? found : { ...found, notes: [change, ...found.notes] };
+}
+
+/** The number in a point of a torus, which is its value. */
+function numberOf(data: unknown): NumberData {
+  return isFields(data) && isNumberData(data.value) ? data.value : (data as NumberData);
 }
 
 function compareFields(stored: Fields, fresh: Fields, where: string, digits: number): Verdict {
@@ -71,9 +86,4 @@ function compareStandings(before: Fields, now: Fields, name: string, digits: num
     return verdict("weaker", `${name}: was certified to ${certified} digits, is to ${certifies}`);
   }
   return SAME;
-}
-
-function brief(value: unknown): string {
-  const text = value === undefined ? "nothing" : typeof value === "string" ? value : JSON.stringify(value);
-  return text.length > 60 ? `${text.slice(0, 57)}...` : text;
 }

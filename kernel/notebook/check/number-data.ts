@@ -6,7 +6,8 @@ import { SAME, type Verdict, verdict } from "./verdict.ts";
 /** A number's data: its kind and strings. */
 export type NumberData = Readonly<Record<string, unknown>>;
 
-interface Enclosed {
+/** The disc that a number's data stand for. */
+export interface Enclosed {
   readonly re: Rational;
   readonly im: Rational;
   /** 0 for an exact value. */
@@ -43,20 +44,21 @@ export function digitsOf(data: NumberData): number {
   return value ? accuracy(value) : Number.POSITIVE_INFINITY;
 }
 
-function enclosed(data: NumberData): Enclosed | undefined {
+/** The disc of a number's data; undefined for a quadratic number, and for what is no number after all. */
+export function enclosed(data: NumberData): Enclosed | undefined {
   const part = (field: string) => Rational.parse(String(data[field]));
   try {
     if (data.kind === "rational") return { re: part("value"), im: ZERO, radius: ZERO };
     if (data.kind === "real") return { re: part("middle"), im: ZERO, radius: part("radius") };
     if (data.kind === "complex") return { re: part("re"), im: part("im"), radius: part("radius") };
   } catch {
-    return undefined; // no number after all
+    return undefined;
   }
   return undefined;
 }
 
 /** Can both be true of one value? Squares, since distances of rational points need not be rational. */
-function overlaps(a: Enclosed, b: Enclosed): boolean {
+export function overlaps(a: Enclosed, b: Enclosed): boolean {
   const reach = a.radius.plus(b.radius);
   return distanceSquared(a, b).compare(reach.times(reach)) <= 0;
 }

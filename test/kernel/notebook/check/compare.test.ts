@@ -61,6 +61,42 @@ describe("numbers compared by what they are", () => {
   });
 });
 
+describe("words that hold decimals", () => {
+  const label = (text: string) => ({ kind: "figure", points: { P: text } });
+  it("same: a decimal that goes on, to more or fewer digits as asked", () => {
+    expect(finding(label("P = 1.41421..."), label("P = 1.41422..."))).toBe("same");
+    expect(finding(label("P = 1.41421..."), label("P = 1.41421356..."))).toBe("same");
+    expect(finding(label("P = 1.41421356..."), label("P = 1.4142..."), 5)).toBe("same");
+    expect(finding("certified to 50 digits", "certified to 30 digits", 30)).toBe("same");
+  });
+
+  it("weaker or different: digits lost unasked, a digit changed, an exact number or a word changed", () => {
+    expect(finding(label("P = 1.41421356..."), label("P = 1.4142..."))).toBe("weaker");
+    expect(finding("certified to 50 digits", "certified to 30 digits")).toBe("weaker");
+    expect(finding(label("P = 1.41421..."), label("P = 1.41521..."))).toBe("differs");
+    expect(finding(label("(0, 0)"), label("(0, 1)"))).toBe("differs");
+    expect(finding(label("P = 1.5"), label("Q = 1.5"))).toBe("differs");
+  });
+});
+
+describe("periods", () => {
+  const point = (re: string, im: string) => ({
+    kind: "point of a torus",
+    coordinates: ["1", "0"],
+    value: complex(re, im, "1e-20"),
+  });
+  const lattice = (...periods: object[]) => ({ kind: "lattice", periods });
+  it("name another basis of the same lattice, and no other", () => {
+    const stored = lattice(point("2", "0"), point("0", "3"));
+    expect(notes(stored, lattice(point("0", "3"), point("-2", "0")))).toContain(
+      "the same lattice in another basis, first = 0·ω1 + 1·ω2, second = -1·ω1 + 0·ω2",
+    );
+    expect(notes(stored, lattice(point("2", "0"), point("2", "3")))).toContain("second = 1·ω1 + 1·ω2");
+    expect(notes(stored, lattice(point("4", "0"), point("0", "3")))).not.toContain("same lattice");
+    expect(notes(stored, lattice(point("2", "0"), point("0", "31e-1")))).not.toContain("same lattice");
+  });
+});
+
 describe("claims", () => {
   const certified = (digits: string) => claim({ kind: "certified", digits, bits: "200" });
   it("may keep or improve their standing", () => {

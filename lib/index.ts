@@ -84,5 +84,9 @@ export { Claim, type Relation } from "./surface/claim-value.ts";
 
 export { Figure } from "./figure/figure.ts";
 export * as figure from "./figure/figures.ts";
+// The notebook itself
+export { ask } from "./page/ask.ts";
+export { notebook } from "./page/notebook.ts";
+export { progress } from "./page/progress.ts";
 export { type Row, Table, type TableOptions, type TableValue, table } from "./page/table.ts";
 export { tex, typeset } from "./page/typeset.ts";

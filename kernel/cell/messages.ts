@@ -11,6 +11,8 @@ export interface EmittedCell {
   /** The prefix of the parameters, `$` or more of them. */
   readonly prefix: string;
   readonly boxes: readonly { readonly name: string; readonly origin: "notebook" | "library" }[];
+  /** Names of earlier cells that it uses, with the number of the cell's file. */
+  readonly uses: readonly { readonly name: string; readonly cell: number }[];
   /** Notices for the user, printed before the cell runs. */
   readonly notices: readonly string[];
 }

@@ -10,8 +10,22 @@ export interface DisplayOptions {
   readonly update?: boolean;
 }
 
+/** One run of a cell, as the notebook keeps it. */
+export interface CellRun {
+  /** The number beside the cell. */
+  readonly cell: number;
+  readonly defines: readonly string[];
+  /** Names of earlier cells that it used, with the cell that had defined them. */
+  readonly uses: readonly { readonly name: string; readonly cell: number }[];
+  readonly failed: boolean;
+}
+
 export interface PageHost {
   display(bundle: MimeBundle, options: DisplayOptions): void;
+  /** Asks the reader for a line; null is the end of input. Absent where nobody can answer. */
+  readonly ask?: ((prompt: string, hidden: boolean) => Promise<string | null>) | undefined;
+  /** The cells that have run, in order. Absent outside notebooks. */
+  runs?(): readonly CellRun[];
 }
 
 const CONSOLE: PageHost = {

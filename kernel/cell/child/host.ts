@@ -1,39 +1,43 @@
-// What running code can ask of the front end: display, clear, a line of input.
-import { setPageHost } from "../../../lib/page/host.ts";
+// What running code can ask of the front end, behind the library's page port: display, a line of input, what has run.
+import { type CellRun, setPageHost } from "../../../lib/page/host.ts";
 import { currentOwner } from "./ownership.ts";
 import type { Reporter } from "./report.ts";
 
 type Answer = (value: string | null) => void;
 
-let waiting: Answer | undefined;
-let report: Reporter | undefined;
+/** The part of a runner that answers for the notebook. */
+interface Notebook {
+  readonly runs: readonly CellRun[];
+  /** A promise that the interrupt of the running cell rejects. */
+  interruptible<T>(promise: Promise<T>): Promise<T>;
+}
 
-/** Connects the host functions; the result takes the answer to an open question. */
-export function connectHost(reporter: Reporter): Answer {
-  report = reporter;
+/** Connects the library's port; the result takes the answer to an open question. */
+export function connectHost(reporter: Reporter, notebook: Notebook): Answer {
+  let waiting: Answer | undefined;
   setPageHost({
     display(data, { displayId, update }) {
       const options = { ...(displayId !== undefined && { displayId }), ...(update !== undefined && { update }) };
       reporter.send({ kind: "display", cell: currentOwner().cell, data, metadata: {}, ...options });
     },
+    // Read at each call, so that a cell without input is told so at once.
+    get ask() {
+      const owner = currentOwner();
+      if (!owner.allowStdin) return undefined;
+      return (prompt: string, hidden: boolean) => {
+        reporter.send({ kind: "input", cell: owner.cell, prompt, password: hidden });
+        return notebook.interruptible(
+          new Promise<string | null>((resolve) => {
+            waiting = resolve;
+          }),
+        );
+      };
+    },
+    runs: () => notebook.runs,
   });
   return (value) => {
     const answer = waiting;
     waiting = undefined;
     answer?.(value);
   };
-}
-
-/** Asks for a line where the front end allows it; null is the end of input. */
-export function askLine(prompt: string, password = false): Promise<string | null> {
-  const owner = currentOwner();
-  if (!owner.allowStdin || !report) {
-    return Promise.reject(
-      new Error("ask: this front end takes no input; expected one that does. Give the value in the cell itself."),
-    );
-  }
-  report.send({ kind: "input", cell: owner.cell, prompt, password });
-  return new Promise((resolve) => {
-    waiting = resolve;
-  });
 }

@@ -4,6 +4,7 @@ import { MessageChannel, Worker } from "node:worker_threads";
 import { LineReader } from "../lines.ts";
 import type { ChildCommand } from "../messages.ts";
 import { Boxes } from "./box.ts";
+import { formatConsole } from "./console.ts";
 import { failure } from "./failure.ts";
 import { Frames } from "./frames.ts";
 import { connectHost } from "./host.ts";
@@ -78,6 +79,7 @@ function main(): void {
   reportStrays();
   captureStreams(reporter);
   guardTimers();
+  formatConsole();
   const modules = new Modules(cwd, library);
   const bundle = formatter(bundler);
   const stops = new Stopper({ frames, shared, critical: () => reporter.critical });
@@ -90,7 +92,7 @@ function main(): void {
   addGlobals(modules);
   frames.install();
   startWatchdog(runner);
-  const answer = connectHost(reporter);
+  const answer = connectHost(reporter, runner);
   readCommands(runner, answer);
   reporter.send({ kind: "ready" });
 }

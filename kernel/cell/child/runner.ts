@@ -2,6 +2,7 @@
 // as promises. Reports one outcome a cell, whatever becomes of it.
 import { join } from "node:path";
 import { constants, Script } from "node:vm";
+import type { CellRun } from "../../../lib/page/host.ts";
 import type { ChildCommand } from "../messages.ts";
 import type { ErrorReport } from "../port.ts";
 import type { Boxes } from "./box.ts";
@@ -58,6 +59,9 @@ export class Runner {
   readonly #parts: RunnerParts;
   #running: Running | undefined;
   #interruptEarly = 0;
+  readonly #runs: CellRun[] = [];
+  /** Execution counts by the number of the file. */
+  readonly #counts = new Map<number, number>();
   #next: (() => Attempt) | undefined;
   readonly #enter = new Script("__cells.enter()", { filename: "node:halfperiod" });
 
@@ -67,6 +71,16 @@ export class Runner {
 
   get cell(): number {
     return this.#running?.command.cell ?? 0;
+  }
+
+  /** The cells that have run, user expressions left out. */
+  get runs(): readonly CellRun[] {
+    return this.#runs;
+  }
+
+  /** A promise that the interrupt of the running cell rejects. */
+  interruptible<T>(promise: Promise<T>): Promise<T> {
+    return this.#running ? this.#running.execution.aw(promise) : promise;
   }
 
   run(command: RunCommand): void {
@@ -187,7 +201,15 @@ export class Runner {
     }
     const { cell } = running.command;
     const defined = [...running.execution.defined];
+    this.#remember(running.command, defined, error !== undefined);
     reporter.send({ kind: "done", cell, defined, ...(error && { error }), ...(result && { result }) });
+  }
+
+  #remember({ cell, executionCount, emitted, quiet }: RunCommand, defines: readonly string[], failed: boolean): void {
+    if (quiet) return;
+    this.#counts.set(cell, executionCount);
+    const uses = emitted.uses.map((use) => ({ name: use.name, cell: this.#counts.get(use.cell) ?? 0 }));
+    this.#runs.push({ cell: executionCount, defines, uses, failed });
   }
 
   /** Reports the text of a variable; formatting runs no code of the user. */

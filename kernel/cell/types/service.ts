@@ -21,6 +21,8 @@ interface Prepared {
   /** Text behind the edited one. */
   readonly around: string;
   readonly library: ReadonlySet<string>;
+  /** Names of earlier cells in it. */
+  readonly uses: EmittedCell["uses"];
   /** Name of the operators' module in the text, if it has operators that could meet a library value. */
   readonly operators: string | undefined;
 }
@@ -95,8 +97,9 @@ export class NotebookTypes {
     );
     const directed = seesLibrary(around, parsed.texts) && hasOperators(parsed.source);
     const { library } = around;
+    const uses = around.notebook.map(({ name, cell }) => ({ name, cell }));
     if (!directed) {
-      return { edited: new EditedText(code, exported), around: around.text, library, operators: undefined };
+      return { edited: new EditedText(code, exported), around: around.text, library, uses, operators: undefined };
     }
     const operators = operatorPrefix(code);
     const edits = inOrder([...exported, ...operatorEdits(parsed.source, operators)]);
@@ -104,6 +107,7 @@ export class NotebookTypes {
       edited: new EditedText(code, edits),
       around: `${around.text}\n${operatorImport(operators)}`,
       library,
+      uses,
       operators,
     };
   }
@@ -169,7 +173,14 @@ export class NotebookTypes {
     const map = toUserMap(JSON.parse(output.map) as SourceMapData, edited, code);
     const notices = textNotices(parsed, new Set(this.libraryNames()));
     if (operators !== undefined) notices.push(...loopNotices(source, operators, values, checker));
-    return { script: output.script, map, prefix: rewriting.prefix, boxes: rewriting.boxes, notices };
+    return {
+      script: output.script,
+      map,
+      prefix: rewriting.prefix,
+      boxes: rewriting.boxes,
+      uses: prepared.uses,
+      notices,
+    };
   }
 
   #readLibraryNames(): readonly string[] {

@@ -9,11 +9,14 @@ const PAGE = 78;
 const GAP = 2.4;
 const GROUP = 5.36;
 
-/** Words up to this length stay on one line. */
+/** Words up to this length stay on one line, if the row fits the page. */
 export const SHORT_WORDS = 32;
 
-/** The columns with the mildest measures under which a row fits the page. */
-export function fitted(columns: readonly Column[], rows: readonly (readonly Cell[])[]): readonly Column[] {
+/** The columns with the mildest measures under which a row fits the page, and whether one does. */
+export function fitted(
+  columns: readonly Column[],
+  rows: readonly (readonly Cell[])[],
+): { readonly columns: readonly Column[]; readonly fits: boolean } {
   const measures = [
     { stacked: false, groups: Number.POSITIVE_INFINITY },
     { stacked: true, groups: Number.POSITIVE_INFINITY },
@@ -32,7 +35,8 @@ export function fitted(columns: readonly Column[], rows: readonly (readonly Cell
         ),
       0,
     ) <= PAGE;
-  return candidates.find(fits) ?? candidates.at(-1) ?? columns;
+  const found = candidates.find(fits);
+  return { columns: found ?? candidates.at(-1) ?? columns, fits: found !== undefined };
 }
 
 function width(column: Column, cells: readonly (Cell | undefined)[], first: boolean): number {

@@ -12,7 +12,7 @@ import { texName } from "./tex.ts";
 
 const RULE = "1px solid currentColor";
 const STYLE = {
-  table: `table-layout:auto;width:auto;border-collapse:collapse;border:0;border-top:${RULE};border-bottom:${RULE};font-variant-numeric:tabular-nums lining-nums;margin:.4em 0`,
+  table: `table-layout:auto;width:auto;font-size:inherit;border-collapse:collapse;border:0;border-top:${RULE};border-bottom:${RULE};font-variant-numeric:tabular-nums lining-nums;margin:.4em 0`,
   caption: "caption-side:top;text-align:left;padding:0 .6em .4em 0;color:inherit",
   head: `text-align:left;vertical-align:bottom;padding:.25em 1.2em .25em 0;border:0;border-bottom:${RULE};font-weight:normal`,
   cell: "text-align:left;vertical-align:baseline;padding:.2em 1.2em .2em 0;border:0;white-space:nowrap;font-weight:normal",
@@ -20,14 +20,15 @@ const STYLE = {
 } as const;
 
 export function tableHtml(table: Table, show: Show): string {
-  const { columns, rows, omitted } = layout(table, show);
+  const { columns, rows, omitted, fits } = layout(table, show);
   const caption =
     table.caption === "" ? "" : `<caption style="${STYLE.caption}">${escapeHtml(table.caption)}</caption>`;
   const named = columns.some(({ head }) => head !== "");
   const heads = columns.map(({ head }) => `<th scope="col" style="${STYLE.head}">${headHtml(head)}</th>`);
   const rowHeads = rows.length > 0 && rows.every((row) => row[0] && row[0].kind !== "number" && row[0].text !== "");
   const body = rows.map(
-    (row) => `<tr>${columns.map((column, k) => cell(row[k], column, rowHeads && k === 0)).join("")}</tr>`,
+    (row) =>
+      `<tr style="background:none">${columns.map((column, k) => cell(row[k], column, { isHead: rowHeads && k === 0, fits })).join("")}</tr>`,
   );
   const rest =
     omitted > 0 ? `<tr><td colspan="${columns.length}" style="${STYLE.words}">... ${omitted} more rows</td></tr>` : "";
@@ -41,10 +42,14 @@ function headHtml(head: string): string {
   return tex.startsWith("\\text") || head === "" ? escapeHtml(head) : `$${tex}$`;
 }
 
-function cell(content: Cell | undefined, column: Column, isHead: boolean): string {
+function cell(
+  content: Cell | undefined,
+  column: Column,
+  { isHead, fits }: { readonly isHead: boolean; readonly fits: boolean },
+): string {
   if (!content || content.kind === "words") {
     const text = content?.text ?? "";
-    const style = text.length <= SHORT_WORDS ? `${STYLE.words};white-space:nowrap` : STYLE.words;
+    const style = fits && text.length <= SHORT_WORDS ? `${STYLE.words};white-space:nowrap` : STYLE.words;
     return tableCell(wordsHtml(text), style, isHead);
   }
   if (content.kind === "formula") return tableCell(`$${escapeHtml(content.tex)}$`, formulaStyle(content.text), isHead);

@@ -12,6 +12,8 @@ import { texName } from "./tex.ts";
 export interface Layout {
   readonly columns: readonly Column[];
   readonly rows: readonly (readonly Cell[])[];
+  /** Whether a row fits a page. */
+  readonly fits: boolean;
   /** Rows that are left out at the end. */
   readonly omitted: number;
 }
@@ -29,7 +31,7 @@ export function layout(table: Table, show: Show): Layout {
       rows.map((row) => row[k]),
     ),
   );
-  return { columns: fitted(columns, rows), rows, omitted: table.rows.length - rows.length };
+  return { ...fitted(columns, rows), rows, omitted: table.rows.length - rows.length };
 }
 
 function cellOf(value: unknown, show: Show): Cell {

@@ -87,6 +87,7 @@ function main(): void {
   const machine = Object.freeze({
     enter: () => runner.enter(),
     stop: (cell: number, level: 0 | 1 | 2) => stops.stop(cell, level),
+    where: (cell: number) => stops.where(cell),
   });
   Object.defineProperty(globalThis, "__cells", { value: machine, enumerable: false });
   addGlobals(modules);

@@ -26,6 +26,7 @@ const LONGEST_PEEK = 2000;
 /** What the stop protocol has done last. */
 export interface Stops {
   readonly stopped: number;
+  readonly noted: number;
   readonly place: readonly Frame[];
 }
 
@@ -127,7 +128,7 @@ export class Runner {
     } catch (error) {
       Atomics.store(shared, PHASE, LEFT);
       if ((error as NodeJS.ErrnoException)?.code !== "ERR_SCRIPT_EXECUTION_INTERRUPTED") throw error;
-      this.#finish(running, interruptReport([]));
+      this.#finish(running, this.#interrupted(running));
       return undefined;
     }
   }
@@ -184,8 +185,12 @@ export class Runner {
 
   #failure(thrown: unknown, running: Running): ErrorReport {
     if (!Interrupted.is(thrown)) return failure(thrown, this.#parts.frames);
-    const { stopped, place } = this.#parts.stops;
-    return interruptReport(stopped === running.command.cell ? place : []);
+    return this.#interrupted(running);
+  }
+
+  #interrupted(running: Running): ErrorReport {
+    const { noted, place } = this.#parts.stops;
+    return interruptReport(noted === running.command.cell ? place : []);
   }
 
   /** Reports the outcome of a cell, once. */
@@ -234,11 +239,12 @@ export class Runner {
   /** The event loop is alive: ends an interrupted cell whose code was stopped, or that takes too long to end itself. */
   afterStop(cell: number): void {
     const running = this.#running;
-    const { stopped, place } = this.#parts.stops;
+    const { stopped } = this.#parts.stops;
     if (!running || running.command.cell !== cell) return;
-    if (stopped === cell) this.#finish(running, interruptReport(place));
-    else if (running.interruptedAt && Date.now() - running.interruptedAt > GRACE)
-      this.#finish(running, interruptReport([]));
+    if (stopped === cell) this.#finish(running, this.#interrupted(running));
+    else if (running.interruptedAt && Date.now() - running.interruptedAt > GRACE) {
+      this.#finish(running, this.#interrupted(running));
+    }
   }
 }
 

@@ -6,7 +6,9 @@ export const PHASE = 0;
 export const CELL = 1;
 /** Index of the last ping that the event loop of the main thread has answered. */
 export const PONG = 2;
-export const SHARED_LENGTH = 3;
+/** Index of a count: how often the main thread has noted the place where it is. */
+export const NOTED = 3;
+export const SHARED_LENGTH = 4;
 
 /** Phases. Only in SYNC may a signal be sent, and only by who swaps SYNC for FIRING. */
 export const IDLE = 0;

@@ -6,7 +6,7 @@
 import { Session } from "node:inspector";
 import { createRequire } from "node:module";
 import { type Frame, type Frames, isMachinery } from "./frames.ts";
-import { CELL } from "./shared.ts";
+import { CELL, NOTED } from "./shared.ts";
 
 const DEEP_STACK = 100;
 
@@ -52,6 +52,8 @@ export class Stopper {
   readonly rung: Rung;
   /** The cell whose code was stopped last, 0 for none. */
   stopped = 0;
+  /** The cell whose place was noted last, 0 for none. */
+  noted = 0;
   /** Where it hung. */
   place: readonly Frame[] = [];
   readonly #session = new Session();
@@ -79,11 +81,22 @@ export class Stopper {
     const real = sites.filter(isReal);
     if (level < 2 && real.length === 0) return "no";
     if (level < 1 && isNode(sites[0])) return "no";
-    this.place = this.#target.frames.read(sites).filter((frame) => frame.count !== undefined);
+    this.#note(number, sites);
     this.stopped = number;
     this.#clear();
     this.#session.post("Runtime.terminateExecution");
     return "yes";
+  }
+
+  /** Notes the place where cell `number` is, before a signal breaks it: the signal itself tells none. */
+  where(number: number): void {
+    if (Atomics.load(this.#target.shared, CELL) === number) this.#note(number, callSites());
+    Atomics.add(this.#target.shared, NOTED, 1);
+  }
+
+  #note(number: number, sites: readonly NodeJS.CallSite[]): void {
+    this.place = this.#target.frames.read(sites).filter((frame) => frame.count !== undefined);
+    this.noted = number;
   }
 }
 

@@ -4,13 +4,14 @@ import { Socket } from "node:net";
 import { type MessagePort, workerData } from "node:worker_threads";
 import { LineReader } from "../lines.ts";
 import type { InterruptCommand } from "../messages.ts";
-import { CELL, FIRING, PHASE, PONG, SYNC, type WatchdogMessage } from "./shared.ts";
+import { CELL, FIRING, NOTED, PHASE, PONG, SYNC, type WatchdogMessage } from "./shared.ts";
 
 const DESCRIPTOR = 5;
 const STEP = 50;
 /** After so many refused tries a stop takes code inside Node's own functions too. */
 const PATIENCE = 30;
 const SIGNAL_TIME = 1000;
+const NOTE_TIME = 100;
 const UNCONDITIONAL_AFTER = 3000;
 const KILL_AFTER = 5000;
 
@@ -48,6 +49,7 @@ async function interrupt(number: number): Promise<void> {
   if (stopping === number) return;
   stopping = number;
   const began = Date.now();
+  if (Atomics.load(shared, PHASE) === SYNC) await notePlace(number);
   fireSignal();
   post({ kind: "soft", cell: number });
   ping(number);
@@ -80,13 +82,25 @@ function ping(number: number): void {
   post({ kind: "ping", cell: number, number: pings });
 }
 
-/** Never awaits the reply: it may not come. */
 function stop(number: number, strength: 0 | 1 | 2): void {
+  evaluate(`__cells.stop(${number}, ${strength})`);
+}
+
+/** Lets the main thread note where it is; goes on without it if it does not come to that soon. */
+async function notePlace(number: number): Promise<void> {
+  const before = Atomics.load(shared, NOTED);
+  evaluate(`__cells.where(${number})`);
+  const until = Date.now() + NOTE_TIME;
+  while (Atomics.load(shared, NOTED) === before && Date.now() < until) await pause(1);
+}
+
+/** Never awaits the reply: it may not come. */
+function evaluate(expression: string): void {
   if (!session) {
     session = new Session();
     session.connectToMainThread();
   }
-  session.post("Runtime.evaluate", { expression: `__cells.stop(${number}, ${strength})`, silent: true });
+  session.post("Runtime.evaluate", { expression, silent: true });
 }
 
 const reader = new LineReader();

@@ -30,6 +30,11 @@ describe("interrupt", () => {
     expect(trace).toContain("> 2 |   for (;;) ticks++;");
   });
 
+  it("the place is shown in the synchronous part too", async () => {
+    const trace = await interrupted("function busy() {\n  for (;;) ticks++;\n}\nbusy();", 200);
+    expect(trace).toContain(`busy, in cell ${notebook.last}, line 2`);
+  });
+
   it("finally runs when an await is interrupted", async () => {
     await notebook.value("finals = 0");
     await interrupted("try { await new Promise(() => {}) } finally { finals = 7 }", 100);

@@ -21,6 +21,7 @@ export type ValueData =
       readonly re: string;
       readonly im: string;
       readonly radius: string;
+      readonly axis: disc.Axis;
     };
 
 /** The JSON form of a number. A defined value is given to the digits of the display; the decimal middle's own error is in the radius. */
@@ -36,7 +37,7 @@ export function valueData(x: Rational | Quadratic | Real | Complex): ValueData {
   }
   const re = scientific(disc.real(e));
   const im = scientific(disc.imag(e));
-  return { kind: "complex", standing, re: re.middle, im: im.middle, radius: cornerOf(re, im, e.axis) };
+  return { kind: "complex", standing, re: re.middle, im: im.middle, radius: cornerOf(re, im, e.axis), axis: e.axis };
 }
 
 function sharp(x: Real | Complex, digits: number): Ball | disc.Disc {
@@ -97,11 +98,8 @@ export function fromValueData(data: ValueData): Rational | Quadratic | Real | Co
       return Quadratic.of(Rational.parse(data.a), Rational.parse(data.b), BigInt(data.d));
     case "real":
       return new Real(stored(data.middle, data.radius), { standing: data.standing });
-    case "complex": {
-      const radius = stored("0", data.radius);
-      const centre = disc.fromBalls(stored(data.re, "0", radius), stored(data.im, "0", radius));
-      return new Complex(disc.widenBy(centre, radius, 1 << 24), { standing: data.standing });
-    }
+    case "complex":
+      return new Complex(storedDisc(data), { standing: data.standing });
     default:
       throw new DomainError({
         subject: "value",
@@ -109,6 +107,13 @@ export function fromValueData(data: ValueData): Rational | Quadratic | Real | Co
         expected: "a stored number",
       });
   }
+}
+
+function storedDisc({ re, im, radius, axis }: Extract<ValueData, { kind: "complex" }>): disc.Disc {
+  if (axis === "real") return disc.fromBall(stored(re, radius));
+  if (axis === "imaginary") return disc.imaginary(stored(im, radius));
+  const blot = stored("0", radius);
+  return disc.widenBy(disc.fromBalls(stored(re, "0", blot), stored(im, "0", blot)), blot, 1 << 24, false);
 }
 
 function stored(middle: string, radius: string, scale?: Ball): Ball {

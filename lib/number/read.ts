@@ -35,7 +35,7 @@ function measured(middle: string, radius: string, text: string, subject: string)
   const centre = readExact([middle], subject);
   const r = readExact([radius], subject);
   if (!(r instanceof Rational) || r.num < 0n) fail(subject, [text], middle.length + 1, "a radius that is not negative");
-  return { enclosure: widened(centre, r as Rational), standing: "measured", source: text.trim() };
+  return { enclosure: widened(centre, r as Rational, hasUnit(middle)), standing: "measured", source: text.trim() };
 }
 
 /** "3.14..." stands for any number within one unit of its last place; in "1.5... + 0.2... i" each part does. */
@@ -53,16 +53,25 @@ function continued(text: string, subject: string): Leaf {
   );
   const centre = readExact([plain], subject);
   // The corner of the two units lies within their sum.
-  return { enclosure: widened(centre, unit.re.plus(unit.im)), standing: "measured", source: text.trim() };
+  return {
+    enclosure: widened(centre, unit.re.plus(unit.im), hasUnit(plain)),
+    standing: "measured",
+    source: text.trim(),
+  };
 }
 
-/** The smallest enclosure at hand of all numbers within r of the exact centre. */
-export function widened(centre: Exact, r: Rational): Enclosure {
+/** Whether a text speaks of complex numbers, even if its middle is real: "(1 + 0 i) ± 1e-6". */
+function hasUnit(text: string): boolean {
+  return /i/.test(text);
+}
+
+/** The smallest enclosure at hand of all numbers within r of the exact centre: all complex ones if it is complex, or if asked so. */
+export function widened(centre: Exact, r: Rational, plane = false): Enclosure {
   const size = r.num === 0n ? 64 : accuracyBits(centre, r);
-  if (centre instanceof Rational) return ball.widenBy(ball.fromRational(centre, size), ball.fromRational(r, 40), size);
-  const middle = centre.enclosure(size);
-  if (!("axis" in middle)) return ball.widenBy(middle, ball.fromRational(r, 40), size);
-  return disc.widenBy(middle, ball.fromRational(r, 40), size, false);
+  const middle = centre instanceof Rational ? ball.fromRational(centre, size) : centre.enclosure(size);
+  const radius = ball.fromRational(r, 40);
+  if (!("axis" in middle) && !plane) return ball.widenBy(middle, radius, size);
+  return disc.widenBy("axis" in middle ? middle : disc.fromBall(middle), radius, size, false);
 }
 
 // Bits of the centre down to 2^-32 of the radius.

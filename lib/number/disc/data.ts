@@ -234,8 +234,10 @@ export function contains(x: Disc, y: Disc | Ball | Rational): boolean {
     return containsRational(x, q);
   }
   if (x.axis !== "plane") {
-    const same = inner.axis === x.axis || isZero(inner);
-    return same && compareBall.contains(along(x), along(inner));
+    const on = x.axis === "real" ? inner.im === 0n : inner.re === 0n;
+    if (!on || (inner.axis !== x.axis && inner.rad > 0)) return false;
+    const man = x.axis === "real" ? inner.re : inner.im;
+    return compareBall.contains(along(x), { man, exp: inner.exp, rad: inner.rad });
   }
   if (Math.abs(x.exp - inner.exp) > 1_000_000) return isZero(inner) && containsZero(x);
   const exp = Math.min(x.exp, inner.exp);

@@ -22,6 +22,8 @@ export interface Field<T> {
   isZero(a: T): boolean;
   /** A square root in the field, if there is one; the choice of the two is fixed by the field. */
   sqrt(a: T): T | undefined;
+  /** A cube root in the field, where the field offers it. */
+  cbrt?(a: T): T | undefined;
   format(a: T): string;
 }
 

@@ -5,6 +5,7 @@ import {
   constant,
   degreeIn,
   divideBy,
+  fromTerms,
   isZero,
   monic,
   multiply,
@@ -14,6 +15,7 @@ import {
   unpack,
   variable,
 } from "./multivariate.ts";
+import { gcdUni } from "./univariate.ts";
 
 /**
  * A greatest common divisor, monic in printing order; 1 for coprime polynomials.
@@ -25,16 +27,33 @@ export function gcdOf<T>(F: Field<T>, f: Polynomial<T>, g: Polynomial<T>): Polyn
   if (isZero(g)) return monic(F, f);
   const name = f.variables.find((v) => degreeIn(f, v) > 0 || degreeIn(g, v) > 0);
   if (name === undefined) return constant(F, f.variables, F.one);
+  // In one letter Euclid over the field keeps the coefficients small, which pseudo-division does not.
+  if (isUnivariate(f, name) && isUnivariate(g, name)) return univariateGcd(F, f, g, name);
   const [cf, cg] = [contentIn(F, f, name), contentIn(F, g, name)];
   let [a, b] = [exactQuotient(F, f, cf), exactQuotient(F, g, cg)];
   if (degreeIn(a, name) < degreeIn(b, name)) [a, b] = [b, a];
   while (degreeIn(b, name) > 0) {
     const r = pseudoRemainder(F, a, b, name);
-    [a, b] = [b, isZero(r) ? r : exactQuotient(F, r, contentIn(F, r, name))];
+    [a, b] = [b, isZero(r) ? r : monic(F, exactQuotient(F, r, contentIn(F, r, name)))];
   }
   // A remainder without the letter means the primitive parts are coprime; zero means a is their divisor.
   const primitive = isZero(b) ? a : constant(F, f.variables, F.one);
   return monic(F, multiply(F, gcdOf(F, cf, cg), primitive));
+}
+
+function isUnivariate<T>(f: Polynomial<T>, name: string): boolean {
+  return f.variables.every((v) => v === name || degreeIn(f, v) <= 0);
+}
+
+function univariateGcd<T>(F: Field<T>, f: Polynomial<T>, g: Polynomial<T>, name: string): Polynomial<T> {
+  const list = (h: Polynomial<T>) => coefficientsIn(F, h, name).map((c) => c.terms.get(0) ?? F.zero);
+  const common = gcdUni(F, list(f), list(g));
+  const unit = f.variables.map((v) => (v === name ? 1 : 0));
+  return fromTerms(
+    F,
+    f.variables,
+    common.map((c, k) => [c, unit.map((u) => u * k)] as const),
+  );
 }
 
 /** The gcd of the coefficients of f as a polynomial in one letter. */

@@ -2,7 +2,7 @@
 
 import { Rational } from "../number/rational.ts";
 import type { Field } from "./field.ts";
-import { exactSqrt } from "./integer.ts";
+import { exactRoot, exactSqrt } from "./integer.ts";
 
 /** The field of rational numbers. Its square roots are not negative. */
 export const rationals: Field<Rational> = {
@@ -18,11 +18,17 @@ export const rationals: Field<Rational> = {
   inv: (a) => a.inv(),
   isZero: (a) => a.num === 0n,
   sqrt: rationalSqrt,
+  cbrt: rationalCbrt,
   format: (a) => a.toString(),
 };
 
 function rationalSqrt(a: Rational): Rational | undefined {
   const top = exactSqrt(a.num);
   const bottom = top === undefined ? undefined : exactSqrt(a.den);
+  return top === undefined || bottom === undefined ? undefined : Rational.of(top, bottom);
+}
+
+function rationalCbrt(a: Rational): Rational | undefined {
+  const [top, bottom] = [exactRoot(a.num, 3), exactRoot(a.den, 3)];
   return top === undefined || bottom === undefined ? undefined : Rational.of(top, bottom);
 }

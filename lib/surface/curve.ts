@@ -1,18 +1,33 @@
 // An elliptic curve in the long Weierstrass form, as a user holds it.
 
+import { complexes, reals } from "../algebra/enclosures.ts";
 import type { Field } from "../algebra/field.ts";
-import type { Polynomial } from "../algebra/multivariate.ts";
+import { fromTerms, type Polynomial } from "../algebra/multivariate.ts";
+import type { Residue } from "../algebra/primefield.ts";
+import { quadraticField } from "../algebra/quadraticfield.ts";
+import { rationals } from "../algebra/rationals.ts";
+import { mulUni } from "../algebra/univariate.ts";
+import { globalMinimalModel, toRationals } from "../arithmetic/minimal.ts";
+import { groupStructure } from "../arithmetic/structure-fp.ts";
+import { divisionPolynomials } from "../curve/division.ts";
 import { longEquation } from "../curve/equation/equations.ts";
 import { type Equation, plainEquation, plainPolynomial } from "../curve/equation/print.ts";
+import { isomorphisms, quadraticTwist } from "../curve/isomorphism.ts";
 import { pointsOverX } from "../curve/lift.ts";
 import { type Coefficients, type Invariants, invariantsOf, jInvariant, residual } from "../curve/weierstrass.ts";
+import type { Quadratic } from "../number/quadratic.ts";
 import { primitive, type Rational } from "../number/rational.ts";
 import type { Complex, ComplexNumeric, Numeric, Real } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
 import { type Coordinate, carry } from "./fields.ts";
+import { countOf, modCurve, reductionOf } from "./finite.ts";
 import { type ExactInput, elementOf } from "./input.ts";
+import { type ClassMember, isogenyClassOf, isogenyWithKernel, type KernelInput, primeIsogenies } from "./isogenies.ts";
+import { changeMorphism } from "./joined.ts";
 import type { Lattice } from "./lattice.ts";
+import type { Morphism } from "./morphism.ts";
 import { type AnyPoint, Point } from "./point.ts";
+import { type TorsionSubgroup, torsionOf } from "./torsion.ts";
 import type { TorusPoint } from "./torus-point.ts";
 import { exponentialOf, latticeOf, logarithmOf, noTorus } from "./uniformise.ts";
 
@@ -141,6 +156,119 @@ export class Curve<T = Rational> {
     return this as unknown as Curve<Coordinate>;
   }
 
+  /**
+   * The reduced global minimal model over Q (a1, a3 in {0, 1}, a2 in {−1, 0, 1}; it is unique) and the change of model to it.
+   * Source   Laska, Kraus and Connell.
+   */
+  minimal(): { readonly curve: Curve; readonly to: Morphism } {
+    const E = this.#rational("minimal");
+    const { a, change } = globalMinimalModel(E.a);
+    const curve = new Curve(rationals, toRationals(a));
+    return { curve, to: changeMorphism(E, curve, change) };
+  }
+
+  /** The torsion subgroup of E(Q), with generators and its proof. */
+  torsion(): TorsionSubgroup {
+    return torsionOf(this.#rational("torsion"));
+  }
+
+  /**
+   * The n-division polynomial in x, n >= 2: ψ_n for odd n; for even n ψ_n·ψ_2, which is a polynomial in x too. Its roots are the
+   * abscissas of the points but O that n kills.
+   */
+  divisionPolynomial(n: number): Polynomial<T> {
+    const F = this.field;
+    const polynomials = divisionPolynomials(F, this.a);
+    const f = polynomials.f(checkedIndex(n));
+    const list = n % 2 === 0 ? mulUni(F, f, polynomials.psi2Squared) : f;
+    return fromTerms(
+      F,
+      ["x"],
+      list.map((c, k) => [c, [k]] as const),
+    );
+  }
+
+  /** The quadratic twist by d; over Q its minimal model. */
+  twist(d: ExactInput | T): Curve<T> {
+    const F = this.field;
+    const factor = this.#element("d", d);
+    if (F.isZero(factor)) {
+      throw new DomainError({ subject: "twist", given: "d = 0", expected: "a number that is not 0", argument: "d" });
+    }
+    const curve = new Curve(F, quadraticTwist(F, this.a, factor));
+    return F.name === "Q" ? (curve.minimal().curve as unknown as Curve<T>) : curve;
+  }
+
+  /** The isomorphism to another curve over the same field, or undefined if there is none (equal j: they may be twists). */
+  isomorphism(other: Curve<T>): Morphism<Curve<T>, Curve<T>> | undefined {
+    const F = this.field;
+    const change = F.name === other.field.name ? isomorphisms(F, this.a, other.a)[0] : undefined;
+    return change && changeMorphism(this, other, change);
+  }
+
+  /** The curve modulo a prime of good reduction (of the minimal model where this one will not do). */
+  mod(p: bigint | number): Curve<Residue> {
+    return reductionOf(this.#rational("mod"), BigInt(p));
+  }
+
+  /** Over F_p: the number of points, O included, proved. */
+  get count(): bigint {
+    return countOf(this);
+  }
+
+  /** Over F_p: p + 1 − #E(F_p). */
+  get trace(): bigint {
+    return this.field.characteristic + 1n - this.count;
+  }
+
+  /** Over F_p: true if p divides the trace. */
+  get isSupersingular(): boolean {
+    return this.trace % this.field.characteristic === 0n;
+  }
+
+  /** Over F_p: the group as [n] (cyclic) or [n1, n2] with n1 | n2. */
+  get structure(): readonly bigint[] {
+    const { n1, n2 } = groupStructure(modCurve(this, "structure"), this.count);
+    return n1 === 1n ? [n2] : [n1, n2];
+  }
+
+  /**
+   * The isogeny with the given kernel: a point that generates it, all its points, or over Q an exact point of finite order of
+   * C/Λ, such as E.lattice().at(1/3, 0). Normalised: it pulls dX/(2Y + a1X + a3) back to dx/(2y + a1x + a3).
+   *
+   * Throws   DomainError for points that are no subgroup (with a sum that is missing), a subgroup that is not defined over Q, a
+   *          number near a torsion point (with its distance from one).
+   * Source   Vélu 1971.
+   */
+  isogeny({ kernel }: { readonly kernel: KernelInput<T> }): Morphism<Curve<T>, Curve<T>> {
+    return isogenyWithKernel(this, kernel);
+  }
+
+  /** All isogenies of prime degree from the curve that are defined over Q, by degree: complete by Mazur's theorem. */
+  isogenies(): Morphism[] {
+    return primeIsogenies(this.#rational("isogenies"));
+  }
+
+  /** The minimal models of the curves isogenous over Q, this one's first, with the prime isogenies between them. */
+  isogenyClass(): ClassMember[] {
+    return isogenyClassOf(this.#rational("isogenyClass"));
+  }
+
+  /** The same equation over R, C, or the quadratic field of an exact number: E.over("R"), E.over(quadratic(5)). */
+  over(field: "R"): Curve<Real>;
+  over(field: "C"): Curve<Complex>;
+  over(field: Quadratic): Curve<Quadratic>;
+  over(field: "R" | "C" | Quadratic): Curve<Real> | Curve<Complex> | Curve<Quadratic> {
+    if (field === "R") return this.carriedTo(reals);
+    if (field === "C") return this.carriedTo(complexes);
+    return this.carriedTo(quadraticField(field.d));
+  }
+
+  #rational(subject: string): Curve {
+    if (this.field.name === "Q") return this as unknown as Curve;
+    throw new DomainError({ subject, given: `${this}`, expected: "a curve over Q" });
+  }
+
   /** The same equation over a larger field. */
   carriedTo<U>(field: Field<U>): Curve<U> {
     if (field.name === this.field.name) return this as unknown as Curve<U>;
@@ -186,4 +314,14 @@ export class Curve<T = Rational> {
   [Symbol.toPrimitive](hint: string): string {
     return primitive(hint, this, "curve");
   }
+}
+
+function checkedIndex(n: number): number {
+  if (Number.isSafeInteger(n) && n >= 2 && n <= 100) return n;
+  throw new DomainError({
+    subject: "divisionPolynomial",
+    given: `n = ${n}`,
+    expected: "an integer from 2 to 100",
+    argument: "n",
+  });
 }

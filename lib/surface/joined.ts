@@ -41,17 +41,18 @@ export function joinedMorphism<C extends PlaneCurve>(
 }
 
 /** The change of model as a map of curves with its inverse. */
-export function changeMorphism(from: Curve, to: Curve, change: ModelChange<Rational>): Morphism<Curve, Curve> {
-  const forward: MorphismData<Rational> = {
-    map: changeMap(Q, from.a, change),
+export function changeMorphism<T>(from: Curve<T>, to: Curve<T>, change: ModelChange<T>): Morphism<Curve<T>, Curve<T>> {
+  const F = from.field;
+  const title = "change of model";
+  const forward: MorphismData<T> = {
+    map: changeMap(F, from.a, change),
     degree: 1,
-    title: "change of model",
-    inverse: () => ({
-      map: changeMap(Q, to.a, invertChange(Q, change)),
-      degree: 1,
-      title: "change of model",
-      inverse: () => forward,
-    }),
+    title,
+    change,
+    inverse: () => {
+      const back = invertChange(F, change);
+      return { map: changeMap(F, to.a, back), degree: 1, title, change: back, inverse: () => forward };
+    },
   };
-  return new Morphism<Curve, Curve>(from, to, forward as MorphismData<unknown>);
+  return new Morphism<Curve<T>, Curve<T>>(from, to, forward as MorphismData<unknown>);
 }

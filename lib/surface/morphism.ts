@@ -1,8 +1,10 @@
 // Maps between curves: one type for changes of model, cubics and quartics to Weierstrass form, isogenies, isomorphisms, twists.
 
+import { fromTerms, type Polynomial } from "../algebra/multivariate.ts";
 import { pullbackConstant } from "../curve/map/differential.ts";
 import { type Formula, formulaOf } from "../curve/map/formula.ts";
 import { applyMap, composeMaps, type FormMap, isExceptional, isIdentity, landsOnTarget } from "../curve/map/map.ts";
+import type { ModelChange } from "../curve/weierstrass.ts";
 import { primitive } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 import type { Standing } from "../proof/standing.ts";
@@ -19,6 +21,12 @@ export interface MorphismData<T> {
   readonly basePoint?: readonly T[];
   /** The inverse of an isomorphism, made on demand. */
   readonly inverse?: () => MorphismData<T>;
+  /** For a change of model: x = u²x′ + r, y = u³y′ + su²x′ + t from the source's (x, y) to the target's (x′, y′). */
+  readonly change?: ModelChange<T>;
+  /** For an isogeny: the monic polynomial of the abscissas of its kernel, from the constant term up. */
+  readonly kernel?: readonly T[];
+  /** The dual of an isogeny, made on demand. */
+  readonly dual?: () => MorphismData<T>;
 }
 
 /** The functions on points, whose instances get the methods of their class. */
@@ -82,6 +90,39 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
     return new Morphism(this.to, this.from, data);
   }
 
+  /**
+   * The dual isogeny: dual()∘φ is multiplication by the degree on the source.
+   * Throws   DomainError for a map that is no isogeny given by its kernel.
+   */
+  dual(): Morphism<W, V> {
+    const data = this.data.dual?.();
+    if (data) return new Morphism(this.to, this.from, { ...data, dual: () => this.data });
+    throw new DomainError({
+      subject: "dual",
+      given: `a ${this.title}`,
+      expected: "an isogeny made by E.isogeny({ kernel })",
+      hint: this.degree === 1 ? "An isomorphism has an inverse." : "",
+    });
+  }
+
+  /** For a change of model: u, r, s, t with x = u²x′ + r, y = u³y′ + su²x′ + t, (x, y) on the source and (x′, y′) on the target. */
+  get change(): ModelChange<unknown> | undefined {
+    return this.data.change;
+  }
+
+  /** For an isogeny: the monic polynomial in x whose roots are the abscissas of the kernel. */
+  get kernelPolynomial(): Polynomial<unknown> | undefined {
+    const { kernel, map } = this.data;
+    return (
+      kernel &&
+      fromTerms(
+        map.from.field,
+        ["x"],
+        kernel.map((c, k) => [c, [k]] as const),
+      )
+    );
+  }
+
   /** True if the formula itself cannot take the point (the map still can). */
   isExceptional(P: PointOf<V>): boolean {
     return isExceptional(this.data.map, coordinatesOn(this.from, P as never, "isExceptional"));
@@ -92,14 +133,11 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
     requireSame(first.to, this.from);
     const map = composeMaps(first.data.map, this.data.map);
     const [inner, outer] = [first.data.inverse, this.data.inverse];
-    const inverse =
-      inner && outer
-        ? () => composed(outer(), inner(), `inverse of a ${this.title} after a ${first.title}`)
-        : undefined;
+    const inverse = inner && outer ? () => composed(outer(), inner(), compositionTitle(this, first)) : undefined;
     const data: MorphismData<unknown> = {
       map,
       degree: this.degree * first.degree,
-      title: `${this.title} after a ${first.title}`,
+      title: compositionTitle(this, first),
       ...(first.data.basePoint ? { basePoint: first.data.basePoint } : {}),
       ...(inverse ? { inverse } : {}),
     };
@@ -130,6 +168,18 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
   [Symbol.toPrimitive](hint: string): string {
     return primitive(hint, this, "map");
   }
+}
+
+/** A change of model does not alter what a map is called. */
+function compositionTitle(second: Titled, first: Titled): string {
+  if (first.title === "change of model") return second.title;
+  if (second.title === "change of model") return first.title;
+  return second.degree * first.degree === 1 ? "isomorphism" : `composition of degree ${second.degree * first.degree}`;
+}
+
+interface Titled {
+  readonly title: string;
+  readonly degree: number;
 }
 
 function composed(first: MorphismData<unknown>, second: MorphismData<unknown>, title: string): MorphismData<unknown> {

@@ -8,6 +8,7 @@ import { Complex, Real } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
 import type { Curve } from "./curve.ts";
 import { carry, type Join, joinFields } from "./fields.ts";
+import { orderOverPrimeField } from "./finite.ts";
 
 /** An exact coordinate as text, an enclosure as its data. */
 export type CoordinateData = string | ReturnType<typeof valueData>;
@@ -76,12 +77,13 @@ export class Point<T = Rational> {
 
   /**
    * The least n >= 1 with n·P = O, or Infinity, proved: over Q no torsion point has an order above 12, over a quadratic field
-   * none above 18.
+   * none above 18; over F_p a bigint, from the order of the group.
    * Throws   DomainError for enclosure coordinates, which cannot show an order.
    * Source   Mazur 1977 (Silverman AEC VIII.7.5); Kamienny 1992.
    */
-  order(): number {
+  order(): number | bigint {
     const { field, a } = this.curve;
+    if (field.characteristic > 0n) return orderOverPrimeField(this);
     if (!this.#affine) return 1;
     if (field.name === "Q") {
       return rationalOrder(a as never, this.#affine as never);

@@ -1,11 +1,14 @@
 // Rational maps between models, given by forms; verified by exact substitution; taken at every point.
 
 import type { Field } from "../../algebra/field.ts";
+import { lowestTerms } from "../../algebra/multigcd.ts";
 import {
+  constant,
   degree,
   divideBy,
   evaluate,
   evaluateIn,
+  homogenise,
   isZero,
   mapCoefficients,
   multiply,
@@ -81,21 +84,36 @@ export function vanishesOn<T>(model: Model<T>, f: Polynomial<T>): boolean {
   return isZero(divideBy(model.field, f, model.equations[0]!).remainder);
 }
 
-/** A form with multiples of the curve's equation taken away. */
-export function reduceForm<T>(model: Model<T>, f: Polynomial<T>): Polynomial<T> {
-  return model.equations.length === 1 ? divideBy(model.field, f, model.equations[0]!).remainder : f;
-}
-
 /** Exact substitution: the image of the general point satisfies every equation of the target. */
 export function landsOnTarget<T>({ from, to, forms }: FormMap<T>): boolean {
   return to.equations.every((g) => vanishesOn(from, substitute(from.field, g, forms)));
 }
 
-/** The map that first does one, then another; forms reduced by the equation of the curve it starts from. */
+/** The map that first does one, then another; forms of higher degree in lowest terms on the curve it starts from. */
 export function composeMaps<T>(first: FormMap<T>, second: FormMap<T>): FormMap<T> {
-  const F = first.from.field;
-  const forms = second.forms.map((f) => reduceForm(first.from, substitute(F, f, first.forms)));
-  return { from: first.from, to: second.to, forms };
+  const { from } = first;
+  const { to } = second;
+  const forms = second.forms.map((f) => substitute(from.field, f, first.forms));
+  const linear = Math.max(...second.forms.map(degree)) <= 1;
+  return { from, to, forms: linear ? forms : simplified(from, to, forms) };
+}
+
+/**
+ * On a long Weierstrass form: y² replaced by the cubic, and common factors divided out. On other models the remainders modulo the
+ * equation.
+ */
+function simplified<T>(from: Model<T>, to: Model<T>, forms: readonly Polynomial<T>[]): Polynomial<T>[] {
+  const F = from.field;
+  if (to.weights.some((weight) => weight !== 1)) return [...forms];
+  if (from.kind !== "weierstrass") return forms.map((f) => divideBy(F, f, from.equations[0]!).remainder);
+  // With z = 1 and y before x the equation's first term is y².
+  const values = [variable(F, ["y", "x"], "x"), variable(F, ["y", "x"], "y"), constant(F, ["y", "x"], F.one)];
+  const equation = substitute(F, from.equations[0]!, values);
+  const affine = forms.map((f) => divideBy(F, substitute(F, f, values), equation).remainder);
+  const simple = lowestTerms(F, affine);
+  const d = Math.max(...simple.map(degree));
+  const [x, y, z] = from.variables.map((name) => variable(F, from.variables, name)) as Polynomial<T>[];
+  return simple.map((f) => substitute(F, homogenise(f, "z", d), [y!, x!, z!]));
 }
 
 /** True if the map is the identity of its curve: the forms are proportional to the letters, as functions on it. */

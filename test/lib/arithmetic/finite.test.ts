@@ -1,0 +1,101 @@
+import fc from "fast-check";
+import { describe, expect, it } from "vitest";
+import { modularSqrt } from "../../../lib/algebra/primefield.ts";
+import { primesUpTo } from "../../../lib/algebra/primes.ts";
+import { countPlainly } from "../../../lib/arithmetic/count.ts";
+import { multiplyMod, pointFrom, reduceModel } from "../../../lib/arithmetic/group-fp.ts";
+import type { IntegerModel } from "../../../lib/arithmetic/minimal.ts";
+import { countPoints, orderDividing } from "../../../lib/arithmetic/order-fp.ts";
+import { discreteLogarithm, groupStructure } from "../../../lib/arithmetic/structure-fp.ts";
+import { curve } from "../../../lib/surface/make-curve.ts";
+import table from "./curves.json" with { type: "json" };
+
+const model = (a: readonly number[]) => a.map(BigInt) as unknown as IntegerModel;
+
+describe("points over F_p", () => {
+  it("traces a_p for p < 100 of the tabulated curves — oracle: Cremona, Table 3", () => {
+    for (const entry of table.entries) {
+      const bad = entry.bad_primes.map(({ p }) => p);
+      for (const [p, trace] of Object.entries<number>(entry.frobenius_traces ?? {})) {
+        if (bad.includes(Number(p))) continue;
+        expect(Number(p) + 1 - countPlainly(model(entry.a), Number(p))).toBe(trace);
+      }
+    }
+  });
+
+  it("baby and giant steps agree with plain counting — oracle: second algorithm", () => {
+    const primes = [200_003, 200_009, 300_007, 400_009];
+    const coefficient = fc.integer({ min: -50, max: 50 });
+    fc.assert(
+      fc.property(fc.constantFrom(...primes), fc.array(coefficient, { minLength: 5, maxLength: 5 }), (p, a) => {
+        const E = model(a);
+        const F = reduceModel(E, BigInt(p));
+        try {
+          curve({ a }).mod(p);
+        } catch {
+          return; // singular over Q or modulo p
+        }
+        expect(countPoints(F.a, F.p)).toBe(BigInt(countPlainly(E, p)));
+      }),
+      { seed: 5, numRuns: 12 }, // plain counting takes milliseconds each
+    );
+  });
+
+  it("a curve of 60 bits: the order kills points of E, and lies in Hasse's interval — oracle: definition", () => {
+    const p = 1152921504606846883n;
+    const E = reduceModel(model([0, 0, 1, -1, 0]), p);
+    const count = countPoints(E.a, p);
+    for (const x of [1n, 10n, 100n]) expect(multiplyMod(E, count, pointFrom(E, x))).toBe(undefined);
+    const trace = p + 1n - count;
+    expect(trace * trace <= 4n * p).toBe(true);
+  });
+
+  it("structure: the exponent is n2 and n1·n2 points exist — oracle: counting orders one by one for p < 60", () => {
+    for (const a of [
+      [0, 0, 0, -1, 0],
+      [0, 0, 0, 0, 1],
+      [1, 0, 1, -19, 26],
+    ]) {
+      for (const p of primesUpTo(60)) {
+        if (p < 5) continue;
+        let E: ReturnType<ReturnType<typeof curve>["mod"]>;
+        try {
+          E = curve({ a }).mod(p);
+        } catch {
+          continue;
+        }
+        const points = Array.from({ length: p }, (_, x) => E.pointsWith({ x })).flat();
+        expect(BigInt(points.length + 1)).toBe(E.count);
+        const exponent = points.reduce((n, P) => (n < (P.order() as bigint) ? (P.order() as bigint) : n), 1n);
+        expect(E.structure.at(-1)).toBe(exponent);
+        expect(E.structure.reduce((x, y) => x * y)).toBe(E.count);
+      }
+    }
+  });
+
+  it("discrete logarithms — oracle: multiplication", () => {
+    const p = 1_000_003n;
+    const E = reduceModel(model([0, 0, 1, -1, 0]), p);
+    const count = countPoints(E.a, p);
+    const P = pointFrom(E, 5n);
+    const order = orderDividing(E, P, count);
+    for (const m of [0n, 1n, 12345n, 900_000n]) {
+      expect(discreteLogarithm(E, multiplyMod(E, m, P), P, order)).toBe(m % order);
+    }
+    expect(groupStructure(E, count).n2 % order).toBe(0n);
+  });
+
+  it("square roots modulo primes — oracle: squaring", () => {
+    for (const p of [3n, 7n, 13n, 17n, 97n, 193n, 65537n, 1000003n]) {
+      for (let a = 0n; a < 20n; a++) {
+        const r = modularSqrt(a * a, p);
+        expect(r !== undefined && (r * r - a * a) % p === 0n && 2n * r <= p).toBe(true);
+      }
+    }
+  });
+
+  it("a bad prime is refused with the kind of reduction", () => {
+    expect(() => curve`y^2 + y = x^3 - x`.mod(37)).toThrow(/bad reduction at 37.* a nonsplit node at \(5, 18\)/);
+    expect(() => curve`y^2 + y = x^3 - x`.mod(6)).toThrow(/expected a prime/);
+  });
+});

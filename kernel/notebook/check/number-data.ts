@@ -14,6 +14,9 @@ export interface Enclosed {
   readonly radius: Rational;
 }
 
+/** Digits by which the accuracy of one value may vary from run to run: its radius is rounded, its size is counted roughly. */
+const SLACK = 2;
+
 const ZERO = Rational.zero;
 const KINDS = new Set(["rational", "quadratic", "real", "complex"]);
 
@@ -34,7 +37,7 @@ export function compareNumbers(stored: NumberData, fresh: NumberData, where: str
   if (!overlaps(before, now))
     return verdict("differs", `${where}: was ${show(stored)}, is ${show(fresh)}${relation(before, now)}`);
   const [had, has] = [accuracy(before), accuracy(now)];
-  if (has >= Math.min(had, digits) - 1) return SAME;
+  if (has >= Math.min(had, digits) - SLACK) return SAME;
   return verdict("weaker", `${where}: ${has} digits are proved, ${had} were`);
 }
 

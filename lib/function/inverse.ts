@@ -16,9 +16,9 @@ import type { Ball } from "../number/ball.ts";
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
-import { PrecisionError } from "../proof/errors.ts";
+import { PoleError, PrecisionError } from "../proof/errors.ts";
 import { midpoint } from "./enclosure.ts";
-import { type ReducedLattice, reducedInvariants, reducedRoots } from "./reduced.ts";
+import { type ReducedLattice, reducedRoots } from "./reduced.ts";
 import { weierstrass } from "./weierstrass.ts";
 
 /** A point (x, y) with y² = 4x³ − g2 x − g3. */
@@ -35,16 +35,38 @@ export interface CubicPoint {
  * Error    an enclosure, certified by the group law (header); its radius follows from those of x and y.
  * Cost     a little more than one evaluation of ℘ and ℘′ at full precision.
  * Throws   PrecisionError if x and y are too coarse, or satisfy the equation for no point.
- * @param   g2 an enclosure of g2, by the caller's best route
+ * @param   lattice the reduced basis and g2 with so many bits
  */
-export function ellipticLogarithm(l: ReducedLattice, g2: Disc, point: CubicPoint, prec: number): Disc {
-  // τ has Im τ >= 0.84 and |Re τ| near or under 1/2: every period is at least 3/4 |r1|.
-  const context = { l, g2, unit: ball.ldexp(ball.mulInt(disc.abs(l.r1, 53), 3n, 53), -2) };
-  let z = start(l, point);
-  for (const bits of schedule(prec)) z = midpoint(disc.round(step(context, point, z, bits + 16), bits + 16));
-  const found = certifiedStep(context, point, z, prec + 16);
-  if (!found) throw notFound();
-  return disc.round(found, prec);
+export function ellipticLogarithm(
+  lattice: (prec: number) => { readonly l: ReducedLattice; readonly g2: Disc },
+  point: CubicPoint,
+  prec: number,
+): Disc {
+  // At a point of order two y has no accurate bit.
+  const known = Math.max(disc.bits(point.x), disc.bits(point.y));
+  let best: Disc | undefined;
+  // Deep in a tall cell ℘ is nearly constant: there every step needs the bits that this costs.
+  for (const spare of [0, 128, 512, 2048, 8192, 32768]) {
+    const { l, g2 } = lattice(prec + 32 + spare);
+    // τ has Im τ >= 0.84 and |Re τ| near or under 1/2: every period is at least 3/4 |r1|.
+    const context = { l, g2, unit: ball.ldexp(ball.mulInt(disc.abs(l.r1, 53), 3n, 53), -2) };
+    const found = attempt(context, point, prec, spare);
+    if (found && (!best || disc.bits(found) > disc.bits(best))) best = found;
+    if ((best && disc.bits(best) >= prec - 8) || prec + spare > known) break;
+  }
+  if (best) return disc.round(best, prec);
+  throw notFound();
+}
+
+function attempt(context: Context, point: CubicPoint, prec: number, spare: number): Disc | undefined {
+  try {
+    let z = start(context.l, point, spare);
+    for (const bits of schedule(prec)) z = midpoint(disc.round(step(context, point, z, bits + 16 + spare), bits + 16));
+    return certifiedStep(context, point, z, prec + 16 + spare);
+  } catch (error) {
+    if (error instanceof PoleError) return undefined;
+    throw error;
+  }
 }
 
 interface Context {
@@ -124,20 +146,46 @@ function notFound(): PrecisionError {
 type Pair = readonly [number, number];
 
 /**
- * A start for z. Where |x r1²| is large, −2x/y. Else Carlson's duplication for RF(x−e1, x−e2, x−e3) (DLMF 19.25.35) in doubles, the
- * sign settled by ℘′ there; a root taken on its cut counts as just above it, one path of integration as good as any other.
+ * A start for z. Where |x r1²| is large, −2x/y. Else Carlson's duplication for RF(x−e1, x−e2, x−e3) (DLMF 19.25.35), in doubles or, if bits to
+ * spare are asked for, with exponents of any size; the sign is settled by ℘′ there. A root on its cut counts as just above it: one
+ * path of integration is as good as any other.
  */
-function start(l: ReducedLattice, { x, y }: CubicPoint): Disc {
-  const wp = 120;
+function start(l: ReducedLattice, { x, y }: CubicPoint, spare: number): Disc {
+  const wp = 120 + spare;
   const square = disc.sqr(l.r1, wp);
   const scaled = disc.mul(x, square, wp);
   if (disc.magnitude(scaled) > 20) return midpoint(disc.neg(disc.ldexp(disc.div(x, y, 60), 1)));
-  const differences = reducedRoots(l).map((e) => disc.toDouble(disc.mul(disc.sub(x, e, wp), square, wp)) as Pair);
-  const v = carlson(differences as [Pair, Pair, Pair]);
-  const z = disc.mul(disc.fromBalls(ball.fromDouble(v[0]), ball.fromDouble(v[1])), midpoint(l.r1), 60);
-  const prime = weierstrass(l, midpoint(z), 60, ["prime"]).prime!;
+  const differences = reducedRoots(l).map((e) => midpoint(disc.mul(disc.sub(x, e, wp), square, wp)));
+  const v = spare === 0 ? carlson(differences.map((d) => disc.toDouble(d) as Pair)) : wideCarlson(differences);
+  const z = disc.mul(v, midpoint(l.r1), 60);
+  const prime = weierstrass(l, midpoint(z), 60 + spare, ["prime"]).prime!;
   const agree = disc.mul(prime, disc.conj(y), 60);
   return midpoint(agree.re >= 0n ? z : disc.neg(z));
+}
+
+/** The same with midpoints of enclosures, until the arguments agree to 20 bits: then 1/√mean is right to 40. */
+function wideCarlson(differences: readonly Disc[]): Disc {
+  const bits = 80;
+  let args = differences;
+  for (let n = 0; n < 40_000; n++) {
+    const [p, q, r] = args.map((s) => (disc.isZero(s) ? s : midpoint(disc.sqrt(s, bits, { cut: "continuous" })))) as [
+      Disc,
+      Disc,
+      Disc,
+    ];
+    const pair = (s: Disc, t: Disc) => disc.mul(s, t, bits);
+    const lambda = disc.add(disc.add(pair(p, q), pair(q, r), bits), pair(r, p), bits);
+    args = args.map((s) => midpoint(disc.ldexp(disc.add(s, lambda, bits), -2)));
+    const spread = Math.max(...args.map((s) => sizeOf(disc.sub(s, args[0]!, bits))));
+    if (spread < sizeOf(args[0]!) - 20) break;
+  }
+  const sum = disc.add(disc.add(args[0]!, args[1]!, bits), args[2]!, bits);
+  const mean = disc.divBall(sum, ball.fromInt(3), bits);
+  return midpoint(disc.inv(disc.sqrt(midpoint(mean), bits, { cut: "continuous" }), bits));
+}
+
+function sizeOf(d: Disc): number {
+  return disc.isZero(d) ? Number.NEGATIVE_INFINITY : disc.magnitude(d);
 }
 
 function root([a, b]: Pair): Pair {
@@ -153,8 +201,8 @@ function root([a, b]: Pair): Pair {
 
 const times = ([a, b]: Pair, [c, d]: Pair): Pair => [a * c - b * d, a * d + b * c];
 
-function carlson([a, b, c]: [Pair, Pair, Pair]): Pair {
-  let args = [a, b, c];
+function carlson(differences: readonly Pair[]): Disc {
+  let args = differences;
   for (let n = 0; n < 60; n++) {
     const [p, q, r] = args.map(root) as [Pair, Pair, Pair];
     const [pq, qr, rp] = [times(p, q), times(q, r), times(r, p)];
@@ -164,10 +212,12 @@ function carlson([a, b, c]: [Pair, Pair, Pair]): Pair {
   const mean: Pair = [(args[0]![0] + args[1]![0] + args[2]![0]) / 3, (args[0]![1] + args[1]![1] + args[2]![1]) / 3];
   const [u, w] = root(mean);
   const n = u * u + w * w;
-  return [u / n, -w / n];
+  const [re, im] = [u / n, -w / n];
+  if (!Number.isFinite(re) || !Number.isFinite(im)) throw farFromDoubles();
+  return disc.fromBalls(ball.fromDouble(re), ball.fromDouble(im));
 }
 
-/** g2 by theta constants, for callers that know no better. */
-export function thetaG2(l: ReducedLattice): Disc {
-  return reducedInvariants(l).g2;
+/** Differences that doubles cannot hold; the next attempt uses enclosures. */
+function farFromDoubles(): PoleError {
+  return new PoleError({ subject: "elliptic logarithm", given: "roots too near x for doubles", expected: "more bits" });
 }

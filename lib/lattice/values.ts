@@ -57,6 +57,6 @@ export function planeLogarithm(
   point: { readonly x: Disc; readonly y: Disc },
   prec: number,
 ): Disc {
-  const wp = prec + 16;
-  return ellipticLogarithm(reduced(lattice, wp), invariants(lattice, wp + 32).g2, point, prec);
+  const context = (bits: number) => ({ l: reduced(lattice, bits), g2: invariants(lattice, bits).g2 });
+  return ellipticLogarithm(context, point, prec);
 }

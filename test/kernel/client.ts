@@ -140,6 +140,11 @@ export class Client {
     return this.until(() => this.of(id).some(({ content }) => content.execution_state === "idle") || undefined);
   }
 
+  /** Drops what has come so far. */
+  forget(): void {
+    for (const list of [this.published, this.replies, this.questions]) list.length = 0;
+  }
+
   /** What was published so far with the request as parent. */
   of(id: string): Received[] {
     return this.published.filter(({ parent }) => parent.msg_id === id);

@@ -1,50 +1,48 @@
 // The command. Each verb lives in the folder that does the work; this file only chooses, and loads what it chose.
 import { type Console, EXIT } from "./notebook/command/console.ts";
+import { USAGE } from "./notebook/command/usage.ts";
 
 interface Command {
-  /** Behind the word halfperiod. */
-  readonly usage: string;
   readonly purpose: string;
   run(args: readonly string[], console: Console): Promise<number>;
 }
 
-const COMMANDS: Readonly<Record<string, Command>> = {
+type Name = keyof typeof USAGE;
+
+const COMMANDS: Readonly<Record<Name, Command>> = {
   demo: {
-    usage: "demo [--to FOLDER]",
     purpose: "run the notebooks that come along; executed notebooks and pages go to ./output",
     run: async (args, console) => (await import("./notebook/command/demo.ts")).demoCommand(args, console),
   },
   run: {
-    usage: "run NOTEBOOK... [--to FILE|FOLDER] [--digits N] [--limit SECONDS]",
     purpose: "run all cells in a fresh kernel and keep the outputs",
     run: async (args, console) => (await import("./notebook/command/run.ts")).runCommand(args, console),
   },
   check: {
-    usage: "check NOTEBOOK... [--digits N] [--limit SECONDS] [--report FILE]",
     purpose: "run again and compare with what is stored, by mathematics; the files stay as they are",
     run: async (args, console) => (await import("./notebook/command/check.ts")).checkCommand(args, console),
   },
   export: {
-    usage: "export NOTEBOOK [--as html] [--to FILE]",
     purpose: "write a page that opens anywhere and prints well",
     run: async (args, console) => (await import("./notebook/command/export.ts")).exportCommand(args, console),
   },
   install: {
-    usage: "install [--at DIR | --everyone] [--name NAME] [--set VARIABLE=VALUE]...",
     purpose: "make the kernel known to notebook front ends, of this user or in DIR/kernels; again: repair",
     run: async (args) => (await import("./service/install/install.ts")).install(args),
   },
   remove: {
-    usage: "remove [--at DIR | --everyone] [--name NAME]",
     purpose: "take the kernel away from where install put it",
     run: async (args) => (await import("./service/install/install.ts")).remove(args),
   },
   diagnose: {
-    usage: "diagnose",
     purpose: "which front ends find the kernel, whether it starts, how fast, and what to do if not",
     run: async (args, console) => (await import("./notebook/command/diagnose.ts")).diagnoseCommand(args, console),
   },
 };
+
+function isName(word: string): word is Name {
+  return Object.hasOwn(COMMANDS, word);
+}
 
 /** Runs `halfperiod <args>` and gives the exit code. */
 export async function main(args: readonly string[], console: Console = standardConsole()): Promise<number> {
@@ -58,16 +56,15 @@ export async function main(args: readonly string[], console: Console = standardC
     console.out.write(`${packageVersion()}\n`);
     return EXIT.ok;
   }
-  const command = Object.hasOwn(COMMANDS, name) ? COMMANDS[name] : undefined;
-  if (!command) {
+  if (!isName(name)) {
     console.err.write(`halfperiod: no command "${name}"; expected ${Object.keys(COMMANDS).join(", ")}\n`);
     return EXIT.usage;
   }
   if (rest.includes("--help") || rest.includes("-h")) {
-    console.out.write(`halfperiod ${command.usage}\n  ${command.purpose}\n`);
+    console.out.write(describe(name));
     return EXIT.ok;
   }
-  return attempt(() => command.run(rest, console), console);
+  return attempt(() => COMMANDS[name].run(rest, console), console);
 }
 
 /** Known complaints in one line and a code of their own; anything else is a fault of ours and keeps its stack. */
@@ -87,8 +84,12 @@ async function attempt(action: () => Promise<number>, { err }: Console): Promise
 }
 
 function usage(): string {
-  const rows = Object.values(COMMANDS).map(({ usage, purpose }) => `  halfperiod ${usage}\n      ${purpose}\n`);
-  return `halfperiod: a notebook kernel for cubic curves, lattices and elliptic functions, with proved digits\n\n${rows.join("")}`;
+  const title = "halfperiod: a notebook kernel for cubic curves, lattices and elliptic functions, with proved digits";
+  return `${title}\n\n${Object.keys(COMMANDS).filter(isName).map(describe).join("")}`;
+}
+
+function describe(name: Name): string {
+  return `  halfperiod ${USAGE[name]}\n      ${COMMANDS[name].purpose}\n`;
 }
 
 function standardConsole(): Console {

@@ -34,7 +34,8 @@ export async function executeFile(file: string, { screen, limit, digits, command
     const client = await KernelClient.start({
       cwd: path.dirname(path.resolve(file)),
       ...(command ? { command } : {}),
-      ...(digits === undefined ? {} : { env: { HALFPERIOD_DIGITS: String(digits) } }),
+      // What a person typed is history; what a command runs is not.
+      env: { HALFPERIOD_HISTORY: "off", ...(digits === undefined ? {} : { HALFPERIOD_DIGITS: String(digits) }) },
     });
     try {
       const { signal, stopped } = stop;

@@ -6,8 +6,7 @@ import { readNotebook, writeAtomically } from "../file.ts";
 import type { Notebook } from "../format.ts";
 import { changesSince, readStamp } from "../stamp.ts";
 import { type Console, EXIT, readArguments, readDigits, readLimit, UsageError } from "./console.ts";
-
-export const CHECK_USAGE = "halfperiod check NOTEBOOK... [--digits N] [--limit SECONDS] [--report FILE]";
+import { USAGE } from "./usage.ts";
 
 interface Checked {
   readonly file: string;
@@ -19,10 +18,10 @@ interface Checked {
 
 /** Checks notebooks; the files are not touched. 0 if all that is stored still stands, 1 if not. */
 export async function checkCommand(args: readonly string[], { out, err }: Console): Promise<number> {
-  const { values, positionals } = readArguments(args, { values: ["digits", "limit", "report"] }, CHECK_USAGE);
-  if (positionals.length === 0) throw new UsageError("no notebook given", CHECK_USAGE);
-  const limit = readLimit(values.limit, CHECK_USAGE);
-  const digits = readDigits(values.digits, CHECK_USAGE);
+  const { values, positionals } = readArguments(args, { values: ["digits", "limit", "report"] }, USAGE.check);
+  if (positionals.length === 0) throw new UsageError("no notebook given", USAGE.check);
+  const limit = readLimit(values.limit, USAGE.check);
+  const digits = readDigits(values.digits, USAGE.check);
   const all: Checked[] = [];
   for (const file of positionals) {
     const stored = await readNotebook(file);

@@ -17,7 +17,7 @@ export const EXIT = { ok: 0, failed: 1, usage: 2, interrupted: 130 } as const;
 /** Arguments that make no sense, with the line that would. */
 export class UsageError extends Error {
   constructor(problem: string, usage: string) {
-    super(`${problem}\nusage: ${usage}`);
+    super(`${problem}\nusage: halfperiod ${usage}`);
     this.name = "UsageError";
   }
 }

@@ -10,17 +10,16 @@ import { seconds } from "../progress.ts";
 import type { Run } from "../run.ts";
 import { colophon, summaryLines } from "../summary.ts";
 import { type Console, EXIT, failedCell, readArguments, UsageError } from "./console.ts";
-
-export const DEMO_USAGE = "halfperiod demo [--to FOLDER]";
+import { USAGE } from "./usage.ts";
 
 /** Runs every notebook of notebooks-demo and writes the executed notebook and its page into the output folder. */
 export async function demoCommand(args: readonly string[], { out, err }: Console): Promise<number> {
-  const { values, positionals } = readArguments(args, { values: ["to"] }, DEMO_USAGE);
-  if (positionals.length > 0) throw new UsageError(`"${positionals[0]}" is not expected`, DEMO_USAGE);
+  const { values, positionals } = readArguments(args, { values: ["to"] }, USAGE.demo);
+  if (positionals.length > 0) throw new UsageError(`"${positionals[0]}" is not expected`, USAGE.demo);
   const folder = path.resolve(values.to ?? "output");
   const source = path.join(packageRoot, "notebooks-demo");
   const names = (await readdir(source)).filter((name) => name.endsWith(".ipynb")).sort();
-  if (names.length === 0) throw new UsageError(`no notebook in ${source}`, DEMO_USAGE);
+  if (names.length === 0) throw new UsageError(`no notebook in ${source}`, USAGE.demo);
   await mkdir(folder, { recursive: true });
   let code: number = EXIT.ok;
   for (const name of names) {

@@ -9,6 +9,7 @@ import { kernelEntry } from "../../service/install/kernelspec.ts";
 import { type SearchedFolder, survey } from "../../service/install/survey.ts";
 import { type Execution, KernelClient } from "../client.ts";
 import { type Console, EXIT, readArguments } from "./console.ts";
+import { USAGE } from "./usage.ts";
 
 /** A line of the report: what was looked at, what was found. */
 type Fact = readonly [string, string];
@@ -20,7 +21,7 @@ interface Trial {
 
 /** Looks, tries the kernel, and says what to do. Exit status 0 if there is nothing to do. */
 export async function diagnoseCommand(args: readonly string[], { out }: Console): Promise<number> {
-  readArguments(args, {}, "halfperiod diagnose");
+  readArguments(args, {}, USAGE.diagnose);
   const folders = survey(thisMachine());
   section(out, `halfperiod ${packageVersion()} on Node ${process.versions.node}, ${os.platform()} ${os.arch()}`, [
     ["node", process.execPath],

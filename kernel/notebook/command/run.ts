@@ -1,20 +1,19 @@
 // halfperiod run: restart, run all, keep the outputs.
-import { stat } from "node:fs/promises";
+import { mkdir, stat } from "node:fs/promises";
 import path from "node:path";
 import { executeFile } from "../execute-file.ts";
 import { writeNotebook } from "../file.ts";
 import { seconds } from "../progress.ts";
 import { summarise } from "../summary.ts";
 import { type Console, EXIT, failedCell, readArguments, readDigits, readLimit, UsageError } from "./console.ts";
-
-export const RUN_USAGE = "halfperiod run NOTEBOOK... [--to FILE|FOLDER] [--digits N] [--limit SECONDS]";
+import { USAGE } from "./usage.ts";
 
 /** Runs notebooks and writes their outputs into them, or elsewhere with --to. A run that fails writes nothing. */
 export async function runCommand(args: readonly string[], { out, err }: Console): Promise<number> {
-  const { values, positionals } = readArguments(args, { values: ["to", "digits", "limit"] }, RUN_USAGE);
-  if (positionals.length === 0) throw new UsageError("no notebook given", RUN_USAGE);
-  const limit = readLimit(values.limit, RUN_USAGE);
-  const digits = readDigits(values.digits, RUN_USAGE);
+  const { values, positionals } = readArguments(args, { values: ["to", "digits", "limit"] }, USAGE.run);
+  if (positionals.length === 0) throw new UsageError("no notebook given", USAGE.run);
+  const limit = readLimit(values.limit, USAGE.run);
+  const digits = readDigits(values.digits, USAGE.run);
   const targetOf = await targets(positionals, values.to);
   let code: number = EXIT.ok;
   for (const file of positionals) {
@@ -37,8 +36,11 @@ async function targets(files: readonly string[], to: string | undefined): Promis
     (found) => found.isDirectory(),
     () => to.endsWith(path.sep),
   );
-  if (isFolder) return (file) => path.join(to, path.basename(file));
+  if (isFolder) {
+    await mkdir(to, { recursive: true });
+    return (file) => path.join(to, path.basename(file));
+  }
   if (files.length > 1)
-    throw new UsageError(`--to ${to} is no folder, and there are ${files.length} notebooks`, RUN_USAGE);
+    throw new UsageError(`--to ${to} is no folder, and there are ${files.length} notebooks`, USAGE.run);
   return () => to;
 }

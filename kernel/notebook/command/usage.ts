@@ -1,0 +1,11 @@
+// The words behind `halfperiod`, one line a command: for the list of commands and for complaints about arguments.
+
+export const USAGE = {
+  demo: "demo [--to FOLDER]",
+  run: "run NOTEBOOK... [--to FILE|FOLDER] [--digits N] [--limit SECONDS]",
+  check: "check NOTEBOOK... [--digits N] [--limit SECONDS] [--report FILE]",
+  export: "export NOTEBOOK [--as html] [--to FILE]",
+  install: "install [--at DIR | --everyone] [--name NAME] [--set VARIABLE=VALUE]...",
+  remove: "remove [--at DIR | --everyone] [--name NAME]",
+  diagnose: "diagnose",
+} as const;

@@ -17,8 +17,21 @@ export type Cell =
   | { readonly kind: "formula"; readonly text: string; readonly tex: string }
   | { readonly kind: "words"; readonly text: string };
 
+/** How a number is shown with few digits. */
+export interface ShortPart {
+  text(value: unknown): string;
+  tex(value: unknown): string;
+}
+
+export interface ShortForm {
+  readonly text: string;
+  readonly tex: string;
+}
+
 /** How values inside a value are shown; handed to each renderer. */
 export interface Show {
+  /** The short form of a value that has one. */
+  short(value: unknown, part: ShortPart): ShortForm | undefined;
   text(value: unknown): string;
   /** A formula without delimiters. */
   tex(value: unknown): string;
@@ -34,6 +47,8 @@ export interface Kind<T> {
   tex?(value: T, show: Show): string;
   /** Running text with $formulas$, in place of one displayed formula. */
   prose?(value: T, show: Show): string;
+  /** The value in a line of text, where it has a shorter form than its own; `part` shows a number with few digits. */
+  short?(value: T, part: ShortPart): ShortForm;
   html?(value: T, show: Show): string;
   svg?(value: T): string;
   cell?(value: T, show: Show): Cell;

@@ -6,10 +6,13 @@ import { Rational } from "../number/rational.ts";
 import { Complex, Real } from "../number/values.ts";
 import { Claim } from "../surface/claim-value.ts";
 import { ClassPolynomial } from "../surface/class-polynomial.ts";
+import { ComplexMultiplication } from "../surface/complex-multiplication.ts";
 import { Curve } from "../surface/curve.ts";
 import { EllipticFunction } from "../surface/elliptic-function.ts";
+import { Homothety } from "../surface/homothety.ts";
 import { Jacobi } from "../surface/jacobi.ts";
 import { Lattice } from "../surface/lattice.ts";
+import { LaurentExpansion } from "../surface/laurent-expansion.ts";
 import { Morphism } from "../surface/morphism.ts";
 import { Moved } from "../surface/moved.ts";
 import { Point } from "../surface/point.ts";
@@ -20,6 +23,7 @@ import { PlaneCurve, PlanePoint } from "../surface/variety.ts";
 import { claimKind } from "./claim-kind.ts";
 import { curveKind, pointKind } from "./curve-kind.ts";
 import { quadraticKind, rationalKind } from "./exact-kind.ts";
+import { homothetyKind, laurentKind, multiplicationKind } from "./expansion-kind.ts";
 import { figureKind } from "./figure-kind.ts";
 import { entry, type KindEntry, shape } from "./kind.ts";
 import { functionKind, latticeKind, torusPointKind } from "./lattice-kind.ts";
@@ -45,6 +49,9 @@ export const KINDS: readonly KindEntry[] = [
   entry(PlanePoint, planePointKind),
   entry(Morphism, morphismKind),
   shape(isPolynomial, polynomialKind),
+  entry(LaurentExpansion, laurentKind),
+  entry(Homothety, homothetyKind),
+  entry(ComplexMultiplication, multiplicationKind),
   entry(Jacobi, jacobiKind),
   entry(ClassPolynomial, classPolynomialKind),
   entry(QSeries, qSeriesKind),

@@ -18,6 +18,10 @@ export const latticeKind: Kind<Lattice> = {
     const periods = array("rcl", rows);
     return L.notice ? array("l", [[periods], [small(texWords(L.notice))]]) : periods;
   },
+  short: (L, part) => ({
+    text: L.periods.map((w) => `Z·(${part.text(w)})`).join(" + "),
+    tex: L.periods.map((w) => `\\mathbb{Z}\\,(${part.tex(w)})`).join(" + "),
+  }),
   conventions: (L) => L.conventions,
   data: (L, show) => ({ kind: "lattice", periods: L.periods.map((w) => show.data(w)) }),
 };
@@ -70,6 +74,7 @@ function gcd(a: bigint, b: bigint): bigint {
 export const functionKind: Kind<EllipticFunction | QuasiPeriodicFunction> = {
   text: (f) => `${f}, a function of z`,
   tex: (f) => `z \\mapsto ${formulaTex(String(f))}`,
+  short: (f) => ({ text: String(f), tex: formulaTex(String(f)) }),
   conventions: (f) => f.conventions,
   data: (f) => ({ kind: "function", formula: String(f) }),
 };

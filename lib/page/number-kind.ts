@@ -92,7 +92,7 @@ function complexTex(z: Complex): string {
   const bracketed = im.radius
     ? `\\left(${texDecimal(read({ ...im, sign: "" }))}\\right)`
     : texDecimal(read({ ...im, sign: "" }));
-  if (axis === "imaginary") return `${im.sign}${bracketed}\\,i`;
+  if (axis === "imaginary") return `${im.sign}${bracketed === "1" ? "i" : `${bracketed}\\,i`}`;
   const sign = im.sign === "-" ? "-" : "+";
   const long = re.digits.length + im.digits.length > LONGEST_LINE;
   const sum = long

@@ -7,7 +7,7 @@ import { Rational } from "../number/rational.ts";
 import { Complex, Real } from "../number/values.ts";
 import { Point } from "../surface/point.ts";
 import { type Decimal, plainDecimal, shortened, texDecimalLine } from "./digits.ts";
-import type { NumberCell, Show } from "./kind.ts";
+import type { NumberCell, ShortPart, Show } from "./kind.ts";
 import { texWords } from "./tex.ts";
 
 export const LINE_DIGITS = 12;
@@ -21,6 +21,8 @@ export function shortText(value: unknown, show: Show, digits = LINE_DIGITS): str
   if (hidden !== undefined) return `0 ± 1e${hidden}`;
   const number = numberOf(value, show, digits);
   if (number) return join(number, plainDecimal, " i");
+  const short = show.short(value, partsWith(show, digits))?.text;
+  if (short !== undefined) return short;
   const text = show.text(value).replace(/\s*\n\s*/g, " ");
   return text.length <= LONGEST_TEXT ? text : `${text.slice(0, LONGEST_TEXT)} ...`;
 }
@@ -32,8 +34,14 @@ export function shortTex(value: unknown, show: Show, digits = LINE_DIGITS): stri
   if (hidden !== undefined) return `0 \\pm 10^{${hidden}}`;
   const number = numberOf(value, show, digits);
   if (number) return join(number, texDecimalLine, "\\,i");
+  const short = show.short(value, partsWith(show, digits))?.tex;
+  if (short !== undefined) return short;
   const tex = show.tex(value);
   return tex.length <= LONGEST_TEX ? tex : texWords("(too long for a line)");
+}
+
+function partsWith(show: Show, digits: number): ShortPart {
+  return { text: (x) => shortText(x, show, digits), tex: (x) => shortTex(x, show, digits) };
 }
 
 /** The parts of a decimal number, cut to the same place; undefined for other values. */

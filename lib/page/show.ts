@@ -48,6 +48,10 @@ function isTypeset(part: unknown, depth: number): boolean {
 }
 
 export const show: Show = {
+  short(value, part) {
+    return kindOf(value)?.short?.(value, part);
+  },
+
   text(value) {
     const kind = kindOf(value);
     if (kind) return kind.text(value, show);

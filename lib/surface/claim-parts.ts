@@ -4,18 +4,24 @@ import { sameExact } from "../number/exactness.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
 import { Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
-import { LibraryError } from "../proof/errors.ts";
+import { LibraryError, UndecidedError } from "../proof/errors.ts";
 import { type Standing, weakest } from "../proof/standing.ts";
+import { homotheticStanding, inLattice, sameLattice } from "./claim-lattice.ts";
 import { numberStanding } from "./claim-number.ts";
 import type { Relation } from "./claim-value.ts";
 import { Curve } from "./curve.ts";
+import { EllipticFunction } from "./elliptic-function.ts";
+import { Lattice } from "./lattice.ts";
 import { Point } from "./point.ts";
+import { PlaneCurve, PlanePoint } from "./variety.ts";
 
 /** What a claim can be about: numbers, values of the library, and lists or records of them. */
 export type Claimed =
   | ComplexNumeric
   | { readonly field: object }
   | { readonly curve: object }
+  | Lattice
+  | EllipticFunction
   | readonly Claimed[]
   | { readonly [part: string]: Claimed };
 
@@ -23,12 +29,30 @@ export type Claimed =
 export function standingOf(lhs: unknown, relation: Relation, rhs: unknown): Standing {
   if (relation === "on") return onStanding(lhs, rhs);
   const [a, b] = [numberOf(lhs), numberOf(rhs)];
+  if (relation === "in" && a && rhs instanceof Lattice) return inLattice(a, rhs);
+  if (relation === "homothetic" && lhs instanceof Lattice && rhs instanceof Lattice)
+    return homotheticStanding(lhs, rhs);
   if (a && b && relation !== "in" && relation !== "homothetic") return numberStanding(a, relation, b);
   if (relation !== "=" && relation !== "≠") throw unsuited(lhs, relation, rhs);
   if (lhs instanceof Curve && rhs instanceof Curve)
     return decided(lhs.equals(rhs), relation, "equations compared over the same field");
   if (lhs instanceof Point && rhs instanceof Point) return pointStanding(lhs, relation, rhs);
+  if (lhs instanceof PlanePoint && rhs instanceof PlanePoint) {
+    return decided(lhs.equals(rhs), relation, "exact coordinates");
+  }
+  if (relation === "=" && lhs instanceof Lattice && rhs instanceof Lattice) return sameLattice(lhs, rhs);
+  if (lhs instanceof EllipticFunction && rhs instanceof EllipticFunction) return functionStanding(lhs, relation, rhs);
   return partsStanding(lhs, relation, rhs);
+}
+
+/** Elliptic functions are compared by their normal forms in ℘ and ℘′. */
+function functionStanding(f: EllipticFunction, relation: "=" | "≠", g: EllipticFunction): Standing {
+  try {
+    return decided(f.equals(g), relation, "normal forms in ℘ and ℘′ compared");
+  } catch (error) {
+    if (error instanceof UndecidedError) return { kind: "undecided", tried: error.given };
+    throw error;
+  }
 }
 
 /** A number of the library or the language; undefined for other values. */
@@ -95,6 +119,7 @@ function anyApart(standings: readonly Standing[]): Standing {
 
 /** A point, or a list of two coordinates, put into the equation of a curve. */
 function onStanding(lhs: unknown, rhs: unknown): Standing {
+  if (lhs instanceof PlanePoint && rhs instanceof PlaneCurve) return onPlaneCurve(lhs, rhs);
   if (!(rhs instanceof Curve)) throw unsuited(lhs, "on", rhs);
   const coordinates: unknown = lhs instanceof Point ? lhs.coordinates : lhs;
   if (lhs instanceof Point && !coordinates) return { kind: "proved", argument: "O lies on every curve" };
@@ -109,6 +134,16 @@ function onStanding(lhs: unknown, rhs: unknown): Standing {
 }
 
 type Num = Real | Complex;
+
+function onPlaneCurve(P: PlanePoint<unknown>, C: PlaneCurve<unknown>): Standing {
+  try {
+    C.checked(P.coordinates);
+    return { kind: "proved", argument: "exact substitution into the equation" };
+  } catch (error) {
+    if (error instanceof LibraryError) return { kind: "refuted", evidence: error.given };
+    throw error;
+  }
+}
 
 /** Over other fields, such as F_p, the curve itself decides. */
 function onExactly(coordinates: readonly unknown[], E: Curve<unknown>): Standing {
@@ -127,6 +162,7 @@ function unsuited(lhs: unknown, relation: Relation, rhs: unknown): TypeError {
 
 function described(value: unknown): string {
   if (Array.isArray(value)) return `a list of ${value.length}`;
-  if (typeof value === "object" && value !== null) return `a ${value.constructor?.name ?? "record"}`;
+  if ((typeof value === "object" || typeof value === "function") && value !== null)
+    return `a ${value.constructor?.name ?? "record"}`;
   return String(value);
 }

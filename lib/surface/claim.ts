@@ -10,7 +10,7 @@ import { Claim, type Relation } from "./claim-value.ts";
  * and records are compared part by part; the whole is known as well as its weakest part.
  *
  * Domain   = and ≠ for numbers, points, curves, lattices and lists of them; < and ≤ for real numbers; "on" for a point, or a
- *          list of its two coordinates, and a curve.
+ *          list of its two coordinates, and a curve; "in" for a number and a lattice; "homothetic" for two lattices.
  * Error    enclosures that are apart prove ≠ and <, and refute =. Agreement is computed at two precisions, each through
  *          the origin of the values.
  * Throws   TypeError for values that the relation is not made for. A claim that fails does not throw: it is refuted.

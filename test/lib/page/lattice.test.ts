@@ -4,6 +4,7 @@ import { provedDigits } from "../../../lib/number/context.ts";
 import { complex } from "../../../lib/number/convert.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
 import { table } from "../../../lib/page/table.ts";
+import { tex } from "../../../lib/page/typeset.ts";
 import { lattice } from "../../../lib/surface/lattice.ts";
 
 const before = provedDigits();
@@ -59,5 +60,16 @@ describe("lattices on a page", () => {
   it("functions are shown as functions", () => {
     expect(latex(L.wp)).toContain("z \\mapsto \\wp(z)");
     expect(text(L.sigma)).toBe("σ, a function of z");
+  });
+});
+
+describe("expansions on a page", () => {
+  it("℘ at 0: 1/t² + t²/5 − t⁴/28 for g2 = 4, g3 = −1 — oracle: g2/20 and g3/28, DLMF 23.9.E2 and E5", () => {
+    expect(text(L.wp.laurent(0, 8))).toMatch(/^t\^-2 \+ .*, t = z$/);
+    expect(tex(L.wp.laurent(0, 8))).toContain("t^{-2} + \\frac{1}{5}\\, t^{2} - \\frac{1}{28}\\, t^{4} + O(t^{6})");
+    expect(tex(L.wp.laurent(L.halfPeriods[0], 3))).toContain("t = z - \\frac{\\omega_1}{2}");
+    expect(() =>
+      temml.renderToString(tex(L.wp.laurent(complex("0.3", "0.2"), 3)), { throwOnError: true }),
+    ).not.toThrow();
   });
 });

@@ -1,9 +1,12 @@
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import { provedDigits } from "../../../lib/number/context.ts";
 import { complex, enclose, real } from "../../../lib/number/convert.ts";
+import { Complex } from "../../../lib/number/values.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
 import { claim } from "../../../lib/surface/claim.ts";
 import { claimList } from "../../../lib/surface/claim-list.ts";
+import { lattice } from "../../../lib/surface/lattice.ts";
+import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
 
 const before = provedDigits();
@@ -154,5 +157,45 @@ describe("claims on a page", () => {
     expect(names.filter((name) => name === "first").length).toBe(1);
     expect(names.indexOf("first")).toBeLessThan(names.indexOf("second"));
     expect(claimList().find(({ name }) => name === "first")?.standing.kind).toBe("proved");
+  });
+});
+
+describe("claims about lattices and functions", () => {
+  const L = lattice({ invariants: [4, -1] });
+
+  it("membership: proved by whole coordinates, certified by what is left, refuted with the distance", () => {
+    expect(claim("in", L.at(2, -3), "in", L).standing.kind).toBe("proved");
+    expect(claim("in", L.at("1/2", 0), "in", L).standing.kind).toBe("refuted");
+    const w1 = Complex.from(L.periods[0]);
+    expect(claim("in", w1.times(two).div(three).times(three).div(two), "in", L).standing.kind).toBe("certified");
+    expect(claim("in", 1, "in", L).standing).toMatchObject({
+      kind: "refuted",
+      evidence: expect.stringContaining("distance of 1"),
+    });
+  });
+
+  it("homothety: 2Λ is homothetic to Λ since j is the same, the square lattice is not — oracle: j", () => {
+    expect(claim("h", L, "homothetic", lattice({ invariants: ["1/4", "-1/64"] })).standing.kind).toBe("proved");
+    expect(claim("h", L, "homothetic", lattice({ tau: complex(0, 1) })).standing.kind).toBe("refuted");
+  });
+
+  it("a lattice is the same in another basis, and another one in twice its basis", () => {
+    expect(claim("same", L, "=", lattice({ periods: L.reduced.periods })).standing.kind).toBe("certified");
+    const [w1, w2] = L.periods;
+    expect(claim("other", L, "=", lattice({ periods: [w1.times(2), w2] })).standing.kind).toBe("refuted");
+  });
+
+  it("the differential equation holds as an identity of functions: proved by normal forms", () => {
+    const { wp } = L;
+    const right = wp.pow(3).times(4).minus(wp.times(4)).plus(1);
+    expect(claim("ode", wp.prime.pow(2), "=", right).standing.kind).toBe("proved");
+    expect(claim("ode", wp.prime.pow(2), "=", right.plus(1)).standing.kind).toBe("refuted");
+  });
+
+  it("points of a plane cubic", () => {
+    const C = cubic`u^3 + 2v^3 + 3w^3 = 6 u v w`;
+    const P = C.point({ u: 1, v: 1, w: 1 });
+    expect(claim("on", P, "on", C).standing.kind).toBe("proved");
+    expect(claim("tangent", C.tangent(P).meets, "=", C.point({ u: -1, v: 2, w: -1 })).standing.kind).toBe("proved");
   });
 });

@@ -1,0 +1,73 @@
+// Laurent expansions of elliptic functions, homotheties, and complex multiplication.
+
+import type { ComplexMultiplication } from "../surface/complex-multiplication.ts";
+import type { Homothety } from "../surface/homothety.ts";
+import type { LaurentExpansion } from "../surface/laurent-expansion.ts";
+import type { Kind, Show } from "./kind.ts";
+import { prose } from "./prose.ts";
+import { standingProse, standingText } from "./standing.ts";
+import { array, texWords } from "./tex.ts";
+
+const MOST_TERMS = 12;
+
+export const laurentKind: Kind<LaurentExpansion> = {
+  text: (series) => `${series}, t = z${atText(series)}`,
+  tex: (series, show) => {
+    const terms = series.coefficients
+      .map((c, k) => ({ tex: show.tex(c), exponent: series.order + k }))
+      .filter(({ tex }) => tex !== "0");
+    const shown = terms.slice(0, MOST_TERMS).map(({ tex, exponent }) => termTex(tex, exponent));
+    const rest = `O(t^{${series.order + series.coefficients.length}})`;
+    const long = shown.some((term) => term.length > 60);
+    const where = `\\quad t = z ${atTex(series, show)}`;
+    if (long)
+      return array("l", [...shown.map((term, k) => [k === 0 ? term : `{}+ ${term}`]), [`{}+ ${rest}, ${where}`]]);
+    return `${[...shown, rest].join(" + ").replaceAll("+ -", "- ")}, ${where}`;
+  },
+  data: (series, show) => ({
+    kind: "expansion",
+    order: String(series.order),
+    coefficients: series.coefficients.map((c) => show.data(c)),
+  }),
+};
+
+function termTex(coefficient: string, exponent: number): string {
+  const power = exponent === 0 ? "" : exponent === 1 ? "t" : `t^{${exponent}}`;
+  if (power === "") return coefficient;
+  if (coefficient === "1" || coefficient === "-1") return `${coefficient.slice(0, -1)}${power}`;
+  return /[^\\{]\s[+-]\s/.test(coefficient) ? `\\left(${coefficient}\\right) ${power}` : `${coefficient}\\, ${power}`;
+}
+
+function atText({ point }: LaurentExpansion): string {
+  return isOrigin(point) ? "" : ` - (${String(point).split(" = ")[0]})`;
+}
+
+function atTex({ point }: LaurentExpansion, show: Show): string {
+  if (isOrigin(point)) return "";
+  const [name = ""] = show.tex(point).split(" = ");
+  return `- ${/\s[+-]\s/.test(name) ? `\\left(${name}\\right)` : name}`;
+}
+
+function isOrigin(point: LaurentExpansion["point"]): boolean {
+  return point.exact !== undefined && String(point.exact) === "0";
+}
+
+export const homothetyKind: Kind<Homothety> = {
+  text: (h) => `${h}   ${standingText(h.standing)}`,
+  tex: (h, show) => `\\Lambda_2 = \\alpha\\, \\Lambda_1, \\quad \\alpha = ${show.tex(h.factor)}`,
+  prose: (h, show) =>
+    `$\\displaystyle \\Lambda_2 = \\alpha\\, \\Lambda_1, \\quad \\alpha = ${show.tex(h.factor)}$ — ${standingProse(h.standing)}`,
+  data: (h, show) => ({ kind: "homothety", factor: show.data(h.factor), standing: h.standing.kind }),
+};
+
+/** A sentence; its standing is part of it. */
+export const multiplicationKind: Kind<ComplexMultiplication> = {
+  text: (cm) => String(cm),
+  tex: (cm) => texWords(String(cm)),
+  prose: (cm) => prose(String(cm)),
+  data: (cm) => ({
+    kind: "complex multiplication",
+    outcome: cm.outcome,
+    discriminant: cm.discriminant === undefined ? null : String(cm.discriminant),
+  }),
+};

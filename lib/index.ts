@@ -31,8 +31,10 @@ export {
   tan,
   tanh,
 } from "./number/functions.ts";
+export { toComplexjs, toDecimal, toFraction } from "./number/interchange.ts";
 export { Quadratic, quadratic } from "./number/quadratic.ts";
 export { Rational } from "./number/rational.ts";
+export { type Recognition, recognise } from "./number/recognise.ts";
 export { eulerGamma, i, π } from "./number/symbols.ts";
 export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/values.ts";
 

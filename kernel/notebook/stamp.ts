@@ -41,11 +41,16 @@ export function readStamp(notebook: Notebook): Stamp | undefined {
   return FIELDS.every((field) => typeof stamp?.[field] === "string") ? (stamp as Stamp) : undefined;
 }
 
+/** Has the code changed since the stamp was made? */
+export function isEdited(stamp: Stamp, notebook: Notebook): boolean {
+  return stamp.code !== codeHash(notebook);
+}
+
 /** What has changed between a stamp and now, in words. */
 export function changesSince(stamp: Stamp, notebook: Notebook): string[] {
   const now = makeStamp(notebook);
   const notes: string[] = [];
-  if (stamp.code !== now.code) notes.push("the code was edited after the stored run");
+  if (isEdited(stamp, notebook)) notes.push("the code was edited after the stored run");
   for (const [field, name] of [
     ["version", "halfperiod"],
     ["edition", "conventions, edition"],

@@ -1,7 +1,7 @@
 // What a run has shown, in a few words.
 import { packageVersion } from "../service/info.ts";
 import type { Notebook } from "./format.ts";
-import { readStamp } from "./stamp.ts";
+import { isEdited, readStamp } from "./stamp.ts";
 import { type Tally, tally } from "./values.ts";
 
 const MET = ["proved", "certified"] as const;
@@ -42,9 +42,11 @@ function numbersText({ exactNumbers, definedNumbers, measuredNumbers, digits }: 
   return parts.join(", ");
 }
 
-/** The line at the end of a page: what computed it, by which conventions, when. */
+/** The line at the end of a page: what computed it, by which conventions, when, and whether it was edited since. */
 export function colophon(notebook: Notebook): string {
-  const { version = packageVersion(), edition = "1", date } = readStamp(notebook) ?? {};
-  const day = date === undefined ? "" : `, on ${date.slice(0, 10)}`;
-  return `Computed by halfperiod ${version} with the conventions of edition ${edition}${day}.`;
+  const stamp = readStamp(notebook);
+  if (!stamp) return `Set by halfperiod ${packageVersion()}.`;
+  const made = `Computed by halfperiod ${stamp.version} with the conventions of edition ${stamp.edition}`;
+  const since = isEdited(stamp, notebook) ? " The code was edited after that." : "";
+  return `${made}, on ${stamp.date.slice(0, 10)}.${since}`;
 }

@@ -53,6 +53,8 @@ describe("the stamp of a run", () => {
       /^Computed by halfperiod 0\.1\.0 with the conventions of edition 1, on \d{4}-\d\d-\d\d\.$/,
     );
     expect(readStamp(plain)).toBeUndefined();
+    expect(colophon(plain)).toBe("Set by halfperiod 0.1.0.");
+    expect(colophon({ ...kept, cells: [cell("other")] })).toMatch(/The code was edited after that\.$/);
   });
 
   it("notices an edit but no new layout and no new comment; strings count as they stand", () => {

@@ -37,7 +37,7 @@ export function kernelInfo(): Json {
     implementation: KERNEL_NAME,
     implementation_version: version,
     language_info: languageInfo(dependencies.typescript),
-    banner: `halfperiod ${version}: cubic curves, period lattices and elliptic functions in TypeScript, every digit proved.`,
+    banner: `halfperiod ${version}: cubic curves, period lattices and elliptic functions in TypeScript, with proved digits.`,
     help_links: HELP_LINKS,
     supported_features: [],
     debugger: false,

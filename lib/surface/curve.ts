@@ -136,9 +136,9 @@ export class Curve<T = Rational> {
    * Throws   DomainError for a point of another curve, PrecisionError if its coordinates are too coarse.
    */
   logarithm(P: AnyPoint): Real | Complex | TorusPoint {
-    const E = this.#analytic("logarithm");
+    this.#analytic("logarithm");
     const Q = P.minus(this.origin) as Point<Coordinate>; // checks that the curve is the same
-    return logarithmOf(E, this.lattice(), Q);
+    return logarithmOf(this.lattice(), Q);
   }
 
   /**

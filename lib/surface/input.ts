@@ -1,10 +1,13 @@
 // Exact numbers as they come into curves and equations.
 
 import type { Field } from "../algebra/field.ts";
-import { rationals as Q } from "../algebra/rationals.ts";
+import { rationals } from "../algebra/rationals.ts";
 import type { Slots } from "../curve/equation/read.ts";
+import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
+import { Complex, Real } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
+import { type Coordinate, carry, fieldOf, joinFields } from "./fields.ts";
 
 /** What is read exactly: a bigint, a safe integer, a decimal or fraction string, a rational. */
 export type ExactInput = Rational | bigint | number | string;
@@ -31,21 +34,56 @@ export function elementOf<T>(F: Field<T>, subject: string, argument: string, val
   return F.mul(F.fromInt(q.num), F.inv(F.fromInt(q.den)));
 }
 
-/** The slots of an equation template, read as rational numbers. */
-export function rationalSlots(subject: string, slots: readonly ExactInput[]): Slots<Rational> {
-  const values = slots.map((slot, k) => toRational(subject, `slot ${k + 1}`, slot));
+/** What a template or a list of coefficients takes: exact numbers, and real or complex values that put the curve over R or C. */
+export type NumberInput = ExactInput | Quadratic | Real | Complex;
+
+/** The field that inserted numbers lead to: Q for exact input, Q(√d) for quadratic numbers, R or C for enclosures. */
+export type FieldOfInput<S> =
+  Extract<S, Complex> extends never
+    ? Extract<S, Real> extends never
+      ? Extract<S, Quadratic> extends never
+        ? Rational
+        : Quadratic
+      : Real
+    : Complex;
+
+/** The smallest field that holds all the numbers, and the numbers in it. A Real stays over R, also where it is exact. */
+export function inOneField(subject: string, values: readonly NumberInput[]) {
+  const read = values.map((value, k) =>
+    isFieldNumber(value) ? value : toRational(subject, `slot ${k + 1}`, value as ExactInput),
+  );
+  let field = rationals as unknown as Field<Coordinate>;
+  for (const value of read) field = joinFields(field, fieldOf(value))!;
+  return { field, values: read.map((value) => carry(value, field)) };
+}
+
+function isFieldNumber(value: NumberInput): value is Quadratic | Real | Complex {
+  return value instanceof Quadratic || value instanceof Real || value instanceof Complex;
+}
+
+/** The slots of an equation template, in the smallest field that holds them all. */
+export function readSlots(subject: string, slots: readonly NumberInput[]): Slots<Coordinate> {
+  const { field, values } = inOneField(subject, slots);
   return {
-    printed: values.map(String),
+    printed: values.map((value) => field.format(value)),
     reading: {
-      field: Q,
-      number: (text) => Rational.parse(text),
+      field,
+      number: (text) => carry(Rational.parse(text), field),
       slot: (index) => values[index]!,
-      exponent: (index) => exponent(values[index]!),
-      root: Q.sqrt,
+      exponent: (index) => exponent(slots[index]!),
+      root: field.sqrt,
     },
   };
 }
 
-function exponent(value: Rational): number | undefined {
+/** The slots of a template that stays over Q. */
+export function rationalSlots(subject: string, slots: readonly ExactInput[]): Slots<Rational> {
+  const exact = slots.map((slot, k) => toRational(subject, `slot ${k + 1}`, slot));
+  return readSlots(subject, exact) as unknown as Slots<Rational>;
+}
+
+function exponent(slot: NumberInput): number | undefined {
+  if (isFieldNumber(slot)) return undefined;
+  const value = toRational("curve", "exponent", slot);
   return value.isInteger() && value.sign() >= 0 && value.compare(60) <= 0 ? Number(value.num) : undefined;
 }

@@ -1,6 +1,5 @@
 // From a curve to its torus and back: what `E.lattice()`, `E.logarithm(P)` and `E.exponential(z)` delegate to.
 
-import { rationalOrder } from "../arithmetic/order.ts";
 import { COMPLEX_LOGARITHM, canonicalPlace, REAL_LOGARITHM, realPlace, torsionIndex } from "../curve/uniformisation.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
 import { workingPrecision } from "../number/context.ts";
@@ -36,18 +35,21 @@ function torusPlane(E: Curve<Coordinate>, [x, y]: readonly [Coordinate, Coordina
  *
  * A torsion point over Q gives an exact point of the torus; a real point a real number t, or ω2/2 + t on the bounded component.
  */
-export function logarithmOf(E: Curve<Coordinate>, L: Lattice, P: Point<Coordinate>): Real | Complex | TorusPoint {
+export function logarithmOf(L: Lattice, P: Point<Coordinate>): Real | Complex | TorusPoint {
   if (!P.coordinates) return L.at(0, 0);
   const { wp, prime } = torusPlane(P.curve, P.coordinates);
   const [x, y] = [scalar(wp, "logarithm"), scalar(prime, "logarithm")];
   if (!(x instanceof Real) || !(y instanceof Real) || !L.realComponents) return complexLogarithm(L, x, y);
-  const order =
-    E.field.name === "Q" && P.curve.field.name === "Q" ? rationalOrder(E.a as never, P.coordinates as never) : Infinity;
-  if (order === 2) return halfPeriod(L, x);
+  if (y.exact && y.sign() === 0) return halfPeriod(L, x);
+  const order = isExactField(P.curve.field.name) ? Number(P.order()) : Infinity;
   const { bounded, index } = placeOf(L.data, x, y, order);
   if (index !== undefined) return L.at(Rational.of(index, order), bounded ? Rational.of(1, 2) : 0);
   const t = apply(REAL_LOGARITHM, [L.data, x, y]) as Real;
   return bounded ? new TorusPoint(L.data, [Rational.zero, Rational.of(1, 2)], t) : t;
+}
+
+function isExactField(name: string): boolean {
+  return name === "Q" || name.startsWith("Q(");
 }
 
 /** The component of a real point, and for torsion of order n the k with t = kω1/n, decided on the ladder. */

@@ -153,6 +153,7 @@ function root<T>(context: Context<T>, tree: RootTree): Polynomial<T> {
     given:
       value === undefined ? "a letter under a root" : `√${reading.field.format(value)} is not in ${reading.field.name}`,
     expected: `a number of ${reading.field.name}`,
+    ...(value === undefined ? {} : { hint: `Insert it as \${quadratic(${reading.field.format(value)})}.` }),
   });
 }
 

@@ -1,12 +1,13 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { modularSqrt } from "../../../lib/algebra/primefield.ts";
+import { modularSqrt, type Residue } from "../../../lib/algebra/primefield.ts";
 import { primesUpTo } from "../../../lib/algebra/primes.ts";
 import { countPlainly } from "../../../lib/arithmetic/count.ts";
 import { multiplyMod, pointFrom, reduceModel } from "../../../lib/arithmetic/group-fp.ts";
 import type { IntegerModel } from "../../../lib/arithmetic/minimal.ts";
 import { countPoints, orderDividing } from "../../../lib/arithmetic/order-fp.ts";
 import { discreteLogarithm, groupStructure } from "../../../lib/arithmetic/structure-fp.ts";
+import type { Curve } from "../../../lib/surface/curve.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
 import table from "./curves.json" with { type: "json" };
 
@@ -58,7 +59,7 @@ describe("points over F_p", () => {
     ]) {
       for (const p of primesUpTo(60)) {
         if (p < 5) continue;
-        let E: ReturnType<ReturnType<typeof curve>["mod"]>;
+        let E: Curve<Residue>;
         try {
           E = curve({ a }).mod(p);
         } catch {

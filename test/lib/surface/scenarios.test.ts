@@ -2,6 +2,7 @@
 import { describe, expect, it } from "vitest";
 import { rationals as Q } from "../../../lib/algebra/rationals.ts";
 import { plainPolynomial } from "../../../lib/curve/equation/print.ts";
+import { Quadratic, quadratic } from "../../../lib/number/quadratic.ts";
 import { Rational } from "../../../lib/number/rational.ts";
 import { Complex, type Real } from "../../../lib/number/values.ts";
 import { cubic } from "../../../lib/surface/make-cubic.ts";
@@ -105,6 +106,35 @@ describe("torsion hidden in a bad model", () => {
     const xs = [1, 2, 3, 4, 5, 6].map((k) => working.exponential(working.lattice().at(Rational.of(k, 7), 0)));
     expect(xs.map((P) => Math.round((P.x as Real).toDouble()) + 0)).toEqual([18, 6, 0, 0, 6, 18]);
     expect(xs.map((P) => Math.round((P.y as Real).toDouble()) + 0)).toEqual([0, 12, 0, 18, 36, 108]);
+  });
+});
+
+describe("complex multiplication or not: twists and two embeddings of a quadratic j", () => {
+  const A = curve`y^2 = x^3 + 15x^2 - 14800x + 624000`;
+  const B = curve`y^2 = x^3 - 595x - 5586`;
+
+  it("A and B: j = 255³, twists by −5, isomorphic over Q(√−5) only", () => {
+    expect([A.j, B.j].map(String)).toEqual(["16581375", "16581375"]);
+    expect(A.discriminant.equals(2n ** 12n * 5n ** 6n * 7n ** 3n)).toBe(true);
+    expect(A.twist(-5).equals(B.minimal().curve)).toBe(true);
+    expect(A.isomorphism(B)).toBe(undefined);
+    const over = A.over(quadratic(-5)).isomorphism(B.over(quadratic(-5)))!;
+    expect(over.verify().kind).toBe("proved");
+    expectDigits(A.lattice().tau.im, "0.3779644730092272272145165362341800608158");
+    expectDigits(A.lattice().periods[0].re, "0.571881314801472759885557697335946755158");
+    expectDigits(B.lattice().periods[0].re, "0.4833279264042028866832692097574534327625");
+  });
+
+  it("y² = 4x³ − gx − g over Q(√5) and its conjugate: periods of both, in the embedding of the number", () => {
+    const j = Quadratic.of(Rational.of(-191025, 2), Rational.of(-85995, 2), 5n);
+    const g = j.times(27).div(j.minus(1728));
+    expect(String(g)).toBe("675/121 + 56160/5929 √5");
+    const plus = curve`y^2 = 4x^3 - ${g}x - ${g}`;
+    const minus = curve`y^2 = 4x^3 - ${g.conjugate()}x - ${g.conjugate()}`;
+    expect(plus.j.equals(j) && minus.j.equals(j.conjugate())).toBe(true);
+    expectDigits(plus.lattice().periods[0].re, "1.483824794570827401840395776610873850307");
+    expectDigits(minus.lattice().periods[0].re, "2.769068513595511194136830733448553369606");
+    expectDigits(minus.lattice().tau.im, "0.3872983346207416885179265399782399610833");
   });
 });
 

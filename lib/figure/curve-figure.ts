@@ -1,8 +1,10 @@
 import { Curve } from "../surface/curve.ts";
+import { Point } from "../surface/point.ts";
 import type { PlaneCurve, PlanePoint } from "../surface/variety.ts";
 import { drawCurve } from "./curve-picture.ts";
 import { chooseWindow } from "./curve-window.ts";
 import { type RealInput, realDouble, realWindow } from "./doubles.ts";
+import { fact } from "./facts.ts";
 import type { Figure } from "./figure.ts";
 import type { Mark } from "./marks.ts";
 import { type Named, namedEntries } from "./named.ts";
@@ -59,7 +61,7 @@ export function curve(C: AnyCurve | PlaneCurve, options: CurveFigureOptions = {}
     data: {
       figure: "curve",
       curve: String(C),
-      points: Object.fromEntries(named.map(([name, point]) => [name, pointText(subject, point)])),
+      points: Object.fromEntries(named.map(([name, point]) => [name, pointText(point)])),
     },
   });
 }
@@ -80,8 +82,9 @@ function marked(subject: Subject<CurvePoint>, named: readonly NamedPoint[]): Ext
   return { ...NOTHING, marks, remarks: beyond.length > 0 ? [`At infinity: ${beyond.join(", ")}.`] : [] };
 }
 
-function pointText(subject: Subject<CurvePoint>, point: FigurePoint): string {
-  return subject.isPoint(point) ? String(point) : `(${(point as readonly unknown[]).map(String).join(", ")})`;
+function pointText(point: FigurePoint): string {
+  if (point instanceof Point) return point.coordinates ? fact(point.coordinates) : "O";
+  return Array.isArray(point) ? fact(point) : String(point);
 }
 
 function linesOf(subject: Subject<CurvePoint>, lines: CurveFigureOptions["lines"] = []): Extras {

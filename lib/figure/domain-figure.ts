@@ -2,6 +2,7 @@ import type { ComplexNumeric } from "../number/values.ts";
 import { Lattice } from "../surface/lattice.ts";
 import { drawDomain } from "./domain-picture.ts";
 import { complexDouble } from "./doubles.ts";
+import { fact } from "./facts.ts";
 import type { Figure } from "./figure.ts";
 import { type Named, namedEntries } from "./named.ts";
 
@@ -23,7 +24,7 @@ export function fundamentalDomain(options: DomainFigureOptions = {}): Figure {
     const tau = value instanceof Lattice ? value.reduced.tau : value;
     const at = complexDouble("figure.fundamentalDomain", tau);
     if (!(at[1] > 0)) throw new RangeError(`figure.fundamentalDomain: τ = ${String(tau)}; expected Im τ > 0`);
-    return { mark: { at, label }, text: String(tau) };
+    return { mark: { at, label }, text: fact(tau) };
   });
   const boundary = named.flatMap(([label, value]) =>
     value instanceof Lattice ? [`${label}: ${value.reduced.boundary}`] : [],

@@ -13,6 +13,8 @@ export interface LatticePicture {
   /** Full periods, drawn as arrows from 0. */
   readonly periods: readonly [Point, Point];
   readonly periodNames: readonly [string, string];
+  /** A second lattice, drawn over the first as rings, with the outline of its cell dashed. */
+  readonly overlay?: readonly [Point, Point];
   readonly marks: readonly Mark[];
   readonly window?: Window;
   readonly remarks: readonly string[];
@@ -48,6 +50,7 @@ export function drawLattice(picture: LatticePicture): Figure {
     body: [
       ...grid(picture.periods, frame),
       cell(picture.periods, frame),
+      ...overlay(picture.overlay, frame),
       axes(frame, { x: "Re z", y: "Im z" }),
       ...points.map(([cx, cy]) => node("circle", { class: "lattice", cx, cy, r: 2.4, fill: "currentColor" })),
       ...arrows.map((end) => arrow(start, end)),
@@ -72,6 +75,19 @@ function latticeWindow([a, b]: readonly [Point, Point], marked: readonly Point[]
     return [Math.min(...values) - border, Math.max(...values) + border];
   };
   return { x: range(0), y: range(1) };
+}
+
+/** Rings around the points of the second lattice, and the dashed outline of its cell. */
+function overlay(periods: LatticePicture["overlay"], frame: Frame): SvgNode[] {
+  if (!periods) return [];
+  const [a, b] = periods;
+  const corners: Point[] = [[0, 0], a, [a[0] + b[0], a[1] + b[1]], b];
+  const outline = pathData(clipPolygon(corners.map(frame.toPixel), frame), true);
+  const style = { stroke: "currentColor", "stroke-width": 1.1 };
+  return [
+    node("path", { class: "other-cell", d: outline, ...style, "stroke-dasharray": "5 4" }),
+    ...latticePoints(periods, frame).map(([cx, cy]) => node("circle", { class: "other", cx, cy, r: 5, ...style })),
+  ];
 }
 
 function cell([a, b]: readonly [Point, Point], frame: Frame): SvgNode {
@@ -191,6 +207,9 @@ function describe(picture: LatticePicture, count: number): string {
   const periods = picture.periods.map((period, k) => `${picture.periodNames[k]} near ${near(period)}`);
   return [
     `The period lattice in the plane of z with ${periods.join(" and ")}; the cell they span is shaded${count > 0 ? ` and ${count} lattice points are shown` : ""}.`,
+    ...(picture.overlay
+      ? [`A second lattice is drawn as rings, its cell, spanned by ${picture.overlay.map(near).join(" and ")}, dashed.`]
+      : []),
     ...(picture.marks.length > 0
       ? [`Marked: ${picture.marks.map(({ label, at }) => `${spoken(label)} near ${near(at)}`).join("; ")}.`]
       : []),

@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import * as figure from "../../../lib/figure/figures.ts";
 import { complex } from "../../../lib/number/convert.ts";
+import { atDigits } from "../../../lib/number/functions.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
 import { lattice } from "../../../lib/surface/lattice.ts";
 import { cubic } from "../../../lib/surface/make-cubic.ts";
@@ -63,7 +64,23 @@ describe("figure.lattice and figure.fundamentalDomain", () => {
   it("the periods are those of the lattice — oracle: published real period 2.99345864", () => {
     const picture = figure.lattice(L);
     expect(picture.alt).toContain("ω1 near 2.993 + 0 i and ω2 near 0 + 2.451 i");
-    expect((picture.data.periods as string[])[0]).toMatch(/^ω1 = 2\.99345864/);
+    expect((picture.data.periods as string[])[0]).toBe("2.99345864623...");
+  });
+
+  it("a second lattice is drawn as rings — oracle: three times as many points in Λ + Zω1/3", () => {
+    const [w1, w2] = L.periods;
+    const M = lattice({ periods: [w1.div(3), w2] });
+    const picture = figure.lattice(L, { overlay: M, window: { x: [-3.1, 6.1], y: [-2.6, 2.6] } });
+    expect(elements(picture.svg, "other").length).toBeGreaterThan(2 * elements(picture.svg, "lattice").length);
+    expect(picture.alt).toContain("second lattice is drawn as rings");
+  });
+
+  it("the data do not depend on the digits asked for — oracle: the same picture at 20 and at 60 digits", () => {
+    const zP = E.logarithm(P);
+    const data = (digits: number) =>
+      atDigits(digits, () => figure.lattice(E.lattice(), { points: { zP, third: E.lattice().at("1/3", 0) } }).data);
+    expect(data(60)).toEqual(data(20));
+    expect((data(20).points as Record<string, string>).third).toBe("ω1/3");
   });
 
   it("a lattice stands for its reduced τ; τ below the axis is refused", () => {

@@ -111,15 +111,19 @@ export function rcOfRoots(a: Disc, b: Disc, prec: number, x?: Disc, y?: Disc): D
 /**
  * RC(1, 1 + e) = Σ (−e)^k/(2k + 1) = atan(√e)/√e.
  *
- * Domain   1 + e off the negative real axis.
+ * Domain   1 + e off the negative real axis; `loose` takes some branch on and across it.
  * Error    for |e| < 2^−k, k >= 1, the terms from N on are together at most 2^(1−kN).
  */
-export function rcNearOne(e: Disc, prec: number): Disc {
+export function rcNearOne(e: Disc, prec: number, loose = false): Disc {
   if (disc.isZero(e)) return disc.one;
   const wp = prec + 12;
   const fall = -disc.magnitude(e);
   const terms = Math.ceil((wp + 2) / Math.max(fall, 1));
-  if (fall < 1 || terms > 4 * Math.sqrt(wp)) return carlsonRC(disc.one, disc.add(disc.one, e, wp), prec);
+  if (fall < 1 || terms > 4 * Math.sqrt(wp)) {
+    const y = disc.add(disc.one, e, wp);
+    if (!loose) return carlsonRC(disc.one, y, prec);
+    return rcOfRoots(disc.one, disc.sqrt(y, wp, { cut: "continuous" }), prec, disc.one, y);
+  }
   let sum: Disc = disc.zero;
   for (let k = terms - 1; k >= 0; k--) {
     const bits = Math.max(16, wp - fall * k);

@@ -2,6 +2,7 @@
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { DomainError } from "../proof/errors.ts";
+import { settledBranch } from "./carlson-branch.ts";
 import { closedUnderConjugation, fallOf, halved, refuseZeros, rootsOf, type Triple } from "./carlson-duplication.ts";
 import { carlsonRC, carlsonRF, rcNearOne, rootOfMean } from "./carlson-first.ts";
 import { carlsonSeries, farEnough, termCount } from "./carlson-series.ts";
@@ -76,14 +77,13 @@ function lastTerm(gaps: readonly Disc[], total: Disc, root: Disc, step: number, 
 /**
  * RJ(x, y, z, p) = (3/2) ∫_0^∞ dt / (√((t+x)(t+y)(t+z)) (t+p)).
  *
- * Domain   at most one of x, y, z is 0, p ≠ 0, and one of: all four in one open half plane that is reached without crossing the cut
- *          (such as Re > 0); x, y, z real and not negative; two of x, y, z conjugate and the third real and not negative; p equal to one of the
- *          others (then RD). For p < 0 and real x, y, z >= 0 the value is Cauchy's principal value.
+ * Domain   x, y, z, p off the negative real axis, at most one of x, y, z is 0, p ≠ 0. For p < 0 and real x, y, z >= 0 the value is Cauchy's
+ *          principal value.
  * Branch   as RF.
  * Error    enclosure, relative, about 2^−prec for exact arguments; a principal value near its zero has an absolute error of that size.
- * Cost     as RF, with four roots and an RC of falling cost a step.
- * Throws   as RF; DomainError outside the domain.
- * Source   DLMF 19.16.2, 19.36(i), 19.20.14; Carlson 1995, section 3 with its conditions on the arguments.
+ * Cost     as RF, with four roots and an RC of falling cost a step; arguments that no half plane holds cost some hundred short terms besides.
+ * Throws   as RF; PrecisionError where coarse arguments leave the branch open.
+ * Source   DLMF 19.16.2, 19.36(i), 19.20.14; Carlson 1995, section 3 with its conditions on the arguments; carlson-branch.ts elsewhere.
  */
 export function carlsonRJ(x: Disc, y: Disc, z: Disc, p: Disc, prec: number, real = false): Disc {
   refuseZeros("RJ", [p], 0);
@@ -116,7 +116,8 @@ function inRightHalf(arguments_: readonly Disc[]): boolean {
   return arguments_.every((w) => disc.isZero(w) || w.re >= BigInt(Math.ceil(w.rad)));
 }
 
-function duplicatedRJ([a, b, c, s]: Four, [x, y, z, p]: Four, prec: number): Disc {
+/** The duplication; `loose` takes any branch of the elementary terms and of √p, for a caller that settles it afterwards. */
+function duplicatedRJ([a, b, c, s]: Four, [x, y, z, p]: Four, prec: number, loose = false): Disc {
   const wp = prec + 32;
   const [px, py, pz] = [disc.sub(p, x, wp), disc.sub(p, y, wp), disc.sub(p, z, wp)];
   // A = (x + y + z + 2p)/5: 5(A − p) = −(px + py + pz).
@@ -134,8 +135,8 @@ function duplicatedRJ([a, b, c, s]: Four, [x, y, z, p]: Four, prec: number): Dis
     // Term m is 6·4^−m/d RC(1, 1 + 4^−3m δ/d²).
     const d = disc.mul(disc.mul(disc.add(root, r[0], wp), disc.add(root, r[1], wp), wp), disc.add(root, r[2], wp), wp);
     const e = disc.ldexp(disc.div(delta, disc.sqr(d, wp), wp), -6 * step);
-    sum = disc.add(sum, disc.ldexp(disc.div(rcNearOne(e, wp), d, wp), -2 * step), wp);
-    root = halvedLast(r, root, wp);
+    sum = disc.add(sum, disc.ldexp(disc.div(rcNearOne(e, wp, loose), d, wp), -2 * step), wp);
+    root = halvedLast(r, root, wp, loose);
     r = halved(r, wp);
     step++;
   }
@@ -143,9 +144,9 @@ function duplicatedRJ([a, b, c, s]: Four, [x, y, z, p]: Four, prec: number): Dis
 }
 
 /** √((p + λ)/4) from the roots. */
-function halvedLast([a, b, c]: Triple, s: Disc, wp: number): Disc {
+function halvedLast([a, b, c]: Triple, s: Disc, wp: number, loose: boolean): Disc {
   const lambda = disc.add(disc.mul(a, disc.add(b, c, wp), wp), disc.mul(b, c, wp), wp);
-  return disc.sqrt(disc.ldexp(disc.add(disc.sqr(s, wp), lambda, wp), -2), wp);
+  return disc.sqrt(disc.ldexp(disc.add(disc.sqr(s, wp), lambda, wp), -2), wp, loose ? { cut: "continuous" } : {});
 }
 
 /**
@@ -161,7 +162,7 @@ function rotatedRJ(roots: Four, squares: Four, prec: number): Disc {
   const root = disc.sqrt(factor, wp);
   const turned = squares.map((w) => disc.mul(w, factor, wp)) as unknown as Four;
   // The angles are only read in doubles: 3.1 < π leaves room for their error, and the half plane is checked on the discs.
-  if (!(spread < 3.1) || !inRightHalf(turned)) throw outside();
+  if (!(spread < 3.1) || !inRightHalf(turned)) return settledRJ(roots, squares, prec);
   const value = duplicatedRJ(roots.map((a) => disc.mul(a, root, wp)) as unknown as Four, turned, wp);
   return disc.mul(value, disc.mul(factor, root, wp), prec + 2);
 }
@@ -174,14 +175,11 @@ function unit(x: number): bigint {
   return BigInt(Math.round(x * 2 ** 30));
 }
 
-function outside(): DomainError {
-  return new DomainError({
-    subject: "RJ",
-    given: "arguments that no half plane holds without a part of the cut",
-    expected:
-      "x, y, z, p in one half plane, or x, y, z real and not negative, or two of them conjugate and the third not negative",
-    hint: "Shift the integral: RJ is ∫_0^T plus RJ(x + T, y + T, z + T, p + T).",
-  });
+/** Arguments all round the origin: any branch first, then the right one by a rough enclosure of the integral. */
+function settledRJ(roots: Four, squares: Four, prec: number): Disc {
+  const value = duplicatedRJ(roots, squares, prec + 8, true);
+  const far = (moved: Four, bits: number) => duplicatedRJ(rootsOf("RJ", moved, bits) as unknown as Four, moved, bits);
+  return settledBranch(value, squares, far, prec);
 }
 
 /**

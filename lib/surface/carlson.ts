@@ -29,8 +29,8 @@ export const carlson = {
 
   /**
    * RJ(x, y, z, p) = (3/2) ∫_0^∞ dt / (√((t+x)(t+y)(t+z)) (t+p)); for p < 0 and x, y, z >= 0 Cauchy's principal value.
-   * Domain   at most one of x, y, z is 0, p ≠ 0; complex arguments in one half plane, or x, y, z real and not negative, or two of them conjugate
-   *          and the third not negative. Error proved. Throws DomainError, PoleError. Source DLMF 19.16.2, 19.20.14.
+   * Domain   off the cut, at most one of x, y, z is 0, p ≠ 0. Error proved. Throws DomainError on the cut, PoleError, PrecisionError where arguments
+   *          all round the origin leave the branch open. Source DLMF 19.16.2, 19.20.14.
    * @example carlson.RJ(2, 3, 4, 5)   // 0.14297579667156753833...
    */
   RJ: (x: ComplexNumeric, y: ComplexNumeric, z: ComplexNumeric, p: ComplexNumeric): Real | Complex =>

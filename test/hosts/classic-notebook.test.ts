@@ -33,6 +33,7 @@ describe.skipIf(absent !== "")("the classic notebook in Chromium", () => {
     "opens %s, runs all cells, typesets and draws",
     async (name) => {
       const page = await browser.newPage({ viewport: { width: 1100, height: 1000 } });
+      page.setDefaultTimeout(60_000);
       await page.goto(server.url(`notebooks/${name}`));
       await untilKernelIsReady(page);
       await page.evaluate("Jupyter.notebook.clear_all_output(); Jupyter.notebook.execute_all_cells()");

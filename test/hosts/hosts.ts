@@ -64,6 +64,7 @@ export function makePlace(): HostPlace {
     JUPYTER_RUNTIME_DIR: at("runtime"),
     JUPYTER_NO_CONFIG: "1",
     IPYTHONDIR: at("ipython"),
+    HALFPERIOD_HISTORY: at("history"),
     PYTHONWARNINGS: "ignore",
   };
   return { folder, env, remove: () => rmSync(folder, { recursive: true, force: true }) };

@@ -17,7 +17,7 @@ export interface Place {
 /** In order of preference: pictures and tables before formulas, formulas before plain text. */
 const RENDERERS: readonly (readonly [mime: string, render: Renderer])[] = [
   ["image/svg+xml", (svg, place) => figure(svg, place)],
-  ["text/html", (html, { name }) => `<div class="shown">${fragment(html, name)}</div>`],
+  ["text/html", (html, { name }) => `<div class="shown${isWide(html) ? " wide" : ""}">${fragment(html, name)}</div>`],
   ["text/latex", (tex) => latexHtml(tex)],
   ["text/markdown", (markdown) => `<div class="prose">${markdownHtml(markdown)}</div>`],
   ["image/png", (data, { label }) => picture("image/png", data, label)],
@@ -68,6 +68,15 @@ function picture(mime: string, base64: string, label: string): string {
 function fragment(html: string, name: string): string {
   const text = (run: string) => runHtml(decodeEntities(run));
   return sanitise(html, { idPrefix: `${name}-`, text });
+}
+
+/** Characters in a row of a table from which on it is set smaller, so that it fits a printed line. */
+const WIDE_ROW = 96;
+
+/** Has it a row so long as two numbers of fifty digits? */
+function isWide(html: string): boolean {
+  // Tags take no room, and neither do the commands and braces of a formula.
+  return html.split(/<tr\b/i).some((row) => row.replace(/<[^>]*>|\\[a-zA-Z]+|[{}$]/g, "").length > WIDE_ROW);
 }
 
 /** LaTeX as an output: formulas in delimiters, set apart or in a sentence, or one bare formula. */

@@ -36,6 +36,7 @@ pre code { font-size: 1em; }
 .count { color: var(--soft); font-size: 0.85rem; font-variant-numeric: oldstyle-nums; white-space: nowrap; user-select: none; }
 .shown, .stated { margin: 1.1rem auto; text-align: center; padding: 0.15rem 0.1rem; }
 .shown { width: max-content; max-width: min(94vw, 66rem); margin-left: 50%; transform: translateX(-50%); overflow-x: auto; overflow-y: hidden; }
+.wide table { font-size: 0.84em; }
 .stated { text-wrap: balance; overflow-x: auto; overflow-y: hidden; }
 pre.shown { text-align: left; font-size: 0.8rem; }
 .said { border: 0; margin: 0.8rem 0 0.8rem 1.25rem; font-size: 0.78rem; white-space: pre-wrap; overflow-wrap: anywhere; }
@@ -69,9 +70,10 @@ const PRINT = `
   h1 { font-size: 18pt; } h2 { font-size: 13pt; } h3 { font-size: 11pt; }
   .code pre, pre.shown, .said, .failure pre { font-size: 7.8pt; white-space: pre-wrap; overflow-wrap: anywhere; }
   .shown, .stated, pre, section.prose math.tml-display { overflow: visible; }
-  .shown { width: auto; max-width: 100%; margin-left: auto; transform: none; }
+  .shown { width: fit-content; max-width: 100%; margin-left: auto; transform: none; }
   .shown table { font-size: 8.5pt; }
-  .shown :is(td, th) { white-space: normal !important; }
+  .wide table { font-size: 6.9pt; }
+  .wide :is(td, th) { padding-right: 1em !important; }
   .code, figure, table, .shown, .stated, .failure { break-inside: avoid; }
   .code { break-after: avoid; }
   section.step { margin: 1rem 0 1.1rem; }

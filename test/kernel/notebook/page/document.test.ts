@@ -99,6 +99,15 @@ describe("the page of a notebook", () => {
     expect(body(notebookPage(notebook(code("x", plain)), { name: "a" }))).toContain("&lt;b&gt;a&lt;/b&gt;");
   });
 
+  it("sets a table smaller only if one of its rows is long", () => {
+    const table = (text: string) =>
+      `<table><tr><td style="${"x".repeat(200)}">a</td></tr><tr><td>${text}</td></tr></table>`;
+    const page = (text: string) =>
+      body(notebookPage(notebook(code("x", result({ "text/html": table(text) }))), { name: "a" }));
+    expect(page("1".repeat(97))).toContain('class="shown wide"');
+    expect(page("1".repeat(90))).toContain('class="shown"');
+  });
+
   it("names the notebook when it has no heading, and hides what its author folded", () => {
     const folded: Cell = { ...code("secret"), metadata: { jupyter: { source_hidden: true } } };
     const page = body(notebookPage(notebook(folded, code("shown")), { name: "Two <curves>" }));

@@ -1,8 +1,9 @@
 import { AMPLITUDE, EPSILON, JACOBI, JACOBI_INVERSE, ZETA } from "../function/jacobi-operations.ts";
 import { COMPLETE } from "../function/operations.ts";
+import { exp } from "../number/functions.ts";
 import type { Operation } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
-import { i } from "../number/symbols.ts";
+import { i, π } from "../number/symbols.ts";
 import { apply, Complex, type ComplexNumeric, type Real, scalar } from "../number/values.ts";
 import type { ConventionKey } from "../proof/conventions.ts";
 import { type ModulusInput, type ModulusPair, modulusPair } from "./modulus.ts";
@@ -45,6 +46,22 @@ export class Jacobi {
   /** τ = iK′/K. */
   get tau(): Complex {
     return Complex.from(i.times(this.K1).div(this.K));
+  }
+
+  /** The modulus k = √m, principal root. */
+  get k(): Value {
+    const { m } = this;
+    return m instanceof Complex || m.sign() === -1 ? Complex.from(m).sqrt() : m.sqrt();
+  }
+
+  /** q_θ = exp(πiτ) = exp(−πK′/K). */
+  get qTheta(): Value {
+    return exp(this.K1.div(this.K).times(π.neg()));
+  }
+
+  /** q_mod = exp(2πiτ) = q_θ². */
+  get qMod(): Value {
+    return exp(this.K1.div(this.K).times(π.times(-2)));
   }
 
   sn(u: ComplexNumeric): Value {

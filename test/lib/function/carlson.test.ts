@@ -27,6 +27,15 @@ describe("Carlson's integrals — oracle: values of Carlson 1995 and of independ
   }
 });
 
+describe("the arithmetic-geometric mean that the complete integrals rest on", () => {
+  it.each(entries("integrals", "agm"))(
+    "$id — oracle: an independent ball arithmetic, 50 digits",
+    ({ input, expected, digits }) => {
+      expectDigits(disc.agm(read(input.a, 400), read(input.b, 400), PREC), expected, digits);
+    },
+  );
+});
+
 const unit = fc.integer({ min: -999, max: 999 });
 /** Points of the cut plane, biased to its edges: beside the cut, huge, tiny. */
 const cutPlane = fc

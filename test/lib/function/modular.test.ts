@@ -74,6 +74,21 @@ describe("modular functions — oracle: an independent ball arithmetic, 45 digit
   });
 });
 
+describe("j at quadratic points — oracle: the thirteen integers, and Hermite's near-integer", () => {
+  it.each(entries("modular", "cm_j_invariant"))("D = $input.discriminant", ({ input, expected }) => {
+    const value = jInvariant(read(input.tau_decimal, 400), 320);
+    const gap = disc.abs(disc.sub(value, read(expected, 400), 400), 60);
+    // The 79 decimals of τ leave 10^−60 of the largest value.
+    expect(ball.magnitude(gap)).toBeLessThan(-190);
+  });
+
+  it.each(entries("modular", "special_constant").filter((e) => !e.input.function))("$input.name", (entry) => {
+    const root = ball.sqrt(ball.fromInt(163), 300);
+    const value = disc.fromBall(ball.exp(ball.mul(ball.pi(300), root, 300), 300));
+    expectDigits(value, entry.expected, entry.digits);
+  });
+});
+
 const tau = fc
   .tuple(fc.integer({ min: -3000, max: 3000 }), fc.integer({ min: 1, max: 3000 }))
   .map(

@@ -49,6 +49,13 @@ describe("jacobi in a cell", () => {
     expect(() => J.sn(i.times(J.K1))).toThrow(PoleError);
   });
 
+  it("k, τ and both nomes lead back to m — oracle: λ by theta functions", () => {
+    const J = jacobi({ m: "1/3" });
+    for (const input of [{ k: J.k }, { tau: J.tau }, { qTheta: J.qTheta }, { qMod: J.qMod }]) {
+      expect(jacobi(input).m.overlaps("1/3"), Object.keys(input)[0]).toBe(true);
+    }
+  });
+
   it("inverses, amplitude, ε and Z fit together — oracle: E(am u) by Carlson's integrals", () => {
     const J = jacobi({ m: "7/10" });
     expect(J.sn(J.arcsn("1/2")).overlaps("1/2")).toBe(true);

@@ -1,8 +1,10 @@
 // Modules that cells import, resolved from the folder of the notebook.
-import { createRequire } from "node:module";
+import nodeModule, { createRequire } from "node:module";
 import { join } from "node:path";
 import { pathToFileURL } from "node:url";
 import { constants, Script } from "node:vm";
+
+import { loadTypeScript, resolveTypeScript } from "./typescript-modules.ts";
 
 type Importer = (specifier: string, options?: object) => Promise<unknown>;
 
@@ -13,6 +15,7 @@ export class Modules {
   readonly meta: Readonly<{ url: string; dirname: string; filename: string }>;
   readonly #library: Readonly<Record<string, unknown>>;
   readonly #import: Importer;
+  #hooked = false;
 
   constructor(cwd: string, library: Readonly<Record<string, unknown>>) {
     this.#library = library;
@@ -29,7 +32,28 @@ export class Modules {
   import(specifier: unknown, options?: object): Promise<unknown> {
     const name = String(specifier);
     if (name === "halfperiod") return Promise.resolve(this.#library);
+    if (/^(?:\.{1,2}\/|\/|file:)/.test(name)) this.#hook();
     if (/\.json$/.test(name) && options === undefined) return this.#import(name, { with: { type: "json" } });
     return this.#import(name, options);
+  }
+
+  /** From the first relative import on TypeScript modules are understood; before it the hooks would cost a thread. */
+  #hook(): void {
+    if (this.#hooked) return;
+    this.#hooked = true;
+    const { registerHooks } = nodeModule as unknown as { registerHooks?: (hooks: object) => void };
+    if (!registerHooks) {
+      nodeModule.register("./typescript-modules.js", import.meta.url);
+      return;
+    }
+    registerHooks({
+      resolve: (
+        specifier: string,
+        context: { parentURL?: string },
+        next: (specifier: string, context: object) => unknown,
+      ) => resolveTypeScript(specifier, context.parentURL) ?? next(specifier, context),
+      load: (url: string, context: object, next: (url: string, context: object) => unknown) =>
+        loadTypeScript(url) ?? next(url, context),
+    });
   }
 }

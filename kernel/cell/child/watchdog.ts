@@ -11,7 +11,8 @@ const STEP = 50;
 /** After so many refused tries a stop takes code inside Node's own functions too. */
 const PATIENCE = 30;
 const SIGNAL_TIME = 1000;
-const NOTE_TIME = 100;
+/** A signal that lands inside the evaluation which notes the place would break that instead of the cell. */
+const NOTE_TIME = 2000;
 const UNCONDITIONAL_AFTER = 3000;
 const KILL_AFTER = 5000;
 
@@ -48,8 +49,8 @@ function isOpen(number: number): boolean {
 async function interrupt(number: number): Promise<void> {
   if (stopping === number) return;
   stopping = number;
-  const began = Date.now();
   if (Atomics.load(shared, PHASE) === SYNC) await notePlace(number);
+  const began = Date.now();
   fireSignal();
   post({ kind: "soft", cell: number });
   ping(number);
@@ -91,7 +92,7 @@ async function notePlace(number: number): Promise<void> {
   const before = Atomics.load(shared, NOTED);
   evaluate(`__cells.where(${number})`);
   const until = Date.now() + NOTE_TIME;
-  while (Atomics.load(shared, NOTED) === before && Date.now() < until) await pause(1);
+  while (Atomics.load(shared, NOTED) === before && isOpen(number) && Date.now() < until) await pause(1);
 }
 
 /** Never awaits the reply: it may not come. */

@@ -1,6 +1,6 @@
 // What the language service reads: the files of the cells from memory, everything else from disk.
 
-import { existsSync, readFileSync } from "node:fs";
+import { existsSync, readFileSync, statSync } from "node:fs";
 import { isBuiltin } from "node:module";
 import { dirname, join } from "node:path";
 import { cellNumber, LIBRARY } from "./notebook.ts";
@@ -116,7 +116,10 @@ export class NotebookHost implements TS.LanguageServiceHost {
   }
 
   getScriptVersion(file: string): string {
-    return String(this.#cell(file)?.version ?? 0);
+    const cell = this.#cell(file);
+    if (cell) return String(cell.version);
+    // A module of the user beside the notebook may be edited between two cells.
+    return this.#isSettled(file) ? "0" : String(statSync(file, { throwIfNoEntry: false })?.mtimeMs ?? 0);
   }
 
   getScriptSnapshot(file: string): TS.IScriptSnapshot | undefined {

@@ -33,14 +33,15 @@ interface Pending {
   readonly text: string;
 }
 
+/** Names of a library by its folder; a snapshot keeps them, and saves a start one whole program. */
+const librariesRead = new Map<string, readonly string[]>();
+
 /** The checker of one notebook. */
 export class NotebookTypes {
   readonly names = new NotebookNames();
   readonly host: NotebookHost;
   readonly service: TS.LanguageService;
   readonly #pending = new Map<number, Pending>();
-  #library: readonly string[] | undefined;
-
   constructor(places: Places) {
     this.host = new NotebookHost(places);
     this.service = ts.createLanguageService(this.host, registry);
@@ -55,8 +56,12 @@ export class NotebookTypes {
 
   /** Names of the values and types that the library exports. */
   libraryNames(): readonly string[] {
-    this.#library ??= this.#readLibraryNames();
-    return this.#library;
+    const file = this.host.libraryFolder;
+    const known = librariesRead.get(file);
+    if (known) return known;
+    const names = this.#readLibraryNames();
+    librariesRead.set(file, names);
+    return names;
   }
 
   /** Checks a cell; if it is right, emits what runs. */

@@ -15,6 +15,12 @@ beforeAll(() => {
     '{"name":"neighbour","version":"1.0.0","type":"module","exports":"./main.js"}',
   );
   writeFileSync(join(beside, "main.js"), "export const shout = (text) => text.toUpperCase(); export default 42;");
+  writeFileSync(
+    join(notebook.cwd, "helper.ts"),
+    'import { deep } from "./deep.ts";\nexport enum Size { big = 3 }\nexport const sized = (n: number): number => n * Size.big + deep;\n',
+  );
+  writeFileSync(join(notebook.cwd, "deep.ts"), "export const deep: number = 100;");
+  writeFileSync(join(notebook.cwd, "edited.ts"), "export const version = 1;");
   writeFileSync(join(notebook.cwd, "data.json"), '{"rank": 1}');
 });
 afterAll(() => notebook.session.shutdown());
@@ -165,6 +171,16 @@ const CASES: readonly Case[] = [
   ["dynamic import", ["(await import('node:path')).sep"], '"/"'],
   ["a package beside the notebook", ["import shout0, { shout } from 'neighbour'", "shout('a') + shout0"], '"A42"'],
   ["JSON beside the notebook", ["import data from './data.json'", "data.rank"], "1"],
+  ["TypeScript beside the notebook", ["import { sized } from './helper.ts'", "sized(2)"], "106"],
+  [
+    "an edit of a module beside the notebook is seen, by the checker and at run time",
+    [
+      "import { version } from './edited.ts'",
+      "import { writeFileSync } from 'node:fs'; writeFileSync('edited.ts', \"export const version = 'two';\")",
+      "import { version } from './edited.ts'; version.length",
+    ],
+    "3",
+  ],
   ["require", ["require('node:path').sep"], '"/"'],
   ["import.meta", ["typeof import.meta.url"], '"string"'],
   [

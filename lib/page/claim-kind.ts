@@ -45,10 +45,10 @@ function standingData({ standing }: Claim): { readonly [key: string]: string } {
   return Object.fromEntries(Object.entries(standing).map(([key, value]) => [key, String(value)]));
 }
 
-/** The measured inputs that the statement rests on. */
+/** The measured inputs, and the doubles, that the statement rests on. */
 function inputs({ lhs, rhs }: Claim): string {
   const all = [lhs, rhs].flatMap((side) => (side instanceof Real || side instanceof Complex ? side.inputs : []));
-  return all.length === 0 ? "" : `, for the measured ${[...new Set(all)].join(", ")}`;
+  return all.length === 0 ? "" : `, given ${[...new Set(all)].join(", ")}`;
 }
 
 const CELL_DIGITS = 6;

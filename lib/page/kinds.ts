@@ -22,6 +22,8 @@ import { TorusPoint } from "../surface/torus-point.ts";
 import { PlaneCurve, PlanePoint } from "../surface/variety.ts";
 import { claimKind } from "./claim-kind.ts";
 import { curveKind, pointKind } from "./curve-kind.ts";
+import { Derivation } from "./derivation.ts";
+import { derivationKind } from "./derivation-kind.ts";
 import { quadraticKind, rationalKind } from "./exact-kind.ts";
 import { homothetyKind, laurentKind, multiplicationKind } from "./expansion-kind.ts";
 import { figureKind } from "./figure-kind.ts";
@@ -57,6 +59,7 @@ export const KINDS: readonly KindEntry[] = [
   entry(QSeries, qSeriesKind),
   entry(Moved, movedKind),
   entry(Claim, claimKind),
+  entry(Derivation, derivationKind),
   entry(Table, tableKind),
   entry(Figure, figureKind),
 ];

@@ -1,0 +1,60 @@
+// Derivations as values: numbered steps with words, formula, value, source and check.
+
+import type { Standing } from "../proof/standing.ts";
+import { Claim } from "../surface/claim-value.ts";
+
+/** How much of a derivation is shown: the words only, the steps with their values, or sources and checks too. */
+export type Level = "outline" | "steps" | "all";
+
+export interface StepParts {
+  /** TeX, without delimiters. */
+  readonly formula?: string;
+  /** Any value of the library; shown with its digits. */
+  readonly value?: unknown;
+  /** Where the formula is taken from, such as "Silverman AEC III.2.3". */
+  readonly source?: string;
+  /** How the step is known: a claim, or a standing. */
+  readonly check?: Claim | Standing;
+}
+
+/** One step; its number is its place, and text can cite it as (3). */
+export interface Step extends StepParts {
+  readonly text: string;
+}
+
+/** A derivation. Immutable: `step` gives a longer one. */
+export class Derivation {
+  readonly title: string;
+  readonly steps: readonly Step[];
+  readonly level: Level;
+
+  constructor(title: string, steps: readonly Step[] = [], level: Level = "steps") {
+    this.title = title;
+    this.steps = steps;
+    this.level = level;
+  }
+
+  /** One step more: words, which may hold $formulas$, with a formula, a value, a source and a check as there are. */
+  step(text: string, parts: StepParts = {}): Derivation {
+    return new Derivation(this.title, [...this.steps, { text, ...parts }], this.level);
+  }
+
+  /** The same derivation, shown to another depth. */
+  show(level: Level): Derivation {
+    return new Derivation(this.title, this.steps, level);
+  }
+
+  /** How the checks of the steps are known; steps without a check are not counted. */
+  get checks(): readonly Standing[] {
+    return this.steps.flatMap(({ check }) => (check ? [check instanceof Claim ? check.standing : check] : []));
+  }
+}
+
+/**
+ * A derivation of one's own, to be built step by step.
+ *
+ * @example derivation("Doubling P").step("the tangent at P", { formula: "y = 3x", check: claim(...) })
+ */
+export function derivation(title: string): Derivation {
+  return new Derivation(title);
+}

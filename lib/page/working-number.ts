@@ -1,0 +1,123 @@
+// The record of a number as a derivation: one step an operation, operands before results.
+
+import { isNode, type Node } from "../number/origin.ts";
+import { Quadratic } from "../number/quadratic.ts";
+import { Rational } from "../number/rational.ts";
+import { type Complex, Real } from "../number/values.ts";
+import { Derivation } from "./derivation.ts";
+import { quadraticTex, rationalTex } from "./exact-kind.ts";
+
+/** Longer records are cut at their beginning: the last steps are the ones that a reader asks for. */
+const MOST_STEPS = 60;
+
+export function numberWorking(x: Real | Complex): Derivation {
+  const title = `Working of a ${x instanceof Real ? "real" : "complex"} number`;
+  if (!x.origin) {
+    const words = x.exact ? "an exact number, as given" : "an enclosure, as given";
+    return new Derivation(title).step(words, { value: x });
+  }
+  const nodes = inOrder(x).slice(-MOST_STEPS);
+  const places = new Map<unknown, number>(nodes.map((node, k) => [node, k + 1]));
+  return nodes.reduce((working, node) => {
+    const { operation, operands } = node.origin!;
+    const formula = formulaOf(
+      operation.name,
+      operands.map((operand) => operandTex(operand, places)),
+    );
+    return working.step(WORDS[operation.name] ?? operation.name, { formula, value: node });
+  }, new Derivation(title));
+}
+
+/** The nodes with a record, each once, operands first. */
+function inOrder(x: Node): Node[] {
+  const done = new Set<unknown>();
+  const list: Node[] = [];
+  const visit = (node: unknown): void => {
+    if (!isNode(node) || done.has(node) || !node.origin || node.exact) return;
+    done.add(node);
+    for (const operand of node.origin.operands) visit(operand);
+    list.push(node);
+  };
+  visit(x);
+  return list;
+}
+
+function operandTex(operand: unknown, places: ReadonlyMap<unknown, number>): string | undefined {
+  const place = places.get(operand);
+  if (place !== undefined) return `(${place})`;
+  if (operand instanceof Rational) return rationalTex(operand);
+  if (operand instanceof Quadratic) return `\\left(${quadraticTex(operand)}\\right)`;
+  if (isNode(operand)) return operand.exact ? operandTex(operand.exact, places) : "x";
+  if (typeof operand === "number" || typeof operand === "bigint") return String(operand);
+  // The lattice itself, or data of an operation.
+  return undefined;
+}
+
+/** Operations whose name in the record is not a word. */
+const WORDS: Readonly<Record<string, string>> = {
+  plus: "sum",
+  minus: "difference",
+  times: "product",
+  div: "quotient",
+  neg: "negative",
+  pow: "power",
+  sqrt: "square root",
+  abs: "absolute value",
+  re: "real part",
+  im: "imaginary part",
+  conj: "conjugate",
+  complex: "real and imaginary part joined",
+  point: "point of the torus",
+  wp: "value of ℘",
+  "wp.prime": "value of ℘′",
+  zeta: "value of ζ",
+  sigma: "value of σ",
+};
+
+type Write = (a: string, b: string, c: string) => string;
+
+const WRITE: Readonly<Record<string, Write>> = {
+  plus: (a, b) => `${a} + ${b}`,
+  minus: (a, b) => `${a} - ${b}`,
+  times: (a, b) => `${a} \\cdot ${b}`,
+  div: (a, b) => `${a} / ${b}`,
+  neg: (a) => `-${a}`,
+  pow: (a, n) => `${a}^{${n}}`,
+  sqrt: (a) => `\\sqrt{${a}}`,
+  abs: (a) => `\\left|${a}\\right|`,
+  re: (a) => `\\operatorname{Re} ${a}`,
+  im: (a) => `\\operatorname{Im} ${a}`,
+  conj: (a) => `\\overline{${a}}`,
+  complex: (a, b) => `${a} + ${b}\\, i`,
+  π: () => "\\pi",
+  point: (r, s, rest) =>
+    [term(r, "\\omega_1"), term(s, "\\omega_2"), rest].filter((part) => part !== "").join(" + ") || "0",
+  "period ratio": () => "\\tau = \\omega_2/\\omega_1",
+  invariant: (k) => `g_{${k}}`,
+  root: (k) => `e_{${k}}`,
+  "quasi-period": (k) => `\\eta_{${k}}`,
+  discriminant: () => "\\Delta",
+  j: () => "j",
+  wp: (...z) => `\\wp(${argument(z)})`,
+  "wp.prime": (...z) => `\\wp'(${argument(z)})`,
+  zeta: (...z) => `\\zeta(${argument(z)})`,
+  sigma: (...z) => `\\sigma(${argument(z)})`,
+};
+
+/** A rational multiple of a period; empty for 0. */
+function term(factor: string, period: string): string {
+  if (factor === "0") return "";
+  return factor === "1" ? period : `${factor}\\,${period}`;
+}
+
+/** z, or r ω1 + s ω2 with what is added. */
+function argument([a, b, c]: readonly string[]): string {
+  return b === "" || b === undefined ? (a ?? "") : WRITE.point!(a ?? "", b, c ?? "");
+}
+
+function formulaOf(name: string, operands: readonly (string | undefined)[]): string {
+  const parts = operands.filter((operand) => operand !== undefined);
+  const [a = "", b = "", c = ""] = parts;
+  const write = WRITE[name];
+  return write ? write(a, b, c) : `\\text{${name.replace(/[^\p{L}\p{N} ]/gu, " ")}}(${parts.join(", ")})`;
+}

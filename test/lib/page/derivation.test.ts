@@ -1,0 +1,69 @@
+import temml from "temml";
+import { describe, expect, it } from "vitest";
+import { complex, real } from "../../../lib/number/convert.ts";
+import { bundle } from "../../../lib/page/bundle.ts";
+import { derivation } from "../../../lib/page/derivation.ts";
+import { tex } from "../../../lib/page/typeset.ts";
+import { working } from "../../../lib/page/working.ts";
+import { claim } from "../../../lib/surface/claim.ts";
+import { lattice } from "../../../lib/surface/lattice.ts";
+import { cubic } from "../../../lib/surface/make-cubic.ts";
+import { curve } from "../../../lib/surface/make-curve.ts";
+
+const text = (value: unknown) => bundle(value)?.["text/plain"] as string;
+
+describe("derivations of one's own", () => {
+  const E = curve`y^2 + y = x^3 - x`;
+  const P = E.point(0, 0);
+  const double = derivation("Doubling $P$")
+    .step("the tangent at $P$ has slope $-1$", { formula: "y = -x", source: "Silverman AEC III.2.3" })
+    .step("the double", { formula: "2P", value: P.plus(P), check: claim("double", P.plus(P), "=", E.point(1, 0)) });
+
+  it("numbers its steps, and folds", () => {
+    expect(text(double.show("outline"))).toBe(
+      "Doubling P\n(1) the tangent at P has slope -1\n(2) the double\n1 of 2 steps checked; together proved",
+    );
+    expect(text(double)).toContain("(2) the double\n    (1, 0)");
+    expect(text(double)).not.toContain("Silverman");
+    expect(text(double.show("all"))).toContain("source: Silverman AEC III.2.3");
+    expect(text(double.show("all"))).toContain("check: proved (exact arithmetic)");
+  });
+
+  it("is typeset at each level, and refuted steps show", () => {
+    for (const level of ["outline", "steps", "all"] as const) {
+      expect(() => temml.renderToString(tex(double.show(level)), { throwOnError: true })).not.toThrow();
+    }
+    const wrong = double.step("and", { check: claim("wrong", P, "=", P.neg()) });
+    expect(text(wrong)).toContain("2 of 3 steps checked; together refuted");
+  });
+});
+
+describe("working", () => {
+  it("a number: one step an operation, operands first, each with its value — oracle: the record by hand", () => {
+    const L = lattice({ invariants: [4, -1] });
+    const z = complex("0.41", "0.27");
+    const x = L.wp(z).pow(2).minus(real(2).sqrt());
+    const { steps } = working(x);
+    expect(steps.map((step) => step.text)).toEqual(["value of ℘", "power", "difference"]);
+    expect(steps.map((step) => step.formula)).toEqual([
+      "\\wp(\\left(\\frac{41}{100} + \\frac{27}{100}\\,i\\right))",
+      "(1)^{2}",
+      "(2) - \\left(\\sqrt{2}\\right)",
+    ]);
+    expect(working(L.wp(L.at("1/3", 1))).steps[0]?.formula).toBe("\\wp(\\frac{1}{3}\\,\\omega_1 + \\omega_2)");
+    expect(steps.at(-1)?.value).toBe(x);
+    expect(() => temml.renderToString(tex(working(x)), { throwOnError: true })).not.toThrow();
+  });
+
+  it("a cubic through a point: the construction, with both maps verified by substitution", () => {
+    const steps = working(cubic`u^3 + 2v^3 + 3w^3 = 6 u v w`.through({ u: 1, v: 1, w: 1 }));
+    expect(text(steps)).toContain("(3) the tangent meets the cubic again in\n    (1 : -2 : 1)");
+    expect(steps.checks.map(({ kind }) => kind)).toEqual(["proved", "proved", "proved"]);
+    expect(() => temml.renderToString(tex(steps.show("all")), { throwOnError: true })).not.toThrow();
+  });
+
+  it("what keeps no record is refused, an exact number has one step", () => {
+    expect(() => working({})).toThrow(/keeps no record/);
+    expect(working(real("1/3")).steps.length).toBe(1);
+  });
+});

@@ -41,7 +41,7 @@ export function settledBranch(
   const turns = disc.div(disc.sub(rough, value, BITS), disc.round(jump, BITS), BITS);
   const k = Math.round(disc.toDouble(turns)[0]);
   const eighth: Ball = { man: 1n, exp: -2, rad: 0 };
-  const whole: Disc = k === 0 ? disc.zero : { re: BigInt(k), im: 0n, exp: 0, rad: 0, axis: "real" };
+  const whole = disc.fromBall(ball.fromInt(k));
   const off = disc.abs(disc.sub(turns, whole, BITS), 32);
   if (ball.compare(ball.upper(off), ball.ldexp(eighth, 1)) !== -1) throw undecided();
   return k === 0 ? value : disc.add(value, disc.mulInt(jump, k, wp), prec + 2);
@@ -120,7 +120,7 @@ function integrand([x, y, z, p]: Four, s: Disc): Disc {
   let bottom = disc.add(square, p, BITS);
   for (const w of [x, y, z]) {
     // s/√(s²) is 1 on the way.
-    if (disc.isZero(w)) top = { re: 3n, im: 0n, exp: 0, rad: 0, axis: "real" };
+    if (disc.isZero(w)) top = disc.fromBall(ball.fromInt(3));
     else bottom = disc.mul(bottom, disc.sqrt(disc.add(square, w, BITS), BITS), BITS);
   }
   return disc.div(top, bottom, BITS);

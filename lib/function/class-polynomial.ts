@@ -4,9 +4,8 @@ import type { Ball } from "../number/ball.ts";
 import * as ball from "../number/ball.ts";
 import * as disc from "../number/disc.ts";
 import { PrecisionError } from "../proof/errors.ts";
-import { ontoReal } from "./enclosure.ts";
+import { nearestInteger, ontoReal } from "./enclosure.ts";
 import { jInvariant } from "./modular-forms.ts";
-import { nearest } from "./nearest.ts";
 import { type Form, reducedForms } from "./quadratic-forms.ts";
 
 export interface ClassPolynomial {
@@ -76,6 +75,6 @@ function times(p: readonly Ball[], q: readonly Ball[], prec: number): Ball[] {
 function integerIn(x: Ball): bigint | undefined {
   const half: Ball = { man: 1n, exp: -1, rad: 0 };
   if (ball.compare(ball.radius(x), half) !== -1) return undefined;
-  const n = nearest(x);
+  const n = nearestInteger(x);
   return ball.contains(x, ball.fromInt(n)) ? n : undefined;
 }

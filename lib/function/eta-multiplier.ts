@@ -1,5 +1,5 @@
 // The multiplier of Dedekind's η: η(Mτ) = ε(M) (cτ + d)^(1/2) η(τ), the principal root, ε a 24th root of unity.
-import type { Disc } from "../number/disc.ts";
+import * as ball from "../number/ball.ts";
 import * as disc from "../number/disc.ts";
 import { DomainError } from "../proof/errors.ts";
 import { determinant, type Matrix } from "./matrix.ts";
@@ -27,14 +27,10 @@ export function etaMultiplier(matrix: Matrix): number {
   const wp = 64 + 4 * bits;
   const { root } = along(word, disc.i, wp);
   // cτ + d at τ = i, of the matrix itself and not of its negative.
-  const factor = disc.add(disc.mulI(integer(matrix.c)), integer(matrix.d), wp);
+  const factor = disc.add(disc.mulI(disc.fromBall(ball.fromInt(matrix.c))), disc.fromBall(ball.fromInt(matrix.d)), wp);
   const ratio = disc.div(root, disc.sqrt(factor, wp), wp);
   const [re, im] = disc.toDouble(ratio);
   const turns = Math.round((Math.atan2(im, re) * 12) / Math.PI);
   // η(τ) = e^(2πi·w/24) η(Mτ)/root, so ε = root/(cτ+d)^(1/2) · e^(−2πi·w/24).
   return (((turns - etaTwentyFourths(word)) % 24) + 24) % 24;
-}
-
-function integer(n: bigint): Disc {
-  return n === 0n ? disc.zero : { re: n, im: 0n, exp: 0, rad: 0, axis: "real" };
 }

@@ -4,9 +4,9 @@ import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { DomainError } from "../proof/errors.ts";
 import { rcOfRoots } from "./carlson-first.ts";
+import { nearestInteger } from "./enclosure.ts";
 import { jacobiValues } from "./jacobi-values.ts";
 import { completeK, type Modulus } from "./legendre-complete.ts";
-import { nearest } from "./nearest.ts";
 
 /**
  * am(u | m) = ∫_0^u dn(t) dt, with sin am = sn and cos am = cn; odd, and am(u + 2K) = am(u) + π.
@@ -36,7 +36,7 @@ export function jacobiAmplitude(u: Disc, modulus: Modulus, prec: number): Disc {
 function halfTurns(u: Disc, modulus: Modulus, size: number): bigint {
   if (modulus.m1.axis !== "real" || modulus.m1.re <= 0n) return 0n;
   const quarter = disc.real(completeK(modulus, 64 + size));
-  return nearest(ball.ldexp(ball.div(disc.real(u), quarter, 64 + size), -1));
+  return nearestInteger(ball.ldexp(ball.div(disc.real(u), quarter, 64 + size), -1));
 }
 
 function refuse(u: Disc, { m, m1 }: Modulus, prec: number): void {

@@ -71,7 +71,7 @@ function logDerivative(context: JacobiContext, u: Disc): Disc {
   }
   // D/(πi) ln θ(point) is odd; v = ±(point + m + nτ) adds −2n, with the sign.
   const ratio = disc.div(s1, s0, wp);
-  const whole: Disc = at.n === 0n ? disc.zero : { re: -2n * at.n, im: 0n, exp: 0, rad: 0, axis: "real" };
+  const whole = disc.fromBall(ball.fromInt(-2n * at.n));
   const sum = disc.add(ratio, whole, wp);
   const signed = at.flipped ? disc.neg(sum) : sum;
   return disc.div(disc.mulI(disc.mulBall(signed, ball.pi(wp), wp)), r1, wp);

@@ -13,7 +13,7 @@ import { DomainError } from "../proof/errors.ts";
 import type { Triple } from "./carlson-duplication.ts";
 import { rfOfRoots } from "./carlson-first.ts";
 import { carlsonRJ, rdOfRoots, rjOfRoots } from "./carlson-third.ts";
-import { lowMagnitude } from "./enclosure.ts";
+import { lowMagnitude, nearestInteger } from "./enclosure.ts";
 import {
   type Characteristic,
   completeB,
@@ -23,7 +23,6 @@ import {
   completePi,
   type Modulus,
 } from "./legendre-complete.ts";
-import { nearest } from "./nearest.ts";
 
 const THREE = { man: 3n, exp: 0, rad: 0 };
 
@@ -58,7 +57,7 @@ function amplitude(phi: Disc, k: Modulus, wp: number): Amplitude {
 function reduced(phi: Disc, wp: number): { rest: Disc; halfTurns: bigint } {
   const pi = ball.pi(wp + Math.max(0, disc.magnitude(phi)) + 8);
   const turns = ball.div(disc.real(phi), pi, 64 + Math.max(0, disc.magnitude(phi)));
-  const halfTurns = nearest(turns);
+  const halfTurns = nearestInteger(turns);
   if (halfTurns === 0n) return { rest: phi, halfTurns };
   const shift = disc.fromBall(ball.mulInt(pi, halfTurns, wp + Math.max(0, disc.magnitude(phi)) + 8));
   return { rest: disc.sub(phi, shift, wp), halfTurns };

@@ -1,5 +1,6 @@
 // A point of the upper half plane brought into the fundamental domain, with the word in τ + n and −1/τ that does it. The multipliers
 // of theta functions and of η are read off the word, letter by letter, so that no formula with a choice of root is needed.
+import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { shift } from "../number/fixed/bits.ts";
@@ -84,7 +85,7 @@ export function moved({ a, b, c, d }: Matrix, tau: Disc, wp: number): Disc {
 }
 
 function linear(c: bigint, d: bigint, tau: Disc, wp: number): Disc {
-  const constant: Disc = d === 0n ? disc.zero : { re: d, im: 0n, exp: 0, rad: 0, axis: "real" };
+  const constant = disc.fromBall(ball.fromInt(d));
   return c === 0n ? constant : disc.add(disc.mulInt(tau, c, wp), constant, wp);
 }
 

@@ -2,6 +2,7 @@
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
+import { Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 import { ontoReal } from "./enclosure.ts";
 import { type Reduction, reduction } from "./modular-action.ts";
@@ -118,40 +119,33 @@ function higherE(k: number, e4: Disc, e6: Disc, wp: number): Disc {
     for (let m = 2; m <= n - 2; m++) sum = disc.add(sum, disc.mul(c[m]!, c[n - m]!, wp), wp);
     c[n] = disc.mulBall(sum, ratio(3n, BigInt((2 * n + 1) * (n - 3)), wp), wp);
   }
-  const { num, den } = zetaRatio(half);
-  return disc.mulBall(c[half]!, ratio(den, num * BigInt(k - 1), wp), wp);
+  const scale = zetaRatio(half)
+    .times(k - 1)
+    .inv();
+  return disc.mulBall(c[half]!, ball.fromRational(scale, wp), wp);
 }
 
 function ratio(num: bigint, den: bigint, wp: number): ball.Ball {
-  return ball.div(ball.fromInt(num), ball.fromInt(den), wp);
+  return ball.fromRational(Rational.of(num, den), wp);
 }
 
-/** 2ζ(2n)/π^2n = |B_2n| 2^2n/(2n)!, exactly. */
-export function zetaRatio(n: number): { readonly num: bigint; readonly den: bigint } {
-  const { num, den } = bernoulli(2 * n);
-  const factorial = Array.from({ length: 2 * n }, (_, k) => BigInt(k + 1)).reduce((a, b) => a * b, 1n);
-  return { num: (num < 0n ? -num : num) << BigInt(2 * n), den: den * factorial };
+/** 2ζ(2n)/π^2n = |B_2n| 2^2n/(2n)!, exactly (DLMF 25.6.2). */
+function zetaRatio(n: number): Rational {
+  let factorial = 1n;
+  for (let k = 2n; k <= 2 * n; k++) factorial *= k;
+  return bernoulli(2 * n)
+    .abs()
+    .times(Rational.of(1n << BigInt(2 * n), factorial));
 }
 
 /** The Bernoulli number B_n, n even, by Akiyama and Tanigawa's table. */
-export function bernoulli(n: number): { readonly num: bigint; readonly den: bigint } {
-  const row: [bigint, bigint][] = [];
+export function bernoulli(n: number): Rational {
+  const row: Rational[] = [];
   for (let m = 0; m <= n; m++) {
-    row[m] = [1n, BigInt(m + 1)];
-    for (let j = m; j > 0; j--) {
-      const [p, q] = row[j - 1]!;
-      const [r, s] = row[j]!;
-      row[j - 1] = lowest(BigInt(j) * (p * s - r * q), q * s);
-    }
+    row[m] = Rational.of(1, m + 1);
+    for (let j = m; j > 0; j--) row[j - 1] = row[j - 1]!.minus(row[j]!).times(j);
   }
-  const [num, den] = row[0]!;
-  return { num, den };
-}
-
-function lowest(num: bigint, den: bigint): [bigint, bigint] {
-  let [x, y] = [num < 0n ? -num : num, den];
-  while (y) [x, y] = [y, x % y];
-  return x === 0n ? [0n, 1n] : [num / x, den / x];
+  return row[0]!;
 }
 
 /** G_k = Σ ω^−k over nonzero ω of Z + Zτ, even k >= 4: 2ζ(k) E_k. */
@@ -161,8 +155,7 @@ export function eisensteinG(k: number, tau: Disc, prec: number): Disc {
 }
 
 function twiceZeta(k: number, wp: number): ball.Ball {
-  const { num, den } = zetaRatio(k / 2);
-  return ball.mul(ratio(num, den, wp), ball.pow(ball.pi(wp + 8), k, wp + 8), wp);
+  return ball.mul(ball.fromRational(zetaRatio(k / 2), wp), ball.pow(ball.pi(wp + 8), k, wp + 8), wp);
 }
 
 /** Order of summation of Σ ω^−2 over ω = m + nτ ≠ 0. */

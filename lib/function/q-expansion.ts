@@ -30,8 +30,7 @@ export function eisensteinExpansion(k: number, count: number): QExpansion {
     });
   }
   checkCount(count);
-  const { num, den } = bernoulli(k);
-  const factor = Rational.of(-2n * BigInt(k) * den, num);
+  const factor = Rational.of(-2 * k).div(bernoulli(k));
   const sums = divisorSums(k - 1, count);
   const coefficients = sums.map((s, n) => (n === 0 ? Rational.one : factor.times(s)));
   return { name: `E${k}`, nome: "q_mod", first: Rational.zero, coefficients };

@@ -1,4 +1,5 @@
 // Reduced positive definite binary quadratic forms.
+import { gcd } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 
 /** a X² + b XY + c Y². */
@@ -44,10 +45,4 @@ function refuseDiscriminant(discriminant: bigint): void {
     hint: discriminant < 0n ? `4·(${discriminant}) = ${4n * discriminant} is one.` : "",
     argument: "discriminant",
   });
-}
-
-function gcd(x: bigint, y: bigint): bigint {
-  let [a, b] = [x < 0n ? -x : x, y < 0n ? -y : y];
-  while (b) [a, b] = [b, a % b];
-  return a;
 }

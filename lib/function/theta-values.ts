@@ -8,9 +8,8 @@ import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { DomainError } from "../proof/errors.ts";
-import { ontoImaginary, ontoReal } from "./enclosure.ts";
+import { nearestInteger, ontoImaginary, ontoReal } from "./enclosure.ts";
 import { type Reduction, reduction } from "./modular-action.ts";
-import { nearest } from "./nearest.ts";
 import { type ThetaIndex, thetaMultiplier } from "./theta-multiplier.ts";
 import { thetaSums } from "./theta-sums.ts";
 
@@ -33,10 +32,10 @@ export function cellPoint(v: Disc, tau: Disc, wp: number): CellPoint {
   const height = disc.imag(tau);
   const turned = ball.sign(disc.imag(v)) === -1 || (disc.imag(v).man < 0n && !ball.isZero(disc.imag(v)));
   const up = turned ? disc.neg(v) : v;
-  const n = nearest(ball.div(disc.imag(up), height, 64 + Math.max(0, disc.magnitude(v))));
+  const n = nearestInteger(ball.div(disc.imag(up), height, 64 + Math.max(0, disc.magnitude(v))));
   const sheared = n === 0n ? up : disc.sub(up, disc.mulInt(tau, n, wp), wp);
-  const m = nearest(disc.real(sheared));
-  const centred = m === 0n ? sheared : disc.sub(sheared, { re: m, im: 0n, exp: 0, rad: 0, axis: "real" }, wp);
+  const m = nearestInteger(disc.real(sheared));
+  const centred = m === 0n ? sheared : disc.sub(sheared, disc.fromBall(ball.fromInt(m)), wp);
   // After the shift the point may be in the lower half again; then −point is in the upper one.
   const low = disc.imag(centred).man < 0n;
   const point = low ? disc.neg(centred) : centred;
@@ -150,7 +149,7 @@ function leibniz(
   if (sums.length === 1) return [mul(constant, inner[0]!)];
   const minusTwoPiI = disc.neg(disc.mulI(disc.fromBall(ball.ldexp(pi, 1))));
   const shiftBy = at.flipped ? -at.n : at.n;
-  const whole: Disc = shiftBy === 0n ? disc.zero : { re: shiftBy, im: 0n, exp: 0, rad: 0, axis: "real" };
+  const whole = disc.fromBall(ball.fromInt(shiftBy));
   const first = mul(mul(add(disc.mulInt(v, c, wp), whole), over), minusTwoPiI);
   const second = mul(disc.mulInt(over, c, wp), minusTwoPiI);
   // Derivatives of e^Φ over e^Φ.

@@ -3,7 +3,7 @@ import { classPolynomial } from "../function/class-polynomial.ts";
 import { type Matrix, reduceForm } from "../function/matrix.ts";
 import { reducedForms } from "../function/quadratic-forms.ts";
 import { Quadratic } from "../number/quadratic.ts";
-import { Rational } from "../number/rational.ts";
+import { gcd, Rational } from "../number/rational.ts";
 import type { Complex } from "../number/values.ts";
 
 /** The exact quadratic number of a τ in the upper half plane. */
@@ -71,10 +71,4 @@ export function exactJ(tau: Complex): Rational | undefined {
   const discriminant = b * b - 4n * a * c;
   if (discriminant < LAST_OF_CLASS_NUMBER_ONE || reducedForms(discriminant).length !== 1) return undefined;
   return Rational.of(-classPolynomial(discriminant).coefficients[1]!);
-}
-
-function gcd(x: bigint, y: bigint): bigint {
-  let [a, b] = [x < 0n ? -x : x, y < 0n ? -y : y];
-  while (b) [a, b] = [b, a % b];
-  return a;
 }

@@ -3,12 +3,14 @@ import { DomainError } from "../proof/errors.ts";
 
 interface Context {
   readonly digits: number;
-  /** Bits that a running `atDigits` works with; absent otherwise. */
-  readonly bits?: number;
+  /** Bits that new values are computed with. */
+  readonly bits: number;
 }
 
 const MOST_DIGITS = 1_000_000;
-let settled: Context = { digits: 20 };
+/** Bits beyond the digits, which a few operations use up. */
+const MARGIN = 32;
+let settled: Context = { digits: 20, bits: 67 + MARGIN };
 let passing: Context | undefined;
 let fixed = false;
 
@@ -22,14 +24,18 @@ export function provedDigits(n: number): number;
 export function provedDigits(n?: number): number {
   if (n === undefined) return (passing ?? settled).digits;
   const digits = checkedDigits("provedDigits", n);
-  if (!fixed) settled = { digits };
+  if (!fixed) settled = settledTo(digits);
   return n;
 }
 
 /** Asks for n digits whatever `provedDigits` is told later: a reader's wish that goes before the author's. */
 export function fixDigits(n: number): void {
-  settled = { digits: checkedDigits("fixDigits", n) };
+  settled = settledTo(checkedDigits("fixDigits", n));
   fixed = true;
+}
+
+function settledTo(digits: number): Context {
+  return { digits, bits: bitsOf(digits) + MARGIN };
 }
 
 /** Throws DomainError unless n is a number of digits that can be asked for. */
@@ -50,10 +56,9 @@ export function bitsOf(digits: number): number {
   return Math.ceil(digits * 3.3219280948873626);
 }
 
-/** Bits that new values are computed with: the proved digits and a margin that a few operations use up. */
+/** Bits that new values are computed with: the proved digits and a margin, or what a running `atDigits` works with. */
 export function workingPrecision(): number {
-  const now = passing ?? settled;
-  return now.bits ?? bitsOf(now.digits) + 32;
+  return (passing ?? settled).bits;
 }
 
 /** The most bits that are tried for n digits of one value. */
@@ -65,7 +70,7 @@ export function mostBits(digits: number): number {
  * Runs f with another context. The context ends with the call; should the call be cut off without unwinding, it ends
  * with the current task at the latest.
  */
-export function within<T>(context: { readonly digits: number; readonly bits?: number }, f: () => T): T {
+export function within<T>(context: { readonly digits: number; readonly bits: number }, f: () => T): T {
   const outer = passing;
   const mine: Context = context;
   passing = mine;

@@ -81,3 +81,11 @@ export function sameExact(x: Exact, y: Exact): boolean {
 export function isRealExact(x: Exact): boolean {
   return x instanceof Rational || x.d > 0n || x.isRational();
 }
+
+/** Real or imaginary part of an exact number. */
+export function exactPart(exact: Exact | undefined, which: "re" | "im"): Exact | undefined {
+  if (!exact) return undefined;
+  if (exact instanceof Rational || exact.d > 0n) return which === "re" ? exact : Rational.zero;
+  if (which === "re") return exact.a;
+  return exact.d === -1n ? exact.b : Quadratic.of(0, exact.b, -exact.d);
+}

@@ -7,7 +7,7 @@ import { power as exactPower, root } from "./exactness.ts";
 import { ARG, binary, realOnly, SQRT, unary } from "./operations.ts";
 import { accuracy, asBall, mayPass, type Operation } from "./origin.ts";
 import { Rational } from "./rational.ts";
-import { apply, Complex, type ComplexNumeric, type Numeric, Real, scalar } from "./values.ts";
+import { apply, birthOf, Complex, type ComplexNumeric, type Numeric, Real, scalar } from "./values.ts";
 
 const EXP = unary("exp", ball.exp, disc.exp);
 const LN = unary("ln", ball.ln, (x, prec) => disc.ln(x, prec));
@@ -281,7 +281,7 @@ function resting(x: unknown): boolean {
 }
 
 function shownTo<T>(x: T, digits: number): T {
-  if (x instanceof Real) return new Real(x.ball, { ...x, asked: digits }) as T;
-  if (x instanceof Complex) return new Complex(x.disc, { ...x, asked: digits }) as T;
+  if (x instanceof Real) return new Real(x.ball, { ...birthOf(x), asked: digits }) as T;
+  if (x instanceof Complex) return new Complex(x.disc, { ...birthOf(x), asked: digits }) as T;
   return Array.isArray(x) ? (x.map((y: unknown) => shownTo(y, digits)) as T) : x;
 }

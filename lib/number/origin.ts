@@ -74,6 +74,11 @@ export function refinable(x: Node): boolean {
   return x.exact !== undefined || x.origin !== undefined;
 }
 
+/** An exact number as an enclosure of about prec bits. */
+export function enclosureOf(exact: Exact, prec: number): Enclosure {
+  return exact instanceof Rational ? ball.fromRational(exact, prec) : exact.enclosure(prec);
+}
+
 /** Computes the value anew with `prec` bits throughout; what has no origin stays as it is. Every node is computed once. */
 export function evaluate(x: Node, prec: number): Enclosure {
   return evaluator(prec)(x);

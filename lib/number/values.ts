@@ -3,30 +3,29 @@
 import { DomainError } from "../proof/errors.ts";
 import type { Ball } from "./ball.ts";
 import * as ball from "./ball.ts";
+import { BIRTHS, type Birth, both } from "./birth.ts";
 import { bitsOf, checkedDigits, provedDigits, workingPrecision } from "./context.ts";
 import { compareNodes, equalNodes, undecided } from "./decisions.ts";
 import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
-import { combine, type Field, isRealExact, power, root } from "./exactness.ts";
+import { combine, exactPart, type Field, isRealExact, power, root } from "./exactness.ts";
+import { firstEvaluation } from "./first.ts";
 import { type ForeignComplex, type ForeignReal, leafOf } from "./leaf.ts";
 import { ABS, ARG, CONJ, DIV, IM, JOIN, MINUS, NEG, PLUS, POWER, RE, SQRT, TIMES } from "./operations.ts";
 import {
-  accuracy,
   asDisc,
   DEEPEST,
   depthOver,
   type Enclosure,
   type Exact,
-  evaluate,
+  enclosureOf,
   isDisc,
   jointStanding,
-  mayPass,
   measuredInputs,
   type Node,
   type NumberStanding,
   type Operation,
   type Origin,
-  refinable,
   refineEnclosure,
 } from "./origin.ts";
 import { Quadratic } from "./quadratic.ts";
@@ -38,29 +37,35 @@ export type Numeric = Real | Rational | ForeignReal;
 /** Everything that stands for a complex number. */
 export type ComplexNumeric = Numeric | Complex | Quadratic | ForeignComplex;
 
-interface Birth {
-  readonly exact?: Exact | undefined;
-  readonly origin?: Origin | undefined;
-  readonly standing: NumberStanding;
-  readonly source?: string | undefined;
-  /** Digits that a display shows, if not those of the context. */
-  readonly asked?: number | undefined;
-}
-
 abstract class Value implements Node {
   abstract readonly enclosure: Enclosure;
-  readonly exact: Exact | undefined;
+  /** The record of how the value was built, if it has one. */
   readonly origin: Origin | undefined;
-  readonly standing: NumberStanding;
-  readonly source: string | undefined;
-  readonly asked: number | undefined;
+  // Shared between the many values of a chain, which is why the rest is read from it.
+  private readonly birth: Birth;
 
-  protected constructor(birth: Birth) {
-    this.exact = birth.exact;
-    this.origin = birth.origin;
-    this.standing = birth.standing;
-    this.source = birth.source;
-    this.asked = birth.asked;
+  protected constructor(birth: Birth, origin: Origin | undefined) {
+    this.birth = birth;
+    this.origin = origin;
+  }
+
+  /** The exact value, if it is known. */
+  get exact(): Exact | undefined {
+    return this.birth.exact;
+  }
+
+  get standing(): NumberStanding {
+    return this.birth.standing;
+  }
+
+  /** The text of a measured input. */
+  get source(): string | undefined {
+    return this.birth.source;
+  }
+
+  /** Digits that a display shows, if not those of the context. */
+  get asked(): number | undefined {
+    return this.birth.asked;
   }
 
   /** The measured inputs behind the value, as they were written. */
@@ -73,8 +78,8 @@ abstract class Value implements Node {
 export class Real extends Value {
   protected readonly kept: Ball;
 
-  constructor(enclosure: Ball, birth: Birth) {
-    super(birth);
+  constructor(enclosure: Ball, birth: Birth, origin: Origin | undefined = birth.origin) {
+    super(birth, origin);
     this.kept = enclosure;
   }
 
@@ -98,26 +103,47 @@ export class Real extends Value {
   plus(other: Numeric): Real;
   plus(other: ComplexNumeric): Real | Complex;
   plus(other: ComplexNumeric): Real | Complex {
-    return arithmetic(PLUS, "plus", ball.add, this, other);
+    if (other instanceof Real && inexact(this, other)) {
+      return new Real(
+        ball.add(this.ball, other.ball, workingPrecision()),
+        jointBirth(this, other),
+        link(PLUS, this, other),
+      );
+    }
+    return arithmetic(PLUS, "plus", this, other);
   }
 
   minus(other: Numeric): Real;
   minus(other: ComplexNumeric): Real | Complex;
   minus(other: ComplexNumeric): Real | Complex {
-    return arithmetic(MINUS, "minus", ball.sub, this, other);
+    if (other instanceof Real && inexact(this, other)) {
+      return new Real(
+        ball.sub(this.ball, other.ball, workingPrecision()),
+        jointBirth(this, other),
+        link(MINUS, this, other),
+      );
+    }
+    return arithmetic(MINUS, "minus", this, other);
   }
 
   times(other: Numeric): Real;
   times(other: ComplexNumeric): Real | Complex;
   times(other: ComplexNumeric): Real | Complex {
-    return arithmetic(TIMES, "times", ball.mul, this, other);
+    if (other instanceof Real && inexact(this, other)) {
+      return new Real(
+        ball.mul(this.ball, other.ball, workingPrecision()),
+        jointBirth(this, other),
+        link(TIMES, this, other),
+      );
+    }
+    return arithmetic(TIMES, "times", this, other);
   }
 
   /** Throws PoleError if the divisor is 0 or cannot be told from 0. */
   div(other: Numeric): Real;
   div(other: ComplexNumeric): Real | Complex;
   div(other: ComplexNumeric): Real | Complex {
-    return arithmetic(DIV, "div", ball.div, this, other);
+    return arithmetic(DIV, "div", this, other);
   }
 
   neg(): Real {
@@ -233,8 +259,8 @@ export class Real extends Value {
 export class Complex extends Value {
   readonly disc: Disc;
 
-  constructor(enclosure: Disc, birth: Birth) {
-    super(birth);
+  constructor(enclosure: Disc, birth: Birth, origin: Origin | undefined = birth.origin) {
+    super(birth, origin);
     this.disc = enclosure;
   }
 
@@ -263,28 +289,28 @@ export class Complex extends Value {
   }
 
   get re(): Real {
-    return realOf(apply(RE, [this], this.disc.axis === "imaginary" ? Rational.zero : part(this.exact, "re")));
+    return realOf(apply(RE, [this], this.disc.axis === "imaginary" ? Rational.zero : exactPart(this.exact, "re")));
   }
 
   get im(): Real {
-    return realOf(apply(IM, [this], this.disc.axis === "real" ? Rational.zero : part(this.exact, "im")));
+    return realOf(apply(IM, [this], this.disc.axis === "real" ? Rational.zero : exactPart(this.exact, "im")));
   }
 
   plus(other: ComplexNumeric): Complex {
-    return complexOf(arithmetic(PLUS, "plus", ball.add, this, other));
+    return complexOf(arithmetic(PLUS, "plus", this, other));
   }
 
   minus(other: ComplexNumeric): Complex {
-    return complexOf(arithmetic(MINUS, "minus", ball.sub, this, other));
+    return complexOf(arithmetic(MINUS, "minus", this, other));
   }
 
   times(other: ComplexNumeric): Complex {
-    return complexOf(arithmetic(TIMES, "times", ball.mul, this, other));
+    return complexOf(arithmetic(TIMES, "times", this, other));
   }
 
   /** Throws PoleError if the divisor is 0 or cannot be told from 0. */
   div(other: ComplexNumeric): Complex {
-    return complexOf(arithmetic(DIV, "div", ball.div, this, other));
+    return complexOf(arithmetic(DIV, "div", this, other));
   }
 
   neg(): Complex {
@@ -361,7 +387,8 @@ export class Complex extends Value {
   }
 }
 
-function birthOf(x: Value): Birth {
+/** All that a value keeps besides its enclosure. */
+export function birthOf(x: Real | Complex): Birth {
   return { exact: x.exact, origin: x.origin, standing: x.standing, source: x.source };
 }
 
@@ -370,10 +397,6 @@ function fromForeign(x: unknown, subject: string): Real | Complex {
   const enclosure = leaf.enclosure ?? enclosureOf(leaf.exact!, workingPrecision());
   const birth: Birth = { exact: leaf.exact, standing: leaf.standing, source: leaf.source };
   return isDisc(enclosure) ? new Complex(enclosure, birth) : new Real(enclosure, birth);
-}
-
-function enclosureOf(exact: Exact, prec: number): Enclosure {
-  return exact instanceof Rational ? ball.fromRational(exact, prec) : exact.enclosure(prec);
 }
 
 /** Real or Complex, whichever the input is; what is accepted is said at `leafOf`. */
@@ -413,41 +436,11 @@ export function apply(operation: Operation, operands: readonly unknown[], exact?
   const origin: Origin = { operation, operands, depth };
   const standing = jointStanding(operands);
   const enclosure = firstEvaluation({ enclosure: ball.zero, origin, standing }, prec);
-  return newValue(enclosure, { origin: depth > DEEPEST ? undefined : origin, standing });
+  return newValue(enclosure, BIRTHS[standing], depth > DEEPEST ? undefined : origin);
 }
 
-const FIRST_TRIES = 6;
-
-function firstEvaluation(node: Node, prec: number): Enclosure {
-  const { operation, operands } = node.origin!;
-  const direct = (operand: unknown): Enclosure => {
-    const y = operand as Partial<Node>;
-    return y.enclosure ?? evaluate({ ...node, origin: undefined, exact: operand as Exact }, prec);
-  };
-  try {
-    return operation.evaluate(
-      operands,
-      (x) => (typeof x === "object" && x !== null ? direct(x) : ball.fromInt(x as bigint)),
-      prec,
-    );
-  } catch (error) {
-    if (
-      !mayPass(error) ||
-      !operands.some((x) => x instanceof Value && accuracy(x.enclosure) !== Infinity && refinable(x))
-    )
-      throw error;
-  }
-  for (let bits = 2 * prec, k = 0; ; bits *= 2, k++) {
-    try {
-      return evaluate({ ...node, enclosure: { man: 0n, exp: 0, rad: 1 } }, bits);
-    } catch (error) {
-      if (!mayPass(error) || k === FIRST_TRIES) throw error;
-    }
-  }
-}
-
-function newValue(enclosure: Enclosure, birth: Birth): Real | Complex {
-  return isDisc(enclosure) ? new Complex(enclosure, birth) : new Real(enclosure, birth);
+function newValue(enclosure: Enclosure, birth: Birth, origin = birth.origin): Real | Complex {
+  return isDisc(enclosure) ? new Complex(enclosure, birth, origin) : new Real(enclosure, birth, origin);
 }
 
 function realOf(x: Real | Complex): Real {
@@ -459,32 +452,26 @@ function complexOf(x: Real | Complex): Complex {
   return x instanceof Complex ? x : toComplexValue(x);
 }
 
-function arithmetic(
-  operation: Operation,
-  field: Field,
-  quick: (x: Ball, y: Ball, prec: number) => Ball,
-  x: Real | Complex,
-  other: ComplexNumeric,
-): Real | Complex {
+function arithmetic(operation: Operation, field: Field, x: Real | Complex, other: ComplexNumeric): Real | Complex {
   const y = scalar(other, field);
-  const exact = x.exact && y.exact ? combine(field, x.exact, y.exact) : undefined;
-  if (exact || operation === DIV || x instanceof Complex || y instanceof Complex)
-    return apply(operation, [x, y], exact);
-  const depth = Math.max(x.origin?.depth ?? 0, y.origin?.depth ?? 0) + 1;
-  const origin: Origin | undefined = depth > DEEPEST ? undefined : { operation, operands: [x, y], depth };
-  return new Real(quick(x.ball, y.ball, workingPrecision()), { origin, standing: both(x.standing, y.standing) });
+  return apply(operation, [x, y], combine(field, x.exact, y.exact));
 }
 
-function both(a: NumberStanding, b: NumberStanding): NumberStanding {
-  if (a === "double" || b === "double") return "double";
-  return a === "measured" || b === "measured" ? "measured" : "defined";
+// What follows is for sums and products of real numbers, of which a loop makes many: no detour, few objects.
+
+function inexact(x: Real, y: Real): boolean {
+  return x.exact === undefined || y.exact === undefined;
 }
 
-function part(exact: Exact | undefined, which: "re" | "im"): Exact | undefined {
-  if (!exact) return undefined;
-  if (exact instanceof Rational || exact.d > 0n) return which === "re" ? exact : Rational.zero;
-  if (which === "re") return exact.a;
-  return exact.d === -1n ? exact.b : Quadratic.of(0, exact.b, -exact.d);
+function link(operation: Operation, x: Real, y: Real): Origin | undefined {
+  const below = x.origin === undefined ? 0 : x.origin.depth;
+  const beside = y.origin === undefined ? 0 : y.origin.depth;
+  const depth = Math.max(below, beside) + 1;
+  return depth > DEEPEST ? undefined : { operation, operands: [x, y], depth };
+}
+
+function jointBirth(x: Real, y: Real): Birth {
+  return BIRTHS[both(x.standing, y.standing)];
 }
 
 function checkedExponent(n: number): number {

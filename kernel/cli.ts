@@ -4,6 +4,8 @@ import { USAGE } from "./notebook/command/usage.ts";
 
 interface Command {
   readonly purpose: string;
+  /** All options, for a command that has many; usage and purpose if absent. */
+  help?(): Promise<string>;
   run(args: readonly string[], console: Console): Promise<number>;
 }
 
@@ -28,10 +30,12 @@ const COMMANDS: Readonly<Record<Name, Command>> = {
   },
   install: {
     purpose: "make the kernel known to notebook front ends, of this user or in DIR/kernels; again: repair",
+    help: async () => (await import("./service/install/options.ts")).INSTALL_USAGE,
     run: async (args) => (await import("./service/install/install.ts")).install(args),
   },
   remove: {
     purpose: "take the kernel away from where install put it",
+    help: async () => (await import("./service/install/options.ts")).REMOVE_USAGE,
     run: async (args) => (await import("./service/install/install.ts")).remove(args),
   },
   diagnose: {
@@ -61,7 +65,8 @@ export async function main(args: readonly string[], console: Console = standardC
     return EXIT.usage;
   }
   if (rest.includes("--help") || rest.includes("-h")) {
-    console.out.write(describe(name));
+    const help = await COMMANDS[name].help?.();
+    console.out.write(help === undefined ? describe(name) : `${help}\n`);
     return EXIT.ok;
   }
   return attempt(() => COMMANDS[name].run(rest, console), console);

@@ -34,6 +34,7 @@ describe("the command", () => {
       code: 0,
       out: expect.stringContaining("halfperiod run NOTEBOOK"),
     });
+    expect(await words("install", "--help")).toMatchObject({ code: 0, out: expect.stringContaining("--at DIR  ") });
     expect(await words("--version")).toMatchObject({ code: 0, out: "0.1.0\n" });
   });
 

@@ -1,5 +1,5 @@
-// What goes out on iopub: one ordered queue. Text of a cell is gathered into few messages, everything else passes it in
-// order, so a stream never overtakes a result nor a result a stream.
+// What goes out on iopub: one ordered queue. Text of a cell is gathered into few messages, of updates to one display only
+// the latest goes out; everything else passes in order, so a stream never overtakes a result nor a result a stream.
 import type { Json, Outgoing, Parent } from "../wire/message.ts";
 
 export type StreamName = "stdout" | "stderr";
@@ -11,60 +11,69 @@ const GATHER = 40;
 const FULL = 100_000;
 
 export interface Output {
-  /** Publishes, after the text gathered so far. */
-  publish(type: string, content: Json, parent: Cause | undefined, topic?: string): void;
+  /** Publishes, after what was gathered so far. */
+  publish(type: string, content: Json, parent: Cause | undefined): void;
   /** Takes text for stdout or stderr of what `parent` started. */
   stream(name: StreamName, text: string, parent: Cause): void;
-  /** Sends the text gathered so far. */
+  /** Takes the new content of a display; a later one for the same display may replace it before it goes out. */
+  update(displayId: string, content: Json, parent: Cause): void;
+  /** Sends what was gathered so far. */
   flush(): void;
 }
 
-interface Run {
-  readonly name: StreamName;
-  readonly parent: Cause;
-  text: string;
-}
+/** What waits for more of its kind: text of one stream, or the content of one display. */
+type Waiting =
+  | { readonly kind: "stream"; readonly key: StreamName; readonly parent: Cause; text: string }
+  | { readonly kind: "update"; readonly key: string; readonly parent: Cause; content: Json };
 
 /** Output on top of a publishing function. */
 export function createOutput(publish: (outgoing: Outgoing, topic?: string) => void): Output {
-  let run: Run | undefined;
+  let waiting: Waiting | undefined;
   let timer: NodeJS.Timeout | undefined;
 
-  const emit = (text: string, { name, parent }: Run) =>
-    publish({ type: "stream", content: { name, text }, parent }, `stream.${name}`);
-
-  // Keeps a first half of a surrogate pair back: its second half may come with the next write.
-  const sendWhole = () => {
-    if (!run) return;
-    const keep = endsInsidePair(run.text) ? 1 : 0;
-    const ready = run.text.slice(0, run.text.length - keep);
-    run.text = run.text.slice(ready.length);
-    for (const piece of pieces(ready)) emit(piece, run);
+  const sendText = (text: string, name: StreamName, parent: Cause) => {
+    for (const piece of pieces(text)) {
+      publish({ type: "stream", content: { name, text: piece }, parent }, `stream.${name}`);
+    }
   };
   const flush = () => {
     clearTimeout(timer);
     timer = undefined;
-    if (!run) return;
-    for (const piece of pieces(run.text)) emit(piece, run);
-    run = undefined;
+    const last = waiting;
+    waiting = undefined;
+    if (last?.kind === "stream") sendText(last.text, last.key, last.parent);
+    else if (last) publish({ type: "update_display_data", content: last.content, parent: last.parent });
   };
-  const onTime = () => {
+  // Keeps a first half of a surrogate pair back: its second half may come with the next write.
+  const sendGathered = () => {
     timer = undefined;
-    sendWhole();
+    if (waiting?.kind !== "stream" || !endsInsidePair(waiting.text)) return flush();
+    const { text, key, parent } = waiting;
+    waiting.text = text.slice(-1);
+    sendText(text.slice(0, -1), key, parent);
   };
+  const startTimer = () => {
+    timer ??= setTimeout(sendGathered, GATHER);
+  };
+  const continues = (kind: Waiting["kind"], key: string, parent: Cause) =>
+    waiting?.kind === kind && waiting.key === key && waiting.parent === parent;
 
   return {
-    publish(type, content, parent, topic) {
+    publish(type, content, parent) {
       flush();
-      publish({ type, content, parent }, topic ?? type);
+      publish({ type, content, parent });
     },
     stream(name, text, parent) {
       if (text === "") return;
-      if (run && (run.name !== name || run.parent !== parent)) flush();
-      run ??= { name, parent, text: "" };
-      run.text += text;
-      if (run.text.length >= FULL) sendWhole();
-      else timer ??= setTimeout(onTime, GATHER);
+      if (!continues("stream", name, parent)) flush();
+      waiting = { kind: "stream", key: name, parent, text: (waiting?.kind === "stream" ? waiting.text : "") + text };
+      if (waiting.text.length >= FULL) sendGathered();
+      else startTimer();
+    },
+    update(displayId, content, parent) {
+      if (!continues("update", displayId, parent)) flush();
+      waiting = { kind: "update", key: displayId, parent, content };
+      startTimer();
     },
     flush,
   };

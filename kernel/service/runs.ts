@@ -1,5 +1,5 @@
 // The cells that have run, and where their output belongs: a timer may print long after its cell is idle.
-import type { CellEvent, MimeBundle } from "../cell/port.ts";
+import type { CellEvent } from "../cell/port.ts";
 import { log } from "../wire/log.ts";
 import type { Parent } from "../wire/message.ts";
 import type { Output } from "./output.ts";
@@ -51,10 +51,12 @@ export function createRuns(output: Output, prompts: Prompts): Runs {
 function publishEvent(event: Exclude<CellEvent, { type: "input" }>, run: Run, output: Output): void {
   if (event.type === "stream") output.stream(event.name, event.text, run);
   else if (event.type === "clear") output.publish("clear_output", { wait: event.wait }, run);
-  else output.publish(event.update ? "update_display_data" : "display_data", displayContent(event), run);
+  else publishDisplay(event, run, output);
 }
 
-function displayContent(event: CellEvent & { type: "display" }): MimeBundle {
-  const transient = event.displayId === undefined ? {} : { display_id: event.displayId };
-  return { data: event.data, metadata: event.metadata, transient };
+function publishDisplay(event: CellEvent & { type: "display" }, run: Run, output: Output): void {
+  const { data, metadata, displayId, update } = event;
+  const content = { data, metadata, transient: displayId === undefined ? {} : { display_id: displayId } };
+  if (update && displayId !== undefined) output.update(displayId, content, run);
+  else output.publish("display_data", content, run);
 }

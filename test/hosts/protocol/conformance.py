@@ -289,6 +289,16 @@ class Output(Shared):
         self.assertLess(peak, 1_500_000_000)
         self.assertEqual(self.run_cell("1").content["status"], "ok")
 
+    def test_display_ids(self):
+        """a named display is shown once and then updated under its id; a thousand updates are few messages"""
+        done = self.run_cell("for (const n of progress(Array.from({ length: 1000 }, (_, k) => k))) await null")
+        shown, updates = done.of("display_data"), done.of("update_display_data")
+        self.assertEqual(len(shown), 1)
+        self.assertLess(len(updates), 200)
+        ids = {content["transient"]["display_id"] for content in shown + updates}
+        self.assertEqual(len(ids), 1)
+        self.assertIn("1000 of 1000", updates[-1]["data"]["text/plain"])
+
     def test_result_of_odd_values(self):
         """a value whose printing throws or that is huge does not break the reply"""
         for code in (

@@ -26,6 +26,10 @@ class HalfperiodTests(jupyter_kernel_test.KernelTests):
         {"code": "6 * 8", "result": "48"},
         {"code": "await Promise.resolve(3)", "result": "3"},
     ]
+    code_display_data = [
+        {"code": 'typeset(rational("1/2"))', "mime": "text/latex"},
+        {"code": "typeset(figure.lattice(lattice({ tau: i })))", "mime": "image/svg+xml"},
+    ]
     code_history_pattern = "6 * 7"
     supported_history_operations = ("tail", "range", "search")
     code_inspect_sample = "Math.hypot"

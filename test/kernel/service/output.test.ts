@@ -68,3 +68,19 @@ it("ten thousand writes of a line are few messages — oracle: the size", () => 
   expect(text().join("").length).toBe(10_000 * 101 + 38_890);
   expect(sent.length).toBeLessThan(30);
 });
+
+it("of updates to one display the latest goes out, in its place among the text — oracle: the order of the writes", () => {
+  for (let n = 1; n <= 1000; n += 1) output.update("d", { n }, A);
+  output.stream("stdout", "after", A);
+  output.update("d", { n: 1001 }, A);
+  output.update("e", { n: 1002 }, A);
+  output.update("e", { n: 1003 }, B);
+  vi.advanceTimersByTime(100);
+  expect(sent.map(({ type, content }) => content.text ?? [type, content.n])).toEqual([
+    ["update_display_data", 1000],
+    "after",
+    ["update_display_data", 1001],
+    ["update_display_data", 1002],
+    ["update_display_data", 1003],
+  ]);
+});

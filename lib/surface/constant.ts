@@ -1,9 +1,11 @@
 // Numbers as coefficients of elliptic functions: exactly, by the name of an invariant or root of the lattice, or by a name of their own.
 
+import { pointText } from "../lattice/coordinates-text.ts";
 import type { FunctionField } from "../lattice/field/element.ts";
 import { CONSTANT, type Expression } from "../lattice/field/operations.ts";
 import { addScalars, type Constants, exactOf, exactScalar, namedScalar, type Scalar } from "../lattice/field/scalar.ts";
-import { INVARIANT, ROOT } from "../lattice/operations.ts";
+import { INVARIANT, ROOT, WEIERSTRASS } from "../lattice/operations.ts";
+import { type Coordinates, nearestRepresentative } from "../lattice/torus.ts";
 import { DIV, MINUS, NEG, PLUS, POWER, TIMES } from "../number/operations.ts";
 import { apply, type Complex, type Real } from "../number/values.ts";
 
@@ -24,6 +26,8 @@ export function scalarOf(field: FunctionField, value: Real | Complex, depth = 0)
   if (value.exact) return { scalar: exactScalar(value.exact), constants: new Map() };
   const known = ofLattice(field, value) ?? (depth < DEEPEST ? fromParts(field, value, depth + 1) : undefined);
   if (known) return known;
+  const at = pointValue(field, value);
+  if (at) return at;
   let name = names.get(value);
   if (name === undefined) {
     name = `c${++count}`;
@@ -54,6 +58,22 @@ function fromParts(field: FunctionField, { origin }: Real | Complex, depth: numb
   let scalar = ring.one;
   for (let k = 0; k < (operands[1] as number); k++) scalar = ring.mul(scalar, base.scalar);
   return { scalar, constants: base.constants };
+}
+
+/** ℘ and ℘′ at a point with exact coordinates have one name, whatever call they come from; ℘ is even and ℘′ odd. */
+function pointValue({ lattice, ring }: FunctionField, value: Real | Complex): NamedScalar | undefined {
+  const { origin } = value;
+  const prime = origin?.operation === WEIERSTRASS.prime.point;
+  if (!origin || !(prime || origin.operation === WEIERSTRASS.wp.point)) return undefined;
+  if (origin.operands[0] !== lattice || origin.operands.length !== 3) return undefined;
+  const at = nearestRepresentative(origin.operands.slice(1) as unknown as Coordinates);
+  const turned = at[0].sign() < 0 || (at[0].sign() === 0 && at[1].sign() < 0);
+  const where = turned ? nearestRepresentative([at[0].neg(), at[1].neg()]) : at;
+  const name = `${prime ? "℘′" : "℘"}(${pointText(where)})`;
+  const operation = prime ? WEIERSTRASS.prime.point : WEIERSTRASS.wp.point;
+  const constants: Constants = new Map([[name, apply(operation, [lattice, ...where])]]);
+  const scalar = namedScalar(name);
+  return { scalar: turned && prime ? ring.neg(scalar) : scalar, constants };
 }
 
 /** g2, g3, e1, e2, e3 of the lattice are recognised by the way the number was made. */

@@ -11,11 +11,13 @@ import {
   isZeroElement,
   mulElements,
   negElement,
+  reflectElement,
   sameElement,
   wpElement,
 } from "../lattice/field/element.ts";
 import { type Expression, expressionOf, PLACE, VALUE, VALUE_AT_POINT } from "../lattice/field/operations.ts";
 import { exactOf } from "../lattice/field/scalar.ts";
+import { genericPoint, multiplePoint, substituted } from "../lattice/field/substitute.ts";
 import { elementText } from "../lattice/field/text.ts";
 import { LOGARITHM, WEIERSTRASS } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
@@ -43,9 +45,10 @@ export class EllipticFunction extends Callable {
   readonly lattice: PeriodLattice;
   readonly expression: Expression;
 
-  constructor(element: Element) {
+  /** @param known an exact value where the caller has one; `value` computes it from the element. */
+  constructor(element: Element, known?: (z: ComplexNumeric, value: () => Real | Complex) => Real | Complex) {
     const expression = expressionOf(element);
-    super((z) => evaluate(expression, z));
+    super((z) => (known ? known(z, () => evaluate(expression, z)) : evaluate(expression, z)));
     this.lattice = element.field.lattice;
     this.expression = expression;
   }
@@ -100,6 +103,21 @@ export class EllipticFunction extends Callable {
     let element = this.element;
     for (let k = 0; k < n; k++) element = deriveElement(element);
     return new EllipticFunction(element);
+  }
+
+  /** f(nz) for an integer n other than 0, by the addition theorem, as an exact rational function of ℘ and ℘′. */
+  multiple(n: number): EllipticFunction {
+    if (!(Number.isSafeInteger(n) && n !== 0)) {
+      throw new DomainError({
+        subject: "multiple",
+        given: `n = ${n}`,
+        expected: "an integer other than 0",
+        argument: "n",
+      });
+    }
+    const point = multiplePoint(genericPoint(this.element.field), Math.abs(n))!;
+    const element = substituted(this.element, point);
+    return new EllipticFunction(n < 0 ? reflectElement(element) : element);
   }
 
   /**
@@ -250,6 +268,10 @@ function evaluate(expression: Expression, z: ComplexNumeric): Real | Complex {
   const kind = weierstrassKind(element);
   if (!(z instanceof TorusPoint && z.lattice === lattice)) {
     const number = scalar(z, "elliptic function");
+    if (number.exact instanceof Rational && number.exact.sign() === 0) {
+      const origin = new TorusPoint(lattice, [Rational.zero, Rational.zero]);
+      return valueAtLatticePoint(expression, origin, kind ?? "elliptic function");
+    }
     return kind ? apply(WEIERSTRASS[kind].number, [lattice, number]) : apply(VALUE, [expression, number]);
   }
   if (z.isLatticePoint) return valueAtLatticePoint(expression, z, kind ?? "elliptic function");

@@ -24,6 +24,7 @@ import { apply, Complex, type ComplexNumeric, type Numeric, Real, scalar } from 
 import type { ConventionKey } from "../proof/conventions.ts";
 import { DomainError, UndecidedError } from "../proof/errors.ts";
 import { ComplexMultiplication } from "./complex-multiplication.ts";
+import { type EllipticData, ellipticFunction } from "./elliptic.ts";
 import { EllipticFunction } from "./elliptic-function.ts";
 import { QuasiPeriodicFunction } from "./quasi-periodic-function.ts";
 import { TorusPoint } from "./torus-point.ts";
@@ -245,6 +246,17 @@ export class Lattice {
     const ratio = determinant(given.rows);
     const index = ratio.isInteger() ? ratio.num : ratio.den;
     return new Lattice(data, undefined, { lattice: this, rows: given.rows, index });
+  }
+
+  /**
+   * The elliptic function with given zeros and poles, z^k + ... at 0, or with given principal parts and constant.
+   *
+   * Domain   as many zeros as poles, of the same sum modulo the lattice (Abel); residues with the sum 0. Points with exact coordinates are checked
+   *          exactly, numbers within their enclosures.
+   * @example L.elliptic({ zeros: [L.at(1/3, 0), L.at(-1/3, 0)], poles: [0, 0] })   // ℘(z) − ℘(ω1/3)
+   */
+  elliptic(data: EllipticData): EllipticFunction {
+    return ellipticFunction(this.data, data);
   }
 
   /**

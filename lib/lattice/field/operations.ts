@@ -4,16 +4,20 @@ import type { Disc } from "../../number/disc.ts";
 import * as disc from "../../number/disc.ts";
 import { type At, asDisc, type Enclosure, type NumberStanding, type Operation } from "../../number/origin.ts";
 import type { Rational } from "../../number/rational.ts";
+import { PoleError } from "../../proof/errors.ts";
 import { invariants } from "../context.ts";
 import { persistent } from "../operations.ts";
+import type { PeriodLattice } from "../period-lattice.ts";
 import { standingOf } from "../quantity.ts";
-import { valuesAtPoint } from "../torus.ts";
+import { type Coordinates, valuesAtPoint } from "../torus.ts";
 import { weierstrassValues } from "../values.ts";
 import { discField } from "./disc-field.ts";
 import { coordinatesOf, type DivisorPoint, placeOf } from "./divisor.ts";
 import type { Element } from "./element.ts";
 import { polynomialDisc, scalarDisc, valueAt } from "./evaluate.ts";
+import { type Condition, discSize, numerator, productOfLinear } from "./interpolation.ts";
 import { type Parts, seriesAtOrigin, seriesAtPoint } from "./laurent.ts";
+import { hornerDisc } from "./polynomial-roots.ts";
 import type { Constants, Scalar } from "./scalar.ts";
 
 /** An element with its standing, as an operand. */
@@ -96,6 +100,14 @@ export const COEFFICIENT = operation("series coefficient", (f, [centre, k, numbe
   if (c.kind === "origin") return disc.round(seriesAtOrigin(F, parts, index + 1).coefficients[index]!, prec);
   const { x, y } = centreValues(f, c, number === undefined ? undefined : asDisc(at(number)), wp);
   const [zeros, poles] = c.kind === "number" ? [0, 0] : [c.zeros, c.poles];
+  if (poles === 0 && disc.containsZero(hornerDisc(parts.D, x, wp))) {
+    throw new PoleError({
+      subject: "laurent",
+      given: "a point that is, or cannot be told from, a pole",
+      expected: "a point from f.poles, whose multiplicity is known, or one away from the poles",
+      argument: "p",
+    });
+  }
   return disc.round(seriesAtPoint(F, parts, x, y, zeros, poles, index + 1).coefficients[index]!, prec);
 });
 
@@ -107,3 +119,51 @@ function centreValues(f: Element, c: Centre, number: Disc | undefined, wp: numbe
       : weierstrassValues(f.field.lattice, number!, wp, PAIR);
   return { x: values.wp!, y: values.prime! };
 }
+
+/** Zeros and poles by coordinates, as operands of the operations below; a remainder is an operand of its own, by index. */
+export interface DivisorData {
+  readonly lattice: PeriodLattice;
+  readonly standing: NumberStanding;
+  readonly points: readonly {
+    readonly at: Coordinates;
+    /** Index of the remainder among the operands that follow, if there is one. */
+    readonly rest?: number;
+    readonly multiplicity: number;
+  }[];
+}
+
+function pointsOf(data: DivisorData, rest: readonly unknown[], at: At, wp: number): Condition<Disc>[] {
+  return data.points.map((p) => {
+    const number = p.rest === undefined ? undefined : asDisc(at(rest[p.rest]));
+    const { wp: x, prime: y } = valuesAtPoint(data.lattice, p.at, number, wp, PAIR);
+    return { x: x!, y: y!, multiplicity: p.multiplicity };
+  });
+}
+
+function divisorOperation(
+  name: string,
+  evaluate: (data: DivisorData, index: number, points: readonly Condition<Disc>[], wp: number) => Disc,
+): Operation {
+  return {
+    name,
+    evaluate: ([data, index, ...rest], at, prec) => {
+      const wp = prec + 64;
+      const points = pointsOf(data as DivisorData, rest, at, wp);
+      return real(disc.round(evaluate(data as DivisorData, index as number, points, wp), prec));
+    },
+  };
+}
+
+/** [divisor data, k, numbers...]: coefficient k of A, or of B for k < 0 (index −1 − k), of the numerator with these zeros. */
+export const NUMERATOR = divisorOperation("numerator", (data, index, points, wp) => {
+  const n = points.reduce((sum, { multiplicity }) => sum + multiplicity, 0);
+  const { g2 } = invariants(data.lattice, wp);
+  const { A, B } = numerator(discField(wp), g2, n, points, discSize);
+  return index >= 0 ? A[index]! : B[-1 - index]!;
+});
+
+/** [divisor data, k, numbers...]: coefficient k of Π (X − ℘(p)). */
+export const DENOMINATOR = divisorOperation("denominator", (_data, index, points, wp) => {
+  const roots = points.flatMap(({ x, multiplicity }) => new Array<Disc>(multiplicity).fill(x));
+  return productOfLinear(discField(wp), roots)[index]!;
+});

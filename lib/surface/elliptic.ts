@@ -1,0 +1,365 @@
+// Elliptic functions to order: from zeros and poles, and from principal parts.
+
+import {
+  addElements,
+  constantElement,
+  deriveElement,
+  type Element,
+  fieldOf,
+  mulElements,
+  primeElement,
+  wpElement,
+} from "../lattice/field/element.ts";
+import { type Condition, numerator, productOfLinear } from "../lattice/field/interpolation.ts";
+import { DENOMINATOR, type DivisorData, NUMERATOR } from "../lattice/field/operations.ts";
+import { exactOf, exactScalar, type Scalar } from "../lattice/field/scalar.ts";
+import { difference, quotient } from "../lattice/field/substitute.ts";
+import type { PeriodLattice } from "../lattice/period-lattice.ts";
+import { Rational } from "../number/rational.ts";
+import { apply, type Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
+import { DomainError } from "../proof/errors.ts";
+import { scalarOf } from "./constant.ts";
+import { EllipticFunction, type FunctionPoint } from "./elliptic-function.ts";
+import { QuasiPeriodicFunction } from "./quasi-periodic-function.ts";
+import { TorusPoint } from "./torus-point.ts";
+
+/** A point, or a point with a multiplicity. */
+export type Weighted = ComplexNumeric | { readonly point: ComplexNumeric; readonly multiplicity: number };
+
+/** The principal part Σ c_k (z − at)^−k, k = 1, 2, ... */
+export interface PrincipalPart {
+  readonly at: ComplexNumeric;
+  readonly coefficients: readonly ComplexNumeric[];
+}
+
+export type EllipticData =
+  | { readonly zeros: readonly Weighted[]; readonly poles: readonly Weighted[] }
+  | { readonly principalParts: readonly PrincipalPart[]; readonly constant?: ComplexNumeric };
+
+/** An elliptic function that was made from its zeros and poles, which it keeps. */
+export class DivisorFunction extends EllipticFunction {
+  private readonly givenZeros: readonly FunctionPoint[];
+  private readonly givenPoles: readonly FunctionPoint[];
+
+  constructor(element: Element, zeros: readonly FunctionPoint[], poles: readonly FunctionPoint[]) {
+    super(element, (z, value) => (isAmong(zeros, z) ? Real.from(0) : value()));
+    this.givenZeros = zeros;
+    this.givenPoles = poles;
+  }
+
+  override get zeros(): readonly FunctionPoint[] {
+    return this.givenZeros;
+  }
+
+  override get poles(): readonly FunctionPoint[] {
+    return this.givenPoles;
+  }
+
+  /**
+   * The value by the quotient Π σ(z − a)/Π σ(z − b) with representatives of equal sum, scaled to the same leading term: a second route.
+   */
+  bySigma(z: ComplexNumeric): Real | Complex {
+    const lattice = this.lattice;
+    const sigma = new QuasiPeriodicFunction(lattice, "sigma");
+    const [zeros, poles] = sameSum(lattice, this.givenZeros, this.givenPoles);
+    const product = (list: readonly TorusPoint[], at: (p: TorusPoint) => Real | Complex) =>
+      list.reduce<Real | Complex>((sum, p) => sum.times(at(p)), Real.from(1));
+    const here = onTorus(lattice, z);
+    const value = (p: TorusPoint) => sigma(here.minus(p));
+    // σ(z − p) ~ σ(−p), or z for p = 0: the leading term at 0 is to be a power of z.
+    const scale = (p: TorusPoint) => (isZeroPoint(p) ? Real.from(1) : sigma(p.neg()));
+    const numerator = product(zeros, value).times(product(poles, scale));
+    return numerator.div(product(poles, value).times(product(zeros, scale)));
+  }
+}
+
+/** Whether z is one of the points, by exact coordinates. */
+function isAmong(list: readonly FunctionPoint[], z: ComplexNumeric): boolean {
+  return z instanceof TorusPoint && list.some(({ point }) => point instanceof TorusPoint && isOrigin(z.minus(point)));
+}
+
+/** See `Lattice.elliptic`. */
+export function ellipticFunction(lattice: PeriodLattice, data: EllipticData): EllipticFunction {
+  if ("principalParts" in data) return fromPrincipalParts(lattice, data.principalParts, data.constant ?? 0);
+  return fromDivisor(
+    lattice,
+    data.zeros.map((p) => weighted(lattice, p)),
+    data.poles.map((p) => weighted(lattice, p)),
+  );
+}
+
+interface Weight {
+  readonly point: TorusPoint;
+  readonly multiplicity: number;
+}
+
+function weighted(lattice: PeriodLattice, p: Weighted): Weight {
+  const pair = typeof p === "object" && p !== null && "point" in p && "multiplicity" in p;
+  const point = onTorus(lattice, pair ? p.point : p);
+  const multiplicity = pair ? p.multiplicity : 1;
+  if (Number.isSafeInteger(multiplicity) && multiplicity >= 1) return { point, multiplicity };
+  throw new DomainError({
+    subject: "elliptic",
+    given: `the multiplicity ${multiplicity}`,
+    expected: "an integer >= 1",
+  });
+}
+
+function onTorus(lattice: PeriodLattice, p: ComplexNumeric): TorusPoint {
+  if (p instanceof TorusPoint && p.lattice === lattice) return p;
+  const number = scalar(p, "elliptic");
+  const zero = number.exact instanceof Rational && number.exact.sign() === 0;
+  return new TorusPoint(lattice, [Rational.zero, Rational.zero], zero ? undefined : number);
+}
+
+/** 0 of the torus, by exact coordinates and a remainder that is exactly 0. */
+function isOrigin(p: TorusPoint): boolean {
+  if (!p.coordinates.every((q) => q.isInteger())) return false;
+  return !p.remainder || isExactZero(p.remainder);
+}
+
+function isZeroPoint(p: TorusPoint): boolean {
+  return isOrigin(p) && p.coordinates.every((q) => q.sign() === 0);
+}
+
+function isExactZero(x: Real | Complex): boolean {
+  if (x.exact) return x.exact instanceof Rational && x.exact.sign() === 0;
+  return false;
+}
+
+function total(lattice: PeriodLattice, list: readonly Weight[]): TorusPoint {
+  return list.reduce(
+    (sum, { point, multiplicity }) => sum.plus(point.times(multiplicity)),
+    new TorusPoint(lattice, [Rational.zero, Rational.zero]),
+  );
+}
+
+function fromDivisor(lattice: PeriodLattice, zeros: readonly Weight[], poles: readonly Weight[]): EllipticFunction {
+  const count = (list: readonly Weight[]) => list.reduce((sum, { multiplicity }) => sum + multiplicity, 0);
+  if (count(zeros) !== count(poles)) {
+    throw new DomainError({
+      subject: "elliptic",
+      given: `${count(zeros)} zeros and ${count(poles)} poles, with multiplicity`,
+      expected: "as many zeros as poles",
+    });
+  }
+  checkAbel(total(lattice, zeros).minus(total(lattice, poles)), count(zeros));
+  // A pole at b is a zero at −b over ℘ − ℘(b).
+  const away = (list: readonly Weight[]) => list.filter(({ point }) => !isOrigin(point));
+  const mirrored = away(poles).map(({ point, multiplicity }) => ({ point: point.neg(), multiplicity }));
+  const top = numeratorOver(lattice, joined([...away(zeros), ...mirrored]));
+  return new DivisorFunction(quotient(top, denominatorOver(lattice, away(poles))), zeros, poles);
+}
+
+/** Equal points as one with the multiplicities added. */
+function joined(list: readonly Weight[]): Weight[] {
+  const out: Weight[] = [];
+  for (const { point, multiplicity } of list) {
+    const k = out.findIndex((w) => isOrigin(w.point.minus(point)));
+    if (k < 0) out.push({ point, multiplicity });
+    else out[k] = { point, multiplicity: out[k]!.multiplicity + multiplicity };
+  }
+  return out;
+}
+
+/** Points with rational ℘ and ℘′: there the coefficients are exact. */
+function exactPoints(lattice: PeriodLattice, list: readonly Weight[]): Condition<Scalar>[] | undefined {
+  const wp = EllipticFunction.wp(lattice);
+  const out: Condition<Scalar>[] = [];
+  for (const { point, multiplicity } of list) {
+    if (point.order !== 2n) return undefined;
+    const [x, y] = [wp(point).exact, wp.prime(point).exact];
+    if (!x || !y) return undefined;
+    out.push({ x: exactScalar(x), y: exactScalar(y), multiplicity });
+  }
+  return out;
+}
+
+function numeratorOver(lattice: PeriodLattice, list: readonly Weight[]): Element {
+  const field = fieldOf(lattice);
+  const n = list.reduce((sum, { multiplicity }) => sum + multiplicity, 0);
+  const x = wpElement(field);
+  if (n === 0) return constantElement(field, field.ring.one);
+  // ±p, or twice a half-period: ℘ − ℘(p).
+  if (n === 2) return vertical(lattice, list[0]!.point);
+  const exact = exactPoints(lattice, list);
+  const g2 = field.ring.neg(field.cubic[1] ?? field.ring.zero);
+  if (exact && exactOf(g2)) {
+    const { A, B } = numerator(field.ring, g2, n, exact, (s) => (s.size === 0 ? Number.NEGATIVE_INFINITY : 0));
+    return addElements(
+      polynomial(
+        A.map((c) => constantElement(field, c)),
+        x,
+      ),
+      mulElements(
+        polynomial(
+          B.map((c) => constantElement(field, c)),
+          x,
+        ),
+        primeElement(field),
+      ),
+    );
+  }
+  const { data, rest } = divisorData(lattice, list);
+  const coefficient = (k: number) => constant(lattice, apply(NUMERATOR, [data, k, ...rest], leading(n, k)));
+  const A = Array.from({ length: Math.floor(n / 2) + 1 }, (_, k) => coefficient(k));
+  const B = n < 3 ? [] : Array.from({ length: Math.floor((n - 3) / 2) + 1 }, (_, k) => coefficient(-1 - k));
+  return addElements(polynomial(A, x), mulElements(polynomial(B, x), primeElement(field)));
+}
+
+/** The coefficient of the leading term is 1, or −1/2 beside ℘′. */
+function leading(n: number, k: number): Rational | undefined {
+  if (k >= 0) return n % 2 === 0 && 2 * k === n ? Rational.one : undefined;
+  return n % 2 === 1 && 2 * (-1 - k) + 3 === n ? Rational.of(-1, 2) : undefined;
+}
+
+function denominatorOver(lattice: PeriodLattice, list: readonly Weight[]): Element {
+  const field = fieldOf(lattice);
+  const n = list.reduce((sum, { multiplicity }) => sum + multiplicity, 0);
+  const exact = exactPoints(lattice, list);
+  const roots = exact?.flatMap(({ x, multiplicity }) => new Array<Scalar>(multiplicity).fill(x));
+  const { data, rest } = divisorData(lattice, list);
+  const coefficients = roots
+    ? productOfLinear(field.ring, roots).map((c) => constantElement(field, c))
+    : Array.from({ length: n + 1 }, (_, k) =>
+        constant(lattice, apply(DENOMINATOR, [data, k, ...rest], k === n ? Rational.one : undefined)),
+      );
+  return polynomial(coefficients, wpElement(field));
+}
+
+function polynomial(coefficients: readonly Element[], x: Element): Element {
+  const { field } = x;
+  return coefficients.reduceRight<Element>(
+    (sum, c) => addElements(mulElements(sum, x), c),
+    constantElement(field, field.ring.zero),
+  );
+}
+
+function divisorData(lattice: PeriodLattice, list: readonly Weight[]): { data: DivisorData; rest: (Real | Complex)[] } {
+  const rest: (Real | Complex)[] = [];
+  const points = list.map(({ point, multiplicity }) => {
+    if (!point.remainder) return { at: point.coordinates, multiplicity };
+    rest.push(point.remainder);
+    return { at: point.coordinates, rest: rest.length - 1, multiplicity };
+  });
+  return { data: { lattice, standing: lattice.standing, points }, rest };
+}
+
+function repeated(list: readonly Weight[]): TorusPoint[] {
+  return list.flatMap(({ point, multiplicity }) => new Array<TorusPoint>(multiplicity).fill(point));
+}
+
+/** Abel: the zeros and the poles have the same sum modulo the lattice. */
+function checkAbel(gap: TorusPoint, order: number): void {
+  if (order === 1) {
+    throw new DomainError({
+      subject: "elliptic",
+      given: "one simple pole",
+      expected: "at least two poles, with multiplicity",
+      hint: "The residues of an elliptic function add up to 0.",
+    });
+  }
+  const whole = gap.coordinates.every((q) => q.isInteger());
+  const rest = gap.remainder;
+  if (whole && (!rest || rest.overlaps(0))) return;
+  throw new DomainError({
+    subject: "elliptic",
+    given: `zeros and poles whose sums differ by ${gap.reduced.name}`,
+    expected: "a difference in the lattice (Abel's condition)",
+    hint: "Move one of them by the difference.",
+  });
+}
+
+/** x − ℘(p). */
+function vertical(lattice: PeriodLattice, p: TorusPoint): Element {
+  return difference(wpElement(fieldOf(lattice)), constant(lattice, EllipticFunction.wp(lattice)(p.reduced)));
+}
+
+function constant(lattice: PeriodLattice, value: Real | Complex): Element {
+  const field = fieldOf(lattice);
+  const { scalar: s, constants } = scalarOf(field, value);
+  return constantElement(field, s, constants);
+}
+
+/** Representatives with equal sums: the last zero is moved by the lattice vector between the sums. */
+function sameSum(
+  lattice: PeriodLattice,
+  zeros: readonly FunctionPoint[],
+  poles: readonly FunctionPoint[],
+): [TorusPoint[], TorusPoint[]] {
+  const [a, b] = [zeros, poles].map((list) =>
+    list.map(({ point, multiplicity }) => ({ point: onTorus(lattice, point), multiplicity })),
+  ) as [Weight[], Weight[]];
+  const gap = total(lattice, b).minus(total(lattice, a));
+  const list = repeated(a);
+  const last = list.pop()!;
+  const shift = new TorusPoint(lattice, gap.coordinates);
+  return [[...list, last.plus(shift)], repeated(b)];
+}
+
+/**
+ * Σ over the parts of c_1 ζ(z − p) + Σ_{k>=2} c_k (−1)^k/(k−1)! ℘^(k−2)(z − p), plus the constant; with the residues adding up to 0
+ * ζ(z − p) may be replaced by ½(℘′(z) + ℘′(p))/(℘(z) − ℘(p)) − ζ(p)   (DLMF 23.10.2).
+ */
+function fromPrincipalParts(
+  lattice: PeriodLattice,
+  parts: readonly PrincipalPart[],
+  added: ComplexNumeric,
+): EllipticFunction {
+  const residues = parts.map(({ coefficients }) => scalar(coefficients[0] ?? 0, "elliptic"));
+  const sum = residues.reduce<Real | Complex>((s, c) => s.plus(c), Real.from(0));
+  if (sum.exact ? !isExactZero(sum) : !sum.overlaps(0)) {
+    throw new DomainError({
+      subject: "elliptic",
+      given: `residues with the sum ${sum}`,
+      expected: "residues that add up to 0",
+      argument: "principalParts",
+    });
+  }
+  let f = constant(lattice, scalar(added, "elliptic"));
+  for (const [k, { at, coefficients }] of parts.entries()) {
+    const p = onTorus(lattice, at);
+    f = addElements(f, partAt(lattice, p, residues[k]!, coefficients.slice(1)));
+  }
+  return new EllipticFunction(f);
+}
+
+function partAt(
+  lattice: PeriodLattice,
+  p: TorusPoint,
+  residue: Real | Complex,
+  higher: readonly ComplexNumeric[],
+): Element {
+  const field = fieldOf(lattice);
+  let f = constantElement(field, field.ring.zero);
+  if (!isOrigin(p) && !isExactZero(residue)) {
+    const wp = EllipticFunction.wp(lattice);
+    const half = constantElement(field, exactScalar(Rational.of(1, 2)));
+    const top = addElements(primeElement(field), constant(lattice, wp.prime(p.reduced)));
+    const zeta = new QuasiPeriodicFunction(lattice, "zeta")(p);
+    const shifted = difference(mulElements(half, quotient(top, vertical(lattice, p))), constant(lattice, zeta));
+    f = mulElements(constant(lattice, residue), shifted);
+  }
+  let derivative = higher.length > 0 ? translatedWp(lattice, p) : f;
+  let factor = Rational.one;
+  for (const [k, c] of higher.entries()) {
+    // c_(k+2): the sign (−1)^(k+2) over (k+1)!.
+    factor = factor.div(k + 1);
+    const weight = constant(lattice, scalar(c, "elliptic").times(k % 2 === 0 ? factor : factor.neg()));
+    f = addElements(f, mulElements(weight, derivative));
+    if (k + 1 < higher.length) derivative = deriveElement(derivative);
+  }
+  return f;
+}
+
+/** ℘(z − p). */
+function translatedWp(lattice: PeriodLattice, p: TorusPoint): Element {
+  const field = fieldOf(lattice);
+  if (isOrigin(p)) return wpElement(field);
+  const wp = EllipticFunction.wp(lattice);
+  const x = constant(lattice, wp(p.reduced));
+  const top = addElements(primeElement(field), constant(lattice, wp.prime(p.reduced)));
+  const slope = quotient(top, difference(wpElement(field), x));
+  const quarter = constantElement(field, exactScalar(Rational.of(1, 4)));
+  return difference(mulElements(quarter, mulElements(slope, slope)), addElements(wpElement(field), x));
+}

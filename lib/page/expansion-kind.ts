@@ -60,7 +60,7 @@ export const homothetyKind: Kind<Homothety> = {
   data: (h, show) => ({ kind: "homothety", factor: show.data(h.factor), standing: h.standing.kind }),
 };
 
-/** A sentence; its standing is part of it. */
+/** A sentence with its reason; its standing is part of it. */
 export const multiplicationKind: Kind<ComplexMultiplication> = {
   text: (cm) => String(cm),
   tex: (cm) => texWords(String(cm)),

@@ -18,6 +18,7 @@ import { Moved } from "../surface/moved.ts";
 import { Point } from "../surface/point.ts";
 import { QSeries } from "../surface/q-series.ts";
 import { QuasiPeriodicFunction } from "../surface/quasi-periodic-function.ts";
+import { TorsionSubgroup } from "../surface/torsion.ts";
 import { TorusPoint } from "../surface/torus-point.ts";
 import { PlaneCurve, PlanePoint } from "../surface/variety.ts";
 import { claimKind } from "./claim-kind.ts";
@@ -33,8 +34,10 @@ import { classPolynomialKind, jacobiKind, movedKind, qSeriesKind } from "./modul
 import { morphismKind } from "./morphism-kind.ts";
 import { complexKind, realKind } from "./number-kind.ts";
 import { isPolynomial, planeCurveKind, planePointKind, polynomialKind } from "./plane-kind.ts";
+import { isStanding, standingKind } from "./standing.ts";
 import { Table } from "./table.ts";
 import { tableKind } from "./table-kind.ts";
+import { torsionKind } from "./torsion-kind.ts";
 
 export const KINDS: readonly KindEntry[] = [
   entry(TorusPoint, torusPointKind),
@@ -47,10 +50,12 @@ export const KINDS: readonly KindEntry[] = [
   entry(QuasiPeriodicFunction, functionKind),
   entry(Point, pointKind),
   entry(Curve, curveKind),
+  entry(TorsionSubgroup, torsionKind),
   entry(PlaneCurve, planeCurveKind),
   entry(PlanePoint, planePointKind),
   entry(Morphism, morphismKind),
   shape(isPolynomial, polynomialKind),
+  shape(isStanding, standingKind),
   entry(LaurentExpansion, laurentKind),
   entry(Homothety, homothetyKind),
   entry(ComplexMultiplication, multiplicationKind),

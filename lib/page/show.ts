@@ -18,17 +18,23 @@ export function kindOf(value: unknown): Kind<unknown> | undefined {
 /** Lists and records longer than this are shown as text. */
 const MOST_PARTS = 200;
 
-/** The parts of a list or a plain record of library values, bigints, and lists and records of them; else undefined. */
-export function partsOf(value: unknown, depth = 0): readonly (readonly [name: string, part: unknown])[] | undefined {
+type Parts = readonly (readonly [name: string, part: unknown])[];
+
+/** The parts of a list or a plain record that holds library values or bigints, however deep; else undefined. */
+export function partsOf(value: unknown): Parts | undefined {
+  const parts = structure(value, 0);
+  return parts?.some(([, part]) => isTypeset(part, 0)) ? parts : undefined;
+}
+
+/** The parts of a list or a plain record of which every part can stand in a formula; else undefined. */
+function structure(value: unknown, depth: number): Parts | undefined {
   if (depth > 3 || typeof value !== "object" || value === null) return undefined;
   const list = Array.isArray(value);
   if (!list && !isRecord(value)) return undefined;
   const keys = list ? Array.from(value, (_, k) => String(k)) : Object.keys(value);
-  if (keys.length === 0 || keys.length > MOST_PARTS) return undefined;
+  if (keys.length > MOST_PARTS) return undefined;
   const parts = keys.map((key) => [key, ownValue(value, key)] as const);
-  return parts.every(([, part]) => isShowable(part, depth)) && parts.some(([, part]) => isTypeset(part, depth))
-    ? parts
-    : undefined;
+  return parts.every(([, part]) => isShowable(part, depth)) ? parts : undefined;
 }
 
 /** A property that is a value; getters are not run. */
@@ -38,13 +44,13 @@ function ownValue(holder: object, key: string): unknown {
 
 /** Words and safe integers may stand beside values that are typeset, but are not typeset on their own. */
 function isShowable(part: unknown, depth: number): boolean {
-  return (
-    ["string", "boolean", "undefined"].includes(typeof part) || Number.isSafeInteger(part) || isTypeset(part, depth)
-  );
+  if (["string", "boolean", "undefined", "bigint"].includes(typeof part) || Number.isSafeInteger(part)) return true;
+  return kindOf(part)?.tex !== undefined || structure(part, depth + 1) !== undefined;
 }
 
 function isTypeset(part: unknown, depth: number): boolean {
-  return typeof part === "bigint" || kindOf(part)?.tex !== undefined || partsOf(part, depth + 1) !== undefined;
+  if (typeof part === "bigint" || kindOf(part)?.tex !== undefined) return true;
+  return structure(part, depth + 1)?.some(([, inner]) => isTypeset(inner, depth + 1)) ?? false;
 }
 
 export const show: Show = {
@@ -63,7 +69,7 @@ export const show: Show = {
     if (kind?.tex) return kind.tex(value, show);
     if (isPlainNumber(value)) return plainNumberTex(value);
     if (typeof value === "string") return texProse(value);
-    const parts = partsOf(value);
+    const parts = structure(value, 0);
     if (parts) return Array.isArray(value) ? listTex(parts) : recordTex(parts);
     return texProse(show.text(value));
   },

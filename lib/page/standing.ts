@@ -1,4 +1,5 @@
 import type { Standing } from "../proof/standing.ts";
+import type { Kind } from "./kind.ts";
 import { prose } from "./prose.ts";
 import { texProse } from "./tex.ts";
 
@@ -39,3 +40,24 @@ export function standingProse(standing: Standing): string {
 export function standingTex(standing: Standing): string {
   return texProse(standingProse(standing));
 }
+
+const FIELDS = {
+  proved: "argument",
+  certified: "digits",
+  conjectured: "evidence",
+  undecided: "tried",
+  refuted: "evidence",
+};
+
+export function isStanding(value: object): value is Standing {
+  const { kind } = value as Partial<Standing>;
+  return typeof kind === "string" && Object.hasOwn(FIELDS, kind) && Object.hasOwn(value, FIELDS[kind]);
+}
+
+/** A standing by itself, such as the answer of `phi.verify()`. */
+export const standingKind: Kind<Standing> = {
+  text: standingText,
+  tex: standingTex,
+  prose: standingProse,
+  data: (standing) => Object.fromEntries(Object.entries(standing).map(([key, value]) => [key, String(value)])),
+};

@@ -5,7 +5,7 @@
 
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
-import { DomainError, PoleError } from "../proof/errors.ts";
+import { DomainError, PoleError, PrecisionError } from "../proof/errors.ts";
 import { lowMagnitude } from "./enclosure.ts";
 
 export type Triple = readonly [Disc, Disc, Disc];
@@ -72,5 +72,15 @@ function isConjugate(x: Disc, y: Disc): boolean {
   return x.rad === 0 && y.rad === 0 && disc.isZero(disc.sub(x, disc.conj(y), 1 << 30));
 }
 
-/** More duplications than any exponent within reach needs. */
-export const MAX_STEPS = 1_000_000;
+/** More duplications than any exponent within reach needs: each gains two bits of the ratio of the arguments. */
+const MAX_STEPS = 200_000;
+
+/** The number of the next duplication. Throws PrecisionError where enclosures are too wide for the arguments ever to come together. */
+export function nextStep(name: string, step: number): number {
+  if (step < MAX_STEPS) return step + 1;
+  throw new PrecisionError({
+    subject: name,
+    given: "arguments too coarse, or too far apart, for the duplication to end",
+    expected: "enclosures that are small beside the arguments",
+  });
+}

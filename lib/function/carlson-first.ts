@@ -1,7 +1,15 @@
 // Carlson's integrals of the first kind: RF and RC.
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
-import { closedUnderConjugation, fallOf, halved, refuseZeros, rootsOf, type Triple } from "./carlson-duplication.ts";
+import {
+  closedUnderConjugation,
+  fallOf,
+  halved,
+  nextStep,
+  refuseZeros,
+  rootsOf,
+  type Triple,
+} from "./carlson-duplication.ts";
 import { carlsonSeries, farEnough, termCount } from "./carlson-series.ts";
 import { ontoReal } from "./enclosure.ts";
 
@@ -40,7 +48,7 @@ export function rfOfRoots(roots: Triple, prec: number, squares?: Triple): Disc {
   let step = 0;
   while (!farEnough(fallOf(gaps, tripleMean(r, 32), step), terms, wp)) {
     r = halved(r, wp);
-    step++;
+    step = nextStep("RF", step);
   }
   const total = tripleMean(r, wp);
   const fall = Math.min(fallOf(gaps, total, step), 2 * wp);
@@ -99,7 +107,7 @@ export function rcOfRoots(a: Disc, b: Disc, prec: number, x?: Disc, y?: Disc): D
     const next = disc.ldexp(disc.add(a, b, wp), -1);
     b = disc.mul(disc.sqrt(b, wp), disc.sqrt(next, wp), wp);
     a = next;
-    step++;
+    step = nextStep("RC", step);
   }
   const total = tripleMean([a, b, b], wp);
   const fall = Math.min(fallOf(gaps, total, step), 2 * wp);

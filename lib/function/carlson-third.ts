@@ -3,7 +3,15 @@ import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { DomainError } from "../proof/errors.ts";
 import { settledBranch } from "./carlson-branch.ts";
-import { closedUnderConjugation, fallOf, halved, refuseZeros, rootsOf, type Triple } from "./carlson-duplication.ts";
+import {
+  closedUnderConjugation,
+  fallOf,
+  halved,
+  nextStep,
+  refuseZeros,
+  rootsOf,
+  type Triple,
+} from "./carlson-duplication.ts";
 import { carlsonRC, carlsonRF, rcNearOne, rootOfMean } from "./carlson-first.ts";
 import { carlsonSeries, farEnough, termCount } from "./carlson-series.ts";
 import { ontoReal } from "./enclosure.ts";
@@ -53,7 +61,7 @@ export function rdOfRoots(roots: Triple, prec: number, squares?: Triple): Disc {
     const bottom = disc.mul(disc.mul(disc.add(c, a, wp), disc.add(c, b, wp), wp), c, wp);
     sum = disc.add(sum, disc.ldexp(disc.inv(bottom, wp), -2 * step), wp);
     r = halved(r, wp);
-    step++;
+    step = nextStep("RD", step);
   }
   const rest = lastTerm(gaps, weighted(r, r[2], 3, wp), r[2], step, terms, wp);
   return disc.add(disc.mulInt(sum, 3, wp), rest, prec + 2);
@@ -138,7 +146,7 @@ function duplicatedRJ([a, b, c, s]: Four, [x, y, z, p]: Four, prec: number, loos
     sum = disc.add(sum, disc.ldexp(disc.div(rcNearOne(e, wp, loose), d, wp), -2 * step), wp);
     root = halvedLast(r, root, wp, loose);
     r = halved(r, wp);
-    step++;
+    step = nextStep("RJ", step);
   }
   return disc.add(disc.mulInt(sum, 6, wp), lastTerm(gaps, total(wp), root, step, terms, wp), prec + 2);
 }

@@ -62,7 +62,7 @@ function reducedE4E6(at: ModularPoint): { readonly e4: Disc; readonly e6: Disc }
  * Error    enclosure, relative to the terms at the reduced τ; E_k has zeros at the images of i and ρ.
  * Cost     one exponential, theta series of √prec terms; k²/16 products above k = 6.
  * Throws   DomainError for odd k or k < 2.
- * Source   DLMF 23.6(i) for E4 and E6; E2 = θ1‴(0)/θ1′(0)·(−1/π²) (DLMF 23.8.5, 23.6.8); the recurrence DLMF 23.9.4 above.
+ * Source   DLMF 23.6(i) for E4 and E6; E2 = −θ1‴(0)/(π² θ1′(0)) in v by DLMF 23.6.8; the recurrence DLMF 23.9.5 above.
  */
 export function eisensteinE(k: number, tau: Disc, prec: number): Disc {
   refuseWeight(k, 2);
@@ -106,7 +106,7 @@ function reducedE(k: number, at: ModularPoint): Disc {
 }
 
 /**
- * E_k from E4 and E6. With c_n = (2n−1) G_2n, c_n = 3/((2n+1)(n−3)) Σ_{m=2}^{n−2} c_m c_{n−m} (DLMF 23.9.4 with 23.9.3); dividing by
+ * E_k from E4 and E6. With c_n = (2n−1) G_2n, c_n = 3/((2n+1)(n−3)) Σ_{m=2}^{n−2} c_m c_{n−m} (DLMF 23.9.5 with 23.9.1); dividing by
  * π^2n, G_2n = π^2n a_n E_2n with a_n = 2ζ(2n)/π^2n rational.
  */
 function higherE(k: number, e4: Disc, e6: Disc, wp: number): Disc {
@@ -296,7 +296,7 @@ export type WeberName = "f" | "f1" | "f2";
  *
  * Domain   Im τ > 0.
  * Error    enclosure, relative.
- * Source   DLMF 23.15 note and H. Weber, Lehrbuch der Algebra III, section 34.
+ * Source   H. Weber, Lehrbuch der Algebra III, section 34; D. A. Cox, Primes of the Form x² + ny², section 12.
  */
 export function weber(name: WeberName, tau: Disc, prec: number): Disc {
   const wp = prec + 16;

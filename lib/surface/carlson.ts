@@ -1,4 +1,5 @@
 import { CARLSON } from "../function/operations.ts";
+import { sameExact } from "../number/exactness.ts";
 import type { Operation } from "../number/origin.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
@@ -33,8 +34,12 @@ export const carlson = {
    *          all round the origin leave the branch open. Source DLMF 19.16.2, 19.20.14.
    * @example carlson.RJ(2, 3, 4, 5)   // 0.14297579667156753833...
    */
-  RJ: (x: ComplexNumeric, y: ComplexNumeric, z: ComplexNumeric, p: ComplexNumeric): Real | Complex =>
-    symmetric(CARLSON.RJ, [x, y, z], p),
+  RJ: (x: ComplexNumeric, y: ComplexNumeric, z: ComplexNumeric, p: ComplexNumeric): Real | Complex => {
+    const [values, last] = [[x, y, z].map((w) => scalar(w, "RJ")), scalar(p, "RJ")];
+    const twin = values.findIndex((w) => w.exact && last.exact && sameExact(w.exact, last.exact));
+    if (twin < 0) return symmetric(CARLSON.RJ, values, last);
+    return symmetric(CARLSON.RD, values.toSpliced(twin, 1), last);
+  },
 
   /**
    * RD(x, y, z) = RJ(x, y, z, z).

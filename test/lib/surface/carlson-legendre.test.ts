@@ -3,7 +3,7 @@ import { provedDigits } from "../../../lib/number/context.ts";
 import { enclose, exact } from "../../../lib/number/convert.ts";
 import { exp } from "../../../lib/number/functions.ts";
 import { i, π } from "../../../lib/number/symbols.ts";
-import { Real } from "../../../lib/number/values.ts";
+import { Complex, Real } from "../../../lib/number/values.ts";
 import { DomainError, PoleError } from "../../../lib/proof/errors.ts";
 import { carlson } from "../../../lib/surface/carlson.ts";
 import { legendre } from "../../../lib/surface/legendre.ts";
@@ -35,6 +35,15 @@ describe("carlson in a cell", () => {
     expect(carlson.RF(exact`(1+i)/3`, exact`(1-i)/3`, "1/7")).toBeInstanceOf(Real);
     expect(carlson.RJ(exact`(1+i)/3`, exact`(1-i)/3`, "1/7", 2)).toBeInstanceOf(Real);
     expect(carlson.RF(exact`(1+i)/3`, exact`(1-i)/5`, "1/7")).not.toBeInstanceOf(Real);
+  });
+
+  it("RJ with p equal to another argument is RD wherever the others lie — oracle: DLMF 19.20.10 by name", () => {
+    const [x, y, z] = [exact`(-1+i)/3`, exact`(-2-i)/3`, exact`-i/3`];
+    const scale = exact`√3`.pow(3);
+    const value = carlson.RJ(x, y, z, x);
+    expect(value.overlaps(carlson.RD(y, z, x))).toBe(true);
+    // Carlson's check value for (−1+i, −2−i, −i, −1+i) times 3^(3/2), by homogeneity.
+    expect(String(Complex.from(value).div(scale).digits(15))).toBe("1.82490273937038... - 1.22184757848270... i");
   });
 
   it("a measured argument gives a measured value that holds both ends — oracle: values at the ends", () => {

@@ -15,8 +15,9 @@ type Value = Real | Complex;
  * Values near m = 0 and m = 1 keep their digits where { m } or { m1 } says how near.
  */
 export class Jacobi {
-  /** The parameter m = k² and m1 = 1 − m. */
+  /** The parameter m = k². */
   readonly m: Value;
+  /** 1 − m, with all its digits. */
   readonly m1: Value;
 
   constructor({ m, m1 }: ModulusPair) {
@@ -34,11 +35,12 @@ export class Jacobi {
     return apply(COMPLETE.K, [this.m1, this.m]);
   }
 
-  /** The complete integrals E(m) and E(m1). */
+  /** The complete integral E(m). */
   get E(): Value {
     return apply(COMPLETE.E, [this.m, this.m1]);
   }
 
+  /** The complete integral E(m1). */
   get E1(): Value {
     return apply(COMPLETE.E, [this.m1, this.m]);
   }
@@ -64,12 +66,15 @@ export class Jacobi {
     return exp(this.K1.div(this.K).times(π.times(-2)));
   }
 
+  /** sn(u): odd, zeros at 2jK + 2kiK′, poles at 2jK + (2k+1)iK′. Throws PoleError. Source DLMF 22.2.4. */
   sn(u: ComplexNumeric): Value {
     return this.value("sn", u);
   }
+  /** cn(u): even, cn 0 = 1, zeros at (2j+1)K + 2kiK′, the poles of sn. Throws PoleError. Source DLMF 22.2.5. */
   cn(u: ComplexNumeric): Value {
     return this.value("cn", u);
   }
+  /** dn(u): even, dn 0 = 1, zeros at (2j+1)K + (2k+1)iK′, the poles of sn. Throws PoleError. Source DLMF 22.2.6. */
   dn(u: ComplexNumeric): Value {
     return this.value("dn", u);
   }
@@ -128,42 +133,53 @@ export class Jacobi {
     return this.odd(ZETA, u);
   }
 
-  // Inverses, by principal roots: for 0 < m < 1 and real x, u in [−K, K] for sn, sc, sd, ns, cs, ds, in [0, 2K] for cn, cd, nc, dc and in [0, K]
-  // for dn, nd. Throw DomainError for a real x that the function does not take on the real line. Source DLMF 22.15(ii).
+  // The inverses throw DomainError for a real x that the function does not take on the real line. Source DLMF 22.15(ii).
 
+  /** A u with sn(u) = x: in [−K, K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcsn(x: ComplexNumeric): Value {
     return this.inverse("sn", x);
   }
+  /** A u with cn(u) = x: in [0, 2K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arccn(x: ComplexNumeric): Value {
     return this.inverse("cn", x);
   }
+  /** A u with dn(u) = x: in [0, K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcdn(x: ComplexNumeric): Value {
     return this.inverse("dn", x);
   }
+  /** A u with ns(u) = x: in [−K, K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcns(x: ComplexNumeric): Value {
     return this.inverse("ns", x);
   }
+  /** A u with nc(u) = x: in [0, 2K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcnc(x: ComplexNumeric): Value {
     return this.inverse("nc", x);
   }
+  /** A u with nd(u) = x: in [0, K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcnd(x: ComplexNumeric): Value {
     return this.inverse("nd", x);
   }
+  /** A u with sc(u) = x: in [−K, K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcsc(x: ComplexNumeric): Value {
     return this.inverse("sc", x);
   }
+  /** A u with sd(u) = x: in [−K, K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcsd(x: ComplexNumeric): Value {
     return this.inverse("sd", x);
   }
+  /** A u with cs(u) = x: in [−K, K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arccs(x: ComplexNumeric): Value {
     return this.inverse("cs", x);
   }
+  /** A u with cd(u) = x: in [0, 2K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arccd(x: ComplexNumeric): Value {
     return this.inverse("cd", x);
   }
+  /** A u with ds(u) = x: in [−K, K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcds(x: ComplexNumeric): Value {
     return this.inverse("ds", x);
   }
+  /** A u with dc(u) = x: in [0, 2K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcdc(x: ComplexNumeric): Value {
     return this.inverse("dc", x);
   }

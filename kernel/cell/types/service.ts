@@ -33,6 +33,12 @@ interface Pending {
   readonly text: string;
 }
 
+/**
+ * Number of the file in which a cell is checked. One file for all: a program whose root has another name is made anew
+ * from all its files, one whose root has the same imports is taken over.
+ */
+const CURRENT = 999_999_998;
+
 /** Names of a library by its folder; a snapshot keeps them, and saves a start one whole program. */
 const librariesRead = new Map<string, readonly string[]>();
 
@@ -50,7 +56,6 @@ export class NotebookTypes {
   /** Loads library and node types, so that the first cell need not. */
   warm(): void {
     this.check(0, 0, "export const warm: number = [1].map((x) => x + 1).length; console.log(process.argv, await warm)");
-    this.host.dropCell(0);
     this.#pending.clear();
   }
 
@@ -82,12 +87,9 @@ export class NotebookTypes {
     const exported = exportEdits(parsed.source);
     if (exported.refusals.length > 0) return failed(exported.refusals);
     const prepared = this.#prepare(text, parsed, exported.edits);
-    this.host.setCell(cell, prepared.edited.text + prepared.around, true);
-    const found = this.#findings(this.host.cellFile(cell), text, prepared);
-    if (found.length > 0) {
-      this.host.dropCell(cell);
-      return failed(found);
-    }
+    this.host.setCell(CURRENT, prepared.edited.text + prepared.around, true);
+    const found = this.#findings(this.host.cellFile(CURRENT), text, prepared);
+    if (found.length > 0) return failed(found);
     const emitted = this.#emit(cell, text, prepared, parsed);
     return { status: "ok", emitted: { ...emitted, map: toUserMap(emitted.map, braced, code) } };
   }
@@ -165,7 +167,7 @@ export class NotebookTypes {
   #emit(cell: number, code: string, prepared: Prepared, parsed: Outline): EmittedCell {
     const { edited, library, operators } = prepared;
     const program = this.service.getProgram() as TS.Program;
-    const source = program.getSourceFile(this.host.cellFile(cell)) as TS.SourceFile;
+    const source = program.getSourceFile(this.host.cellFile(CURRENT)) as TS.SourceFile;
     const checker = program.getTypeChecker();
     const values = new Values(checker, this.host.libraryFolder);
     const emit = operators === undefined ? undefined : emitOperators(operators, values);
@@ -174,7 +176,7 @@ export class NotebookTypes {
     const declared = [...parsed.declared.values()];
     // A `var` inside a block is no part of the declarations that the compiler writes.
     const frozen = parsed.nestedVar ? undefined : output.declarations;
-    this.#pending.set(cell, { declared, text: frozen ?? this.host.cellText(cell) ?? "" });
+    this.#pending.set(cell, { declared, text: frozen ?? this.host.cellText(CURRENT) ?? "" });
     const map = toUserMap(JSON.parse(output.map) as SourceMapData, edited, code);
     const notices = textNotices(parsed, new Set(this.libraryNames()));
     if (operators !== undefined) notices.push(...loopNotices(source, operators, values, checker));

@@ -51,12 +51,12 @@ export {
   Lattice,
   type LatticeInput,
   type Location,
-  lattice,
   type ReducedBasis,
 } from "./surface/lattice.ts";
 export { LaurentExpansion } from "./surface/laurent-expansion.ts";
 export { cubic } from "./surface/make-cubic.ts";
 export { curve } from "./surface/make-curve.ts";
+export { lattice } from "./surface/make-lattice.ts";
 export { quartic } from "./surface/make-quartic.ts";
 export { Morphism } from "./surface/morphism.ts";
 export { Point } from "./surface/point.ts";

@@ -11,7 +11,8 @@ import { DomainError } from "../proof/errors.ts";
 import type { Curve } from "./curve.ts";
 import type { Coordinate } from "./fields.ts";
 import { coordinateOf, fieldOf, joinFields } from "./fields.ts";
-import { type Lattice, lattice } from "./lattice.ts";
+import type { Lattice } from "./lattice.ts";
+import { lattice } from "./make-lattice.ts";
 import { Point } from "./point.ts";
 import { TorusPoint } from "./torus-point.ts";
 

@@ -3,9 +3,9 @@ import * as figure from "../../../lib/figure/figures.ts";
 import { complex } from "../../../lib/number/convert.ts";
 import { atDigits } from "../../../lib/number/functions.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
-import { lattice } from "../../../lib/surface/lattice.ts";
 import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
 import { quartic } from "../../../lib/surface/make-quartic.ts";
 import { elements } from "./normalise.ts";
 

@@ -6,9 +6,9 @@ import { derivation } from "../../../lib/page/derivation.ts";
 import { tex } from "../../../lib/page/typeset.ts";
 import { working } from "../../../lib/page/working.ts";
 import { claim } from "../../../lib/surface/claim.ts";
-import { lattice } from "../../../lib/surface/lattice.ts";
 import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
 
 const text = (value: unknown) => bundle(value)?.["text/plain"] as string;
 

@@ -5,7 +5,7 @@ import { complex } from "../../../lib/number/convert.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
 import { table } from "../../../lib/page/table.ts";
 import { tex } from "../../../lib/page/typeset.ts";
-import { lattice } from "../../../lib/surface/lattice.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
 
 const before = provedDigits();
 beforeEach(() => {

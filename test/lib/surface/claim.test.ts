@@ -5,9 +5,9 @@ import { Complex } from "../../../lib/number/values.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
 import { claim } from "../../../lib/surface/claim.ts";
 import { claimList } from "../../../lib/surface/claim-list.ts";
-import { lattice } from "../../../lib/surface/lattice.ts";
 import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
 
 const before = provedDigits();
 beforeEach(() => {

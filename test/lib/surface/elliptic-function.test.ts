@@ -2,7 +2,7 @@ import { describe, expect, it } from "vitest";
 import { complex } from "../../../lib/number/convert.ts";
 import type { Complex } from "../../../lib/number/values.ts";
 import { PoleError } from "../../../lib/proof/errors.ts";
-import { lattice } from "../../../lib/surface/lattice.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
 
 const LATTICES = {
   "rational invariants 4, −1": lattice({ invariants: [4, -1] }),

@@ -2,7 +2,7 @@ import { describe, expect, it } from "vitest";
 import { complex } from "../../../lib/number/convert.ts";
 import { DomainError } from "../../../lib/proof/errors.ts";
 import type { DivisorFunction } from "../../../lib/surface/elliptic.ts";
-import { lattice } from "../../../lib/surface/lattice.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
 
 const L = lattice({ invariants: [4, -1] });
 const z = complex("0.31", "0.27");

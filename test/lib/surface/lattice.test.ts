@@ -4,7 +4,7 @@ import { Quadratic } from "../../../lib/number/quadratic.ts";
 import { Rational } from "../../../lib/number/rational.ts";
 import { Complex, Real } from "../../../lib/number/values.ts";
 import { DomainError, PoleError, UndecidedError } from "../../../lib/proof/errors.ts";
-import { lattice } from "../../../lib/surface/lattice.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
 import type { TorusPoint } from "../../../lib/surface/torus-point.ts";
 
 const E = lattice({ invariants: [4, -1] });

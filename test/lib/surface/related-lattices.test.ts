@@ -3,7 +3,7 @@ import { complex, rational, real } from "../../../lib/number/convert.ts";
 import { Quadratic } from "../../../lib/number/quadratic.ts";
 import { DomainError } from "../../../lib/proof/errors.ts";
 import { homothety } from "../../../lib/surface/homothety.ts";
-import { lattice } from "../../../lib/surface/lattice.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
 
 describe("an overlattice of index 3 of the lattice of y² + xy + 2y = x³", () => {
   const L = lattice({ invariants: ["-47/12", "-793/216"] });
@@ -35,13 +35,39 @@ describe("an overlattice of index 3 of the lattice of y² + xy + 2y = x³", () =
   });
 
   it("refuses a number beside a point of order 3, and scales the area by the index for a sublattice", () => {
-    expect(() => L.overlattice(c.plus(real("1e-9")))).toThrow("no point with exact coordinates");
+    expect(() => L.overlattice(c.plus(real("1e-9")))).toThrow(
+      "3p differs from the lattice point ω1 by 3.0e-9: not torsion",
+    );
     const S = L.sublattice([
       [2, 0],
       [1, 3],
     ]);
     expect(S.within?.index).toBe(6n);
     expect(S.area.overlaps(L.area.times(6))).toBe(true);
+  });
+});
+
+describe("overlattices of index 3", () => {
+  const L = lattice({ invariants: ["-47/12", "-793/216"] });
+  const list = L.overlattices(3);
+
+  it("are four, one of them with c4 = 433, one more real — oracle: the roots of T³ + 4381T² + 2440387T − 45808987617", () => {
+    expect(list.length).toBe(4);
+    expect(list.filter((M) => M.invariants[0].overlaps("433/12")).length).toBe(1);
+    expect(list.filter((M) => M.realComponents !== undefined).length).toBe(2);
+    for (const M of list) {
+      const T = M.invariants[0].times(12);
+      if (T.overlaps(433)) continue;
+      const value = T.pow(3).plus(T.pow(2).times(4381)).plus(T.times(2440387)).minus(45808987617);
+      expect(value.overlaps(0)).toBe(true);
+    }
+  });
+
+  it("hold the lattice with index 3, and not each other: the fractions are shown", () => {
+    for (const M of list) expect(L.indexIn(M)).toBe(3n);
+    expect(() => list[0]!.indexIn(list[1]!)).toThrow(/coordinates \(.*\/3.*expected integers/);
+    expect(() => list[0]!.indexIn(L)).toThrow("/3");
+    expect(L.sublattices(2).length).toBe(3);
   });
 });
 

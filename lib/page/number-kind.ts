@@ -11,7 +11,7 @@ import type { ConventionKey } from "../proof/conventions.ts";
 import { type Decimal, parseDecimal, texDecimal, texDecimalLine } from "./digits.ts";
 import type { Cell, Kind, Show } from "./kind.ts";
 import { numberConventions } from "./number-conventions.ts";
-import { array } from "./tex.ts";
+import { array, small, texWords } from "./tex.ts";
 
 type Number = Real | Complex;
 
@@ -20,7 +20,7 @@ export const realKind: Kind<Real> = {
   tex: (x, show) => {
     const digits = () => texDecimal(realDecimal(x));
     const exact = root(x);
-    return exactTex(x, show) ?? (exact ? `${show.tex(exact)} = ${digits()}` : digits());
+    return exactTex(x, show) ?? (exact ? `${show.tex(exact)} = ${digits()}` : `${digits()}${doubleTex(x)}`);
   },
   cell: (x, show) => exactCell(x, show) ?? { kind: "number", re: realDecimal(x) },
   conventions,
@@ -29,16 +29,20 @@ export const realKind: Kind<Real> = {
 
 export const complexKind: Kind<Complex> = {
   text: textOf,
-  tex: (z, show) => exactTex(z, show) ?? complexTex(z),
+  tex: (z, show) => exactTex(z, show) ?? `${complexTex(z)}${doubleTex(z)}`,
   cell: (z, show) => exactCell(z, show) ?? complexCell(z),
   conventions,
   data: (z) => ({ ...valueData(z) }),
 };
 
+const DOUBLE = "from a double that is assumed right to half a unit of its last place";
+
 function textOf(x: Number): string {
-  return x.standing === "double"
-    ? `${x}   (from a double that is assumed right to half a unit of its last place)`
-    : String(x);
+  return x.standing === "double" ? `${x}   (${DOUBLE})` : String(x);
+}
+
+function doubleTex(x: Number): string {
+  return x.standing === "double" ? `\\quad ${small(texWords(`(${DOUBLE})`))}` : "";
 }
 
 function digitsOf(x: Number): number {

@@ -30,7 +30,7 @@ export function partsOf(value: unknown): Parts | undefined {
 function structure(value: unknown, depth: number): Parts | undefined {
   if (depth > 3 || typeof value !== "object" || value === null) return undefined;
   const list = Array.isArray(value);
-  if (!list && !isRecord(value)) return undefined;
+  if (list ? value.length > MOST_PARTS : !isRecord(value)) return undefined;
   const keys = list ? Array.from(value, (_, k) => String(k)) : Object.keys(value);
   if (keys.length > MOST_PARTS) return undefined;
   const parts = keys.map((key) => [key, ownValue(value, key)] as const);

@@ -68,6 +68,7 @@ describe("numbers on a page", () => {
     expect(text(enclose("1.25", "1e-6"))).toBe("1.25 ± 1e-6");
     expect(latex(enclose("1.25", "1e-6"))).toBe("$\\displaystyle 1.25 \\pm 10^{-6}$");
     expect(text(real(0.1))).toMatch(/^0\.1\d* ± .*assumed/);
+    expect(latex(real(0.1).times(2))).toContain("from a double");
   });
 
   it("both parts of a complex number, and every TeX output is read by a TeX reader", () => {

@@ -74,6 +74,18 @@ describe("plain JavaScript values as text", () => {
     expect(plainText(deep)).toBe("[[[[[...]]]]]");
   });
 
+  it("a long list is looked at only as far as it is shown", () => {
+    let reads = 0;
+    const counted = new Proxy(new Array(1_000_000).fill(1), {
+      getOwnPropertyDescriptor: (target, key) => {
+        reads++;
+        return Reflect.getOwnPropertyDescriptor(target, key);
+      },
+    });
+    expect(bundle(counted)?.["text/plain"]).toContain("999900 more");
+    expect(reads).toBeLessThan(1000);
+  });
+
   it("any value gives a bundle with text, and never throws", () => {
     fc.assert(
       fc.property(

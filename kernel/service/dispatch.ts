@@ -1,4 +1,5 @@
 // Around every request: busy first, its reply, idle last, whatever happens in between.
+import { ProtocolError } from "../wire/errors.ts";
 import { log } from "../wire/log.ts";
 import type { Message } from "../wire/message.ts";
 import type { RequestChannel, Wire } from "../wire/wire.ts";
@@ -15,27 +16,23 @@ export async function dispatch(
   answering: Answering,
   { wire, output }: { readonly wire: Wire; readonly output: Output },
 ): Promise<void> {
-  const { identities } = request;
-  output.publish("status", { execution_state: "busy" }, request);
-  const answer = await settle(request.header.msg_type, answering);
-  if (answer) {
-    const { content, metadata = {} } = answer;
-    const type = replyType(request.header.msg_type);
+  const type = replyType(request.header.msg_type);
+  const reply = ({ content, metadata = {}, copied }: Answer) => {
     output.flush(); // what the cell printed goes out before its reply
-    wire.send(channel, identities, { type, content, metadata, parent: request });
-    if (answer.copied) output.publish(type, content, request);
+    wire.send(channel, request.identities, { type, content, metadata, parent: request });
+    if (copied) output.publish(type, content, request);
+  };
+  output.publish("status", { execution_state: "busy" }, request);
+  let answer: Answer | undefined;
+  try {
+    answer = await answering();
+    if (answer) reply(answer);
+  } catch (error) {
+    if (!(error instanceof ProtocolError)) log(`${request.header.msg_type}: ${error}`); // else the client's own fault
+    if (type.endsWith("_reply")) reply({ content: { ...failure(error) } });
   }
   output.publish("status", { execution_state: "idle" }, request);
   answer?.afterIdle?.();
-}
-
-async function settle(type: string, answering: Answering): Promise<Answer | undefined> {
-  try {
-    return await answering();
-  } catch (error) {
-    if (!type.endsWith("_request")) log(`${type}: ${error}`);
-    return type.endsWith("_request") ? { content: { ...failure(error) } } : undefined;
-  }
 }
 
 function replyType(type: string): string {

@@ -66,6 +66,7 @@ export async function startKernel(connection: Connection, options: KernelOptions
     runs,
     history,
     executionCount: 0,
+    interruptions: 0,
     cells,
     audience: once(() => within(AUDIENCE, wire.subscribed, undefined)),
     async abortQueued() {
@@ -73,6 +74,7 @@ export async function startKernel(connection: Connection, options: KernelOptions
       abortCells();
     },
     interrupt() {
+      service.interruptions += 1;
       brake.release();
       void cells().then((session) => session.interrupt(), ignore);
     },
@@ -91,7 +93,11 @@ async function startCells(options: KernelOptions, runs: Runs, brake: Brake): Pro
   const session = await options.createCells({
     cwd: process.cwd(),
     onEvent(event) {
-      runs.report(event);
+      try {
+        runs.report(event);
+      } catch (error) {
+        log(`output of a cell cannot be published: ${error}`);
+      }
       return brake.wait();
     },
   });

@@ -19,6 +19,8 @@ export interface Service {
   /** Answers every execute request that has arrived by now with an error instead of running it. */
   abortQueued(): Promise<void>;
   interrupt(): void;
+  /** Interrupts so far: one may come for a cell that is on its way, but does not run yet. */
+  interruptions: number;
   /** Ends the kernel once everything said so far is on its way. */
   end(): void;
 }

@@ -23,13 +23,15 @@ export const executeRequest: Handler = async (request, service) => {
   } catch (error) {
     return { content: { ...failure(error), execution_count: service.executionCount } };
   }
+  const { interruptions } = service;
   await service.audience();
   if (options.stored) service.executionCount += 1;
   const count = service.executionCount;
   const run = service.runs.open(request, options);
   if (!options.silent) service.output.publish("execute_input", { code: options.code, execution_count: count }, run);
   const entry = options.stored ? (await service.history()).add(count, options.code) : undefined;
-  const outcome = await runCell(options, run, count, service);
+  const stopped = service.interruptions !== interruptions;
+  const outcome = stopped ? STOPPED : await runCell(options, run, count, service);
   service.runs.close(run);
   if (!options.silent) publishOutcome(outcome, run, count, service);
   if (entry && outcome.status === "ok") entry.output = plainText(outcome);
@@ -62,6 +64,12 @@ function readOptions(content: Json): Options {
   };
 }
 
+const STOPPED: ExecuteOutcome = {
+  status: "error",
+  ename: "Interrupted",
+  evalue: "the cell was stopped before it ran",
+  traceback: ["Interrupted: the cell was stopped before it ran"],
+};
 const NOTHING: ExecuteOutcome = { status: "ok", userExpressions: {} };
 
 async function runCell(options: Options, run: Run, executionCount: number, service: Service): Promise<ExecuteOutcome> {

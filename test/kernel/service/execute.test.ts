@@ -1,5 +1,8 @@
 import { afterAll, beforeAll, expect, it } from "vitest";
-import { summary } from "../client.ts";
+import { startKernel } from "../../../kernel/service/kernel.ts";
+import { parseConnection } from "../../../kernel/wire/connection.ts";
+import { Client, freeConnection, summary } from "../client.ts";
+import { FakeCells } from "./fake_cells.ts";
 import { startTestKernel, type TestKernel } from "./harness.ts";
 
 let test: TestKernel;
@@ -162,4 +165,38 @@ it("the interrupt ends the running cell and stops the queue — oracle: protocol
   expect((await test.client.exchange(running)).reply.content.ename).toBe("Interrupted");
   expect((await test.client.exchange(queued)).reply.content.ename).toBe("Aborted");
   expect((await test.client.execute("value 3")).reply.content.status).toBe("ok");
+});
+
+it("output that is no JSON costs its cell, not the kernel — oracle: an error reply, idle, the next cell", async () => {
+  const shown = await test.client.execute("oddly\nvalue 1");
+  expect(shown.reply.content.status).toBe("ok");
+  const result = await test.client.execute("odd");
+  expect(result.reply.content).toMatchObject({ status: "error", ename: "TypeError", traceback: [] });
+  expect(summary(result.published)).toEqual(["busy", "execute_input", "idle"]);
+  expect((await test.client.execute("value 2")).reply.content.status).toBe("ok");
+});
+
+it("an interrupt while the cell is on its way stops it before it runs — oracle: no listener yet, nothing ran", async () => {
+  const fields = await freeConnection();
+  const ran: string[] = [];
+  const kernel = await startKernel(parseConnection(JSON.stringify(fields), "k.json"), {
+    createCells: async (options) => {
+      const cells = new FakeCells(options);
+      const execute = cells.execute.bind(cells);
+      cells.execute = (request) => {
+        ran.push(request.code);
+        return execute(request);
+      };
+      return cells;
+    },
+  });
+  const client = await new Client(fields).connect({ listen: false }); // the first cell waits for a listener
+  const id = await client.send("shell", "execute_request", { code: "value 1" });
+  await client.send("control", "interrupt_request", {});
+  const reply = await client.until(() => client.replies.find(({ parent }) => parent.msg_id === id));
+  expect(reply.content).toMatchObject({ status: "error", ename: "Interrupted", execution_count: 1 });
+  expect(ran).toEqual([]);
+  client.close();
+  kernel.end();
+  await kernel.ended;
 });

@@ -12,7 +12,7 @@ import type {
 const sleep = (ms: number) => new Promise<void>((resolve) => setTimeout(resolve, ms));
 
 /**
- * print TEXT | warn TEXT | show TEXT | update ID TEXT | clear | value TEXT | fail TEXT | sleep MS | hang | later MS TEXT |
+ * print TEXT | warn TEXT | show TEXT | update ID TEXT | clear | oddly (a bundle that is no JSON) | odd (such a value) | value TEXT | fail TEXT | sleep MS | hang | later MS TEXT |
  * ask PROMPT; TEXT is read as a JSON string if it is one.
  */
 export class FakeCells implements CellSession {
@@ -74,6 +74,7 @@ export class FakeCells implements CellSession {
     let value: string | undefined;
     for (const line of request.code.split("\n")) {
       const [, verb = "", text = ""] = /^(\S*) ?(.*)$/s.exec(line) ?? [];
+      if (verb === "odd") return { status: "ok", result: { data: { x: 1n }, metadata: {} }, userExpressions: {} };
       if (verb === "fail") return { status: "error", ename: "Error", evalue: text, traceback: [`Error: ${text}`] };
       if (verb === "value") value = unquote(text);
       else if (verb === "hang") await new Promise(() => {});
@@ -91,6 +92,7 @@ export class FakeCells implements CellSession {
     if (verb === "warn") await onEvent({ type: "stream", cell, name: "stderr", text: unquote(text) });
     if (verb === "show") await onEvent({ type: "display", cell, data, metadata: {}, displayId: "d1" });
     if (verb === "update") await onEvent({ type: "display", cell, data, metadata: {}, displayId: "d1", update: true });
+    if (verb === "oddly") await onEvent({ type: "display", cell, data: { x: 1n }, metadata: {} });
     if (verb === "clear") await onEvent({ type: "clear", cell, wait: true });
     if (verb === "sleep") await sleep(Number(text));
     if (verb === "later")

@@ -37,6 +37,11 @@ export class Rational {
     return g === 1n ? new Rational(n, d) : new Rational(n / g, d / g);
   }
 
+  /** num/den for coprime numbers with den > 0, which is not checked: for long results whose lowest terms are known. */
+  static coprime(num: bigint, den: bigint): Rational {
+    return new Rational(num, den);
+  }
+
   plus(other: Rational | bigint | number): Rational {
     const q = rational(other);
     if (this.den === q.den) return Rational.of(this.num + q.num, this.den);

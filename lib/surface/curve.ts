@@ -26,6 +26,7 @@ import { type ClassMember, isogenyClassOf, isogenyWithKernel, type KernelInput, 
 import { changeMorphism } from "./joined.ts";
 import type { Lattice } from "./lattice.ts";
 import type { Morphism } from "./morphism.ts";
+import { indexOf, pairingOf } from "./pairing.ts";
 import { type AnyPoint, Point } from "./point.ts";
 import { type TorsionSubgroup, torsionOf } from "./torsion.ts";
 import type { TorusPoint } from "./torus-point.ts";
@@ -230,6 +231,19 @@ export class Curve<T = Rational> {
   get structure(): readonly bigint[] {
     const { n1, n2 } = groupStructure(modCurve(this, "structure"), this.count);
     return n1 === 1n ? [n2] : [n1, n2];
+  }
+
+  /**
+   * The Weil pairing e_n(P, Q) of points that n kills: an n-th root of unity, with e_n(ω1/n, ω2/n) = exp(2πi/n).
+   * Throws   DomainError for points that n does not kill.
+   */
+  weilPairing(n: number, P: Point<T>, Q: Point<T>): T {
+    return pairingOf(this, n, P, Q);
+  }
+
+  /** Over F_p: the least n >= 0 with Q = n·P, or undefined. Cost: √l steps for the largest prime l dividing the order of P. */
+  index(Q: Point<T>, P: Point<T>): bigint | undefined {
+    return indexOf(Q as unknown as Point<Residue>, P as unknown as Point<Residue>, this.count);
   }
 
   /**

@@ -2,6 +2,7 @@
 
 import { rationalOrder } from "../arithmetic/order.ts";
 import { type Affine, addPoints, multiplyPoint, negatePoint, orderUpTo, samePoint } from "../curve/group.ts";
+import { rationalMultiple } from "../curve/multiples.ts";
 import { valueData } from "../number/json.ts";
 import { primitive, type Rational } from "../number/rational.ts";
 import { Complex, Real } from "../number/values.ts";
@@ -72,7 +73,16 @@ export class Point<T = Rational> {
   /** n·P for any integer n; the digits of a multiple of a point of infinite order grow as n². */
   times(n: bigint | number): Point<T> {
     const { field, a } = this.curve;
-    return new Point(this.curve, multiplyPoint(field, a, integer("times", n), this.#affine));
+    const factor = integer("times", n);
+    if (field.name === "Q" && !this.#isTorsion()) {
+      return new Point(this.curve, rationalMultiple(a as never, factor, this.#affine as never) as Affine<T>);
+    }
+    return new Point(this.curve, multiplyPoint(field, a, factor, this.#affine));
+  }
+
+  /** Multiples of a torsion point stay small, and are best found by the group law. */
+  #isTorsion(): boolean {
+    return rationalOrder(this.curve.a as never, this.#affine as never) !== Infinity;
   }
 
   /**

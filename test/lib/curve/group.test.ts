@@ -1,8 +1,13 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
+import { exactSqrt } from "../../../lib/algebra/integer.ts";
+import { rationals as Q } from "../../../lib/algebra/rationals.ts";
 import { globalMinimalModel, toRationals } from "../../../lib/arithmetic/minimal.ts";
 import { torsionSubgroup } from "../../../lib/arithmetic/torsion.ts";
-import { Rational } from "../../../lib/number/rational.ts";
+import { multiplyPoint } from "../../../lib/curve/group.ts";
+import { Quadratic, quadratic } from "../../../lib/number/quadratic.ts";
+import { gcd, Rational } from "../../../lib/number/rational.ts";
+import type { Real } from "../../../lib/number/values.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
 import type { Point } from "../../../lib/surface/point.ts";
 import printed from "./group.json" with { type: "json" };
@@ -105,6 +110,88 @@ describe("the group law — oracle: axioms on random points, ends and special po
       }),
       runs,
     );
+  });
+});
+
+describe("large multiples by division polynomials — oracle: repeated chords and tangents", () => {
+  it("agree on integral and fractional models and points, torsion included", () => {
+    const cases: [readonly (string | number)[], string | number][] = [
+      [[0, 0, 1, -1, 0], "1/4"],
+      [[1, 0, 1, -19, 26], 1],
+      [["0", "0", "0", "-30625/768", "1850640625/55296"], "4225/48"],
+      [[1, -1, 0, "7/3", "1/9"], 1],
+      [[0, 1, 0, -4, 4], 0],
+    ];
+    for (const [a, x] of cases) {
+      const C = curve({ a });
+      for (const P of C.pointsWith({ x })) {
+        for (const n of [8, 9, 12, 13, 24, 31, -15, -16]) {
+          const plain = multiplyPoint(Q, C.a, BigInt(n), P.coordinates);
+          const found = P.times(n);
+          expect(found.toString()).toBe(plain ? `(${plain.join(", ")})` : "O");
+        }
+      }
+    }
+  });
+
+  it("x(300·P) on y² + y = x³ − x has lowest terms with a square denominator", () => {
+    const { x } = curve({ a: [0, 0, 1, -1, 0] })
+      .point(0, 0)
+      .times(300);
+    expect(gcd(x.num, x.den)).toBe(1n);
+    expect(exactSqrt(x.den)).toBeDefined();
+    expect(x.num.toString().length).toBe(1998);
+  });
+});
+
+describe("the Weil pairing", () => {
+  const F = curve`y^2 = x^3 - x`.mod(13); // Z/2 × Z/4
+  const T = F.pointsWith({ x: 0 })[0]!;
+  const U = F.pointsWith({ x: 1 })[0]!;
+
+  it("is −1 on a basis of the 2-torsion, 1 on (P, P) — oracle: alternating and nondegenerate", () => {
+    expect(F.weilPairing(2, T, U).value).toBe(12n);
+    expect(F.weilPairing(2, U, U).value).toBe(1n);
+  });
+
+  it("is bilinear and alternating on the 3-torsion over F_7 of y² = x³ + 2 (Z/3 × Z/3) — oracle: axioms", () => {
+    const C = curve`y^2 = x^3 + 2`.mod(7);
+    expect(C.structure).toEqual([3n, 3n]);
+    const points = [0, 1, 2, 3, 4, 5, 6].flatMap((x) => C.pointsWith({ x }));
+    for (const P of points) {
+      for (const R of points) {
+        const e = C.weilPairing(3, P, R);
+        expect(e.times(C.weilPairing(3, R, P)).value).toBe(1n);
+        for (const S of points) {
+          const sum = C.weilPairing(3, P, R.plus(S));
+          expect(sum.equals(e.times(C.weilPairing(3, P, S)))).toBe(true);
+        }
+      }
+    }
+  });
+
+  it("e_3(ω1/3, ω2/3) = exp(2πi/3) — oracle: coordinates on the torus of points of y² = x³ + 16 over Q(√−3)", () => {
+    const C = curve`y^2 = x^3 + 16`.over(quadratic(-3));
+    const P = C.point(0, 4);
+    const R = C.point(-4, quadratic(-3).times(4));
+    const L = C.lattice();
+    const coordinate = (c: Real) => Math.round(3 * c.toDouble());
+    const [p, r] = [L.locate(C.logarithm(P)), L.locate(C.logarithm(R))];
+    const determinant = coordinate(p.r) * coordinate(r.s) - coordinate(p.s) * coordinate(r.r);
+    expect(Math.abs(determinant) % 3).not.toBe(0);
+    // exp(2πi/3) = −1/2 + √−3/2
+    const zeta = Quadratic.of(
+      Rational.of(-1, 2),
+      Rational.of(determinant % 3 === 1 || determinant % 3 === -2 ? 1 : -1, 2),
+      -3n,
+    );
+    expect(C.weilPairing(3, P, R).equals(zeta)).toBe(true);
+  });
+
+  it("indices of points over F_p — oracle: multiplication", () => {
+    const C = curve`y^2 + y = x^3 - x`.mod(1_000_003);
+    const P = C.pointsWith({ x: 5 })[0] ?? C.pointsWith({ x: 6 })[0]!;
+    expect(C.index(P.times(123_456), P)).toBe(123_456n % BigInt(P.order()));
   });
 });
 

@@ -15,7 +15,8 @@ export interface PageOptions {
 }
 
 /** Nothing is fetched and nothing runs: styles and pictures stand in the page itself. */
-const POLICY = "default-src 'none'; style-src 'unsafe-inline'; img-src data:; base-uri 'none'; form-action 'none'";
+const POLICY =
+  "default-src 'none'; style-src 'unsafe-inline'; img-src data:; font-src data:; base-uri 'none'; form-action 'none'";
 
 /** The whole HTML page of a notebook. */
 export function notebookPage(notebook: Notebook, { name, colophon = "" }: PageOptions): string {

@@ -57,7 +57,6 @@ footer p { margin: 0; hyphens: none; }
 .joined { white-space: nowrap; }
 math { font-family: ${MATHEMATICS}; }
 @supports (not (-moz-appearance: none)) { math { font-feature-settings: normal; } }
-mo.tml-prime, math .mathscr { font-family: inherit; }
 math.tml-display { margin-block: 0.2rem; }
 section.prose math.tml-display { overflow-x: auto; overflow-y: hidden; padding-block: 0.3rem; }
 `;
@@ -88,12 +87,17 @@ export function pageStyle(): string {
   return `${mathematicsStyle()}\n${SCREEN}${PRINT}`;
 }
 
-/** The rules that the MathML writer relies on, without its font files: pages use the fonts that are there. */
+const require = createRequire(import.meta.url);
+
+/**
+ * The rules that the MathML writer relies on, and its small font (9 kB) for primes and script letters, in the page itself:
+ * mathematics fonts raise a prime that is raised already, so that the one of ℘′ would float.
+ */
 function mathematicsStyle(): string {
-  const file = createRequire(import.meta.url).resolve("temml/dist/Temml-Local.css");
-  return readFileSync(file, "utf8")
+  const font = readFileSync(require.resolve("temml/dist/Temml.woff2")).toString("base64");
+  return readFileSync(require.resolve("temml/dist/Temml-Local.css"), "utf8")
     .replace(/\/\*[\s\S]*?\*\//g, "")
-    .replace(/@font-face\s*\{[^}]*\}/g, "")
+    .replace(/src:[^;}]*/, `src: url("data:font/woff2;base64,${font}") format("woff2")`)
     .replace(/\n\s*\n/g, "\n")
     .trim();
 }

@@ -13,6 +13,7 @@ import {
   UP,
 } from "../fixed/bits.ts";
 import { sqrtNear } from "../fixed/isqrt.ts";
+import { binaryPower } from "../fixed/power.ts";
 import {
   type Ball,
   containsZero,
@@ -321,13 +322,13 @@ export function pow(x: Ball, n: number, prec: number): Ball {
   if (n < 0) return inv(pow(x, -n, prec + 8), prec);
   if (n === 0) return one;
   const work = prec + 4 + 2 * bitLength(BigInt(n));
-  const binary = n.toString(2);
-  let y = x;
-  for (let k = 1; k < binary.length; k++) {
-    y = square(y, work);
-    if (binary[k] === "1") y = mul(y, x, work);
-  }
-  return round(y, prec);
+  const power = binaryPower(
+    x,
+    n,
+    (y) => square(y, work),
+    (y, z) => mul(y, z, work),
+  );
+  return round(power, prec);
 }
 
 /** x², which is not negative even where x has no sign. */

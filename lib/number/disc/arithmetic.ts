@@ -3,6 +3,7 @@ import { DomainError, PoleError } from "../../proof/errors.ts";
 import * as real from "../ball/arithmetic.ts";
 import { type Ball, fromInt } from "../ball/data.ts";
 import { bitLength, DOWN, scaledRadius, shift, UP } from "../fixed/bits.ts";
+import { binaryPower } from "../fixed/power.ts";
 import {
   along,
   below,
@@ -218,13 +219,13 @@ export function pow(x: Disc, n: number, prec: number): Disc {
   if (n < 0) return inv(pow(x, -n, prec + 8), prec);
   if (n === 0) return one;
   const work = prec + 4 + 2 * bitLength(BigInt(n));
-  const binary = n.toString(2);
-  let y = x;
-  for (let k = 1; k < binary.length; k++) {
-    y = sqr(y, work);
-    if (binary[k] === "1") y = mul(y, x, work);
-  }
-  return round(y, prec);
+  const power = binaryPower(
+    x,
+    n,
+    (y) => sqr(y, work),
+    (y, z) => mul(y, z, work),
+  );
+  return round(power, prec);
 }
 
 /** x with its radius raised by an upper bound of |r|, in all directions (along the axis for an axis value if `axial`). */

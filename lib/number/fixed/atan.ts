@@ -1,4 +1,5 @@
 import { scaled, shift } from "./bits.ts";
+import { oddSeries } from "./series.ts";
 import { sinCosFixed } from "./trig.ts";
 
 /**
@@ -18,7 +19,7 @@ export function atanFixed(t: bigint, prec: number): bigint {
   const { sin, cos } = sinCosFixed(angle, work);
   const top = full * cos - (sin << w);
   const bottom = (cos << w) + full * sin;
-  return (angle + atanSmall((top << w) / bottom, w)) >> 16n;
+  return (angle + oddSeries((top << w) / bottom, w, -1n)) >> 16n;
 }
 
 interface Start {
@@ -34,16 +35,4 @@ function atanStart(t: bigint, prec: number): Start {
   const low = Math.ceil(prec / 7) + 16;
   const value = atanFixed(scaled(t, low - prec), low);
   return { value: value < 0n ? 0n : value, prec: low };
-}
-
-/** atan z = z − z³/3 + ... for a small signed z; stops at the first power that comes out as 0 or −1. */
-function atanSmall(z: bigint, w: bigint): bigint {
-  const u = (z * z) >> w;
-  let power = z;
-  let sum = z;
-  for (let n = 3n; ; n += 2n) {
-    power = -((power * u) >> w);
-    if (power === 0n || power === 1n) return sum;
-    sum += power / n;
-  }
 }

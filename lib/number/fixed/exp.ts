@@ -1,5 +1,6 @@
 // exp in fixed point: arguments in [0, 1), results with an error under one unit.
 import { bitLength, shift } from "./bits.ts";
+import { boundedCache } from "./cache.ts";
 import { EXP_FACTOR, factorialSum } from "./series.ts";
 
 /**
@@ -57,17 +58,7 @@ interface Tables {
   readonly values: readonly (bigint | undefined)[][];
 }
 
-const kept = new Map<number, Tables>();
-const MOST_TABLES = 8;
-
-function tablesFor(work: number): Tables {
-  const known = kept.get(work);
-  if (known) return known;
-  if (kept.size >= MOST_TABLES) kept.delete(kept.keys().next().value!);
-  const fresh: Tables = { work, values: Array.from({ length: 6 }, () => []) };
-  kept.set(work, fresh);
-  return fresh;
-}
+const tablesFor = boundedCache(8, (work): Tables => ({ work, values: Array.from({ length: 6 }, () => []) }));
 
 /** By halves from exp(1/64^level): the relative errors of the factors add, so that of entry j is under 2j units. */
 function entry(tables: Tables, level: number, j: number): bigint {

@@ -1,6 +1,7 @@
 // ln and arg in fixed point, by one exponential at full length after a start at a fraction of it.
 import { scaled, shift } from "./bits.ts";
 import { expFixed } from "./exp.ts";
+import { oddSeries } from "./series.ts";
 
 /**
  * ln(y/2^prec)·2^prec for 2^prec <= y < 2^(prec+1); error under 1 unit.
@@ -17,7 +18,7 @@ export function lnFixed(y: bigint, prec: number): bigint {
   const start = lnStart(y, prec);
   const e = expFixed(scaled(start.value, work - start.prec), work);
   const z = ((full - e) << w) / (full + e);
-  const value = scaled(start.value, work - start.prec) + 2n * artanhSmall(z, w);
+  const value = scaled(start.value, work - start.prec) + 2n * oddSeries(z, w, 1n);
   return value >> 16n;
 }
 
@@ -34,16 +35,4 @@ function lnStart(y: bigint, prec: number): Start {
   const low = Math.ceil(prec / 7) + 16;
   const value = lnFixed(scaled(y, low - prec), low);
   return { value: value < 0n ? 0n : value, prec: low };
-}
-
-/** artanh z = z + z³/3 + ... for a small signed z; stops at the first term that comes out as 0 or −1. */
-function artanhSmall(z: bigint, w: bigint): bigint {
-  const u = (z * z) >> w;
-  let power = z;
-  let sum = z;
-  for (let n = 3n; ; n += 2n) {
-    power = (power * u) >> w;
-    if (power === 0n || power === -1n) return sum;
-    sum += power / n;
-  }
 }

@@ -1,5 +1,6 @@
 // The power series of exp, sin and cos in fixed point.
 import { shift } from "./bits.ts";
+import { boundedCache } from "./cache.ts";
 
 /** The factors of the denominators: term n is term n − 1 times z/factor(n). */
 export type Factor = (n: number) => number;
@@ -47,19 +48,21 @@ function shortSum(z: bigint, work: number, count: number, factor: Factor): bigin
   return sum;
 }
 
-const keptCoefficients = new Map<Factor, Map<number, readonly bigint[]>>();
-const MOST_KEPT = 16;
+const COEFFICIENTS = new Map<Factor, (work: number) => readonly bigint[]>();
 
 /** 2^work/(factor(1)...factor(n)) for n = 0 .. SHORT. */
 function coefficients(work: number, factor: Factor): readonly bigint[] {
-  const byWork = keptCoefficients.get(factor) ?? new Map<number, readonly bigint[]>();
-  keptCoefficients.set(factor, byWork);
-  const known = byWork.get(work);
-  if (known) return known;
+  let kept = COEFFICIENTS.get(factor);
+  if (!kept) {
+    kept = boundedCache(16, (bits) => made(bits, factor));
+    COEFFICIENTS.set(factor, kept);
+  }
+  return kept(work);
+}
+
+function made(work: number, factor: Factor): readonly bigint[] {
   const list = [1n << shift(work)];
   for (let n = 1; n <= SHORT; n++) list.push(list[n - 1]! / shift(factor(n)));
-  if (byWork.size >= MOST_KEPT) byWork.delete(byWork.keys().next().value!);
-  byWork.set(work, list);
   return list;
 }
 
@@ -136,4 +139,19 @@ function powersOf(z: bigint, m: number, work: number): bigint[] {
   const powers = [1n, z];
   for (let i = 2; i <= m; i++) powers[i] = (powers[i >> 1]! * powers[i - (i >> 1)]!) >> w;
   return powers;
+}
+
+/**
+ * z + s·z³/3 + z⁵/5 + s·z⁷/7 + ... for a small signed z in units of 2^-w: artanh z for s = 1, atan z for s = −1. Each term errs by under 2 units;
+ * it stops at the first power that comes out as 0 or as a lone rounding.
+ */
+export function oddSeries(z: bigint, w: bigint, s: 1n | -1n): bigint {
+  const u = s * ((z * z) >> w);
+  let power = z;
+  let sum = z;
+  for (let n = 3n; ; n += 2n) {
+    power = (power * u) >> w;
+    if (power === 0n || power === -1n) return sum;
+    sum += power / n;
+  }
 }

@@ -1,5 +1,6 @@
 // sin and cos in fixed point.
 import { bitLength, shift } from "./bits.ts";
+import { boundedCache } from "./cache.ts";
 import { sqrtNear } from "./isqrt.ts";
 import { COS_FACTOR, factorialSum, SIN_FACTOR } from "./series.ts";
 
@@ -66,17 +67,7 @@ interface Tables {
   readonly values: readonly (SinCosFixed | undefined)[][];
 }
 
-const kept = new Map<number, Tables>();
-const MOST_TABLES = 8;
-
-function tablesFor(work: number): Tables {
-  const known = kept.get(work);
-  if (known) return known;
-  if (kept.size >= MOST_TABLES) kept.delete(kept.keys().next().value!);
-  const fresh: Tables = { work, values: Array.from({ length: 5 }, () => []) };
-  kept.set(work, fresh);
-  return fresh;
-}
+const tablesFor = boundedCache(8, (work): Tables => ({ work, values: Array.from({ length: 5 }, () => []) }));
 
 /** The angle j/64^level by halves: errors add, so that of entry j is under 4j units. */
 function entry(tables: Tables, level: number, j: number): SinCosFixed {

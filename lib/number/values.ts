@@ -5,6 +5,7 @@ import type { Ball } from "./ball.ts";
 import * as ball from "./ball.ts";
 import { BIRTHS, type Birth, both } from "./birth.ts";
 import { bitsOf, checkedDigits, provedDigits, workingPrecision } from "./context.ts";
+import { type ValueData, valueData } from "./data.ts";
 import { compareNodes, equalNodes, undecided } from "./decisions.ts";
 import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
@@ -250,6 +251,10 @@ export class Real extends Value {
     return realText(this, this.asked ?? provedDigits());
   }
 
+  toJSON(): ValueData {
+    return valueData(this);
+  }
+
   [Symbol.toPrimitive](hint: string): string {
     return primitive(hint, this, "real number");
   }
@@ -380,6 +385,10 @@ export class Complex extends Value {
 
   override toString(): string {
     return complexText(this, this.asked ?? provedDigits());
+  }
+
+  toJSON(): ValueData {
+    return valueData(this);
   }
 
   [Symbol.toPrimitive](hint: string): string {

@@ -201,6 +201,10 @@ describe("values as data", () => {
     for (const x of [rational("22/7"), exact`(1+√5)/2`, exact`1/2 - i`]) expect(fromValueData(valueData(x))).toEqual(x);
     expect(valueData(real("0.1"))).toEqual({ kind: "rational", value: "1/10" });
     expect(valueData(enclose("1.25", "1e-6"))).toMatchObject({ kind: "real", standing: "measured" });
+    expect(JSON.parse(JSON.stringify({ x: sqrt(2), q: rational("1/2") }))).toEqual({
+      x: valueData(sqrt(2)),
+      q: valueData(rational("1/2")),
+    });
     expect(() => fromValueData({ kind: "other" } as never)).toThrow(DomainError);
   });
 });

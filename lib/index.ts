@@ -43,6 +43,7 @@ export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/value
 export { ComplexMultiplication } from "./surface/complex-multiplication.ts";
 export { type Line, PlaneCubic, type ThroughPoint } from "./surface/cubic.ts";
 export { Curve } from "./surface/curve.ts";
+export { DegenerateLattice, degenerate } from "./surface/degenerate.ts";
 export { DivisorFunction, type EllipticData, type PrincipalPart, type Weighted } from "./surface/elliptic.ts";
 export { EllipticFunction, type FunctionPoint } from "./surface/elliptic-function.ts";
 export { Homothety, homothety } from "./surface/homothety.ts";

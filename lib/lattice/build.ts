@@ -248,7 +248,7 @@ function degenerate(): DomainError {
     subject: "lattice",
     given: "g2³ = 27 g3², a cubic with a multiple root",
     expected: "invariants with g2³ ≠ 27 g3²",
-    hint: "A double root leaves trigonometric or hyperbolic functions and one period only, a triple root rational functions.",
+    hint: "A double root leaves trigonometric or hyperbolic functions and one period only, a triple root rational functions: see degenerate({ invariants }).",
     argument: "invariants",
   });
 }

@@ -19,6 +19,8 @@ export type ModulusInput =
   | { readonly qTheta: ComplexNumeric }
   /** q_mod = exp(2πiτ). */
   | { readonly qMod: ComplexNumeric }
+  /** Refused with a word on why: q names two different nomes. */
+  | { readonly q: ComplexNumeric }
   /** Roots e1, e2, e3 of a cubic: m = (e2 − e3)/(e1 − e3). */
   | { readonly roots: readonly [ComplexNumeric, ComplexNumeric, ComplexNumeric] };
 

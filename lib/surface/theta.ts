@@ -8,7 +8,13 @@ import { tauOf } from "./modulus.ts";
 
 /** The argument by name: { v } has sin πv, { z } has sin z; and τ, or a nome by its name. */
 export type ThetaInput = ({ readonly v: ComplexNumeric } | { readonly z: ComplexNumeric }) &
-  ({ readonly tau: ComplexNumeric } | { readonly qTheta: ComplexNumeric } | { readonly qMod: ComplexNumeric });
+  (
+    | { readonly tau: ComplexNumeric }
+    | { readonly qTheta: ComplexNumeric }
+    | { readonly qMod: ComplexNumeric }
+    /** Refused with a word on why: q names two different nomes. */
+    | { readonly q: ComplexNumeric }
+  );
 
 export interface ThetaOptions {
   /** Order of the derivative in the named variable, 0 to 3. */

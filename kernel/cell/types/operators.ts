@@ -90,9 +90,10 @@ function isLiteral(node: TS.PrefixUnaryExpression): boolean {
   return ts.isNumericLiteral(node.operand) || ts.isBigIntLiteral(node.operand);
 }
 
-/** Whether a text has operators that could meet a library value. */
+/** Whether a text has operators that could meet a library value, or a literal that a double would not hold: f({ m: 0.1 }). */
 export function hasOperators(source: TS.SourceFile): boolean {
   const found = (node: TS.Node): boolean =>
+    (ts.isNumericLiteral(node) && !Number.isSafeInteger(Number(node.text))) ||
     (ts.isBinaryExpression(node) && (BINARY.has(node.operatorToken.kind) || COMPOUND.has(node.operatorToken.kind))) ||
     (ts.isPrefixUnaryExpression(node) && node.operator === ts.SyntaxKind.MinusToken) ||
     (ts.forEachChild(node, found) ?? false);

@@ -24,6 +24,7 @@ const VALUES: readonly (readonly [title: string, code: string, expected: string]
   ["rational: power", "r ** 2", "1/9"],
   ["a literal quotient is exact", "1/3 * x", "1"],
   ["a decimal literal is exact", "0.1 * x", "3/10"],
+  ["a decimal literal alone in a named argument is exact", "legendre.K({ m: 0.5 })", "1.8540746773013719184..."],
   ["sums of literals", "(1 - 1/3 + 0.5) * x", "7/2"],
   ["powers of literals", "2**3**2 * x", "1536"],
   ["negative literals", "-1/3 * x", "-1"],

@@ -1,9 +1,13 @@
+import { readFileSync } from "node:fs";
 import { beforeAll, expect, it } from "vitest";
-import { Router } from "zeromq";
+import { Router, Subscriber } from "zeromq";
 import { Client, freeConnection } from "../client.ts";
 import { build, groupLives, startProcess } from "../process.ts";
 
 beforeAll(build, 120_000);
+
+/** Memory of a process in MB. */
+const memoryOf = (pid: number) => (Number(readFileSync(`/proc/${pid}/statm`, "utf8").split(" ")[1]) * 4096) / 1e6;
 
 it("200 restarts on one connection file: each serves, none is left, the ports are free — oracle: the system", async () => {
   const fields = await freeConnection();
@@ -30,11 +34,33 @@ it("200 restarts on one connection file: each serves, none is left, the ports ar
   }
 });
 
+it("a client that never reads while a cell prints for ever: memory bounded, the stop works, variables stay — oracle: /proc", async () => {
+  const { fields, exited, pid } = await startProcess();
+  const deaf = new Subscriber({ linger: 0, receiveHighWaterMark: 1 });
+  deaf.connect(`tcp://127.0.0.1:${fields.iopub_port}`);
+  deaf.subscribe("");
+  const client = await new Client(fields).connect({ listen: false });
+  const run = async (code: string) => {
+    const id = await client.send("shell", "execute_request", { code, user_expressions: { kept: "kept" } });
+    return () => client.until(() => client.replies.find(({ parent }) => parent.msg_id === id), 60_000);
+  };
+  await (await run("let kept = 41"))();
+  const endless = await run('for (;;) console.log("x".repeat(1000))');
+  await new Promise((resolve) => setTimeout(resolve, 8000));
+  expect(memoryOf(pid)).toBeLessThan(300);
+  await client.send("control", "interrupt_request", {});
+  expect((await endless()).content.status).toBe("error");
+  const after = await (await run("kept += 1"))();
+  expect(after.content.user_expressions.kept.data["text/plain"]).toBe("42");
+  await client.send("control", "shutdown_request", {});
+  expect(await exited).toBe(0);
+  deaf.close();
+  client.close();
+});
+
 it("10,000 cells of one kernel: all answered in order, memory does not grow with them — oracle: /proc", async () => {
   const { fields, exited, pid } = await startProcess();
   const client = await new Client(fields).connect();
-  const { readFileSync } = await import("node:fs");
-  const memory = () => (Number(readFileSync(`/proc/${pid}/statm`, "utf8").split(" ")[1]) * 4096) / 1e6;
   const batch = async (count: number) => {
     const ids: string[] = [];
     for (let n = 0; n < count; n += 1) {
@@ -46,9 +72,9 @@ it("10,000 cells of one kernel: all answered in order, memory does not grow with
     client.forget();
   };
   await batch(1000);
-  const before = memory();
+  const before = memoryOf(pid);
   for (let turn = 0; turn < 9; turn += 1) await batch(1000);
-  expect(memory() - before).toBeLessThan(60);
+  expect(memoryOf(pid) - before).toBeLessThan(60);
   await client.request("control", "shutdown_request", {});
   expect(await exited).toBe(0);
   client.close();

@@ -8,6 +8,7 @@ import { formatConsole } from "./console.ts";
 import { failure } from "./failure.ts";
 import { Frames } from "./frames.ts";
 import { connectHost } from "./host.ts";
+import { announceLeaving } from "./leaving.ts";
 import { bundler, library } from "./library.ts";
 import { Modules } from "./modules.ts";
 import { currentOwner } from "./ownership.ts";
@@ -80,6 +81,7 @@ function main(): void {
   captureStreams(reporter);
   guardTimers();
   formatConsole();
+  announceLeaving(reporter);
   const modules = new Modules(cwd, library);
   const bundle = formatter(bundler);
   const stops = new Stopper({ frames, shared, critical: () => reporter.critical });

@@ -199,6 +199,8 @@ export class Runner {
     running.execution.closed = true;
     running.owner.stopped = error?.ename === INTERRUPTED;
     const { shared, reporter } = this.#parts;
+    // A stop that unwound the boundary has left Node without its handler: the next signal would end the process.
+    if (process.listenerCount("SIGINT") === 0) process.on("SIGINT", () => {});
     if (this.#running === running) {
       this.#running = undefined;
       Atomics.store(shared, PHASE, IDLE);

@@ -4,7 +4,7 @@ import { Socket } from "node:net";
 import { type MessagePort, workerData } from "node:worker_threads";
 import { LineReader } from "../lines.ts";
 import type { InterruptCommand } from "../messages.ts";
-import { CELL, FIRING, NOTED, PHASE, PONG, SYNC, type WatchdogMessage } from "./shared.ts";
+import { CELL, FIRING, NOTED, PHASE, PONG, SYNC, type WatchdogMessage, WRITING } from "./shared.ts";
 
 const DESCRIPTOR = 5;
 const STEP = 50;
@@ -58,9 +58,7 @@ async function interrupt(number: number): Promise<void> {
   for (let tries = 0; isOpen(number); tries++) {
     const elapsed = Date.now() - began;
     if (elapsed > KILL_AFTER) killAll();
-    const firing = Atomics.load(shared, PHASE) === FIRING && elapsed < SIGNAL_TIME;
-    if (Atomics.load(shared, PONG) < pings && !firing) stop(number, level(elapsed, tries));
-    else fireSignal();
+    if (!fireSignal() && mayStop(elapsed)) stop(number, level(elapsed, tries));
     if (Atomics.load(shared, PONG) >= pings) ping(number);
     await pause(STEP);
   }
@@ -72,10 +70,20 @@ function level(elapsed: number, tries: number): 0 | 1 | 2 {
   return tries > PATIENCE ? 1 : 0;
 }
 
-/** SIGINT to this process, only while the main thread is inside the boundary that it breaks. */
-function fireSignal(): void {
-  if (process.platform === "win32") return;
-  if (Atomics.compareExchange(shared, PHASE, SYNC, FIRING) === SYNC) process.kill(process.pid, "SIGINT");
+/** Whether the stop protocol is next: the event loop does not answer, and no signal is on its way or soon can be. */
+function mayStop(elapsed: number): boolean {
+  if (Atomics.load(shared, PONG) >= pings) return false;
+  const phase = Atomics.load(shared, PHASE);
+  if (phase === FIRING) return elapsed >= SIGNAL_TIME;
+  return phase !== WRITING || elapsed >= UNCONDITIONAL_AFTER;
+}
+
+/** SIGINT to this process, only while the main thread is inside the boundary that it breaks; answers whether. */
+function fireSignal(): boolean {
+  if (process.platform === "win32") return false;
+  if (Atomics.compareExchange(shared, PHASE, SYNC, FIRING) !== SYNC) return false;
+  process.kill(process.pid, "SIGINT");
+  return true;
 }
 
 function ping(number: number): void {

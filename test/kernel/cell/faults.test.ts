@@ -17,8 +17,8 @@ function stateOf(pid: number): string {
 
 describe("faults", () => {
   it.each([
-    ["process.exit(3)", "status 3"],
-    ["process.abort()", "SIGABRT"],
+    ["process.exit(3)", "the cell called process.exit(3)"],
+    ["process.abort()", "the cell called process.abort()"],
     ["process.kill(process.pid, 'SIGSEGV'); for (;;) {}", "SIGSEGV"],
     ["const hog: number[][] = []; for (;;) hog.push(new Array(100000).fill(1.5))", "ran out of memory"],
   ])("%s", async (code, words) => {
@@ -29,6 +29,34 @@ describe("faults", () => {
     expect(error).toContain("variables are lost");
     expect(await notebook.error("held")).toContain("TS2304");
     expect(await notebook.value("let held = 2; held")).toBe("2");
+  });
+
+  it("a print of 30 MB arrives whole, and the memory of the kernel's side does not keep it", async () => {
+    let bytes = 0;
+    const other = new TestNotebook({
+      onText: (text) => {
+        bytes += text.length;
+      },
+    });
+    expect(await other.value("process.stdout.write('x'.repeat(3e7)); 1")).toBe("1");
+    expect(bytes).toBe(3e7);
+    await other.session.shutdown();
+  });
+
+  it("a slow reader holds an endless print back, and it can be interrupted", async () => {
+    let taken = 0;
+    const other = new TestNotebook({
+      onText: (text) => {
+        taken += text.length;
+        return new Promise((resolve) => setTimeout(resolve, 20));
+      },
+    });
+    const running = other.run("for (;;) console.log('x'.repeat(1e6))");
+    await new Promise((resolve) => setTimeout(resolve, 4000));
+    other.session.interrupt();
+    expect(await running).toMatchObject({ status: "error" });
+    expect(taken).toBeLessThan(1e9);
+    await other.session.shutdown();
   });
 
   it("a child that floods does not hang the session", async () => {

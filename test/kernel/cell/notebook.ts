@@ -12,13 +12,16 @@ export class TestNotebook {
   #cell = 0;
   #hear: () => void = () => {};
 
-  constructor(options: { cwd?: string; memoryLimit?: number } = {}) {
+  /** `onText` takes the text of the streams, which is then not kept; a promise holds the cells back. */
+  constructor(options: { cwd?: string; memoryLimit?: number; onText?: (text: string) => void | Promise<void> } = {}) {
     this.cwd = options.cwd ?? mkdtempSync(join(tmpdir(), "cells-"));
     this.session = createCellSession({
       cwd: this.cwd,
       onEvent: (event) => {
+        if (event.type === "stream" && options.onText) return options.onText(event.text);
         this.events.push(event);
         this.#hear();
+        return undefined;
       },
       ...(options.memoryLimit !== undefined && { memoryLimit: options.memoryLimit }),
     });

@@ -46,6 +46,7 @@ export { Curve } from "./surface/curve.ts";
 export { DegenerateLattice, degenerate } from "./surface/degenerate.ts";
 export { DivisorFunction, type EllipticData, type PrincipalPart, type Weighted } from "./surface/elliptic.ts";
 export { EllipticFunction, type FunctionPoint } from "./surface/elliptic-function.ts";
+export { Factorisation, factor } from "./surface/factorisation.ts";
 export { Homothety, homothety } from "./surface/homothety.ts";
 export {
   type IntegerMatrix,

@@ -9,6 +9,7 @@ import { ClassPolynomial } from "../surface/class-polynomial.ts";
 import { ComplexMultiplication } from "../surface/complex-multiplication.ts";
 import { Curve } from "../surface/curve.ts";
 import { EllipticFunction } from "../surface/elliptic-function.ts";
+import { Factorisation } from "../surface/factorisation.ts";
 import { Homothety } from "../surface/homothety.ts";
 import { Jacobi } from "../surface/jacobi.ts";
 import { Lattice } from "../surface/lattice.ts";
@@ -27,6 +28,7 @@ import { Derivation } from "./derivation.ts";
 import { derivationKind } from "./derivation-kind.ts";
 import { quadraticKind, rationalKind } from "./exact-kind.ts";
 import { homothetyKind, laurentKind, multiplicationKind } from "./expansion-kind.ts";
+import { factorisationKind } from "./factorisation-kind.ts";
 import { figureKind } from "./figure-kind.ts";
 import { entry, type KindEntry, shape } from "./kind.ts";
 import { functionKind, latticeKind, torusPointKind } from "./lattice-kind.ts";
@@ -45,6 +47,7 @@ export const KINDS: readonly KindEntry[] = [
   entry(Complex, complexKind),
   entry(Rational, rationalKind),
   entry(Quadratic, quadraticKind),
+  entry(Factorisation, factorisationKind),
   entry(Lattice, latticeKind),
   entry(EllipticFunction, functionKind),
   entry(QuasiPeriodicFunction, functionKind),

@@ -32,6 +32,7 @@ export interface PrincipalPart {
   readonly coefficients: readonly ComplexNumeric[];
 }
 
+/** What determines an elliptic function: its zeros and poles (up to a factor), or its principal parts (up to a constant). */
 export type EllipticData =
   | { readonly zeros: readonly Weighted[]; readonly poles: readonly Weighted[] }
   | { readonly principalParts: readonly PrincipalPart[]; readonly constant?: ComplexNumeric };

@@ -2,7 +2,7 @@
 import { UndecidedError } from "../proof/errors.ts";
 import * as ball from "./ball.ts";
 import * as disc from "./disc.ts";
-import { combine, sameExact } from "./exactness.ts";
+import { exactOrder, oneField, sameExact } from "./exactness.ts";
 import { LADDER } from "./ladder.ts";
 import { asBall, asDisc, type Enclosure, evaluate, isDisc, isNode, mayPass, type Node, refinable } from "./origin.ts";
 import { plainParts, withRadius } from "./print.ts";
@@ -11,9 +11,8 @@ import { Rational } from "./rational.ts";
 
 /** Sign of x − y (of x without y): exact if both are exact, else by enclosures on the ladder; undefined if it stays open. */
 export function compareNodes(x: Node, y: Node | undefined): -1 | 0 | 1 | undefined {
-  const exact = y ? combine("minus", x.exact, y.exact) : x.exact;
-  if (exact instanceof Rational) return exact.sign();
-  if (exact instanceof Quadratic) return exact.sign();
+  const exact = x.exact && (y ? y.exact && exactOrder(x.exact, y.exact) : x.exact.sign());
+  if (exact !== undefined) return exact;
   if (y && sameConstruction(x, y, 64)) return 0;
   const zero = ball.zero;
   const first = ball.compare(asBall(x.enclosure), y ? asBall(y.enclosure) : zero);
@@ -41,11 +40,7 @@ function climb<T>(attempt: (prec: number) => T | undefined): T | undefined {
 /** Whether x = y: yes by an exact argument, no by disjoint enclosures. Throws UndecidedError else, with both. */
 export function equalNodes(x: Node, y: Node): boolean {
   if (x === y) return true;
-  if (x.exact && y.exact) {
-    const same =
-      x.exact.constructor === y.exact.constructor || x.exact instanceof Rational || y.exact instanceof Rational;
-    if (same && combine("minus", x.exact, y.exact)) return sameExact(x.exact, y.exact);
-  }
+  if (x.exact && y.exact && oneField(x.exact, y.exact)) return sameExact(x.exact, y.exact);
   if (sameConstruction(x, y, 64)) return true;
   const apart = (a: Enclosure, b: Enclosure): true | undefined => (overlap(a, b) ? undefined : true);
   if (apart(x.enclosure, y.enclosure)) return false;

@@ -70,6 +70,19 @@ function rationalRoot(x: Rational): Rational | undefined {
   return n * n === x.num && d * d === x.den ? Rational.of(n, d) : undefined;
 }
 
+/** Whether two exact numbers lie in one field as they are written, so that their difference is exact. */
+export function oneField(x: Exact | undefined, y: Exact | undefined): boolean {
+  return x !== undefined && y !== undefined && joined(x, y) !== undefined;
+}
+
+/** The sign of x − y, exactly, however long they are; undefined if they are not real numbers of one field. */
+export function exactOrder(x: Exact, y: Exact): -1 | 0 | 1 | undefined {
+  const pair = joined(x, y);
+  if (!pair) return undefined;
+  if (pair[0] instanceof Rational) return pair[0].compare(pair[1] as Rational);
+  return pair[0].minus(pair[1] as Quadratic).sign();
+}
+
 /** Whether two exact numbers are equal: of one field by comparison, of different fields only if both are rational. */
 export function sameExact(x: Exact, y: Exact): boolean {
   const pair = joined(x, y);

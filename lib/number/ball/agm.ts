@@ -28,28 +28,35 @@ export function agm(a: Ball, b: Ball, prec: number): Ball {
 function near(a: Ball, b: Ball, prec: number): Ball {
   let x = a;
   let y = b;
-  let apart = x.exp + bitLength(x.man, prec) - y.exp - bitLength(y.man, prec);
-  while (apart > 1 || apart < -1) {
+  let top = height(x, prec);
+  let other = height(y, prec);
+  while (Math.abs(top - other) > 1) {
     const mean = ldexp(add(x, y, prec + 16), -1);
     y = sqrt(mul(x, y, prec + 16), prec + 16);
     x = mean;
-    apart = x.exp + bitLength(x.man, prec) - y.exp - bitLength(y.man, prec);
+    top = height(x, prec);
+    other = height(y, prec);
   }
   const work = prec + 24;
-  const exp = Math.max(x.exp + bitLength(x.man, prec), y.exp + bitLength(y.man, prec)) - work;
+  const exp = Math.max(top, other) - work;
   const p = scaled(x.man, x.exp - exp);
   const q = scaled(y.man, y.exp - exp);
   const mean = p > q ? agmFixed(p, q, work) : agmFixed(q, p, work);
-  // The kernel's 2^12 units, one unit of a quarter of the size for each cut, and the mean times the relative radius.
-  const err = 2 ** 12 + 8 + Math.max(moved(mean, x, prec), moved(mean, y, prec));
+  // The kernel's 2^12 units, one unit of a quarter of the size for each cut, and the mean times the larger relative radius.
+  const m = size(mean, prec);
+  const power = sizePower();
+  const err = 2 ** 12 + 8 + Math.max(moved(m, power, x, prec), moved(m, power, y, prec));
   return finish(mean, exp, err * UP, prec);
 }
 
-/** An upper bound of mean·(radius of x)/|x|. */
-function moved(mean: bigint, x: Ball, prec: number): number {
+/** |midpoint| < 2^height. */
+function height(x: Ball, prec: number): number {
+  return x.exp + bitLength(x.man, prec);
+}
+
+/** An upper bound of m·2^power·(radius of x)/|x|. */
+function moved(m: number, power: number, x: Ball, prec: number): number {
   if (x.rad === 0) return 0;
-  const m = size(mean, prec);
-  const power = sizePower();
   const low = sizeBelow(x.man, prec);
   return ((x.rad * m) / low) * pow2(power - sizePower()) * UP;
 }

@@ -164,6 +164,10 @@ describe("comparison", () => {
         "1.41421356237309504880168872420969807856967187537694807317667973799073247846210703885038753432764157273",
       ) === -1,
     );
+    const long = (n: bigint): Real => real(Rational.of(n, 7n ** 8_000n));
+    expect(long(3n ** 15_000n).compare(long(3n ** 15_000n))).toBe(0);
+    expect(long(3n ** 15_000n).compare(long(3n ** 15_000n + 1n))).toBe(-1);
+    expect(long(3n ** 15_000n).equals(long(3n ** 15_000n + 1n))).toBe(false);
     expect(quadratic(2).sign()).toBe(1);
     expect(Quadratic.of(3, -2, 2).sign()).toBe(1);
     expect(Quadratic.of(-3, 2, 2).sign()).toBe(-1);

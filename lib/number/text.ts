@@ -76,7 +76,7 @@ function bestOf(x: Node, digits: number): Ball | Disc {
 /** Text of a real value, which `real` reads back. `asked` digits of an exact fraction only if they were asked of it. */
 export function realText(x: Node & { readonly asked?: number | undefined }, digits: number): string {
   if (x.exact instanceof Rational && x.asked === undefined) return x.exact.toString();
-  if (x.source !== undefined && x.standing === "measured") return x.source;
+  if (x.source?.includes("±")) return x.source;
   return plainParts(decimal(x, digits));
 }
 
@@ -144,7 +144,7 @@ function measuredParts(d: Disc): ComplexParts {
 export function complexText(x: Node & { readonly asked?: number | undefined }, digits: number): string {
   if (x.exact && x.asked === undefined && (x.exact instanceof Rational || x.exact instanceof Quadratic))
     return x.exact.toString();
-  if (x.source !== undefined && x.standing === "measured") return x.source;
+  if (x.source?.includes("±")) return x.source;
   const { re, im, axis, radius } = complexDecimal(x, digits);
   if (axis === "real") return plainParts(re);
   const turned = `${plainParts({ ...im, sign: "" })} i`;

@@ -70,6 +70,8 @@ describe("exact, defined, measured, double", () => {
     expect(x.contains("0.10000000000000002")).toBe(false);
     expect(x.plus(enclose("1", "1e-3")).standing).toBe("double");
     expect(enclose(0.1).standing).toBe("measured");
+    expect(enclose(0.1).toString()).toBe("0.1000000000000000056 ± 7e-18");
+    expect(real(enclose(0.1).toString()).contains(0.1)).toBe(true);
     expect(real(3).standing).toBe("exact");
     expect(real(2 ** 60).standing).toBe("double");
   });

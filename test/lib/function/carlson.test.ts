@@ -140,7 +140,9 @@ describe("Carlson's integrals against each other", () => {
           expect(disc.overlaps(f(x, y, z, 60), f(x, centre(y), centre(z), 130))).toBe(true);
         }
         expect(disc.overlaps(carlsonRC(y, z, 60), carlsonRC(centre(y), centre(z), 130))).toBe(true);
-        expect(disc.overlaps(carlsonRJ(x, x, x, p, 60), carlsonRJ(x, x, x, p, 130))).toBe(true);
+        // RJ takes an RC a step: arguments 2^140 apart would cost thousands of roots.
+        const [w, r] = [x, p].map((d): Disc => ({ ...d, exp: Math.trunc(d.exp / 8) })) as [Disc, Disc];
+        expect(disc.overlaps(carlsonRJ(w, w, w, r, 60), carlsonRJ(w, w, w, r, 130))).toBe(true);
       }),
       RUNS,
     );

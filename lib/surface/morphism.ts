@@ -1,6 +1,7 @@
 // Maps between curves: one type for changes of model, cubics and quartics to Weierstrass form, isogenies, isomorphisms, twists.
 
 import { fromTerms, type Polynomial } from "../algebra/multivariate.ts";
+import type { Residue } from "../algebra/primefield.ts";
 import { pullbackConstant } from "../curve/map/differential.ts";
 import { type Formula, formulaOf } from "../curve/map/formula.ts";
 import { applyMap, composeMaps, type FormMap, isExceptional, isIdentity, landsOnTarget } from "../curve/map/map.ts";
@@ -9,6 +10,7 @@ import { primitive } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 import type { Standing } from "../proof/standing.ts";
 import { Curve } from "./curve.ts";
+import type { Coordinate } from "./fields.ts";
 import { type AnyVariety, coordinatesOn, type PointOf, pointOn } from "./space.ts";
 
 /** What a map is made of. */
@@ -70,10 +72,10 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
   }
 
   /** c with φ*ω′ = c·ω for the invariant differentials, dx/(2y + a1x + a3) on a long Weierstrass form. */
-  get factor(): unknown {
+  get factor(): Coordinate | Residue {
     const { map, basePoint } = this.data;
     const F = map.from.field;
-    return pullbackConstant(map, basePoint ?? [F.zero, F.one, F.zero]);
+    return pullbackConstant(map, basePoint ?? [F.zero, F.one, F.zero]) as Coordinate | Residue;
   }
 
   /** The inverse of an isomorphism. Throws DomainError for a map of degree above 1. */

@@ -29,7 +29,7 @@ export function primitivePart(f: Univariate<Rational>): IntegerPolynomial {
  */
 export function rationalRoots(f: Univariate<Rational>): Rational[] {
   if (f.length <= 1) return [];
-  return rootsIfSimple(f) ?? rootsIfSimple(squarefreeFactor(f)) ?? failed();
+  return rootsIfSimple(f, PATIENCE) ?? rootsIfSimple(squarefreeFactor(f), Infinity) ?? failed();
 }
 
 function squarefreeFactor(f: Univariate<Rational>): Univariate<Rational> {
@@ -40,22 +40,27 @@ function failed(): never {
   throw new Error("some prime below 1000 keeps the roots of a squarefree polynomial of a curve simple");
 }
 
-function rootsIfSimple(f: Univariate<Rational>): Rational[] | undefined {
+/** So many primes with a multiple root suggest a repeated factor, as where a point of order two is halved. */
+const PATIENCE = 4;
+
+function rootsIfSimple(f: Univariate<Rational>, patience: number): Rational[] | undefined {
   const integral = primitivePart(f);
   const lead = integral.at(-1)!;
   const degree = integral.length - 1;
   const monic = integral.map((c, k) => (k === degree ? 1n : c * lead ** BigInt(degree - 1 - k)));
-  const roots = integerRootsOfMonic(monic)?.map((root) => Rational.of(root, lead));
+  const roots = integerRootsOfMonic(monic, patience)?.map((root) => Rational.of(root, lead));
   return roots?.sort((a, b) => a.compare(b));
 }
 
-/** Integer roots of a monic integer polynomial, or undefined if every prime tried has a multiple root. */
-function integerRootsOfMonic(f: IntegerPolynomial): bigint[] | undefined {
+/** Integer roots of a monic integer polynomial, or undefined if the primes tried have multiple roots. */
+function integerRootsOfMonic(f: IntegerPolynomial, patience: number): bigint[] | undefined {
   let best: { readonly prime: bigint; readonly roots: readonly number[] } | undefined;
   let found = 0;
+  let failures = 0;
   for (const p of primesUpTo(1000)) {
     if (p < f.length) continue;
     const roots = simpleRootsModulo(f, p);
+    if (!roots && !best && ++failures >= patience) return undefined;
     if (!roots) continue;
     if (!best || roots.length < best.roots.length) best = { prime: BigInt(p), roots };
     if (roots.length === 0) return [];

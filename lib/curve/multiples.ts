@@ -7,7 +7,7 @@ import { type Affine, multiplyPoint } from "./group.ts";
 import { type Coefficients, changeModel, invariantsOf } from "./weierstrass.ts";
 
 /** From this factor on the whole-number route is the faster one. */
-const WORTHWHILE = 8n;
+const WORTHWHILE = 20n;
 
 /**
  * n·P over Q.

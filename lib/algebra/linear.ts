@@ -66,21 +66,3 @@ export function inverse<T>(F: Field<T>, A: Matrix<T>): T[][] | undefined {
   if (pivots.length < n || pivots.at(-1)! >= n) return undefined;
   return rows.map((row) => row.slice(n));
 }
-
-export function applyMatrix<T>(F: Field<T>, A: Matrix<T>, v: readonly T[]): T[] {
-  return A.map((row) => row.reduce((total, c, k) => F.add(total, F.mul(c, v[k]!)), F.zero));
-}
-
-/** A basis of { x : A x = 0 }. */
-export function nullSpace<T>(F: Field<T>, A: Matrix<T>, width: number): T[][] {
-  const { rows, pivots } = rowReduce(F, A);
-  const free = Array.from({ length: width }, (_, k) => k).filter((k) => !pivots.includes(k));
-  return free.map((column) => {
-    const x: T[] = new Array(width).fill(F.zero);
-    x[column] = F.one;
-    pivots.forEach((pivot, k) => {
-      x[pivot] = F.neg(rows[k]![column]!);
-    });
-    return x;
-  });
-}

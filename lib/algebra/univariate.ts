@@ -10,10 +10,6 @@ export function trim<T>(F: Field<T>, f: Univariate<T>): Univariate<T> {
   return n === f.length ? f : f.slice(0, n);
 }
 
-export function degreeOf<T>(f: Univariate<T>): number {
-  return f.length - 1;
-}
-
 export function addUni<T>(F: Field<T>, f: Univariate<T>, g: Univariate<T>): Univariate<T> {
   const length = Math.max(f.length, g.length);
   return trim(
@@ -100,15 +96,4 @@ export function evaluateUni<T>(F: Field<T>, f: Univariate<T>, x: T): T {
 /** f(g(x)). */
 export function composeUni<T>(F: Field<T>, f: Univariate<T>, g: Univariate<T>): Univariate<T> {
   return f.reduceRight<Univariate<T>>((total, c) => addUni(F, mulUni(F, total, g), [c]), []);
-}
-
-/** f^n modulo m. */
-export function powerModulo<T>(F: Field<T>, f: Univariate<T>, n: bigint, m: Univariate<T>): Univariate<T> {
-  let base = divideUni(F, f, m).remainder;
-  let result: Univariate<T> = divideUni(F, [F.one], m).remainder;
-  for (let rest = n; rest > 0n; rest >>= 1n) {
-    if (rest & 1n) result = divideUni(F, mulUni(F, result, base), m).remainder;
-    if (rest > 1n) base = divideUni(F, mulUni(F, base, base), m).remainder;
-  }
-  return result;
 }

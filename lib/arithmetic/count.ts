@@ -2,9 +2,6 @@
 
 import type { IntegerModel } from "./minimal.ts";
 
-/** Largest p for which a product of two residues plus one stays exact. */
-export const PLAIN_LIMIT = 2 ** 26;
-
 /** Residues of integers modulo a small prime. */
 export function residues(a: IntegerModel, p: number): number[] {
   const P = BigInt(p);

@@ -8,7 +8,7 @@ import {
   divisionPolynomials,
   primitiveDivisionPolynomial,
 } from "../curve/division.ts";
-import { type Affine, multiplyPoint, samePoint } from "../curve/group.ts";
+import { multiplyPoint, samePoint } from "../curve/group.ts";
 import { pointsOverX } from "../curve/lift.ts";
 import type { Coefficients } from "../curve/weierstrass.ts";
 import type { Rational } from "../number/rational.ts";
@@ -35,9 +35,4 @@ export function pointsOfOrder(
 ): RationalPoint[] {
   const roots = rationalRoots(primitiveDivisionPolynomial(Q, polynomials, n));
   return roots.flatMap((x) => pointsOverX(Q, a, x));
-}
-
-/** True if n·P is O. */
-export function killedBy(a: Coefficients<Rational>, n: number, P: Affine<Rational>): boolean {
-  return multiplyPoint(Q, a, BigInt(n), P) === undefined;
 }

@@ -4,6 +4,7 @@ import { exactSqrt, modulo } from "../algebra/integer.ts";
 import { type Polynomial, sortedTerms } from "../algebra/multivariate.ts";
 import { primitivePart } from "../algebra/rationalroots.ts";
 import { gcd, Rational } from "../number/rational.ts";
+import type { IntegerModel } from "./minimal.ts";
 
 interface IntegerForm {
   /** Coefficients with the exponents of the three letters. */
@@ -128,4 +129,31 @@ function ofHeight(size: number): [number, number][] {
   for (let n = 1; n < size; n++) list.push([size, n], [-size, n]);
   for (let m = 1; m <= size; m++) list.push([m, size], [-m, size]);
   return list;
+}
+
+/**
+ * The points of an integral model with x = m/e², |m| and e² at most `height`, smallest first, one of ±P each.
+ * Cost     height^(3/2) square tests.
+ * Source   the denominator of x on an integral model is a square (Silverman AEC VII.3.4).
+ */
+export function searchWeierstrass(
+  [a1, a2, a3, a4, a6]: IntegerModel,
+  height: number,
+): (readonly [Rational, Rational])[] {
+  const b2 = a1 * a1 + 4n * a2;
+  const b4 = a1 * a3 + 2n * a4;
+  const b6 = a3 * a3 + 4n * a6;
+  const found: { readonly size: number; readonly P: readonly [Rational, Rational] }[] = [];
+  for (let e = 1n; e * e <= height; e++) {
+    const [e2, e3] = [e * e, e ** 3n];
+    const [p, q, r] = [b2 * e2, 2n * b4 * e2 * e2, b6 * e3 * e3];
+    for (let m = -BigInt(height); m <= height; m++) {
+      const root = exactSqrt(((4n * m + p) * m + q) * m + r);
+      if (root === undefined || gcd(m, e) !== 1n) continue;
+      // 2y + a1x + a3 = root/e³
+      const y = Rational.of(root - a1 * m * e - a3 * e3, 2n * e3);
+      found.push({ size: Math.max(Math.abs(Number(m)), Number(e2)), P: [Rational.of(m, e2), y] });
+    }
+  }
+  return found.sort((s, t) => s.size - t.size || t.P[0].compare(s.P[0])).map(({ P }) => P);
 }

@@ -13,7 +13,7 @@ import {
   subUni,
   type Univariate,
 } from "../algebra/univariate.ts";
-import { divisionPolynomials, phi, psiSquared } from "./division.ts";
+import { divisionPolynomials } from "./division.ts";
 import { type Coefficients, invariantsOf, type ModelChange } from "./weierstrass.ts";
 
 /** A finite subgroup of odd or even order, by the abscissas of its points. */
@@ -260,32 +260,6 @@ export function dualChange<T>(F: Field<T>, from: Coefficients<T>, to: Coefficien
   const r = F.mul(third, sum(F, F.mul(u2, to[1]), F.neg(from[1]), F.mul(s, from[0]), F.mul(s, s)));
   const t = F.mul(half, sum(F, F.mul(F.mul(u2, u), to[2]), F.neg(from[2]), F.neg(F.mul(r, from[0]))));
   return { u, r, s, t };
-}
-
-/** Whether second∘first is multiplication by n up to the model's scale: X2(X1(x)) = n²·x(nP) + shift, by exact substitution. */
-export function composesToMultiple<T>(
-  F: Field<T>,
-  a: Coefficients<T>,
-  first: Isogeny<T>,
-  second: Isogeny<T>,
-  change: ModelChange<T>,
-): boolean {
-  const n = first.degree;
-  const polynomials = divisionPolynomials(F, a);
-  const [above, below] = [phi(F, polynomials, n), psiSquared(F, polynomials, n)];
-  const [N1, D1] = [first.numerator, denominatorOf(F, first)];
-  const [N2, D2] = [second.numerator, denominatorOf(F, second)];
-  const degree = Math.max(N2.length, D2.length) - 1;
-  const homogeneous = (f: Univariate<T>) =>
-    f.reduce<Univariate<T>>(
-      (total, c, k) => addUni(F, total, scaleUni(F, c, mulUni(F, powUni(F, N1, k), powUni(F, D1, degree - k)))),
-      [],
-    );
-  const [N, D] = [homogeneous(N2), homogeneous(D2)];
-  // X2(X1(x)) = u² x(nP) + r.
-  const u2 = F.mul(change.u, change.u);
-  const expected = addUni(F, scaleUni(F, u2, above), scaleUni(F, change.r, below));
-  return subUni(F, mulUni(F, N, below), mulUni(F, expected, D)).length === 0;
 }
 
 /** The abscissas of a kernel as one squarefree polynomial. */

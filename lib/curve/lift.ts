@@ -1,7 +1,6 @@
 // The points of a model over a given x or y.
 
-import { type Field, fraction, square, sum } from "../algebra/field.ts";
-import type { Univariate } from "../algebra/univariate.ts";
+import { type Field, fraction, square } from "../algebra/field.ts";
 import { type Coefficients, residual } from "./weierstrass.ts";
 
 /**
@@ -19,10 +18,4 @@ export function pointsOverX<T>(F: Field<T>, a: Coefficients<T>, x: T): (readonly
   const half = fraction(F, 1n, 2n);
   const at = (r: T): readonly [T, T] => [x, F.mul(half, F.sub(r, linear))];
   return F.isZero(root) ? [at(root)] : [at(root), at(F.neg(root))];
-}
-
-/** x³ + a2x² + (a4 − a1y)x + a6 − y² − a3y, whose roots are the x of the points with the given y. */
-export function cubicOverY<T>(F: Field<T>, [a1, a2, a3, a4, a6]: Coefficients<T>, y: T): Univariate<T> {
-  const constant = sum(F, a6, F.neg(square(F, y)), F.neg(F.mul(a3, y)));
-  return [constant, F.sub(a4, F.mul(a1, y)), a2, F.one];
 }

@@ -54,10 +54,6 @@ export interface ModelChange<T> {
   readonly t: T;
 }
 
-export function identityChange<T>(F: Field<T>): ModelChange<T> {
-  return { u: F.one, r: F.zero, s: F.zero, t: F.zero };
-}
-
 /** Coefficients of the new model. Source: Silverman AEC III.1, Table 3.1. */
 export function changeModel<T>(F: Field<T>, a: Coefficients<T>, { u, r, s, t }: ModelChange<T>): Coefficients<T> {
   const [a1, a2, a3, a4, a6] = a;
@@ -88,18 +84,6 @@ export function changeModel<T>(F: Field<T>, a: Coefficients<T>, { u, r, s, t }: 
   const v3 = F.mul(v2, v);
   const v6 = square(F, v3);
   return [F.mul(v, b1), F.mul(v2, b2), F.mul(v3, b3), F.mul(square(F, v2), b4), F.mul(v6, b6)];
-}
-
-/** The change of model that first does one, then another. */
-export function composeChanges<T>(F: Field<T>, first: ModelChange<T>, second: ModelChange<T>): ModelChange<T> {
-  const u2 = square(F, first.u);
-  const u3 = F.mul(u2, first.u);
-  return {
-    u: F.mul(first.u, second.u),
-    r: F.add(first.r, F.mul(u2, second.r)),
-    s: F.add(first.s, F.mul(first.u, second.s)),
-    t: sum(F, first.t, F.mul(u3, second.t), F.mul(first.s, F.mul(u2, second.r))),
-  };
 }
 
 /** The change back from the new model to the old. */

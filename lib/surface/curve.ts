@@ -28,7 +28,7 @@ import type { Lattice } from "./lattice.ts";
 import type { Morphism } from "./morphism.ts";
 import { indexOf, pairingOf } from "./pairing.ts";
 import { type AnyPoint, Point } from "./point.ts";
-import { type TorsionSubgroup, torsionOf } from "./torsion.ts";
+import { rationalPoints, type TorsionSubgroup, torsionOf } from "./torsion.ts";
 import type { TorusPoint } from "./torus-point.ts";
 import { exponentialOf, latticeOf, logarithmOf, noTorus } from "./uniformise.ts";
 
@@ -171,6 +171,23 @@ export class Curve<T = Rational> {
   /** The torsion subgroup of E(Q), with generators and its proof. */
   torsion(): TorsionSubgroup {
     return torsionOf(this.#rational("torsion"));
+  }
+
+  /**
+   * The rational points whose x on the minimal model is m/e² with |m| and e² at most `height`, one of ±P each, smallest first: a search,
+   * which proves nothing about larger points.
+   */
+  points({ height }: { readonly height: number }): Point[] {
+    const E = this.#rational("points");
+    if (!Number.isSafeInteger(height) || height < 1 || height > 20_000) {
+      throw new DomainError({
+        subject: "points",
+        given: `height ${height}`,
+        expected: "an integer from 1 to 20000",
+        argument: "height",
+      });
+    }
+    return rationalPoints(E, height);
   }
 
   /**

@@ -1,7 +1,7 @@
 // What a map needs of the curves at its ends: a model, and points as projective coordinates and back.
 
-import type { Coordinates, Model } from "../curve/map/model.ts";
-import { toAffine, toCoordinates, weierstrassModel } from "../curve/map/weierstrassmodel.ts";
+import type { Coordinates } from "../curve/map/model.ts";
+import { toAffine, toCoordinates } from "../curve/map/weierstrassmodel.ts";
 import { DomainError } from "../proof/errors.ts";
 import { Curve } from "./curve.ts";
 import { Point } from "./point.ts";
@@ -12,10 +12,6 @@ export type Variety<T> = Curve<T> | PlaneCurve<T>;
 // biome-ignore lint/suspicious/noExplicitAny: points of a curve name its field in both directions, so no other argument fits all curves
 export type AnyVariety = Variety<any>;
 export type PointOf<V> = V extends Curve<infer T> ? Point<T> : V extends PlaneCurve<infer T> ? PlanePoint<T> : never;
-
-export function modelOf<T>(variety: Variety<T>): Model<T> {
-  return variety instanceof Curve ? weierstrassModel(variety.field, variety.a) : variety.model;
-}
 
 /** Projective coordinates of a point of the curve. Throws DomainError for a point of another one. */
 export function coordinatesOn<T>(variety: Variety<T>, P: Point<T> | PlanePoint<T>, subject: string): Coordinates<T> {

@@ -2,6 +2,7 @@
 
 import { rationals as Q } from "../algebra/rationals.ts";
 import { globalMinimalModel } from "../arithmetic/minimal.ts";
+import { searchWeierstrass } from "../arithmetic/search.ts";
 import { type ReductionCount, type TorsionGroup, torsionSubgroup } from "../arithmetic/torsion.ts";
 import { changePoint, invertChange } from "../curve/weierstrass.ts";
 import type { Curve } from "./curve.ts";
@@ -65,4 +66,11 @@ export function torsionOf(E: Curve): TorsionSubgroup {
   const back = invertChange(Q, change);
   const carried = (points: TorsionGroup["points"]) => points.map((P) => new Point(E, changePoint(Q, back, P)));
   return new TorsionSubgroup(group, carried(group.generators), carried(group.points));
+}
+
+/** The points of small height on the minimal model, carried back to the model of E. */
+export function rationalPoints(E: Curve, height: number): Point[] {
+  const { a, change } = globalMinimalModel(E.a);
+  const back = invertChange(Q, change);
+  return searchWeierstrass(a, height).map((P) => new Point(E, changePoint(Q, back, P)));
 }

@@ -10,12 +10,10 @@ import {
   evaluateIn,
   homogenise,
   isZero,
-  mapCoefficients,
   multiply,
   type Polynomial,
   substitute,
   subtract,
-  unpack,
   variable,
 } from "../../algebra/multivariate.ts";
 import { constantSeries, orderOf, type Series, seriesRing } from "../../algebra/series.ts";
@@ -131,16 +129,4 @@ export function isIdentity<T>({ from, forms }: FormMap<T>): boolean {
 
 function powerOf<T>(F: Field<T>, f: Polynomial<T>, n: number): Polynomial<T> {
   return n === 1 ? f : multiply(F, f, f);
-}
-
-/** The map with its forms carried to another field, and the models given there. */
-export function carryForms<S, T>(F: Field<T>, forms: readonly Polynomial<S>[], carry: (c: S) => T): Polynomial<T>[] {
-  return forms.map((f) => mapCoefficients(F, f, carry));
-}
-
-/** Weighted degree of a form in the letters of a model. */
-export function weightedDegree<T>(model: Model<T>, f: Polynomial<T>): number {
-  const key = [...f.terms.keys()][0];
-  if (key === undefined) return 0;
-  return unpack(key, model.variables.length).reduce((total, n, k) => total + n * model.weights[k]!, 0);
 }

@@ -15,7 +15,6 @@ export interface Model<T> {
   /** 1 for each letter, except 2 for y of y² = quartic(x, z). */
   readonly weights: readonly number[];
   readonly equations: readonly Polynomial<T>[];
-  /** Letter put to 1 where the curve is written affinely; the last one. */
 }
 
 /** Projective coordinates, one a letter, not all zero. */

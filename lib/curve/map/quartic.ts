@@ -1,6 +1,6 @@
 // y² = quartic with a rational point as a long Weierstrass model, with the maps there and back.
 
-import { cube, divide, type Field, fraction, scale, square, sum } from "../../algebra/field.ts";
+import { divide, type Field, fraction, scale, square } from "../../algebra/field.ts";
 import {
   add,
   fromTerms,
@@ -161,20 +161,4 @@ function throughRoot<T>(F: Field<T>, [a, b, c, d]: QuarticCoefficients<T>): Quar
     ],
   };
   return { a: model, to, from };
-}
-
-/** Δ of the quartic up to a factor: zero exactly if it has a double root (or degree below 3). */
-export function quarticDiscriminant<T>(F: Field<T>, I: T, J: T): T {
-  return sum(F, scale(F, 4, cube(F, I)), F.neg(square(F, J)));
-}
-
-/** The value of a x⁴ + ... + e z⁴. */
-export function quarticValue<T>(F: Field<T>, q: QuarticCoefficients<T>, x: T, z: T): T {
-  return q.reduce((total, c, k) => F.add(total, F.mul(c, F.mul(pow(F, x, 4 - k), pow(F, z, k)))), F.zero);
-}
-
-function pow<T>(F: Field<T>, x: T, n: number): T {
-  let result = F.one;
-  for (let k = 0; k < n; k++) result = F.mul(result, x);
-  return result;
 }

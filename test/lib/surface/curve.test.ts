@@ -44,6 +44,15 @@ describe("curves over Q", () => {
     expect(refusal).toContain(group);
   });
 
+  it("points up to height 10 of y² + y = x³ − x — oracle: multiples of (0, 0) in the printed table", () => {
+    const E = curve`y^2 + y = x^3 - x`;
+    const found = E.points({ height: 10 }).map((P) => P.x.toString());
+    expect(found).toEqual(["1", "0", "-1", "2", "1/4", "6", "-5/9"]);
+    for (const P of E.points({ height: 10 })) expect(E.point(P.x, P.y).equals(P)).toBe(true);
+    const moved = curve`y^2 = 4x^3 - 4x + 1`; // the same curve, y = 2Y
+    expect(moved.points({ height: 10 }).length).toBe(7);
+  });
+
   it("points of two curves do not add, and both equations are shown", () => {
     const P = curve`y^2 + y = x^3 - x`.point(0, 0);
     const Q = curve`y^2 = x^3 - x`.point(0, 0);

@@ -29,7 +29,7 @@ function clearer(): { rung: Rung; clear: () => void } {
   ];
   for (const [rung, attempt] of attempts) {
     try {
-      const wrap = attempt();
+      const wrap = quietly(attempt);
       const clear = wrap.clearAsyncIdStack;
       if (clear) return { rung, clear };
     } catch {
@@ -37,6 +37,17 @@ function clearer(): { rung: Rung; clear: () => void } {
     }
   }
   return { rung: "none", clear: () => {} };
+}
+
+/** Without the warning that Node gives at the door of its internals. */
+function quietly<T>(load: () => T): T {
+  const { emitWarning } = process;
+  process.emitWarning = () => {};
+  try {
+    return load();
+  } finally {
+    process.emitWarning = emitWarning;
+  }
 }
 
 /** What the stop protocol needs of the running session. */

@@ -3,7 +3,7 @@ import path from "node:path";
 import type { Browser, Page } from "playwright-core";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { openBrowser } from "./chromium.ts";
-import { demoNotebooks } from "./demo.ts";
+import { demoNotebooks, storedFigures } from "./demo.ts";
 import { artefacts, CHROMIUM, type HostPlace, makePlace, missing } from "./hosts.ts";
 import { NOTEBOOK_PROGRAM, type NotebookServer, startNotebookServer } from "./notebook-server.ts";
 
@@ -29,28 +29,26 @@ describe.skipIf(absent !== "")("the classic notebook in Chromium", () => {
     place?.remove();
   });
 
-  it.each(demoNotebooks.map((file) => path.basename(file)))(
-    "opens %s, runs all cells, typesets and draws",
-    async (name) => {
-      const page = await browser.newPage({ viewport: { width: 1100, height: 1000 } });
-      page.setDefaultTimeout(60_000);
-      await page.goto(server.url(`notebooks/${name}`));
-      await untilKernelIsReady(page);
-      await page.evaluate("Jupyter.notebook.clear_all_output(); Jupyter.notebook.execute_all_cells()");
-      await untilAllHaveRun(page);
-      await untilTypeset(page);
-      const seen = await look(page);
-      await photograph(page, path.join(artefacts, `classic-${path.basename(name, ".ipynb")}.png`));
-      expect(seen.errors).toEqual([]);
-      expect(seen.counts).toEqual(seen.counts.map((_: unknown, index: number) => index + 1));
-      expect(seen.typesetOutputs).toBeGreaterThanOrEqual(5);
-      expect(seen.mathErrors).toEqual([]);
-      expect(seen.figures).toBeGreaterThanOrEqual(2);
-      expect(seen.emptyFigures).toBe(0);
-      expect(seen.tables).toBeGreaterThanOrEqual(1);
-      await page.close();
-    },
-  );
+  it.each(demoNotebooks)("opens %s, runs all cells, typesets and draws", async (file) => {
+    const name = path.basename(file);
+    const page = await browser.newPage({ viewport: { width: 1100, height: 1000 } });
+    page.setDefaultTimeout(60_000);
+    await page.goto(server.url(`notebooks/${name}`));
+    await untilKernelIsReady(page);
+    await page.evaluate("Jupyter.notebook.clear_all_output(); Jupyter.notebook.execute_all_cells()");
+    await untilAllHaveRun(page);
+    await untilTypeset(page);
+    const seen = await look(page);
+    await photograph(page, path.join(artefacts, `classic-${path.basename(name, ".ipynb")}.png`));
+    expect(seen.errors).toEqual([]);
+    expect(seen.counts).toEqual(seen.counts.map((_: unknown, index: number) => index + 1));
+    expect(seen.typesetOutputs).toBeGreaterThanOrEqual(5);
+    expect(seen.mathErrors).toEqual([]);
+    expect(seen.figures).toBe(storedFigures(file));
+    expect(seen.emptyFigures).toBe(0);
+    expect(seen.tables).toBeGreaterThanOrEqual(1);
+    await page.close();
+  });
 });
 
 async function untilKernelIsReady(page: Page): Promise<void> {

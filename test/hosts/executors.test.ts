@@ -3,7 +3,7 @@ import path from "node:path";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { readNotebook } from "../../kernel/notebook/file.ts";
 import { isCode } from "../../kernel/notebook/format.ts";
-import { demoNotebooks } from "./demo.ts";
+import { demoNotebooks, storedFigures } from "./demo.ts";
 import { artefacts, type HostPlace, makePlace, missing, PYTHON, root, run } from "./hosts.ts";
 
 const absent = missing(
@@ -35,7 +35,7 @@ describe.skipIf(absent !== "")("executors without a front end", () => {
       const outputs = code.flatMap((cell) => cell.outputs);
       expect(outputs.filter((output) => output.output_type === "error")).toEqual([]);
       const mimes = outputs.flatMap((output) => ("data" in output ? Object.keys(output.data) : []));
-      expect(mimes.filter((mime) => mime === "image/svg+xml").length).toBeGreaterThanOrEqual(2);
+      expect(mimes.filter((mime) => mime === "image/svg+xml").length).toBe(storedFigures(file));
       expect(mimes).toContain("text/latex");
       expect(metadata.language_info).toMatchObject({ name: "typescript" });
     },
@@ -46,7 +46,7 @@ describe.skipIf(absent !== "")("executors without a front end", () => {
     const args = ["-m", "nbconvert", "--execute", "--to", "html", "--output-dir", artefacts, "--output", name, file];
     await run(PYTHON, args, place.env);
     const html = readFileSync(path.join(artefacts, `${name}.html`), "utf8");
-    expect(html.match(/<svg\b/g)?.length).toBeGreaterThanOrEqual(2);
+    expect(html.match(/<svg\b/g)?.length).toBe(storedFigures(file));
     expect(html.match(/class="jp-RenderedLatex/g)?.length).toBeGreaterThanOrEqual(5);
     expect(html.match(/data-mime-type="application\/vnd\.jupyter\.stderr"/g)).toBeNull();
   });

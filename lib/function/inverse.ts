@@ -86,21 +86,25 @@ function schedule(prec: number): number[] {
 }
 
 interface Difference {
+  /** The start, turned to the side of ℘′ that y is on. */
+  readonly z: Disc;
   readonly kappa: Disc;
   readonly s: Disc;
   readonly T: Disc;
 }
 
-function difference({ l, g2 }: Context, { x, y }: CubicPoint, z: Disc, wp: number): Difference {
-  const at = weierstrass(l, z, wp, ["wp", "prime"]);
-  const [X, Y] = [at.wp!, at.prime!];
+function difference({ l, g2 }: Context, { x, y }: CubicPoint, start: Disc, wp: number): Difference {
+  const at = weierstrass(l, start, wp, ["wp", "prime"]);
+  const X = at.wp!;
+  const turned = disc.mul(midpoint(at.prime!), disc.conj(midpoint(y)), 60).re < 0n;
+  const [z, Y] = turned ? [disc.neg(start), disc.neg(at.prime!)] : [start, at.prime!];
   const s = disc.add(x, X, wp);
   const kappa = reciprocalSlope(g2, { x, y }, { x: X, y: Y }, s, wp);
   const four = disc.ldexp(disc.sqr(kappa, wp), 2);
   const top = disc.sub(disc.one, disc.mul(s, four, wp), wp);
   const inner = disc.sub(disc.mul(y, kappa, wp), disc.add(s, x, wp), wp);
   const bottom = disc.add(disc.one, disc.mul(four, inner, wp), wp);
-  return { kappa, s, T: disc.mul(disc.ldexp(kappa, 1), disc.div(top, bottom, wp), wp) };
+  return { z, kappa, s, T: disc.mul(disc.ldexp(kappa, 1), disc.div(top, bottom, wp), wp) };
 }
 
 /** κ by the quotient whose denominator is the larger one beside its scale. */
@@ -116,11 +120,12 @@ function reciprocalSlope(g2: Disc, p: CubicPoint, q: CubicPoint, s: Disc, wp: nu
 }
 
 function step(context: Context, point: CubicPoint, z: Disc, wp: number): Disc {
-  return disc.add(z, difference(context, point, z, wp).T, wp);
+  const { z: turned, T } = difference(context, point, z, wp);
+  return disc.add(turned, T, wp);
 }
 
-function certifiedStep(context: Context, point: CubicPoint, z: Disc, wp: number): Disc | undefined {
-  const { kappa, s, T } = difference(context, point, z, wp);
+function certifiedStep(context: Context, point: CubicPoint, start: Disc, wp: number): Disc | undefined {
+  const { z, kappa, s, T } = difference(context, point, start, wp);
   // |x_D| >= 1/(4|κ|²) − |s| >= 65/unit²
   const bound = ball.add(disc.abs(s, 53), ball.div(ball.fromInt(65), ball.mul(context.unit, context.unit, 53), 53), 53);
   const k = disc.abs(kappa, 53);
@@ -147,8 +152,8 @@ type Pair = readonly [number, number];
 
 /**
  * A start for z. Where |x r1²| is large, −2x/y. Else Carlson's duplication for RF(x−e1, x−e2, x−e3) (DLMF 19.25.35), in doubles or, if bits to
- * spare are asked for, with exponents of any size; the sign is settled by ℘′ there. A root on its cut counts as just above it: one
- * path of integration is as good as any other.
+ * spare are asked for, with exponents of any size; the sign is settled by ℘′ in the next step. A root on its cut counts as just above it:
+ * one path of integration is as good as any other.
  */
 function start(l: ReducedLattice, { x, y }: CubicPoint, spare: number): Disc {
   const wp = 120 + spare;
@@ -157,10 +162,7 @@ function start(l: ReducedLattice, { x, y }: CubicPoint, spare: number): Disc {
   if (disc.magnitude(scaled) > 20) return midpoint(disc.neg(disc.ldexp(disc.div(x, y, 60), 1)));
   const differences = reducedRoots(l).map((e) => midpoint(disc.mul(disc.sub(x, e, wp), square, wp)));
   const v = spare === 0 ? carlson(differences.map((d) => disc.toDouble(d) as Pair)) : wideCarlson(differences);
-  const z = disc.mul(v, midpoint(l.r1), 60);
-  const prime = weierstrass(l, midpoint(z), 60 + spare, ["prime"]).prime!;
-  const agree = disc.mul(prime, disc.conj(y), 60);
-  return midpoint(agree.re >= 0n ? z : disc.neg(z));
+  return midpoint(disc.mul(v, midpoint(l.r1), 60));
 }
 
 /** The same with midpoints of enclosures, until the arguments agree to 20 bits: then 1/√mean is right to 40. */
@@ -201,6 +203,9 @@ function root([a, b]: Pair): Pair {
 
 const times = ([a, b]: Pair, [c, d]: Pair): Pair => [a * c - b * d, a * d + b * c];
 
+const size = ([a, b]: Pair): number => Math.abs(a) + Math.abs(b);
+const gap = ([a, b]: Pair, [c, d]: Pair): number => Math.abs(a - c) + Math.abs(b - d);
+
 function carlson(differences: readonly Pair[]): Disc {
   let args = differences;
   for (let n = 0; n < 60; n++) {
@@ -208,6 +213,8 @@ function carlson(differences: readonly Pair[]): Disc {
     const [pq, qr, rp] = [times(p, q), times(q, r), times(r, p)];
     const lambda: Pair = [pq[0] + qr[0] + rp[0], pq[1] + qr[1] + rp[1]];
     args = args.map((s): Pair => [(s[0] + lambda[0]) / 4, (s[1] + lambda[1]) / 4]);
+    // The mean is then right to about 10^-9, and the first step of the refinement needs 10^-4.
+    if (Math.max(gap(args[0]!, args[1]!), gap(args[0]!, args[2]!)) < 3e-5 * size(args[0]!)) break;
   }
   const mean: Pair = [(args[0]![0] + args[1]![0] + args[2]![0]) / 3, (args[0]![1] + args[1]![1] + args[2]![1]) / 3];
   const [u, w] = root(mean);

@@ -95,7 +95,9 @@ export function complexPeriods(roots: CubicRoots, prec: number): PeriodPair {
  */
 export function rightMean(a: Disc, b: Disc, wp: number): Disc {
   for (let step = 0; step < 200; step++) {
-    if (awayFrom(a, b, wp)) b = disc.neg(b);
+    // The argument of the header for signs that stay open asks for this much.
+    if (Math.min(disc.bits(a), disc.bits(b)) < 20) throw tooCoarse();
+    if (awayFrom(a, b)) b = disc.neg(b);
     const sum = disc.add(a, b, wp);
     const difference = disc.sub(a, b, wp);
     const near = lowMagnitude(sum) - disc.magnitude(difference);
@@ -108,7 +110,7 @@ export function rightMean(a: Disc, b: Disc, wp: number): Disc {
 }
 
 /** Re(b conj a) < 0 for the midpoints, the imaginary part of b/a deciding an exact tie. */
-function awayFrom(a: Disc, b: Disc, _wp: number): boolean {
+function awayFrom(a: Disc, b: Disc): boolean {
   const dot = a.re * b.re + a.im * b.im;
   return dot < 0n || (dot === 0n && a.re * b.im - a.im * b.re < 0n);
 }

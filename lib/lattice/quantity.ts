@@ -4,9 +4,10 @@ import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { JOIN } from "../number/operations.ts";
-import { asDisc, type Node, type NumberStanding, refinable, refineEnclosure } from "../number/origin.ts";
+import { asDisc, evaluate, type Node, type NumberStanding, refinable, refineEnclosure } from "../number/origin.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
+import { PrecisionError } from "../proof/errors.ts";
 
 export type Quantity = Rational | ExactComplex | Node;
 
@@ -26,11 +27,21 @@ export function discOf(q: Quantity, prec: number): Disc {
   if (q instanceof Rational) return disc.fromRational(q, prec);
   if (!isExactComplex(q)) {
     const exact = exactComplex(q);
-    return exact ? discOf(exact, prec) : asDisc(refineEnclosure(q, prec));
+    return exact ? discOf(exact, prec) : refined(q, prec);
   }
   if (q.root === 1n) return disc.fromRational(q.real, prec, q.imag);
   const height = ball.mul(ball.fromRational(q.imag, prec + 8), ball.sqrt(ball.fromInt(q.root), prec + 8), prec + 8);
   return disc.fromBalls(ball.fromRational(q.real, prec + 8), height, prec);
+}
+
+/** To prec relative bits; a number that cannot be told from 0 as it comes out with prec bits throughout. */
+function refined(q: Node, prec: number): Disc {
+  try {
+    return asDisc(refineEnclosure(q, prec));
+  } catch (error) {
+    if (error instanceof PrecisionError) return asDisc(evaluate(q, prec + 32));
+    throw error;
+  }
 }
 
 /** The exact rational value, if it is known. */

@@ -5,9 +5,12 @@ import { type Coefficients, residual } from "./weierstrass.ts";
 
 /**
  * The points with the given x: none, one (of order two) or two, the one with the larger square root first.
- * Domain   characteristic not 2.
+ * In characteristic 2 (the field F_2) both values of y are tried.
  */
 export function pointsOverX<T>(F: Field<T>, a: Coefficients<T>, x: T): (readonly [T, T])[] {
+  if (F.characteristic === 2n) {
+    return [F.zero, F.one].filter((y) => F.isZero(residual(F, a, x, y))).map((y) => [x, y] as const);
+  }
   const [a1, , a3] = a;
   const linear = F.add(F.mul(a1, x), a3);
   // (2y + a1x + a3)² = (a1x + a3)² + 4(x³ + a2x² + a4x + a6)

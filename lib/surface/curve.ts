@@ -208,6 +208,7 @@ export class Curve<T = Rational> {
 
   /** The quadratic twist by d; over Q its minimal model. */
   twist(d: ExactInput | T): Curve<T> {
+    this.#requireShortForm("twist");
     const F = this.field;
     const factor = this.#element("d", d);
     if (F.isZero(factor)) {
@@ -219,6 +220,7 @@ export class Curve<T = Rational> {
 
   /** The isomorphism to another curve over the same field, or undefined if there is none (equal j: they may be twists). */
   isomorphism(other: Curve<T>): Morphism<Curve<T>, Curve<T>> | undefined {
+    this.#requireShortForm("isomorphism");
     const F = this.field;
     const change = F.name === other.field.name ? isomorphisms(F, this.a, other.a)[0] : undefined;
     return change && changeMorphism(this, other, change);
@@ -272,6 +274,7 @@ export class Curve<T = Rational> {
    * Source   Vélu 1971.
    */
   isogeny({ kernel }: { readonly kernel: KernelInput<T> }): Morphism<Curve<T>, Curve<T>> {
+    this.#requireShortForm("isogeny");
     return isogenyWithKernel(this, kernel);
   }
 
@@ -293,6 +296,18 @@ export class Curve<T = Rational> {
     if (field === "R") return this.carriedTo(reals);
     if (field === "C") return this.carriedTo(complexes);
     return this.carriedTo(quadraticField(field.d));
+  }
+
+  /** The formulas of maps divide by 2 and 3. */
+  #requireShortForm(subject: string): void {
+    const p = this.field.characteristic;
+    if (p !== 2n && p !== 3n) return;
+    throw new DomainError({
+      subject,
+      given: `${this}`,
+      expected: "a field of characteristic 0 or above 3",
+      hint: "Its formulas divide by 2 and 3.",
+    });
   }
 
   #rational(subject: string): Curve {

@@ -95,6 +95,16 @@ describe("points over F_p", () => {
     }
   });
 
+  it("over F_2 and F_3 points are found, and maps refused in words — oracle: plain counting", () => {
+    const E = curve`y^2 + y = x^3 - x`;
+    for (const p of [2, 3]) {
+      const F = E.mod(p);
+      const found = Array.from({ length: p }, (_, x) => F.pointsWith({ x })).flat();
+      expect(BigInt(found.length + 1)).toBe(F.count);
+      expect(() => F.isogeny({ kernel: found[0]! })).toThrow(/characteristic 0 or above 3/);
+    }
+  });
+
   it("a bad prime is refused with the kind of reduction", () => {
     expect(() => curve`y^2 + y = x^3 - x`.mod(37)).toThrow(/bad reduction at 37.* a nonsplit node at \(5, 18\)/);
     expect(() => curve`y^2 + y = x^3 - x`.mod(6)).toThrow(/expected a prime/);

@@ -5,7 +5,7 @@ import { type Ball, containsZero as ballContainsZero, sign } from "../ball/data.
 import { exp as ballExp, radiusExponent } from "../ball/exp.ts";
 import { sinhCosh } from "../ball/hyperbolic.ts";
 import { sinCos as ballSinCos } from "../ball/trig.ts";
-import { absBig, bitLength, DOWN, scaledRadius, shift, UP } from "../fixed/bits.ts";
+import { absBig, bitLength, DOWN, scaledRadius, shift, size, sizePower, UP } from "../fixed/bits.ts";
 import { complexSqrt } from "../fixed/complex-sqrt.ts";
 import { mulBall, widenBy } from "./arithmetic.ts";
 import {
@@ -95,16 +95,23 @@ export function exp(x: Disc, prec: number): Disc {
   const angle = ballSinCos({ man: x.im, exp: x.exp, rad: x.axis === "imaginary" ? x.rad : 0 }, work);
   const turn = fromBalls(angle.cos, angle.sin, work);
   if (x.axis === "imaginary") return fromBalls(angle.cos, angle.sin, prec);
-  const size = ballExp({ man: x.re, exp: x.exp, rad: 0 }, work);
-  return moved(mulBall(turn, size, work), size, x, prec);
+  const modulus = ballExp({ man: x.re, exp: x.exp, rad: 0 }, work);
+  return moved(mulBall(turn, modulus, work), modulus, x, prec);
 }
 
-/** y widened by rate·2δ, where the function moves at most at `rate`·e^δ within the radius δ of x. */
+/** y widened by rate·(e^δ − 1), where the function moves at most at `rate`·e^t at the distance t <= δ from the midpoint of x. */
 function moved(y: Disc, rate: Ball, x: Disc, prec: number): Disc {
   if (x.rad === 0) return finish(y.re, y.im, y.exp, y.rad, prec);
+  const spread = radiusExponent(x);
+  if (spread <= -10) {
+    // e^δ − 1 <= (1 + 2^-9)δ, in ulps of y.
+    const top = size(rate.man, prec) + rate.rad;
+    const err = top * scaledRadius(x.rad, x.exp + rate.exp + sizePower() - y.exp) * (1 + 2 ** -9);
+    if (err < 2 ** 1000) return finish(y.re, y.im, y.exp, (y.rad + err) * UP, prec);
+  }
   const delta: Ball = { man: BigInt(Math.ceil(x.rad)), exp: x.exp, rad: 0 };
   // e^δ − 1 <= 2δ for δ <= 1; else e^δ itself.
-  const factor = radiusExponent(x) <= 0 ? real.ldexp(delta, 1) : ballExp(delta, 32);
+  const factor = spread <= 0 ? real.ldexp(delta, 1) : ballExp(delta, 32);
   return widenBy(y, real.mul(rate, factor, 32), prec, false);
 }
 

@@ -4,11 +4,10 @@ import { connect } from "node:net";
 import { Router, type SocketOptions, XPublisher } from "zeromq";
 import { CHANNELS, type Channel, type Connection, endpoint, socketFile } from "./connection.ts";
 import { ProtocolError } from "./errors.ts";
+import { LEAST_HELD } from "./patience.ts";
 
 /** How long a closed socket may go on sending what it holds, in ms. Without an end a stuck client would keep us alive. */
 const LINGER = 500;
-/** Messages that iopub holds for one subscriber before publishing waits for it: some MB of text. */
-const HELD = 64;
 
 export interface Sockets {
   readonly shell: Router;
@@ -64,7 +63,13 @@ function createSockets(connection: Connection): Sockets {
     shell: new Router(router),
     control: new Router(router),
     stdin: new Router(router),
-    iopub: new XPublisher({ ...shared, verbosity: "allSubs", sendHighWaterMark: HELD, sendTimeout: 0, noDrop: true }),
+    iopub: new XPublisher({
+      ...shared,
+      verbosity: "allSubs",
+      sendHighWaterMark: LEAST_HELD,
+      sendTimeout: 0,
+      noDrop: true,
+    }),
     hb: new Router(router),
   };
 }

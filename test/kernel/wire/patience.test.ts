@@ -10,6 +10,7 @@ function fakeSocket() {
   const socket = {
     closed: false,
     noDrop: true,
+    sendHighWaterMark: 64,
     full: 0,
     sent: [] as string[],
     async send([frame]: Buffer[]) {
@@ -22,7 +23,9 @@ function fakeSocket() {
   };
   return socket;
 }
-const frames = (text: string) => [Buffer.from(text)];
+// large, so that the socket is not allowed to hold more of them
+const LARGE = Buffer.alloc(33_000_000);
+const frames = (text: string) => [Buffer.from(text), LARGE];
 
 it("waits for a slow subscriber and loses nothing — oracle: the order sent", async () => {
   const socket = fakeSocket();
@@ -95,7 +98,7 @@ it("a subscriber that never reads is left behind, the others get all, and nobody
   }
   const sender = patiently(socket, async () => new Promise((resolve) => setTimeout(resolve, 0)));
   const [, reading] = clients as [Subscriber, Subscriber];
-  const block = Buffer.alloc(500_000);
+  const block = Buffer.alloc(2_000_000);
   for (let n = 0; n < 60; n += 1) {
     await sender.send([Buffer.from(String(n)), block]);
     expect(String((await reading.receive())[0])).toBe(String(n));
@@ -114,16 +117,36 @@ it("a subscriber that does not read holds the publisher back, not its memory; th
   slow.subscribe("");
   await wire.subscribed;
   const text = "x".repeat(100_000);
-  for (let n = 0; n < 400; n += 1) wire.publish({ type: "stream", content: { n, text } });
+  for (let n = 0; n < 1000; n += 1) wire.publish({ type: "stream", content: { n, text } });
   await new Promise((resolve) => setTimeout(resolve, 200));
   expect(wire.pendingBytes).toBeGreaterThan(10_000_000);
   const read: number[] = [];
-  while (read.length < 400) {
+  while (read.length < 1000) {
     const received = await slow.receive();
     if (String(received[0]) === "stream") read.push(JSON.parse(String(received[6])).n);
   }
-  expect(read).toEqual(Array.from({ length: 400 }, (_, n) => n));
+  expect(read).toEqual(Array.from({ length: 1000 }, (_, n) => n));
   expect(wire.pendingBytes).toBe(0);
   slow.close();
+  await wire.close();
+});
+
+it("a client that reads only at the end misses none of 20,000 small messages — oracle: what was published", async () => {
+  const fields = await freeConnection();
+  const wire = await openWire(parseConnection(JSON.stringify(fields), "k.json"));
+  const late = new Subscriber({ linger: 0, receiveHighWaterMark: 10, receiveTimeout: 3000 });
+  late.connect(`tcp://127.0.0.1:${fields.iopub_port}`);
+  late.subscribe("");
+  await wire.subscribed;
+  const text = "x".repeat(1000); // together more than the buffers of the connection take
+  for (let n = 0; n < 20_000; n += 1) wire.publish({ type: "status", content: { n, text } });
+  await wire.published();
+  expect(wire.pendingBytes).toBe(0);
+  let next = 0;
+  while (next < 20_000) {
+    const received = await late.receive();
+    if (String(received[0]) === "status") expect(JSON.parse(String(received[6])).n).toBe(next++);
+  }
+  late.close();
   await wire.close();
 });

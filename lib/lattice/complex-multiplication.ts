@@ -7,7 +7,7 @@ import * as ball from "../number/ball.ts";
 import * as disc from "../number/disc.ts";
 import type { Exact } from "../number/origin.ts";
 import { Quadratic } from "../number/quadratic.ts";
-import type { Rational } from "../number/rational.ts";
+import { gcd, type Rational } from "../number/rational.ts";
 import { reduced } from "./context.ts";
 import { exactFormOf } from "./exact-form.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
@@ -112,9 +112,4 @@ function quadraticText(a: bigint, b: bigint, c: bigint): string {
   const size = (n: bigint, name: string) => (name !== "" && (n === 1n || n === -1n) ? "" : `${n < 0n ? -n : n}`);
   const term = (n: bigint, name: string) => (n === 0n ? "" : ` ${n < 0n ? "−" : "+"} ${size(n, name)}${name}`);
   return `${a === 1n ? "" : a}X²${term(b, "X")}${term(c, "")}`;
-}
-
-function gcd(a: bigint, b: bigint): bigint {
-  while (b !== 0n) [a, b] = [b, a % b];
-  return a < 0n ? -a : a;
 }

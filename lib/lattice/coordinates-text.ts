@@ -1,4 +1,5 @@
 // Points of the lattice's plane in words: ω1/3, (ω1 + ω2)/2, 2ω1 − ω2.
+import { gcd } from "../number/rational.ts";
 import type { Coordinates } from "./torus.ts";
 
 /** The point r ω1 + s ω2 with one common denominator. */
@@ -18,9 +19,4 @@ export function latticePointText(m: bigint, n: bigint): string {
   if (m === 0n) return term(n, "ω2");
   if (n === 0n) return term(m, "ω1");
   return `${term(m, "ω1")} ${n < 0n ? "−" : "+"} ${term(n < 0n ? -n : n, "ω2")}`;
-}
-
-function gcd(a: bigint, b: bigint): bigint {
-  while (b !== 0n) [a, b] = [b, a % b];
-  return a;
 }

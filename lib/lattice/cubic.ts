@@ -159,9 +159,3 @@ function complexStart({ g2, g3 }: ScaledCubic): Disc {
   const best = roots.reduce((x, y) => (slope(y) > slope(x) * (1 + 1e-9) ? y : x));
   return disc.fromBalls(ball.fromDouble(best[0]), ball.fromDouble(best[1]));
 }
-
-/** Enclosure of g2³ − 27 g3²; loses accuracy near a double root, where exact coefficients should be subtracted exactly. */
-export function discriminantOf(g2: Disc, g3: Disc, prec: number): Disc {
-  const cube = disc.mul(disc.sqr(g2, prec + 8), g2, prec + 8);
-  return disc.sub(cube, disc.mulInt(disc.sqr(g3, prec + 8), 27n, prec + 8), prec);
-}

@@ -2,7 +2,7 @@ import { pointText } from "../lattice/coordinates-text.ts";
 import { POINT } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
 import { type Coordinates, nearestRepresentative } from "../lattice/torus.ts";
-import { Rational } from "../number/rational.ts";
+import { gcd, Rational } from "../number/rational.ts";
 import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
 
 /**
@@ -107,9 +107,4 @@ function rationalOf(x: ComplexNumeric): Rational | undefined {
   if (x instanceof TorusPoint) return undefined;
   const { exact } = scalar(x, "times");
   return exact instanceof Rational ? exact : undefined;
-}
-
-function gcd(a: bigint, b: bigint): bigint {
-  while (b !== 0n) [a, b] = [b, a % b];
-  return a;
 }

@@ -75,10 +75,6 @@ export function mulScalars(s: Scalar, t: Scalar, relations: Relations): Scalar {
   return product;
 }
 
-export function sameScalar(s: Scalar, t: Scalar): boolean {
-  return isZeroScalar(subScalars(s, t));
-}
-
 function put(sum: Map<string, Term>, term: Term): void {
   const key = term.powers.map(([name, e]) => (e === 1 ? name : `${name}^${e}`)).join(" ");
   const old = sum.get(key);

@@ -27,6 +27,7 @@ blockquote { margin-inline: 2rem; color: var(--soft); }
 hr { border: 0; border-top: 1px solid var(--line); width: 6rem; margin: 2.5rem auto; }
 code, pre { font-family: ${CODE}; font-size: 0.78em; font-variant-ligatures: none; }
 pre { line-height: 1.5; margin: 0; tab-size: 2; overflow-x: auto; }
+.code pre, pre.shown { white-space: pre-wrap; overflow-wrap: anywhere; }
 section.step { margin: 1.5rem 0 1.8rem; }
 .code { display: flex; align-items: baseline; gap: 1.2rem; border-left: 1px solid var(--line); padding: 0.1rem 0 0.1rem 1.1rem; margin-left: 0.1rem; }
 .code pre { flex: 1; min-width: 0; color: var(--soft); }
@@ -67,7 +68,8 @@ const PRINT = `
   :root { color-scheme: light; ${LIGHT} --paper: #fff; --ink: #000; }
   body { max-width: none; padding: 0; font-size: 10.5pt; line-height: 1.4; }
   h1 { font-size: 18pt; } h2 { font-size: 13pt; } h3 { font-size: 11pt; }
-  .code pre, pre.shown, .said, .failure pre { font-size: 7.8pt; white-space: pre-wrap; overflow-wrap: anywhere; }
+  .code pre, pre.shown, .said, .failure pre { font-size: 7.8pt; }
+  .said, .failure pre { white-space: pre-wrap; overflow-wrap: anywhere; }
   .shown, .stated, pre, section.prose math.tml-display { overflow: visible; }
   .shown { width: fit-content; max-width: 100%; margin-left: auto; transform: none; }
   .shown table { font-size: 8.5pt; }

@@ -4,12 +4,13 @@ import { weakest } from "../proof/standing.ts";
 import { Claim } from "../surface/claim-value.ts";
 import type { Derivation, Step } from "./derivation.ts";
 import type { Kind, Show } from "./kind.ts";
+import { plainFormulas } from "./plain-formula.ts";
 import { standingHead, standingTex, standingText } from "./standing.ts";
 import { array, small, texProse, texWords } from "./tex.ts";
 
 export const derivationKind: Kind<Derivation> = {
   text: (derivation, show) =>
-    [derivation.title.replace(/\$/g, ""), ...derivation.steps.map((step, k) => stepText(derivation, step, k, show))]
+    [plainFormulas(derivation.title), ...derivation.steps.map((step, k) => stepText(derivation, step, k, show))]
       .concat(summary(derivation))
       .join("\n"),
   tex: (derivation, show) => {
@@ -22,6 +23,7 @@ export const derivationKind: Kind<Derivation> = {
     title: derivation.title,
     steps: derivation.steps.map((step) => ({
       text: step.text,
+      ...(step.label ? { label: step.label } : {}),
       value: step.value === undefined ? null : show.data(step.value),
       check: step.check ? standingOf(step).kind : null,
     })),
@@ -33,12 +35,12 @@ function standingOf({ check }: Step) {
 }
 
 function stepText({ level }: Derivation, step: Step, index: number, show: Show): string {
-  const head = `(${index + 1}) ${step.text.replace(/\$/g, "")}`;
+  const head = `(${index + 1}) ${plainFormulas(step.text)}`;
   if (level === "outline") return head;
   const value = step.value === undefined ? [] : [`    ${show.text(step.value).replace(/\n/g, "\n    ")}`];
   if (level === "steps") return [head, ...value].join("\n");
-  const source = step.source ? [`    source: ${step.source}`] : [];
-  const check = step.check ? [`    check: ${standingText(standingOf(step))}`] : [];
+  const source = step.source ? [`    source: ${plainFormulas(step.source)}`] : [];
+  const check = step.check ? [`    ${plainFormulas(checkHead(step))}${standingText(standingOf(step))}`] : [];
   return [head, ...value, ...source, ...check].join("\n");
 }
 
@@ -57,9 +59,14 @@ function stepRows({ level }: Derivation, step: Step, index: number, show: Show):
           ["", `\\displaystyle ${whole}`],
         ];
   if (level === "steps") return rows;
-  const source = step.source ? [["", small(texWords(`source: ${step.source}`))]] : [];
-  const check = step.check ? [["", small(`${texWords("check: ")}${standingTex(standingOf(step))}`)]] : [];
+  const source = step.source ? [["", small(texProse(`source: ${step.source}`))]] : [];
+  const check = step.check ? [["", small(`${texProse(checkHead(step))}${standingTex(standingOf(step))}`)]] : [];
   return [...rows, ...source, ...check];
+}
+
+/** "check: " with the other way of computing, where one was taken. */
+function checkHead({ route }: Step): string {
+  return route ? `check: ${route}: ` : "check: ";
 }
 
 /** How the whole is known, if steps have checks. */

@@ -15,6 +15,10 @@ export interface StepParts {
   readonly source?: string;
   /** How the step is known: a claim, or a standing. */
   readonly check?: Claim | Standing;
+  /** The other way by which the check was made, in words. */
+  readonly route?: string;
+  /** A name by which text can cite the step, the same however many steps stand before it. */
+  readonly label?: string;
 }
 
 /** One step; its number is its place, and text can cite it as (3). */
@@ -42,6 +46,19 @@ export class Derivation {
   /** The same derivation, shown to another depth. */
   show(level: Level): Derivation {
     return new Derivation(this.title, this.steps, level);
+  }
+
+  /**
+   * The number of the step with a label, as "(3)", for running text.
+   * Throws   RangeError with the labels that there are.
+   */
+  cite(label: string): string {
+    const place = this.steps.findIndex((step) => step.label === label);
+    if (place >= 0) return `(${place + 1})`;
+    const labels = this.steps.flatMap((step) => step.label ?? []);
+    throw new RangeError(
+      `cite: no step has the label "${label}"; expected one of ${labels.join(", ") || "none: no step has one"}`,
+    );
   }
 
   /** How the checks of the steps are known; steps without a check are not counted. */

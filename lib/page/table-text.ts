@@ -1,5 +1,6 @@
 import { type Decimal, plainDecimal } from "./digits.ts";
 import type { Cell, Show } from "./kind.ts";
+import { plainFormulas } from "./plain-formula.ts";
 import type { Table } from "./table.ts";
 import type { Column, NumberWidths } from "./table-column.ts";
 import { layout } from "./table-layout.ts";
@@ -8,7 +9,7 @@ import { layout } from "./table-layout.ts";
 export function tableText(table: Table, show: Show): string {
   const { columns, rows, omitted } = layout(table, show);
   const body = rows.map((row) => columns.map((column, k) => cellText(row[k], column)));
-  const heads = columns.map(({ head }) => head.replace(/\$/g, ""));
+  const heads = columns.map(({ head }) => plainFormulas(head));
   const lines = heads.some((head) => head !== "") ? [heads, ...body] : body;
   const wide = columns.map((_, k) => Math.max(...lines.map((line) => width(line[k] ?? ""))));
   const text = lines.map((line) =>
@@ -18,7 +19,7 @@ export function tableText(table: Table, show: Show): string {
       .trimEnd(),
   );
   if (lines !== body) text.splice(1, 0, wide.map((n) => "-".repeat(n)).join("  "));
-  const caption = table.caption === "" ? [] : [table.caption.replace(/\$/g, "")];
+  const caption = table.caption === "" ? [] : [plainFormulas(table.caption)];
   return [...caption, ...text, ...(omitted > 0 ? [`... ${omitted} more rows`] : [])].join("\n");
 }
 

@@ -19,6 +19,7 @@ import type { Quadratic } from "../number/quadratic.ts";
 import { primitive, type Rational } from "../number/rational.ts";
 import type { Complex, ComplexNumeric, Numeric, Real } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
+import { remember } from "./behind.ts";
 import { type Coordinate, carry } from "./fields.ts";
 import { countOf, modCurve, reductionOf } from "./finite.ts";
 import { type ExactInput, elementOf } from "./input.ts";
@@ -119,7 +120,7 @@ export class Curve<T = Rational> {
    * Error    each digit shown is proved; more come on request, since the curve is exact.
    */
   lattice(): Lattice {
-    this.#lattice ??= latticeOf(this.#analytic("lattice"));
+    this.#lattice ??= remember(latticeOf(this.#analytic("lattice")), { curve: this as unknown as Curve });
     return this.#lattice;
   }
 
@@ -139,7 +140,7 @@ export class Curve<T = Rational> {
   logarithm(P: AnyPoint): Real | Complex | TorusPoint {
     this.#analytic("logarithm");
     const Q = P.minus(this.origin) as Point<Coordinate>; // checks that the curve is the same
-    return logarithmOf(this.lattice(), Q);
+    return remember(logarithmOf(this.lattice(), Q), { curve: this as unknown as Curve, point: P });
   }
 
   /**
@@ -170,7 +171,8 @@ export class Curve<T = Rational> {
 
   /** The torsion subgroup of E(Q), with generators and its proof. */
   torsion(): TorsionSubgroup {
-    return torsionOf(this.#rational("torsion"));
+    const E = this.#rational("torsion");
+    return remember(torsionOf(E), { curve: E });
   }
 
   /**

@@ -20,6 +20,7 @@ import { Rational } from "../number/rational.ts";
 import { apply, Complex, type ComplexNumeric, type Numeric, type Real, scalar } from "../number/values.ts";
 import type { ConventionKey } from "../proof/conventions.ts";
 import { DomainError, UndecidedError } from "../proof/errors.ts";
+import { remember } from "./behind.ts";
 import { ComplexMultiplication } from "./complex-multiplication.ts";
 import { type EllipticData, ellipticFunction } from "./elliptic.ts";
 import { EllipticFunction } from "./elliptic-function.ts";
@@ -172,7 +173,7 @@ export class Lattice {
       [c, d],
     ];
     const tau = Complex.from(apply(REDUCED_TAU, [this.data], exactReducedTau(this.data)));
-    return { periods: [this.at(d, c), this.at(b, a)], tau, matrix, boundary };
+    return remember({ periods: [this.at(d, c), this.at(b, a)], tau, matrix, boundary }, { lattice: this });
   }
 
   /** z in the coordinates of the basis, with a nearest lattice point. */
@@ -307,7 +308,7 @@ export class Lattice {
    * give "consistent with" and "excluded".
    */
   complexMultiplication(): ComplexMultiplication {
-    return new ComplexMultiplication(complexMultiplication(this.data, this.j.exact));
+    return remember(new ComplexMultiplication(complexMultiplication(this.data, this.j.exact)), { lattice: this });
   }
 
   /** The conventions that the numbers of this lattice rest on. */

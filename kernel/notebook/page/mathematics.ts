@@ -11,7 +11,14 @@ export type Piece =
 /** MathML of a formula; a formula that cannot be read is shown as its source, with the reason as its title. */
 export function mathml(tex: string, display: boolean): string {
   try {
-    return temml.renderToString(tex.trim(), { displayMode: display, annotate: true, throwOnError: true, trust: false });
+    return temml.renderToString(tex.trim(), {
+      displayMode: display,
+      annotate: true,
+      throwOnError: true,
+      trust: false,
+      // Each thin space between groups of digits counts as an expansion.
+      maxExpand: 100_000,
+    });
   } catch (error) {
     const reason = error instanceof Error ? (error.message.split("\n")[0] ?? "") : String(error);
     return `<code class="unread" title="${escapeHtml(reason)}">${escapeHtml(tex)}</code>`;

@@ -1,10 +1,10 @@
 // The way from a cubic or a quartic with a point to its Weierstrass model, as a derivation.
 
-import type { ThroughPoint } from "../surface/cubic.ts";
-import { Curve } from "../surface/curve.ts";
-import { Morphism } from "../surface/morphism.ts";
-import type { PlaneCurve } from "../surface/variety.ts";
-import { Derivation } from "./derivation.ts";
+import type { ThroughPoint } from "../../surface/cubic.ts";
+import { Curve } from "../../surface/curve.ts";
+import { Morphism } from "../../surface/morphism.ts";
+import type { PlaneCurve } from "../../surface/variety.ts";
+import { Derivation } from "../derivation.ts";
 
 export function isThroughPoint(value: unknown): value is ThroughPoint<PlaneCurve> {
   if (typeof value !== "object" || value === null) return false;

@@ -1,11 +1,11 @@
 // The record of a number as a derivation: one step an operation, operands before results.
 
-import { isNode, type Node } from "../number/origin.ts";
-import { Quadratic } from "../number/quadratic.ts";
-import { Rational } from "../number/rational.ts";
-import { type Complex, Real } from "../number/values.ts";
-import { Derivation } from "./derivation.ts";
-import { quadraticTex, rationalTex } from "./exact-kind.ts";
+import { isNode, type Node } from "../../number/origin.ts";
+import { Quadratic } from "../../number/quadratic.ts";
+import { Rational } from "../../number/rational.ts";
+import { type Complex, Real } from "../../number/values.ts";
+import { Derivation } from "../derivation.ts";
+import { quadraticTex, rationalTex } from "../exact-kind.ts";
 
 /** Longer records are cut at their beginning: the last steps are the ones that a reader asks for. */
 const MOST_STEPS = 60;

@@ -1,0 +1,221 @@
+// The period lattice of a cubic as a derivation: roots, arithmetic-geometric means, the canonical basis, the reduced one.
+
+import { provedDigits } from "../../number/context.ts";
+import { Rational } from "../../number/rational.ts";
+import { i } from "../../number/symbols.ts";
+import { Complex, Real } from "../../number/values.ts";
+import { behind } from "../../surface/behind.ts";
+import { carlson } from "../../surface/carlson.ts";
+import { standingOf } from "../../surface/claim-parts.ts";
+import type { Lattice } from "../../surface/lattice.ts";
+import { lattice } from "../../surface/make-lattice.ts";
+import { Derivation } from "../derivation.ts";
+import { type Table, table } from "../table.ts";
+import { plainNumber } from "./parts.ts";
+import { reductionSteps } from "./reduced.ts";
+
+const COHEN = "common practice; Cohen, A Course in Computational Algebraic Number Theory, 7.4";
+const DLMF_CUBIC = "common practice; DLMF 23.3";
+
+export function latticeWorking(L: Lattice): Derivation {
+  const cubic = L.data.given.kind === "invariants";
+  const start = new Derivation("Period lattice");
+  const begun = cubic ? periodsOf(invariants(start, L), L) : given(start, L);
+  return reductionSteps(chosen(begun, L), L);
+}
+
+function invariants(working: Derivation, L: Lattice): Derivation {
+  const E = behind(L)?.curve;
+  const [g2, g3] = L.invariants;
+  const start = E
+    ? working.step("the curve", { value: E, label: "curve" }).step("its invariants", {
+        value: { c4: E.c4, c6: E.c6 },
+        source: "common practice; Silverman AEC, III.1",
+        label: "invariants",
+      })
+    : working;
+  const [e1, e2, e3] = L.roots;
+  const gaps = [e1.minus(e2), e2.minus(e3), e1.minus(e3)] as const;
+  const product = gaps.reduce<Real | Complex>((p, d) => p.times(d.pow(2)), Real.from(16));
+  return start
+    .step(`the cubic $4x^3 - g_2 x - g_3$${E ? " with $g_2 = c_4/12$ and $g_3 = c_6/216$" : ""}`, {
+      value: { g2, g3 },
+      label: "cubic",
+    })
+    .step("its discriminant $g_2^3 - 27 g_3^2$", {
+      value: L.discriminant,
+      ...(E ? { check: standingOf(L.discriminant, "=", E.discriminant), route: "the discriminant of the curve" } : {}),
+      label: "discriminant",
+    })
+    .step(`its roots${realWords(L)}`, {
+      value: { e1, e2, e3 },
+      source: DLMF_CUBIC,
+      check: standingOf(product, "=", L.discriminant),
+      route: "$16 (e_1 - e_2)^2 (e_2 - e_3)^2 (e_1 - e_3)^2$ against the discriminant",
+      label: "roots",
+    });
+}
+
+function realWords(L: Lattice): string {
+  if (L.realComponents === 2) return ": the discriminant is positive, all three are real, $e_1 > e_2 > e_3$";
+  return L.realComponents === 1 ? ": the discriminant is negative, $e_1$ is the real one" : "";
+}
+
+function periodsOf(working: Derivation, L: Lattice): Derivation {
+  if (!L.realComponents) return complexPeriods(working, L);
+  const [e1, e2, e3] = L.roots;
+  const [w1, w2] = L.periods;
+  const [first, second] = L.realComponents === 2 ? twoComponents(L) : oneComponent(L);
+  const half = L.realComponents === 2 ? Rational.zero : Rational.of(1, 2);
+  // Carlson's integral by duplication: no mean is used.
+  const integral = Complex.from(carlson.RF(0, e1.minus(e2), e1.minus(e3))).times(2);
+  const height =
+    L.realComponents === 2
+      ? carlson.RF(0, e1.minus(e3), e2.minus(e3)).times(2)
+      : carlson.RF(0, e2.minus(e1), e3.minus(e1));
+  const upright = Complex.from(height).times(i);
+  return working
+    .step(`the real period by an arithmetic-geometric mean, ${first.words}`, {
+      value: meanTable(first.a, first.b),
+      source: COHEN,
+      label: "agm1",
+    })
+    .step("the least positive real period", {
+      formula: first.formula,
+      value: plainNumber(w1),
+      check: standingOf(w1, "=", integral),
+      route: "$2 R_F(0, e_1 - e_2, e_1 - e_3)$ by duplication",
+      label: "omega1",
+    })
+    .step(`the height of the cell by a second mean, ${second.words}`, {
+      value: meanTable(second.a, second.b),
+      source: COHEN,
+      label: "agm2",
+    })
+    .step("the second period", {
+      formula: second.formula,
+      value: plainNumber(w2),
+      check: standingOf(w2.minus(w1.times(half)), "=", upright),
+      route:
+        L.realComponents === 2
+          ? "$2i R_F(0, e_1 - e_3, e_2 - e_3)$ by duplication"
+          : "$\\omega_2 - \\omega_1/2$ is $i R_F(0, e_2 - e_1, e_3 - e_1)$, by duplication",
+      label: "omega2",
+    });
+}
+
+interface Mean {
+  readonly words: string;
+  readonly formula: string;
+  readonly a: Real;
+  readonly b: Real;
+}
+
+function twoComponents(L: Lattice): readonly [Mean, Mean] {
+  const [e1, e2, e3] = L.roots as readonly [Real, Real, Real];
+  const wide = e1.minus(e3).sqrt();
+  return [
+    {
+      words: "$a_0 = \\sqrt{e_1 - e_3}$, $b_0 = \\sqrt{e_1 - e_2}$",
+      formula: "\\omega_1 = \\frac{\\pi}{M(\\sqrt{e_1 - e_3}, \\sqrt{e_1 - e_2})}",
+      a: wide,
+      b: e1.minus(e2).sqrt(),
+    },
+    {
+      words: "$a_0 = \\sqrt{e_1 - e_3}$, $b_0 = \\sqrt{e_2 - e_3}$",
+      formula: "\\omega_2 = \\frac{i \\pi}{M(\\sqrt{e_1 - e_3}, \\sqrt{e_2 - e_3})}",
+      a: wide,
+      b: e2.minus(e3).sqrt(),
+    },
+  ];
+}
+
+function oneComponent(L: Lattice): readonly [Mean, Mean] {
+  const e1 = L.roots[0] as Real;
+  const [g2] = L.invariants as readonly [Real, Real];
+  const b = e1.pow(2).times(3).minus(g2.div(4)).sqrt();
+  const [twice, triple] = [b.times(2), e1.times(3)];
+  const a = b.sqrt().times(2);
+  const named = "$a_0 = 2\\sqrt{b}$";
+  return [
+    {
+      words: `${named}, $b_0 = \\sqrt{2b + 3e_1}$ with $b^2 = 3e_1^2 - g_2/4$`,
+      formula: "\\omega_1 = \\frac{2\\pi}{M(2\\sqrt{b}, \\sqrt{2b + 3e_1})}",
+      a,
+      b: twice.plus(triple).sqrt(),
+    },
+    {
+      words: `${named}, $b_0 = \\sqrt{2b - 3e_1}$`,
+      formula: "\\omega_2 = \\frac{\\omega_1}{2} + \\frac{i \\pi}{M(2\\sqrt{b}, \\sqrt{2b - 3e_1})}",
+      a,
+      b: twice.minus(triple).sqrt(),
+    },
+  ];
+}
+
+/** a and b of each step of the mean until they agree to the digits asked for. */
+function steps(a: Real, b: Real): (readonly [number, Real, Real])[] {
+  const rows: (readonly [number, Real, Real])[] = [[0, a, b]];
+  const least = -(provedDigits() * Math.log2(10)) - 4;
+  for (let n = 1; n < 60; n++) {
+    const [, x, y] = rows.at(-1)!;
+    const [p, q] = [x.plus(y).div(2), x.times(y).sqrt()];
+    rows.push([n, p, q]);
+    // The next pair differs by about (p − q)²/8p.
+    const gap = Math.abs(p.minus(q).toDouble() / p.toDouble());
+    if (gap === 0 || Math.log2(gap) < least / 2) {
+      rows.push([n + 1, p.plus(q).div(2), p.times(q).sqrt()]);
+      break;
+    }
+  }
+  return rows;
+}
+
+function meanTable(a: Real, b: Real): Table {
+  return table(steps(a, b), { columns: ["$n$", "$a_n$", "$b_n$"] });
+}
+
+function complexPeriods(working: Derivation, L: Lattice): Derivation {
+  const [w1, w2] = L.periods;
+  return working.step("the periods by complex arithmetic-geometric means with the right choice of each root", {
+    value: { ω1: plainNumber(w1), ω2: plainNumber(w2) },
+    source: "common practice; Cremona and Thongjunthug, J. Number Theory 133 (2013), section 3",
+    ...byEisenstein(L),
+    label: "periods",
+  });
+}
+
+/** g2 or g3 from the periods by q-series, which know nothing of the roots. */
+function byEisenstein(L: Lattice) {
+  // As plain numbers: points of the torus would lead back to the invariants.
+  const [w1, w2] = L.periods.map(plainNumber) as [Complex, Complex];
+  const back = lattice({ periods: [w1, w2] });
+  const k = String(L.invariants[0]) === "0" ? 1 : 0;
+  return {
+    check: standingOf(back.invariants[k], "=", L.invariants[k]),
+    route: `$g_${k + 2}$ from the periods by Eisenstein series`,
+  };
+}
+
+function given(working: Derivation, L: Lattice): Derivation {
+  const [w1, w2] = L.periods;
+  return working.step("the periods that were given", {
+    value: { ω1: plainNumber(w1), ω2: plainNumber(w2) },
+    label: "periods",
+  });
+}
+
+function chosen(working: Derivation, L: Lattice): Derivation {
+  const [w1, w2] = L.periods;
+  const cubic = L.data.given.kind === "invariants";
+  const rule = !cubic
+    ? "full periods, $\\operatorname{Im} \\omega_2/\\omega_1 > 0$"
+    : L.realComponents
+      ? `the real basis: $\\omega_1 > 0$ least, $\\operatorname{Re} \\omega_2 = ${L.realComponents === 2 ? "0" : "\\omega_1/2"}$`
+      : "for a lattice that is not real, $\\operatorname{Re} \\omega_1 > 0$ or $\\omega_1/i > 0$";
+  return working.step(`the basis by the conventions of edition 1: ${rule}`, {
+    value: { ω1: plainNumber(w1), ω2: plainNumber(w2), τ: L.tau },
+    ...(cubic ? byEisenstein(L) : {}),
+    label: "basis",
+  });
+}

@@ -1,0 +1,152 @@
+import temml from "temml";
+import { describe, expect, it } from "vitest";
+import { complex, exact } from "../../../lib/number/convert.ts";
+import { atDigits } from "../../../lib/number/functions.ts";
+import { bundle } from "../../../lib/page/bundle.ts";
+import type { Derivation } from "../../../lib/page/derivation.ts";
+import { plainFormulas } from "../../../lib/page/plain-formula.ts";
+import type { Table } from "../../../lib/page/table.ts";
+import { tex } from "../../../lib/page/typeset.ts";
+import { working } from "../../../lib/page/working.ts";
+import { curve } from "../../../lib/surface/make-curve.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
+
+const text = (value: unknown) => bundle(value)?.["text/plain"] as string;
+
+/** The value of the step with a label. */
+function at(steps: Derivation, label: string): unknown {
+  return steps.steps.find((step) => step.label === label)?.value;
+}
+
+/** Typesets at each level; every check holds. */
+function sound(steps: Derivation): void {
+  for (const level of ["outline", "steps", "all"] as const)
+    expect(() => temml.renderToString(tex(steps.show(level)), { throwOnError: true, maxExpand: 1e5 })).not.toThrow();
+  expect(steps.checks.length).toBeGreaterThan(0);
+  for (const { kind } of steps.checks) expect(["proved", "certified"]).toContain(kind);
+  // Every plain line can be read without TeX.
+  expect(text(steps.show("all"))).not.toMatch(/\\(?!n)/);
+}
+
+describe("working of torsion", () => {
+  it("Z/7: counts, bound, multiples — oracle: counts by hand over F_3, and the published group", () => {
+    const steps = working(curve`y^2 + x y + y = x^3 - x^2 - 3x + 3`.torsion());
+    sound(steps);
+    expect((at(steps, "counts") as Table).rows[0]).toEqual([3, 7]);
+    expect(String(at(steps, "bound"))).toBe("7");
+    expect(String(at(steps, "group"))).toBe("Z/7");
+    expect(steps.cite("bound")).toBe("(4)");
+    expect(() => steps.cite("bond")).toThrow(/expected one of curve, discriminant/);
+  });
+
+  it("a prime that all counts leave is excluded by the real points — oracle: trivial group of the 5-isogenous curve", () => {
+    const steps = working(curve`y^2 + y = x^3 - x^2 - 7820x - 263580`.torsion());
+    sound(steps);
+    expect(String(at(steps, "bound"))).toBe("5");
+    expect(String(at(steps, "group"))).toBe("0");
+    expect(text(steps.show("all"))).toContain("none of them an integer");
+  });
+
+  it("Z/2 × Z/2, and a model that is not minimal", () => {
+    sound(working(curve`y^2 = x^3 - x`.torsion()));
+    sound(working(curve`y^2 = x^3 - 432x + 8208`.torsion()));
+  });
+});
+
+describe("working of minimal models", () => {
+  it("u = 6 from the orders at 2 and 3 — oracle: Δ = −11·6^12 by hand", () => {
+    const steps = working(curve`y^2 = x^3 - 432x + 8208`.minimal());
+    sound(steps);
+    expect(String(at(steps, "scale"))).toBe("6");
+    expect((at(steps, "primes") as Table).rows.map(String)).toEqual(["2,8,9,12,1", "3,4,6,12,1", "11,0,0,1,0"]);
+  });
+
+  it("denominators, and Kraus's condition at 2", () => {
+    sound(working(curve({ a: [0, "1/2", 0, "-81/16", 3] }).minimal()));
+    sound(working(curve`y^2 = x^3 + 16`.minimal()));
+    sound(working(curve`y^2 = x^3 - x`.minimal()));
+    sound(working(curve`y^2 = x^3 + 4x`.minimal()));
+  });
+});
+
+describe("working of isogenies", () => {
+  it("5-isogeny: t = 1562, w = 38544 — oracle: Vélu's sums over the points by hand", () => {
+    const E = curve`y^2 + y = x^3 - x^2 - 10x - 20`;
+    const steps = working(E.isogeny({ kernel: E.point(5, 5) }));
+    sound(steps);
+    expect(text(steps)).toContain("{ t: 1562, w: 38544 }");
+    expect((at(steps, "points") as Table).rows.map(String)).toEqual(["5,110,121", "16,1452,14641"]);
+    expect(String(at(steps, "target"))).toContain("x^3 - x^2 - 7820*x - 263580");
+  });
+
+  it("degree 2, a dual, a kernel without rational points, a change of model", () => {
+    const E = curve`y^2 = x^3 - x`;
+    const phi = E.isogeny({ kernel: E.point(0, 0) });
+    sound(working(phi));
+    sound(working(phi.dual()));
+    sound(working(curve`y^2 + y = x^3 - x^2 - 7820x - 263580`.isogenies()[0]));
+    sound(working(curve`y^2 = x^3 - 432x + 8208`.minimal().to));
+  });
+});
+
+describe("working of lattices and of what is computed on them", () => {
+  const E = curve`y^2 + y = x^3 - x`;
+  const F = curve`y^2 + y = x^3 - x^2`;
+
+  it("two means for a real cubic, at 20 and 60 digits — oracle: published real periods 2.99345864 and 6.34604652", () => {
+    for (const [C, period] of [
+      [E, "2.99345864"],
+      [F, "6.34604652"],
+    ] as const) {
+      const steps = working(C.lattice());
+      sound(steps);
+      expect(String(at(steps, "omega1"))).toContain(period);
+      expect((at(steps, "agm1") as Table).rows.length).toBeLessThan(8);
+      atDigits(60, () => sound(working(C.lattice())));
+    }
+  });
+
+  it("lattices that are not real, or given by periods", () => {
+    sound(working(lattice({ invariants: [complex(1, 2), complex(0, 1)] })));
+    sound(working(lattice({ tau: complex("3/10", "1/50") })));
+  });
+
+  it("a logarithm on each component, for finite order too — oracle: Carlson's integral, in the checks", () => {
+    sound(working(E.logarithm(E.point(2, -3))));
+    sound(working(E.logarithm(E.point(2, 2))));
+    const steps = working(E.logarithm(E.point(0, 0)));
+    sound(steps);
+    expect(String(at(steps, "integral"))).toContain("0.929592715285395");
+    sound(working(F.logarithm(F.point(0, 0))));
+    sound(working(curve`y^2 = x^3 - x`.logarithm(curve`y^2 = x^3 - x`.point(0, 0))));
+    expect(at(working(E.logarithm(E.origin)), "logarithm")).toBeDefined();
+  });
+
+  it("℘ by the q-expansion — oracle: the theta functions, in the checks", () => {
+    const L = lattice({ invariants: [4, -1] });
+    sound(working(L.wp(complex("0.41", "0.27"))));
+    sound(working(L.wp(complex("7.41", "-12.27"))));
+    sound(working(L.wp(L.at("1/3", 0))));
+    atDigits(60, () => sound(working(L.wp(L.at("1/3", "1/2").plus(complex("1/7", 0))))));
+  });
+
+  it("moves of τ, one by one — oracle: the last τ of the table is the reduced one, 2/17 + 25i/17 by hand", () => {
+    const steps = working(lattice({ tau: complex("3/10", "1/50") }).reduced);
+    sound(steps);
+    expect((at(steps, "moves") as Table).rows.at(-1)!.map(String)).toEqual(["$T^{-2}$", "2/17 + 25/17 i"]);
+  });
+
+  it("complex multiplication: forms and class number — oracle: h(−23) = 3; none for j = 110592/37", () => {
+    const steps = working(lattice({ tau: exact`(1+√(-23))/2` }).complexMultiplication());
+    sound(steps);
+    expect((at(steps, "forms") as Table).rows.map(String)).toEqual(["1,1,6", "2,1,3", "2,-1,3"]);
+    sound(working(curve`y^2 = x^3 - x`.lattice().complexMultiplication()));
+    sound(working(E.lattice().complexMultiplication()));
+  });
+});
+
+it("formulas in sentences are readable as plain text", () => {
+  expect(plainFormulas("points over $\\mathbb{F}_p$, $T^n: \\tau + n$, $\\operatorname{Re} \\omega_2 = 0$")).toBe(
+    "points over F_p, T^n: τ + n, Re ω2 = 0",
+  );
+});

@@ -68,9 +68,9 @@ describe("interrupt", () => {
 });
 
 describe("soak", () => {
-  it("30 cells interrupted at random with an async hook on: each ends as interrupted, with the state whole", async () => {
+  it("100 cells interrupted at random with an async hook on: each ends as interrupted, with the state whole", async () => {
     const own = new TestNotebook();
-    await soak(own, { rounds: 30, seed: 20261201, hook: true });
+    await soak(own, { rounds: 100, seed: 20261201, hook: true });
     await own.session.shutdown();
-  }, 120_000);
+  }, 240_000);
 });

@@ -6,6 +6,7 @@ import { chooseWindow } from "./curve-window.ts";
 import { type RealInput, realDouble, realWindow } from "./doubles.ts";
 import { fact } from "./facts.ts";
 import type { Figure } from "./figure.ts";
+import { finiteFigure } from "./finite-picture.ts";
 import type { Mark } from "./marks.ts";
 import { type Named, namedEntries } from "./named.ts";
 import { planeSubject } from "./plane-subject.ts";
@@ -35,11 +36,14 @@ export interface CurveFigureOptions {
  * The real points of a curve as a picture, with marked points, and the line through two of them with the points that
  * follow: −(P + Q) and P + Q on a Weierstrass model, the third point on a plane cubic.
  *
- * Domain   a curve with real coefficients: long Weierstrass form, plane cubic (in a chart), or y² = quartic.
+ * A curve over F_p is shown as the grid of its points.
+ *
+ * Domain   a curve with real coefficients: long Weierstrass form, plane cubic (in a chart), or y² = quartic; or one over F_p, p <= 211.
  * Error    drawn in double precision: a picture proves nothing. No stroke crosses a pole or joins two components.
  * @example figure.curve(E, { points: { P, Q }, chord: [P, Q] })
  */
 export function curve(C: AnyCurve | PlaneCurve, options: CurveFigureOptions = {}): Figure {
+  if (C instanceof Curve && C.field.characteristic !== 0n) return overPrimeField(C, options);
   const subject = (C instanceof Curve ? weierstrassSubject(C) : planeSubject(C, options.chart)) as Subject<CurvePoint>;
   const named = namedEntries(options.points, (_, k) => `P${k + 1}`);
   const extras = [marked(subject, named), chordOf(subject, named, options.chord), linesOf(subject, options.lines)];
@@ -64,6 +68,14 @@ export function curve(C: AnyCurve | PlaneCurve, options: CurveFigureOptions = {}
       points: Object.fromEntries(named.map(([name, point]) => [name, pointText(point)])),
     },
   });
+}
+
+function overPrimeField(E: AnyCurve, { points, ...others }: CurveFigureOptions): Figure {
+  const unsuited = Object.keys(others);
+  if (unsuited.length === 0) return finiteFigure(E, points);
+  throw new TypeError(
+    `figure.curve: got ${unsuited.join(", ")} for a curve over ${E.field.name}; expected nothing but points, since its plane has no lines to draw`,
+  );
 }
 
 type NamedPoint = readonly [name: string, point: FigurePoint];

@@ -1,6 +1,5 @@
 // A curve in the long Weierstrass form as the subject of a figure.
 
-import { DomainError } from "../proof/errors.ts";
 import type { Curve } from "../surface/curve.ts";
 import { Point } from "../surface/point.ts";
 import { realDouble } from "./doubles.ts";
@@ -14,14 +13,6 @@ export type AnyCurve = Curve<any>;
 export type AnyPoint = Point<any>;
 
 export function weierstrassSubject(E: AnyCurve): Subject<AnyPoint> {
-  if (E.field.characteristic !== 0n) {
-    throw new DomainError({
-      subject: "figure.curve",
-      given: `a curve over ${E.field.name}`,
-      expected: "a curve over Q or a field of real numbers",
-      hint: "Over a finite field there are finitely many points and no real locus.",
-    });
-  }
   const equation = equationOf(E);
   return {
     title: `Real points of ${E}`,

@@ -18,6 +18,7 @@ export const derivationKind: Kind<Derivation> = {
     const note = summary(derivation).map((line) => [small(texWords(line))]);
     return array("l", [[texProse(derivation.title)], [array("rl", rows)], ...note]);
   },
+  conventions: (derivation) => derivation.conventions,
   data: (derivation, show) => ({
     kind: "derivation",
     title: derivation.title,

@@ -1,5 +1,6 @@
 // Derivations as values: numbered steps with words, formula, value, source and check.
 
+import type { ConventionKey } from "../proof/conventions.ts";
 import type { Standing } from "../proof/standing.ts";
 import { Claim } from "../surface/claim-value.ts";
 
@@ -32,20 +33,29 @@ export class Derivation {
   readonly steps: readonly Step[];
   readonly level: Level;
 
-  constructor(title: string, steps: readonly Step[] = [], level: Level = "steps") {
+  /** The rows of the conventions that the steps rest on, shown once below them. */
+  readonly conventions: readonly ConventionKey[];
+
+  constructor(
+    title: string,
+    steps: readonly Step[] = [],
+    level: Level = "steps",
+    conventions: readonly ConventionKey[] = [],
+  ) {
     this.title = title;
     this.steps = steps;
     this.level = level;
+    this.conventions = conventions;
   }
 
   /** One step more: words, which may hold $formulas$, with a formula, a value, a source and a check as there are. */
   step(text: string, parts: StepParts = {}): Derivation {
-    return new Derivation(this.title, [...this.steps, { text, ...parts }], this.level);
+    return new Derivation(this.title, [...this.steps, { text, ...parts }], this.level, this.conventions);
   }
 
   /** The same derivation, shown to another depth. */
   show(level: Level): Derivation {
-    return new Derivation(this.title, this.steps, level);
+    return new Derivation(this.title, this.steps, level, this.conventions);
   }
 
   /**
@@ -59,6 +69,11 @@ export class Derivation {
     throw new RangeError(
       `cite: no step has the label "${label}"; expected one of ${labels.join(", ") || "none: no step has one"}`,
     );
+  }
+
+  /** The same derivation, with the conventions that it rests on. */
+  under(...conventions: readonly ConventionKey[]): Derivation {
+    return new Derivation(this.title, this.steps, this.level, conventions);
   }
 
   /** How the checks of the steps are known; steps without a check are not counted. */

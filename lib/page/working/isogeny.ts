@@ -36,6 +36,7 @@ function veluWorking(phi: Morphism, kernel: Univariate<Rational>): Derivation {
   const { t, w, terms } = sums(E, kernel);
   const points = pointwise(E, kernel);
   const head = new Derivation(`Isogeny of degree ${phi.degree} by its kernel`)
+    .under("isogeny")
     .step("the curve", { value: E, label: "curve" })
     .step("the kernel: its abscissas are the roots of", {
       formula: "h(x)",

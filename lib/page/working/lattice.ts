@@ -19,7 +19,7 @@ const DLMF_CUBIC = "common practice; DLMF 23.3";
 
 export function latticeWorking(L: Lattice): Derivation {
   const cubic = L.data.given.kind === "invariants";
-  const start = new Derivation("Period lattice");
+  const start = new Derivation("Period lattice").under(...L.conventions, "roots", "fundamentalDomain");
   const begun = cubic ? periodsOf(invariants(start, L), L) : given(start, L);
   return reductionSteps(chosen(begun, L), L);
 }

@@ -16,10 +16,12 @@ type Scalar = Real | Complex;
 
 export function logarithmWorking(z: Scalar, E: Curve, P: AnyPoint): Derivation {
   const L = E.lattice();
-  const start = new Derivation("Elliptic logarithm").step("the curve and the point", {
-    value: { curve: E, P },
-    label: "point",
-  });
+  const start = new Derivation("Elliptic logarithm")
+    .under("cubic", "differential", "components")
+    .step("the curve and the point", {
+      value: { curve: E, P },
+      label: "point",
+    });
   if (!P.coordinates) return start.step("the point is $O$, whose logarithm is 0", { value: z, label: "logarithm" });
   const [x, y] = P.coordinates as readonly [Rational | Real, Rational | Real];
   const b2 = Complex.from(E.b[0] as never);

@@ -30,7 +30,9 @@ export function minimalWorking({ curve, to }: Minimal): Derivation {
   const E = to.from;
   const { u, r, s, t } = to.change as { u: Rational; r: Rational; s: Rational; t: Rational };
   const d = E.a.reduce((n, c) => lcm(n, c.den), 1n);
-  let working = new Derivation("Reduced global minimal model").step("the given model", { value: E, label: "given" });
+  let working = new Derivation("Reduced global minimal model")
+    .under("modelChange")
+    .step("the given model", { value: E, label: "given" });
   working = working.step("its invariants, $c_4 = b_2^2 - 24 b_4$ and $c_6 = -b_2^3 + 36 b_2 b_4 - 216 b_6$", {
     value: { c4: E.c4, c6: E.c6, Δ: E.discriminant },
     source: "common practice; Silverman AEC, III.1",

@@ -16,7 +16,7 @@ const SOURCE = "common practice; Cox, Primes of the Form x² + ny², §7 and §1
 export function multiplicationWorking(answer: ComplexMultiplication, L: Lattice): Derivation {
   const { discriminant: D } = answer;
   const byTau = exactFormOf(L.data.given) !== undefined;
-  const start = new Derivation("Complex multiplication of a lattice").step("the lattice", {
+  const start = new Derivation("Complex multiplication of a lattice").under("periods", "j").step("the lattice", {
     value: L,
     label: "lattice",
   });

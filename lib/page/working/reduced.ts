@@ -12,7 +12,7 @@ const SOURCE = "common practice; Serre, A Course in Arithmetic, VII.1";
 
 export function reducedWorking(L: Lattice): Derivation {
   const [w1, w2] = L.periods;
-  const start = new Derivation("Reduced basis of a lattice").step("the basis", {
+  const start = new Derivation("Reduced basis of a lattice").under("periods", "fundamentalDomain").step("the basis", {
     value: { ω1: plainNumber(w1), ω2: plainNumber(w2), τ: L.tau },
     label: "basis",
   });

@@ -29,6 +29,7 @@ export function valueOfWp(x: Real | Complex): { readonly L: Lattice; readonly z:
 export function wpWorking(x: Real | Complex, L: Lattice, z: Complex): Derivation {
   const [w1, w2] = L.periods;
   const start = new Derivation("Value of $\\wp(z)$")
+    .under("cubic", "periods", "fundamentalDomain")
     .step("the argument", { formula: "z", value: z, label: "argument" })
     .step("the lattice", { value: { ω1: plain(w1), ω2: plain(w2), τ: L.tau }, label: "lattice" });
   const reduced = L.reduced;

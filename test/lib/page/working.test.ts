@@ -35,6 +35,7 @@ describe("working of torsion", () => {
     expect((at(steps, "counts") as Table).rows[0]).toEqual([3, 7]);
     expect(String(at(steps, "bound"))).toBe("7");
     expect(String(at(steps, "group"))).toBe("Z/7");
+    expect(text(working(curve`y^2 + y = x^3 - x`.lattice()))).toContain("real basis: ω1 > 0 is the least real period");
     expect(steps.cite("bound")).toBe("(4)");
     expect(() => steps.cite("bond")).toThrow(/expected one of curve, discriminant/);
   });

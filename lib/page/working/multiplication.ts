@@ -31,13 +31,15 @@ export function multiplicationWorking(answer: ComplexMultiplication, L: Lattice)
   const one = forms.every(([a, b, c]) => b! * b! - 4n * a! * c! === D);
   const conductor = answer.conductor!;
   return ground
-    .step("the discriminant of the order of all multiplications", {
-      formula: `D = f^2 d = ${conductor}^2 \\cdot (${D / conductor ** 2n})`,
-      value: D < 0n ? { D: Number(D), f: Number(conductor), d: Number(D / conductor ** 2n) } : undefined,
-      check: multiplies(L, D),
-      route: "the class polynomial of D at j(τ), τ from the periods",
-      label: "discriminant",
-    })
+    .step(
+      "the discriminant $D = f^2 d$ of the order of all multiplications: conductor $f$, fundamental discriminant $d$",
+      {
+        value: { D: Number(D), f: Number(conductor), d: Number(D / conductor ** 2n) },
+        check: multiplies(L, D),
+        route: "j(τ) from the periods against j at the root of a reduced form of this discriminant",
+        label: "discriminant",
+      },
+    )
     .step("the reduced forms $ax^2 + bxy + cy^2$ of this discriminant, one for each class", {
       value: table(forms, { columns: ["$a$", "$b$", "$c$"] }),
       source: SOURCE,
@@ -56,11 +58,10 @@ export function multiplicationWorking(answer: ComplexMultiplication, L: Lattice)
     });
 }
 
-/** j of the periods is a root of the class polynomial, evaluated at the enclosure of j(τ) away from its exact value. */
+/** τ is equivalent to the root of a reduced form: j agrees there. */
 function multiplies(L: Lattice, D: bigint) {
   const { tau } = L.reduced;
   const forms = reducedForms(D).map((form) => Object.values(form) as bigint[]);
-  // τ is equivalent to a root of one of the forms: j(τ) agrees with j of that root.
   const j = modular.j(tau);
   const roots = forms.map(([a, b]) => modular.j(rootOf(a!, b!, D)));
   const match = roots.find((root) => root.overlaps(j)) ?? roots[0]!;

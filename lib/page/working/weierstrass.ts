@@ -39,9 +39,9 @@ export function wpWorking(x: Real | Complex, L: Lattice, z: Complex): Derivation
   const factor = Complex.from(π).times(2).times(i).div(plain(v1)).pow(2);
   const total = terms.reduce<Complex>((sum, term) => sum.plus(term), Complex.from(0));
   return reductionSteps(start, L)
-    .step("the argument moved next to 0 by a lattice point", {
+    .step(`the argument moved next to 0 by the lattice point $\\omega$ = ${nearest.name}`, {
       formula: "z - \\omega",
-      value: { ω: nearest, "z − ω": rest },
+      value: plain(rest),
       label: "moved",
     })
     .step(

@@ -29,6 +29,14 @@ describe("numbers compared by what they are", () => {
     expect(finding(real("5e-1", "1e-30"), rational("1/2"))).toBe("same");
   });
 
+  it("same: a quadratic number whose fields the file keeps in another order", () => {
+    const [stored, fresh] = [
+      { a: "0", b: "1/5", d: "35", kind: "quadratic" },
+      { kind: "quadratic", a: "0", b: "1/5", d: "35" },
+    ];
+    expect(finding(stored, fresh)).toBe("same");
+  });
+
   it("differs: one digit within the proved ones, an exact value changed, enclosures just apart", () => {
     expect(finding(x, real("12345678901234567990e-20", "1e-20"))).toBe("differs");
     expect(finding(rational("1/2"), rational("1/3"))).toBe("differs");

@@ -11,6 +11,7 @@ import { TorusPoint } from "../../surface/torus-point.ts";
 import { Derivation } from "../derivation.ts";
 import { table } from "../table.ts";
 import { numberWorking } from "./number.ts";
+import { plainNumber } from "./parts.ts";
 import { reductionSteps } from "./reduced.ts";
 
 const SERIES = "common practice; Silverman, Advanced Topics, I.6 (q-expansion of ℘)";
@@ -31,17 +32,17 @@ export function wpWorking(x: Real | Complex, L: Lattice, z: Complex): Derivation
   const start = new Derivation("Value of $\\wp(z)$")
     .under("cubic", "periods", "fundamentalDomain")
     .step("the argument", { formula: "z", value: z, label: "argument" })
-    .step("the lattice", { value: { ω1: plain(w1), ω2: plain(w2), τ: L.tau }, label: "lattice" });
+    .step("the lattice", { value: { ω1: plainNumber(w1), ω2: plainNumber(w2), τ: L.tau }, label: "lattice" });
   const reduced = L.reduced;
   const [v1] = reduced.periods;
   const { nearest, rest } = near(L, z);
-  const terms = series(rest.div(plain(v1)), reduced.tau);
-  const factor = Complex.from(π).times(2).times(i).div(plain(v1)).pow(2);
+  const terms = series(rest.div(plainNumber(v1)), reduced.tau);
+  const factor = Complex.from(π).times(2).times(i).div(plainNumber(v1)).pow(2);
   const total = terms.reduce<Complex>((sum, term) => sum.plus(term), Complex.from(0));
   return reductionSteps(start, L)
     .step(`the argument moved next to 0 by the lattice point $\\omega$ = ${nearest.name}`, {
       formula: "z - \\omega",
-      value: plain(rest),
+      value: plainNumber(rest),
       label: "moved",
     })
     .step(
@@ -72,15 +73,10 @@ export function wpWorking(x: Real | Complex, L: Lattice, z: Complex): Derivation
 
 function near(L: Lattice, z: Complex) {
   if (z instanceof TorusPoint && !z.remainder) {
-    const nearest = L.locate(plain(z)).nearest;
+    const nearest = L.locate(plainNumber(z)).nearest;
     return { nearest, rest: z.minus(nearest) as Complex };
   }
   return L.locate(z);
-}
-
-/** A point of the torus as a plain number. */
-function plain(z: Complex): Complex {
-  return z.digits(provedDigits());
 }
 
 function series(v: Complex, tau: Complex): Complex[] {

@@ -1,42 +1,32 @@
 // The functions of numbers that a user calls. Each reads the precision of the context once and is the origin of its result.
 import { DomainError, PrecisionError } from "../proof/errors.ts";
-import * as ball from "./ball.ts";
 import { bitsOf, checkedDigits, mostBits, within } from "./context.ts";
-import * as disc from "./disc.ts";
+import {
+  ACOS,
+  ACOSH,
+  AGM,
+  ASIN,
+  ASINH,
+  ATAN,
+  ATAN2,
+  ATANH,
+  COS,
+  COSH,
+  EXP,
+  GAMMA,
+  LN,
+  POW,
+  ROOT,
+  SIN,
+  SINH,
+  TAN,
+  TANH,
+} from "./elementary.ts";
 import { power as exactPower, root } from "./exactness.ts";
-import { ARG, binary, realOnly, SQRT, unary } from "./operations.ts";
-import { accuracy, asBall, mayPass, type Operation } from "./origin.ts";
+import { ARG, SQRT } from "./operations.ts";
+import { accuracy, mayPass, type Operation } from "./origin.ts";
 import { Rational } from "./rational.ts";
 import { apply, birthOf, Complex, type ComplexNumeric, type Numeric, Real, scalar } from "./values.ts";
-
-const EXP = unary("exp", ball.exp, disc.exp);
-const LN = unary("ln", ball.ln, (x, prec) => disc.ln(x, prec));
-const SIN = unary("sin", ball.sin, (x, prec) => disc.sinCos(x, prec).sin);
-const COS = unary("cos", ball.cos, (x, prec) => disc.sinCos(x, prec).cos);
-const TAN = unary("tan", ball.tan, disc.tan);
-const SINH = unary("sinh", ball.sinh, (x, prec) => disc.sinhCosh(x, prec).sinh);
-const COSH = unary("cosh", ball.cosh, (x, prec) => disc.sinhCosh(x, prec).cosh);
-const TANH = unary("tanh", ball.tanh, (x, prec) => {
-  const { sinh: s, cosh: c } = disc.sinhCosh(x, prec + 6);
-  return disc.div(s, c, prec);
-});
-const ASIN = unary("asin", ball.asin, disc.asin);
-const ACOS = unary("acos", ball.acos, disc.acos);
-const ATAN = unary("atan", ball.atan, disc.atan);
-const ASINH = realOnly("asinh", ball.asinh);
-const ACOSH = realOnly("acosh", ball.acosh);
-const ATANH = realOnly("atanh", ball.atanh);
-const AGM = binary("agm", ball.agm, disc.agm);
-const POW = binary("pow", ball.power, (x, y, prec) => disc.power(x, y, prec));
-const ATAN2: Operation = {
-  name: "atan2",
-  evaluate: ([y, x], at, prec) => ball.atan2(asBall(at(y)), asBall(at(x)), prec),
-};
-const ROOT: Operation = {
-  name: "nthRoot",
-  evaluate: ([x, n], at, prec) => ball.nthRoot(asBall(at(x)), n as number, prec),
-};
-const GAMMA: Operation = { name: "gamma", evaluate: ([q], _at, prec) => ball.gammaRational(q as Rational, prec) };
 
 function one(operation: Operation, x: ComplexNumeric, exact?: (x: Rational) => Rational | undefined): Real | Complex {
   const value = scalar(x, operation.name);

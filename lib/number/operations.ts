@@ -4,20 +4,26 @@ import type { Ball } from "./ball.ts";
 import * as ball from "./ball.ts";
 import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
-import { asBall, asDisc, isDisc, type Operation } from "./origin.ts";
+import { asBall, asDisc, type Enclosure, isDisc, type Operation } from "./origin.ts";
 
 type RealFunction = (x: Ball, prec: number) => Ball;
 type ComplexFunction = (x: Disc, prec: number) => Disc;
+/** The derivative of a function of one number, at the same argument. */
+type Slope = (x: Enclosure, prec: number) => Enclosure;
 
 /** An operation of one number: the real function for a real operand, the complex one else. */
-export function unary(name: string, real: RealFunction, complex: ComplexFunction): Operation {
-  return {
-    name,
-    evaluate: ([x], at, prec) => {
-      const value = at(x);
-      return isDisc(value) ? complex(value, prec) : real(value, prec);
-    },
+export function unary(name: string, real: RealFunction, complex: ComplexFunction, slope?: Slope): Operation {
+  const evaluate: Operation["evaluate"] = ([x], at, prec) => {
+    const value = at(x);
+    return isDisc(value) ? complex(value, prec) : real(value, prec);
   };
+  if (!slope) return { name, evaluate };
+  return { name, evaluate, differential: ([x], at, d, prec) => value(TIMES, prec, slope(at(x), prec), d(x)) };
+}
+
+/** The value of an operation at enclosures. */
+export function value(operation: Operation, prec: number, ...operands: readonly unknown[]): Enclosure {
+  return operation.evaluate(operands, (x) => (typeof x === "number" ? ball.fromInt(x) : (x as Enclosure)), prec);
 }
 
 /** An operation of one complex number (a real one is taken as complex) with a real result. */
@@ -26,8 +32,12 @@ export function shadow(name: string, f: (x: Disc, prec: number) => Ball): Operat
 }
 
 /** An operation of one real number. */
-export function realOnly(name: string, f: RealFunction): Operation {
-  return { name, evaluate: ([x], at, prec) => f(asBall(at(x)), prec) };
+export function realOnly(name: string, f: RealFunction, slope: Slope): Operation {
+  return {
+    name,
+    evaluate: ([x], at, prec) => f(asBall(at(x)), prec),
+    differential: ([x], at, d, prec) => value(TIMES, prec, slope(at(x), prec), d(x)),
+  };
 }
 
 /** An operation of two numbers: the real function for two real operands, the complex one else. */
@@ -35,6 +45,7 @@ export function binary(
   name: string,
   real: (x: Ball, y: Ball, prec: number) => Ball,
   complex: (x: Disc, y: Disc, prec: number) => Disc,
+  differential?: Operation["differential"],
 ): Operation {
   return {
     name,
@@ -43,16 +54,33 @@ export function binary(
       const b = at(y);
       return isDisc(a) || isDisc(b) ? complex(asDisc(a), asDisc(b), prec) : real(a, b, prec);
     },
+    ...(differential && { differential }),
   };
 }
 
-export const PLUS: Operation = binary("plus", ball.add, disc.add);
-export const MINUS: Operation = binary("minus", ball.sub, disc.sub);
-export const TIMES: Operation = binary("times", ball.mul, disc.mul);
-export const DIV: Operation = binary("div", ball.div, disc.div);
-export const NEG: Operation = unary("neg", ball.neg, disc.neg);
-export const CONJ: Operation = unary("conj", (x) => x, disc.conj);
-export const SQRT: Operation = unary("sqrt", ball.sqrt, (x, prec) => disc.sqrt(x, prec));
+/** The differential of an operation that is linear over the real numbers: itself, at the differentials. */
+function linear(operation: Operation): Operation {
+  return { ...operation, differential: (operands, _at, d, prec) => operation.evaluate(operands, d, prec) };
+}
+
+export const PLUS: Operation = linear(binary("plus", ball.add, disc.add));
+export const MINUS: Operation = linear(binary("minus", ball.sub, disc.sub));
+export const TIMES: Operation = binary("times", ball.mul, disc.mul, ([x, y], at, d, prec) =>
+  value(PLUS, prec, value(TIMES, prec, d(x), at(y)), value(TIMES, prec, at(x), d(y))),
+);
+// d(x/y) = (dx − (x/y)·dy)/y
+export const DIV: Operation = binary("div", ball.div, disc.div, ([x, y], at, d, prec) => {
+  const quotient = value(DIV, prec, at(x), at(y));
+  return value(DIV, prec, value(MINUS, prec, d(x), value(TIMES, prec, quotient, d(y))), at(y));
+});
+export const NEG: Operation = linear(unary("neg", ball.neg, disc.neg));
+export const CONJ: Operation = linear(unary("conj", (x) => x, disc.conj));
+export const SQRT: Operation = unary(
+  "sqrt",
+  ball.sqrt,
+  (x, prec) => disc.sqrt(x, prec),
+  (x, prec) => value(DIV, prec, ball.fromDouble(0.5), value(SQRT, prec, x)),
+);
 export const ABS: Operation = {
   name: "abs",
   evaluate: ([x], at, prec) => {
@@ -61,18 +89,25 @@ export const ABS: Operation = {
   },
 };
 export const ARG: Operation = shadow("arg", (x, prec) => disc.arg(x, prec));
-export const RE: Operation = shadow("re", disc.real);
-export const IM: Operation = shadow("im", disc.imag);
+export const RE: Operation = linear(shadow("re", disc.real));
+export const IM: Operation = linear(shadow("im", disc.imag));
 /** re + i·im of two real numbers. */
-export const JOIN: Operation = {
+export const JOIN: Operation = linear({
   name: "complex",
   evaluate: ([x, y], at, prec) => disc.fromBalls(asBall(at(x)), asBall(at(y)), prec),
-};
+});
 /** x^n for an integer n, which stands as a plain operand. */
 export const POWER: Operation = {
   name: "pow",
   evaluate: ([x, n], at, prec) => {
-    const value = at(x);
-    return isDisc(value) ? disc.pow(value, n as number, prec) : ball.pow(value, n as number, prec);
+    return powerAt(at(x), n as number, prec);
+  },
+  differential: ([x, n], at, d, prec) => {
+    const slope = value(TIMES, prec, ball.fromInt(n as number), powerAt(at(x), (n as number) - 1, prec));
+    return value(TIMES, prec, slope, d(x));
   },
 };
+
+function powerAt(x: Enclosure, n: number, prec: number): Enclosure {
+  return isDisc(x) ? disc.pow(x, n, prec) : ball.pow(x, n, prec);
+}

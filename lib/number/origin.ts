@@ -21,6 +21,11 @@ export type At = (operand: unknown) => Enclosure;
 export interface Operation {
   readonly name: string;
   evaluate(operands: readonly unknown[], at: At, prec: number): Enclosure;
+  /**
+   * The differential at the same operands, `d(operand)` being that of an operand (exactly 0 for what does not move). Missing where the
+   * operation has none that is known here.
+   */
+  differential?(operands: readonly unknown[], at: At, d: At, prec: number): Enclosure;
 }
 
 export interface Origin {
@@ -84,8 +89,11 @@ export function evaluate(x: Node, prec: number): Enclosure {
   return evaluator(prec)(x);
 }
 
-function evaluator(prec: number): At {
-  const known = new Map<object, Enclosure>();
+/**
+ * Computes values anew with `prec` bits, each once. A node that `known` holds has the enclosure given there: so a record is evaluated at another
+ * argument.
+ */
+export function evaluator(prec: number, known = new Map<object, Enclosure>()): At {
   const at: At = (operand) => {
     if (typeof operand === "bigint" || typeof operand === "number") return ball.fromInt(operand);
     if (operand instanceof Rational) return ball.fromRational(operand, prec);

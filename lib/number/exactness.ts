@@ -13,10 +13,11 @@ type Pair = readonly [Rational, Rational] | readonly [Quadratic, Quadratic];
 function joined(x: Exact, y: Exact): Pair | undefined {
   if (x instanceof Rational) {
     if (y instanceof Rational) return [x, y];
-    return [Quadratic.of(x, 0, y.d), y];
+    return [y.withRational(x), y];
   }
-  if (y instanceof Rational) return [x, Quadratic.of(y, 0, x.d)];
-  return x.d === y.d ? [x, y] : undefined;
+  if (y instanceof Rational) return [x, x.withRational(y)];
+  const same = y.over(x.d);
+  return same && [x, same];
 }
 
 /** A quadratic number without irrational part as a rational one; undefined if too long to carry on. */

@@ -3,13 +3,16 @@ import type { Ball } from "./ball.ts";
 import * as ball from "./ball.ts";
 import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
+import { absBig } from "./fixed/bits.ts";
 import { isqrt } from "./fixed/isqrt.ts";
 import { primitive, Rational } from "./rational.ts";
+import { squarefree } from "./squarefree.ts";
 
 type Operand = Quadratic | Rational | bigint | number;
 
 /**
- * An exact number a + b√d of a quadratic field, d a squarefree integer other than 0 and 1; d = −1 gives the Gaussian rationals.
+ * An exact number a + b√d of a quadratic field, d an integer that is no square; d = −1 gives the Gaussian rationals. d is squarefree as far as
+ * `squarefree` finds its factors; fields that are equal in spite of different d are known as one, since the product of the two is a square.
  * The embedding is the one with √d > 0, or √d = i√|d|; `conjugate()` is the value under the other. Immutable.
  */
 export class Quadratic {
@@ -43,23 +46,25 @@ export class Quadratic {
   }
 
   plus(other: Operand): Quadratic {
-    const y = this.lift(other);
-    return new Quadratic(this.a.plus(y.a), this.b.plus(y.b), this.d);
+    const [x, y] = this.pair(other);
+    return new Quadratic(x.a.plus(y.a), x.b.plus(y.b), x.d);
   }
 
   minus(other: Operand): Quadratic {
-    return this.plus(this.lift(other).neg());
+    const [x, y] = this.pair(other);
+    return new Quadratic(x.a.minus(y.a), x.b.minus(y.b), x.d);
   }
 
   times(other: Operand): Quadratic {
-    const y = this.lift(other);
-    const a = this.a.times(y.a).plus(this.b.times(y.b).times(this.d));
-    return new Quadratic(a, this.a.times(y.b).plus(this.b.times(y.a)), this.d);
+    const [x, y] = this.pair(other);
+    const a = x.a.times(y.a).plus(x.b.times(y.b).times(x.d));
+    return new Quadratic(a, x.a.times(y.b).plus(x.b.times(y.a)), x.d);
   }
 
   /** Throws PoleError for a zero divisor. */
   div(other: Operand): Quadratic {
-    return this.times(this.lift(other).inv());
+    const [x, y] = this.pair(other);
+    return x.times(y.inv());
   }
 
   neg(): Quadratic {
@@ -91,6 +96,11 @@ export class Quadratic {
     return new Quadratic(this.a, this.b.neg(), this.d);
   }
 
+  /** The values under the two embeddings √d > 0 (or √d = i√|d|) and √d < 0 (or −i√|d|). */
+  get embeddings(): readonly [Quadratic, Quadratic] {
+    return [this, this.conjugate()];
+  }
+
   /** a² − d·b². */
   norm(): Rational {
     return this.a.times(this.a).minus(this.b.times(this.b).times(this.d));
@@ -102,10 +112,8 @@ export class Quadratic {
   }
 
   equals(other: Operand): boolean {
-    if (other instanceof Quadratic && other.d !== this.d) {
-      return this.isRational() && other.isRational() && this.a.equals(other.a);
-    }
-    const y = this.lift(other);
+    const y = other instanceof Quadratic ? other.over(this.d) : this.withRational(rational(other));
+    if (!y) return false;
     return this.a.equals(y.a) && this.b.equals(y.b);
   }
 
@@ -148,11 +156,30 @@ export class Quadratic {
     return primitive(hint, this, "quadratic number");
   }
 
-  private lift(other: Operand): Quadratic {
-    if (!(other instanceof Quadratic)) return new Quadratic(rational(other), Rational.zero, this.d);
-    if (other.d === this.d) return other;
-    if (other.isRational()) return new Quadratic(other.a, Rational.zero, this.d);
-    if (this.isRational()) return other;
+  /** The same number with another d of the same field (that of any field, if it is rational); undefined if it is not in that field. */
+  over(d: bigint): Quadratic | undefined {
+    if (d === this.d) return this;
+    if (this.isRational()) return new Quadratic(this.a, Rational.zero, d);
+    if (d < 0n !== this.d < 0n) return undefined;
+    // √d' = √(d·d')/|d| · √d.
+    const product = d * this.d;
+    const root = isqrt(product);
+    if (root * root !== product) return undefined;
+    return new Quadratic(this.a, this.b.times(Rational.of(root, absBig(d))), d);
+  }
+
+  /** A rational number as one of the field of √d, with a d that another number of it has. */
+  withRational(a: Rational): Quadratic {
+    return new Quadratic(a, Rational.zero, this.d);
+  }
+
+  /** Both in one field. Throws DomainError if there is none. */
+  private pair(other: Operand): readonly [Quadratic, Quadratic] {
+    if (!(other instanceof Quadratic)) return [this, this.withRational(rational(other))];
+    if (other.d === this.d) return [this, other];
+    const y = other.over(this.d);
+    if (y) return [this, y];
+    if (this.isRational()) return [other.withRational(this.a), other];
     throw new DomainError({
       subject: "quadratic",
       given: `numbers of Q(√${this.d}) and Q(√${other.d})`,
@@ -169,26 +196,4 @@ function rational(x: Rational | bigint | number): Rational {
 /** √d as an exact number. */
 export function quadratic(d: bigint | number): Quadratic {
   return Quadratic.of(0, 1, d);
-}
-
-/** d = root²·free, up to squares of primes above 10^6 that do not make d a square times small primes. */
-export function squarefree(d: bigint): { root: bigint; free: bigint } {
-  if (d === 0n) return { root: 0n, free: 0n };
-  let rest = d < 0n ? -d : d;
-  let free = d < 0n ? -1n : 1n;
-  let root = 1n;
-  // Once p³ exceeds the rest, it is 1, a prime, two primes or the square of one.
-  for (let p = 2n; p <= 1_000_000n && p * p * p <= rest; p += p === 2n ? 1n : 2n) {
-    for (; rest % (p * p) === 0n; rest /= p * p) root *= p;
-    if (rest % p === 0n) {
-      rest /= p;
-      free *= p;
-    }
-  }
-  const s = isqrt(rest);
-  if (s * s === rest) return { root: root * s, free };
-  for (const p of [2n, 3n]) {
-    if (rest % (p * p) === 0n) return { root: root * p, free: free * (rest / (p * p)) };
-  }
-  return { root, free: free * rest };
 }

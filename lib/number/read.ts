@@ -90,7 +90,20 @@ interface Token {
   readonly value?: Exact;
 }
 
-const PATTERN = /\s*(?:(\d+\.?\d*(?:[eE][-+−]?\d+)?|\.\d+(?:[eE][-+−]?\d+)?)|(\*\*|[-+−*/^()·×√])|(sqrt|i))/y;
+// The commands are those of TeX; spacing and \\left, \\right say nothing.
+const PATTERN =
+  /(?:\s|\\[,;! ]|\\left(?=\()|\\right(?=\)))*(?:(\d+\.?\d*(?:[eE][-+−]?\d+)?|\.\d+(?:[eE][-+−]?\d+)?)|(\*\*|\\cdot(?![a-z])|\\times(?![a-z])|[-+−*/^()·×√{}])|(\\?sqrt|\\[dt]?frac|i))/y;
+
+/** One spelling for each sign and name. */
+const SPELLED: Readonly<Record<string, string>> = {
+  "\\cdot": "·",
+  "\\times": "×",
+  sqrt: "√",
+  "√": "√",
+  "\\frac": "frac",
+  "\\dfrac": "frac",
+  "\\tfrac": "frac",
+};
 
 function tokens(pieces: readonly Piece[], subject: string): Token[] {
   const found: Token[] = [];
@@ -114,7 +127,8 @@ function tokens(pieces: readonly Piece[], subject: string): Token[] {
       const [all, number, sign, name] = match!;
       const word = number ?? sign ?? name!;
       const kind = number !== undefined ? "number" : sign !== undefined ? "sign" : "name";
-      found.push({ kind, text: word, at: at + all!.length - word.length, piece, spaced: all!.length > word.length });
+      const start = at + all!.length - word.length;
+      found.push({ kind, text: SPELLED[word] ?? word, at: start, piece, spaced: all!.length > word.length });
     }
   });
   return found;
@@ -203,7 +217,7 @@ class Reader {
     const minus = this.peek();
     const negative = minus !== undefined && isSign(minus, "-", "−");
     if (negative) this.next++;
-    const exponent = this.factor();
+    const exponent = this.group();
     const n = exponent instanceof Rational && exponent.den === 1n ? Number(exponent.num) : Number.NaN;
     const result = Math.abs(n) <= 10_000 ? power(base, negative ? -n : n) : undefined;
     return result ?? this.refuse(t, "an integer exponent that keeps the number short");
@@ -216,20 +230,42 @@ class Reader {
     if (t.kind === "number") return Rational.parse(t.text.replace("−", "-"));
     if (t.kind === "value") return t.value!;
     if (t.text === "i") return Quadratic.of(0, 1, -1);
-    if (t.text === "√" || t.text === "sqrt") return this.rootOf(t);
-    if (t.text === "(") {
-      const value = this.sum();
-      const close = this.peek();
-      if (close?.text !== ")") return this.refuse(close, "a closing bracket");
-      this.next++;
-      return value;
-    }
+    if (t.text === "√") return this.rootOf(t, () => this.group());
+    if (t.text === "\\sqrt") return this.rootOf(t, () => this.braced());
+    if (t.text === "frac") return this.combined("div", this.braced(), this.braced(), t);
+    if (t.text === "(") return this.closedBy(")");
     this.next--;
     return this.refuse(t, "a number, i, √ or an opening bracket");
   }
 
-  private rootOf(t: Token): Exact {
-    const radicand = this.factor();
+  private closedBy(bracket: string): Exact {
+    const value = this.sum();
+    const close = this.peek();
+    if (close?.text !== bracket) return this.refuse(close, "a closing bracket");
+    this.next++;
+    return value;
+  }
+
+  /** A group in braces, or one digit; of more TeX itself would take the first alone. */
+  private braced(): Exact {
+    const t = this.peek();
+    if (t?.text === "{" || (t?.kind === "number" && t.text.length === 1)) return this.group();
+    return this.refuse(t, "braces");
+  }
+
+  /** A group in braces, or one factor. */
+  private group(): Exact {
+    if (this.peek()?.text !== "{") return this.factor();
+    this.next++;
+    return this.closedBy("}");
+  }
+
+  private rootOf(t: Token, argument: () => Exact): Exact {
+    // A sign right after the root belongs to the radicand: √-163.
+    const sign = this.peek();
+    const negative = sign !== undefined && isSign(sign, "-", "−");
+    if (negative) this.next++;
+    const radicand = negative ? argument().neg() : argument();
     return root(radicand) ?? this.refuse(t, "the root of a rational number");
   }
 

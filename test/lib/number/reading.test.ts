@@ -34,12 +34,19 @@ describe("reading", () => {
       ["−1/2", "-1/2"],
       ["(1+i)(1-i)", "2"],
       ["2√3", "2 √3"],
+      ["√-5", "√(-5)"],
+      ["√-4 + 1", "1 + 2 i"],
+      ["\\sqrt{-5}", "√(-5)"],
+      ["\\frac{1}{2} + \\frac3{4} i", "1/2 + 3/4 i"],
+      ["2\\cdot\\left(1 + i\\right)^{2}", "4 i"],
     ];
     for (const [text, shown] of cases)
       expect(complex(text).toString()).toBe(
         shown.includes("√") && !shown.includes("(") ? complex(shown).toString() : shown,
       );
     expect(exact`(1+√5)/2`.toString()).toBe("1/2 + 1/2 √5");
+    expect(exact`(1+√-163)/2`.toString()).toBe("1/2 + 1/2 √(-163)");
+    expect(exact`\frac{1+\sqrt{5}}{2}`.toString()).toBe("1/2 + 1/2 √5");
     expect(exact`1/${rational("1/3")} + ${2} i`.toString()).toBe("3 + 2 i");
   });
 
@@ -74,6 +81,8 @@ describe("reading", () => {
       ["√2 + √3", /one quadratic field/],
       ["2^(1/2)", /integer exponent/],
       ["1e9999999", /exponent/],
+      ["\\frac12{3}", /expected braces/],
+      ["\\sqrt12", /expected braces/],
     ];
     for (const [text, message] of cases) {
       expect(() => complex(text)).toThrow(DomainError);

@@ -21,6 +21,8 @@ export interface KernelOptions {
   readonly createCells: (options: CellSessionOptions) => Promise<CellSession>;
   /** Where the history is kept; absent: nowhere. */
   readonly historyFile?: HistoryFile;
+  /** How long the first cell waits for a listener, in ms. */
+  readonly audience?: number;
 }
 
 export interface Kernel {
@@ -32,7 +34,7 @@ export interface Kernel {
   readonly ended: Promise<void>;
 }
 
-/** How long the first cell waits for a listener, in ms. */
+/** A moment that no user notices, in which a client that is there gets its subscription through. In ms. */
 const AUDIENCE = 250;
 /** How long the end may take, in ms. Hosts kill after 2.5 s. */
 const ENDING = 1500;
@@ -61,6 +63,7 @@ export async function startKernel(connection: Connection, options: KernelOptions
     async () => (await history()).close(),
     () => wire.close(),
   ]);
+  let hurry = ignore;
   const service: Service = {
     output,
     runs,
@@ -68,13 +71,19 @@ export async function startKernel(connection: Connection, options: KernelOptions
     executionCount: 0,
     interruptions: 0,
     cells,
-    audience: once(() => within(AUDIENCE, wire.subscribed, undefined)),
+    audience: once(() => {
+      const interrupted = new Promise<void>((resolve) => {
+        hurry = resolve;
+      });
+      return within(options.audience ?? AUDIENCE, Promise.race([wire.subscribed, interrupted]), undefined);
+    }),
     async abortQueued() {
       await arrived(wire);
       abortCells();
     },
     interrupt() {
       service.interruptions += 1;
+      hurry();
       brake.release();
       void cells().then((session) => session.interrupt(), ignore);
     },

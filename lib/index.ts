@@ -37,6 +37,7 @@ export { Rational } from "./number/rational.ts";
 export { type Recognition, recognise } from "./number/recognise.ts";
 export { eulerGamma, i, π } from "./number/symbols.ts";
 export { Complex, type ComplexNumeric, type Numeric, Real } from "./number/values.ts";
+export { zero } from "./number/zero.ts";
 
 // Lattices and curves
 

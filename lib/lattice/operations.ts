@@ -6,6 +6,7 @@ import { reducedDiscriminant, reducedJ } from "../function/reduced.ts";
 import { LatticePointError, type Wanted } from "../function/weierstrass.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
+import { DIV, MINUS, NEG, TIMES, value } from "../number/operations.ts";
 import {
   type At,
   asDisc,
@@ -114,14 +115,40 @@ export const COORDINATE = operation("coordinate", (lattice, [z, index], at, prec
 
 /** [lattice, z]: a Weierstrass function at a number. */
 function atNumber(name: string, wanted: Wanted): Operation {
-  return operation(name, (lattice, [z], at, prec) =>
+  const evaluate = operation(name, (lattice, [z], at, prec) =>
     persistent(lattice, name, z, at, prec, (x, bits) => weierstrassValues(lattice, x, bits, [wanted])[wanted]!),
   );
+  return moving(evaluate, 1, (operands, at, prec) => derivativeOf(wanted, "number", operands, at, prec));
+}
+
+/** The operation with its differential, where only the operand of this index moves. */
+export function moving(operation: Operation, index: number, slope: Operation["evaluate"]): Operation {
+  return {
+    ...operation,
+    differential: (operands, at, d, prec) => value(TIMES, prec, slope(operands, at, prec), d(operands[index])),
+  };
+}
+
+/** ℘′, ℘″ = 6℘² − g2/2, −℘ or σζ: the derivative of a Weierstrass function. */
+function derivativeOf(
+  wanted: Wanted,
+  place: "number" | "point",
+  operands: readonly unknown[],
+  at: At,
+  prec: number,
+): Enclosure {
+  const one = (name: Wanted) => WEIERSTRASS[name][place].evaluate(operands, at, prec);
+  if (wanted === "wp") return one("prime");
+  if (wanted === "zeta") return value(NEG, prec, one("wp"));
+  if (wanted === "sigma") return value(TIMES, prec, one("sigma"), one("zeta"));
+  const x = one("wp");
+  const halfG2 = value(DIV, prec, real(invariants(operands[0] as PeriodLattice, prec).g2), 2);
+  return value(MINUS, prec, value(TIMES, prec, value(TIMES, prec, x, x), 6), halfG2);
 }
 
 /** [lattice, r, s] or [lattice, r, s, number]: the same at r ω1 + s ω2 (+ number). */
 function atPoint(name: string, wanted: Wanted): Operation {
-  return operation(name, (lattice, [r, s, rest], at, prec) => {
+  const evaluate = operation(name, (lattice, [r, s, rest], at, prec) => {
     const where = [r as Rational, s as Rational] as const;
     if (rest === undefined) return valuesAtPoint(lattice, where, undefined, prec, [wanted])[wanted]!;
     return persistent(
@@ -133,6 +160,7 @@ function atPoint(name: string, wanted: Wanted): Operation {
       (x, bits) => valuesAtPoint(lattice, where, x, bits, [wanted])[wanted]!,
     );
   });
+  return moving(evaluate, 3, (operands, at, prec) => derivativeOf(wanted, "point", operands, at, prec));
 }
 
 /** Tries again with more bits of the argument where a pole cannot be told from it. */

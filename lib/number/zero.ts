@@ -244,7 +244,7 @@ function stuck({ low, high }: Interval, failure: LibraryError | undefined): Unde
   return new UndecidedError({
     subject: "zero",
     given: failure
-      ? `near ${place} the function stays open: ${failure.message}`
+      ? `near ${place} the function stays open (${failure.subject}: ${failure.given})`
       : `near ${place} neither f nor f′ is away from 0`,
     expected: "a simple zero, or none",
     hint: failure

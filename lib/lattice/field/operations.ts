@@ -6,14 +6,14 @@ import { type At, asDisc, type Enclosure, type NumberStanding, type Operation } 
 import type { Rational } from "../../number/rational.ts";
 import { PoleError } from "../../proof/errors.ts";
 import { invariants } from "../context.ts";
-import { persistent } from "../operations.ts";
+import { moving, persistent } from "../operations.ts";
 import type { PeriodLattice } from "../period-lattice.ts";
 import { standingOf } from "../quantity.ts";
 import { type Coordinates, valuesAtPoint } from "../torus.ts";
 import { weierstrassValues } from "../values.ts";
 import { discField } from "./disc-field.ts";
 import { coordinatesOf, type DivisorPoint, placeOf } from "./divisor.ts";
-import type { Element } from "./element.ts";
+import { deriveElement, type Element } from "./element.ts";
 import { polynomialDisc, scalarDisc, valueAt } from "./evaluate.ts";
 import { type Condition, discSize, numerator, productOfLinear } from "./interpolation.ts";
 import { type Parts, seriesAtOrigin, seriesAtPoint } from "./laurent.ts";
@@ -49,23 +49,40 @@ function operation(
 const PAIR = ["wp", "prime"] as const;
 
 /** [expression, z]. */
-export const VALUE = operation("elliptic function", (f, [z], at, prec) =>
-  persistent(f.field.lattice, "elliptic function", z, at, prec, (x, bits) => {
-    const { wp, prime } = weierstrassValues(f.field.lattice, x, bits + 16, PAIR);
-    return valueAt(f, wp!, prime!, bits);
-  }),
+export const VALUE: Operation = moving(
+  operation("elliptic function", (f, [z], at, prec) =>
+    persistent(f.field.lattice, "elliptic function", z, at, prec, (x, bits) => {
+      const { wp, prime } = weierstrassValues(f.field.lattice, x, bits + 16, PAIR);
+      return valueAt(f, wp!, prime!, bits);
+    }),
+  ),
+  1,
+  ([f, ...place], at, prec) => VALUE.evaluate([derived(f), ...place], at, prec),
 );
 
+const derivatives = new WeakMap<object, Expression>();
+
+function derived(f: unknown): Expression {
+  const expression = f as Expression;
+  const known = derivatives.get(expression) ?? expressionOf(deriveElement(expression.element));
+  derivatives.set(expression, known);
+  return known;
+}
+
 /** [expression, r, s] or [expression, r, s, number]. */
-export const VALUE_AT_POINT = operation("elliptic function", (f, [r, s, rest], at, prec) => {
-  const where = [r as Rational, s as Rational] as const;
-  const evaluate = (x: Disc | undefined, bits: number) => {
-    const { wp, prime } = valuesAtPoint(f.field.lattice, where, x, bits + 16, PAIR);
-    return valueAt(f, wp!, prime!, bits);
-  };
-  if (rest === undefined) return evaluate(undefined, prec);
-  return persistent(f.field.lattice, "elliptic function", rest, at, prec, evaluate);
-});
+export const VALUE_AT_POINT: Operation = moving(
+  operation("elliptic function", (f, [r, s, rest], at, prec) => {
+    const where = [r as Rational, s as Rational] as const;
+    const evaluate = (x: Disc | undefined, bits: number) => {
+      const { wp, prime } = valuesAtPoint(f.field.lattice, where, x, bits + 16, PAIR);
+      return valueAt(f, wp!, prime!, bits);
+    };
+    if (rest === undefined) return evaluate(undefined, prec);
+    return persistent(f.field.lattice, "elliptic function", rest, at, prec, evaluate);
+  }),
+  3,
+  ([f, ...place], at, prec) => VALUE_AT_POINT.evaluate([derived(f), ...place], at, prec),
+);
 
 /** [expression, divisor point]: its place in the plane. */
 export const PLACE = operation("zero or pole", (_f, [point], _at, prec) => placeOf(point as DivisorPoint, prec));

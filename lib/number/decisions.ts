@@ -44,6 +44,7 @@ export function equalNodes(x: Node, y: Node): boolean {
   if (sameConstruction(x, y, 64)) return true;
   const apart = (a: Enclosure, b: Enclosure): true | undefined => (overlap(a, b) ? undefined : true);
   if (apart(x.enclosure, y.enclosure)) return false;
+  if (x.enclosure.rad === 0 && y.enclosure.rad === 0) return true;
   const different =
     refinable(x) || refinable(y) ? climb((prec) => apart(evaluate(x, prec), evaluate(y, prec))) : undefined;
   if (different) return false;

@@ -41,5 +41,5 @@ export {
   toDouble,
   zero,
 } from "./disc/data.ts";
-export { exp, type SinCos, sinCos, sqrt } from "./disc/elementary.ts";
-export { acos, arg, asin, atan, ln, power, sinhCosh, tan } from "./disc/log.ts";
+export { type CutOptions, exp, meetsCut, type SinCos, sinCos, sqrt } from "./disc/elementary.ts";
+export { acos, acosh, arg, asin, asinh, atan, atanh, ln, nthRoot, power, sinhCosh, tan } from "./disc/log.ts";

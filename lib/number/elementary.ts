@@ -1,8 +1,8 @@
 // The elementary functions as operations that a value records, with their differentials.
 import * as ball from "./ball.ts";
 import * as disc from "./disc.ts";
-import { binary, DIV, MINUS, NEG, PLUS, realOnly, SQRT, TIMES, unary, value } from "./operations.ts";
-import { asBall, type Enclosure, type Operation } from "./origin.ts";
+import { binary, DIV, MINUS, NEG, PLUS, SQRT, TIMES, unary, value } from "./operations.ts";
+import { asBall, type Enclosure, isDisc, type Operation } from "./origin.ts";
 import type { Rational } from "./rational.ts";
 
 const plus = (x: Enclosure | number, y: Enclosure | number, prec: number) => value(PLUS, prec, x, y);
@@ -65,13 +65,13 @@ export const ACOS: Operation = unary("acos", ball.acos, disc.acos, (x, prec) =>
 export const ATAN: Operation = unary("atan", ball.atan, disc.atan, (x, prec) =>
   over(1, plus(1, square(x, prec), prec), prec),
 );
-export const ASINH: Operation = realOnly("asinh", ball.asinh, (x, prec) =>
+export const ASINH: Operation = unary("asinh", ball.asinh, disc.asinh, (x, prec) =>
   over(1, root(plus(1, square(x, prec), prec), prec), prec),
 );
-export const ACOSH: Operation = realOnly("acosh", ball.acosh, (x, prec) =>
-  over(1, root(minus(square(x, prec), 1, prec), prec), prec),
+export const ACOSH: Operation = unary("acosh", ball.acosh, disc.acosh, (x, prec) =>
+  over(1, times(root(plus(x, 1, prec), prec), root(minus(x, 1, prec), prec), prec), prec),
 );
-export const ATANH: Operation = realOnly("atanh", ball.atanh, (x, prec) =>
+export const ATANH: Operation = unary("atanh", ball.atanh, disc.atanh, (x, prec) =>
   over(1, minus(1, square(x, prec), prec), prec),
 );
 export const AGM: Operation = binary("agm", ball.agm, disc.agm);
@@ -96,7 +96,10 @@ export const ATAN2: Operation = {
 };
 export const ROOT: Operation = {
   name: "nthRoot",
-  evaluate: ([x, n], at, prec) => ball.nthRoot(asBall(at(x)), n as number, prec),
+  evaluate: ([x, n], at, prec) => {
+    const z = at(x);
+    return isDisc(z) ? disc.nthRoot(z, n as number, prec) : ball.nthRoot(z, n as number, prec);
+  },
   differential: ([x, n], at, d, prec) =>
     over(times(value(ROOT, prec, at(x), n), d(x), prec), times(n as number, at(x), prec), prec),
 };

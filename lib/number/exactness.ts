@@ -1,5 +1,5 @@
 // Exact arithmetic of rational and quadratic numbers as far as it stays within one field and within bounds.
-import { bitLength } from "./fixed/bits.ts";
+import { absBig, bitLength } from "./fixed/bits.ts";
 import { isqrt } from "./fixed/isqrt.ts";
 import type { Exact } from "./origin.ts";
 import { Quadratic } from "./quadratic.ts";
@@ -62,6 +62,28 @@ export function root(x: Exact | undefined): Exact | undefined {
   const whole = rationalRoot(x.abs());
   if (whole) return negative ? Quadratic.of(0, whole, -1) : whole;
   return settled(Quadratic.of(0, Rational.of(1n, x.den), x.num * x.den));
+}
+
+/** The real n-th root of a rational number, if it is rational: >= 0 of one >= 0, of a negative one for odd n. */
+export function rationalRootOf(x: Exact | undefined, n: number): Rational | undefined {
+  if (!(x instanceof Rational) || !Number.isSafeInteger(n) || n < 1 || (x.num < 0n && n % 2 === 0)) return undefined;
+  const num = integerRoot(absBig(x.num), n);
+  const den = integerRoot(x.den, n);
+  if (num === undefined || den === undefined) return undefined;
+  return Rational.of(x.num < 0n ? -num : num, den);
+}
+
+/** The n-th root of an integer >= 0, if it is one: by bisection on its few bits. */
+function integerRoot(a: bigint, n: number): bigint | undefined {
+  if (a <= 1n || n === 1) return a;
+  let low = 1n;
+  let high = 1n << BigInt(Math.ceil(bitLength(a) / n));
+  while (low < high) {
+    const middle = (low + high) >> 1n;
+    if (middle ** BigInt(n) < a) low = middle + 1n;
+    else high = middle;
+  }
+  return low ** BigInt(n) === a ? low : undefined;
 }
 
 function rationalRoot(x: Rational): Rational | undefined {

@@ -2,6 +2,15 @@
 import { DomainError, PrecisionError } from "../proof/errors.ts";
 import { bitsOf, checkedDigits, mostBits, within } from "./context.ts";
 import {
+  ARG_ACROSS,
+  type Continued,
+  continuedFrom,
+  LN_ACROSS,
+  POW_ACROSS,
+  ROOT_ACROSS,
+  SQRT_ACROSS,
+} from "./continued.ts";
+import {
   ACOS,
   ACOSH,
   AGM,
@@ -22,9 +31,9 @@ import {
   TAN,
   TANH,
 } from "./elementary.ts";
-import { power as exactPower, root } from "./exactness.ts";
+import { power as exactPower, rationalRootOf, root } from "./exactness.ts";
 import { ARG, SQRT } from "./operations.ts";
-import { accuracy, mayPass, type Operation } from "./origin.ts";
+import { accuracy, type Exact, mayPass, type Operation } from "./origin.ts";
 import { Rational } from "./rational.ts";
 import { apply, birthOf, Complex, type ComplexNumeric, type Numeric, Real, scalar } from "./values.ts";
 
@@ -42,15 +51,19 @@ const at =
 
 /**
  * The square root >= 0 of a real number >= 0; the principal root, real part >= 0, of a complex one.
- * Throws DomainError for a negative real number (complex(x) has a root), BranchError for an enclosure that holds both signs or meets the cut.
+ *
+ * Branch   cut along the negative real axis, which belongs to the upper side. A complex enclosure that meets it is refused, unless { cut: "continuous" }
+ *          asks to go on across the cut from its midpoint.
+ * Throws   DomainError for a negative real number (complex(x) has a root), BranchError for an enclosure that holds both signs or meets the cut.
  * @example sqrt(2)   // 1.4142135623730950488...
  */
 export function sqrt(x: Numeric): Real;
-export function sqrt(x: ComplexNumeric): Real | Complex;
-export function sqrt(x: ComplexNumeric): Real | Complex {
+export function sqrt(x: ComplexNumeric, options?: Continued): Real | Complex;
+export function sqrt(x: ComplexNumeric, options: Continued = {}): Real | Complex {
   const value = scalar(x, "sqrt");
   if (value instanceof Real) return value.sqrt();
-  return apply(SQRT, [value], root(value.exact));
+  const side = continuedFrom(value, options);
+  return side ? apply(SQRT_ACROSS, [value, side]) : apply(SQRT, [value], root(value.exact));
 }
 
 /** e^x; exactly 1 for x = 0. */
@@ -61,14 +74,17 @@ export function exp(x: ComplexNumeric): Real | Complex {
 }
 
 /**
- * The natural logarithm of a positive number, or the principal one of a complex number: imaginary part in (−π, π], the negative real
- * axis belongs to the upper side.
- * Throws DomainError for 0 and for a negative real number, BranchError for an enclosure that meets the cut.
+ * The natural logarithm of a positive number, or the principal one of a complex number: imaginary part in (−π, π].
+ *
+ * Branch   cut along the negative real axis, which belongs to the upper side; { cut: "continuous" } as for `sqrt`.
+ * Throws   DomainError for 0 and for a negative real number, BranchError for an enclosure that meets the cut.
  */
 export function ln(x: Numeric): Real;
-export function ln(x: ComplexNumeric): Real | Complex;
-export function ln(x: ComplexNumeric): Real | Complex {
-  return one(LN, x, at(1, 0));
+export function ln(x: ComplexNumeric, options?: Continued): Real | Complex;
+export function ln(x: ComplexNumeric, options: Continued = {}): Real | Complex {
+  const value = scalar(x, "ln");
+  const side = value instanceof Complex ? continuedFrom(value, options) : undefined;
+  return side ? apply(LN_ACROSS, [value, side]) : one(LN, value, at(1, 0));
 }
 
 /** sin x, x in radians. */
@@ -134,19 +150,35 @@ export function atan(x: ComplexNumeric): Real | Complex {
   return one(ATAN, x, at(0, 0));
 }
 
-/** Inverse hyperbolic sine: ln(x + √(x² + 1)), the principal values of both. */
-export function asinh(x: Numeric): Real {
-  return apply(ASINH, [Real.from(x)]) as Real;
+/**
+ * Inverse hyperbolic sine: ln(x + √(x² + 1)), the principal values of both.
+ * Branch   cuts along the imaginary axis beyond ±i.
+ */
+export function asinh(x: Numeric): Real;
+export function asinh(x: ComplexNumeric): Real | Complex;
+export function asinh(x: ComplexNumeric): Real | Complex {
+  return one(ASINH, x, at(0, 0));
 }
 
-/** The value >= 0, for x >= 1. */
-export function acosh(x: Numeric): Real {
-  return apply(ACOSH, [Real.from(x)]) as Real;
+/**
+ * Inverse hyperbolic cosine: >= 0 for a real x >= 1; of a complex one ln(x + √(x + 1)√(x − 1)).
+ * Branch   cut along the real axis below 1, which belongs to the upper side.
+ * Throws   DomainError for a real x < 1 (complex(x) has a value), BranchError for a disc that meets the cut.
+ */
+export function acosh(x: Numeric): Real;
+export function acosh(x: ComplexNumeric): Real | Complex;
+export function acosh(x: ComplexNumeric): Real | Complex {
+  return one(ACOSH, x, at(1, 0));
 }
 
-/** For |x| < 1. */
-export function atanh(x: Numeric): Real {
-  return apply(ATANH, [Real.from(x)]) as Real;
+/**
+ * Inverse hyperbolic tangent, for a real |x| < 1 or a complex x.
+ * Branch   cuts along the real axis beyond ±1. Throws PoleError at ±1, DomainError for a real |x| > 1.
+ */
+export function atanh(x: Numeric): Real;
+export function atanh(x: ComplexNumeric): Real | Complex;
+export function atanh(x: ComplexNumeric): Real | Complex {
+  return one(ATANH, x, at(0, 0));
 }
 
 /** The angle of the point (x, y), in (−π, π]; of a negative x with exact y = 0 it is π. Throws BranchError where the enclosures meet the cut. */
@@ -154,9 +186,14 @@ export function atan2(y: Numeric, x: Numeric): Real {
   return apply(ATAN2, [Real.from(y), Real.from(x)]) as Real;
 }
 
-/** The argument in (−π, π], the negative real axis belonging to the upper side. Throws DomainError for 0, BranchError on the cut. */
-export function arg(x: ComplexNumeric): Real {
+/**
+ * The argument in (−π, π], the negative real axis belonging to the upper side; { cut: "continuous" } as for `sqrt`.
+ * Throws DomainError for 0, BranchError for an enclosure that meets the cut.
+ */
+export function arg(x: ComplexNumeric, options: Continued = {}): Real {
   const value = scalar(x, "arg");
+  const side = value instanceof Complex ? continuedFrom(value, options) : undefined;
+  if (side) return apply(ARG_ACROSS, [value, side]) as Real;
   const positive = value.exact instanceof Rational && value.exact.num > 0n;
   return apply(ARG, [value], positive ? Rational.zero : undefined) as Real;
 }
@@ -171,23 +208,37 @@ export function conj(x: ComplexNumeric): Complex {
   return Complex.from(x).conj();
 }
 
-/** x^y: an integer power by products, any other by exp(y·ln x), principal. */
+/** x^y: an integer power by products, any other by exp(y·ln x), principal; branch and { cut: "continuous" } as for `ln`. */
 export function pow(x: Numeric, y: Numeric): Real;
-export function pow(x: ComplexNumeric, y: ComplexNumeric): Real | Complex;
-export function pow(x: ComplexNumeric, y: ComplexNumeric): Real | Complex {
+export function pow(x: ComplexNumeric, y: ComplexNumeric, options?: Continued): Real | Complex;
+export function pow(x: ComplexNumeric, y: ComplexNumeric, options: Continued = {}): Real | Complex {
   const base = scalar(x, "pow");
   const exponent = scalar(y, "pow");
   if (exponent.exact instanceof Rational && exponent.exact.den === 1n) return base.pow(Number(exponent.exact.num));
-  const half =
-    exponent.exact instanceof Rational && exponent.exact.den === 2n && base.exact instanceof Rational
-      ? root(base.exact)
-      : undefined;
-  return apply(POW, [base, exponent], half && exactPower(half, Number((exponent.exact as Rational).num)));
+  const side = base instanceof Complex ? continuedFrom(base, options) : undefined;
+  if (side) return apply(POW_ACROSS, [base, exponent, side]);
+  return apply(POW, [base, exponent], fractionalPower(base.exact, exponent.exact));
 }
 
-/** The n-th root of a real number: >= 0 of one >= 0; of a negative one for odd n only. */
-export function nthRoot(x: Numeric, n: number): Real {
-  return apply(ROOT, [Real.from(x), n]) as Real;
+/** x^(m/n) for a rational x >= 0 whose n-th root is exact; square roots also where they are quadratic. */
+function fractionalPower(x: Exact | undefined, y: Exact | undefined): Exact | undefined {
+  if (!(x instanceof Rational && y instanceof Rational)) return undefined;
+  const base = y.den === 2n ? root(x) : x.num >= 0n && y.den < 1000n ? rationalRootOf(x, Number(y.den)) : undefined;
+  return base && exactPower(base, Number(y.num));
+}
+
+/**
+ * The n-th root of a real number: >= 0 of one >= 0, of a negative one for odd n only. Of a complex number the principal one, exp((ln x)/n).
+ * Branch   as for `ln`, with { cut: "continuous" } too. The real root of −8 is −2, the principal one of complex(-8) is 1 + √3 i.
+ */
+export function nthRoot(x: Numeric, n: number): Real;
+export function nthRoot(x: ComplexNumeric, n: number, options?: Continued): Real | Complex;
+export function nthRoot(x: ComplexNumeric, n: number, options: Continued = {}): Real | Complex {
+  const value = scalar(x, "nthRoot");
+  const side = value instanceof Complex ? continuedFrom(value, options) : undefined;
+  if (side) return apply(ROOT_ACROSS, [value, n, side]);
+  const principal = value instanceof Real || (value.exact?.sign() ?? -1) >= 0;
+  return apply(ROOT, [value, n], principal ? rationalRootOf(value.exact, n) : undefined);
 }
 
 /**

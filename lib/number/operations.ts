@@ -31,15 +31,6 @@ export function shadow(name: string, f: (x: Disc, prec: number) => Ball): Operat
   return { name, evaluate: ([x], at, prec) => f(asDisc(at(x)), prec) };
 }
 
-/** An operation of one real number. */
-export function realOnly(name: string, f: RealFunction, slope: Slope): Operation {
-  return {
-    name,
-    evaluate: ([x], at, prec) => f(asBall(at(x)), prec),
-    differential: ([x], at, d, prec) => value(TIMES, prec, slope(at(x), prec), d(x)),
-  };
-}
-
 /** An operation of two numbers: the real function for two real operands, the complex one else. */
 export function binary(
   name: string,

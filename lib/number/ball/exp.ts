@@ -67,7 +67,7 @@ export function ln(x: Ball, prec: number): Ball {
     subject: "ln",
     given: s === 0 ? "0" : "a negative number",
     expected: "a positive number",
-    hint: s === 0 ? "" : "The logarithm of a complex number is taken by complex(x).ln().",
+    hint: s === 0 ? "" : "ln(complex(x)) takes others.",
   });
 }
 

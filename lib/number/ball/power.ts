@@ -1,5 +1,5 @@
 // Roots and powers of balls beyond squares, tangent, inverse hyperbolic functions.
-import { DomainError } from "../../proof/errors.ts";
+import { DomainError, PoleError } from "../../proof/errors.ts";
 import { bitLength } from "../fixed/bits.ts";
 import { add, div, ldexp, mul, neg, pow, round, sqrt, sub } from "./arithmetic.ts";
 import { type Ball, finish, fromInt, isZero, magnitude, one, sign, zero } from "./data.ts";
@@ -69,16 +69,35 @@ export function asinh(x: Ball, prec: number): Ball {
   return ln(add(x, root, work), prec);
 }
 
-/** acosh x >= 0 for x >= 1. Errors as for the root of x² − 1. */
+/** acosh x >= 0 for x >= 1. Throws DomainError for a number below 1, BranchError for an enclosure that holds 1 and smaller numbers. */
 export function acosh(x: Ball, prec: number): Ball {
   const work = prec + 12;
-  const root = sqrt(mul(sub(x, one, work), add(x, one, work), work), work);
+  const off = sub(x, one, work);
+  if (sign(off) === -1) throw outside("acosh", "a number below 1", "a number >= 1");
+  const root = sqrt(mul(off, add(x, one, work), work), work);
   return magnitude(root) < 0 ? asinh(root, prec) : ln(add(x, root, work), prec);
 }
 
-/** atanh x = ½ ln((1 + x)/(1 − x)) for |x| < 1. */
+/** atanh x = ½ ln((1 + x)/(1 − x)) for |x| < 1. Throws PoleError at ±1 or for an enclosure that holds 1, DomainError beyond. */
 export function atanh(x: Ball, prec: number): Ball {
   if (isZero(x)) return zero;
   const work = prec + 12 + Math.max(0, -magnitude(x));
-  return ldexp(ln(div(add(one, x, work), sub(one, x, work), work), prec), -1);
+  const above = add(one, x, work);
+  const below = sub(one, x, work);
+  if (isZero(above) || isZero(below)) {
+    throw new PoleError({
+      subject: "atanh",
+      given: isZero(below) ? "1" : "−1",
+      expected: "a number between −1 and 1",
+      argument: "x",
+    });
+  }
+  if (sign(above) === -1 || sign(below) === -1)
+    throw outside("atanh", "a number beyond ±1", "a number between −1 and 1");
+  return ldexp(ln(div(above, below, work), prec), -1);
+}
+
+function outside(name: string, given: string, expected: string): DomainError {
+  const hint = `${name}(complex(x)) takes others.`;
+  return new DomainError({ subject: name, given, expected, hint, argument: "x" });
 }

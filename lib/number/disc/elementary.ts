@@ -7,7 +7,7 @@ import { sinhCosh } from "../ball/hyperbolic.ts";
 import { sinCos as ballSinCos } from "../ball/trig.ts";
 import { absBig, bitLength, DOWN, scaledRadius, shift, size, sizePower, UP } from "../fixed/bits.ts";
 import { complexSqrt } from "../fixed/complex-sqrt.ts";
-import { mulBall, widenBy } from "./arithmetic.ts";
+import { mulBall, neg, widenBy } from "./arithmetic.ts";
 import {
   along,
   below,
@@ -24,10 +24,20 @@ import {
   zero,
 } from "./data.ts";
 
-/** How a disc that meets the cut of a function is treated. */
+/**
+ * How a disc that meets the cut of a function is treated: "continuous" goes on across it from the midpoint, "upper" and "lower" go on from that side of
+ * the cut, whatever side the midpoint is on (the upper side has the cut itself).
+ */
 export interface CutOptions {
-  /** "continuous" goes on from the midpoint across the cut. */
-  readonly cut?: "continuous";
+  readonly cut?: "continuous" | "upper" | "lower";
+}
+
+/** 0 if the principal branch at the midpoint is the one that the options ask for, else the full turns to add to the argument: 1 or −1. */
+export function turnsAcross(x: Disc, { cut }: CutOptions): -1 | 0 | 1 {
+  if (cut === undefined || cut === "continuous" || x.re >= 0n) return 0;
+  const side = x.im >= 0n ? "upper" : "lower";
+  if (side === cut) return 0;
+  return cut === "upper" ? 1 : -1;
 }
 
 /**
@@ -45,8 +55,9 @@ export function sqrt(x: Disc, prec: number, options: CutOptions = {}): Disc {
     if (s !== undefined) return fromBall(real.sqrt(along(x), prec));
   }
   if (isZero(x)) return zero;
-  if (containsZero(x) || (options.cut !== "continuous" && meetsCut(x))) throw onCut("sqrt", x);
-  return sqrtPlane(x, prec);
+  if (containsZero(x) || (options.cut === undefined && meetsCut(x))) throw onCut("sqrt", x);
+  const root = sqrtPlane(x, prec);
+  return turnsAcross(x, options) === 0 ? root : neg(root);
 }
 
 /** Whether a disc off the real axis meets the half-line of numbers <= 0. */

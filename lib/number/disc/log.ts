@@ -3,11 +3,12 @@ import { DomainError, PoleError } from "../../proof/errors.ts";
 import * as real from "../ball/arithmetic.ts";
 import { atan2, acos as ballAcos, asin as ballAsin, atan as ballAtan, turn } from "../ball/atan.ts";
 import { pi } from "../ball/constants.ts";
-import { type Ball, magnitude as ballMagnitude, finish as finishBall, sign } from "../ball/data.ts";
+import { type Ball, magnitude as ballMagnitude, finish as finishBall, fromInt, sign } from "../ball/data.ts";
 import { ln as ballLn } from "../ball/exp.ts";
-import { add, div, ldexp, mul, mulI, neg, round, sqr, sub, widenBy } from "./arithmetic.ts";
-import { along, containsZero, type Disc, fromBall, fromBalls, isZero, magnitude, one } from "./data.ts";
-import { type CutOptions, exp, meetsCut, onCut, sinCos, sqrt } from "./elementary.ts";
+import { asinh as ballAsinh, nthRoot as ballRoot } from "../ball/power.ts";
+import { add, div, divBall, ldexp, mul, mulI, neg, round, sqr, sub, widenBy } from "./arithmetic.ts";
+import { along, containsZero, type Disc, fromBall, fromBalls, isZero, magnitude, one, zero } from "./data.ts";
+import { type CutOptions, exp, meetsCut, onCut, sinCos, sqrt, turnsAcross } from "./elementary.ts";
 
 /** An upper bound of radius/|midpoint|. */
 function relativeRadius(x: Disc): Ball {
@@ -25,8 +26,10 @@ function relativeRadius(x: Disc): Ball {
  */
 export function arg(x: Disc, prec: number, options: CutOptions = {}): Ball {
   if (x.axis === "real") return atan2({ man: 0n, exp: 0, rad: 0 }, along(x), prec);
-  if (containsZero(x) || (options.cut !== "continuous" && meetsCut(x))) throw onCut("arg", x);
-  const angle = atan2({ man: x.im, exp: x.exp, rad: 0 }, { man: x.re, exp: x.exp, rad: 0 }, prec);
+  if (containsZero(x) || (options.cut === undefined && meetsCut(x))) throw onCut("arg", x);
+  const principal = atan2({ man: x.im, exp: x.exp, rad: 0 }, { man: x.re, exp: x.exp, rad: 0 }, prec);
+  const turns = turnsAcross(x, options);
+  const angle = turns === 0 ? principal : real.add(principal, real.mulInt(pi(prec), 2 * turns, prec), prec);
   // On the imaginary axis the angle is one of two, whatever the radius.
   return x.rad === 0 || x.axis === "imaginary" ? angle : real.widenBy(angle, turn(relativeRadius(x)), prec);
 }
@@ -42,7 +45,7 @@ export function ln(x: Disc, prec: number, options: CutOptions = {}): Disc {
   if (isZero(x)) throw new DomainError({ subject: "ln", given: "0", expected: "a number other than 0" });
   if (x.axis === "real" && sign(along(x)) === 1) return fromBall(ballLn(along(x), prec));
   const angle = arg({ ...x, rad: x.axis === "real" ? x.rad : 0 }, prec + 4, options);
-  if (containsZero(x) || (options.cut !== "continuous" && meetsCut(x))) throw onCut("ln", x);
+  if (containsZero(x) || (options.cut === undefined && meetsCut(x))) throw onCut("ln", x);
   const norm: Ball = { man: x.re * x.re + x.im * x.im, exp: 2 * x.exp, rad: 0 };
   const middle = fromBalls(real.ldexp(ballLn(norm, prec + 4), -1), angle, prec + 4);
   if (x.rad === 0) return round(middle, prec);
@@ -105,6 +108,46 @@ export function asin(x: Disc, prec: number): Disc {
 export function acos(x: Disc, prec: number): Disc {
   if (x.axis === "real" && within(along(x))) return fromBall(ballAcos(along(x), prec));
   return sub(fromBall(real.ldexp(pi(prec + 8), -1)), asin(x, prec + 8), prec);
+}
+
+/** asinh x = −i asin(ix). Branch: cuts along the imaginary axis beyond ±i, as `asin` has them along the real one. */
+export function asinh(x: Disc, prec: number): Disc {
+  if (x.axis === "real") return fromBall(ballAsinh(along(x), prec));
+  return neg(mulI(asin(mulI(x), prec)));
+}
+
+/** atanh x = −i atan(ix). Branch: cuts along the real axis beyond ±1. Throws PoleError at ±1, BranchError for a disc that meets a cut. */
+export function atanh(x: Disc, prec: number): Disc {
+  if (x.im === 0n && x.rad === 0 && isZero(sub(sqr(x, 128), one, 128))) {
+    throw new PoleError({ subject: "atanh", given: x.re > 0n ? "1" : "−1", expected: "a number other than ±1" });
+  }
+  return neg(mulI(atan(mulI(x), prec)));
+}
+
+/**
+ * acosh x = ln(x + √(x + 1) √(x − 1)).
+ * Branch   cut along the real axis below 1, which belongs to the upper side: acosh(−2) = ln(2 + √3) + πi. Throws BranchError for a disc that meets it.
+ */
+export function acosh(x: Disc, prec: number): Disc {
+  const off = sub(x, one, 64);
+  if (isZero(off)) return zero;
+  const work = prec + 16 + Math.max(0, magnitude(x)) + Math.max(0, -magnitude(off));
+  const root = mul(sqrt(add(x, one, work), work), sqrt(sub(x, one, work), work), work);
+  return ln(add(x, root, work), prec);
+}
+
+/**
+ * The principal n-th root exp((ln x)/n), n >= 1, of argument in (−π/n, π/n]; 0 of exact 0.
+ * Branch   as for `ln`. Throws DomainError for another degree, else as `ln`.
+ */
+export function nthRoot(x: Disc, n: number, prec: number, options: CutOptions = {}): Disc {
+  const positive = x.axis === "real" && sign(along(x)) !== -1;
+  if (positive || !(Number.isSafeInteger(n) && n > 2)) {
+    if (positive || !(n === 1 || n === 2)) return fromBall(ballRoot(along(x), n, prec));
+    return n === 1 ? round(x, prec) : sqrt(x, prec, options);
+  }
+  const log = ln(x, prec + 16, options);
+  return exp(divBall(log, fromInt(n), prec + 16), prec);
 }
 
 function within(x: Ball): boolean {

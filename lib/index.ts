@@ -83,7 +83,7 @@ export { type ThetaInput, theta, thetaLogarithmic } from "./surface/theta.ts";
 // Claims
 
 export { claims } from "./page/claims.ts";
-export { claim } from "./surface/claim.ts";
+export { claim, conjunction } from "./surface/claim.ts";
 export { Claim, type Relation } from "./surface/claim-value.ts";
 
 // Figures and pages

@@ -14,6 +14,7 @@ const RELATIONS: Readonly<Record<Claim["relation"], string>> = {
   on: "\\text{ on }",
   in: "\\in",
   homothetic: "\\text{ homothetic to }",
+  and: "\\text{ and }",
 };
 
 export const claimKind: Kind<Claim> = {
@@ -34,12 +35,17 @@ export const claimKind: Kind<Claim> = {
   data: (claim, show) => ({
     kind: "claim",
     name: claim.name,
-    lhs: show.data(claim.lhs),
+    lhs: claim.relation === "and" ? names(claim) : show.data(claim.lhs),
     relation: claim.relation,
     rhs: show.data(claim.rhs),
     standing: standingData(claim),
   }),
 };
+
+/** The names of the claims that one states together. */
+function names({ lhs }: Claim): string[] {
+  return (lhs as readonly Claim[]).map(({ name }) => name);
+}
 
 function standingData({ standing }: Claim): { readonly [key: string]: string } {
   return Object.fromEntries(Object.entries(standing).map(([key, value]) => [key, String(value)]));
@@ -54,10 +60,12 @@ function inputs({ lhs, rhs }: Claim): string {
 const CELL_DIGITS = 6;
 
 function statementText(claim: Claim, show: Show, digits = LINE_DIGITS): string {
+  if (claim.relation === "and") return names(claim).join(" and ").replace(/\$/g, "");
   const relation = claim.relation === "homothetic" ? "homothetic to" : claim.relation;
   return `${shortText(claim.lhs, show, digits)} ${relation} ${shortText(claim.rhs, show, digits)}`;
 }
 
 function statementTex(claim: Claim, show: Show, digits = LINE_DIGITS): string {
+  if (claim.relation === "and") return names(claim).map(texProse).join("\\text{ and }");
   return `${shortTex(claim.lhs, show, digits)} ${RELATIONS[claim.relation]} ${shortTex(claim.rhs, show, digits)}`;
 }

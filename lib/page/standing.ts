@@ -19,8 +19,9 @@ export function standingText(standing: Standing): string {
     case "proved":
       return `proved (${standing.argument})`;
     case "certified": {
-      const { digits, bits } = standing;
-      return `certified to ${digits} digits (the sides agree within 10^-${digits}; computed with ${bits} bits, again with ${2 * bits})`;
+      const { digits, bits, once } = standing;
+      const again = once === undefined ? `, again with ${2 * bits}` : `; not repeated: ${once}`;
+      return `certified to ${digits} digits (the sides agree within 10^-${digits}; computed with ${bits} bits${again})`;
     }
     case "conjectured":
       return `conjectured (${standing.evidence})`;

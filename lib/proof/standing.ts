@@ -3,8 +3,8 @@
 export type Standing =
   /** By an exact argument, which is named. */
   | { readonly kind: "proved"; readonly argument: string }
-  /** Enclosures agree within 10^-digits; computed with `bits` and repeated with more. */
-  | { readonly kind: "certified"; readonly digits: number; readonly bits: number }
+  /** Enclosures agree within 10^-digits; computed with `bits` and again with twice as many, unless `once` says why not. */
+  | { readonly kind: "certified"; readonly digits: number; readonly bits: number; readonly once?: string }
   /** Recognised from digits, with the evidence in words. */
   | { readonly kind: "conjectured"; readonly evidence: string }
   | { readonly kind: "undecided"; readonly tried: string }

@@ -30,6 +30,17 @@ export function sameLattice(L: Lattice, M: Lattice): Standing {
   return weakest([...M.periods.map((w) => inLattice(w, L)), ...L.periods.map((w) => inLattice(w, M))]);
 }
 
+/** One lattice in another: by the index, where coordinates are exact, else by its periods as points of the other. */
+export function sublattice(L: Lattice, M: Lattice): Standing {
+  try {
+    return { kind: "proved", argument: `exact coordinates; the index is ${L.indexIn(M)}` };
+  } catch (error) {
+    if (error instanceof DomainError) return { kind: "refuted", evidence: error.given };
+    if (error instanceof UndecidedError) return weakest(L.periods.map((w) => inLattice(w, M)));
+    throw error;
+  }
+}
+
 /** Homothetic lattices have the same j; `homothety` finds the factor or the difference. */
 export function homotheticStanding(L: Lattice, M: Lattice): Standing {
   try {

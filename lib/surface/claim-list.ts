@@ -4,9 +4,20 @@ import type { Claim } from "./claim-value.ts";
 
 const made = new Map<string, Claim>();
 
-/** Keeps a claim; one of the same name that was made before (a cell that ran twice) gives way. */
+/**
+ * Keeps a claim. One that was made before in the same words (a cell that ran twice) gives way; another statement under the same
+ * name is kept beside it, so that no refuted one is hidden by its namesake.
+ */
 export function recordClaim(claim: Claim): void {
-  made.set(claim.name, claim);
+  made.set(`${claim.name}: ${side(claim.lhs)} ${claim.relation} ${side(claim.rhs)}`, claim);
+}
+
+function side(value: unknown): string {
+  try {
+    return Array.isArray(value) ? `[${value.map(side).join()}]` : String(value);
+  } catch {
+    return "";
+  }
 }
 
 export function claimList(): readonly Claim[] {

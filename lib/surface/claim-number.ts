@@ -5,7 +5,17 @@ import { bitsOf, mostBits, provedDigits } from "../number/context.ts";
 import * as disc from "../number/disc.ts";
 import { sameExact } from "../number/exactness.ts";
 import { LADDER } from "../number/ladder.ts";
-import { asBall, type Enclosure, evaluate, isDisc, mayPass, refinable } from "../number/origin.ts";
+import {
+  asBall,
+  DEEPEST,
+  type Enclosure,
+  evaluate,
+  isDisc,
+  isNode,
+  mayPass,
+  type Node,
+  refinable,
+} from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
 import { type Complex, Real } from "../number/values.ts";
 import type { Standing } from "../proof/standing.ts";
@@ -81,9 +91,45 @@ function repeated(difference: ClaimNumber, a: ClaimNumber, b: ClaimNumber, digit
   const again = attempt(() => evaluate(difference, 2 * bits));
   if (again && !holdsZero(again)) return refuted(a, b, again);
   const common = relativeDigits(a, b, digits);
+  const once = onceOnly(difference);
   if (!again || common < 1)
-    return { kind: "undecided", tried: `enclosures that overlap, at ${bits} and ${2 * bits} bits` };
-  return { kind: "certified", digits, bits };
+    return {
+      kind: "undecided",
+      tried: `enclosures that overlap${once ? `; ${once}` : `, at ${bits} and ${2 * bits} bits`}`,
+    };
+  return once ? { kind: "certified", digits, bits, once } : { kind: "certified", digits, bits };
+}
+
+/** Why computing again with more bits repeats nothing, where that is so; undefined where all is computed again. */
+function onceOnly(x: ClaimNumber): string | undefined {
+  const lost = cutNodes(x).some(
+    ({ standing, source }) => standing === "defined" || (standing === "measured" && source === undefined),
+  );
+  return lost ? `a value was built by more than ${DEEPEST} operations and no longer knows how` : undefined;
+}
+
+/** The values below x that are neither exact nor know how they were built. */
+function cutNodes(x: Node): Node[] {
+  const seen = new Set<unknown>();
+  const cut: Node[] = [];
+  const open: unknown[] = [x];
+  while (open.length > 0) {
+    const node = open.pop();
+    if (!isNode(node) || seen.has(node)) continue;
+    seen.add(node);
+    if (!refinable(node)) cut.push(node);
+    else open.push(...(node.origin?.operands ?? []));
+  }
+  return cut;
+}
+
+/** What was tried on a difference that never left 0: with how many bits, or why more would not help. */
+function overlapping(difference: ClaimNumber, bits: number): Standing {
+  const lost = onceOnly(difference);
+  if (lost !== undefined) return { kind: "undecided", tried: `enclosures that overlap; ${lost}` };
+  if (difference.standing === "measured" || difference.standing === "double")
+    return { kind: "undecided", tried: "enclosures that overlap; the input is given no sharper" };
+  return { kind: "undecided", tried: `enclosures that overlap up to ${bits} bits` };
 }
 
 /** Of the digits behind the point that agree, how many are digits of the numbers themselves. */
@@ -107,7 +153,7 @@ function apart(a: ClaimNumber, b: ClaimNumber): Standing {
     if (d && isExactZero(d)) return { kind: "refuted", evidence: "the difference is exactly 0" };
     if (!refinable(difference)) break;
   }
-  return { kind: "undecided", tried: `enclosures that overlap up to ${LADDER.at(-1)} bits` };
+  return overlapping(difference, LADDER.at(-1)!);
 }
 
 function order(left: ClaimNumber, relation: Relation, right: ClaimNumber): Standing {
@@ -125,7 +171,7 @@ function order(left: ClaimNumber, relation: Relation, right: ClaimNumber): Stand
     }
     if (!refinable(difference)) break;
   }
-  return { kind: "undecided", tried: `enclosures that overlap up to ${LADDER.at(-1)} bits` };
+  return overlapping(difference, LADDER.at(-1)!);
 }
 
 /** A real number, also one that comes as a complex one known to be real, such as a real period. */

@@ -1,18 +1,25 @@
 // A claim about points, curves or lists, taken apart into relations between numbers.
 
+import type { Polynomial } from "../algebra/multivariate.ts";
 import { sameExact } from "../number/exactness.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
+import type { Recognition } from "../number/recognise.ts";
 import { Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
 import { LibraryError, UndecidedError } from "../proof/errors.ts";
 import { type Standing, weakest } from "../proof/standing.ts";
-import { homotheticStanding, inLattice, sameLattice } from "./claim-lattice.ts";
+import { answerStanding } from "./claim-answer.ts";
+import { homotheticStanding, inLattice, sameLattice, sublattice } from "./claim-lattice.ts";
 import { numberStanding } from "./claim-number.ts";
 import type { Relation } from "./claim-value.ts";
+import type { ComplexMultiplication } from "./complex-multiplication.ts";
 import { Curve } from "./curve.ts";
 import { EllipticFunction } from "./elliptic-function.ts";
 import { Lattice } from "./lattice.ts";
+import { Morphism } from "./morphism.ts";
 import { Point } from "./point.ts";
+import type { AnyVariety } from "./space.ts";
+import type { TorsionSubgroup } from "./torsion.ts";
 import { PlaneCurve, PlanePoint } from "./variety.ts";
 
 /** What a claim can be about: numbers, values of the library, and lists or records of them. */
@@ -22,18 +29,29 @@ export type Claimed =
   | { readonly curve: object }
   | Lattice
   | EllipticFunction
+  | Morphism<AnyVariety, AnyVariety>
+  | TorsionSubgroup
+  | ComplexMultiplication
+  | Recognition
+  | Polynomial<unknown>
+  | undefined
   | readonly Claimed[]
   | { readonly [part: string]: Claimed };
 
 /** How a statement about two values is known. */
 export function standingOf(lhs: unknown, relation: Relation, rhs: unknown): Standing {
   if (relation === "on") return onStanding(lhs, rhs);
+  const answer = answerStanding(lhs, relation, rhs);
+  if (answer) return answer;
   const [a, b] = [numberOf(lhs), numberOf(rhs)];
   if (relation === "in" && a && rhs instanceof Lattice) return inLattice(a, rhs);
-  if (relation === "homothetic" && lhs instanceof Lattice && rhs instanceof Lattice)
-    return homotheticStanding(lhs, rhs);
+  const [L, M] = [latticeOf(lhs), latticeOf(rhs)];
+  if (relation === "homothetic" && L && M) return homotheticStanding(L, M);
   if (a && b && relation !== "in" && relation !== "homothetic") return numberStanding(a, relation, b);
+  if (relation === "in" && lhs instanceof Lattice && rhs instanceof Lattice) return sublattice(lhs, rhs);
   if (relation !== "=" && relation !== "≠") throw unsuited(lhs, relation, rhs);
+  if (lhs instanceof Morphism && rhs instanceof Morphism) return mapStanding(lhs, relation, rhs);
+  if (isPolynomial(lhs) && isPolynomial(rhs)) return polynomialStanding(lhs, relation, rhs);
   if (lhs instanceof Curve && rhs instanceof Curve)
     return decided(lhs.equals(rhs), relation, "equations compared over the same field");
   if (lhs instanceof Point && rhs instanceof Point) return pointStanding(lhs, relation, rhs);
@@ -43,6 +61,46 @@ export function standingOf(lhs: unknown, relation: Relation, rhs: unknown): Stan
   if (relation === "=" && lhs instanceof Lattice && rhs instanceof Lattice) return sameLattice(lhs, rhs);
   if (lhs instanceof EllipticFunction && rhs instanceof EllipticFunction) return functionStanding(lhs, relation, rhs);
   return partsStanding(lhs, relation, rhs);
+}
+
+/** A lattice, or that of a curve over Q. */
+function latticeOf(value: unknown): Lattice | undefined {
+  if (value instanceof Lattice) return value;
+  return value instanceof Curve && value.field.name === "Q" ? value.lattice() : undefined;
+}
+
+/** Maps between the same curves are the same if they take the general point to the same image. */
+function mapStanding(
+  f: Morphism<AnyVariety, AnyVariety>,
+  relation: "=" | "≠",
+  g: Morphism<AnyVariety, AnyVariety>,
+): Standing {
+  if (`${f.from}` !== `${g.from}` || `${f.to}` !== `${g.to}`)
+    return decided(false, relation, "maps between different curves");
+  if (f.from instanceof Curve && f.to instanceof Curve && f.from.field.characteristic === 0n)
+    return decided(
+      `${f.factor}` === `${g.factor}`,
+      relation,
+      `pull-backs of the differential compared, ${f.factor} and ${g.factor}: this factor determines a homomorphism`,
+    );
+  const [p, q] = [f, g].map(({ formula }) => JSON.stringify(formula, flat));
+  if (p !== q) return { kind: "undecided", tried: "formulas in lowest terms, which are not the same" };
+  return decided(true, relation, "formulas in lowest terms compared");
+}
+
+/** Maps of terms as lists, field elements by their text. */
+function flat(_: string, value: unknown): unknown {
+  if (value instanceof Map) return [...value].sort(([s], [t]) => s - t).map(([key, c]) => [key, String(c)]);
+  return typeof value === "bigint" ? String(value) : value;
+}
+
+function polynomialStanding(f: Polynomial<unknown>, relation: "=" | "≠", g: Polynomial<unknown>): Standing {
+  const same = f.variables.join() === g.variables.join() && JSON.stringify(f, flat) === JSON.stringify(g, flat);
+  return decided(same, relation, "coefficients compared");
+}
+
+function isPolynomial(value: unknown): value is Polynomial<unknown> {
+  return typeof value === "object" && value !== null && "variables" in value && "terms" in value;
 }
 
 /** Elliptic functions are compared by their normal forms in ℘ and ℘′. */

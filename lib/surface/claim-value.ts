@@ -7,11 +7,12 @@ export type Relation = "=" | "≠" | "<" | "≤" | "on" | "in" | "homothetic";
 export class Claim {
   readonly name: string;
   readonly lhs: unknown;
-  readonly relation: Relation;
+  /** "and": the left side is a list of claims, stated together. */
+  readonly relation: Relation | "and";
   readonly rhs: unknown;
   readonly standing: Standing;
 
-  constructor(name: string, lhs: unknown, relation: Relation, rhs: unknown, standing: Standing) {
+  constructor(name: string, lhs: unknown, relation: Claim["relation"], rhs: unknown, standing: Standing) {
     this.name = name;
     this.lhs = lhs;
     this.relation = relation;
@@ -19,7 +20,7 @@ export class Claim {
     this.standing = standing;
   }
 
-  /** True unless the claim is refuted or undecided. */
+  /** True for what is proved or certified: a conjecture does not hold yet. */
   get holds(): boolean {
     return this.standing.kind === "proved" || this.standing.kind === "certified";
   }

@@ -1,9 +1,8 @@
-import { workingPrecision } from "../number/context.ts";
-import * as disc from "../number/disc.ts";
-import { asDisc } from "../number/origin.ts";
+import { sameExact } from "../number/exactness.ts";
 import { Complex, type Real } from "../number/values.ts";
 import { DomainError, UndecidedError } from "../proof/errors.ts";
 import type { Standing } from "../proof/standing.ts";
+import { numberStanding } from "./claim-number.ts";
 import type { Lattice } from "./lattice.ts";
 
 /** M = αL: multiplication by α takes the first lattice onto the second. */
@@ -12,7 +11,7 @@ export class Homothety {
   readonly to: Lattice;
   /** The factor; with it −α, and for square and hexagonal lattices i or a sixth root of unity times α. */
   readonly factor: Complex;
-  /** Proved if both j are exact and equal; else the j agree within their enclosures. */
+  /** Proved if both j, or both reduced τ, are exact and equal; else the j agree within their enclosures. */
   readonly standing: Standing;
 
   constructor(from: Lattice, to: Lattice, factor: Complex, standing: Standing) {
@@ -54,17 +53,16 @@ export function homothety(L: Lattice, M: Lattice): Homothety {
     });
   }
   const factor = Complex.from(s.periods[0].div(r.periods[0]));
-  const standing: Standing = same ? { kind: "proved", argument: `both lattices have j = ${j}` } : agreement(j, k);
-  return new Homothety(L, M, factor, standing);
+  return new Homothety(L, M, factor, ground(L, M, same === true));
 }
 
-/** How near two j that are not known to be equal are: their difference beside their size. */
-function agreement(j: Real | Complex, k: Real | Complex): Standing {
-  const bits = workingPrecision();
-  const difference = disc.sub(asDisc(j.enclosure), asDisc(k.enclosure), bits);
-  const size = Math.max(0, disc.magnitude(asDisc(j.enclosure)));
-  const digits = Math.max(0, Math.floor((size - disc.magnitude(difference)) * 0.30103));
-  return { kind: "certified", digits, bits };
+/** Why two lattices are homothetic: one j, one exact τ, or j that agree. */
+function ground(L: Lattice, M: Lattice, same: boolean): Standing {
+  if (same) return { kind: "proved", argument: `both lattices have j = ${L.j}` };
+  const [tau, sigma] = [L.reduced.tau.exact, M.reduced.tau.exact];
+  if (tau && sigma && sameExact(tau, sigma))
+    return { kind: "proved", argument: `both reduced bases have τ = ${L.reduced.tau}` };
+  return numberStanding(L.j, "=", M.j);
 }
 
 /** Equal or different by exact values, different by enclosures, or undefined. */

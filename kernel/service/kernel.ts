@@ -3,7 +3,7 @@ import type { CellSession, CellSessionOptions } from "../cell/port.ts";
 import type { Connection } from "../wire/connection.ts";
 import { log } from "../wire/log.ts";
 import type { Message } from "../wire/message.ts";
-import { openWire, type Wire } from "../wire/wire.ts";
+import { openWire, type RequestChannel, type Wire } from "../wire/wire.ts";
 import { type Brake, createBrake } from "./brake.ts";
 import { dispatch } from "./dispatch.ts";
 import { abortedAnswer } from "./handler/execute.ts";
@@ -28,6 +28,8 @@ export interface KernelOptions {
 export interface Kernel {
   /** Stops the running cell, as a signal does. */
   interrupt(): void;
+  /** How many messages have come in on each channel. */
+  readonly received: Readonly<Record<RequestChannel, number>>;
   /** Ends the kernel; the second call does nothing. */
   end(): void;
   /** Resolves when the sockets are closed and the cells have ended, or have had their time. */
@@ -48,6 +50,7 @@ export async function startKernel(connection: Connection, options: KernelOptions
   const wire = await openWire(connection);
   const output = createOutput((outgoing, topic) => wire.publish(outgoing, topic));
   const prompts = createPrompts({
+    arrived: () => arrived(wire, "stdin"),
     send(identities, outgoing) {
       output.flush();
       return wire.send("stdin", identities, outgoing);
@@ -78,7 +81,7 @@ export async function startKernel(connection: Connection, options: KernelOptions
       return within(options.audience ?? AUDIENCE, Promise.race([wire.subscribed, interrupted]), undefined);
     }),
     async abortQueued() {
-      await arrived(wire);
+      await arrived(wire, "shell");
       abortCells();
     },
     interrupt() {
@@ -95,7 +98,7 @@ export async function startKernel(connection: Connection, options: KernelOptions
     cells().catch((error) => log(`the cells cannot be loaded: ${error?.stack ?? error}`));
     void history();
   });
-  return { interrupt: service.interrupt, end, ended };
+  return { interrupt: service.interrupt, received: wire.received, end, ended };
 }
 
 async function startCells(options: KernelOptions, runs: Runs, brake: Brake): Promise<CellSession> {
@@ -144,9 +147,9 @@ function ending(steps: readonly (() => Promise<void>)[]): Pick<Kernel, "end" | "
 const LOOK = 4;
 const LOOKS = 25;
 
-async function arrived(wire: Wire): Promise<void> {
-  for (let look = 0, count = -1; look < LOOKS && count !== wire.shellCount; look += 1) {
-    count = wire.shellCount;
+async function arrived(wire: Wire, channel: RequestChannel): Promise<void> {
+  for (let look = 0, count = -1; look < LOOKS && count !== wire.received[channel]; look += 1) {
+    count = wire.received[channel];
     await new Promise((resolve) => setTimeout(resolve, LOOK));
   }
 }

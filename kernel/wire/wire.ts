@@ -17,8 +17,8 @@ export interface Wire {
   readonly subscribed: Promise<void>;
   /** Bytes handed over for iopub that its socket has not taken yet. */
   readonly pendingBytes: number;
-  /** Messages that have come in on shell so far, bad ones counted. */
-  readonly shellCount: number;
+  /** How many messages have come in so far, bad ones counted. */
+  readonly received: Readonly<Record<RequestChannel, number>>;
   /** Sends to one client, by the identities that its request came with, and gives the msg_id. */
   send(channel: RequestChannel, identities: readonly Buffer[], outgoing: Outgoing): string;
   /** Publishes to every subscriber of the topic, which is the type unless given. */
@@ -52,7 +52,7 @@ export async function openWire(connection: Connection): Promise<Wire> {
     iopub: createSendQueue(patiently(sockets.iopub), (error) => logUnsent("iopub", error)),
     hb: queueFor(sockets, "hb"),
   };
-  let shellCount = 0;
+  const received = { shell: 0, control: 0, stdin: 0 };
   void serve("hb", sockets.hb, (frames) => queues.hb.push(frames));
 
   const publish = (outgoing: Outgoing, topic = outgoing.type) =>
@@ -73,9 +73,7 @@ export async function openWire(connection: Connection): Promise<Wire> {
     get pendingBytes() {
       return queues.iopub.bytes;
     },
-    get shellCount() {
-      return shellCount;
-    },
+    received,
     send(channel, identities, outgoing) {
       const { id, frames } = encoder.encode(identities, outgoing);
       queues[channel].push(frames);
@@ -86,7 +84,7 @@ export async function openWire(connection: Connection): Promise<Wire> {
     serve(receivers) {
       for (const channel of ["shell", "control", "stdin"] as const) {
         void serve(channel, sockets[channel], (frames) => {
-          if (channel === "shell") shellCount += 1;
+          received[channel] += 1;
           receive(channel, frames, signer, receivers[channel]);
         });
       }

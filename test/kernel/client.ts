@@ -36,18 +36,33 @@ export interface Exchange {
 
 /** Fields of a connection file with free ports. */
 export async function freeConnection(): Promise<ConnectionFields> {
-  const servers = await Promise.all(Array.from({ length: 5 }, listening));
-  const ports = servers.map((server) => (server.address() as { port: number }).port);
-  await Promise.all(servers.map((server) => new Promise((resolve) => server.close(resolve))));
-  const [shell_port, iopub_port, stdin_port, control_port, hb_port] = ports as [number, number, number, number, number];
+  const [shell_port, iopub_port, stdin_port] = [await freePort(), await freePort(), await freePort()];
+  const [control_port, hb_port] = [await freePort(), await freePort()];
   const fixed = { transport: "tcp", ip: "127.0.0.1", signature_scheme: "hmac-sha256", key: randomUUID() };
   return { ...fixed, shell_port, iopub_port, stdin_port, control_port, hb_port };
 }
 
-function listening(): Promise<ReturnType<typeof createServer>> {
+/**
+ * Ports below those that the system gives to outgoing connections, so that none of them can take one between the choice
+ * and the kernel's bind. Each process of the tests begins elsewhere and takes none twice.
+ */
+const PORTS = { first: 12_000, count: 20_000 };
+let nextPort = (process.pid * 211) % PORTS.count;
+
+async function freePort(): Promise<number> {
+  for (let tries = 0; tries < PORTS.count; tries += 1) {
+    const port = PORTS.first + nextPort;
+    nextPort = (nextPort + 1) % PORTS.count;
+    if (await isFree(port)) return port;
+  }
+  throw new Error("no port is free");
+}
+
+function isFree(port: number): Promise<boolean> {
   return new Promise((resolve) => {
     const server = createServer();
-    server.listen(0, "127.0.0.1", () => resolve(server));
+    server.once("error", () => resolve(false));
+    server.listen(port, "127.0.0.1", () => server.close(() => resolve(true)));
   });
 }
 
@@ -73,7 +88,7 @@ export class Client {
     this.fields = fields;
     const secure = serverKey ? encrypted(serverKey) : {};
     this.iopub = new Subscriber({ linger: 0, receiveHighWaterMark: 0, ...secure });
-    this.heartbeat = new Request({ linger: 0, receiveTimeout: 2000, ...secure });
+    this.heartbeat = new Request({ linger: 0, receiveTimeout: 20_000, ...secure });
     const options = { routingId: this.session, linger: 0, ...secure };
     this.shell = new Dealer(options);
     this.control = new Dealer(options);
@@ -151,7 +166,7 @@ export class Client {
   }
 
   /** The first value that is neither undefined nor false, looked for at each message that comes. */
-  until<T>(look: () => T | undefined | false, ms = 5000): Promise<T> {
+  until<T>(look: () => T | undefined | false, ms = 25_000): Promise<T> {
     return new Promise((resolve, reject) => {
       const again = () => {
         const found = look();

@@ -11,6 +11,9 @@ beforeAll(async () => {
 });
 afterAll(() => test.stop());
 
+const hasBegun = async (cells: number) => {
+  while (test.cells.requests.length < cells) await new Promise((resolve) => setTimeout(resolve, 1));
+};
 const texts = (published: readonly { content: Record<string, unknown> }[], name: string) =>
   published.flatMap(({ content }) => (content.name === name ? [content.text] : []));
 
@@ -81,10 +84,14 @@ it("evaluates user expressions one by one after success — oracle: protocol", a
 it("after a failure every cell that has arrived is answered unrun, others are served — oracle: protocol", async () => {
   const { client, cells } = test;
   const before = cells.requests.length;
-  const failing = await client.send("shell", "execute_request", { code: "sleep 30\nfail first" });
-  const next = await client.send("shell", "execute_request", { code: "value 1" });
-  const between = await client.send("shell", "kernel_info_request", {});
-  const last = await client.send("shell", "execute_request", { code: "value 2", stop_on_error: false });
+  const [failing, next, between, last] = await test.taken("shell", 4, async () => [
+    await client.send("shell", "execute_request", { code: "hold\nfail first" }),
+    await client.send("shell", "execute_request", { code: "value 1" }),
+    await client.send("shell", "kernel_info_request", {}),
+    await client.send("shell", "execute_request", { code: "value 2", stop_on_error: false }),
+  ]);
+  await hasBegun(before + 1);
+  cells.release();
   const failed = await client.exchange(failing);
   for (const id of [next, last]) {
     const { reply, published } = await client.exchange(id);
@@ -111,8 +118,13 @@ it("a cell sent when the failure's reply is in always runs — oracle: protocol,
 
 it("with stop_on_error false the queue goes on, and a silent failure stops nothing — oracle: protocol", async () => {
   for (const options of [{ stop_on_error: false }, { silent: true }]) {
-    const failing = await test.client.send("shell", "execute_request", { code: "sleep 10\nfail", ...options });
-    const next = await test.client.send("shell", "execute_request", { code: "value 5" });
+    const before = test.cells.requests.length;
+    const [failing, next] = await test.taken("shell", 2, async () => [
+      await test.client.send("shell", "execute_request", { code: "hold\nfail", ...options }),
+      await test.client.send("shell", "execute_request", { code: "value 5" }),
+    ]);
+    await hasBegun(before + 1);
+    test.cells.release();
     expect((await test.client.exchange(failing)).reply.content.status).toBe("error");
     expect((await test.client.exchange(next)).reply.content.status).toBe("ok");
   }
@@ -156,8 +168,10 @@ it.each([[{}], [{ code: 7 }], [{ code: null }], [{ code: ["a"] }]])(
 );
 
 it("the interrupt ends the running cell and stops the queue — oracle: protocol, interrupt", async () => {
-  const running = await test.client.send("shell", "execute_request", { code: "hang" });
-  const queued = await test.client.send("shell", "execute_request", { code: "value 1" });
+  const [running, queued] = await test.taken("shell", 2, async () => [
+    await test.client.send("shell", "execute_request", { code: "hang" }),
+    await test.client.send("shell", "execute_request", { code: "value 1" }),
+  ]);
   await test.client.until(() => summary(test.client.of(running)).includes("execute_input"));
   const interrupt = await test.client.request("control", "interrupt_request");
   expect(interrupt.reply.content).toEqual({ status: "ok" });

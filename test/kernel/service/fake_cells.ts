@@ -12,7 +12,7 @@ import type {
 const sleep = (ms: number) => new Promise<void>((resolve) => setTimeout(resolve, ms));
 
 /**
- * print TEXT | warn TEXT | show TEXT | update ID TEXT | clear | oddly (a bundle that is no JSON) | odd (such a value) | value TEXT | fail TEXT | sleep MS | hang | later MS TEXT |
+ * print TEXT | warn TEXT | show TEXT | update ID TEXT | clear | oddly (a bundle that is no JSON) | odd (such a value) | value TEXT | fail TEXT | sleep MS | hang | hold (until `release`) | later MS TEXT |
  * ask PROMPT; TEXT is read as a JSON string if it is one.
  */
 export class FakeCells implements CellSession {
@@ -20,6 +20,8 @@ export class FakeCells implements CellSession {
   interrupts = 0;
   shutdowns = 0;
   private readonly options: CellSessionOptions;
+  /** Lets the cell that holds go on. */
+  release: () => void = () => {};
   private stop: (() => void) | undefined;
   private answer: ((value: string | null) => void) | undefined;
 
@@ -78,6 +80,7 @@ export class FakeCells implements CellSession {
       if (verb === "fail") return { status: "error", ename: "Error", evalue: text, traceback: [`Error: ${text}`] };
       if (verb === "value") value = unquote(text);
       else if (verb === "hang") await new Promise(() => {});
+      else if (verb === "hold") await this.held();
       else if (verb === "ask") value = String(await this.ask(request, text));
       else await this.act(request.cell, verb, text);
     }
@@ -97,6 +100,12 @@ export class FakeCells implements CellSession {
     if (verb === "sleep") await sleep(Number(text));
     if (verb === "later")
       void sleep(Number(text.split(" ")[0])).then(() => this.act(cell, "print", text.split(" ")[1]!));
+  }
+
+  private held(): Promise<void> {
+    return new Promise((resolve) => {
+      this.release = resolve;
+    });
   }
 
   private ask({ cell }: ExecuteRequest, prompt: string): Promise<string | null> {

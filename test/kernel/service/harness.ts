@@ -2,6 +2,7 @@
 
 import { type Kernel, startKernel } from "../../../kernel/service/kernel.ts";
 import { parseConnection } from "../../../kernel/wire/connection.ts";
+import type { RequestChannel } from "../../../kernel/wire/wire.ts";
 import { Client, type ConnectionFields, freeConnection } from "../client.ts";
 import { FakeCells } from "./fake_cells.ts";
 
@@ -10,6 +11,8 @@ export interface TestKernel {
   readonly fields: ConnectionFields;
   readonly client: Client;
   readonly cells: FakeCells;
+  /** Resolves when so many more messages have come in on a channel than before `send`, whose value it gives. */
+  taken<T>(channel: RequestChannel, count: number, send: () => Promise<T>): Promise<T>;
   /** Another client, connected. */
   another(): Promise<Client>;
   stop(): Promise<void>;
@@ -39,6 +42,12 @@ export async function startTestKernel(change: object = {}, serverKey?: string): 
     client,
     cells: cells!,
     another,
+    async taken(channel, count, send) {
+      const before = kernel.received[channel];
+      const sent = await send();
+      while (kernel.received[channel] < before + count) await new Promise((resolve) => setTimeout(resolve, 1));
+      return sent;
+    },
     async stop() {
       for (const each of clients) each.close();
       kernel.end();

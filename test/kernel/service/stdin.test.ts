@@ -53,7 +53,7 @@ it("without allow_stdin nobody is asked and the cell goes on — oracle: protoco
 
 it("answers of another client, stale ones and forged ones do not count — oracle: protocol", async () => {
   const other = await test.another();
-  await test.client.send("stdin", "input_reply", { value: "too early" });
+  await test.taken("stdin", 1, () => test.client.send("stdin", "input_reply", { value: "too early" }));
   const first = await asking();
   await test.client.request("control", "interrupt_request");
   await test.client.exchange(first.id);

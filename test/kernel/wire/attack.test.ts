@@ -3,8 +3,8 @@ import { afterAll, beforeAll, expect, it } from "vitest";
 import { Dealer, Router, Subscriber } from "zeromq";
 import { parseConnection } from "../../../kernel/wire/connection.ts";
 import { ProtocolError } from "../../../kernel/wire/errors.ts";
-import { openWire } from "../../../kernel/wire/wire.ts";
-import { freeConnection, summary } from "../client.ts";
+import { openWire, type Wire } from "../../../kernel/wire/wire.ts";
+import { type ConnectionFields, freeConnection, summary } from "../client.ts";
 import { startTestKernel, type TestKernel } from "../service/harness.ts";
 
 let test: TestKernel;
@@ -80,7 +80,7 @@ it("two hundred connections that say nothing, and clients that vanish, disturb n
   const before = test.client.published.length;
   const silent = Array.from({ length: 200 }, () => connect(test.fields.shell_port, "127.0.0.1").on("error", () => {}));
   for (let n = 0; n < 20; n += 1) {
-    const gone = new Dealer({ linger: 50, routingId: `gone ${n}` });
+    const gone = new Dealer({ linger: 20_000, routingId: `gone ${n}` });
     gone.connect(`tcp://127.0.0.1:${test.fields.shell_port}`);
     await gone.send(test.client.frames(test.client.header("history_request"), { hist_access_type: "tail" }));
     gone.close();
@@ -92,7 +92,7 @@ it("two hundred connections that say nothing, and clients that vanish, disturb n
 
 it("a client that comes back with its identity is served — oracle: its reply", async () => {
   for (let turn = 0; turn < 5; turn += 1) {
-    const client = new Dealer({ linger: 0, routingId: "the same", receiveTimeout: 3000 });
+    const client = new Dealer({ linger: 0, routingId: "the same", receiveTimeout: 20_000 });
     client.connect(`tcp://127.0.0.1:${test.fields.shell_port}`);
     await client.send(test.client.frames(test.client.header("kernel_info_request"), {}));
     expect((await client.receive()).length).toBeGreaterThan(5);
@@ -101,7 +101,7 @@ it("a client that comes back with its identity is served — oracle: its reply",
 });
 
 it("topics: each subscription is welcomed with its own; one that is no UTF-8 is not — oracle: protocol", async () => {
-  const listener = new Subscriber({ linger: 0, receiveTimeout: 3000 });
+  const listener = new Subscriber({ linger: 0, receiveTimeout: 20_000 });
   listener.connect(`tcp://127.0.0.1:${test.fields.iopub_port}`);
   listener.subscribe(Buffer.from([0xff, 0xfe]), "stream.stdout", "πsi");
   const topics = [(await listener.receive())[0], (await listener.receive())[0]].map(String);
@@ -121,7 +121,16 @@ it("a taken port is refused in one line and nothing stays open — oracle: the p
     `control socket: tcp://127.0.0.1:${fields.control_port} cannot be bound (it is in use); expected`,
   );
   taken.close();
-  await new Promise((resolve) => setTimeout(resolve, 50));
-  const wire = await openWire(parseConnection(JSON.stringify(fields), "k.json"));
-  await wire.close();
+  await (await openedWhenFree(fields)).close();
 });
+
+/** A closed socket frees its port in the background. */
+async function openedWhenFree(fields: ConnectionFields): Promise<Wire> {
+  for (;;) {
+    try {
+      return await openWire(parseConnection(JSON.stringify(fields), "k.json"));
+    } catch {
+      await new Promise((resolve) => setTimeout(resolve, 10));
+    }
+  }
+}

@@ -89,7 +89,7 @@ it("a subscriber that never reads is left behind, the others get all, and nobody
   const warned = (warning: unknown) => warnings.push(warning);
   process.on("warning", warned);
   const clients = [1, 1000].map(
-    (receiveHighWaterMark) => new Subscriber({ linger: 0, receiveHighWaterMark, receiveTimeout: 3000 }),
+    (receiveHighWaterMark) => new Subscriber({ linger: 0, receiveHighWaterMark, receiveTimeout: 20_000 }),
   );
   for (const client of clients) {
     client.connect(String(socket.lastEndpoint));
@@ -112,7 +112,7 @@ it("a subscriber that never reads is left behind, the others get all, and nobody
 it("a subscriber that does not read holds the publisher back, not its memory; then it gets all — oracle: bytes", async () => {
   const fields = await freeConnection();
   const wire = await openWire(parseConnection(JSON.stringify(fields), "k.json"));
-  const slow = new Subscriber({ linger: 0, receiveHighWaterMark: 1, receiveTimeout: 3000 });
+  const slow = new Subscriber({ linger: 0, receiveHighWaterMark: 1, receiveTimeout: 20_000 });
   slow.connect(`tcp://127.0.0.1:${fields.iopub_port}`);
   slow.subscribe("");
   await wire.subscribed;
@@ -134,7 +134,7 @@ it("a subscriber that does not read holds the publisher back, not its memory; th
 it("a client that reads only at the end misses none of 20,000 small messages — oracle: what was published", async () => {
   const fields = await freeConnection();
   const wire = await openWire(parseConnection(JSON.stringify(fields), "k.json"));
-  const late = new Subscriber({ linger: 0, receiveHighWaterMark: 10, receiveTimeout: 3000 });
+  const late = new Subscriber({ linger: 0, receiveHighWaterMark: 10, receiveTimeout: 20_000 });
   late.connect(`tcp://127.0.0.1:${fields.iopub_port}`);
   late.subscribe("");
   await wire.subscribed;

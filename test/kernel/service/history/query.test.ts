@@ -79,8 +79,6 @@ it("the glob agrees with a regular expression — oracle: second algorithm", () 
   );
 });
 
-it("a hostile glob takes no exponential time — oracle: the clock, 200 ms", () => {
-  const start = performance.now();
+it("a hostile glob takes no exponential time — oracle: an exponential search would outlive the test", () => {
   expect(globMatcher("*a".repeat(200))(`${"a".repeat(5000)}b`)).toBe(false);
-  expect(performance.now() - start).toBeLessThan(200);
 });

@@ -18,10 +18,12 @@ const COMMANDS: Readonly<Record<Name, Command>> = {
   },
   run: {
     purpose: "run all cells in a fresh kernel and keep the outputs",
+    help: () => confinedHelp("run"),
     run: async (args, console) => (await import("./notebook/command/run.ts")).runCommand(args, console),
   },
   check: {
     purpose: "run again and compare with what is stored, by mathematics; the files stay as they are",
+    help: () => confinedHelp("check"),
     run: async (args, console) => (await import("./notebook/command/check.ts")).checkCommand(args, console),
   },
   export: {
@@ -86,6 +88,11 @@ async function attempt(action: () => Promise<number>, { err }: Console): Promise
     err.write(`halfperiod: ${expected ? message : stack}\n`);
     return EXIT.usage;
   }
+}
+
+async function confinedHelp(name: "run" | "check"): Promise<string> {
+  const { CONFINED_WORDS } = await import("./notebook/confined.ts");
+  return `${describe(name)}\n--confined: ${CONFINED_WORDS}`;
 }
 
 function usage(): string {

@@ -8,6 +8,17 @@ import type { CellEvent, CellSessionOptions } from "./port.ts";
 
 export type Done = Extract<ChildReport, { kind: "done" }>;
 
+/** A process of cells in its life, as the session uses it. */
+export interface LiveCells {
+  readonly died: Promise<Death>;
+  readonly alive: boolean;
+  run(command: Extract<ChildCommand, { kind: "run" }>): Promise<Done | Death>;
+  answer(value: string | null): void;
+  peek(name: string): Promise<string | undefined>;
+  interrupt(cell: number): void;
+  kill(): void;
+}
+
 /** How a life ended. */
 export interface Death {
   readonly code: number | null;
@@ -26,7 +37,7 @@ const PEEK_TIME = 150;
 const INSPECTOR_NOTE = "Waiting for the debugger to disconnect...\n";
 
 /** One process of cells. */
-export class CellsClient {
+export class CellsClient implements LiveCells {
   readonly #process: ChildProcess;
   readonly #onEvent: CellSessionOptions["onEvent"];
   readonly #reports = new LineReader();

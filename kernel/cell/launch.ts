@@ -12,6 +12,9 @@ const CELL_FLAGS = [
   "--disable-warning=DEP0111",
 ];
 
+/** Tells the types process that the notebook is confined. */
+export const CONFINED = "confined";
+
 function entry(name: string): string {
   return join(BUILT, "kernel", "cell", name);
 }
@@ -27,13 +30,21 @@ export function launchCells(cwd: string, memoryLimit?: number): ChildProcess {
 }
 
 /** Starts the process that checks cells; from the start-up snapshot if there is one and it is wanted. */
-export function launchTypes(cwd: string, wantSnapshot: boolean): { process: ChildProcess; fromSnapshot: boolean } {
+export function launchTypes(
+  cwd: string,
+  wantSnapshot: boolean,
+  confined: boolean,
+): { process: ChildProcess; fromSnapshot: boolean } {
   const snapshot = wantSnapshot ? usableSnapshot() : undefined;
   const start = snapshot === undefined ? [entry("types/main.js")] : ["--snapshot-blob", snapshot];
-  const child = spawn(process.execPath, ["--disable-warning=ExperimentalWarning", ...start, cwd], {
-    cwd,
-    // A snapshot that does not fit is refused with words that help nobody: the plain start follows.
-    stdio: ["pipe", "pipe", snapshot === undefined ? "inherit" : "ignore"],
-  });
+  const child = spawn(
+    process.execPath,
+    ["--disable-warning=ExperimentalWarning", ...start, cwd, ...(confined ? [CONFINED] : [])],
+    {
+      cwd,
+      // A snapshot that does not fit is refused with words that help nobody: the plain start follows.
+      stdio: ["pipe", "pipe", snapshot === undefined ? "inherit" : "ignore"],
+    },
+  );
   return { process: child, fromSnapshot: snapshot !== undefined };
 }

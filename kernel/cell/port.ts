@@ -1,5 +1,6 @@
 // The seam between the kernel process (wire, service) and the cells: what a cell session offers and what it reports.
 // Offsets are UTF-16 units here; the service converts to and from the code points of the wire in one place.
+import type { ConfinedLimits } from "./confined/limits.ts";
 
 /** A MIME bundle as the protocol has it: strings, or unpacked JSON under application/json and *+json. */
 export interface MimeBundle {
@@ -101,6 +102,8 @@ export interface CellSessionOptions {
    * that a cell that prints faster than it can be sent waits in its print call.
    */
   readonly onEvent: (event: CellEvent) => void | Promise<void>;
+  /** Present: the cells have the language and the library alone, behind two fences (see confined/outer.ts), within limits. */
+  readonly confined?: Partial<ConfinedLimits>;
   /** Limit of the heap of the cells in MB; absent: Node's own. */
   readonly memoryLimit?: number;
 }

@@ -1,9 +1,11 @@
 // The session of one notebook: check, run, remember, and go on after every fault.
 import { balance } from "./balance.ts";
-import { CellsClient, type Death, type Done } from "./cells-client.ts";
+import { CellsClient, type Death, type Done, type LiveCells } from "./cells-client.ts";
+import { ConfinedCells } from "./confined/client.ts";
 import type { CheckResult, EmittedCell } from "./messages.ts";
 import { deathReport, failedCheck, interruptedBeforeRun } from "./outcomes.ts";
 import type {
+  CellEvent,
   CellSession,
   CellSessionOptions,
   Completeness,
@@ -45,7 +47,7 @@ interface Current {
 class NotebookSession implements CellSession {
   readonly #options: CellSessionOptions;
   readonly #types: TypesClient;
-  #cells: CellsClient | undefined;
+  #cells: LiveCells | undefined;
   #current: Current | undefined;
   /** Rising numbers of the files and scripts; a user expression takes one too. */
   #files = 0;
@@ -56,7 +58,7 @@ class NotebookSession implements CellSession {
 
   constructor(options: CellSessionOptions) {
     this.#options = options;
-    this.#types = new TypesClient(options.cwd);
+    this.#types = new TypesClient(options.cwd, options.confined !== undefined);
   }
 
   start(): void {
@@ -128,15 +130,19 @@ class NotebookSession implements CellSession {
     await cells.died;
   }
 
-  #liveCells(): CellsClient {
+  #liveCells(): LiveCells {
     if (this.#cells?.alive) return this.#cells;
-    const cells = new CellsClient({ ...this.#options, onEvent: (event) => this.#relay(event) });
+    const onEvent = (event: CellEvent) => this.#relay(event);
+    const { confined } = this.#options;
+    const cells = confined
+      ? new ConfinedCells({ onEvent, limits: confined })
+      : new CellsClient({ ...this.#options, onEvent });
     this.#cells = cells;
     return cells;
   }
 
   /** Events carry the number of the file; the reader knows the number of the request. */
-  #relay(event: Parameters<CellSessionOptions["onEvent"]>[0]): void | Promise<void> {
+  #relay(event: CellEvent): void | Promise<void> {
     if (this.#quiet) return;
     const cell = this.#owners.get(event.cell) ?? event.cell;
     return this.#options.onEvent({ ...event, cell });

@@ -16,6 +16,7 @@ export class TypesLost extends Error {}
 /** Client of one notebook's types process. */
 export class TypesClient {
   readonly #cwd: string;
+  readonly #confined: boolean;
   readonly #committed = new Map<number, CommittedCell>();
   readonly #waiting = new Map<number, Waiting>();
   #process: ChildProcess | undefined;
@@ -25,8 +26,10 @@ export class TypesClient {
   #trustSnapshot = true;
   #closed = false;
 
-  constructor(cwd: string) {
+  /** Of a confined notebook the checker reads nothing but the library and the types that come with it. */
+  constructor(cwd: string, confined = false) {
     this.#cwd = cwd;
+    this.#confined = confined;
   }
 
   start(): void {
@@ -38,7 +41,7 @@ export class TypesClient {
   }
 
   #launch(): void {
-    const { process, fromSnapshot } = launchTypes(this.#cwd, this.#trustSnapshot);
+    const { process, fromSnapshot } = launchTypes(this.#cwd, this.#trustSnapshot, this.#confined);
     this.#process = process;
     this.#ready = false;
     const reader = new LineReader();

@@ -1,8 +1,9 @@
 // A notebook file, run from beginning to end in a kernel of its own.
 import path from "node:path";
 import { KernelClient } from "./client.ts";
+import { cleanOutputs } from "./confined.ts";
 import { readNotebook } from "./file.ts";
-import type { LaunchOptions } from "./launch.ts";
+import { kernelCommand, type LaunchOptions } from "./launch.ts";
 import { type Screen, showProgress } from "./progress.ts";
 import { type Run, runNotebook } from "./run.ts";
 
@@ -13,9 +14,14 @@ export interface ExecuteFileOptions {
   readonly limit?: number | undefined;
   /** Proved digits to ask for, over what the notebook says. */
   readonly digits?: number | undefined;
+  /** The cells get the language and the library alone, and what they show is cleaned. */
+  readonly confined?: boolean | undefined;
   /** Another kernel than this package's. */
   readonly command?: LaunchOptions["command"];
 }
+
+/** Milliseconds that checking and running a confined cell may take if nothing else is said. */
+const CONFINED_LIMIT = 600_000;
 
 /** The run was stopped from outside, by Ctrl-C or a signal; nothing was written. */
 export class Interrupted extends Error {
@@ -26,7 +32,10 @@ export class Interrupted extends Error {
 }
 
 /** Reads the notebook, runs it in a fresh kernel started in its folder, and ends that kernel whatever happens. */
-export async function executeFile(file: string, { screen, limit, digits, command }: ExecuteFileOptions): Promise<Run> {
+export async function executeFile(file: string, options: ExecuteFileOptions): Promise<Run> {
+  const { screen, digits, confined = false } = options;
+  const limit = options.limit ?? (confined ? CONFINED_LIMIT : undefined);
+  const command = options.command ?? (confined ? [...kernelCommand(), "--confined"] : undefined);
   const notebook = await readNotebook(file);
   const progress = showProgress(path.basename(file), screen);
   const stop = stopOnSignals();
@@ -39,7 +48,8 @@ export async function executeFile(file: string, { screen, limit, digits, command
     });
     try {
       const { signal, stopped } = stop;
-      return await Promise.race([stopped, runNotebook(notebook, client, { ...progress, limit, signal })]);
+      const run = await Promise.race([stopped, runNotebook(notebook, client, { ...progress, limit, signal })]);
+      return confined ? { ...run, notebook: cleanOutputs(run.notebook) } : run;
     } finally {
       await client.shutdown();
     }

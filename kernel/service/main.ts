@@ -6,10 +6,10 @@ import { log } from "../wire/log.ts";
 import { createHistoryFile, historyFolder } from "./history/file.ts";
 import { startKernel } from "./kernel.ts";
 
-/** Loads the cells. */
+/** Loads the cells; with --confined among the arguments they have the language and the library alone. */
 async function createCells(options: CellSessionOptions): Promise<CellSession> {
   const { createCellSession } = await import("../cell/session.ts");
-  return createCellSession(options);
+  return createCellSession(process.argv.includes("--confined") ? { ...options, confined: {} } : options);
 }
 
 /** Path of the connection file in the arguments: after -f, or alone. */
@@ -24,6 +24,8 @@ async function main(): Promise<number> {
     log("kernel: no connection file given; expected -f FILE. A notebook front end starts the kernel so.");
     return 2;
   }
+  // Else this signal would open a debugger's port in the kernel.
+  process.on("SIGUSR1", () => {});
   // A fault in the kernel itself must not take the user's variables with it.
   process.on("uncaughtException", (error) => log(`kernel: ${error?.stack ?? error}`));
   const connection = readConnection(file);

@@ -4,6 +4,9 @@ import { operators } from "../../../lib/surface/operators.ts";
 import type { Box } from "./box.ts";
 import type { Modules } from "./modules.ts";
 
+/** What a run asks of the modules. */
+type Importing = Pick<Modules, "meta" | "import" | "require">;
+
 /** Rejects the awaits of an interrupted cell. */
 export class Interrupted extends Error {
   override readonly name = "Interrupted";
@@ -84,11 +87,11 @@ export class Execution {
   value: unknown = undefined;
   /** True once the outcome has been reported: what still runs defines nothing. */
   closed = false;
-  readonly #modules: Modules;
+  readonly #modules: Importing;
   readonly #waiting = new Set<(reason: unknown) => void>();
   #interrupted = false;
 
-  constructor(modules: Modules) {
+  constructor(modules: Importing) {
     this.#modules = modules;
     this.meta = modules.meta;
   }

@@ -23,6 +23,8 @@ export interface Places {
   readonly library: string;
   /** Folder that holds `@types/node`. */
   readonly typeRoots: readonly string[];
+  /** Present: only files in these folders are read. */
+  readonly onlyIn?: readonly string[];
 }
 
 /** Strict, save where strictness only annoys in a notebook. */
@@ -78,6 +80,10 @@ export class NotebookHost implements TS.LanguageServiceHost {
     this.#resolutions = ts.createModuleResolutionCache(places.cwd, (name) => name, this.#options);
   }
 
+  get confined(): boolean {
+    return this.#places.onlyIn !== undefined;
+  }
+
   /** Folder of the library's declarations. */
   get libraryFolder(): string {
     return this.#libraryFolder;
@@ -126,7 +132,8 @@ export class NotebookHost implements TS.LanguageServiceHost {
     const cell = this.#cell(file);
     if (cell) return cell.snapshot;
     if (disk.has(file)) return disk.get(file);
-    const snapshot = existsSync(file) ? ts.ScriptSnapshot.fromString(readFileSync(file, "utf8")) : undefined;
+    const snapshot =
+      this.#isOpen(file) && existsSync(file) ? ts.ScriptSnapshot.fromString(readFileSync(file, "utf8")) : undefined;
     // Files of the user beside the notebook may change; those of packages do not.
     if (this.#isSettled(file)) disk.set(file, snapshot);
     return snapshot;
@@ -145,19 +152,19 @@ export class NotebookHost implements TS.LanguageServiceHost {
   }
 
   fileExists(file: string): boolean {
-    return this.#cell(file) !== undefined || ts.sys.fileExists(file);
+    return this.#cell(file) !== undefined || (this.#isOpen(file) && ts.sys.fileExists(file));
   }
 
   readFile(file: string, encoding?: string): string | undefined {
-    return ts.sys.readFile(file, encoding);
+    return this.#isOpen(file) ? ts.sys.readFile(file, encoding) : undefined;
   }
 
   directoryExists(directory: string): boolean {
-    return ts.sys.directoryExists(directory);
+    return this.#isOpen(join(directory, "x")) && ts.sys.directoryExists(directory);
   }
 
   getDirectories(directory: string): string[] {
-    return ts.sys.getDirectories(directory);
+    return this.#isOpen(join(directory, "x")) ? ts.sys.getDirectories(directory) : [];
   }
 
   realpath(file: string): string {
@@ -182,7 +189,7 @@ export class NotebookHost implements TS.LanguageServiceHost {
         return {
           resolvedModule: { resolvedFileName: own, extension: extensionOf(own), isExternalLibraryImport: false },
         };
-      if (isBuiltin(text)) return NOT_FOUND;
+      if (isBuiltin(text) || (this.#places.onlyIn && this.#cell(containingFile))) return NOT_FOUND;
       const key = `${text} ${containingFile}`;
       const known = settled ? settledModules.get(key) : undefined;
       if (known) return known;
@@ -191,6 +198,14 @@ export class NotebookHost implements TS.LanguageServiceHost {
       else if (!found.resolvedModule) this.#forget = true;
       return found;
     });
+  }
+
+  /** Whether a file may be read: of a confined notebook no other than those of the installation. */
+  #isOpen(file: string): boolean {
+    const { onlyIn } = this.#places;
+    if (!onlyIn) return true;
+    const real = ts.sys.realpath?.(file) ?? file;
+    return onlyIn.some((folder) => real.startsWith(`${folder}/`) || real.startsWith(`${folder}\\`));
   }
 
   /** Files of packages and of the library do not change while a notebook runs; those of the user may. */
@@ -216,8 +231,17 @@ function extensionOf(file: string): TS.Extension {
 }
 
 /** The places of an installation with the given root, for a notebook in `cwd`. */
-export function placesOf(root: string, cwd: string): Places {
-  return { cwd, library: join(root, "dist", "lib", "index.d.ts"), typeRoots: typeRootsFrom(root) };
+export function placesOf(root: string, cwd: string, confined = false): Places {
+  const library = join(root, "dist", "lib", "index.d.ts");
+  const typeRoots = typeRootsFrom(root);
+  const places = { cwd, library, typeRoots };
+  if (!confined) return places;
+  const folders = [
+    dirname(library),
+    dirname(ts.sys.getExecutingFilePath()),
+    ...typeRoots.map((types) => dirname(types)),
+  ];
+  return { ...places, onlyIn: folders.map((folder) => ts.sys.realpath?.(folder) ?? folder) };
 }
 
 /** `node_modules/@types` of a folder and of those above it. */

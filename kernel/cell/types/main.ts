@@ -5,6 +5,6 @@ import { serve } from "./serve.ts";
 import { NotebookTypes } from "./service.ts";
 
 const root = fileURLToPath(new URL("../../../../", import.meta.url));
-const types = new NotebookTypes(placesOf(root, process.argv[2] ?? process.cwd()));
+const types = new NotebookTypes(placesOf(root, process.argv[2] ?? process.cwd(), process.argv[3] === "confined"));
 types.warm();
 serve(types);

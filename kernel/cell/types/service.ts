@@ -1,4 +1,5 @@
 // One notebook as the compiler sees it: check and emit a cell, remember what it defined, answer questions.
+import { confinedRefusals } from "../confined/refusals.ts";
 import type { CheckResult, CommittedCell, EmittedCell } from "../messages.ts";
 import { type Finding, findings, throughEdits, typeScriptError } from "./diagnostics.ts";
 import { type Edit, EditedText, inOrder } from "./edits.ts";
@@ -84,6 +85,8 @@ export class NotebookTypes {
     };
     const syntax = syntaxErrors(parsed.source);
     if (syntax.length > 0) return failed(findings(syntax, new EditedText(text, [])));
+    const reaching = this.host.confined ? confinedRefusals(parsed.source) : [];
+    if (reaching.length > 0) return failed(reaching);
     const exported = exportEdits(parsed.source);
     if (exported.refusals.length > 0) return failed(exported.refusals);
     const prepared = this.#prepare(text, parsed, exported.edits);

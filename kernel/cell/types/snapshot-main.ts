@@ -12,5 +12,6 @@ warmed.warm();
 startupSnapshot.setDeserializeMainFunction(() => {
   // The warmed one keeps the parsed files alive; files are shared by all notebooks of a process.
   warmed.reset();
-  serve(new NotebookTypes(placesOf(root, process.argv[2] ?? process.cwd())));
+  // Started from a snapshot, a process has no script among its arguments; it runs in the notebook's folder.
+  serve(new NotebookTypes(placesOf(root, process.cwd(), process.argv.at(-1) === "confined")));
 });

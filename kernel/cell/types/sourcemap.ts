@@ -11,6 +11,28 @@ export interface SourceMapData {
   readonly mappings: string;
 }
 
+/** The user's position, counted from 1, of a position counted from 1 in the emitted script; undefined: machinery. */
+export function userPosition(
+  map: SourceMapData,
+  line: number,
+  column: number,
+): { readonly line: number; readonly column: number } | undefined {
+  let [sourceLine, sourceColumn] = [0, 0];
+  let found: { line: number; column: number } | undefined;
+  for (const [index, segments] of map.mappings.split(";").slice(0, line).entries()) {
+    let at = 0;
+    for (const segment of segments ? segments.split(",") : []) {
+      const [step = 0, , lineStep, columnStep] = decode(segment);
+      at += step;
+      if (lineStep === undefined || columnStep === undefined) continue;
+      sourceLine += lineStep;
+      sourceColumn += columnStep;
+      if (index === line - 1 && at <= column - 1) found = { line: sourceLine + 1, column: sourceColumn + 1 };
+    }
+  }
+  return found;
+}
+
 /** The same map with positions of the user's text; positions behind its end are dropped. */
 export function toUserMap(map: SourceMapData, edited: EditedText, user: string): SourceMapData {
   const from = new Lines(edited.text);

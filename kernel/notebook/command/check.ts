@@ -18,14 +18,15 @@ interface Checked {
 
 /** Checks notebooks; the files are not touched. 0 if all that is stored still stands, 1 if not. */
 export async function checkCommand(args: readonly string[], { out, err }: Console): Promise<number> {
-  const { values, positionals } = readArguments(args, { values: ["digits", "limit", "report"] }, USAGE.check);
+  const options = { values: ["digits", "limit", "report"], switches: ["confined"] };
+  const { values, switches, positionals } = readArguments(args, options, USAGE.check);
   if (positionals.length === 0) throw new UsageError("no notebook given", USAGE.check);
   const limit = readLimit(values.limit, USAGE.check);
   const digits = readDigits(values.digits, USAGE.check);
   const all: Checked[] = [];
   for (const file of positionals) {
     const stored = await readNotebook(file);
-    const { notebook } = await executeFile(file, { screen: err, limit, digits });
+    const { notebook } = await executeFile(file, { screen: err, limit, digits, confined: switches.confined });
     const checked = check(file, stored, notebook, digits);
     out.write(describe(checked));
     all.push(checked);

@@ -10,7 +10,8 @@ import { USAGE } from "./usage.ts";
 
 /** Runs notebooks and writes their outputs into them, or elsewhere with --to. A run that fails writes nothing. */
 export async function runCommand(args: readonly string[], { out, err }: Console): Promise<number> {
-  const { values, positionals } = readArguments(args, { values: ["to", "digits", "limit"] }, USAGE.run);
+  const options = { values: ["to", "digits", "limit"], switches: ["confined"] };
+  const { values, switches, positionals } = readArguments(args, options, USAGE.run);
   if (positionals.length === 0) throw new UsageError("no notebook given", USAGE.run);
   const limit = readLimit(values.limit, USAGE.run);
   const digits = readDigits(values.digits, USAGE.run);
@@ -18,7 +19,7 @@ export async function runCommand(args: readonly string[], { out, err }: Console)
   let code: number = EXIT.ok;
   for (const file of positionals) {
     const started = performance.now();
-    const run = await executeFile(file, { screen: err, limit, digits });
+    const run = await executeFile(file, { screen: err, limit, digits, confined: switches.confined });
     if (run.failure) {
       err.write(failedCell(file, run.total, run.failure));
       code = EXIT.failed;

@@ -2,8 +2,8 @@
 
 export const USAGE = {
   demo: "demo [--to FOLDER]",
-  run: "run NOTEBOOK... [--to FILE|FOLDER] [--digits N] [--limit SECONDS]",
-  check: "check NOTEBOOK... [--digits N] [--limit SECONDS] [--report FILE]",
+  run: "run NOTEBOOK... [--to FILE|FOLDER] [--digits N] [--limit SECONDS] [--confined]",
+  check: "check NOTEBOOK... [--digits N] [--limit SECONDS] [--report FILE] [--confined]",
   export: "export NOTEBOOK [--as html] [--to FILE]",
   install: "install [--at DIR | --everyone] [--name NAME] [--set VARIABLE=VALUE]...",
   remove: "remove [--at DIR | --everyone] [--name NAME]",

@@ -2,6 +2,7 @@
 import { mkdtempSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
+import type { ConfinedLimits } from "../../../kernel/cell/confined/limits.ts";
 import type { CellEvent, CellSession, ExecuteOutcome, ExecuteRequest } from "../../../kernel/cell/port.ts";
 import { createCellSession } from "../../../kernel/cell/session.ts";
 
@@ -13,7 +14,14 @@ export class TestNotebook {
   #hear: () => void = () => {};
 
   /** `onText` takes the text of the streams, which is then not kept; a promise holds the cells back. */
-  constructor(options: { cwd?: string; memoryLimit?: number; onText?: (text: string) => void | Promise<void> } = {}) {
+  constructor(
+    options: {
+      cwd?: string;
+      memoryLimit?: number;
+      confined?: Partial<ConfinedLimits>;
+      onText?: (text: string) => void | Promise<void>;
+    } = {},
+  ) {
     this.cwd = options.cwd ?? mkdtempSync(join(tmpdir(), "cells-"));
     this.session = createCellSession({
       cwd: this.cwd,
@@ -24,6 +32,7 @@ export class TestNotebook {
         return undefined;
       },
       ...(options.memoryLimit !== undefined && { memoryLimit: options.memoryLimit }),
+      ...(options.confined && { confined: options.confined }),
     });
     this.session.start();
   }

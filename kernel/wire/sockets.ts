@@ -6,8 +6,12 @@ import { CHANNELS, type Channel, type Connection, endpoint, socketFile } from ".
 import { ProtocolError } from "./errors.ts";
 import { LEAST_HELD } from "./patience.ts";
 
-/** How long a closed socket may go on sending what it holds, in ms. Without an end a stuck client would keep us alive. */
-const LINGER = 500;
+/**
+ * How long a closed socket may go on sending what it holds, in ms: enough for the last reply on a machine that stands still
+ * for a second. Without an end a stuck client would keep us alive; on iopub, where such a client leaves most, it is shorter.
+ */
+const LINGER = 2000;
+const IOPUB_LINGER = 1000;
 
 export interface Sockets {
   readonly shell: Router;
@@ -39,10 +43,10 @@ export async function openSockets(connection: Connection): Promise<Sockets> {
   }
 }
 
-/** Closes all sockets; what they hold goes on being sent for at most `LINGER`. Removes ipc socket files if asked. */
+/** Closes all sockets; what they hold goes on being sent for a while. Removes ipc socket files if asked. */
 export function closeSockets(sockets: Sockets, connection?: Connection): void {
   for (const channel of CHANNELS) {
-    sockets[channel].linger = LINGER;
+    sockets[channel].linger = channel === "iopub" ? IOPUB_LINGER : LINGER;
     sockets[channel].close();
     const file = connection && socketFile(connection, channel);
     if (file) rmSync(file, { force: true });

@@ -78,6 +78,24 @@ export function along(word: readonly Letter[], tau: Disc, prec: number): Reducti
   return { matrix, tau: moved(matrix, tau, wp), factor: linear(matrix.c, matrix.d, tau, wp), root, word };
 }
 
+/** Exponents of numbers end at 2^45. */
+export const LARGEST_LOGARITHM = 44;
+
+/** exp(πiτ) for a reduced τ. Throws DomainError where no number has that exponent. */
+export function nomeOf(tau: Disc, wp: number): Disc {
+  const height = disc.magnitude(tau);
+  if (height > LARGEST_LOGARITHM - 4) {
+    throw new DomainError({
+      subject: "modular",
+      given: `a τ whose image in the fundamental domain has Im τ of about 10^${Math.round(height * Math.log10(2))}`,
+      expected: `Im τ under 10^${Math.floor((LARGEST_LOGARITHM - 4) * Math.log10(2))} there, so that exp(πiτ) has an exponent`,
+      hint: "So near a cusp the first term of the q-expansion is the value; take its logarithm, πiτ times a rational number.",
+      argument: "tau",
+    });
+  }
+  return disc.exp(disc.mulI(disc.mulBall(tau, ball.pi(wp + 8), wp + 8)), wp);
+}
+
 /** (aτ + b)/(cτ + d). */
 export function moved({ a, b, c, d }: Matrix, tau: Disc, wp: number): Disc {
   if (c === 0n) return d > 0n ? linear(a, b, tau, wp) : linear(-a, -b, tau, wp);

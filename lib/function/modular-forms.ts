@@ -5,7 +5,7 @@ import * as disc from "../number/disc.ts";
 import { Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 import { ontoReal } from "./enclosure.ts";
-import { type Reduction, reduction } from "./modular-action.ts";
+import { nomeOf, type Reduction, reduction } from "./modular-action.ts";
 import { etaTwentyFourths, type ThetaIndex, thetaMultiplier } from "./theta-multiplier.ts";
 import { type ThetaConstants, thetaConstants } from "./theta-sums.ts";
 import { eighthRoot } from "./theta-values.ts";
@@ -30,7 +30,7 @@ export interface ModularPoint {
 export function modularPoint(tau: Disc, prec: number): ModularPoint {
   const wp = prec + 32;
   const reduced = reduction(tau, wp);
-  const q = disc.exp(disc.mulI(disc.mulBall(reduced.tau, ball.pi(wp + 8), wp + 8)), wp);
+  const q = nomeOf(reduced.tau, wp);
   return { given: tau, reduced, q, q2: disc.sqr(q, wp), sums: thetaConstants(q, wp), wp };
 }
 
@@ -191,7 +191,7 @@ export function dedekindEta(tau: Disc, prec: number): Disc {
   const reduced = reduction(tau, wp);
   const e = etaTwentyFourths(reduced.word);
   const pi = ball.pi(wp + 8);
-  const q = disc.exp(disc.mulI(disc.mulBall(reduced.tau, ball.ldexp(pi, 1), wp + 8)), wp);
+  const q = disc.sqr(nomeOf(reduced.tau, wp), wp);
   // e^(2πi·e/24) e^(πiτ′/12) in one exponential.
   const turned = disc.add(reduced.tau, disc.fromBall(ball.fromInt(e)), wp);
   const front = disc.exp(disc.mulI(disc.divBall(disc.mulBall(turned, pi, wp + 8), ball.fromInt(12), wp + 8)), wp);

@@ -9,14 +9,14 @@ import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { DomainError } from "../proof/errors.ts";
 import { nearestInteger, ontoImaginary, ontoReal } from "./enclosure.ts";
-import { type Reduction, reduction } from "./modular-action.ts";
+import { LARGEST_LOGARITHM, nomeOf, type Reduction, reduction } from "./modular-action.ts";
 import { type ThetaIndex, thetaMultiplier } from "./theta-multiplier.ts";
 import { thetaSums } from "./theta-sums.ts";
 
 export type { ThetaIndex } from "./theta-multiplier.ts";
 
-/** Highest derivative that the sums give. */
-export const MAX_ORDER = 3;
+/** Beyond this a derivative is taken for a slip. */
+export const MAX_ORDER = 1000;
 
 /** A point of the cell of a reduced τ in its upper half, and how it got there: v = ±(point + m + nτ). */
 export interface CellPoint {
@@ -53,37 +53,54 @@ export function cellSums(j: ThetaIndex, at: CellPoint, q: Disc, q2: Disc, order:
     return j === 1 ? sums.map(disc.mulI) : sums;
   }
   const sums = thetaSums(side(disc.mul(q, at.inverse, wp)), side(disc.mul(q, at.u, wp)), q2, order, wp);
-  return sums.map((_, k) => {
-    let value: Disc = disc.zero;
-    for (let i = 0; i <= k; i++) value = disc.add(value, disc.mulInt(sums[i]!, BINOMIAL[k]![i]!, wp), wp);
-    return k & 1 ? disc.neg(value) : value;
-  });
+  const ones = sums.map(() => disc.one);
+  return leibniz(sums, ones, wp).map((value, k) => (k & 1 ? disc.neg(value) : value));
 }
 
-const BINOMIAL: readonly (readonly number[])[] = [[1], [1, 1], [1, 2, 1], [1, 3, 3, 1]];
+/** The derivatives of a product from those of its factors, from order 0 on. */
+export function leibniz(f: readonly Disc[], g: readonly Disc[], wp: number): Disc[] {
+  let row = [1n];
+  return f.map((_, n) => {
+    if (n > 0) row = [1n, ...row.slice(1).map((c, i) => c + row[i]!), 1n];
+    let value: Disc = disc.zero;
+    row.forEach((c, k) => {
+      value = disc.add(value, disc.mulInt(disc.mul(f[k]!, g[n - k]!, wp), c, wp), wp);
+    });
+    return value;
+  });
+}
 
 /**
  * θ_j(v | τ) and its derivatives in v up to the given order, with sin πv in θ1.
  *
- * Domain   Im τ > 0, any v; 0 <= order <= 3.
+ * Domain   Im τ > 0, any v.
  * Branch   none: q^(1/4) is exp(πiτ/4).
  * Error    enclosures; relative to the largest term where the function has a zero.
- * Cost     the reduction of τ, two exponentials and a series of √prec terms.
- * Throws   DomainError for Im τ <= 0 or another order.
+ * Cost     the reduction of τ, two exponentials and a series of √prec terms; order² products beside.
+ * Throws   DomainError for Im τ <= 0, or an order that is not an integer from 0 to 1000.
  * Source   DLMF 20.2.1–20.2.4 with z = πv and q = exp(πiτ); 20.2.6–20.2.8 and 20.7(viii).
  */
 export function thetaJet(j: ThetaIndex, v: Disc, tau: Disc, order: number, prec: number): Disc[] {
-  if (!(Number.isInteger(order) && order >= 0 && order <= MAX_ORDER)) {
-    throw new DomainError({
-      subject: "theta",
-      given: `the derivative of order ${order}`,
-      expected: `an order from 0 to ${MAX_ORDER}`,
-      argument: "order",
-    });
-  }
-  const wp = prec + 32 + spareBits(v, prec);
+  checkOrder(order);
+  const wp = prec + 32 + spareBits(v, prec) + orderBits(order, prec);
   const jet = transformedJet(j, v, reduction(tau, wp), order, wp);
   return jet.map((x, k) => onAxis(j, k, v, tau, disc.round(x, prec + 2)));
+}
+
+/** Refuses an order that is no whole number within reach. */
+export function checkOrder(order: number): void {
+  if (Number.isInteger(order) && order >= 0 && order <= MAX_ORDER) return;
+  throw new DomainError({
+    subject: "theta",
+    given: `the derivative of order ${order}`,
+    expected: `an integer from 0 to ${MAX_ORDER}`,
+    argument: "derivative",
+  });
+}
+
+/** The last of the √(prec/4) terms have the weight (2n+1)^order. */
+function orderBits(order: number, prec: number): number {
+  return order * Math.ceil(Math.log2(Math.sqrt(prec + 64) + 3));
 }
 
 /** A far v has large exponents; beside 0 the first function is small. */
@@ -105,17 +122,34 @@ function transformedJet(
   const over = disc.inv(factor, wp);
   const moved = disc.mul(v, over, wp);
   const at = cellPoint(moved, tau, wp);
-  const q = disc.exp(disc.mulI(disc.mulBall(tau, pi, wp + 8)), wp);
+  const q = nomeOf(tau, wp);
   const sums = cellSums(index, at, q, disc.sqr(q, wp), order, wp);
   // The exponent over πi: −c v²/(cτ+d) from the turns, −n²τ − 2n·point from the cell, τ/4 − point for θ1 and θ2.
   const turn = disc.mul(disc.mulInt(moved, -matrix.c, wp), v, wp);
   const cell = disc.neg(disc.add(disc.mulInt(tau, at.n * at.n, wp), disc.mulInt(at.point, 2n * at.n, wp), wp));
   const quarter = index <= 2 ? disc.sub(disc.ldexp(tau, -2), at.point, wp) : disc.zero;
   const exponent = disc.add(disc.add(turn, cell, wp), quarter, wp);
+  refuseFar(exponent, v, matrix.c === 0n ? tau : undefined);
   const scale = disc.exp(disc.mulI(disc.mulBall(exponent, pi, wp)), wp);
   const constant = disc.div(disc.mul(eighthRoot(eighths, wp), scale, wp), root, wp);
   const signed = negative(index, at) ? disc.neg(constant) : constant;
-  return leibniz(sums, signed, matrix.c, at, over, v, pi, wp);
+  return chained(sums, signed, { c: matrix.c, at, over, v, pi, wp });
+}
+
+function refuseFar(exponent: Disc, v: Disc, tall: Disc | undefined): void {
+  if (disc.magnitude(exponent) <= LARGEST_LOGARITHM) return;
+  const ten = (bits: number) => `10^${Math.round(bits * Math.log10(2))}`;
+  const height = ball.magnitude(disc.imag(v));
+  const far = height > -Infinity && (tall !== undefined || height > 0);
+  throw new DomainError({
+    subject: "theta",
+    given: `${far ? `an argument off the axis by about ${ten(height)}` : "a τ beside the real axis"}, where |ln θ| is about ${ten(disc.magnitude(exponent) + 2)}`,
+    expected: `|ln θ| under ${ten(LARGEST_LOGARITHM)}`,
+    hint: far
+      ? "θ(v + nτ) is ± exp(−πi n²τ − 2πi n v) θ(v): take v within Im τ/2 of the axis and keep that factor apart."
+      : "θ(v|τ) is a root times exp(−πi v²/τ) θ(v/τ | −1/τ): take the reduced τ and keep that factor apart.",
+    argument: far ? "v" : "tau",
+  });
 }
 
 /** The sign from the cell, θ1(v + m + nτ) ∝ (−1)^(m+n) θ1(v), θ2 ∝ (−1)^m, θ3 ∝ 1, θ4 ∝ (−1)^n, and from θ1(−v) = −θ1(v). */
@@ -124,42 +158,41 @@ function negative(j: ThetaIndex, { m, n, flipped }: CellPoint): boolean {
   return parity === 1n;
 }
 
-/**
- * Derivatives in v of e^Φ Θ(w) with w = ±v/(cτ+d) − m − nτ: Φ′ = −2πi (c v ± n)/(cτ+d), Φ″ = −2πi c/(cτ+d), and Θ^(k) from the sums.
- */
-function leibniz(
-  sums: readonly Disc[],
-  constant: Disc,
-  c: bigint,
-  at: CellPoint,
-  over: Disc,
-  v: Disc,
-  pi: ball.Ball,
-  wp: number,
-): Disc[] {
-  const mul = (x: Disc, y: Disc) => disc.mul(x, y, wp);
-  const add = (x: Disc, y: Disc) => disc.add(x, y, wp);
+/** v, τ and the way to the cell: w = ±v/(cτ+d) − m − nτ is the point where the sums are taken. */
+interface Chain {
+  readonly c: bigint;
+  readonly at: CellPoint;
+  /** 1/(cτ + d). */
+  readonly over: Disc;
+  readonly v: Disc;
+  readonly pi: ball.Ball;
+  readonly wp: number;
+}
+
+/** Derivatives in v of constant·e^Φ Θ(w): those of Θ from the sums, and Φ is quadratic in v. */
+function chained(sums: readonly Disc[], constant: Disc, chain: Chain): Disc[] {
+  const { at, over, pi, wp } = chain;
   const rate = disc.mulI(disc.mulBall(at.flipped ? disc.neg(over) : over, pi, wp));
-  let power: Disc = disc.one;
-  const inner = sums.map((s) => {
-    const value = mul(s, power);
-    power = mul(power, rate);
-    return value;
+  let power = constant;
+  const inner = sums.map((s, k) => {
+    if (k > 0) power = disc.mul(power, rate, wp);
+    return disc.mul(s, power, wp);
   });
-  if (sums.length === 1) return [mul(constant, inner[0]!)];
-  const minusTwoPiI = disc.neg(disc.mulI(disc.fromBall(ball.ldexp(pi, 1))));
-  const shiftBy = at.flipped ? -at.n : at.n;
-  const whole = disc.fromBall(ball.fromInt(shiftBy));
-  const first = mul(mul(add(disc.mulInt(v, c, wp), whole), over), minusTwoPiI);
-  const second = mul(disc.mulInt(over, c, wp), minusTwoPiI);
-  // Derivatives of e^Φ over e^Φ.
-  const square = mul(first, first);
-  const outer = [disc.one, first, add(square, second), mul(first, add(square, disc.mulInt(second, 3, wp)))];
-  return inner.map((_, k) => {
-    let value: Disc = disc.zero;
-    for (let i = 0; i <= k; i++) value = add(value, disc.mulInt(mul(outer[k - i]!, inner[i]!), BINOMIAL[k]![i]!, wp));
-    return mul(constant, value);
-  });
+  return sums.length === 1 ? inner : leibniz(inner, quadraticExponential(chain, sums.length), wp);
+}
+
+/** Derivatives of e^Φ over e^Φ: Φ′ = −2πi (c v ± n)/(cτ+d), Φ″ = −2πi c/(cτ+d), and G_(k+1) = Φ′ G_k + k Φ″ G_(k−1). */
+function quadraticExponential({ c, at, over, v, pi, wp }: Chain, count: number): Disc[] {
+  const factor = disc.mul(over, disc.neg(disc.mulI(disc.fromBall(ball.ldexp(pi, 1)))), wp);
+  const whole = disc.fromBall(ball.fromInt(at.flipped ? -at.n : at.n));
+  const first = disc.mul(disc.add(disc.mulInt(v, c, wp), whole, wp), factor, wp);
+  const second = disc.mulInt(factor, c, wp);
+  const list: Disc[] = [disc.one, first];
+  for (let k = 1; list.length < count; k++) {
+    const last = disc.mulInt(disc.mul(second, list[k - 1]!, wp), k, wp);
+    list.push(disc.add(disc.mul(first, list[k]!, wp), last, wp));
+  }
+  return list;
 }
 
 /** exp(2πi·k/8). */

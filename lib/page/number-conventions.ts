@@ -23,7 +23,7 @@ const ROWS: Readonly<Record<string, readonly ConventionKey[]>> = {
   ...rows(["modulus"], "incomplete F, incomplete E, incomplete D, incomplete B, incomplete Π"),
   ...rows(["modulus"], "sn, cn, dn, ns, nc, nd, sc, sd, cs, cd, ds, dc, am, Jacobi epsilon, Jacobi zeta"),
   ...rows(["modulus"], "arcsn, arccn, arcdn, arcns, arcnc, arcnd, arcsc, arcsd, arccs, arccd, arcds, arcdc"),
-  ...rows(["theta"], "theta, theta logarithmic, theta characteristic"),
+  ...rows(["theta"], "theta, theta logarithmic"),
   ...rows(["eisenstein"], "Eisenstein E, Eisenstein G, Eisenstein G2"),
   "modular lambda": ["roots"],
 };

@@ -4,11 +4,21 @@ import { type Matrix, reduceForm } from "../function/matrix.ts";
 import { reducedForms } from "../function/quadratic-forms.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { gcd, Rational } from "../number/rational.ts";
-import type { Complex } from "../number/values.ts";
+import type { Complex, Real } from "../number/values.ts";
 
 /** The exact quadratic number of a τ in the upper half plane. */
 export function exactTau(tau: Complex): Quadratic | undefined {
   return tau.exact instanceof Quadratic && tau.exact.d < 0n && tau.exact.b.sign() > 0 ? tau.exact : undefined;
+}
+
+/** The rational x, y with v = x + yτ, where exact numbers show them. */
+export function coordinates(v: Real | Complex, tau: Complex): readonly [Rational, Rational] | undefined {
+  const given = v.exact;
+  if (given instanceof Rational) return [given, Rational.zero];
+  const t = exactTau(tau);
+  if (!t || !given || given.d !== t.d) return undefined;
+  const y = given.b.div(t.b);
+  return [given.a.minus(y.times(t.a)), y];
 }
 
 /** Whether exp(2πiτ) is real: Re τ is half an integer. */

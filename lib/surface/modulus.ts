@@ -1,5 +1,8 @@
 import { LAMBDA } from "../function/modular-operations.ts";
+import * as ball from "../number/ball.ts";
+import * as disc from "../number/disc.ts";
 import { ln } from "../number/functions.ts";
+import { asDisc } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
 import { i, π } from "../number/symbols.ts";
 import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
@@ -105,9 +108,24 @@ export function tauOf(input: Readonly<Record<string, unknown>>, subject: string)
   }
   const value = scalar(input[given[0]!] as ComplexNumeric, subject);
   if (given[0] === "tau") return upperHalf(Complex.from(value), subject);
+  refuseNome(value, given[0]!, subject);
   const log = ln(Complex.from(value));
   const turns = given[0] === "qTheta" ? Rational.one : Rational.of(2);
   return Complex.from(Complex.from(log).div(i.times(π.times(turns))));
+}
+
+function refuseNome(q: Real | Complex, name: "qTheta" | "qMod", subject: string): void {
+  const size = disc.abs(asDisc(q.enclosure), 64);
+  const zero = ball.isZero(size);
+  if (!zero && ball.compare(size, ball.one) === -1) return;
+  const [label, meaning] = name === "qTheta" ? ["q_θ", "exp(πiτ)"] : ["q_mod", "exp(2πiτ)"];
+  throw new DomainError({
+    subject,
+    given: `${label} = ${q}`,
+    expected: `0 < |${label}| < 1, since ${label} = ${meaning} with Im τ > 0`,
+    hint: zero ? "Towards 0 the functions become trigonometric: m = 0." : "",
+    argument: name,
+  });
 }
 
 /** τ itself, unless it is seen at once that Im τ <= 0. */

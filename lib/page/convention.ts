@@ -1,6 +1,8 @@
 // The conventions that a result used, as lines under it: the words come from the edition, the formulas in them are set.
 
 import { type ConventionKey, convention, conventionOrder } from "../proof/conventions.ts";
+import { escapeHtml } from "./html.ts";
+import { prose } from "./prose.ts";
 import { small, texProse } from "./tex.ts";
 
 /** The rows of edition 1 with their formulas in $...$; a row that is missing here is set as words. */
@@ -43,6 +45,21 @@ const WITH_FORMULAS: Partial<Record<ConventionKey, string>> = {
 export function conventionText(keys: readonly ConventionKey[]): string[] {
   return conventionOrder(keys).map((key) => `${convention(key).item}: ${convention(key).text}`);
 }
+
+/** One line a row, as running text with $formulas$ that HTML and TeX read alike. */
+export function conventionProse(keys: readonly ConventionKey[]): string[] {
+  return conventionOrder(keys).map(
+    (key) => `${convention(key).item}: ${prose(WITH_FORMULAS[key] ?? convention(key).text)}`,
+  );
+}
+
+/** The same as one quiet block of HTML; empty if nothing needs saying. */
+export function conventionHtml(keys: readonly ConventionKey[]): string {
+  const lines = conventionProse(keys).map((line) => `<div>${escapeHtml(line)}</div>`);
+  return lines.length === 0 ? "" : `<div style="${NOTE}">${lines.join("")}</div>`;
+}
+
+const NOTE = "font-size:.82em;line-height:1.45;opacity:.8;margin:.5em 0 .2em";
 
 /** One line a row, in small type; none if nothing needs saying. */
 export function conventionTex(keys: readonly ConventionKey[]): string[] {

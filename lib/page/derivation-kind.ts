@@ -1,11 +1,13 @@
 // A derivation as numbered lines. Longer values stand in a line of their own.
 
-import { weakest } from "../proof/standing.ts";
-import { Claim } from "../surface/claim-value.ts";
+import { citedText } from "./citation.ts";
 import type { Derivation, Step } from "./derivation.ts";
+import { derivationHtml } from "./derivation-html.ts";
+import { derivationLatex } from "./derivation-latex.ts";
+import { checkHead, formulaTex, standingOf, summary } from "./derivation-parts.ts";
 import type { Kind, Show } from "./kind.ts";
 import { plainFormulas } from "./plain-formula.ts";
-import { standingHead, standingTex, standingText } from "./standing.ts";
+import { standingTex, standingText } from "./standing.ts";
 import { array, small, texProse, texWords } from "./tex.ts";
 
 export const derivationKind: Kind<Derivation> = {
@@ -18,6 +20,8 @@ export const derivationKind: Kind<Derivation> = {
     const note = summary(derivation).map((line) => [small(texWords(line))]);
     return array("l", [[texProse(derivation.title)], [array("rl", rows)], ...note]);
   },
+  prose: derivationLatex,
+  html: derivationHtml,
   conventions: (derivation) => derivation.conventions,
   data: (derivation, show) => ({
     kind: "derivation",
@@ -25,33 +29,32 @@ export const derivationKind: Kind<Derivation> = {
     steps: derivation.steps.map((step) => ({
       text: step.text,
       ...(step.label ? { label: step.label } : {}),
-      value: step.value === undefined ? null : show.data(step.value),
-      check: step.check ? standingOf(step).kind : null,
+      value: step.value === undefined || step.trace ? null : show.data(step.value),
+      check: step.check ? standingOf(step)!.kind : null,
     })),
   }),
 };
 
-function standingOf({ check }: Step) {
-  return check instanceof Claim ? check.standing : check!;
-}
-
-function stepText({ level }: Derivation, step: Step, index: number, show: Show): string {
-  const head = `(${index + 1}) ${plainFormulas(step.text)}`;
+function stepText(derivation: Derivation, step: Step, index: number, show: Show): string {
+  const { level } = derivation;
+  const head = `(${index + 1}) ${plainFormulas(citedText(derivation, step.text))}`;
   if (level === "outline") return head;
   const value = step.value === undefined ? [] : [`    ${show.text(step.value).replace(/\n/g, "\n    ")}`];
   if (level === "steps") return [head, ...value].join("\n");
   const source = step.source ? [`    source: ${plainFormulas(step.source)}`] : [];
-  const check = step.check ? [`    ${plainFormulas(checkHead(step))}${standingText(standingOf(step))}`] : [];
+  const standing = standingOf(step);
+  const check = standing
+    ? [`    ${plainFormulas(citedText(derivation, checkHead(step)))}${standingText(standing)}`]
+    : [];
   return [head, ...value, ...source, ...check].join("\n");
 }
 
-function stepRows({ level }: Derivation, step: Step, index: number, show: Show): string[][] {
+function stepRows(derivation: Derivation, step: Step, index: number, show: Show): string[][] {
+  const { level } = derivation;
   const number = `(${index + 1})`;
-  const words = texProse(step.text);
+  const words = texProse(citedText(derivation, step.text));
   if (level === "outline") return [[number, words]];
-  const formula = step.formula ? `{${step.formula}}` : "";
-  const value = step.value === undefined ? "" : show.tex(step.value);
-  const whole = formula && value ? `${formula} = ${value}` : formula || value;
+  const whole = formulaTex(step, show);
   const rows =
     whole === ""
       ? [[number, words]]
@@ -61,18 +64,9 @@ function stepRows({ level }: Derivation, step: Step, index: number, show: Show):
         ];
   if (level === "steps") return rows;
   const source = step.source ? [["", small(texProse(`source: ${step.source}`))]] : [];
-  const check = step.check ? [["", small(`${texProse(checkHead(step))}${standingTex(standingOf(step))}`)]] : [];
+  const standing = standingOf(step);
+  const check = standing
+    ? [["", small(`${texProse(citedText(derivation, checkHead(step)))}${standingTex(standing)}`)]]
+    : [];
   return [...rows, ...source, ...check];
-}
-
-/** "check: " with the other way of computing, where one was taken. */
-function checkHead({ route }: Step): string {
-  return route ? `check: ${route}: ` : "check: ";
-}
-
-/** How the whole is known, if steps have checks. */
-function summary(derivation: Derivation): string[] {
-  const { checks, steps } = derivation;
-  if (checks.length === 0) return [];
-  return [`${checks.length} of ${steps.length} steps checked; together ${standingHead(weakest(checks))}`];
 }

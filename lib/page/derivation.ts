@@ -20,6 +20,8 @@ export interface StepParts {
   readonly route?: string;
   /** A name by which text can cite the step, the same however many steps stand before it. */
   readonly label?: string;
+  /** True for a value that is longer the more digits are asked for, such as the rows of a mean: it is shown, and no result. */
+  readonly trace?: boolean;
 }
 
 /** One step; its number is its place, and text can cite it as (3). */
@@ -27,35 +29,56 @@ export interface Step extends StepParts {
   readonly text: string;
 }
 
+interface Rest {
+  readonly steps?: readonly Step[];
+  readonly level?: Level;
+  readonly conventions?: readonly ConventionKey[];
+  readonly name?: string;
+}
+
 /** A derivation. Immutable: `step` gives a longer one. */
 export class Derivation {
   readonly title: string;
   readonly steps: readonly Step[];
   readonly level: Level;
-
+  /** The name under which links and references find it; letters, digits and hyphens. */
+  readonly name: string;
   /** The rows of the conventions that the steps rest on, shown once below them. */
   readonly conventions: readonly ConventionKey[];
 
-  constructor(
-    title: string,
-    steps: readonly Step[] = [],
-    level: Level = "steps",
-    conventions: readonly ConventionKey[] = [],
-  ) {
+  constructor(title: string, { steps = [], level = "steps", conventions = [], name = slug(title) }: Rest = {}) {
     this.title = title;
     this.steps = steps;
     this.level = level;
     this.conventions = conventions;
+    this.name = name;
   }
 
-  /** One step more: words, which may hold $formulas$, with a formula, a value, a source and a check as there are. */
+  #with(rest: Rest): Derivation {
+    return new Derivation(this.title, { ...this, ...rest });
+  }
+
+  /**
+   * One step more: words, which may hold $formulas$, with a formula, a value, a source and a check as there are. {label} in the words
+   * stands for the number of an earlier step.
+   */
   step(text: string, parts: StepParts = {}): Derivation {
-    return new Derivation(this.title, [...this.steps, { text, ...parts }], this.level, this.conventions);
+    return this.#with({ steps: [...this.steps, { text, ...parts }] });
   }
 
   /** The same derivation, shown to another depth. */
   show(level: Level): Derivation {
-    return new Derivation(this.title, this.steps, level, this.conventions);
+    return this.#with({ level });
+  }
+
+  /** The same derivation under another name, where a notebook holds several of one kind. */
+  named(name: string): Derivation {
+    return this.#with({ name: slug(name) });
+  }
+
+  /** The same derivation, with the conventions that it rests on. */
+  under(...conventions: readonly ConventionKey[]): Derivation {
+    return this.#with({ conventions });
   }
 
   /**
@@ -63,17 +86,30 @@ export class Derivation {
    * Throws   RangeError with the labels that there are.
    */
   cite(label: string): string {
+    return `(${this.#place(label) + 1})`;
+  }
+
+  /**
+   * Where a link finds the step: [step (3)](#step-torsion-bound) in Markdown, \ref{step-torsion-bound} in LaTeX. It does not change
+   * when steps are added before it.
+   */
+  anchor(label: string): string {
+    this.#place(label);
+    return anchorOf(this, label);
+  }
+
+  /** The value of the step with a label. Throws as `cite`. */
+  value(label: string): unknown {
+    return this.steps[this.#place(label)]?.value;
+  }
+
+  #place(label: string): number {
     const place = this.steps.findIndex((step) => step.label === label);
-    if (place >= 0) return `(${place + 1})`;
+    if (place >= 0) return place;
     const labels = this.steps.flatMap((step) => step.label ?? []);
     throw new RangeError(
       `cite: no step has the label "${label}"; expected one of ${labels.join(", ") || "none: no step has one"}`,
     );
-  }
-
-  /** The same derivation, with the conventions that it rests on. */
-  under(...conventions: readonly ConventionKey[]): Derivation {
-    return new Derivation(this.title, this.steps, this.level, conventions);
   }
 
   /** How the checks of the steps are known; steps without a check are not counted. */
@@ -82,10 +118,24 @@ export class Derivation {
   }
 }
 
+/** The name of a step for links and references; a step without a label goes by its number. */
+export function anchorOf({ name }: Derivation, label: string | number | undefined): string {
+  return `step-${name}${label === undefined ? "" : `-${label}`}`;
+}
+
+/** The first words of a title, fit for an address. */
+function slug(title: string): string {
+  const words = title
+    .replace(/\$[^$]*\$/g, " ")
+    .toLowerCase()
+    .match(/[\p{L}\p{N}]+/gu);
+  return (words ?? ["derivation"]).slice(0, 3).join("-");
+}
+
 /**
  * A derivation of one's own, to be built step by step.
  *
- * @example derivation("Doubling P").step("the tangent at P", { formula: "y = 3x", check: claim(...) })
+ * @example derivation("Doubling P").step("the tangent at P", { formula: "y = 3x", check: claim(...), label: "tangent" })
  */
 export function derivation(title: string): Derivation {
   return new Derivation(title);

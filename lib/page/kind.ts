@@ -36,6 +36,7 @@ export interface Show {
   /** A formula without delimiters. */
   tex(value: unknown): string;
   cell(value: unknown): Cell;
+  conventions(value: unknown): readonly ConventionKey[];
   data(value: unknown): Data;
 }
 
@@ -53,7 +54,7 @@ export interface Kind<T> {
   svg?(value: T): string;
   cell?(value: T, show: Show): Cell;
   /** The rows of the conventions that a reader needs beside this value. */
-  conventions?(value: T): readonly ConventionKey[];
+  conventions?(value: T, show: Show): readonly ConventionKey[];
   data(value: T, show: Show): Data;
 }
 

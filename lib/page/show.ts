@@ -83,6 +83,10 @@ export const show: Show = {
     return { kind: "words", text: typeof value === "string" ? value : show.text(value) };
   },
 
+  conventions(value) {
+    return conventionsOf(value);
+  },
+
   data(value) {
     return dataOf(value, 0);
   },
@@ -140,7 +144,7 @@ function recordTex(parts: readonly (readonly [string, unknown])[]): string {
 
 /** Rows of the conventions that a value, or the parts of a list or record, need. */
 export function conventionsOf(value: unknown): ConventionKey[] {
-  const own = kindOf(value)?.conventions?.(value) ?? [];
+  const own = kindOf(value)?.conventions?.(value, show) ?? [];
   const inner = (partsOf(value) ?? []).flatMap(([, part]) => conventionsOf(part));
   return [...new Set([...own, ...inner])];
 }

@@ -1,3 +1,4 @@
+import { conventionHtml } from "./convention.ts";
 import type { Kind } from "./kind.ts";
 import type { Table } from "./table.ts";
 import { tableHtml } from "./table-html.ts";
@@ -7,7 +8,8 @@ import { tableText } from "./table-text.ts";
 export const tableKind: Kind<Table> = {
   text: tableText,
   tex: tableTex,
-  html: tableHtml,
+  html: (table, show) => `${tableHtml(table, show)}${conventionHtml(show.conventions(table))}`,
+  conventions: (table, show) => table.rows.flatMap((row) => row.flatMap((value) => show.conventions(value))),
   data: (table, show) => ({
     kind: "table",
     columns: table.columns,

@@ -32,6 +32,7 @@ const COMMANDS: Readonly<Record<string, string>> = {
   "³": "{}^3",
   "½": "\\tfrac12 ",
   ℘: "\\wp ",
+  ℓ: "\\ell ",
   "…": "\\ldots ",
   ...greek(),
 };

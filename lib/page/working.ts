@@ -28,7 +28,12 @@ import { valueOfWp, wpWorking } from "./working/weierstrass.ts";
  * Throws   TypeError for values that keep no record.
  * @example working(L.wp(1/3))
  */
-export function working(value: unknown): Derivation {
+export function working(value: unknown, { name }: { readonly name?: string } = {}): Derivation {
+  const steps = derived(value);
+  return name === undefined ? steps : steps.named(name);
+}
+
+function derived(value: unknown): Derivation {
   const made = typeof value === "object" && value !== null ? behind(value) : undefined;
   if (value instanceof Real || value instanceof Complex) return ofNumber(value, made);
   if (value instanceof Lattice) return latticeWorking(value);

@@ -173,17 +173,22 @@ class Writer {
   #keep(name: string, value: string, inSvg: boolean): string | undefined {
     const allowed = inSvg ? isSvgAttribute(name) : ATTRIBUTES.has(name) || /^aria-[a-z]+$/.test(name);
     if (!allowed) return undefined;
-    if (name === "id") return this.#prefix + value;
-    if (ID_LISTS.has(name)) return value.replace(/\S+/g, (id) => this.#prefix + id);
+    if (name === "id") return this.#named(value);
+    if (ID_LISTS.has(name)) return value.replace(/\S+/g, (id) => this.#named(id));
     if (name === "href" || name === "xlink:href" || name === "src")
       return this.#address(value, inSvg || name === "src");
     if (name === "style" || inSvg) return isLocal(value) ? this.#localUrls(value) : undefined;
     return value;
   }
 
+  /** Steps of derivations keep their names, which text elsewhere in the page cites. */
+  #named(id: string): string {
+    return id.startsWith("step-") ? id : this.#prefix + id;
+  }
+
   /** Addresses: into the page, a picture in the page itself, or (for links only) an ordinary web or mail address. */
   #address(value: string, embedded: boolean): string | undefined {
-    if (/^#[\w:.-]+$/.test(value)) return `#${this.#prefix}${value.slice(1)}`;
+    if (/^#[\w:.-]+$/.test(value)) return `#${this.#named(value.slice(1))}`;
     if (/^data:image\/(?:png|jpeg|gif|webp);base64,[\w+/=\s]+$/.test(value)) return embedded ? value : undefined;
     return !embedded && /^(?:https?:\/\/|mailto:)[^\s]+$/i.test(value) ? value : undefined;
   }

@@ -41,6 +41,8 @@ pre code { font-size: 1em; }
 .stated { text-wrap: balance; overflow-x: auto; overflow-y: hidden; }
 pre.shown { text-align: left; font-size: 0.8rem; }
 .said { border: 0; margin: 0.8rem 0 0.8rem 1.25rem; font-size: 0.78rem; white-space: pre-wrap; overflow-wrap: anywhere; }
+.shown:has(> section) { width: auto; max-width: none; margin-left: 0; transform: none; text-align: left; }
+.shown section summary { text-wrap: pretty; }
 .said.stderr { color: var(--soft); font-style: italic; }
 .failure { margin: 1rem 0; border-left: 3px double var(--wrong); padding-left: 1.1rem; }
 .failure pre { font-size: 0.78rem; white-space: pre-wrap; }
@@ -77,6 +79,8 @@ const PRINT = `
   .wide :is(td, th) { padding-right: 1em !important; }
   .code, figure, table, .shown, .stated, .failure { break-inside: avoid; }
   .code { break-after: avoid; }
+  details::details-content { content-visibility: visible; }
+  summary { list-style: none; }
   section.step { margin: 1rem 0 1.1rem; }
   figure { margin: 0.6rem auto; max-width: 84%; }
   a { color: inherit; text-decoration: none; }

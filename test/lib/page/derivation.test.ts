@@ -38,6 +38,48 @@ describe("derivations of one's own", () => {
   });
 });
 
+describe("the forms of a derivation", () => {
+  const steps = derivation("Half of $\\omega_1$")
+    .step("the start", { formula: "a", value: 2, label: "start" })
+    .step("by {start}, not by {nothing} nor $\\frac{1}{2}$", { value: 3, source: "our own", label: "end" });
+  const html = (level: "outline" | "steps" | "all") => bundle(steps.show(level))?.["text/html"] as string;
+
+  it("text cites a step by its label, which stays when steps are put before it", () => {
+    expect(text(steps)).toContain("(2) by (1), not by {nothing} nor 1/2");
+    expect(steps.cite("end")).toBe("(2)");
+    expect(steps.anchor("end")).toBe("step-half-of-end");
+    expect(steps.named("first case").anchor("end")).toBe("step-first-case-end");
+    expect(steps.value("end")).toBe(3);
+    expect(() => steps.anchor("and")).toThrow(/expected one of start, end/);
+  });
+
+  it("HTML has the anchors and links, and folds without a script: each level opens its own depth", () => {
+    for (const level of ["outline", "steps", "all"] as const) {
+      expect(html(level)).toContain('<li id="step-half-of-end"');
+      expect(html(level)).toContain('<a href="#step-half-of-start">(1)</a>');
+      expect(html(level)).not.toMatch(/<script|onclick/);
+    }
+    const open = (level: "outline" | "steps" | "all") => html(level).match(/<details open/g)?.length ?? 0;
+    expect([open("outline"), open("steps"), open("all")]).toEqual([0, 2, 3]);
+  });
+
+  it("LaTeX is an enumeration whose items have labels; only what the level shows", () => {
+    const latex = (level: "outline" | "steps" | "all") => bundle(steps.show(level))?.["text/latex"] as string;
+    expect(latex("all")).toContain("\\item\\label{step-half-of-start} the start:\n\\[ {a} = 2 \\]");
+    expect(latex("all")).toContain("by (\\ref{step-half-of-start}), not by");
+    expect(latex("all")).toContain("Source: our own.");
+    expect(latex("steps")).not.toContain("our own");
+    expect(latex("outline")).not.toContain("\\[");
+  });
+
+  it("a trace is shown and is no result: its length depends on the digits", () => {
+    const data = bundle(derivation("t").step("rows", { value: [1n, 2n], trace: true }))![
+      "application/vnd.halfperiod.value+json"
+    ];
+    expect(JSON.stringify(data)).toContain('"value":null');
+  });
+});
+
 describe("working", () => {
   it("a number: one step an operation, operands first, each with its value — oracle: the record by hand", () => {
     const L = lattice({ invariants: [4, -1] });

@@ -21,8 +21,14 @@ export interface ReducedLattice {
   readonly q: Disc;
   readonly q2: Disc;
   readonly first: Disc;
-  /** (π/r1)². */
+  /** 1/r1. */
+  readonly over: Disc;
+  /** π/r1, (π/r1)² and (π/r1)³. */
+  readonly unit: Disc;
   readonly scale: Disc;
+  readonly cube: Disc;
+  /** η1/r1. */
+  readonly mean: Disc;
   /** θ2⁴, θ3⁴, θ4⁴ at v = 0. */
   readonly fourth: readonly [Disc, Disc, Disc];
   /** Quasi-periods of r1, r2. */
@@ -47,11 +53,13 @@ export function reducedLattice(r1: Disc, r2: Disc, prec: number): ReducedLattice
   const sums = thetaConstants(q, Math.max(64, Math.min(wp, 48 - radiusMagnitude(q))));
   const fourthPower = (x: Disc) => disc.sqr(disc.sqr(x, wp), wp);
   const theta2 = disc.mul(disc.ldexp(q, 4), fourthPower(sums.half2), wp);
-  const scale = disc.sqr(disc.div(disc.fromBall(pi), r1, wp), wp);
+  const over = disc.inv(r1, wp);
+  const unit = disc.mulBall(over, pi, wp);
+  const scale = disc.sqr(unit, wp);
   const ratio = disc.div(sums.third, disc.mulInt(sums.first, 3n, wp), wp);
-  const eta1 = disc.mul(disc.mul(scale, r1, wp), ratio, wp);
-  const twoPiI = disc.mulI(disc.fromBall(ball.ldexp(pi, 1)));
-  const eta2 = disc.sub(disc.mul(eta1, tau, wp), disc.div(twoPiI, r1, wp), wp);
+  const mean = disc.mul(scale, ratio, wp);
+  const eta1 = disc.mul(mean, r1, wp);
+  const eta2 = disc.sub(disc.mul(eta1, tau, wp), disc.ldexp(disc.mulI(unit), 1), wp);
   return {
     prec,
     r1,
@@ -60,7 +68,11 @@ export function reducedLattice(r1: Disc, r2: Disc, prec: number): ReducedLattice
     q,
     q2,
     first: sums.first,
+    over,
+    unit,
     scale,
+    cube: disc.mul(scale, unit, wp),
+    mean,
     fourth: [theta2, fourthPower(sums.theta3), fourthPower(sums.theta4)],
     eta1,
     eta2,

@@ -1,21 +1,23 @@
-// ℘, ℘′, ζ and σ of a reduced lattice at one point, from one theta jet.
+// ℘, ℘′, ζ and σ of a reduced lattice at one point, from ln sin and one series.
 //
-// With v = z/r1 in the cell, ρ_k = S_k/S_0 (theta-sums.ts), D = d/dv:
-//     θ1′/θ1 = πi ρ1,  θ1″/θ1 = −π² ρ2,  θ1‴/θ1 = −iπ³ ρ3
-//     ζ(z) = η1 v + (πi/r1) ρ1                                     (DLMF 23.6.13)
-//     ℘(z) = −η1/r1 + (π/r1)² (ρ2 − ρ1²)                            (−ζ′)
-//     ℘′(z) = i (π/r1)³ (ρ3 − 3 ρ1 ρ2 + 2 ρ1³)
-//     σ(z) = (i r1/2π) exp(η1 z²/(2 r1) − πiv) S_0/T1                   (DLMF 23.6.9)
+// With v = z/r1 in the cell, x = πv, y = 4 sin² x, the sums E_j of cell-series.ts and ε_j = E_j/E_0, C = cot x, S = 1/sin² x,
+// κ2 = ε2 − ε1², κ3 = ε3 − 3ε1ε2 + 2ε1³, and since y d/dy is d/dx over 2C:
+//     f1 = (ln θ1)′ = C (1 + 2ε1)
+//     f2 = (ln θ1)″ = −S (1 + 2ε1 − 4κ2) − 4κ2
+//     f3 = (ln θ1)‴ = 2C [S (1 + 2ε1 − 6κ2 + 4κ3) − 4κ3]
+//     ζ(z) = η1 v + (π/r1) f1                                       (DLMF 23.6.13)
+//     ℘(z) = −η1/r1 − (π/r1)² f2,   ℘′(z) = −(π/r1)³ f3              (−ζ′, −ζ″)
+//     σ(z) = (r1/π) exp(η1 z²/(2 r1)) sin x E_0/B_0                  (DLMF 23.6.9)
+// Deep in a tall cell S and the κ are small, and the sums keep their relative accuracy.
 // Arguments outside the cell: ζ(z + w) = ζ(z) + η(w), σ(z + w) = ±exp(η(w)(z + w/2)) σ(z), minus unless w ∈ 2Λ (DLMF 23.2.17).
 
-import type { Ball } from "../number/ball.ts";
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { PoleError } from "../proof/errors.ts";
+import { type CellSeries, cellSeries, cellSums } from "./cell-series.ts";
 import { nearestInteger, radiusMagnitude } from "./enclosure.ts";
 import type { ReducedLattice } from "./reduced.ts";
-import { thetaSums } from "./theta-sums.ts";
 
 /** An argument z = rest + m1 r1 + m2 r2 with rest in or beside the cell around 0. */
 export interface CellArgument {
@@ -32,7 +34,7 @@ export interface CellArgument {
  * Error    the radius of `rest` is at least that of z; subtracting a long vector costs as many bits as it has.
  */
 export function toCell(l: ReducedLattice, z: Disc, prec: number): CellArgument {
-  const v = disc.div(z, l.r1, prec + 8);
+  const v = disc.mul(z, l.over, prec + 8);
   const height = disc.imag(l.tau);
   const m2 = nearestInteger(ball.div(disc.imag(v), height, 53 + bitsAbove(v)));
   const sheared = m2 === 0n ? v : disc.sub(v, disc.mulInt(l.tau, m2, prec + 8), prec + 8);
@@ -40,7 +42,7 @@ export function toCell(l: ReducedLattice, z: Disc, prec: number): CellArgument {
   if (m1 === 0n && m2 === 0n) return { rest: z, v, m1, m2 };
   const shift = combination(l.r1, l.r2, m1, m2, prec + 8);
   const rest = disc.sub(z, shift, prec + 8);
-  return { rest, v: disc.div(rest, l.r1, prec + 8), m1, m2 };
+  return { rest, v: disc.mul(rest, l.over, prec + 8), m1, m2 };
 }
 
 function bitsAbove(v: Disc): number {
@@ -63,7 +65,7 @@ export type WeierstrassValues = { readonly [K in Wanted]?: Disc };
  * Domain   every z; ℘, ℘′, ζ need z ∉ Λ.
  * Error    enclosures. For a z of full accuracy the relative error is about 2^−prec except near a zero of the function; a z far
  *          from the cell should come with as many bits more as |z/r1| has before the point.
- * Cost     one exponential, one sine with cosine, a theta series of √prec terms; σ takes one complex exponential more.
+ * Cost     one exponential, one sine with cosine, a series of √prec terms; σ takes one complex exponential more.
  * Throws   PoleError (with the coordinates of the lattice point in the reduced basis) if the disc of z holds one and a function with
  *          poles is wanted.
  */
@@ -82,78 +84,94 @@ export function atCell(
   const v = upward ? at.v : disc.neg(at.v);
   const poles = wanted.some((name) => name !== "sigma");
   if (poles && disc.containsZero(v)) throw pole(at);
-  const near = Math.max(0, -disc.magnitude(v));
-  const wp = sharpness(l, v, prec + 24 + Math.min(near, 64 * prec));
+  const wp = sharpness(l, v, prec + 16);
+  const { sin, cos } = disc.sinCos(disc.mulBall(v, ball.pi(wp + 8), wp), wp);
   const order = wanted.includes("prime") ? 3 : wanted.includes("wp") ? 2 : wanted.includes("zeta") ? 1 : 0;
-  const pi = ball.pi(wp + 8);
-  const { u, inverse } = phases(v, pi, wp);
-  const t = disc.mul(l.q2, inverse, wp);
-  const sums = thetaSums(u, t, l.q2, order, wp);
+  const sums = cellSums(seriesOf(l), disc.ldexp(disc.sqr(sin, wp), 2), order);
   const out: { [K in Wanted]?: Disc } = {};
   const odd = (x: Disc) => (upward ? x : disc.neg(x));
   if (poles) {
-    const s0 = sums[0]!;
-    if (disc.containsZero(s0)) throw pole(at);
-    const over = disc.inv(s0, wp);
-    const rho = sums.map((s, k) => (k === 0 ? disc.one : disc.mul(s, over, wp)));
-    Object.assign(out, quotients(l, v, rho, pi, wanted, prec));
+    if (disc.containsZero(sin)) throw pole(at);
+    Object.assign(out, fromLogarithm(l, v, derivatives(sin, cos, sums, wanted, wp), prec));
     if (out.prime) out.prime = odd(out.prime);
-    if (out.zeta) out.zeta = disc.add(odd(out.zeta), combination(l.eta1, l.eta2, at.m1, at.m2, prec + 8), prec);
+    if (out.zeta) out.zeta = shiftedZeta(l, at, odd(out.zeta), prec);
   }
-  if (wanted.includes("sigma")) out.sigma = shiftedSigma(l, at, odd(cellSigma(l, v, sums[0]!, pi, wp)), prec);
+  if (wanted.includes("sigma")) out.sigma = shiftedSigma(l, at, odd(cellSigma(l, v, sin, sums[0]!, wp)), prec);
   return out;
+}
+
+const allSeries = new WeakMap<ReducedLattice, CellSeries>();
+
+/** The coefficients of the lattice, made at the first evaluation. */
+function seriesOf(l: ReducedLattice): CellSeries {
+  let series = allSeries.get(l);
+  if (!series) {
+    series = cellSeries(l.q, l.q2, l.prec + 16);
+    allSeries.set(l, series);
+  }
+  return series;
 }
 
 /** wp, or what the enclosures of v and q allow and a few bits more. */
 function sharpness(l: ReducedLattice, v: Disc, wp: number): number {
-  const coarse = Math.max(radiusMagnitude(v), radiusMagnitude(l.q2));
-  return Math.max(64, Math.min(wp, 48 - coarse));
+  const lost = Math.max(radiusMagnitude(v) - Math.min(0, disc.magnitude(v)), radiusMagnitude(l.q2));
+  return Math.max(64, Math.min(wp, 48 - lost));
 }
 
-/** u = exp(2πiv) and 1/u from one real exponential and one sine with cosine. */
-function phases(v: Disc, pi: Ball, wp: number): { u: Disc; inverse: Disc } {
-  const twoPi = ball.ldexp(pi, 1);
-  const y = ball.mul(disc.imag(v), twoPi, wp + 8);
-  const { sin, cos } = ball.sinCos(ball.mul(disc.real(v), twoPi, wp + 8), wp + 4);
-  const size = ball.exp(ball.neg(y), wp + 4);
-  const phase = disc.fromBalls(cos, sin);
-  return { u: disc.mulBall(phase, size, wp), inverse: disc.mulBall(disc.conj(phase), ball.inv(size, wp), wp) };
+/** f1, −f2 and −f3 of the header, those that are wanted. */
+interface Derivatives {
+  readonly first?: Disc;
+  readonly second?: Disc;
+  readonly third?: Disc;
 }
 
-function quotients(
+function derivatives(sin: Disc, cos: Disc, sums: readonly Disc[], wanted: readonly Wanted[], wp: number): Derivatives {
+  const mul = (x: Disc, y: Disc) => disc.mul(x, y, wp);
+  const over = disc.inv(sin, wp);
+  const base = disc.inv(sums[0]!, wp);
+  const [e1, e2, e3] = sums.slice(1).map((e) => mul(e, base));
+  const linear = disc.add(disc.one, disc.ldexp(e1!, 1), wp);
+  const cot = mul(cos, over);
+  const first = wanted.includes("zeta") ? { first: mul(cot, linear) } : {};
+  if (!e2) return first;
+  const square = disc.sqr(over, wp);
+  const e1Square = disc.sqr(e1!, wp);
+  const kappa = disc.ldexp(disc.sub(e2, e1Square, wp), 2);
+  const reduced = disc.sub(linear, kappa, wp);
+  const second = wanted.includes("wp") ? { second: disc.add(mul(square, reduced), kappa, wp) } : {};
+  if (!e3) return { ...first, ...second };
+  // κ3 = ε3 − ε1 (3ε2 − 2ε1²)
+  const inner = disc.sub(disc.mulInt(e2, 3n, wp), disc.ldexp(e1Square, 1), wp);
+  const kappa3 = disc.ldexp(disc.sub(e3, mul(e1!, inner), wp), 2);
+  const factor = disc.add(disc.sub(reduced, disc.ldexp(kappa, -1), wp), kappa3, wp);
+  const sum = disc.sub(mul(square, factor), kappa3, wp);
+  return { ...first, ...second, third: disc.neg(disc.ldexp(mul(cot, sum), 1)) };
+}
+
+/** The wanted values from the derivatives of ln θ1. */
+function fromLogarithm(
   l: ReducedLattice,
   v: Disc,
-  rho: readonly Disc[],
-  pi: Ball,
-  wanted: readonly Wanted[],
+  { first, second, third }: Derivatives,
   prec: number,
 ): { [K in Wanted]?: Disc } {
-  const wp = prec + 20;
+  const wp = prec + 8;
   const out: { [K in Wanted]?: Disc } = {};
-  const k = disc.div(disc.fromBall(pi), l.r1, wp);
-  const r1 = rho[1]!;
-  if (wanted.includes("zeta")) {
-    out.zeta = disc.add(disc.mul(l.eta1, v, wp), disc.mulI(disc.mul(k, r1, wp)), prec);
-  }
-  if (wanted.includes("wp")) {
-    const difference = disc.sub(rho[2]!, disc.sqr(r1, wp), wp);
-    out.wp = disc.sub(disc.mul(l.scale, difference, wp), disc.div(l.eta1, l.r1, wp), prec);
-  }
-  if (wanted.includes("prime")) {
-    // ρ3 − ρ1 (3ρ2 − 2ρ1²)
-    const inner = disc.sub(disc.mulInt(rho[2]!, 3n, wp), disc.ldexp(disc.sqr(r1, wp), 1), wp);
-    const sum = disc.sub(rho[3]!, disc.mul(r1, inner, wp), wp);
-    out.prime = disc.round(disc.mulI(disc.mul(disc.mul(l.scale, k, wp), sum, wp)), prec);
-  }
+  if (first) out.zeta = disc.add(disc.mul(l.eta1, v, wp), disc.mul(l.unit, first, wp), prec);
+  if (second) out.wp = disc.sub(disc.mul(l.scale, second, wp), l.mean, prec);
+  if (third) out.prime = disc.mul(l.cube, third, prec);
   return out;
 }
 
-/** σ(v r1) for v in the upper half of the cell. */
-function cellSigma(l: ReducedLattice, v: Disc, s0: Disc, pi: Ball, wp: number): Disc {
-  const half = disc.ldexp(disc.mul(disc.mul(l.eta1, l.r1, wp), disc.sqr(v, wp), wp), -1);
-  const exponent = disc.sub(half, disc.mulI(disc.mulBall(v, pi, wp)), wp);
-  const factor = disc.mulI(disc.div(l.r1, disc.mulBall(l.first, ball.ldexp(pi, 1), wp), wp));
-  return disc.mul(disc.mul(factor, s0, wp), disc.exp(exponent, wp), wp);
+function shiftedZeta(l: ReducedLattice, { m1, m2 }: CellArgument, zeta: Disc, prec: number): Disc {
+  return m1 === 0n && m2 === 0n ? zeta : disc.add(zeta, combination(l.eta1, l.eta2, m1, m2, prec + 8), prec);
+}
+
+/** σ(v r1). */
+function cellSigma(l: ReducedLattice, v: Disc, sin: Disc, e0: Disc, wp: number): Disc {
+  const exponent = disc.ldexp(disc.mul(disc.mul(l.eta1, l.r1, wp), disc.sqr(v, wp), wp), -1);
+  const factor = disc.div(e0, disc.mul(l.first, l.unit, wp), wp);
+  return disc.mul(disc.mul(factor, sin, wp), disc.exp(exponent, wp), wp);
 }
 
 function shiftedSigma(l: ReducedLattice, at: CellArgument, sigma: Disc, prec: number): Disc {

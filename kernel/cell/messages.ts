@@ -84,6 +84,8 @@ export type ChildReport =
       readonly update?: boolean;
     }
   | { readonly kind: "clear"; readonly cell: number; readonly wait: boolean }
+  | { readonly kind: "page"; readonly cell: number; readonly data: MimeBundle }
+  | { readonly kind: "propose"; readonly cell: number; readonly code: string; readonly replace: boolean }
   | { readonly kind: "input"; readonly cell: number; readonly prompt: string; readonly password: boolean }
   | { readonly kind: "leaving"; readonly words: string }
   | { readonly kind: "peeked"; readonly id: number; readonly text: string }

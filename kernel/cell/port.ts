@@ -27,6 +27,10 @@ export type CellEvent =
       readonly update?: boolean;
     }
   | { readonly type: "clear"; readonly cell: number; readonly wait: boolean }
+  /** For the reader to look at beside the notebook. */
+  | { readonly type: "page"; readonly cell: number; readonly data: MimeBundle }
+  /** Code for the next cell, which the reader may run or change. */
+  | { readonly type: "propose"; readonly cell: number; readonly code: string; readonly replace: boolean }
   | { readonly type: "input"; readonly cell: number; readonly prompt: string; readonly password: boolean };
 
 export interface ExecuteRequest {

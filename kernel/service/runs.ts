@@ -1,7 +1,7 @@
 // The cells that have run, and where their output belongs: a timer may print long after its cell is idle.
-import type { CellEvent } from "../cell/port.ts";
+import type { CellEvent, MimeBundle } from "../cell/port.ts";
 import { log } from "../wire/log.ts";
-import type { Parent } from "../wire/message.ts";
+import type { Json, Parent } from "../wire/message.ts";
 import type { Output } from "./output.ts";
 import type { Prompts } from "./prompts.ts";
 
@@ -10,6 +10,8 @@ export interface Run extends Parent {
   readonly cell: number;
   readonly silent: boolean;
   readonly allowStdin: boolean;
+  /** What the reply asks of the front end besides the outputs. Nothing is added once the run is closed. */
+  readonly payload: Json[];
 }
 
 export interface Runs {
@@ -26,30 +28,49 @@ const REMEMBERED = 100_000;
 
 export function createRuns(output: Output, prompts: Prompts): Runs {
   const runs = new Map<number, Run>();
+  const open = new Set<Run>();
   let count = 0;
   return {
     open({ identities, headerBytes }, options) {
       count += 1;
       runs.delete(count - REMEMBERED);
       // a copy: the frame may be a window on a much larger piece of received bytes
-      const run = { cell: count, identities, headerBytes: Buffer.from(headerBytes), ...options };
+      const run = { cell: count, identities, headerBytes: Buffer.from(headerBytes), payload: [], ...options };
       runs.set(count, run);
+      open.add(run);
       return run;
     },
     close(run) {
+      open.delete(run);
       prompts.close(run.cell);
     },
     report(event) {
       const run = runs.get(event.cell);
       if (!run) log(`output of a cell that is not known: ${event.type}`);
       else if (event.type === "input") prompts.ask(run, event.prompt, event.password);
-      else if (!run.silent) publishEvent(event, run, output);
+      else if (run.silent) return;
+      else if (event.type === "page" && open.has(run)) addPage(run.payload, event.data);
+      else if (event.type === "propose") open.has(run) && addProposal(run.payload, event.code, event.replace);
+      else publishEvent(event, run, output);
     },
   };
 }
 
-function publishEvent(event: Exclude<CellEvent, { type: "input" }>, run: Run, output: Output): void {
-  if (event.type === "stream") output.stream(event.name, event.text, run);
+function addPage(payload: Json[], data: MimeBundle): void {
+  payload.push({ source: "page", data, start: 0 });
+}
+
+// One a cell: front ends make a new cell for each, and the latest is what the cell settled on.
+function addProposal(payload: Json[], text: string, replace: boolean): void {
+  const at = payload.findIndex(({ source }) => source === "set_next_input");
+  if (at >= 0) payload.splice(at, 1);
+  payload.push({ source: "set_next_input", text, replace });
+}
+
+function publishEvent(event: Exclude<CellEvent, { type: "input" | "propose" }>, run: Run, output: Output): void {
+  // too late for the reply: shown in the page after all
+  if (event.type === "page") output.publish("display_data", { data: event.data, metadata: {}, transient: {} }, run);
+  else if (event.type === "stream") output.stream(event.name, event.text, run);
   else if (event.type === "clear") output.publish("clear_output", { wait: event.wait }, run);
   else publishDisplay(event, run, output);
 }

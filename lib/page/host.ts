@@ -8,6 +8,8 @@ export interface DisplayOptions {
   readonly displayId?: string;
   /** True: replaces the displays with that id and makes none. */
   readonly update?: boolean;
+  /** True: shown beside the page when the cell is done, where the front end has such a place, and not kept in the page. */
+  readonly aside?: boolean;
 }
 
 /** One run of a cell, as the notebook keeps it. */
@@ -24,6 +26,8 @@ export interface PageHost {
   display(bundle: MimeBundle, options: DisplayOptions): void;
   /** Asks the reader for a line; null is the end of input. Absent where nobody can answer. */
   readonly ask?: ((prompt: string, hidden: boolean) => Promise<string | null>) | undefined;
+  /** Puts code into the next cell, or in place of the running one, for the reader to run. Absent where nobody can. */
+  propose?(code: string, replace: boolean): void;
   /** The cells that have run, in order. Absent outside notebooks. */
   runs?(): readonly CellRun[];
 }

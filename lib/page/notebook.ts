@@ -1,8 +1,28 @@
+import { DomainError } from "../proof/errors.ts";
 import { type CellRun, pageHost } from "./host.ts";
 import { type Table, table } from "./table.ts";
 
 /** What the notebook knows of itself. */
 export const notebook = {
+  /**
+   * Puts code into the next cell, for the reader to look at and run; `replace` puts it in place of the cell that runs.
+   *
+   * Throws   DomainError where there is no reader, as in a program.
+   * @example notebook.propose(`curve\`${E.minimal()}\``)
+   */
+  propose(code: string, options: { readonly replace?: boolean } = {}): void {
+    const host = pageHost();
+    if (!host.propose) {
+      throw new DomainError({
+        subject: "notebook.propose",
+        given: "a place without cells",
+        expected: "a notebook",
+        hint: "Print the code instead.",
+      });
+    }
+    host.propose(String(code), options.replace ?? false);
+  },
+
   /**
    * The cells in the order in which they ran: what each defined and used, and whether a name that it used has been
    * defined again since, so that its result speaks of an earlier value.

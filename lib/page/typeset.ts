@@ -15,7 +15,8 @@ export function tex(value: unknown): string {
 /**
  * Shows a value at this point of the cell, the way the value of the last line is shown; returns nothing.
  *
- * `displayId` names the display; with `update` a later call takes its place.
+ * `displayId` names the display; with `update` a later call takes its place. `aside` shows it beside the notebook instead,
+ * once the cell is done: for what is to be read and not to be kept.
  */
 export function typeset(value: unknown, options: DisplayOptions = {}): void {
   const shown = bundle(value) ?? { "text/plain": "undefined" };

@@ -12,11 +12,13 @@ interface Notebook {
   interruptible<T>(promise: Promise<T>): Promise<T>;
 }
 
-/** Connects the library's port; the result takes the answer to an open question. */
+/** Connects the library's port, and the console's clearing of what a cell has shown; the result takes the answer to an open question. */
 export function connectHost(reporter: Reporter, notebook: Notebook): Answer {
   let waiting: Answer | undefined;
+  console.clear = () => reporter.send({ kind: "clear", cell: currentOwner().cell, wait: false });
   setPageHost({
-    display(data, { displayId, update }) {
+    display(data, { displayId, update, aside }) {
+      if (aside) return reporter.send({ kind: "page", cell: currentOwner().cell, data });
       const options = { ...(displayId !== undefined && { displayId }), ...(update !== undefined && { update }) };
       reporter.send({ kind: "display", cell: currentOwner().cell, data, metadata: {}, ...options });
     },
@@ -33,6 +35,7 @@ export function connectHost(reporter: Reporter, notebook: Notebook): Answer {
         );
       };
     },
+    propose: (code, replace) => reporter.send({ kind: "propose", cell: currentOwner().cell, code, replace }),
     runs: () => notebook.runs,
   });
   return (value) => {

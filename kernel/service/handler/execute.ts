@@ -36,7 +36,7 @@ export const executeRequest: Handler = async (request, service) => {
   if (!options.silent) publishOutcome(outcome, run, count, service);
   if (entry && outcome.status === "ok") entry.output = plainText(outcome);
   if (outcome.status === "error" && options.stopOnError && !options.silent) await service.abortQueued();
-  return { content: replyContent(outcome, count), metadata: { started } };
+  return { content: replyContent(outcome, count, run), metadata: { started } };
 };
 
 /** The answer to an execute request that is not run because a cell before it failed. */
@@ -94,12 +94,12 @@ function publishOutcome(outcome: ExecuteOutcome, run: Run, count: number, { outp
   }
 }
 
-function replyContent(outcome: ExecuteOutcome, count: number): Json {
+function replyContent(outcome: ExecuteOutcome, count: number, { payload }: Run): Json {
   if (outcome.status === "error") {
     const { ename, evalue, traceback } = outcome;
     return { status: "error", execution_count: count, ename, evalue, traceback };
   }
-  return { status: "ok", execution_count: count, payload: [], user_expressions: outcome.userExpressions };
+  return { status: "ok", execution_count: count, payload, user_expressions: outcome.userExpressions };
 }
 
 function plainText(outcome: ExecuteOutcome & { status: "ok" }): string | null {

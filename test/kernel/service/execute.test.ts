@@ -149,6 +149,20 @@ it("displays, updates and clears in order with the text around them — oracle: 
   expect(published[6]?.content.transient).toEqual({ display_id: "d1" });
 });
 
+it("what a cell shows aside and proposes is in the reply, one proposal at most — oracle: protocol, payloads", async () => {
+  const payload = async (code: string, options = {}) =>
+    (await test.client.execute(code, options)).reply.content.payload;
+  expect(await payload("page one\npropose a\npage two\nreplace b")).toEqual([
+    { source: "page", data: { "text/plain": "one" }, start: 0 },
+    { source: "page", data: { "text/plain": "two" }, start: 0 },
+    { source: "set_next_input", text: "b", replace: true },
+  ]);
+  expect(await payload("value 1")).toEqual([]);
+  expect(await payload("page one\npropose a", { silent: true })).toEqual([]);
+  const { published } = await test.client.execute("page one\npropose a");
+  expect(summary(published)).toEqual(["busy", "execute_input", "idle"]);
+});
+
 it("late text goes to the cell that started it, with no new busy — oracle: protocol", async () => {
   const starter = await test.client.execute("later 60 tick");
   const other = await test.client.execute("sleep 120\nprint own");

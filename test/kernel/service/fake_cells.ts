@@ -12,7 +12,7 @@ import type {
 const sleep = (ms: number) => new Promise<void>((resolve) => setTimeout(resolve, ms));
 
 /**
- * print TEXT | warn TEXT | show TEXT | update ID TEXT | clear | oddly (a bundle that is no JSON) | odd (such a value) | value TEXT | fail TEXT | sleep MS | hang | hold (until `release`) | later MS TEXT |
+ * print TEXT | warn TEXT | show TEXT | update ID TEXT | clear | page TEXT | propose TEXT | replace TEXT | oddly (a bundle that is no JSON) | odd (such a value) | value TEXT | fail TEXT | sleep MS | hang | hold (until `release`) | later MS TEXT |
  * ask PROMPT; TEXT is read as a JSON string if it is one.
  */
 export class FakeCells implements CellSession {
@@ -97,6 +97,9 @@ export class FakeCells implements CellSession {
     if (verb === "update") await onEvent({ type: "display", cell, data, metadata: {}, displayId: "d1", update: true });
     if (verb === "oddly") await onEvent({ type: "display", cell, data: { x: 1n }, metadata: {} });
     if (verb === "clear") await onEvent({ type: "clear", cell, wait: true });
+    if (verb === "page") await onEvent({ type: "page", cell, data });
+    if (verb === "propose") await onEvent({ type: "propose", cell, code: text, replace: false });
+    if (verb === "replace") await onEvent({ type: "propose", cell, code: text, replace: true });
     if (verb === "sleep") await sleep(Number(text));
     if (verb === "later")
       void sleep(Number(text.split(" ")[0])).then(() => this.act(cell, "print", text.split(" ")[1]!));

@@ -1,20 +1,19 @@
 // The published JavaScript client of notebook servers, against a live server. It checks each message that comes on iopub
 // against the protocol's fields and throws if one is wrong. Its last line says what happened, as JSON for the test
-// beside it. Arguments: folder with the client's package, address and token of the server.
-import { createRequire } from "node:module";
-import path from "node:path";
+// beside it. Arguments: address and token of the server.
+import services from "@jupyterlab/services";
+import { validateMessage } from "@jupyterlab/services/lib/kernel/validate.js";
+import WebSocket from "ws";
 
-const [folder, baseUrl, token] = process.argv.slice(2);
-const require = createRequire(path.join(folder, "package.json"));
-const { KernelAPI, KernelManager, KernelMessage, KernelSpecAPI, ServerConnection } = require("@jupyterlab/services");
-const { validateMessage } = require("@jupyterlab/services/lib/kernel/validate.js");
+const [baseUrl, token] = process.argv.slice(2);
+const { KernelAPI, KernelManager, KernelMessage, KernelSpecAPI, ServerConnection } = services;
 
 const serverSettings = ServerConnection.makeSettings({
   baseUrl,
   wsUrl: baseUrl.replace("http", "ws"),
   token,
   appendToken: true,
-  WebSocket: require("ws"),
+  WebSocket,
 });
 const facts = { messages: 0, invalid: [] };
 const specs = await KernelSpecAPI.getSpecs(serverSettings);
@@ -57,10 +56,12 @@ facts.inspection = (await kernel.requestInspect({ code: "Math.hypot", cursor_pos
 facts.complete = (await kernel.requestIsComplete({ code: "for (;;) {" })).content;
 facts.history = (await kernel.requestHistory({ hist_access_type: "tail", n: 2, raw: true, output: false })).content;
 facts.comms = (await kernel.requestCommInfo({})).content;
-const endless = execute("for (;;);");
-await new Promise((resolve) => setTimeout(resolve, 500));
+const endless = kernel.requestExecute({ code: "console.log('begun'); for (;;);" });
+await new Promise((resolve) => {
+  endless.onIOPub = ({ header }) => header.msg_type === "stream" && resolve();
+});
 await kernel.interrupt();
-facts.interrupted = (await endless).reply;
+facts.interrupted = (await endless.done).content;
 facts.status = kernel.status;
 await kernel.restart();
 facts.restarted = await execute("typeof a");

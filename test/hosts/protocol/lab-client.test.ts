@@ -1,26 +1,12 @@
-import { spawnSync } from "node:child_process";
-import { existsSync, mkdirSync, mkdtempSync } from "node:fs";
+import { mkdtempSync } from "node:fs";
 import { tmpdir } from "node:os";
 import path from "node:path";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { type HostPlace, makePlace, missing, root, run } from "../hosts.ts";
 import { NOTEBOOK_PROGRAM, type NotebookServer, startNotebookServer } from "../notebook-server.ts";
 
-const VERSION = "7.6.6";
 const absent = missing({ program: NOTEBOOK_PROGRAM, debianPackage: "jupyter-notebook" });
 if (absent) console.warn(`skipped, ${absent}`);
-
-/** Folder with the published client in it, kept for the next run. */
-function clientFolder(): string {
-  const folder = path.join(tmpdir(), `halfperiod-lab-client-${VERSION}`);
-  if (!existsSync(path.join(folder, "node_modules", "@jupyterlab", "services"))) {
-    mkdirSync(folder, { recursive: true });
-    const words = ["install", "--no-audit", "--no-fund", "--prefix", folder, `@jupyterlab/services@${VERSION}`];
-    const { status, stderr } = spawnSync("npm", words, { encoding: "utf8", cwd: folder });
-    if (status !== 0) throw new Error(`npm ${words.join(" ")}\n${stderr}`);
-  }
-  return folder;
-}
 
 describe.skipIf(absent !== "")("the published JavaScript client, through a notebook server", () => {
   let place: HostPlace;
@@ -32,8 +18,8 @@ describe.skipIf(absent !== "")("the published JavaScript client, through a noteb
     server = await startNotebookServer(place, mkdtempSync(path.join(tmpdir(), "halfperiod lab ")));
     const address = new URL(server.url(""));
     const token = address.searchParams.get("token") ?? "";
-    const script = path.join(root, "test/hosts/protocol/lab_client.mjs");
-    const printed = await run(process.execPath, [script, clientFolder(), `${address.origin}/`, token], place.env);
+    const script = path.join(root, "test/hosts/protocol/lab-client.mjs");
+    const printed = await run(process.execPath, [script, `${address.origin}/`, token], place.env);
     facts = JSON.parse(printed.split("\n").at(-1) ?? "");
   }, 300_000);
   afterAll(async () => {

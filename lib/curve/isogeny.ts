@@ -6,7 +6,6 @@ import {
   deriveUni,
   divideUni,
   gcdUni,
-  monicUni,
   mulUni,
   powUni,
   scaleUni,
@@ -132,29 +131,15 @@ export function newtonSums<T>(F: Field<T>, h: Univariate<T>, count: number): T[]
   return sums;
 }
 
-/** The monic polynomial with given power sums of its roots. */
-export function fromPowerSums<T>(F: Field<T>, n: number, sums: readonly T[]): Univariate<T> {
-  const e: T[] = [F.one];
-  for (let k = 1; k <= n; k++) {
-    let total = F.zero;
-    for (let i = 1; i <= k; i++) {
-      const term = F.mul(e[k - i]!, sums[i]!);
-      total = i % 2 === 1 ? F.add(total, term) : F.sub(total, term);
-    }
-    e.push(F.mul(total, fraction(F, 1n, BigInt(k))));
-  }
-  return Array.from({ length: n + 1 }, (_, k) => ((n - k) % 2 === 0 ? e[n - k]! : F.neg(e[n - k]!)));
-}
-
 export function denominatorOf<T>(F: Field<T>, { kernel: { two, rest } }: Isogeny<T>): Univariate<T> {
   return mulUni(F, two, mulUni(F, rest, rest));
 }
 
 /**
- * Whether X satisfies X′² (4x³ + b2x² + 2b4x + b6) = 4X³ + b2′X² + 2b4′X + b6′ with the target's b's, as it does exactly if the kernel
- * polynomials belong to a subgroup: then Y = (X′(2y + a1x + a3) − a1X − a3)/2 completes a map of curves that fixes O.
+ * Whether X satisfies X′² (4x³ + b2x² + 2b4x + b6) = c²(4X³ + b2′X² + 2b4′X + b6′) with the target's b's, as it does exactly if the kernel
+ * polynomials belong to a subgroup: then Y = (X′(2y + a1x + a3)/c − a1′X − a3′)/2 completes a map of curves that fixes O.
  */
-export function isIsogeny<T>(F: Field<T>, a: Coefficients<T>, isogeny: Isogeny<T>): boolean {
+export function isIsogeny<T>(F: Field<T>, a: Coefficients<T>, isogeny: Isogeny<T>, c = F.one): boolean {
   const { numerator: N } = isogeny;
   const D = denominatorOf(F, isogeny);
   const mul = (...factors: Univariate<T>[]) => factors.reduce((f, g) => mulUni(F, f, g));
@@ -171,83 +156,35 @@ export function isIsogeny<T>(F: Field<T>, a: Coefficients<T>, isogeny: Isogeny<T
   const right = mul(
     D,
     [c3, c2, c1, c0].reduce<Univariate<T>>(
-      (total, c, k) => addUni(F, mul(total, N), scaleUni(F, c, powUni(F, D, k))),
+      (total, b, k) => addUni(F, mul(total, N), scaleUni(F, b, powUni(F, D, k))),
       [],
     ),
   );
-  return subUni(F, left, right).length === 0;
+  return subUni(F, left, scaleUni(F, F.mul(c, c), right)).length === 0;
 }
 
-/** Numerator of Y over two²·rest³: (X′(2y + a1x + a3) − a1X − a3)/2 as [part without y, factor of y]. */
+/**
+ * Numerator of Y over two²·rest³: (X′(2y + a1x + a3)/c − a1′X − a3′)/2 as [part without y, factor of y], for a map that multiplies
+ * dz by c (a1′ and a3′ are those of the target; the normalised isogeny has c = 1).
+ */
 export function ordinateOf<T>(
   F: Field<T>,
   [a1, , a3]: Coefficients<T>,
   isogeny: Isogeny<T>,
+  c = F.one,
 ): readonly [Univariate<T>, Univariate<T>] {
-  const { numerator: N, kernel } = isogeny;
+  const { numerator: N, kernel, target } = isogeny;
   const { two, rest } = kernel;
   const D = denominatorOf(F, isogeny);
   const mul = (...factors: Univariate<T>[]) => factors.reduce((f, g) => mulUni(F, f, g));
   // X′ = (N′D − ND′)/D², whose numerator is divisible by rest (D has rest squared).
-  const slope = divideUni(F, subUni(F, mul(deriveUni(F, N), D), mul(N, deriveUni(F, D))), rest).quotient;
+  const derived = divideUni(F, subUni(F, mul(deriveUni(F, N), D), mul(N, deriveUni(F, D))), rest).quotient;
+  const slope = scaleUni(F, F.inv(c), derived);
   const common = mul(two, two, rest, rest, rest);
   const half = fraction(F, 1n, 2n);
-  const free = subUni(F, mul(slope, [a3, a1]), addUni(F, scaleUni(F, a1, mul(N, two, rest)), scaleUni(F, a3, common)));
+  const shift = addUni(F, scaleUni(F, target[0], mul(N, two, rest)), scaleUni(F, target[2], common));
+  const free = subUni(F, mul(slope, [a3, a1]), shift);
   return [scaleUni(F, half, free), slope];
-}
-
-/**
- * The kernel of the dual: the image of the n-torsion. Over the points P of E[n] outside the kernel Σ X(P)^k is n times Σ x(R)^k over
- * the points R ≠ O of the dual's kernel; the left side is a trace modulo division polynomials, points of order two counted once and
- * the other abscissas twice. The power sums give ∏ (x − x(R)), in which abscissas of order above two are double.
- */
-export function dualKernel<T>(F: Field<T>, a: Coefficients<T>, isogeny: Isogeny<T>): Kernel<T> {
-  const n = isogeny.degree;
-  const { psi2Squared, f } = divisionPolynomials(F, a);
-  const { two, rest } = isogeny.kernel;
-  const others = divideUni(F, monicUni(F, f(n)), rest).quotient;
-  const count = n % 2 === 1 ? (n - 1) / 2 : n - 1;
-  let sums = traces(F, isogeny, others, count).map((c) => scale(F, 2, c));
-  if (n % 2 === 0) {
-    const half = divideUni(F, monicUni(F, psi2Squared), two).quotient;
-    const more = traces(F, isogeny, half, count);
-    sums = sums.map((c, k) => F.add(c, more[k]!));
-  }
-  const overPoints = sums.map((c) => F.mul(c, fraction(F, 1n, BigInt(n))));
-  if (n % 2 === 1) {
-    const single = overPoints.map((c) => F.mul(c, fraction(F, 1n, 2n)));
-    return { two: [F.one], rest: fromPowerSums(F, count, [F.zero, ...single]) };
-  }
-  const all = fromPowerSums(F, count, [F.zero, ...overPoints]);
-  const double = gcdUni(F, all, deriveUni(F, all));
-  return { two: divideUni(F, all, mulUni(F, double, double)).quotient, rest: double };
-}
-
-/** Σ X(q)^k over the roots q of g, for k = 1..count. */
-function traces<T>(F: Field<T>, isogeny: Isogeny<T>, g: Univariate<T>, count: number): T[] {
-  if (g.length <= 1) return new Array<T>(count).fill(F.zero);
-  const D = inverseModulo(F, denominatorOf(F, isogeny), g);
-  const X = divideUni(F, mulUni(F, isogeny.numerator, D), g).remainder;
-  const sums = newtonSums(F, g, g.length - 2);
-  const result: T[] = [];
-  let value: Univariate<T> = [F.one];
-  for (let k = 1; k <= count; k++) {
-    value = divideUni(F, mulUni(F, value, X), g).remainder;
-    result.push(value.reduce((total, c, i) => F.add(total, F.mul(c, sums[i]!)), F.zero));
-  }
-  return result;
-}
-
-/** f⁻¹ modulo g, coprime. */
-function inverseModulo<T>(F: Field<T>, f: Univariate<T>, g: Univariate<T>): Univariate<T> {
-  let [r0, r1] = [g, divideUni(F, f, g).remainder];
-  let [s0, s1]: [Univariate<T>, Univariate<T>] = [[], [F.one]];
-  while (r1.length > 1) {
-    const { quotient, remainder } = divideUni(F, r0, r1);
-    [r0, r1] = [r1, remainder];
-    [s0, s1] = [s1, subUni(F, s0, mulUni(F, quotient, s1))];
-  }
-  return scaleUni(F, F.inv(r1[0]!), s1);
 }
 
 /** The change from the target of the dual's normalised form back to the curve itself: u = n. */

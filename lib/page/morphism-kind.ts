@@ -5,7 +5,7 @@ import { plainPolynomial } from "../curve/equation/print.ts";
 import type { FormulaPart } from "../curve/map/formula.ts";
 import type { Morphism } from "../surface/morphism.ts";
 import type { Kind, Show } from "./kind.ts";
-import { polynomialTex } from "./polynomial-tex.ts";
+import { elementTex, polynomialTex } from "./polynomial-tex.ts";
 import { array, fraction, texName } from "./tex.ts";
 
 // biome-ignore lint/suspicious/noExplicitAny: a map of any two curves; its ends name their fields in both directions
@@ -47,12 +47,38 @@ function primed(letter: string): string {
   return `${letter}′`;
 }
 
-function quotientText(F: Field<unknown>, { numerator, denominator }: FormulaPart<unknown>): string {
-  const [n, d] = [plainPolynomial(F, numerator), plainPolynomial(F, denominator)];
-  return d === "1" ? n : `(${n})/(${d})`;
+function quotientText(F: Field<unknown>, part: FormulaPart<unknown>): string {
+  const [n, d] = [plainPolynomial(F, part.numerator), denominatorText(F, part)];
+  return d === "1" ? n : `(${n})/${d}`;
 }
 
-function quotientTex(F: Field<unknown>, { numerator, denominator }: FormulaPart<unknown>, show: Show): string {
-  const [n, d] = [polynomialTex(F, numerator, show), polynomialTex(F, denominator, show)];
+/** "x^2", "(3*x + 1)^3", "(9*(x - 1)^2)": factored, in brackets where it is a product or a sum. */
+function denominatorText(F: Field<unknown>, { constant, powers }: FormulaPart<unknown>): string {
+  const number = F.format(constant);
+  const factors = powers.map(({ base, exponent }) => {
+    const text = plainPolynomial(F, base);
+    const whole = base.terms.size > 1 && (exponent > 1 || powers.length > 1 || number !== "1") ? `(${text})` : text;
+    return exponent === 1 ? whole : `${whole}^${exponent}`;
+  });
+  const all = number === "1" ? factors : [number, ...factors];
+  const text = all.join("*") || "1";
+  const single =
+    all.length === 1 && (powers.length === 0 || powers[0]!.exponent > 1 || powers[0]!.base.terms.size === 1);
+  return single || text === "1" ? text : `(${text})`;
+}
+
+function quotientTex(F: Field<unknown>, part: FormulaPart<unknown>, show: Show): string {
+  const [n, d] = [polynomialTex(F, part.numerator, show), denominatorTex(F, part, show)];
   return d === "1" ? n : `\\displaystyle ${fraction(n, d)}`;
+}
+
+function denominatorTex(F: Field<unknown>, { constant, powers }: FormulaPart<unknown>, show: Show): string {
+  const number = F.format(constant);
+  const alone = powers.length === 1 && number === "1";
+  const factors = powers.map(({ base, exponent }) => {
+    const tex = polynomialTex(F, base, show);
+    const whole = base.terms.size > 1 && !(alone && exponent === 1) ? `\\left(${tex}\\right)` : tex;
+    return exponent === 1 ? whole : `${whole}^{${exponent}}`;
+  });
+  return [...(number === "1" ? [] : [elementTex(F, constant, show)]), ...factors].join(" ") || "1";
 }

@@ -15,21 +15,30 @@ import { type Equation, plainEquation, plainPolynomial } from "../curve/equation
 import { isomorphisms, quadraticTwist } from "../curve/isomorphism.ts";
 import { pointsOverX } from "../curve/lift.ts";
 import { type Coefficients, type Invariants, invariantsOf, jInvariant, residual } from "../curve/weierstrass.ts";
+import { abscissaOfMultiple, abscissasOfSums } from "../curve/xonly.ts";
 import type { Quadratic } from "../number/quadratic.ts";
 import { primitive, type Rational } from "../number/rational.ts";
 import type { Complex, ComplexNumeric, Numeric, Real } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
 import { remember } from "./behind.ts";
 import { type Coordinate, carry } from "./fields.ts";
-import { countOf, modCurve, reductionOf } from "./finite.ts";
+import { countOf, countOverExtension, modCurve, reductionOf } from "./finite.ts";
 import { type ExactInput, elementOf } from "./input.ts";
-import { type ClassMember, isogenyClassOf, isogenyWithKernel, type KernelInput, primeIsogenies } from "./isogenies.ts";
+import {
+  type ClassMember,
+  isogenyClassOf,
+  isogenyWithKernel,
+  type KernelInput,
+  multiplicationMorphism,
+  primeIsogenies,
+} from "./isogenies.ts";
 import { changeMorphism } from "./joined.ts";
 import type { Lattice } from "./lattice.ts";
 import type { Morphism } from "./morphism.ts";
 import { indexOf, pairingOf } from "./pairing.ts";
 import { type AnyPoint, Point } from "./point.ts";
 import { rationalPoints, type TorsionSubgroup, torsionOf } from "./torsion.ts";
+import { fromInclusion } from "./torus-isogeny.ts";
 import type { TorusPoint } from "./torus-point.ts";
 import { exponentialOf, latticeOf, logarithmOf, noTorus } from "./uniformise.ts";
 
@@ -52,7 +61,9 @@ export class Curve<T = Rational> {
   /** The equation the curve was given by, if it had to be rescaled. */
   readonly given: Reading<T> | undefined;
   readonly #invariants: Invariants<T>;
-  #lattice: Lattice | undefined; // made on first use, and only ever set complete
+  // Made on first use, and only ever set complete.
+  #lattice: Lattice | undefined;
+  #count: bigint | undefined;
 
   /** The model must be nonsingular: `curve` checks it and explains a singular one. */
   constructor(field: Field<T>, a: Coefficients<T>, given?: Reading<T>) {
@@ -235,7 +246,13 @@ export class Curve<T = Rational> {
 
   /** Over F_p: the number of points, O included, proved. */
   get count(): bigint {
-    return countOf(this);
+    this.#count ??= countOf(this);
+    return this.#count;
+  }
+
+  /** Over F_p: the number of points over the field of p^n elements, from the trace. */
+  countOver(n: number): bigint {
+    return countOverExtension(this.field.characteristic, this.trace, n);
   }
 
   /** Over F_p: p + 1 − #E(F_p). */
@@ -268,16 +285,34 @@ export class Curve<T = Rational> {
   }
 
   /**
-   * The isogeny with the given kernel: a point that generates it, all its points, or over Q an exact point of finite order of
-   * C/Λ, such as E.lattice().at(1/3, 0). Normalised: it pulls dX/(2Y + a1X + a3) back to dx/(2y + a1x + a3).
+   * The isogeny with the given kernel: a point that generates it, all its points, the polynomial of their abscissas, or over Q an exact
+   * point of finite order of C/Λ, such as E.lattice().at(1/3, 0). Or over Q z ↦ z to C/M, for a lattice M that contains Λ: E.isogeny({ lattice: M }).
+   * Normalised: it pulls dX/(2Y + a1X + a3) back to dx/(2y + a1x + a3).
    *
    * Throws   DomainError for points that are no subgroup (with a sum that is missing), a subgroup that is not defined over Q, a
    *          number near a torsion point (with its distance from one).
    * Source   Vélu 1971.
    */
-  isogeny({ kernel }: { readonly kernel: KernelInput<T> }): Morphism<Curve<T>, Curve<T>> {
+  isogeny(by: { readonly kernel: KernelInput<T> } | { readonly lattice: Lattice }): Morphism<Curve<T>, Curve<T>> {
     this.#requireShortForm("isogeny");
-    return isogenyWithKernel(this, kernel);
+    if ("kernel" in by) return isogenyWithKernel(this, by.kernel);
+    return fromInclusion(this.#rational("isogeny"), by.lattice) as unknown as Morphism<Curve<T>, Curve<T>>;
+  }
+
+  /** Multiplication by n as a map of the curve to itself, of degree n²; its first formula is x(nP) in x alone. |n| <= 20. */
+  multiplication(n: number): Morphism<Curve<T>, Curve<T>> {
+    this.#requireShortForm("multiplication");
+    return multiplicationMorphism(this, n);
+  }
+
+  /** x(nP) from x = x(P) alone, for any integer n; undefined if nP = O. The point itself may lie over a larger field. */
+  abscissa(n: bigint | number, x: ExactInput | T): T | undefined {
+    return abscissaOfMultiple(this.field, this.a, BigInt(n), this.#element("x", x));
+  }
+
+  /** x(P + Q) + x(P − Q) and x(P + Q)·x(P − Q), from two different abscissas x(P) and x(Q) alone. */
+  abscissasOfSums(x1: ExactInput | T, x2: ExactInput | T): { readonly sum: T; readonly product: T } {
+    return abscissasOfSums(this.field, this.a, this.#element("x", x1), this.#element("x", x2));
   }
 
   /** All isogenies of prime degree from the curve that are defined over Q, by degree: complete by Mazur's theorem. */

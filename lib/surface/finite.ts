@@ -65,6 +65,21 @@ export function countOf<T>(E: Curve<T>): bigint {
   return countPoints(a, p);
 }
 
+/** #E(F_q) for q = p^n: q + 1 − s_n with s_0 = 2, s_1 = t, s_n = t s_(n−1) − p s_(n−2). Source: Silverman AEC V.2.3.1. */
+export function countOverExtension(p: bigint, trace: bigint, n: number): bigint {
+  if (!(Number.isSafeInteger(n) && n >= 1 && n <= 1000)) {
+    throw new DomainError({
+      subject: "countOver",
+      given: `n = ${n}`,
+      expected: "an integer from 1 to 1000",
+      argument: "n",
+    });
+  }
+  let [before, s] = [2n, trace];
+  for (let k = 1; k < n; k++) [before, s] = [s, trace * s - p * before];
+  return p ** BigInt(n) + 1n - s;
+}
+
 /** Coordinates of a point over F_p as bigints. */
 export function modPoint<T>(P: Point<T>): ModPoint {
   const affine = P.coordinates as readonly [Residue, Residue] | undefined;
@@ -74,5 +89,5 @@ export function modPoint<T>(P: Point<T>): ModPoint {
 /** The order of a point over F_p, from the order of the group. */
 export function orderOverPrimeField<T>(P: Point<T>): bigint {
   const curve = modCurve(P.curve, "order");
-  return orderDividing(curve, modPoint(P), countPoints(curve.a, curve.p));
+  return orderDividing(curve, modPoint(P), P.curve.count);
 }

@@ -1,26 +1,50 @@
 // Isogenies of curves as maps: from points, from a point of the torus, all rational ones of prime degree, the class.
 
 import type { Field } from "../algebra/field.ts";
+import { coefficientsIn } from "../algebra/multigcd.ts";
+import { degreeIn, type Polynomial } from "../algebra/multivariate.ts";
 import { rationals as Q } from "../algebra/rationals.ts";
-import { composeUni, evaluateUni, mulUni, scaleUni, type Univariate } from "../algebra/univariate.ts";
+import {
+  composeUni,
+  deriveUni,
+  divideUni,
+  evaluateUni,
+  gcdUni,
+  monicUni,
+  mulUni,
+  scaleUni,
+  type Univariate,
+} from "../algebra/univariate.ts";
 import { pointsOfOrder } from "../arithmetic/division.ts";
 import { globalMinimalModel, toRationals } from "../arithmetic/minimal.ts";
-import { oddIsogenies, PRIME_DEGREES, rationalIsogeny } from "../arithmetic/rationalkernels.ts";
+import { oddIsogenies, PRIME_DEGREES } from "../arithmetic/rationalkernels.ts";
+import { type AbscissaMap, changeOfAbscissa, composeAbscissas, ofIsogeny, sameAbscissa } from "../curve/abscissamap.ts";
+import { dualKernel, multiplicationBy } from "../curve/dual.ts";
+import { plainPolynomial } from "../curve/equation/print.ts";
 import { type Affine, addPoints, samePoint } from "../curve/group.ts";
-import { abscissas, dualChange, dualKernel, type Isogeny, isIsogeny, kernelOf, veluIsogeny } from "../curve/isogeny.ts";
-import { isogenyMap } from "../curve/map/isogenymap.ts";
-import { composeMaps } from "../curve/map/map.ts";
-import { changeMap } from "../curve/map/weierstrassmodel.ts";
+import {
+  abscissas,
+  denominatorOf,
+  dualChange,
+  type Isogeny,
+  isIsogeny,
+  kernelOf,
+  veluIsogeny,
+} from "../curve/isogeny.ts";
 import type { Rational } from "../number/rational.ts";
-import { Complex, type ComplexNumeric, Real } from "../number/values.ts";
+import type { ComplexNumeric } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
+import type { Standing } from "../proof/standing.ts";
 import { Curve } from "./curve.ts";
-import { Morphism, type MorphismData } from "./morphism.ts";
+import { abscissaData, Morphism, type MorphismData } from "./morphism.ts";
 import { type AnyPoint, Point } from "./point.ts";
-import { TorusPoint } from "./torus-point.ts";
+import { fromTorus } from "./torus-isogeny.ts";
 
-/** A kernel: a point that generates it, all its points (with or without O), or a point of finite order of C/Λ. */
-export type KernelInput<T> = Point<T> | readonly Point<T>[] | ComplexNumeric;
+/**
+ * A kernel: a point that generates it, all its points (with or without O), the polynomial whose roots are their abscissas, or a point
+ * of finite order of C/Λ.
+ */
+export type KernelInput<T> = Point<T> | readonly Point<T>[] | Polynomial<T> | ComplexNumeric;
 
 /** The largest kernel that a point is taken to generate. */
 const LARGEST_KERNEL = 200;
@@ -29,13 +53,37 @@ const LARGEST_KERNEL = 200;
 export function isogenyWithKernel<T>(E: Curve<T>, input: KernelInput<T>): Morphism<Curve<T>, Curve<T>> {
   if (input instanceof Point) return fromKernel(E, polynomialOfPoints(E, generated(E, input)));
   if (Array.isArray(input)) return fromKernel(E, polynomialOfPoints(E, checkedSubgroup(E, input)));
+  if (isPolynomial(input)) return fromKernel(E, checkedPolynomial(E, input as Polynomial<T>));
   return fromTorus(E as unknown as Curve, input as ComplexNumeric) as unknown as Morphism<Curve<T>, Curve<T>>;
+}
+
+function isPolynomial(input: unknown): boolean {
+  return typeof input === "object" && input !== null && "terms" in input && "variables" in input;
+}
+
+/** The squarefree monic list of coefficients of a polynomial in one letter. */
+function checkedPolynomial<T>(E: Curve<T>, f: Polynomial<T>): Univariate<T> {
+  const F = E.field;
+  const [name] = f.variables;
+  if (f.variables.length === 1 && name !== undefined && degreeIn(f, name) > 0) {
+    const list = monicUni(
+      F,
+      coefficientsIn(F, f, name).map((c) => c.terms.get(0) ?? F.zero),
+    );
+    return divideUni(F, list, gcdUni(F, list, deriveUni(F, list))).quotient;
+  }
+  throw new DomainError({
+    subject: "isogeny",
+    given: `the polynomial ${plainPolynomial(F, f)}`,
+    expected: "a polynomial in x of positive degree, whose roots are the abscissas of the kernel",
+    argument: "kernel",
+  });
 }
 
 function generated<T>(E: Curve<T>, P: Point<T>): Affine<T>[] {
   requireOn(E, P);
   const list: Affine<T>[] = [];
-  for (let Q = P; !Q.isOrigin; Q = Q.plus(P) as unknown as Point<T>) {
+  for (let Q: AnyPoint = P; !Q.isOrigin; Q = Q.plus(P)) {
     list.push(Q.coordinates);
     if (list.length >= LARGEST_KERNEL) {
       throw new DomainError({
@@ -81,7 +129,7 @@ function requireOn<T>(E: Curve<T>, P: AnyPoint): void {
 }
 
 /** ∏ (x − x(P)) over the points, each abscissa once. */
-function polynomialOfPoints<T>(E: Curve<T>, points: readonly Affine<T>[]): Univariate<T> {
+export function polynomialOfPoints<T>(E: Curve<T>, points: readonly Affine<T>[]): Univariate<T> {
   const F = E.field;
   return points.reduce<Univariate<T>>(
     (h, P) => (F.isZero(evaluateUni(F, h, P![0])) ? h : mulUni(F, h, [F.neg(P![0]), F.one])),
@@ -89,7 +137,7 @@ function polynomialOfPoints<T>(E: Curve<T>, points: readonly Affine<T>[]): Univa
   );
 }
 
-function fromKernel<T>(E: Curve<T>, polynomial: Univariate<T>): Morphism<Curve<T>, Curve<T>> {
+export function fromKernel<T>(E: Curve<T>, polynomial: Univariate<T>): Morphism<Curve<T>, Curve<T>> {
   const kernel = kernelOf(E.field, E.a, polynomial);
   const isogeny = veluIsogeny(E.field, E.a, kernel);
   if (isIsogeny(E.field, E.a, isogeny)) return isogenyMorphism(E, isogeny);
@@ -103,89 +151,110 @@ function fromKernel<T>(E: Curve<T>, polynomial: Univariate<T>): Morphism<Curve<T
 
 /** The map of an isogeny with its dual. */
 export function isogenyMorphism<T>(E: Curve<T>, isogeny: Isogeny<T>): Morphism<Curve<T>, Curve<T>> {
+  const target = new Curve(E.field, isogeny.target);
+  return new Morphism<Curve<T>, Curve<T>>(E, target, isogenyData(E, isogeny) as MorphismData<unknown>);
+}
+
+function isogenyData<T>(E: Curve<T>, isogeny: Isogeny<T>): MorphismData<T> {
   const F = E.field;
-  const target = new Curve(F, isogeny.target);
-  const data: MorphismData<T> = {
-    map: isogenyMap(F, E.a, isogeny),
-    degree: isogeny.degree,
+  return abscissaData(F, ofIsogeny(F, E.a, isogeny), {
     title: `isogeny of degree ${isogeny.degree}`,
-    kernel: abscissas(F, isogeny.kernel),
-    dual: () => dualData(F, E, isogeny),
-  };
-  return new Morphism<Curve<T>, Curve<T>>(E, target, data as MorphismData<unknown>);
+    dual: () => dualData(E, isogeny),
+    check: () => isogenyStanding(E, isogeny),
+  });
 }
 
 /** The dual: Vélu's isogeny with the image of the n-torsion as kernel, then the change u = n back to the model of E. */
-function dualData<T>(F: Field<T>, E: Curve<T>, isogeny: Isogeny<T>): MorphismData<T> {
+function dualData<T>(E: Curve<T>, isogeny: Isogeny<T>): MorphismData<T> {
+  const F = E.field;
+  return abscissaData(F, dualAbscissa(E, isogeny), {
+    title: `isogeny of degree ${isogeny.degree}`,
+    dual: () => isogenyData(E, isogeny),
+    check: () => isogenyStanding(E, isogeny),
+  });
+}
+
+function dualAbscissa<T>(E: Curve<T>, isogeny: Isogeny<T>): AbscissaMap<T> {
+  const F = E.field;
   const n = isogeny.degree;
+  requirePrimeTo(F, n);
   const back = veluIsogeny(F, isogeny.target, dualKernel(F, E.a, isogeny));
-  const change = dualChange(F, back.target, E.a, n);
-  const map = composeMaps(isogenyMap(F, isogeny.target, back), changeMap(F, back.target, change));
+  const change = changeOfAbscissa(F, back.target, dualChange(F, back.target, E.a, n));
+  return composeAbscissas(F, ofIsogeny(F, isogeny.target, back), change);
+}
+
+function requirePrimeTo<T>(F: Field<T>, n: number): void {
+  if (F.characteristic === 0n || BigInt(n) % F.characteristic !== 0n) return;
+  throw new DomainError({
+    subject: "dual",
+    given: `an isogeny of degree ${n} over ${F.name}`,
+    expected: "a degree prime to the characteristic",
+    hint: "The dual of this one is not separable.",
+  });
+}
+
+/** Degrees above this are not composed with their dual: division polynomials have n²/2 coefficients. */
+const LARGEST_COMPOSED = 30;
+
+/**
+ * The isogeny and its dual by exact substitution: both land, their composition on E is x ↦ φ_n/ψ_n², and it multiplies dz by n, so it is
+ * multiplication by n and not by −n.
+ */
+function isogenyStanding<T>(E: Curve<T>, isogeny: Isogeny<T>): Standing {
+  const F = E.field;
+  const n = isogeny.degree;
+  if (!isIsogeny(F, E.a, isogeny)) return { kind: "refuted", evidence: "the image is not on the target" };
+  const lands = "exact substitution in the target's equation";
+  if (n > LARGEST_COMPOSED || (F.characteristic > 0n && BigInt(n) % F.characteristic === 0n)) {
+    return { kind: "proved", argument: lands };
+  }
+  const back = dualAbscissa(E, isogeny);
+  const both = composeAbscissas(F, ofIsogeny(F, E.a, isogeny), back);
+  const byN = multiplicationBy(F, E.a, n);
+  const whole =
+    isIsogeny(F, isogeny.target, back, back.factor) &&
+    sameAbscissa(F, both, { numerator: byN.numerator, denominator: denominatorOf(F, byN) }) &&
+    F.isZero(F.sub(both.factor, byN.factor));
+  if (!whole) return { kind: "refuted", evidence: `the dual after the isogeny is not multiplication by ${n}` };
   return {
-    map: { ...map, to: isogenyMap(F, E.a, isogeny).from },
-    degree: n,
-    title: `isogeny of degree ${n}`,
-    kernel: abscissas(F, back.kernel),
+    kind: "proved",
+    argument: `${lands}; the dual after it is x ↦ φ_${n}/ψ_${n}² with dz ↦ ${n} dz, multiplication by ${n}`,
   };
 }
 
-/** The isogeny C/Λ → C/(Λ + Zc) over Q, for an exact point c of finite order on the real or imaginary circle. */
-function fromTorus(E: Curve, c: ComplexNumeric): Morphism {
-  const L = E.lattice();
-  if (!(c instanceof TorusPoint) || c.lattice !== L.data || c.order === undefined) throw notExact(E, c);
-  const n = Number(c.order);
-  if (n % 2 === 0) return evenTorus(E, c, n);
-  const model = globalMinimalModel(E.a);
-  const minimal = new Curve(Q, toRationals(model.a));
-  // The lattice of the minimal model is uΛ, with the same coordinates in its real basis.
-  const isogeny = rationalIsogeny(minimal.a, minimal.lattice().data, c.coordinates, n);
-  if (!isogeny) throw notRational(E, c);
-  return fromKernel(E, movedPolynomial(abscissas(Q, isogeny.kernel), model.change));
+/** Multiplication by n as an isogeny of the curve to itself, of degree n². */
+export function multiplicationMorphism<T>(E: Curve<T>, n: number): Morphism<Curve<T>, Curve<T>> {
+  const F = E.field;
+  if (!(Number.isSafeInteger(n) && n !== 0 && Math.abs(n) <= 20)) {
+    throw new DomainError({
+      subject: "multiplication",
+      given: `n = ${n}`,
+      expected: "an integer from −20 to 20 that is not 0",
+      hint: "n*P takes any n, and E.abscissa(n, x) gives x(nP) alone.",
+      argument: "n",
+    });
+  }
+  requirePrimeTo(F, n);
+  const size = Math.abs(n);
+  const [a1, , a3] = E.a;
+  // (u, r, s, t) = (−1, 0, −a1, −a3) keeps the equation.
+  const sign = { u: F.neg(F.one), r: F.zero, s: F.neg(a1), t: F.neg(a3) };
+  const one = { u: F.one, r: F.zero, s: F.zero, t: F.zero };
+  const unit = changeOfAbscissa(F, E.a, n < 0 ? sign : one);
+  const abscissa = size === 1 ? unit : composeAbscissas(F, multiplicationBy(F, E.a, size), unit);
+  const data: MorphismData<T> = abscissaData(F, abscissa, {
+    title: `multiplication by ${n}`,
+    ...(size === 1 ? { inverse: () => data } : {}),
+    dual: () => data,
+  });
+  return new Morphism<Curve<T>, Curve<T>>(E, E, data as MorphismData<unknown>);
 }
 
 /** h'(x′) in the letter x of the other model, x = u²x′ + r, monic. */
-function movedPolynomial(h: Univariate<Rational>, { u, r }: { readonly u: Rational; readonly r: Rational }) {
+export function movedPolynomial(h: Univariate<Rational>, { u, r }: { readonly u: Rational; readonly r: Rational }) {
   const v = u.pow(-2);
   const moved = composeUni(Q, h, [r.times(v).neg(), v]);
   return scaleUni(Q, Q.inv(moved.at(-1)!), moved);
-}
-
-/** A kernel of even order: its point must be rational itself. */
-function evenTorus(E: Curve, c: TorusPoint, n: number): Morphism {
-  const P = pointsOfOrder(E.a, n).find((R) => {
-    const z = E.logarithm(new Point(E, R));
-    return z instanceof TorusPoint && z.minus(c).isLatticePoint;
-  });
-  if (!P) throw notRational(E, c);
-  return isogenyWithKernel(E, new Point(E, P));
-}
-
-function notRational(E: Curve, c: TorusPoint): DomainError {
-  return new DomainError({
-    subject: "isogeny",
-    given: `the subgroup of ${c.name}, of order ${c.order}, on ${E}`,
-    expected: "a subgroup that is defined over Q",
-    hint: "Its kernel polynomial has no rational coefficients: enclosures exclude every candidate.",
-    argument: "kernel",
-  });
-}
-
-/** A number is not snapped to a torsion point: the message says how far the nearest small multiple is from a period. */
-function notExact(E: Curve, c: ComplexNumeric): DomainError {
-  const L = E.lattice();
-  const z = Complex.from(c);
-  const distances = Array.from({ length: 12 }, (_, k) => {
-    const n = k + 1;
-    return { n, gap: L.locate(z.times(n)).rest.abs() };
-  });
-  const near = distances.reduce((a, b) => (b.gap.toDouble() < a.gap.toDouble() ? b : a));
-  return new DomainError({
-    subject: "isogeny",
-    given: `the number ${c instanceof Real || c instanceof Complex ? c : String(c)}, whose ${near.n}-fold differs from a period by ${near.gap.digits(5)}`,
-    expected: "an exact point of finite order, such as L.at(1/3, 0)",
-    hint: "A number is not moved to a torsion point near it.",
-    argument: "kernel",
-  });
 }
 
 /** All isogenies of prime degree over Q from the minimal model, by degree. */

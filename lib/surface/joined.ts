@@ -1,6 +1,7 @@
 // The maps between a curve as written and its minimal model, put together from a construction and a change of model.
 
 import { rationals as Q } from "../algebra/rationals.ts";
+import { changeOfAbscissa } from "../curve/abscissamap.ts";
 import { composeMaps, type FormMap } from "../curve/map/map.ts";
 import { changeMap } from "../curve/map/weierstrassmodel.ts";
 import { type Coefficients, changeModel, invertChange, type ModelChange } from "../curve/weierstrass.ts";
@@ -43,16 +44,15 @@ export function joinedMorphism<C extends PlaneCurve>(
 /** The change of model as a map of curves with its inverse. */
 export function changeMorphism<T>(from: Curve<T>, to: Curve<T>, change: ModelChange<T>): Morphism<Curve<T>, Curve<T>> {
   const F = from.field;
-  const title = "change of model";
-  const forward: MorphismData<T> = {
-    map: changeMap(F, from.a, change),
+  const data = (a: Coefficients<T>, by: ModelChange<T>, back: () => MorphismData<T>): MorphismData<T> => ({
+    map: changeMap(F, a, by),
     degree: 1,
-    title,
-    change,
-    inverse: () => {
-      const back = invertChange(F, change);
-      return { map: changeMap(F, to.a, back), degree: 1, title, change: back, inverse: () => forward };
-    },
-  };
+    title: "change of model",
+    change: by,
+    abscissa: changeOfAbscissa(F, a, by),
+    inverse: back,
+  });
+  const forward = data(from.a, change, () => backward);
+  const backward = data(to.a, invertChange(F, change), () => forward);
   return new Morphism<Curve<T>, Curve<T>>(from, to, forward as MorphismData<unknown>);
 }

@@ -1,16 +1,23 @@
 // Maps between curves: one type for changes of model, cubics and quartics to Weierstrass form, isogenies, isomorphisms, twists.
 
+import type { Field } from "../algebra/field.ts";
 import { fromTerms, type Polynomial } from "../algebra/multivariate.ts";
 import type { Residue } from "../algebra/primefield.ts";
+import { type AbscissaMap, composeAbscissas, imageOf } from "../curve/abscissamap.ts";
+import { abscissas, isIsogeny } from "../curve/isogeny.ts";
 import { pullbackConstant } from "../curve/map/differential.ts";
-import { type Formula, formulaOf } from "../curve/map/formula.ts";
+import { type Formula, formulaOf, formulaOnAbscissa } from "../curve/map/formula.ts";
+import { isogenyMap } from "../curve/map/isogenymap.ts";
 import { applyMap, composeMaps, type FormMap, isExceptional, isIdentity, landsOnTarget } from "../curve/map/map.ts";
+import { toAffine, toCoordinates } from "../curve/map/weierstrassmodel.ts";
 import type { ModelChange } from "../curve/weierstrass.ts";
 import { primitive } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 import type { Standing } from "../proof/standing.ts";
 import { Curve } from "./curve.ts";
 import type { Coordinate } from "./fields.ts";
+import type { IntegerMatrix } from "./lattice.ts";
+import { periodMatrixOf } from "./period-matrix.ts";
 import { type AnyVariety, coordinatesOn, type PointOf, pointOn } from "./space.ts";
 
 /** What a map is made of. */
@@ -29,6 +36,33 @@ export interface MorphismData<T> {
   readonly kernel?: readonly T[];
   /** The dual of an isogeny, made on demand. */
   readonly dual?: () => MorphismData<T>;
+  /** Between Weierstrass models with O ↦ O: the map on x and its factor, from which the rest follows. */
+  readonly abscissa?: AbscissaMap<T>;
+  /** A check that says more than the general one. */
+  readonly check?: () => Standing;
+}
+
+/** What a map of Weierstrass models that fixes O is made of: all from its action on x. Its forms are made when they are asked for. */
+export function abscissaData<T>(
+  F: Field<T>,
+  abscissa: AbscissaMap<T>,
+  more: Omit<MorphismData<T>, "map" | "degree" | "abscissa" | "kernel">,
+): MorphismData<T> {
+  let map: FormMap<T> | undefined;
+  return {
+    check: () =>
+      isIsogeny(F, abscissa.source, abscissa, abscissa.factor)
+        ? { kind: "proved", argument: "exact substitution in the target's equation" }
+        : { kind: "refuted", evidence: "the image does not satisfy the equation of the target" },
+    ...more,
+    degree: abscissa.degree,
+    abscissa,
+    kernel: abscissas(F, abscissa.kernel),
+    get map() {
+      map ??= isogenyMap(F, abscissa);
+      return map;
+    },
+  };
 }
 
 /** The functions on points, whose instances get the methods of their class. */
@@ -58,7 +92,7 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
   readonly data: MorphismData<unknown>;
 
   constructor(from: V, to: W, data: MorphismData<unknown>) {
-    super((P) => image<V, W>(from, to, data.map, P));
+    super((P) => image<V, W>(from, to, data, P));
     this.from = from;
     this.to = to;
     this.degree = data.degree;
@@ -68,12 +102,15 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
 
   /** The formula as data: each letter of the target as a quotient in lowest terms, or proportional forms. */
   get formula(): Formula<unknown> {
+    const { abscissa } = this.data;
+    if (abscissa) return formulaOnAbscissa(this.from.field as Field<unknown>, abscissa);
     return formulaOf(this.data.map, lettersOf(this.from), lettersOf(this.to));
   }
 
   /** c with φ*ω′ = c·ω for the invariant differentials, dx/(2y + a1x + a3) on a long Weierstrass form. */
   get factor(): Coordinate | Residue {
-    const { map, basePoint } = this.data;
+    const { map, basePoint, abscissa } = this.data;
+    if (abscissa) return abscissa.factor as Coordinate | Residue;
     const F = map.from.field;
     return pullbackConstant(map, basePoint ?? [F.zero, F.one, F.zero]) as Coordinate | Residue;
   }
@@ -98,7 +135,7 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
    */
   dual(): Morphism<W, V> {
     const data = this.data.dual?.();
-    if (data) return new Morphism(this.to, this.from, { ...data, dual: () => this.data });
+    if (data) return new Morphism(this.to, this.from, data);
     throw new DomainError({
       subject: "dual",
       given: `a ${this.title}`,
@@ -125,6 +162,14 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
     );
   }
 
+  /**
+   * Between elliptic curves with periods: the integer matrix M with c·(ω1, ω2) = M·(ω1′, ω2′) for the factor c of dz, so cΛ lies in Λ′ with
+   * the index |det M| = degree. The algebraic and the analytic description of one map.
+   */
+  get periodMatrix(): IntegerMatrix {
+    return periodMatrixOf(this.from, this.to, this.factor as Coordinate, this.degree);
+  }
+
   /** True if the formula itself cannot take the point (the map still can). */
   isExceptional(P: PointOf<V>): boolean {
     return isExceptional(this.data.map, coordinatesOn(this.from, P as never, "isExceptional"));
@@ -133,25 +178,17 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
   /** This map after another: phi.compose(psi) takes P to phi(psi(P)). */
   compose<U extends AnyVariety>(first: Morphism<U, V>): Morphism<U, W> {
     requireSame(first.to, this.from);
-    const map = composeMaps(first.data.map, this.data.map);
-    const [inner, outer] = [first.data.inverse, this.data.inverse];
-    const inverse = inner && outer ? () => composed(outer(), inner(), compositionTitle(this, first)) : undefined;
-    const data: MorphismData<unknown> = {
-      map,
-      degree: this.degree * first.degree,
-      title: compositionTitle(this, first),
-      ...(first.data.basePoint ? { basePoint: first.data.basePoint } : {}),
-      ...(inverse ? { inverse } : {}),
-    };
-    return new Morphism(first.from, this.to, data);
+    return new Morphism(first.from, this.to, composed(first.from.field as Field<unknown>, first.data, this.data));
   }
 
   /**
-   * Exact substitution: the general image point satisfies the target's equation, and for an isomorphism both compositions are
-   * the identity. "proved", or "refuted" with what fails.
+   * Exact substitution: the general image point satisfies the target's equation; for an isomorphism both compositions are the
+   * identity; for an isogeny the dual after it is multiplication by the degree. "proved", or "refuted" with what fails.
    */
   verify(): Standing {
-    const { map, inverse } = this.data;
+    const { inverse, check } = this.data;
+    if (check && !inverse) return check();
+    const { map } = this.data;
     if (!landsOnTarget(map))
       return { kind: "refuted", evidence: "the image does not satisfy the equation of the target" };
     if (!inverse) return { kind: "proved", argument: "exact substitution in the target's equation" };
@@ -172,6 +209,36 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
   }
 }
 
+type Data = MorphismData<unknown>;
+
+/** One map after another: on x where both are given so, else by their forms; with what is known of inverse and dual. */
+function composed(F: Field<unknown>, first: Data, second: Data): Data {
+  const title = compositionTitle(second, first);
+  const inverse = composedBackwards(F, second.inverse, first.inverse);
+  if (first.abscissa && second.abscissa) {
+    const dual = composedBackwards(F, dualOrInverse(second), dualOrInverse(first));
+    const more = { title, ...(inverse ? { inverse } : {}), ...(dual && !inverse ? { dual } : {}) };
+    return abscissaData(F, composeAbscissas(F, first.abscissa, second.abscissa), more);
+  }
+  return {
+    map: composeMaps(first.map, second.map),
+    degree: second.degree * first.degree,
+    title,
+    ...(first.basePoint ? { basePoint: first.basePoint } : {}),
+    ...(inverse ? { inverse } : {}),
+  };
+}
+
+/** What goes back through both, made on demand. */
+function composedBackwards(F: Field<unknown>, first: (() => Data) | undefined, second: (() => Data) | undefined) {
+  return first && second ? () => composed(F, first(), second()) : undefined;
+}
+
+/** For an isomorphism the inverse is the dual. */
+function dualOrInverse(data: Data): (() => Data) | undefined {
+  return data.dual ?? (data.degree === 1 ? data.inverse : undefined);
+}
+
 /** A change of model does not alter what a map is called. */
 function compositionTitle(second: Titled, first: Titled): string {
   if (first.title === "change of model") return second.title;
@@ -184,18 +251,17 @@ interface Titled {
   readonly degree: number;
 }
 
-function composed(first: MorphismData<unknown>, second: MorphismData<unknown>, title: string): MorphismData<unknown> {
-  return { map: composeMaps(first.map, second.map), degree: 1, title };
-}
-
 function image<V extends AnyVariety, W extends AnyVariety>(
   from: V,
   to: W,
-  map: FormMap<unknown>,
+  data: MorphismData<unknown>,
   P: PointOf<V>,
 ): PointOf<W> {
   const coordinates = coordinatesOn(from, P as never, "a map");
-  return pointOn(to, applyMap(map, coordinates)) as PointOf<W>;
+  const { abscissa } = data;
+  if (!abscissa) return pointOn(to, applyMap(data.map, coordinates)) as PointOf<W>;
+  const F = from.field as Field<unknown>;
+  return pointOn(to, toCoordinates(F, imageOf(F, abscissa, toAffine(F, coordinates)))) as PointOf<W>;
 }
 
 function lettersOf(variety: AnyVariety): readonly string[] {

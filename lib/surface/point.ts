@@ -10,6 +10,7 @@ import { DomainError } from "../proof/errors.ts";
 import type { Curve } from "./curve.ts";
 import { carry, type Join, joinFields } from "./fields.ts";
 import { orderOverPrimeField } from "./finite.ts";
+import { quotients } from "./quotients.ts";
 
 /** An exact coordinate as text, an enclosure as its data. */
 export type CoordinateData = string | ReturnType<typeof valueData>;
@@ -55,12 +56,12 @@ export class Point<T = Rational> {
    * Throws   DomainError for points of two curves; UndecidedError if enclosures do not tell whether Q is P or −P.
    * Source   Silverman AEC III.2.3.
    */
-  plus<U>(other: Point<U>): Point<Join<T, U>> {
+  plus<U>(other: Point<U> & Addable<T, U>): Point<Join<T, U>> {
     const { curve, P, Q } = this.#joined(other, "plus");
     return new Point(curve, addPoints(curve.field, curve.a, P, Q));
   }
 
-  minus<U>(other: Point<U>): Point<Join<T, U>> {
+  minus<U>(other: Point<U> & Addable<T, U>): Point<Join<T, U>> {
     const { curve, P, Q } = this.#joined(other, "minus");
     return new Point(curve, addPoints(curve.field, curve.a, P, negatePoint(curve.field, curve.a, Q)));
   }
@@ -83,6 +84,14 @@ export class Point<T = Rational> {
   /** Multiples of a torsion point stay small, and are best found by the group law. */
   #isTorsion(): boolean {
     return rationalOrder(this.curve.a as never, this.#affine as never) !== Infinity;
+  }
+
+  /**
+   * All points R over Q with nR = P, n >= 2: P.divide(2) halves it. Complete, by the rational roots of φ_n − x(P)ψ_n²; empty if there is none.
+   * Throws   DomainError for a point over another field.
+   */
+  divide(n: number): Point<T>[] {
+    return quotients(this as unknown as Point, n) as unknown as Point<T>[];
   }
 
   /**
@@ -157,6 +166,11 @@ export class Point<T = Rational> {
     return { curve, P: lift(this.#affine), Q: lift(other.coordinates) };
   }
 }
+
+/** What a second point must fulfil: a field that has a common larger one with the first point's. */
+export type Addable<T, U> = [Join<T, U>] extends [never]
+  ? { readonly fieldsHaveNothingInCommon: "points of curves over different fields do not add" }
+  : unknown;
 
 /** Equal coefficients as numbers, whatever fields the curves are written over. */
 function sameModel<V>(mine: Curve<V>, theirs: Curve<V>): boolean {

@@ -33,10 +33,10 @@ describe("isogenies from a kernel — oracle: printed image curves", () => {
 });
 
 describe("isogeny classes over Q — oracle: Cremona, Table 1", () => {
-  it("every prime degree and target of the tabulated curves (every third)", () => {
+  it("every prime degree and target of all tabulated curves", () => {
     let checked = 0;
     const listed = table.entries.filter((entry) => entry.prime_degree_isogenies);
-    for (const entry of listed.filter((_, k) => k % 3 === 0)) {
+    for (const entry of listed) {
       const key = (degree: number, a: readonly unknown[]) => `${degree}: ${a.join()}`;
       const found = curve({ a: entry.a })
         .isogenies()
@@ -45,7 +45,7 @@ describe("isogeny classes over Q — oracle: Cremona, Table 1", () => {
       expect(found).toEqual(entry.prime_degree_isogenies!.map(({ degree, to }) => key(degree, to)).sort());
       checked += found.length;
     }
-    expect(checked).toBeGreaterThan(30);
+    expect(checked).toBeGreaterThan(100);
   });
 
   it("the class of [0,-1,1,-10,-20] has three curves and that of [1,1,1,-10,-10] eight", () => {

@@ -9,6 +9,7 @@ import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { BranchError, PoleError, PrecisionError } from "../proof/errors.ts";
+import { eighthRoot } from "./theta-multiplier.ts";
 
 type Four = readonly [Disc, Disc, Disc, Disc];
 
@@ -121,9 +122,16 @@ function integrand([x, y, z, p]: Four, s: Disc): Disc {
   for (const w of [x, y, z]) {
     // s/√(s²) is 1 on the way.
     if (disc.isZero(w)) top = disc.fromBall(ball.fromInt(3));
-    else bottom = disc.mul(bottom, disc.sqrt(disc.add(square, w, BITS), BITS), BITS);
+    else bottom = disc.mul(bottom, rootAlong(disc.add(square, w, BITS), w), BITS);
   }
   return disc.div(top, bottom, BITS);
+}
+
+/** √x for x = s² + w: it moves parallel to the real axis, so the cut of the root is turned to the side of the axis where w is not. */
+function rootAlong(x: Disc, w: Disc): Disc {
+  const low = w.im < 0n;
+  const turned = low ? disc.mulI(x) : disc.neg(disc.mulI(x));
+  return disc.mul(disc.sqrt(turned, BITS), eighthRoot(low ? 7 : 1, BITS), BITS);
 }
 
 function attempt<T>(f: () => T): T | undefined {

@@ -14,7 +14,7 @@ import {
 } from "./carlson-duplication.ts";
 import { carlsonRC, carlsonRF, rcNearOne, rootOfMean } from "./carlson-first.ts";
 import { carlsonSeries, farEnough, termCount } from "./carlson-series.ts";
-import { ontoReal } from "./enclosure.ts";
+import { midpoint, ontoReal } from "./enclosure.ts";
 
 const FIVE = { man: 5n, exp: 0, rad: 0 };
 
@@ -163,24 +163,34 @@ function halvedLast([a, b, c]: Triple, s: Disc, wp: number, loose: boolean): Dis
  */
 function rotatedRJ(roots: Four, squares: Four, prec: number): Disc {
   const wp = prec + 16;
-  const angles = squares.filter((w) => !disc.containsZero(w)).map((w) => Math.atan2(...flipped(disc.toDouble(w))));
-  const middle = (Math.max(...angles) + Math.min(...angles)) / 2;
-  const spread = Math.max(...angles) - Math.min(...angles);
-  const factor: Disc = { re: unit(Math.cos(middle)), im: unit(-Math.sin(middle)), exp: -30, rad: 0, axis: "plane" };
-  const root = disc.sqrt(factor, wp);
+  const root = towardsAxis(roots, wp);
+  const factor = disc.sqr(root, wp);
   const turned = squares.map((w) => disc.mul(w, factor, wp)) as unknown as Four;
-  // The angles are only read in doubles: 3.1 < π leaves room for their error, and the half plane is checked on the discs.
-  if (!(spread < 3.1) || !inRightHalf(turned)) return settledRJ(roots, squares, prec);
+  if (!inRightHalf(turned) || spreadOf(roots) > 3.2) return settledRJ(roots, squares, prec);
   const value = duplicatedRJ(roots.map((a) => disc.mul(a, root, wp)) as unknown as Four, turned, wp);
   return disc.mul(value, disc.mul(factor, root, wp), prec + 2);
 }
 
-function flipped([re, im]: [number, number]): [number, number] {
-  return [im, re];
+/** Twice the angle between the outermost roots, read in doubles: that of the squares, which the half plane then bounds exactly. */
+function spreadOf(roots: readonly Disc[]): number {
+  const [low, high] = outermost(roots);
+  return 2 * (angleOf(high) - angleOf(low));
 }
 
-function unit(x: number): bigint {
-  return BigInt(Math.round(x * 2 ** 30));
+/** The number of size about 1 that turns the middle of the outermost roots onto the positive real axis. */
+function towardsAxis(roots: readonly Disc[], wp: number): Disc {
+  const [low, high] = outermost(roots).map((a) => disc.div(a, disc.fromBall(disc.abs(a, wp)), wp)) as [Disc, Disc];
+  return midpoint(disc.conj(disc.sqrt(disc.mul(low, high, wp), wp)));
+}
+
+function outermost(roots: readonly Disc[]): [Disc, Disc] {
+  const some = roots.filter((a) => !disc.containsZero(a)).sort((a, b) => angleOf(a) - angleOf(b));
+  return [some[0]!, some.at(-1)!];
+}
+
+function angleOf(root: Disc): number {
+  const [re, im] = disc.toDouble(root);
+  return Math.atan2(im, re);
 }
 
 /** Arguments all round the origin: any branch first, then the right one by a rough enclosure of the integral. */

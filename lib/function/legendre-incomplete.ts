@@ -22,7 +22,9 @@ import {
   completeK,
   completePi,
   type Modulus,
+  reciprocal,
 } from "./legendre-complete.ts";
+import { sidedRoot } from "./legendre-mean.ts";
 
 const THREE = { man: 3n, exp: 0, rad: 0 };
 
@@ -43,15 +45,22 @@ function amplitude(phi: Disc, k: Modulus, wp: number): Amplitude {
   const { sin: s, cos: c } = disc.sinCos(rest, wp);
   const [s2, c2] = [disc.sqr(s, wp), disc.sqr(c, wp)];
   const delta2 = deltaSquare(k, s2, c2, wp);
-  if (delta2.axis === "real" && delta2.re < 0n && !disc.containsZero(delta2)) {
+  if (k.side === undefined && isNegative(delta2)) {
     throw new DomainError({
       subject: "incomplete integral",
       given: "m sin²φ > 1, beyond the branch point of the integrand",
-      expected: "m sin²φ <= 1, or a complex argument that says the side of the cut",
+      expected: "m sin²φ <= 1, or the side of the cut",
+      hint: 'Say { phi, m, side: "above" } for the limit from Im m > 0 or side: "below" for its conjugate.',
       argument: "phi",
     });
   }
-  return { halfTurns, s, c, delta: disc.sqrt(delta2, wp), c2, delta2, s2 };
+  // m + i0 puts Δ² = 1 − m s² below the negative axis.
+  const delta = sidedRoot(delta2, k.side === 1 ? -1 : 1, wp);
+  return { halfTurns, s, c, delta, c2, delta2, s2 };
+}
+
+function isNegative(x: Disc): boolean {
+  return x.axis === "real" && x.re < 0n && !disc.containsZero(x);
 }
 
 function reduced(phi: Disc, wp: number): { rest: Disc; halfTurns: bigint } {
@@ -81,7 +90,7 @@ function continued(a: Amplitude, rest: Disc, complete: () => Disc, prec: number)
  * F(φ | m) = ∫_0^φ dθ / √(1 − m sin²θ).
  *
  * Domain   1 − m sin²φ off the negative real axis; beyond |Re φ| = π/2 also m off [1, ∞).
- * Branch   odd in φ, F(φ + kπ) = F(φ) + 2k K; root with positive real part for |Re φ| <= π/2.
+ * Branch   odd in φ, F(φ + kπ) = F(φ) + 2k K; root with positive real part for |Re φ| <= π/2; for real m > 1 the limit from the side named.
  * Error    enclosure, relative; about 2^−prec for exact φ.
  * Cost     sine, cosine and an RF; with |Re φ| > π/2 also K.
  * Throws   DomainError and BranchError on the cut, PoleError if m = 1 and |Re φ| > π/2.
@@ -166,6 +175,7 @@ export function incompletePi(n: Characteristic, phi: Disc, k: Modulus, prec: num
 }
 
 function partPi(a: Amplitude, { n, n1 }: Characteristic, k: Modulus, wp: number): Disc {
+  if (isNegative(a.delta2)) return partPiOnCut(a, { n, n1 }, k, wp);
   const first = partF(a, wp);
   if (disc.isZero(n)) return first;
   // One number, not two equal enclosures: then 1 − n s² is Δ², and RJ is an RD.
@@ -177,6 +187,29 @@ function partPi(a: Amplitude, { n, n1 }: Characteristic, k: Modulus, wp: number)
   const p = deltaSquare({ m: n, m1: n1 }, a.s2, a.c2, wp);
   const third = disc.mul(disc.mul(n, disc.mul(a.s, a.s2, wp), wp), thirdKind(a, p, wp), wp);
   return disc.add(first, disc.divBall(third, THREE, wp), wp);
+}
+
+/**
+ * Beyond sin θ = 1/√m the rest of the integral is ± i (Π(N | ρ) − Π(N; ψ | ρ))/(√m (1 − n)) with ρ = 1 − 1/m, sin ψ = cos φ/√ρ, as for the complete one.
+ */
+function partPiOnCut(a: Amplitude, characteristic: Characteristic, k: Modulus, wp: number): Disc {
+  const { inner, outer, innerN, outerN } = reciprocal(k, characteristic, wp);
+  const ratio = disc.div(a.c2, outer.m, wp);
+  // Δ² of ψ: 1 − ρ sin²ψ = s².
+  const psi: Amplitude = {
+    halfTurns: 0n,
+    s: disc.sqrt(ratio, wp),
+    c: disc.sqrt(disc.sub(disc.one, ratio, wp), wp),
+    delta: disc.sqrt(a.s2, wp),
+    c2: disc.sub(disc.one, ratio, wp),
+    delta2: a.s2,
+    s2: ratio,
+  };
+  const outside = disc.sub(completePi(outerN, outer, wp), partPi(psi, outerN, outer, wp), wp);
+  const tail = disc.mulI(disc.div(outside, characteristic.n1, wp));
+  const sum = disc.add(completePi(innerN, inner, wp), k.side === 1 ? tail : disc.neg(tail), wp);
+  const value = disc.div(sum, disc.sqrt(k.m, wp), wp);
+  return a.s.re < 0n ? disc.neg(value) : value;
 }
 
 function thirdKind({ c, delta, c2, delta2 }: Amplitude, p: Disc, wp: number): Disc {

@@ -6,9 +6,8 @@ import { Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 import { ontoReal } from "./enclosure.ts";
 import { nomeOf, type Reduction, reduction } from "./modular-action.ts";
-import { etaTwentyFourths, type ThetaIndex, thetaMultiplier } from "./theta-multiplier.ts";
+import { eighthRoot, etaTwentyFourths, type ThetaIndex, thetaMultiplier } from "./theta-multiplier.ts";
 import { type ThetaConstants, thetaConstants } from "./theta-sums.ts";
-import { eighthRoot } from "./theta-values.ts";
 
 /** τ, its reduction and the theta series at the reduced τ. */
 export interface ModularPoint {

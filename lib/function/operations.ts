@@ -7,6 +7,7 @@ import { carlsonRG } from "./carlson-second.ts";
 import { carlsonRD, carlsonRJ } from "./carlson-third.ts";
 import { completeB, completeD, completeE, completeK, completePi, type Modulus } from "./legendre-complete.ts";
 import { incompleteB, incompleteD, incompleteE, incompleteF, incompletePi } from "./legendre-incomplete.ts";
+import type { Side } from "./legendre-mean.ts";
 
 /** A disc on the real axis as a ball, so that the value is a Real. */
 export function settle(d: Disc): Enclosure {
@@ -42,14 +43,19 @@ export const CARLSON = {
 } as const;
 
 function complete(name: string, f: (k: Modulus, prec: number) => Disc): Operation {
-  return operationOf(name, 2, ([m, m1], _rest, prec) => f({ m: m!, m1: m1! }, prec));
+  return operationOf(name, 2, ([m, m1], [side], prec) => f(sided(m!, m1!, side), prec));
 }
 
 function incomplete(name: string, f: (phi: Disc, k: Modulus, prec: number) => Disc): Operation {
-  return operationOf(name, 3, ([phi, m, m1], _rest, prec) => f(phi!, { m: m!, m1: m1! }, prec));
+  return operationOf(name, 3, ([phi, m, m1], [side], prec) => f(phi!, sided(m!, m1!, side), prec));
 }
 
-/** Operands m, m1. */
+/** A modulus from its operands; the side is 1, −1, or undefined. */
+function sided(m: Disc, m1: Disc, side: unknown): Modulus {
+  return side === undefined ? { m, m1 } : { m, m1, side: side as Side };
+}
+
+/** Operands m, m1, side. */
 export const COMPLETE = {
   K: complete("complete K", completeK),
   E: complete("complete E", completeE),
@@ -57,7 +63,7 @@ export const COMPLETE = {
   B: complete("complete B", completeB),
 } as const;
 
-/** Operands φ, m, m1. */
+/** Operands φ, m, m1, side. */
 export const INCOMPLETE = {
   F: incomplete("incomplete F", incompleteF),
   E: incomplete("incomplete E", incompleteE),
@@ -65,12 +71,12 @@ export const INCOMPLETE = {
   B: incomplete("incomplete B", incompleteB),
 } as const;
 
-/** Operands n, 1 − n, m, m1. */
-export const COMPLETE_PI: Operation = operationOf("complete Π", 4, ([n, n1, m, m1], _rest, prec) =>
-  completePi({ n: n!, n1: n1! }, { m: m!, m1: m1! }, prec),
+/** Operands n, 1 − n, m, m1, side. */
+export const COMPLETE_PI: Operation = operationOf("complete Π", 4, ([n, n1, m, m1], [side], prec) =>
+  completePi({ n: n!, n1: n1! }, sided(m!, m1!, side), prec),
 );
 
-/** Operands n, 1 − n, φ, m, m1. */
-export const INCOMPLETE_PI: Operation = operationOf("incomplete Π", 5, ([n, n1, phi, m, m1], _rest, prec) =>
-  incompletePi({ n: n!, n1: n1! }, phi!, { m: m!, m1: m1! }, prec),
+/** Operands n, 1 − n, φ, m, m1, side. */
+export const INCOMPLETE_PI: Operation = operationOf("incomplete Π", 5, ([n, n1, phi, m, m1], [side], prec) =>
+  incompletePi({ n: n!, n1: n1! }, phi!, sided(m!, m1!, side), prec),
 );

@@ -4,6 +4,9 @@
 //     √(−iτ) θ1(v|τ) = i E θ1(v/τ | −1/τ), and √(−iτ) θ_j(v|τ) = E θ_j′(v/τ | −1/τ) with 2 and 4 changing places,
 //     E = exp(−πi v²/τ), the root with positive real part                                             (DLMF 20.7.30–33)
 //     η(τ) = e^(−πi/12) η(τ+1),  √(−iτ) η(τ) = η(−1/τ)                                                (DLMF 23.18.5)
+import * as ball from "../number/ball.ts";
+import type { Disc } from "../number/disc.ts";
+import * as disc from "../number/disc.ts";
 import type { Letter } from "./modular-action.ts";
 
 export type ThetaIndex = 1 | 2 | 3 | 4;
@@ -40,4 +43,16 @@ export function etaTwentyFourths(word: readonly Letter[]): number {
   let e = 0n;
   for (const letter of word) if (letter.kind === "shift") e -= letter.by;
   return Number(((e % 24n) + 24n) % 24n);
+}
+
+/** exp(2πi·k/8). */
+export function eighthRoot(k: number, wp: number): Disc {
+  const quarter = k >> 1;
+  let value: Disc = disc.one;
+  if (k & 1) {
+    const half = ball.sqrt({ man: 1n, exp: -1, rad: 0 }, wp);
+    value = disc.fromBalls(half, half);
+  }
+  for (let n = 0; n < quarter; n++) value = disc.mulI(value);
+  return value;
 }

@@ -10,7 +10,7 @@ import * as disc from "../number/disc.ts";
 import { DomainError } from "../proof/errors.ts";
 import { nearestInteger, ontoImaginary, ontoReal } from "./enclosure.ts";
 import { LARGEST_LOGARITHM, nomeOf, type Reduction, reduction } from "./modular-action.ts";
-import { type ThetaIndex, thetaMultiplier } from "./theta-multiplier.ts";
+import { eighthRoot, type ThetaIndex, thetaMultiplier } from "./theta-multiplier.ts";
 import { thetaSums } from "./theta-sums.ts";
 
 export type { ThetaIndex } from "./theta-multiplier.ts";
@@ -193,18 +193,6 @@ function quadraticExponential({ c, at, over, v, pi, wp }: Chain, count: number):
     list.push(disc.add(disc.mul(first, list[k]!, wp), last, wp));
   }
   return list;
-}
-
-/** exp(2πi·k/8). */
-export function eighthRoot(k: number, wp: number): Disc {
-  const quarter = k >> 1;
-  let value: Disc = disc.one;
-  if (k & 1) {
-    const half = ball.sqrt({ man: 1n, exp: -1, rad: 0 }, wp);
-    value = disc.fromBalls(half, half);
-  }
-  for (let n = 0; n < quarter; n++) value = disc.mulI(value);
-  return value;
 }
 
 /**

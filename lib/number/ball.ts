@@ -32,6 +32,7 @@ export {
   fromRational,
   isZero,
   lower,
+  lowerPositive,
   lowMagnitude,
   magnitude,
   midpoint,

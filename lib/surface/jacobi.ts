@@ -6,7 +6,7 @@ import { Rational } from "../number/rational.ts";
 import { i, π } from "../number/symbols.ts";
 import { apply, Complex, type ComplexNumeric, type Real, scalar } from "../number/values.ts";
 import type { ConventionKey } from "../proof/conventions.ts";
-import { type ModulusInput, type ModulusPair, modulusPair } from "./modulus.ts";
+import { type ModulusInput, type ModulusPair, modulusPair, type SideInput } from "./modulus.ts";
 
 type Value = Real | Complex;
 
@@ -19,30 +19,42 @@ export class Jacobi {
   readonly m: Value;
   /** 1 − m, with all its digits. */
   readonly m1: Value;
+  /** For a real m > 1 the side of the cut on which K, E, τ and the nome are taken. */
+  readonly side: "above" | "below" | undefined;
 
-  constructor({ m, m1 }: ModulusPair) {
+  constructor({ m, m1, side }: ModulusPair) {
     this.m = m;
     this.m1 = m1;
+    this.side = side && (side === 1 ? "above" : "below");
   }
 
-  /** The quarter period K = K(m). Throws DomainError for real m > 1, PoleError for m = 1. */
+  /** The quarter period K = K(m). On the cut m > 1 by the side; throws DomainError without one, PoleError for m = 1. */
   get K(): Value {
-    return apply(COMPLETE.K, [this.m, this.m1]);
+    return apply(COMPLETE.K, [this.m, this.m1, this.turn]);
   }
 
-  /** K′ = K(m1); iK′ is the other quarter period. Throws DomainError for real m < 0, PoleError for m = 0. */
+  /** K′ = K(m1); iK′ is the other quarter period. On its cut m < 0 by the side; throws DomainError without one, PoleError for m = 0. */
   get K1(): Value {
-    return apply(COMPLETE.K, [this.m1, this.m]);
+    return apply(COMPLETE.K, [this.m1, this.m, this.coTurn]);
   }
 
   /** The complete integral E(m). */
   get E(): Value {
-    return apply(COMPLETE.E, [this.m, this.m1]);
+    return apply(COMPLETE.E, [this.m, this.m1, this.turn]);
   }
 
   /** The complete integral E(m1). */
   get E1(): Value {
-    return apply(COMPLETE.E, [this.m1, this.m]);
+    return apply(COMPLETE.E, [this.m1, this.m, this.coTurn]);
+  }
+
+  private get turn(): 1 | -1 | undefined {
+    return this.side && (this.side === "above" ? 1 : -1);
+  }
+
+  /** m1 = 1 − m lies on the other side. */
+  private get coTurn(): 1 | -1 | undefined {
+    return this.side && (this.side === "above" ? -1 : 1);
   }
 
   /** τ = iK′/K. */
@@ -229,6 +241,6 @@ function isZero(x: Value): boolean {
  * Throws   TypeError for a bare { q }, or unless exactly one name is used.
  * @example jacobi({ m: "81/100" }).dn("1/5")   // 0.9840560289645665155...
  */
-export function jacobi(input: ModulusInput): Jacobi {
+export function jacobi(input: ModulusInput & SideInput): Jacobi {
   return new Jacobi(modulusPair({ ...input }, "jacobi"));
 }

@@ -1,3 +1,4 @@
+import type { Side } from "../function/legendre-mean.ts";
 import { LAMBDA } from "../function/modular-operations.ts";
 import * as ball from "../number/ball.ts";
 import * as disc from "../number/disc.ts";
@@ -27,16 +28,38 @@ export type ModulusInput =
   /** Roots e1, e2, e3 of a cubic: m = (e2 − e3)/(e1 − e3). */
   | { readonly roots: readonly [ComplexNumeric, ComplexNumeric, ComplexNumeric] };
 
-/** The parameter and its complement, each with all its digits. */
+/**
+ * For a real m > 1, on the cut [1, ∞) of K, E, Π and their kin: "above" is the limit from Im m > 0 and "below" the one from Im m < 0, its conjugate.
+ * The twelve functions of Jacobi do not depend on it.
+ */
+export interface SideInput {
+  readonly side?: "above" | "below";
+}
+
+/** The parameter and its complement, each with all its digits; 1 or −1 for the side of the cut. */
 export interface ModulusPair {
   readonly m: Real | Complex;
   readonly m1: Real | Complex;
+  readonly side?: Side | undefined;
+}
+
+/** The side that was named, as a sign. */
+function sideOf(side: unknown, subject: string): Side | undefined {
+  if (side === undefined) return undefined;
+  if (side === "above" || side === "below") return side === "above" ? 1 : -1;
+  throw new TypeError(`${subject}: got the side ${JSON.stringify(side)}; expected "above" (Im m > 0) or "below"`);
 }
 
 const WAYS = ["m", "m1", "k", "tau", "qTheta", "qMod", "roots"] as const;
 
 /** The pair m, m1 that an input names. Throws TypeError unless exactly one of the ways is used. */
 export function modulusPair(input: Readonly<Record<string, unknown>>, subject: string): ModulusPair {
+  const side = sideOf(input.side, subject);
+  const pair = pairOf(input, subject);
+  return side === undefined ? pair : { ...pair, side };
+}
+
+function pairOf(input: Readonly<Record<string, unknown>>, subject: string): ModulusPair {
   const used = WAYS.filter((way) => input[way] !== undefined);
   if (used.length !== 1) throw refusal(input, used, subject);
   const value = input[used[0]!];

@@ -1,5 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
+import { carlsonRG } from "../../../lib/function/carlson-second.ts";
+import { carlsonRD } from "../../../lib/function/carlson-third.ts";
 import {
   completeB,
   completeD,
@@ -158,14 +160,45 @@ describe("Legendre's integrals against each other", () => {
   });
 });
 
+describe("second routes of the complete integrals", () => {
+  it("E = 2 RG(0, m1, 1), D = RD(0, m1, 1)/3, B = m1 RD(0, 1, m1)/3 — oracle: Carlson's duplication against the mean, DLMF 19.25.1", () => {
+    fc.assert(
+      fc.property(fc.oneof(near01, complexModulus), (k) => {
+        const third = (x: Disc) => disc.divBall(x, ball.fromInt(3), PREC);
+        const E = disc.ldexp(carlsonRG(disc.zero, k.m1, disc.one, PREC), 1);
+        expect(disc.overlaps(completeE(k, PREC), E)).toBe(true);
+        expect(disc.overlaps(completeD(k, PREC), third(carlsonRD(disc.zero, k.m1, disc.one, PREC)))).toBe(true);
+        const B = third(product(k.m1, carlsonRD(disc.zero, disc.one, k.m1, PREC)));
+        expect(disc.overlaps(completeB(k, PREC), B)).toBe(true);
+      }),
+      RUNS,
+    );
+  });
+
+  it("coarse real enclosures of m are taken at their ends: E([0.3, 0.7]) — oracle: sharp values inside and at the ends", () => {
+    const wide: Modulus = {
+      m: { re: 5n << 20n, im: 0n, exp: -20, rad: 2 * 2 ** 20, axis: "real" },
+      m1: disc.zero,
+    };
+    const tenth = (d: Disc) => disc.divBall(d, ball.fromInt(10), 60);
+    const k = { m: tenth(wide.m), m1: tenth({ ...wide.m }) };
+    for (const f of [completeE, completeD, completeB]) {
+      const value = f(k, 60);
+      for (const m of ["0.3", "0.5", "0.7"]) expect(disc.overlaps(value, f(modulus(m), 100)), m).toBe(true);
+      const spread = disc.sub(f(modulus("0.3"), 60), f(modulus("0.7"), 60), 60);
+      expect(2 * value.rad * 2 ** value.exp).toBeLessThan(1.01 * Math.abs(disc.toDouble(spread)[0]));
+    }
+  });
+});
+
 describe("Legendre's integrals refuse, and say why", () => {
   it("m = 1 is a pole of K, and E(1) = 1", () => {
     expect(() => completeK(modulus("1"), 60)).toThrow(PoleError);
     expect(completeE(modulus("1"), 60)).toEqual(disc.one);
   });
-  it("a real m > 1 names the cut and the reciprocal modulus", () => {
+  it("a real m > 1 names the cut and its sides", () => {
     expect(() => completeK(modulus("1.5"), 60)).toThrow(DomainError);
-    expect(() => completeE(modulus("1.5"), 60)).toThrow(/reciprocal modulus/);
+    expect(() => completeE(modulus("1.5"), 60)).toThrow(/side: "above"/);
   });
   it("m sin²φ > 1", () => {
     expect(() => incompleteF(angle("1.5"), modulus("2"), 60)).toThrow(/branch point/);

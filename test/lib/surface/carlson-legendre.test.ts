@@ -6,7 +6,9 @@ import { i, π } from "../../../lib/number/symbols.ts";
 import { Complex, Real } from "../../../lib/number/values.ts";
 import { DomainError, PoleError } from "../../../lib/proof/errors.ts";
 import { carlson } from "../../../lib/surface/carlson.ts";
+import { jacobi } from "../../../lib/surface/jacobi.ts";
 import { legendre } from "../../../lib/surface/legendre.ts";
+import { modular } from "../../../lib/surface/modular.ts";
 import type { ModulusInput } from "../../../lib/surface/modulus.ts";
 
 const before = provedDigits();
@@ -103,12 +105,55 @@ describe("legendre in a cell", () => {
     expect(() => legendre.K({} as ModulusInput)).toThrow(TypeError);
   });
 
-  it("m on the cut names the reciprocal modulus, which then works — oracle: DLMF 19.7.3 against the mean beside the cut", () => {
-    expect(() => legendre.K({ m: 2 })).toThrow(/\(K\(1\/m\) ± i K\(1 − 1\/m\)\)\/√m/);
+  it("m on the cut without a side, a word that is no side, m1 known to hold 0", () => {
+    expect(() => legendre.K({ m: 2 })).toThrow(/the side of it.*K\(1\/m\) ± i K\(1 − 1\/m\)/);
+    expect(() => legendre.F({ phi: 1, m: 2 })).toThrow(/side: "above"/);
+    expect(() => legendre.K({ m: 2, side: "left" as "above" })).toThrow(/"above" \(Im m > 0\) or "below"/);
+    expect(() => legendre.K({ m: enclose("0.9", "0.2") })).toThrow(/an enclosure of m that holds 1/);
+  });
+});
+
+/** 2 + 10^−30 i: what is continuous differs there by about 10^−30 from the limit. */
+const beside = exact`2 + 1/1000000000000000000000000000000 i`;
+
+function expectLimit(limit: Real | Complex, near: Real | Complex): void {
+  expect(Complex.from(limit).minus(near).abs().toDouble()).toBeLessThan(1e-28);
+}
+
+describe("the sides of the cut m > 1", () => {
+  it("K, E, D, B from above — oracle: the same functions at 2 + 10^−30 i", () => {
+    for (const name of ["K", "E", "D", "B"] as const) {
+      expectLimit(legendre[name]({ m: 2, side: "above" }), legendre[name]({ m: beside }));
+    }
+  });
+
+  it("Π(n | 2) — oracle: the same at 2 + 10^−30 i", () => {
+    for (const n of ["1/10", "-7/3"]) {
+      expectLimit(legendre.Pi({ n, m: 2, side: "above" }), legendre.Pi({ n, m: beside }));
+    }
+  });
+
+  it("F, E, D, B, Π at φ on both sides of the branch point and beyond π/2 — oracle: the same at 2 + 10^−30 i", () => {
+    for (const phi of ["1/2", "1", "-6/5", "3", "7"]) {
+      for (const name of ["F", "E", "D", "B"] as const) {
+        expectLimit(legendre[name]({ phi, m: 2, side: "above" }), legendre[name]({ phi, m: beside }));
+      }
+      expectLimit(legendre.Pi({ n: "1/2", phi, m: 2, side: "above" }), legendre.Pi({ n: "1/2", phi, m: beside }));
+    }
+  });
+
+  it("below is the conjugate; K(m + i0) = (K(1/m) + i K(1 − 1/m))/√m — oracle: DLMF 19.7.3", () => {
+    const above = legendre.K({ m: 2, side: "above" });
+    expect(legendre.K({ m: 2, side: "below" }).overlaps(Complex.from(above).conj())).toBe(true);
     const k = legendre.K({ m: "1/2" });
-    const side = k.plus(i.times(legendre.K({ m1: "1/2" }))).div(exact`√2`);
-    const beside = legendre.K({ m: exact`2 + 1/1000000000000000000000000000000 i` });
-    const gap = (side as typeof beside).minus(beside).abs().toDouble();
-    expect(gap).toBeLessThan(1e-28);
+    expect(Complex.from(k).plus(i.times(k)).div(exact`√2`).overlaps(above)).toBe(true);
+  });
+
+  it("jacobi on the cut: λ(τ) is m again, for m = 2 and for m = −3 from below — oracle: theta functions", () => {
+    const above = jacobi({ m: 2, side: "above" });
+    expect(modular.lambda(above.tau).overlaps(2)).toBe(true);
+    expect(modular.lambda(jacobi({ m: -3, side: "below" }).tau).overlaps(-3)).toBe(true);
+    expect(above.sn(above.K).exact?.toString()).toBe("1");
+    expect(() => jacobi({ m: 2 }).tau).toThrow(DomainError);
   });
 });

@@ -128,8 +128,9 @@ export class Jacobi {
   }
 
   /**
-   * The amplitude am(u) = ∫_0^u dn, with sn = sin am.
-   * Domain   real u and m, or 0 <= m <= 1 and |Im u| < K′. Branch continuous from am 0 = 0. Throws DomainError outside. Source DLMF 22.16(i).
+   * The amplitude am(u) = ∫_0^u dn along the segment from 0 to u, with sn = sin am and cn = cos am.
+   * Domain   any u and m for which no pole of dn lies on the segment. Branch cuts run from the poles outward, away from 0; across one am jumps by 2π.
+   * Error    proved. Throws DomainError, with the pole named, where the segment meets one. Source DLMF 22.16(i).
    */
   am(u: ComplexNumeric): Value {
     return this.odd(AMPLITUDE, u);

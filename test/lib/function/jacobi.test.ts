@@ -6,6 +6,7 @@ import { jacobiEpsilon, jacobiZeta } from "../../../lib/function/jacobi-second.t
 import { type JacobiName, jacobiValues } from "../../../lib/function/jacobi-values.ts";
 import { completeK, type Modulus } from "../../../lib/function/legendre-complete.ts";
 import { incompleteE, incompleteF } from "../../../lib/function/legendre-incomplete.ts";
+import * as ball from "../../../lib/number/ball.ts";
 import type { Disc } from "../../../lib/number/disc.ts";
 import * as disc from "../../../lib/number/disc.ts";
 import { DomainError, PoleError } from "../../../lib/proof/errors.ts";
@@ -174,17 +175,53 @@ describe("Jacobi's functions anywhere", () => {
     );
   });
 
+  it.each([
+    ["1", "5", "0.5", "0", "1.9399772422407732381", "-0.9860396186525258498"],
+    ["12", "5", "0.5", "0", "-1.1243269113955893358", "-1.0547961862995504145"],
+    ["20", "0", "0.5", "0.25", undefined, undefined],
+    ["3", "2", "3", "0", "3.840916590172852619", "-0.0015935250877608349141"],
+    ["3", "2", "-2", "0", "2.3953003812028632983", "0.0029871795517947754335"],
+    ["1", "5", "1", "0", "1.3339532491619667833", "-0.72733948313387601327"],
+  ])(
+    "am(%s + %s i | %s + %s i) — oracle: quadrature of dn along the segment (mpmath 1.2.1, 20 digits); e^(i am) = cn + i sn",
+    (x, y, re, im, a, b) => {
+      const [u, k] = [read({ re: x, im: y }, 200), modulus(im === "0" ? re : { re, im })];
+      const am = jacobiAmplitude(u, k, PREC);
+      if (a && b) expectDigits(am, { re: a, im: b }, 19);
+      const [sn, cn] = jacobiValues(["sn", "cn"], u, k, PREC) as [Disc, Disc];
+      expect(disc.overlaps(disc.exp(disc.mulI(am), PREC), add(cn, disc.mulI(sn)))).toBe(true);
+      expect(disc.overlaps(jacobiAmplitude(disc.neg(u), k, PREC), disc.neg(am))).toBe(true);
+    },
+  );
+
+  it("am steps by little where u does, for any m — oracle: |am(u + h) − am(u) − h dn(u)| is of order h²", () => {
+    fc.assert(
+      fc.property(plane, anyModulus, (u, k) => {
+        fc.pre(!disc.isZero(u));
+        const h: Disc = { re: 1n, im: 0n, exp: -40, rad: 0, axis: "real" };
+        const [dn] = jacobiValues(["dn"], u, k, PREC) as [Disc];
+        const step = disc.sub(jacobiAmplitude(add(u, h), k, PREC), jacobiAmplitude(u, k, PREC), PREC);
+        const gap = disc.abs(disc.sub(step, mul(h, dn), PREC), 60);
+        // The ray through a pole of dn may pass between u and u + h: then the step is off by 2π, which 40 points did not meet.
+        expect(ball.magnitude(gap)).toBeLessThan(-60);
+      }),
+      { numRuns: 40, seed: 1_829 },
+    );
+  });
+
   it("imaginary u gives imaginary sn and real cn, dn", () => {
     const [s, c, d] = jacobiValues(["sn", "cn", "dn"], read({ re: "0", im: "0.4" }, 60), modulus("0.3"), 60) as Disc[];
     expect([s!.axis, c!.axis, d!.axis]).toEqual(["imaginary", "real", "real"]);
   });
 
-  it("a pole is named, and am outside its strip refused", () => {
+  it("a pole is named, also where it lies on the way of am", () => {
     expect(() => jacobiValues(["ns"], disc.zero, modulus("0.3"), 60)).toThrow(PoleError);
     const k = modulus("0.5");
     const iK = disc.mulI(completeK({ m: k.m1, m1: k.m }, 100));
     expect(() => jacobiValues(["sn"], iK, k, 60)).toThrow(PoleError);
     expect(() => jacobiAmplitude(disc.ldexp(iK, 1), k, 60)).toThrow(DomainError);
+    expect(() => jacobiAmplitude(disc.ldexp(iK, 1), k, 60)).toThrow(/the pole iK′ of dn/);
+    expect(() => jacobiAmplitude(iK, k, 60)).toThrow(/the pole iK′ of dn/);
     expect(() => jacobiInverse("sn", read("1.5", 60), k, 60)).toThrow(/outside the values/);
   });
 });

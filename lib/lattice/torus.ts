@@ -28,13 +28,13 @@ interface Symmetry {
   readonly fixed: boolean;
   /** conj z ≡ −z: ℘ is real, ℘′ imaginary. */
   readonly turned: boolean;
-  /** conj z = ±z itself: ζ and σ are real or imaginary too. */
-  readonly exactly: boolean;
+  /** conj z = z or −z itself: ζ and σ are real or imaginary too. */
+  readonly exactly: "real" | "imaginary" | undefined;
 }
 
 function symmetry(lattice: PeriodLattice, [r, s]: Coordinates, rest: Disc | undefined): Symmetry {
   const k = lattice.conjugation;
-  const none = { fixed: false, turned: false, exactly: false };
+  const none = { fixed: false, turned: false, exactly: undefined };
   if (!k || rest?.axis === "plane") return none;
   const conjugate: Coordinates = [r.times(k.a11).plus(s.times(k.a21)), r.times(k.a12).plus(s.times(k.a22))];
   const differences = [conjugate[0].minus(r), conjugate[1].minus(s)];
@@ -43,7 +43,9 @@ function symmetry(lattice: PeriodLattice, [r, s]: Coordinates, rest: Disc | unde
   const zero = (pair: readonly Rational[]) => pair.every((q) => q.sign() === 0);
   const fixed = rest?.axis !== "imaginary" && whole(differences);
   const turned = rest?.axis !== "real" && whole(sums);
-  return { fixed, turned, exactly: (fixed && zero(differences)) || (turned && zero(sums)) };
+  // At ω2/2 both congruences hold, and only one of them as an equation.
+  const exactly = fixed && zero(differences) ? "real" : turned && zero(sums) ? "imaginary" : undefined;
+  return { fixed, turned, exactly };
 }
 
 /**
@@ -72,7 +74,8 @@ export function valuesAtPoint(
   const out: { [K in Wanted]?: Disc } = {};
   for (const [name, value] of Object.entries(values) as [Wanted, Disc][]) {
     if (name === "wp") out.wp = ontoReal(value);
-    else if (name === "prime" || exactly) out[name] = fixed ? ontoReal(value) : ontoImaginary(value);
+    else if (name === "prime") out.prime = fixed ? ontoReal(value) : ontoImaginary(value);
+    else if (exactly) out[name] = exactly === "real" ? ontoReal(value) : ontoImaginary(value);
     else out[name] = value;
   }
   return out;

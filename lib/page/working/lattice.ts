@@ -2,16 +2,19 @@
 
 import { provedDigits } from "../../number/context.ts";
 import { Rational } from "../../number/rational.ts";
-import { i } from "../../number/symbols.ts";
+import { i, π } from "../../number/symbols.ts";
 import { Complex, Real } from "../../number/values.ts";
 import { behind } from "../../surface/behind.ts";
 import { carlson } from "../../surface/carlson.ts";
 import { standingOf } from "../../surface/claim-parts.ts";
+import type { Curve } from "../../surface/curve.ts";
 import type { Lattice } from "../../surface/lattice.ts";
+import { curve } from "../../surface/make-curve.ts";
 import { lattice } from "../../surface/make-lattice.ts";
+import { modular } from "../../surface/modular.ts";
 import { Derivation } from "../derivation.ts";
-import { type Table, table } from "../table.ts";
-import { plainNumber } from "./parts.ts";
+import { table } from "../table.ts";
+import { curveCheck, exactly, jointly, legendreCheck, plainNumber } from "./parts.ts";
 import { reductionSteps } from "./reduced.ts";
 
 const COHEN = "common practice; Cohen, A Course in Computational Algebraic Number Theory, 7.4";
@@ -19,7 +22,11 @@ const DLMF_CUBIC = "common practice; DLMF 23.3";
 
 export function latticeWorking(L: Lattice): Derivation {
   const cubic = L.data.given.kind === "invariants";
-  const start = new Derivation("Period lattice").under(...L.conventions, "roots", "fundamentalDomain");
+  const start = new Derivation("Period lattice", { name: "lattice" }).under(
+    ...L.conventions,
+    "roots",
+    "fundamentalDomain",
+  );
   const begun = cubic ? periodsOf(invariants(start, L), L) : given(start, L);
   return reductionSteps(chosen(begun, L), L);
 }
@@ -28,9 +35,10 @@ function invariants(working: Derivation, L: Lattice): Derivation {
   const E = behind(L)?.curve;
   const [g2, g3] = L.invariants;
   const start = E
-    ? working.step("the curve", { value: E, label: "curve" }).step("its invariants", {
+    ? working.step("the curve", { value: E, ...curveCheck(E), label: "curve" }).step("its invariants", {
         value: { c4: E.c4, c6: E.c6 },
         source: "common practice; Silverman AEC, III.1",
+        ...modelCheck(E),
         label: "invariants",
       })
     : working;
@@ -40,11 +48,21 @@ function invariants(working: Derivation, L: Lattice): Derivation {
   return start
     .step(`the cubic $4x^3 - g_2 x - g_3$${E ? " with $g_2 = c_4/12$ and $g_3 = c_6/216$" : ""}`, {
       value: { g2, g3 },
+      check: jointly(
+        standingOf(symmetric(e1, e2, e3), "=", g2),
+        standingOf(Complex.from(e1).times(e2).times(e3).times(4), "=", g3),
+      ),
+      route: "$g_2 = 2(e_1^2 + e_2^2 + e_3^2)$ and $g_3 = 4 e_1 e_2 e_3$ from the roots below",
       label: "cubic",
     })
     .step("its discriminant $g_2^3 - 27 g_3^2$", {
       value: L.discriminant,
-      ...(E ? { check: standingOf(L.discriminant, "=", E.discriminant), route: "the discriminant of the curve" } : {}),
+      ...(E
+        ? { check: standingOf(L.discriminant, "=", E.discriminant), route: "the discriminant of the curve" }
+        : {
+            check: standingOf(byEta(L), "=", L.discriminant),
+            route: "$(2\\pi/\\omega_1')^{12} \\eta(\\tau')^{24}$ from the reduced basis below",
+          }),
       label: "discriminant",
     })
     .step(`its roots${realWords(L)}`, {
@@ -54,6 +72,31 @@ function invariants(working: Derivation, L: Lattice): Derivation {
       route: "$16 (e_1 - e_2)^2 (e_2 - e_3)^2 (e_1 - e_3)^2$ against the discriminant",
       label: "roots",
     });
+}
+
+/** 2(e1² + e2² + e3²) */
+function symmetric(e1: Real | Complex, e2: Real | Complex, e3: Real | Complex): Complex {
+  return [e1, e2, e3].reduce<Complex>((sum, e) => sum.plus(e.pow(2)), Complex.from(0)).times(2);
+}
+
+/** c4 and c6 from the model without a1, a2, a3 that b2, b4, b6 give: y² = x³ − 27c4 x − 54c6. */
+function modelCheck(E: Curve) {
+  const short = curve({ a: [0, 0, 0, E.c4.times(-27), E.c6.times(-54)] });
+  const six = Rational.of(6);
+  return {
+    check: exactly(
+      short.c4.equals(E.c4.times(six.pow(4))) && short.c6.equals(E.c6.times(six.pow(6))) && short.j.equals(E.j),
+      "y^2 = x^3 - 27 c4 x - 54 c6 has 6^4 c4, 6^6 c6 and the same j",
+    ),
+    route: "the short model made of them",
+  };
+}
+
+/** Δ by Dedekind's η at the reduced τ. */
+function byEta(L: Lattice): Complex {
+  const { tau, periods } = L.reduced;
+  const factor = Complex.from(π).times(2).div(plainNumber(periods[0])).pow(12);
+  return factor.times(Complex.from(modular.eta(tau)).pow(24));
 }
 
 function realWords(L: Lattice): string {
@@ -76,7 +119,7 @@ function periodsOf(working: Derivation, L: Lattice): Derivation {
   const upright = Complex.from(height).times(i);
   return working
     .step(`the real period by an arithmetic-geometric mean, ${first.words}`, {
-      value: meanTable(first.a, first.b),
+      ...mean(first),
       source: COHEN,
       label: "agm1",
     })
@@ -88,7 +131,7 @@ function periodsOf(working: Derivation, L: Lattice): Derivation {
       label: "omega1",
     })
     .step(`the height of the cell by a second mean, ${second.words}`, {
-      value: meanTable(second.a, second.b),
+      ...mean(second),
       source: COHEN,
       label: "agm2",
     })
@@ -171,8 +214,24 @@ function steps(a: Real, b: Real): (readonly [number, Real, Real])[] {
   return rows;
 }
 
-function meanTable(a: Real, b: Real): Table {
-  return table(steps(a, b), { columns: ["$n$", "$a_n$", "$b_n$"] });
+/**
+ * The table of a mean with c_n, c_n² = a_n² − b_n², by its own recursion c_(n+1) = c_n²/4a_(n+1): the rows are checked by the
+ * identity, which no step of the mean uses.
+ */
+function mean({ a, b }: Mean) {
+  const rows = steps(a, b);
+  const c = [a.pow(2).minus(b.pow(2)).sqrt()];
+  for (const [, next] of rows.slice(1)) c.push(c.at(-1)!.pow(2).div(next.times(4)));
+  const checks = rows.map(([, p, q], n) => standingOf(q.pow(2).plus(c[n]!.pow(2)), "=", p.pow(2)));
+  return {
+    value: table(
+      rows.map(([n, p, q], k) => [n, p, q, c[k]]),
+      { columns: ["$n$", "$a_n$", "$b_n$", "$c_n$"] },
+    ),
+    trace: true,
+    check: jointly(...checks),
+    route: "$a_n^2 = b_n^2 + c_n^2$ in every row, with $c_{n+1} = c_n^2/4a_{n+1}$ by itself",
+  };
 }
 
 function complexPeriods(working: Derivation, L: Lattice): Derivation {
@@ -201,6 +260,7 @@ function given(working: Derivation, L: Lattice): Derivation {
   const [w1, w2] = L.periods;
   return working.step("the periods that were given", {
     value: { ω1: plainNumber(w1), ω2: plainNumber(w2) },
+    ...legendreCheck(L),
     label: "periods",
   });
 }
@@ -215,7 +275,16 @@ function chosen(working: Derivation, L: Lattice): Derivation {
       : "for a lattice that is not real, $\\operatorname{Re} \\omega_1 > 0$ or $\\omega_1/i > 0$";
   return working.step(`the basis by the conventions of edition 1: ${rule}`, {
     value: { ω1: plainNumber(w1), ω2: plainNumber(w2), τ: L.tau },
-    ...(cubic ? byEisenstein(L) : {}),
+    ...(cubic ? byEisenstein(L) : orientation(L)),
     label: "basis",
   });
+}
+
+/** Given periods: the basis is oriented, since the cell has a positive area. */
+function orientation(L: Lattice) {
+  const [w1, w2] = L.periods.map(plainNumber) as [Complex, Complex];
+  return {
+    check: standingOf(0, "<", w1.conj().times(w2).im),
+    route: "$\\operatorname{Im} \\overline{\\omega_1}\\omega_2 > 0$, the area of the cell",
+  };
 }

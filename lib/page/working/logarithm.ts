@@ -5,10 +5,12 @@ import { Complex, Real } from "../../number/values.ts";
 import { carlson } from "../../surface/carlson.ts";
 import { standingOf } from "../../surface/claim-parts.ts";
 import type { Curve } from "../../surface/curve.ts";
+import type { Lattice } from "../../surface/lattice.ts";
 import type { AnyPoint } from "../../surface/point.ts";
 import { TorusPoint } from "../../surface/torus-point.ts";
 import { Derivation } from "../derivation.ts";
-import { plainNumber } from "./parts.ts";
+import { jointly, legendreCheck, plainNumber } from "./parts.ts";
+import { wpByExpansion } from "./wp-expansion.ts";
 
 const CARLSON = "common practice; DLMF 19.16.1 with the substitution $t = x - x_0$";
 
@@ -16,13 +18,21 @@ type Scalar = Real | Complex;
 
 export function logarithmWorking(z: Scalar, E: Curve, P: AnyPoint): Derivation {
   const L = E.lattice();
-  const start = new Derivation("Elliptic logarithm")
+  const start = new Derivation("Elliptic logarithm", { name: "logarithm" })
     .under("cubic", "differential", "components")
     .step("the curve and the point", {
       value: { curve: E, P },
+      check: standingOf(P, "on", E),
+      route: "the coordinates put into the equation",
       label: "point",
     });
-  if (!P.coordinates) return start.step("the point is $O$, whose logarithm is 0", { value: z, label: "logarithm" });
+  if (!P.coordinates)
+    return start.step("the point is $O$, whose logarithm is 0", {
+      value: z,
+      check: standingOf(z, "in", L),
+      route: "0 is a lattice point, a pole of ℘",
+      label: "logarithm",
+    });
   const [x, y] = P.coordinates as readonly [Rational | Real, Rational | Real];
   const b2 = Complex.from(E.b[0] as never);
   const wp = real(Complex.from(x).plus(b2.div(12)));
@@ -38,6 +48,7 @@ export function logarithmWorking(z: Scalar, E: Curve, P: AnyPoint): Derivation {
     })
     .step("the period lattice", {
       value: { ω1: plainNumber(L.periods[0]), ω2: plainNumber(L.periods[1]) },
+      ...legendreCheck(L),
       label: "lattice",
     });
   const integrated =
@@ -45,7 +56,7 @@ export function logarithmWorking(z: Scalar, E: Curve, P: AnyPoint): Derivation {
   return integrated.step(place(z), {
     formula: "z",
     value: z,
-    ...valueCheck(z, E, P, wp),
+    ...valueCheck(z, L, wp, prime),
     label: "logarithm",
   });
 }
@@ -57,11 +68,12 @@ function place(z: Scalar): string {
   return "the point is on the bounded component: $z = \\omega_2/2 + t$, $t$ real";
 }
 
-/** ℘ at the logarithm gives the point back, by a series that the logarithm does not use. */
-function valueCheck(z: Scalar, E: Curve, P: AnyPoint, wp: Scalar) {
-  const [zero] = [E.origin];
-  if (P.equals(zero)) return {};
-  return { check: standingOf(E.lattice().wp(z), "=", wp), route: "$\\wp(z)$ by theta series against $x + b_2/12$" };
+/** ℘ and ℘′ at the logarithm give the point back; ℘ by its q-expansion, which the logarithm does not use. */
+function valueCheck(z: Scalar, L: Lattice, wp: Scalar, prime: Scalar) {
+  return {
+    check: jointly(standingOf(wpByExpansion(L, Complex.from(z)), "=", wp), standingOf(L.wp.prime(z), "=", prime)),
+    route: "$\\wp(z)$ by its $q$-expansion, its tail enclosed, and $\\wp'(z)$ by theta functions",
+  };
 }
 
 /** Real points: the integral from the abscissa to infinity, for the bounded component after a shift by ω2/2. */
@@ -69,6 +81,8 @@ function onCircle(working: Derivation, z: Scalar, L: ReturnType<Curve["lattice"]
   const [e1, e2, e3] = L.roots;
   const bounded = z instanceof TorusPoint && z.coordinates[1].den === 2n;
   const t = bounded ? (z as TorusPoint).minus(L.at(0, Rational.of(1, 2))) : z;
+  // ω2/2 itself is not moved: its logarithm is exact, and nothing is left to integrate.
+  if (t instanceof TorusPoint && t.isLatticePoint) return working;
   const gap = real(Complex.from(wp).minus(e3));
   const shifted = bounded ? real(Complex.from(e3).plus(e3.minus(e1).times(e3.minus(e2)).div(gap))) : wp;
   const side = bounded ? -1 : 1;
@@ -76,7 +90,9 @@ function onCircle(working: Derivation, z: Scalar, L: ReturnType<Curve["lattice"]
     ? working.step("the point moved by $\\omega_2/2$ to the component of $O$", {
         formula: "\\wp(z - \\tfrac{\\omega_2}{2}) = e_3 + \\frac{(e_3 - e_1)(e_3 - e_2)}{\\wp(z) - e_3}",
         value: shifted,
-        source: "common practice; DLMF 23.10, addition of a half-period",
+        source: "common practice; DLMF 23.10, addition of a half-period (number from memory)",
+        check: standingOf(wpByExpansion(L, Complex.from(t)), "=", shifted),
+        route: "$\\wp(z - \\omega_2/2)$ by its $q$-expansion",
         label: "shift",
       })
     : working;
@@ -85,17 +101,15 @@ function onCircle(working: Derivation, z: Scalar, L: ReturnType<Curve["lattice"]
   const integral = Complex.from(
     carlson.RF(difference(shifted, e1), difference(shifted, e2), difference(shifted, e3)),
   ).re;
-  const words = sign <= 0 ? "$\\wp' < 0$: the real part $t > 0$ is" : "$\\wp' > 0$: the real part $t < 0$ is minus";
+  const half = sign === 0 ? "$\\wp' = 0$: half the real period is" : undefined;
+  const words =
+    half ?? (sign <= 0 ? "$\\wp' < 0$: the real part $t > 0$ is" : "$\\wp' > 0$: the real part $t < 0$ is minus");
   return moved.step(`${words} the integral from $x_0 = \\wp$ to infinity`, {
     formula: `${sign <= 0 ? "" : "-"}\\int_{x_0}^\\infty \\frac{dx}{\\sqrt{4x^3 - g_2 x - g_3}} = ${sign <= 0 ? "" : "-"}R_F(x_0 - e_1, x_0 - e_2, x_0 - e_3)`,
     value: sign <= 0 ? integral : integral.neg(),
     source: CARLSON,
-    ...(t instanceof TorusPoint && t.isLatticePoint
-      ? {}
-      : {
-          check: standingOf(sign <= 0 ? integral : integral.neg(), "=", t),
-          route: "$R_F$ by duplication against the inverse of ℘",
-        }),
+    check: standingOf(sign <= 0 ? integral : integral.neg(), "=", t),
+    route: "$R_F$ by duplication against the inverse of ℘",
     label: "integral",
   });
 }

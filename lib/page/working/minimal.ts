@@ -10,7 +10,7 @@ import { Curve } from "../../surface/curve.ts";
 import { Morphism } from "../../surface/morphism.ts";
 import { Derivation } from "../derivation.ts";
 import { type Table, table } from "../table.ts";
-import { exactly } from "./parts.ts";
+import { curveCheck, exactly } from "./parts.ts";
 
 /** What `E.minimal()` gives. */
 export interface Minimal {
@@ -30,9 +30,9 @@ export function minimalWorking({ curve, to }: Minimal): Derivation {
   const E = to.from;
   const { u, r, s, t } = to.change as { u: Rational; r: Rational; s: Rational; t: Rational };
   const d = E.a.reduce((n, c) => lcm(n, c.den), 1n);
-  let working = new Derivation("Reduced global minimal model")
+  let working = new Derivation("Reduced global minimal model", { name: "minimal" })
     .under("modelChange")
-    .step("the given model", { value: E, label: "given" });
+    .step("the given model", { value: E, ...curveCheck(E), label: "given" });
   working = working.step("its invariants, $c_4 = b_2^2 - 24 b_4$ and $c_6 = -b_2^3 + 36 b_2 b_4 - 216 b_6$", {
     value: { c4: E.c4, c6: E.c6, Δ: E.discriminant },
     source: "common practice; Silverman AEC, III.1",
@@ -45,6 +45,7 @@ export function minimalWorking({ curve, to }: Minimal): Derivation {
       `the least common denominator of the coefficients, ${d}, is taken out first: $c_4 d^4$ and $c_6 d^6$ are integers`,
       {
         value: { c4: E.c4.times(Rational.of(d).pow(4)), c6: E.c6.times(Rational.of(d).pow(6)) },
+        ...denominatorCheck(E, d),
         label: "denominator",
       },
     );
@@ -55,10 +56,20 @@ export function minimalWorking({ curve, to }: Minimal): Derivation {
       {
         value: valuations(E, d, u),
         source: KRAUS,
+        ...primesCheck(E, d, u),
         label: "primes",
       },
     )
-    .step("the scale", { formula: "u", value: u, label: "scale" })
+    .step("the scale", {
+      formula: "u",
+      value: u,
+      check: exactly(
+        E.discriminant.equals(curve.discriminant.times(u.pow(12))),
+        "the discriminants of the two models, each from its coefficients, differ by u^12",
+      ),
+      route: "from the discriminants alone",
+      label: "scale",
+    })
     .step("the invariants of the minimal model, $c_4/u^4$, $c_6/u^6$ and $\\Delta/u^{12}$", {
       value: { c4: curve.c4, c6: curve.c6, Δ: curve.discriminant },
       check: exactly(
@@ -84,7 +95,41 @@ export function minimalWorking({ curve, to }: Minimal): Derivation {
       source: "common practice; Silverman AEC, III.1, table of the coefficients",
       label: "change",
     })
-    .step("the map to the minimal model", { value: to, check: to.verify(), label: "map" });
+    .step("the map to the minimal model", {
+      value: to,
+      check: to.verify(),
+      route: "the map put into the equation of the minimal model",
+      label: "map",
+    });
+}
+
+/** The model with the coefficients a_i d^i, which are integers. */
+function denominatorCheck(E: Curve, d: bigint) {
+  const weights = [1, 2, 3, 4, 6];
+  const scaled = new Curve(Q, E.a.map((c, k) => c.times(Rational.of(d).pow(weights[k]!))) as unknown as Curve["a"]);
+  return {
+    check: exactly(
+      scaled.a.every((c) => c.den === 1n) &&
+        scaled.c4.equals(E.c4.times(Rational.of(d).pow(4))) &&
+        scaled.c6.equals(E.c6.times(Rational.of(d).pow(6))),
+      "the model with the coefficients a_i d^i is integral and has these invariants",
+    ),
+    route: "from the scaled coefficients",
+  };
+}
+
+/** The product of the prime powers, and divisibility tried with the number itself. */
+function primesCheck(E: Curve, d: bigint, u: Rational) {
+  const scale = u.times(d).num;
+  const divides = (q: Rational, k: number) => q.times(Rational.of(d).pow(k)).num % scale ** BigInt(k) === 0n;
+  const product = primeDivisors(scale).reduce((n, p) => n * p ** BigInt(valuation(scale, p)), 1n);
+  return {
+    check: exactly(
+      product === scale && divides(E.c4, 4) && divides(E.c6, 6) && divides(E.discriminant, 12),
+      `the product of all p^e is ${scale}; its 4th, 6th and 12th power divide c4, c6 and Δ`,
+    ),
+    route: "by division with remainder, not prime by prime",
+  };
 }
 
 function relation({ c4, c6, discriminant }: Curve): Standing {
@@ -106,7 +151,7 @@ function order(n: bigint, p: bigint): number {
 }
 
 /** Why no smaller model is integral: the orders of c4, c6, Δ, or at 2 and 3 that the smaller invariants belong to no integral model. */
-function minimality({ c4, c6, discriminant }: Curve): Standing {
+export function minimality({ c4, c6, discriminant }: Curve): Standing {
   const words: string[] = [];
   for (const p of primeDivisors(discriminant.num)) {
     if (order(c4.num, p) < 4 || order(c6.num, p) < 6 || order(discriminant.num, p) < 12) continue;

@@ -4,8 +4,10 @@ import { isNode, type Node } from "../../number/origin.ts";
 import { Quadratic } from "../../number/quadratic.ts";
 import { Rational } from "../../number/rational.ts";
 import { type Complex, Real } from "../../number/values.ts";
+import { standingOf } from "../../surface/claim-parts.ts";
 import { Derivation } from "../derivation.ts";
 import { quadraticTex, rationalTex } from "../exact-kind.ts";
+import { secondRoute } from "./second-route.ts";
 
 /** Longer records are cut at their beginning: the last steps are the ones that a reader asks for. */
 const MOST_STEPS = 60;
@@ -14,18 +16,31 @@ export function numberWorking(x: Real | Complex): Derivation {
   const title = `Working of a ${x instanceof Real ? "real" : "complex"} number`;
   if (!x.origin) {
     const words = x.exact ? "an exact number, as given" : "an enclosure, as given";
-    return new Derivation(title).step(words, { value: x });
+    return new Derivation(title, { name: "number" }).step(words, {
+      value: x,
+      check: standingOf(x, "=", x.neg().neg()),
+      route: "nothing was computed; its negative taken twice",
+      label: "given",
+    });
   }
   const nodes = inOrder(x).slice(-MOST_STEPS);
   const places = new Map<unknown, number>(nodes.map((node, k) => [node, k + 1]));
-  return nodes.reduce((working, node) => {
-    const { operation, operands } = node.origin!;
-    const formula = formulaOf(
-      operation.name,
-      operands.map((operand) => operandTex(operand, places)),
-    );
-    return working.step(WORDS[operation.name] ?? operation.name, { formula, value: node });
-  }, new Derivation(title));
+  return nodes.reduce(
+    (working, node) => {
+      const { operation, operands } = node.origin!;
+      const formula = formulaOf(
+        operation.name,
+        operands.map((operand) => operandTex(operand, places)),
+      );
+      return working.step(WORDS[operation.name] ?? operation.name, {
+        formula,
+        value: node,
+        ...secondRoute(node as Real | Complex),
+        label: `s${places.get(node)}`,
+      });
+    },
+    new Derivation(title, { name: "number" }),
+  );
 }
 
 /** The nodes with a record, each once, operands first. */

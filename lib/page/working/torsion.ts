@@ -16,7 +16,7 @@ import type { Curve } from "../../surface/curve.ts";
 import type { TorsionSubgroup } from "../../surface/torsion.ts";
 import { Derivation } from "../derivation.ts";
 import { table } from "../table.ts";
-import { exactly, factorTex, inX } from "./parts.ts";
+import { curveCheck, exactly, factorTex, inX } from "./parts.ts";
 
 const INJECTIVE =
   "common practice; Silverman AEC, VII.3: for an odd prime of good reduction torsion meets the kernel of reduction in O only";
@@ -24,11 +24,16 @@ const INJECTIVE =
 export function torsionWorking(group: TorsionSubgroup, E: Curve): Derivation {
   const { curve: minimal, to } = E.minimal();
   const a = toIntegers(minimal.a)!;
-  let working = new Derivation("Torsion subgroup of $E(\\mathbb{Q})$").step("the curve", { value: E, label: "curve" });
+  let working = new Derivation("Torsion subgroup of $E(\\mathbb{Q})$", { name: "torsion" }).step("the curve", {
+    value: E,
+    ...curveCheck(E),
+    label: "curve",
+  });
   if (!minimal.equals(E)) {
     working = working.step("the reduced global minimal model, on which the work is done", {
       value: minimal,
       check: to.verify(),
+      route: "the change of model put into the equation",
       label: "model",
     });
   }
@@ -46,13 +51,17 @@ function reduction(working: Derivation, group: TorsionSubgroup, minimal: Curve, 
     .step("the discriminant: at primes that do not divide it the reduction is good", {
       formula: `\\Delta = ${factorTex(num, factors)}`,
       value: minimal.discriminant,
-      check: exactly(product === (num < 0n ? -num : num), "the prime powers multiplied"),
+      check: exactly(
+        product === (num < 0n ? -num : num) && factors.every(({ prime }) => divisorsOf(prime) === 2),
+        "the prime powers multiplied, and each prime has no smaller factor up to its root, or up to 10^5",
+      ),
+      route: "by multiplication and trial division",
       label: "discriminant",
     })
     .step("points over $\\mathbb{F}_p$ for odd primes of good reduction, $O$ among them", {
       value: table(
-        group.counts.map(({ p, count }) => [p, count]),
-        { columns: ["$p$", "$\\#E(\\mathbb{F}_p)$"] },
+        group.counts.map(({ p, count }, k) => [p, count, Number(boundOf({ counts: group.counts.slice(0, k + 1) }))]),
+        { columns: ["$p$", "$\\#E(\\mathbb{F}_p)$", "gcd so far"] },
       ),
       check: exactly(plain, "all pairs (x, y) tried in the equation modulo p, the point O added"),
       route: "counted by pairs, not by squares",
@@ -62,6 +71,8 @@ function reduction(working: Derivation, group: TorsionSubgroup, minimal: Curve, 
       formula: `\\gcd(${group.counts.map(({ count }) => count).join(", ")})`,
       value: Rational.of(bound),
       source: INJECTIVE,
+      check: exactly(bound === commonPowers(group), "the prime powers that all counts have in common, multiplied"),
+      route: "by factoring the counts, not by Euclid's algorithm",
       label: "bound",
     });
 }
@@ -78,7 +89,12 @@ function left(working: Derivation, group: TorsionSubgroup, minimal: Curve, a: In
     const formula = l === 2 ? "\\psi_2^2 = 4x^3 + b_2 x^2 + 2 b_4 x + b_6" : `\\psi_{${l}}`;
     // ψ5 and ψ7 are longer than a line.
     const shown = f.length <= LONGEST ? { formula, value: inX(f) } : { formula: shortened(l, f) };
-    const parts = { ...shown, source: "common practice; Silverman AEC, exercise 3.7", label: `psi${l}` };
+    const parts = {
+      ...shown,
+      source: "common practice; Silverman AEC, exercise 3.7",
+      ...divisionCheck(minimal, a, group, f, l),
+      label: `psi${l}`,
+    };
     const words = `points of order ${l}: the abscissas are roots of the division polynomial $\\psi_${l}$, of degree ${f.length - 1}`;
     const listed = roots.length === 0 ? "it has no rational root" : `its rational roots: $x = ${roots.join(",\\ ")}$`;
     if (points.length > 0) {
@@ -127,11 +143,53 @@ function excluded(minimal: Curve, a: IntegerModel, l: number): { check?: Standin
         route: "by one more prime",
       };
   }
-  return l === 2 ? {} : notIntegral(minimal, l);
+  return notIntegral(minimal, l);
+}
+
+/** ψ_l modulo a prime vanishes at the abscissa of a point exactly where its l-fold is O by repeated addition. */
+function divisionCheck(minimal: Curve, a: IntegerModel, group: TorsionSubgroup, f: Univariate<Rational>, l: number) {
+  const { num } = minimal.discriminant;
+  const counted = group.counts.map(({ p }) => p);
+  const primes = [...counted, ...primesUpTo(60)].filter(
+    (p, k, all) => p > 3 && p !== l && num % BigInt(p) !== 0n && all.indexOf(p) === k && p < 60,
+  );
+  const fits = primes.every((p) => {
+    const residues = f.map((c) => mod(Number(c.num % BigInt(p)), p));
+    return affinePoints(a, p).every((P) => {
+      const value = residues.reduceRight((sum, c) => mod(sum * P[0] + c, p), 0);
+      return (value === 0) === killed(a, p, P, l);
+    });
+  });
+  return {
+    check: exactly(
+      fits && f.every((c) => c.den === 1n),
+      `at all points over F_p, p = ${primes.join(", ")}, it vanishes exactly where the ${l}-fold point is O`,
+    ),
+    route: "by repeated addition over small fields",
+  };
+}
+
+/** 2 for a number without a factor from 2 up to its root, or up to 10^5. */
+function divisorsOf(n: bigint): number {
+  for (let d = 2n; d * d <= n && d < 100_000n; d++) if (n % d === 0n) return 3;
+  return 2;
+}
+
+/** The product of the least prime powers in all counts. */
+function commonPowers({ counts }: TorsionSubgroup): bigint {
+  const [first, ...rest] = counts.map(({ count }) => factorInteger(BigInt(count)));
+  return (first ?? []).reduce((n, { prime, exponent }) => {
+    const least = rest.reduce(
+      (e, factors) => Math.min(e, factors.find((other) => other.prime === prime)?.exponent ?? 0),
+      exponent,
+    );
+    return n * prime ** BigInt(least);
+  }, 1n);
 }
 
 /** The real points of odd prime order l are at kω1/l; a rational one would have an integral abscissa. */
 function notIntegral(minimal: Curve, l: number): { check?: Standing; route?: string } {
+  if (l === 2) return noRationalRoot(minimal);
   const L = minimal.lattice();
   const shift = minimal.b[0].div(12);
   const abscissas = Array.from({ length: (l - 1) / 2 }, (_, k) => L.wp(L.at(Rational.of(k + 1, l), 0)).minus(shift));
@@ -145,6 +203,24 @@ function notIntegral(minimal: Curve, l: number): { check?: Standing; route?: str
     check: { kind: "proved", argument: `the real points of order ${l} have x = ${list}, none of them an integer` },
     route:
       "by the real points k·ω1/ℓ, since torsion of odd order has integral coordinates (common practice; Silverman AEC, VII.3)",
+  };
+}
+
+/** Roots of 4x³ + b2x² + 2b4x + b6 are quarters of integers, if rational: the real ones are not. */
+function noRationalRoot(minimal: Curve): { check?: Standing; route?: string } {
+  const shift = minimal.b[0].div(12);
+  const roots = minimal.lattice().roots.flatMap((e) => (e instanceof Real ? [e.minus(shift).times(4)] : []));
+  const apart = roots.every((x) => {
+    const below = x.floor();
+    return below !== undefined && !x.overlaps(below);
+  });
+  if (!apart) return {};
+  return {
+    check: {
+      kind: "proved",
+      argument: `4x = ${roots.map((x) => x.digits(8)).join(", ")} at the real roots, no integers`,
+    },
+    route: "by the real roots, since 4x would be an integer",
   };
 }
 
@@ -177,7 +253,7 @@ function found(working: Derivation, group: TorsionSubgroup): Derivation {
   });
 }
 
-function boundOf({ counts }: TorsionSubgroup): bigint {
+function boundOf({ counts }: Pick<TorsionSubgroup, "counts">): bigint {
   return counts.reduce((g, { count }) => gcd(g, BigInt(count)), 0n);
 }
 

@@ -1,111 +1,114 @@
 // A value of ℘ as a derivation: reduced τ, reduced argument, the q-series with its first terms.
 
-import type { PeriodLattice } from "../../lattice/period-lattice.ts";
+import { WP_LAMBERT, WP_SERIES, wpTerms } from "../../function/wp-series.ts";
 import { provedDigits } from "../../number/context.ts";
-import { exp } from "../../number/functions.ts";
-import { i, π } from "../../number/symbols.ts";
-import { Complex, type ComplexNumeric, type Real } from "../../number/values.ts";
+import { asDisc, type Operation } from "../../number/origin.ts";
+import { Rational } from "../../number/rational.ts";
+import { apply, type Complex, type Real } from "../../number/values.ts";
 import { standingOf } from "../../surface/claim-parts.ts";
-import { Lattice } from "../../surface/lattice.ts";
-import { TorusPoint } from "../../surface/torus-point.ts";
+import type { Lattice } from "../../surface/lattice.ts";
+import type { TorusPoint } from "../../surface/torus-point.ts";
 import { Derivation } from "../derivation.ts";
 import { table } from "../table.ts";
 import { numberWorking } from "./number.ts";
-import { plainNumber } from "./parts.ts";
+import { legendreCheck, plainNumber } from "./parts.ts";
 import { reductionSteps } from "./reduced.ts";
+import { near, placeOf, scaleOf } from "./wp-expansion.ts";
 
-const SERIES = "common practice; Silverman, Advanced Topics, I.6 (q-expansion of ℘)";
+const SERIES = "common practice; Silverman, Advanced Topics, chapter I, section 6 (number from memory)";
 
-/** The lattice and the argument of a number that is a value of ℘, read from its record. */
-export function valueOfWp(x: Real | Complex): { readonly L: Lattice; readonly z: Complex } | undefined {
-  if (x.origin?.operation.name !== "wp") return undefined;
-  const [data, ...rest] = x.origin.operands;
-  const L = new Lattice(data as PeriodLattice);
-  if (rest.length === 1) return { L, z: Complex.from(rest[0] as ComplexNumeric) };
-  const [r, s, more] = rest as [never, never, Real | Complex | undefined];
-  const exact = L.at(r, s);
-  return { L, z: more ? exact.plus(more) : exact };
+export function valueOfWp(x: Real | Complex) {
+  return placeOf(x, "wp");
 }
 
 export function wpWorking(x: Real | Complex, L: Lattice, z: Complex): Derivation {
-  const [w1, w2] = L.periods;
-  const start = new Derivation("Value of $\\wp(z)$")
-    .under("cubic", "periods", "fundamentalDomain")
-    .step("the argument", { formula: "z", value: z, label: "argument" })
-    .step("the lattice", { value: { ω1: plainNumber(w1), ω2: plainNumber(w2), τ: L.tau }, label: "lattice" });
-  const reduced = L.reduced;
-  const [v1] = reduced.periods;
   const { nearest, rest } = near(L, z);
-  const terms = series(rest.div(plainNumber(v1)), reduced.tau);
-  const factor = Complex.from(π).times(2).times(i).div(plainNumber(v1)).pow(2);
-  const total = terms.reduce<Complex>((sum, term) => sum.plus(term), Complex.from(0));
+  const v1 = plainNumber(L.reduced.periods[0]);
+  const v = plainNumber(rest).div(v1);
+  const { tau } = L.reduced;
+  const sum = apply(WP_SERIES, [v, tau]);
+  const start = new Derivation("Value of $\\wp(z)$", { name: "wp" })
+    .under("cubic", "periods", "fundamentalDomain")
+    .step("the argument", {
+      formula: "z",
+      value: z,
+      check: standingOf(plainNumber(rest), "≠", 0),
+      route: "$z$ is no lattice point: its distance from the nearest one is not 0",
+      label: "argument",
+    })
+    .step("the lattice", {
+      value: { ω1: plainNumber(L.periods[0]), ω2: plainNumber(L.periods[1]), τ: L.tau },
+      ...legendreCheck(L),
+      label: "lattice",
+    });
   return reductionSteps(start, L)
     .step(`the argument moved next to 0 by the lattice point $\\omega$ = ${nearest.name}`, {
       formula: "z - \\omega",
       value: plainNumber(rest),
+      ...movedCheck(L, z, nearest, plainNumber(rest)),
       label: "moved",
     })
     .step(
-      "with $u = \\exp(2\\pi i z/\\omega_1')$ and $q = \\exp(2\\pi i \\tau')$, terms of the q-expansion of $\\wp$ over $(2\\pi i/\\omega_1')^2$",
+      "with $u = \\exp(2\\pi i z/\\omega_1')$ and $q = \\exp(2\\pi i \\tau')$, the $q$-expansion of $\\wp$ over $(2\\pi i/\\omega_1')^2$",
       {
         formula:
           "\\frac{1}{12} + \\frac{u}{(1-u)^2} + \\sum_{n \\ge 1} \\left( \\frac{q^n u}{(1 - q^n u)^2} + \\frac{q^n/u}{(1 - q^n/u)^2} - \\frac{2 q^n}{(1 - q^n)^2} \\right)",
         source: SERIES,
+        ...atHalfPeriod(L),
         label: "series",
       },
     )
     .step("its terms, the two before the sum together as number 0", {
-      value: table(
-        terms.slice(0, shownTerms(L) + 1).map((term, n) => [n, term]),
-        { columns: ["$n$", "term"], digits: Math.min(20, provedDigits()) },
-      ),
+      value: termTable(L, v, tau),
+      trace: true,
+      check: standingOf(sum, "=", apply(WP_LAMBERT, [v, tau])),
+      route:
+        "the sum against $\\frac{1}{12} + \\frac{u}{(1-u)^2} + \\sum \\frac{n q^n}{1 - q^n}(u^n + u^{-n} - 2)$, both tails enclosed",
       label: "terms",
     })
     .step("the value", {
       formula: numberWorking(x).steps.at(-1)?.formula ?? "\\wp(z)",
       value: x,
-      check: standingOf(factor.times(total), "=", x),
-      route:
-        "the q-expansion against the theta functions that the value comes from; its tail is below the digits shown",
+      check: standingOf(scaleOf(v1).times(sum), "=", x),
+      route: "the $q$-expansion, its tail enclosed, against the theta functions that the value comes from",
       label: "value",
     });
 }
 
-function near(L: Lattice, z: Complex) {
-  if (z instanceof TorusPoint && !z.remainder) {
-    const nearest = L.locate(plainNumber(z)).nearest;
-    return { nearest, rest: z.minus(nearest) as Complex };
-  }
-  return L.locate(z);
+/** z − ω by coordinates: r and s without their whole parts, times the periods. */
+function movedCheck(L: Lattice, z: Complex, nearest: TorusPoint, rest: Complex) {
+  const { r, s } = L.locate(plainNumber(z));
+  const [m, n] = nearest.coordinates;
+  const [w1, w2] = L.periods.map(plainNumber) as [Complex, Complex];
+  return {
+    check: standingOf(w1.times(r.minus(m)).plus(w2.times(s.minus(n))), "=", rest),
+    route:
+      "by the coordinates: $(r - m)\\omega_1 + (s - n)\\omega_2$ for $z = r\\omega_1 + s\\omega_2$, $\\omega = m\\omega_1 + n\\omega_2$",
+  };
 }
 
-function series(v: Complex, tau: Complex): Complex[] {
-  const turn = Complex.from(π).times(2).times(i);
-  const u = Complex.from(exp(turn.times(v)));
-  const q = Complex.from(exp(turn.times(tau)));
-  const pole = (w: Complex) => w.div(Complex.from(1).minus(w).pow(2));
-  const terms = [pole(u).plus(Complex.from(1).div(12))];
-  // The check repeats the comparison with twice the bits.
-  const count = termsFor(tau, 2 * provedDigits() + 30);
-  let power = q;
-  for (let n = 1; n <= count; n++) {
-    terms.push(
-      pole(power.times(u))
-        .plus(pole(power.div(u)))
-        .minus(pole(power).times(2)),
-    );
-    power = power.times(q);
-  }
-  return terms;
+/** The expansion at half a period of the reduced basis is a root of the cubic, which is known without it. */
+function atHalfPeriod(L: Lattice) {
+  const v1 = plainNumber(L.reduced.periods[0]);
+  const e = scaleOf(v1).times(apply(WP_SERIES, [Rational.of(1, 2), L.reduced.tau]));
+  const [g2, g3] = L.invariants;
+  const left = e.pow(3).times(4);
+  return {
+    check: standingOf(left, "=", e.times(g2).plus(g3)),
+    route: "at $\\omega_1'/2$ its value is a root of $4x^3 - g_2x - g_3$",
+  };
 }
 
-/** |u| lies between |q|^(1/2) and |q|^(−1/2), so a term is below 6 |q|^(n − 1/2), and |q| <= exp(−π√3). */
-function termsFor(tau: Complex, digits: number): number {
-  const [, height] = tau.toDouble();
-  return Math.ceil((digits * Math.LN10) / (2 * Math.PI * Math.max(height, 0.8))) + 1;
+/** Those terms that reach the digits shown, with few digits. */
+function termTable(L: Lattice, v: Complex, tau: Complex) {
+  const [, height] = L.reduced.tau.toDouble();
+  const count = Math.ceil(((provedDigits() + 2) * Math.LN10) / (2 * Math.PI * Math.max(height, 0.8))) + 1;
+  // The place of a term is an operand, so that a term can be computed with as many digits as are shown.
+  const rows = Array.from({ length: count + 1 }, (_, n) => [n, apply(TERM, [v, tau, n])]);
+  return table(rows, { columns: ["$n$", "term"], digits: Math.min(20, provedDigits()) });
 }
 
-/** Those that reach the digits shown. */
-function shownTerms(L: Lattice): number {
-  return termsFor(L.reduced.tau, provedDigits() + 2);
-}
+const TERM: Operation = {
+  name: "term of the q-expansion",
+  evaluate: ([v, tau, n], at, prec) => wpTerms(asDisc(at(v)), asDisc(at(tau)), n as number, prec + 20)[n as number]!,
+};

@@ -6,7 +6,6 @@ import { derivation } from "../../../lib/page/derivation.ts";
 import { tex } from "../../../lib/page/typeset.ts";
 import { working } from "../../../lib/page/working.ts";
 import { claim } from "../../../lib/surface/claim.ts";
-import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
 import { lattice } from "../../../lib/surface/make-lattice.ts";
 
@@ -95,13 +94,6 @@ describe("working", () => {
     expect(working(L.wp(L.at("1/3", 1))).steps.at(-1)?.formula).toBe("\\wp(\\frac{1}{3}\\,\\omega_1 + \\omega_2)");
     expect(steps.at(-1)?.value).toBe(x);
     expect(() => temml.renderToString(tex(working(x)), { throwOnError: true })).not.toThrow();
-  });
-
-  it("a cubic through a point: the construction, with both maps verified by substitution", () => {
-    const steps = working(cubic`u^3 + 2v^3 + 3w^3 = 6 u v w`.through({ u: 1, v: 1, w: 1 }));
-    expect(text(steps)).toContain("(3) the tangent meets the cubic again in\n    (1 : -2 : 1)");
-    expect(steps.checks.map(({ kind }) => kind)).toEqual(["proved", "proved", "proved"]);
-    expect(() => temml.renderToString(tex(steps.show("all")), { throwOnError: true })).not.toThrow();
   });
 
   it("what keeps no record is refused, an exact number has one step", () => {

@@ -1,15 +1,18 @@
 import temml from "temml";
 import { describe, expect, it } from "vitest";
-import { complex, exact } from "../../../lib/number/convert.ts";
-import { atDigits } from "../../../lib/number/functions.ts";
+import { complex, exact, real } from "../../../lib/number/convert.ts";
+import { atDigits, cos, exp, ln, sin } from "../../../lib/number/functions.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
 import type { Derivation } from "../../../lib/page/derivation.ts";
 import { plainFormulas } from "../../../lib/page/plain-formula.ts";
 import type { Table } from "../../../lib/page/table.ts";
 import { tex } from "../../../lib/page/typeset.ts";
 import { working } from "../../../lib/page/working.ts";
+import type { Standing } from "../../../lib/proof/standing.ts";
+import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
 import { lattice } from "../../../lib/surface/make-lattice.ts";
+import { quartic } from "../../../lib/surface/make-quartic.ts";
 
 const text = (value: unknown) => bundle(value)?.["text/plain"] as string;
 
@@ -22,8 +25,15 @@ function at(steps: Derivation, label: string): unknown {
 function sound(steps: Derivation): void {
   for (const level of ["outline", "steps", "all"] as const)
     expect(() => temml.renderToString(tex(steps.show(level)), { throwOnError: true, maxExpand: 1e5 })).not.toThrow();
-  expect(steps.checks.length).toBeGreaterThan(0);
-  for (const { kind } of steps.checks) expect(["proved", "certified"]).toContain(kind);
+  // Every step is checked, and says by which other way.
+  for (const step of steps.steps) {
+    expect(step.label, step.text).toMatch(/^[\w-]+$/);
+    expect(step.route, step.text).toBeTruthy();
+    expect(["proved", "certified"], `${step.text}: ${step.route}`).toContain(
+      (step.check as Standing | undefined)?.kind,
+    );
+  }
+  expect(new Set(steps.steps.map(({ label }) => label)).size).toBe(steps.steps.length);
   // Every plain line can be read without TeX.
   expect(text(steps.show("all"))).not.toMatch(/\\(?!n)/);
 }
@@ -32,7 +42,7 @@ describe("working of torsion", () => {
   it("Z/7: counts, bound, multiples — oracle: counts by hand over F_3, and the published group", () => {
     const steps = working(curve`y^2 + x y + y = x^3 - x^2 - 3x + 3`.torsion());
     sound(steps);
-    expect((at(steps, "counts") as Table).rows[0]).toEqual([3, 7]);
+    expect((at(steps, "counts") as Table).rows[0]).toEqual([3, 7, 7]);
     expect(String(at(steps, "bound"))).toBe("7");
     expect(String(at(steps, "group"))).toBe("Z/7");
     expect(text(working(curve`y^2 + y = x^3 - x`.lattice()))).toContain("real basis: ω1 > 0 is the least real period");
@@ -110,6 +120,29 @@ describe("working of lattices and of what is computed on them", () => {
   it("lattices that are not real, or given by periods", () => {
     sound(working(lattice({ invariants: [complex(1, 2), complex(0, 1)] })));
     sound(working(lattice({ tau: complex("3/10", "1/50") })));
+  });
+
+  it("a cubic and a quartic through a point, a flex too", () => {
+    const steps = working(cubic`u^3 + 2v^3 + 3w^3 = 6u v w`.through({ u: 1, v: 1, w: 1 }));
+    sound(steps);
+    expect(text(steps)).toContain("(3) the tangent meets the curve again in\n    (1 : -2 : 1)");
+    sound(working(cubic`x^3 + y^3 + z^3 = 0`.through({ x: 1, y: -1, z: 0 })));
+    sound(working(quartic`y^2 = x^4 + 1`.through({ x: 0, y: 1 })));
+  });
+
+  it("numbers: each operation by its inverse or an identity", () => {
+    const L = lattice({ invariants: [4, -1] });
+    const z = complex("0.41", "0.27");
+    for (const x of [L.wp(z).pow(2).minus(real(2).sqrt()), L.wp.prime(z), L.zeta(z), L.sigma(z)]) sound(working(x));
+    for (const x of [...L.quasiPeriods, L.roots[0].times(L.tau), L.area, lattice({ tau: z }).j]) sound(working(x));
+    sound(
+      working(
+        exp(real("1/3"))
+          .plus(ln(real(3)))
+          .times(sin(1))
+          .div(cos(2)),
+      ),
+    );
   });
 
   it("a logarithm on each component, for finite order too — oracle: Carlson's integral, in the checks", () => {

@@ -1,7 +1,7 @@
 // How the two processes of a session are started.
 import { type ChildProcess, spawn } from "node:child_process";
 import { join } from "node:path";
-import { BUILT, usableSnapshot } from "./snapshot/file.ts";
+import { BUILT, ROOT, usableSnapshot } from "./snapshot/file.ts";
 
 /** Flags of the cells' process: what interrupts need (see child/stop.ts), and two warnings less. */
 const CELL_FLAGS = [
@@ -15,28 +15,47 @@ const CELL_FLAGS = [
 /** Tells the types process that the notebook is confined. */
 export const CONFINED = "confined";
 
-function entry(name: string): string {
-  return join(BUILT, "kernel", "cell", name);
-}
+/** Starts from a bundle where there is one. */
+const CELLS_ENTRY = join(ROOT, "kernel", "bin", "cells.cjs");
 
 /** Starts the process that runs the user's code, in a process group of its own. */
 export function launchCells(cwd: string, memoryLimit?: number): ChildProcess {
   const limit = memoryLimit === undefined ? [] : [`--max-old-space-size=${memoryLimit}`];
-  return spawn(process.execPath, [...CELL_FLAGS, ...limit, entry("child/main.js"), cwd], {
+  return spawn(process.execPath, [...CELL_FLAGS, ...limit, CELLS_ENTRY, cwd], {
     cwd,
     detached: process.platform !== "win32",
     stdio: ["ignore", "pipe", "pipe", "pipe", "pipe", "pipe"],
   });
 }
 
+/** A types process, and whether it starts from the snapshot. */
+export interface LaunchedTypes {
+  readonly process: ChildProcess;
+  readonly fromSnapshot: boolean;
+}
+
+let early: { readonly cwd: string; readonly confined: boolean; readonly launched: LaunchedTypes } | undefined;
+
+/** Starts a types process before there is a session; the first session in that folder gets it. */
+export function launchTypesEarly(cwd: string, confined: boolean): void {
+  const launched = startTypes(cwd, usableSnapshot(), confined);
+  launched.process.on("error", () => {});
+  early = { cwd, confined, launched };
+}
+
 /** Starts the process that checks cells; from the start-up snapshot if there is one and it is wanted. */
-export function launchTypes(
-  cwd: string,
-  wantSnapshot: boolean,
-  confined: boolean,
-): { process: ChildProcess; fromSnapshot: boolean } {
-  const snapshot = wantSnapshot ? usableSnapshot() : undefined;
-  const start = snapshot === undefined ? [entry("types/main.js")] : ["--snapshot-blob", snapshot];
+export function launchTypes(cwd: string, wantSnapshot: boolean, confined: boolean): LaunchedTypes {
+  const ready = early;
+  if (wantSnapshot && ready?.cwd === cwd && ready.confined === confined) {
+    early = undefined;
+    return ready.launched;
+  }
+  return startTypes(cwd, wantSnapshot ? usableSnapshot() : undefined, confined);
+}
+
+function startTypes(cwd: string, snapshot: string | undefined, confined: boolean): LaunchedTypes {
+  const start =
+    snapshot === undefined ? [join(BUILT, "kernel", "cell", "types", "main.js")] : ["--snapshot-blob", snapshot];
   const child = spawn(
     process.execPath,
     ["--disable-warning=ExperimentalWarning", ...start, cwd, ...(confined ? [CONFINED] : [])],

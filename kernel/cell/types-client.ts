@@ -55,6 +55,8 @@ export class TypesClient {
     };
     process.on("error", ended);
     process.on("exit", ended);
+    // One that was started early may be gone already.
+    if (process.exitCode !== null || process.signalCode !== null) setImmediate(ended);
   }
 
   /** The snapshot does not fit this Node: the same questions go to a process without it. */

@@ -7,7 +7,7 @@ import { fileURLToPath } from "node:url";
 import { type ConnectionFields, freeConnection } from "./client.ts";
 
 const root = path.resolve(path.dirname(fileURLToPath(import.meta.url)), "../..");
-export const KERNEL_ENTRY = path.join(root, "dist/kernel/service/main.js");
+export const KERNEL_ENTRY = path.join(root, "kernel/bin/kernel.cjs");
 
 /** Builds if a source is newer than the build. */
 export async function build(): Promise<void> {

@@ -24,15 +24,21 @@ interface Script {
 
 const MACHINERY = fileURLToPath(new URL("./", import.meta.url));
 const LIBRARY = fileURLToPath(new URL("../../../lib/", import.meta.url));
+const LAUNCHER = fileURLToPath(new URL("../../../../kernel/bin/load.cjs", import.meta.url));
+/** Bundles of the same modules: the library has a file of its own there. */
+const BUNDLES = fileURLToPath(new URL("../../../start/", import.meta.url));
+const LIBRARY_BUNDLE = `${BUNDLES}library.cjs`;
 const LONGEST_STACK = 40;
 
 /** Whether a file is part of the machinery that runs cells. */
 export function isMachinery(file: string): boolean {
-  return plainFile(file).startsWith(MACHINERY);
+  const plain = plainFile(file);
+  return plain.startsWith(MACHINERY) || LAUNCHER === plain || (plain.startsWith(BUNDLES) && plain !== LIBRARY_BUNDLE);
 }
 
 export function isLibrary(file: string): boolean {
-  return plainFile(file).startsWith(LIBRARY);
+  const plain = plainFile(file);
+  return plain === LIBRARY_BUNDLE || plain.startsWith(LIBRARY);
 }
 
 function plainFile(file: string): string {

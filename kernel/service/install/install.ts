@@ -3,7 +3,7 @@ import { existsSync } from "node:fs";
 import { packageVersion } from "../info.ts";
 import { InstallError } from "./errors.ts";
 import { thisMachine } from "./folders.ts";
-import { isOurs, kernelEntry, kernelspec, kernelspecFiles, readKernelspec } from "./kernelspec.ts";
+import { isOurs, kernelModule, kernelspec, kernelspecFiles, readKernelspec } from "./kernelspec.ts";
 import { readOptions } from "./options.ts";
 import { place, takeAway } from "./place.ts";
 
@@ -11,9 +11,9 @@ import { place, takeAway } from "./place.ts";
 export function install(args: readonly string[]): number {
   return reporting(() => {
     const { target, env, everyone } = readOptions("install", args, thisMachine());
-    if (!existsSync(kernelEntry)) {
+    if (!existsSync(kernelModule)) {
       throw new InstallError({
-        subject: kernelEntry,
+        subject: kernelModule,
         given: "no such file",
         expected: "the built kernel",
         hint: "Run npm run build.",

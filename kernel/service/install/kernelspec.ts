@@ -12,8 +12,11 @@ export interface Kernelspec {
   readonly metadata: Readonly<Record<string, unknown>>;
 }
 
-/** The file that a host starts; made by the build. */
-export const kernelEntry = path.join(packageRoot, "dist", "kernel", "service", "main.js");
+/** The file that a host starts. */
+export const kernelEntry = path.join(packageRoot, "kernel", "bin", "kernel.cjs");
+
+/** The file behind it, made by the build. */
+export const kernelModule = path.join(packageRoot, "dist", "kernel", "service", "main.js");
 
 const LOGOS = ["logo-32x32.png", "logo-64x64.png", "logo-svg.svg"];
 

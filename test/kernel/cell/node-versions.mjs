@@ -27,7 +27,7 @@ function binary(version) {
 const failed = versions.filter((version) => {
   const node = binary(version);
   console.log(`\nNode ${version}`);
-  run(node, ["dist/kernel/cell/snapshot/build.js"]);
+  run(node, ["kernel/bin/setup.mjs"]);
   const project = slow ? "slow" : "common";
   return !run(node, ["node_modules/vitest/vitest.mjs", "run", "--project", project, "test/kernel/cell"]);
 });

@@ -5,9 +5,10 @@ import path from "node:path";
 import { afterAll, expect, it } from "vitest";
 import { createHistoryFile, historyFolder } from "../../../../kernel/service/history/file.ts";
 import { openHistory } from "../../../../kernel/service/history/store.ts";
-import { build, KERNEL_ENTRY } from "../../process.ts";
+import { kernelModule } from "../../../../kernel/service/install/kernelspec.ts";
+import { build } from "../../process.ts";
 
-const dist = (name: string) => path.join(path.dirname(KERNEL_ENTRY), "history", name);
+const dist = (name: string) => path.join(path.dirname(kernelModule), "history", name);
 const base = mkdtempSync(path.join(tmpdir(), "halfperiod history "));
 afterAll(() => rmSync(base, { recursive: true }));
 const fresh = () => path.join(mkdtempSync(path.join(base, "home ")), "halfperiod", "history");
@@ -95,7 +96,7 @@ it("a disk that takes no more is no failure, and says so once — oracle: a limi
     process.stdout.write(String(history.entries().length));`;
   const limited = 'trap "" XFSZ; ulimit -f 1; exec "$0" --input-type=module -e "$1"';
   const { stdout, stderr } = spawnSync("bash", ["-c", limited, process.execPath, code], { encoding: "utf8" });
-  expect(stdout).toBe("20");
+  expect(stdout, stderr).toBe("20");
   expect(stderr).toMatch(/^halfperiod: the history cannot be kept \(EFBIG\).*\n$/);
   const next = await session(folder);
   expect(next.entries().length).toBeGreaterThan(5);

@@ -160,11 +160,11 @@ export class NotebookHost implements TS.LanguageServiceHost {
   }
 
   directoryExists(directory: string): boolean {
-    return this.#isOpen(join(directory, "x")) && ts.sys.directoryExists(directory);
+    return this.#isOpen(directory) && ts.sys.directoryExists(directory);
   }
 
   getDirectories(directory: string): string[] {
-    return this.#isOpen(join(directory, "x")) ? ts.sys.getDirectories(directory) : [];
+    return this.#isOpen(directory) ? ts.sys.getDirectories(directory) : [];
   }
 
   realpath(file: string): string {
@@ -205,7 +205,7 @@ export class NotebookHost implements TS.LanguageServiceHost {
     const { onlyIn } = this.#places;
     if (!onlyIn) return true;
     const real = ts.sys.realpath?.(file) ?? file;
-    return onlyIn.some((folder) => real.startsWith(`${folder}/`) || real.startsWith(`${folder}\\`));
+    return onlyIn.some((folder) => real === folder || real.startsWith(`${folder}/`) || real.startsWith(`${folder}\\`));
   }
 
   /** Files of packages and of the library do not change while a notebook runs; those of the user may. */

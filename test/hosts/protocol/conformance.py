@@ -2,8 +2,11 @@
 
 Each test stands for one rule of the messaging protocol; the text of the rule is its docstring.
 """
+import json
 import os
+import random
 import signal
+import socket
 import subprocess
 import sys
 import tempfile
@@ -44,6 +47,31 @@ def gone(pids, seconds):
     return not any(alive(pid) for pid in pids)
 
 
+class Gate:
+    """A file for which a cell waits without yielding, so that a test decides when the cell goes on."""
+
+    def __init__(self):
+        self.path = os.path.join(tempfile.mkdtemp(prefix="gate "), "open")
+
+    @property
+    def wait(self):
+        """TypeScript that computes until the gate is open."""
+        return f'{{ const fs = await import("node:fs"); while (!fs.existsSync({json.dumps(self.path)})); }}'
+
+    def open(self):
+        open(self.path, "w").close()
+
+
+def at_best(seconds, attempt, tries=3):
+    """The bound holds on a machine that is not busy: of some tries one must keep it. What happens must be right in each."""
+    took = []
+    while len(took) < tries and (not took or min(took) > seconds):
+        started = time.time()
+        attempt()
+        took.append(time.time() - started)
+    assert min(took) <= seconds, f"{took} s, expected {seconds} s"
+
+
 def start(**options):
     manager = KernelManager(kernel_name="halfperiod")
     manager.start_kernel(**options)
@@ -51,6 +79,14 @@ def start(**options):
     client.start_channels()
     client.wait_for_ready(timeout=SLOW)
     return manager, client
+
+
+def hears(client, msg_id, kind):
+    """The next message of a kind that the request causes."""
+    while True:
+        message = client.get_iopub_msg(timeout=SLOW)
+        if message["parent_header"].get("msg_id") == msg_id and message["msg_type"] == kind:
+            return message
 
 
 class Exchange:
@@ -105,6 +141,10 @@ class Shared(unittest.TestCase):
     def run_cell(self, code, timeout=SLOW, **options):
         return Exchange(self.client, self.client.execute(code, **options), timeout=timeout)
 
+    def client_hears(self, msg_id, kind):
+        """Waits for a message of a kind that the request causes."""
+        return hears(self.client, msg_id, kind)
+
     def ask(self, kind, content, channel="shell"):
         message = self.client.session.msg(kind, content)
         (self.client.control_channel if channel == "control" else self.client.shell_channel).send(message)
@@ -137,16 +177,11 @@ class Execute(Shared):
 
     def test_live_output(self):
         """text goes out while the cell computes without yielding"""
-        msg_id = self.client.execute('console.log("early"); const until = Date.now() + 1500; while (Date.now() < until); "done"')
-        sent = time.time()
-        while True:
-            message = self.client.get_iopub_msg(timeout=SLOW)
-            if message["parent_header"].get("msg_id") == msg_id and message["msg_type"] == "stream":
-                break
-        early = time.time()
-        rest = Exchange(self.client, msg_id)
-        self.assertGreater(time.time() - early, 0.8, f"came {early - sent} s after sending")
-        self.assertEqual(rest.content["status"], "ok")
+        gate = Gate()
+        msg_id = self.client.execute(f'console.log("early"); {gate.wait} "done"')
+        self.client_hears(msg_id, "stream")
+        gate.open()
+        self.assertEqual(Exchange(self.client, msg_id).content["status"], "ok")
 
     def test_silent(self):
         """silent: nothing but busy and idle, no count, no history"""
@@ -202,9 +237,12 @@ class Execute(Shared):
 
     def test_abort(self):
         """what has arrived when a cell fails is answered unrun; other requests are served; later cells run"""
-        ids = [self.client.execute('await new Promise((r) => setTimeout(r, 50)); throw new Error("first")')]
+        gate = Gate()
+        ids = [self.client.execute(f'{gate.wait} throw new Error("first")')]
         ids += [self.client.execute(f'console.log("never {i}")') for i in range(20)]
         info = self.client.kernel_info()
+        time.sleep(1)  # for what was sent to arrive: the cell waits, so nothing here can be late
+        gate.open()
         replies = {}
         while len(replies) < len(ids) + 1:
             message = self.client.get_shell_msg(timeout=SLOW)
@@ -326,26 +364,33 @@ class Requests(Shared):
             self.assertEqual(done.order, ["busy", "idle"])
 
     def test_control_while_busy(self):
-        """control answers at once while a cell computes without yielding"""
-        msg_id = self.client.execute("const end = Date.now() + 1500; while (Date.now() < end);")
-        time.sleep(0.5)
-        started = time.time()
-        self.ask("kernel_info_request", {}, "control")
-        self.assertLess(time.time() - started, 0.7)
+        """control answers while a cell computes without yielding: the cell goes on only after the answer"""
+        gate = Gate()
+        msg_id = self.client.execute(f'console.log("begun"); {gate.wait}')
+        self.client_hears(msg_id, "stream")
+        for _ in range(10):
+            self.ask("kernel_info_request", {}, "control")
+        gate.open()
         Exchange(self.client, msg_id)
 
     def test_heartbeat_while_busy(self):
-        """the heartbeat answers within a second while a cell computes and the checker is busy"""
-        msg_id = self.client.execute("const stop = Date.now() + 1500; while (Date.now() < stop);")
-        socket = zmq.Context.instance().socket(zmq.REQ)
-        socket.linger = 0
-        socket.connect(f"tcp://{self.manager.ip}:{self.manager.hb_port}")
-        for _ in range(20):
-            socket.send(b"beat")
-            self.assertTrue(socket.poll(1000))
-            self.assertEqual(socket.recv(), b"beat")
-            time.sleep(0.05)
-        socket.close()
+        """the heartbeat answers, byte for byte, while a cell computes and the checker is busy"""
+        gate = Gate()
+        msg_id = self.client.execute(f'console.log("begun"); {gate.wait}')
+        self.client_hears(msg_id, "stream")
+        beats = zmq.Context.instance().socket(zmq.REQ)
+        beats.linger = 0
+        beats.connect(f"tcp://{self.manager.ip}:{self.manager.hb_port}")
+
+        def beat():
+            sent = os.urandom(9)
+            beats.send(sent)
+            self.assertTrue(beats.poll(60_000))
+            self.assertEqual(beats.recv(), sent)
+
+        at_best(0.25, beat, tries=20)
+        gate.open()
+        beats.close()
         Exchange(self.client, msg_id)
 
     def test_completion_positions(self):
@@ -400,11 +445,12 @@ class Requests(Shared):
             (")", "invalid"),
         ):
             with self.subTest(code=code):
-                started = time.time()
-                content = self.ask("is_complete_request", {"code": code}).content
-                self.assertLess(time.time() - started, 1)
-                self.assertEqual(content["status"], status)
-                self.assertEqual("indent" in content, status == "incomplete")
+                def attempt():
+                    content = self.ask("is_complete_request", {"code": code}).content
+                    self.assertEqual(content["status"], status)
+                    self.assertEqual("indent" in content, status == "incomplete")
+
+                at_best(1, attempt)
 
     def test_history(self):
         """history by tail, range and search, oldest first, with the real session number"""
@@ -455,11 +501,225 @@ class Requests(Shared):
         other.load_connection_file()
         other.start_channels()
         other.wait_for_ready(timeout=SLOW)
-        mine, theirs = self.client.execute("const mine = 1; mine"), other.execute("const theirs = 2; theirs")
-        mine_done, theirs_done = Exchange(self.client, mine), Exchange(other, theirs)
-        self.assertEqual(mine_done.content["status"], "ok")
-        self.assertEqual(theirs_done.content["status"], "ok")
+        sent = [(who, who.execute(f"{n}")) for n in range(50) for who in (self.client, other)]
+        for listener in (self.client, other):
+            idle = set()
+            while len(idle) < len(sent):
+                message = listener.get_iopub_msg(timeout=SLOW)
+                if message["content"].get("execution_state") == "idle":
+                    idle |= {message["parent_header"]["msg_id"]} & {msg_id for _, msg_id in sent}
+        for client in (self.client, other):
+            got = [client.get_shell_msg(timeout=SLOW) for _ in range(50)]
+            self.assertEqual([m["parent_header"]["msg_id"] for m in got], [i for who, i in sent if who is client])
+            self.assertEqual({m["content"]["status"] for m in got}, {"ok"})
         other.stop_channels()
+
+
+class Wire(Shared):
+    """What lies below the client: sockets, frames and bytes, from outside the process."""
+
+    def connection(self):
+        with open(self.manager.connection_file) as file:
+            return json.load(file)
+
+    def raw(self, kind, channel, **options):
+        connected = zmq.Context.instance().socket(kind)
+        connected.linger = 5000
+        for name, value in options.items():
+            setattr(connected, name, value)
+        connected.connect(f"tcp://127.0.0.1:{self.connection()[channel + '_port']}")
+        self.addCleanup(connected.close)
+        return connected
+
+    def frames(self, kind, content, **header):
+        message = self.client.session.msg(kind, content)
+        message["header"].update(header)
+        return message["header"]["msg_id"], self.client.session.serialize(message)
+
+    def unharmed(self):
+        """shell and control answer; nothing was published but what the two questions cause"""
+        ids = []
+        for channel in ("shell", "control"):
+            done = self.ask("kernel_info_request", {}, channel)
+            self.assertEqual(done.content["status"], "ok")
+            ids.append(done.id)
+        self.assertEqual(self.run_cell("6 * 7").of("execute_result")[0]["data"]["text/plain"], "42")
+
+    def published(self):
+        """what has come on iopub since the last look, welcomes left out"""
+        heard = []
+        while True:
+            try:
+                heard.append(self.client.get_iopub_msg(timeout=0.3)["msg_type"])
+            except Empty:
+                return [kind for kind in heard if kind != "iopub_welcome"]
+
+    def test_welcome(self):
+        """each subscription is welcomed with its own topic, the same topic a second time too"""
+        for topic in (b"", b"", b"stream.stdout", "π".encode()):
+            listener = self.raw(zmq.SUB, "iopub")
+            listener.subscribe(topic)
+            frames = listener.recv_multipart()
+            while json.loads(frames[3])["msg_type"] != "iopub_welcome":
+                frames = listener.recv_multipart()
+            self.assertEqual((frames[0], frames[1]), (topic, b"<IDS|MSG>"))
+            self.assertEqual(json.loads(frames[4]), {})
+            self.assertEqual(json.loads(frames[6]), {"subscription": topic.decode()})
+
+    def test_frames(self):
+        """identities come back in order, binary or empty; one topic on iopub; the parent is the header as sent"""
+        listener = self.raw(zmq.SUB, "iopub")
+        listener.subscribe(b"status")
+        shell = self.raw(zmq.DEALER, "shell")
+        listener.recv_multipart()
+        _, frames = self.frames("kernel_info_request", {}, version="5.9", more={"α": [1, None]})
+        shell.send_multipart([b"via", b"", b"\x00\xff", *frames, b"a buffer", b""])
+        reply = shell.recv_multipart()
+        self.assertEqual(reply[:4], [b"via", b"", b"\x00\xff", b"<IDS|MSG>"])
+        header = json.loads(reply[5])
+        self.assertEqual(set(header), {"msg_id", "session", "username", "date", "msg_type", "version"})
+        self.assertTrue(all(isinstance(value, str) for value in header.values()))
+        self.assertEqual(json.loads(reply[6]), json.loads(frames[2]))
+        busy = listener.recv_multipart()
+        self.assertEqual((busy[0], busy[1]), (b"status", b"<IDS|MSG>"))
+        self.assertEqual(json.loads(busy[4]), json.loads(frames[2]))
+
+    def test_unknown_types(self):
+        """unknown types are tolerated on shell and control: busy, idle, no reply"""
+        for channel in (self.client.shell_channel, self.client.control_channel):
+            for kind in ("unheard_request", "__proto__", "constructor", "create_subshell_request", "debug_request"):
+                message = self.client.session.msg(kind, {})
+                channel.send(message)
+                heard = [hears(self.client, message["header"]["msg_id"], "status") for _ in range(2)]
+                self.assertEqual([m["content"]["execution_state"] for m in heard], ["busy", "idle"])
+        self.unharmed()
+
+    def test_garbage(self):
+        """garbage frames on each socket: no effect, and the next request is served"""
+        rng = random.Random(7)
+        for channel in ("shell", "control", "stdin", "hb"):
+            sender = self.raw(zmq.DEALER, channel)
+            for frames in ([b""], [b"<IDS|MSG>"], [b"a", b"<IDS|MSG>", b"", b"", b"", b""], [b"<IDS|MSG>"] * 300):
+                sender.send_multipart(frames)
+            for _ in range(100):
+                sender.send_multipart([rng.randbytes(rng.randrange(300)) for _ in range(rng.randrange(1, 9))])
+        upstream = self.raw(zmq.XSUB, "iopub")
+        for data in (b"", b"\x02", b"\x00none", b"\x01\xff\xfe", rng.randbytes(500)):
+            upstream.send(data)
+        self.unharmed()
+
+    def test_wrong_keys(self):
+        """a wrong key, no signature, a changed byte: not run, not answered, nothing published"""
+        _, good = self.frames("execute_request", {"code": 'throw new Error("forged")'})
+        at = good.index(b"<IDS|MSG>")
+        wrong = [[*good[: at + 1], b"0" * 64, *good[at + 2 :]], [*good[: at + 1], b"", *good[at + 2 :]]]
+        wrong.append([*good[:-1], good[-1].replace(b"forged", b"Forged")])
+        _, shutdown = self.frames("shutdown_request", {"restart": False})
+        wrong.append([*shutdown[: at + 1], shutdown[at + 1][::-1], *shutdown[at + 2 :]])
+        self.published()
+        for channel in ("shell", "control"):
+            sender = self.raw(zmq.DEALER, channel, rcvtimeo=300)
+            for frames in wrong:
+                sender.send_multipart(frames)
+            with self.assertRaises(zmq.Again):
+                sender.recv_multipart()
+        self.assertEqual(self.published(), [])
+        self.unharmed()
+
+    def test_replay(self):
+        """a recorded message works once, from whatever socket it comes again"""
+        self.run_cell("let replayed = 0")
+        msg_id, frames = self.frames("execute_request", {"code": "replayed += 1"})
+        first = self.raw(zmq.DEALER, "shell")
+        first.send_multipart(frames)
+        first.recv_multipart()
+        hears(self.client, msg_id, "execute_result")
+        for channel in ("shell", "shell", "control"):
+            self.raw(zmq.DEALER, channel).send_multipart(frames)
+        self.unharmed()
+        self.assertEqual(self.run_cell("replayed").of("execute_result")[0]["data"]["text/plain"], "1")
+
+    def test_huge_requests(self):
+        """JSON of many megabytes, nested thousands deep, with an endless name: an answer or a drop, and on it goes"""
+        big = self.run_cell(f'"{"x" * 5_000_000}".length')
+        self.assertEqual(big.of("execute_result")[0]["data"]["text/plain"], "5000000")
+        deep = json.loads("[" * 900 + "]" * 900)
+        self.assertEqual(self.ask("kernel_info_request", {"deep": deep}).content["status"], "ok")
+        self.assertEqual(self.ask("kernel_info_request", {"n" * 3_000_000: 1e300}).content["status"], "ok")
+        _, frames = self.frames("execute_request", {"code": "0"})
+        frames[-1] = b"[" * 2_000_000 + b"]" * 2_000_000
+        frames[frames.index(b"<IDS|MSG>") + 1] = self.client.session.sign(frames[-4:])
+        self.raw(zmq.DEALER, "shell").send_multipart(frames)
+        self.unharmed()
+
+    def test_half_messages(self):
+        """half greetings, half frames, old greetings, other protocols, clients that vanish in the middle: no effect"""
+        greeting = bytes([0xFF, 0, 0, 0, 0, 0, 0, 0, 1, 0x7F, 3, 1]) + b"NULL".ljust(20, b"\0") + b"\0" * 32
+        ready = bytes([4, 25]) + b"\x05READY\x0bSocket-Type\0\0\0\x06DEALER"
+        half = bytes([2]) + (1 << 40).to_bytes(8, "big") + b"only the beginning"
+        for channel in ("shell", "control", "stdin", "iopub", "hb"):
+            port = self.connection()[channel + "_port"]
+            for data in (b"", b"GET / HTTP/1.1\r\n\r\n", greeting[:5], greeting, greeting + ready, greeting + ready + half,
+                         bytes([1, 0, 6, 0]) + b"ABCDE", b"\xff" * 5000):
+                with socket.create_connection(("127.0.0.1", port)) as connected:
+                    connected.sendall(data)
+        self.unharmed()
+
+    def test_hundreds_of_connections(self):
+        """hundreds of connections at once, silent ones and asking ones, that all vanish"""
+        silent = [socket.create_connection(("127.0.0.1", self.connection()["shell_port"])) for _ in range(300)]
+        clients = [self.raw(zmq.DEALER, "shell") for _ in range(100)]
+        for each in clients:
+            each.send_multipart(self.frames("kernel_info_request", {})[1])
+        for each in clients[:50]:
+            self.assertIn(b"<IDS|MSG>", each.recv_multipart())
+        for each in clients:
+            each.close(linger=0)
+        self.unharmed()
+        for each in silent:
+            each.close()
+        self.unharmed()
+
+    def test_clients_that_vanish(self):
+        """a client that is gone before its reply, in a cell and at a question, disturbs nobody"""
+        for content in ({"code": "1"}, {"code": 'await ask("x?")', "allow_stdin": True}):
+            gone_client = self.raw(zmq.DEALER, "shell")
+            msg_id, frames = self.frames("execute_request", content)
+            gone_client.send_multipart(frames)
+            hears(self.client, msg_id, "execute_input")
+            gone_client.close(linger=0)
+            if "allow_stdin" in content:
+                self.manager.interrupt_kernel()
+        self.unharmed()
+
+    def test_addresses(self):
+        """it listens on the given address only"""
+        family = [self.manager.provisioner.pid, *descendants(self.manager.provisioner.pid)]
+        inodes = set()
+        for pid in family:
+            for fd in os.listdir(f"/proc/{pid}/fd"):
+                try:
+                    link = os.readlink(f"/proc/{pid}/fd/{fd}")
+                except FileNotFoundError:
+                    continue
+                if link.startswith("socket:["):
+                    inodes.add(link[8:-1])
+        listening = set()
+        for table in ("tcp", "tcp6"):
+            with open(f"/proc/net/{table}") as file:
+                for words in map(str.split, list(file)[1:]):
+                    if words[3] == "0A" and words[9] in inodes:
+                        listening.add((words[1].split(":")[0], int(words[1].split(":")[1], 16)))
+        ports = {port for name, port in self.connection().items() if name.endswith("_port")}
+        self.assertEqual(listening, {("0100007F", port) for port in ports})
+
+    def test_key_stays_secret(self):
+        """the key is on no command line and in no environment"""
+        key = self.connection()["key"].encode()
+        for pid in [self.manager.provisioner.pid, *descendants(self.manager.provisioner.pid)]:
+            for name in ("cmdline", "environ"):
+                with open(f"/proc/{pid}/{name}", "rb") as file:
+                    self.assertNotIn(key, file.read())
 
 
 class Control(unittest.TestCase):
@@ -488,16 +748,14 @@ class Control(unittest.TestCase):
             "for (;;) console.log(1)",
         ):
             with self.subTest(code=code):
-                msg_id = self.client.execute(code)
+                msg_id = self.client.execute(f'console.error("begun"); {code}')
                 queued = self.client.execute("1")
-                time.sleep(0.4)
-                started = time.time()
+                hears(self.client, msg_id, "stream")
                 self.manager.interrupt_kernel()
                 self.manager.interrupt_kernel()
                 done = Exchange(self.client, msg_id)
                 self.assertEqual(done.content["status"], "error")
-                self.assertEqual(len(done.of("error")), 1)
-                self.assertLess(time.time() - started, 8)
+                self.assertEqual((done.content["ename"], len(done.of("error"))), ("Interrupted", 1))
                 self.assertEqual(Exchange(self.client, queued).content["status"], "error")
                 self.assertEqual(self.run_cell("kept").of("execute_result")[0]["data"]["text/plain"], "41")
 
@@ -506,28 +764,43 @@ class Control(unittest.TestCase):
         self.run_cell("1")
         self.manager.interrupt_kernel()
         os.kill(self.pid, signal.SIGINT)
-        time.sleep(0.2)
+        for _ in range(3):  # behind the interrupts, as the kernel serves control in order and takes signals between
+            message = self.client.session.msg("kernel_info_request", {})
+            self.client.control_channel.send(message)
+            Exchange(self.client, message["header"]["msg_id"], "control")
         self.assertEqual(self.run_cell("2").content["status"], "ok")
-        msg_id = self.client.execute("for (;;);")
-        time.sleep(0.5)
+        msg_id = self.client.execute('console.log("begun"); for (;;);')
+        hears(self.client, msg_id, "stream")
         os.kill(self.pid, signal.SIGINT)
         self.assertEqual(Exchange(self.client, msg_id).content["status"], "error")
 
     def test_shutdown_while_busy(self):
         """shutdown while a cell spins: reply, exit within two seconds, with all children of user code"""
-        self.client.execute('(await import("node:child_process")).spawn("sleep", ["600"], { stdio: "ignore" }); for (;;);')
-        end = time.time() + SLOW
-        while time.time() < end and not any("sleep" in open(f"/proc/{p}/cmdline").read() for p in descendants(self.pid)):
-            time.sleep(0.05)
-        family = [self.pid, *descendants(self.pid)]
-        self.assertGreater(len(family), 3)
-        message = self.client.session.msg("shutdown_request", {"restart": False})
-        self.client.control_channel.send(message)
-        reply = self.client.get_control_msg(timeout=5)
-        self.assertEqual(reply["content"], {"status": "ok", "restart": False})
-        self.manager.provisioner.process.wait(timeout=3)
-        self.assertEqual(self.manager.provisioner.process.returncode, 0)
-        self.assertTrue(gone(family, 2), [p for p in family if alive(p)])
+
+        def attempt():
+            manager, client = start()
+            pid = manager.provisioner.pid
+            code = 'const child = (await import("node:child_process")).spawn("sleep", ["600"], { stdio: "ignore" });'
+            msg_id = client.execute(f"{code} console.log(child.pid); for (;;);")
+            child = int(hears(client, msg_id, "stream")["content"]["text"])
+            family = [pid, *descendants(pid)]
+            self.assertIn(child, family)
+            self.assertGreater(len(family), 3)
+            message = client.session.msg("shutdown_request", {"restart": False})
+            sent = time.time()
+            client.control_channel.send(message)
+            reply = client.get_control_msg(timeout=SLOW)
+            self.assertEqual(reply["content"], {"status": "ok", "restart": False})
+            manager.provisioner.process.wait(timeout=SLOW)
+            self.assertEqual(manager.provisioner.process.returncode, 0)
+            self.assertTrue(gone(family, SLOW), [p for p in family if alive(p)])
+            took.append(time.time() - sent)
+            client.stop_channels()
+
+        took = []
+        while len(took) < 3 and (not took or min(took) > 2):
+            attempt()
+        self.assertLess(min(took), 2)
 
     def test_signals(self):
         """SIGTERM and SIGHUP end the kernel in order, with its children"""
@@ -538,9 +811,9 @@ class Control(unittest.TestCase):
                 Exchange(client, client.execute("1"))
                 family = [pid, *descendants(pid)]
                 os.kill(pid, which)
-                manager.provisioner.process.wait(timeout=3)
+                manager.provisioner.process.wait(timeout=SLOW)
                 self.assertEqual(manager.provisioner.process.returncode, 0)
-                self.assertTrue(gone(family, 2))
+                self.assertTrue(gone(family, SLOW))
                 client.stop_channels()
 
     def test_killed_kernel(self):
@@ -549,7 +822,7 @@ class Control(unittest.TestCase):
         family = descendants(self.pid)
         self.assertGreater(len(family), 1)
         os.kill(self.pid, signal.SIGKILL)
-        self.assertTrue(gone(family, 3), [p for p in family if alive(p)])
+        self.assertTrue(gone(family, SLOW), [p for p in family if alive(p)])
 
     def test_restart(self):
         """a restart has a new session, counts from 1 and knows nothing"""
@@ -566,23 +839,30 @@ class Control(unittest.TestCase):
 class Process(unittest.TestCase):
     def test_dead_host(self):
         """kill -9 of the host ends the kernel and all its children within two seconds, idle or busy"""
-        for code in ("1", "for (;;);"):
+        for code in ('console.log("begun")', 'console.log("begun"); for (;;);'):
             with self.subTest(code=code):
-                host = f"""
+                took = []
+                while len(took) < 3 and (not took or min(took) > 2):
+                    host = f"""
 import os, time
 from jupyter_client.manager import start_new_kernel
 manager, client = start_new_kernel(kernel_name="halfperiod", startup_timeout=60)
 client.execute_interactive("0", timeout=60)
-client.execute({code!r}); time.sleep(1)
+msg_id = client.execute({code!r})
+while client.get_iopub_msg(timeout=60)["msg_type"] != "stream": pass
 print(manager.provisioner.pid, flush=True)
 time.sleep(600)
 """
-                process = subprocess.Popen([sys.executable, "-c", host], stdout=subprocess.PIPE)
-                kernel = int(process.stdout.readline())
-                family = [kernel, *descendants(kernel)]
-                process.kill()
-                process.wait()
-                self.assertTrue(gone(family, 2.2), [p for p in family if alive(p)])
+                    process = subprocess.Popen([sys.executable, "-c", host], stdout=subprocess.PIPE)
+                    kernel = int(process.stdout.readline())
+                    family = [kernel, *descendants(kernel)]
+                    self.assertGreater(len(family), 2)
+                    process.kill()
+                    killed = time.time()
+                    process.wait()
+                    self.assertTrue(gone(family, SLOW), [p for p in family if alive(p)])
+                    took.append(time.time() - killed)
+                self.assertLess(min(took), 2)
 
     def test_path_with_spaces(self):
         """the connection file may have spaces and letters in its path, and other ipc or tcp endpoints"""
@@ -595,6 +875,58 @@ time.sleep(600)
         self.assertEqual(Exchange(client, client.execute("1")).content["status"], "ok")
         client.stop_channels()
         manager.shutdown_kernel()
+
+    def test_restarts(self):
+        """restart after restart: no process is left, the ports are the same and free each time"""
+        manager, client = start()
+        ports = {name: getattr(manager, name) for name in ("shell_port", "iopub_port", "control_port", "hb_port")}
+        for turn in range(int(os.environ.get("HALFPERIOD_TEST_RESTARTS", "12"))):
+            if turn % 4 == 0:
+                Exchange(client, client.execute("1"))
+            family = [manager.provisioner.pid, *descendants(manager.provisioner.pid)]
+            manager.restart_kernel()
+            client.wait_for_ready(timeout=SLOW)
+            self.assertTrue(gone(family, SLOW), [p for p in family if alive(p)])
+            self.assertEqual(ports, {name: getattr(manager, name) for name in ports})
+        family = [manager.provisioner.pid, *descendants(manager.provisioner.pid)]
+        client.stop_channels()
+        manager.shutdown_kernel()
+        self.assertTrue(gone(family, SLOW))
+        for port in ports.values():
+            with socket.create_server(("127.0.0.1", port)):
+                pass
+
+    def test_taken_port(self):
+        """a taken port: one line and a status that is not zero, at once, and no other port is tried"""
+        with socket.create_server(("127.0.0.1", 0)) as taken:
+            manager = KernelManager(kernel_name="halfperiod")
+            manager.control_port = taken.getsockname()[1]
+            manager.cache_ports = False
+            manager.start_kernel(stderr=subprocess.PIPE)
+            process = manager.provisioner.process
+            said = process.stderr.read()
+            self.assertEqual(process.wait(timeout=SLOW), 1)
+            self.assertRegex(said.decode(), r"\Ahalfperiod: control socket: [^\n]* cannot be bound [^\n]*\n\Z")
+            manager.cleanup_connection_file()
+
+    def test_container(self):
+        """where the host is process 1 the kernel lives, and it ends with that host"""
+        unshare = ["unshare", "--pid", "--fork", "--mount-proc", "--kill-child"]
+        if subprocess.run([*unshare, "true"], capture_output=True).returncode:
+            self.skipTest("no namespaces here")
+        host = """
+import os, time
+from jupyter_client.manager import start_new_kernel
+assert os.getpid() == 1
+manager, client = start_new_kernel(kernel_name="halfperiod", startup_timeout=60)
+reply = client.execute_interactive("6 * 7", timeout=60)
+time.sleep(2)
+assert manager.is_alive() and client.execute_interactive("1", timeout=60)["content"]["status"] == "ok"
+manager.shutdown_kernel()
+print("lived", reply["content"]["status"])
+"""
+        done = subprocess.run([*unshare, sys.executable, "-c", host], capture_output=True, text=True)
+        self.assertIn("lived ok", done.stdout, done.stderr)
 
     def test_ipc(self):
         """the transport ipc works, and no socket file is left"""

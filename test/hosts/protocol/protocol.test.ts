@@ -25,7 +25,7 @@ describe.skipIf(absent !== "")("the protocol, seen from outside", () => {
     await expect(python("kernel_test.py")).resolves.toBeDefined();
   }, 120_000);
 
-  it.each(["Execute", "Output", "Requests", "Control", "Process"])(
+  it.each(["Execute", "Output", "Requests", "Wire", "Control", "Process"])(
     "keeps the protocol's rules: %s — oracle: the text of each rule, asked through jupyter_client",
     async (group) => {
       await expect(python("conformance.py", group)).resolves.toBeDefined();

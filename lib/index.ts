@@ -65,6 +65,7 @@ export { Morphism } from "./surface/morphism.ts";
 export { Point } from "./surface/point.ts";
 export { Quartic } from "./surface/quartic.ts";
 export { QuasiPeriodicFunction } from "./surface/quasi-periodic-function.ts";
+export { routesOf, SecondRoute, secondRoute } from "./surface/second-route.ts";
 export { TorusPoint } from "./surface/torus-point.ts";
 export { PlanePoint } from "./surface/variety.ts";
 

@@ -83,7 +83,7 @@ export function atCell(
   const upward = disc.imag(at.v).man >= 0n;
   const v = upward ? at.v : disc.neg(at.v);
   const poles = wanted.some((name) => name !== "sigma");
-  if (poles && disc.containsZero(v)) throw pole(at);
+  if (poles && disc.containsZero(v)) throw atCellPole(at);
   const wp = sharpness(l, v, prec + 16);
   const { sin, cos } = disc.sinCos(disc.mulBall(v, ball.pi(wp + 8), wp), wp);
   const order = wanted.includes("prime") ? 3 : wanted.includes("wp") ? 2 : wanted.includes("zeta") ? 1 : 0;
@@ -91,7 +91,7 @@ export function atCell(
   const out: { [K in Wanted]?: Disc } = {};
   const odd = (x: Disc) => (upward ? x : disc.neg(x));
   if (poles) {
-    if (disc.containsZero(sin)) throw pole(at);
+    if (disc.containsZero(sin)) throw atCellPole(at);
     Object.assign(out, fromLogarithm(l, v, derivatives(sin, cos, sums, wanted, wp), prec));
     if (out.prime) out.prime = odd(out.prime);
     if (out.zeta) out.zeta = shiftedZeta(l, at, odd(out.zeta), prec);
@@ -204,6 +204,7 @@ export class LatticePointError extends PoleError {
   }
 }
 
-function pole({ m1, m2 }: CellArgument): PoleError {
+/** The error for an argument that meets a lattice point. */
+export function atCellPole({ m1, m2 }: CellArgument): PoleError {
   return new LatticePointError(m1, m2, `${m1}·r1 + ${m2}·r2 of the reduced basis`);
 }

@@ -23,6 +23,16 @@ import { latticePointText } from "./coordinates-text.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
 import { exactRational } from "./quantity.ts";
 import { logarithm } from "./real-logarithm.ts";
+import {
+  DISCRIMINANT_ROUTES,
+  functionRoutes,
+  INVARIANT_ROUTES,
+  J_ROUTES,
+  LOGARITHM_ROUTES,
+  POINT_ROUTES,
+  QUASI_PERIOD_ROUTES,
+  ROOT_ROUTES,
+} from "./routes.ts";
 import { pointAt, valuesAtPoint } from "./torus.ts";
 import { weierstrassValues } from "./values.ts";
 
@@ -34,15 +44,24 @@ function real(d: Disc): Enclosure {
 function operation(
   name: string,
   evaluate: (lattice: PeriodLattice, rest: readonly unknown[], at: At, prec: number) => Disc,
+  routes: readonly Operation[] = [],
 ): Operation {
-  return { name, evaluate: ([lattice, ...rest], at, prec) => real(evaluate(lattice as PeriodLattice, rest, at, prec)) };
+  return {
+    name,
+    evaluate: ([lattice, ...rest], at, prec) => real(evaluate(lattice as PeriodLattice, rest, at, prec)),
+    routes,
+  };
 }
 
 /** [lattice, r, s] or [lattice, r, s, number]: r ω1 + s ω2 (+ number). */
-export const POINT = operation("point", (lattice, [r, s, rest], at, prec) => {
-  const point = pointAt(lattice, [r as Rational, s as Rational], prec + 8);
-  return rest === undefined ? point : disc.add(point, asDisc(at(rest)), prec);
-});
+export const POINT = operation(
+  "point",
+  (lattice, [r, s, rest], at, prec) => {
+    const point = pointAt(lattice, [r as Rational, s as Rational], prec + 8);
+    return rest === undefined ? point : disc.add(point, asDisc(at(rest)), prec);
+  },
+  POINT_ROUTES,
+);
 
 /** [lattice]: ω2/ω1. */
 export const TAU = operation("period ratio", (lattice, _rest, _at, prec) => {
@@ -54,16 +73,24 @@ export const TAU = operation("period ratio", (lattice, _rest, _at, prec) => {
 export const REDUCED_TAU = operation("reduced period ratio", (lattice, _rest, _at, prec) => reduced(lattice, prec).tau);
 
 /** [lattice, 2 or 3]: g2, g3. */
-export const INVARIANT = operation("invariant", (lattice, [index], _at, prec) => {
-  const { g2, g3 } = invariants(lattice, prec);
-  return index === 2 ? g2 : g3;
-});
+export const INVARIANT = operation(
+  "invariant",
+  (lattice, [index], _at, prec) => {
+    const { g2, g3 } = invariants(lattice, prec);
+    return index === 2 ? g2 : g3;
+  },
+  INVARIANT_ROUTES,
+);
 
 /** [lattice, 1, 2 or 3]: a root of the cubic by its half-period. */
-export const ROOT = operation("root", (lattice, [index], _at, prec) => {
-  const root = roots(lattice, prec)[(index as number) - 1]!;
-  return isRealRoot(lattice, index as 1 | 2 | 3) ? ontoReal(root) : root;
-});
+export const ROOT = operation(
+  "root",
+  (lattice, [index], _at, prec) => {
+    const root = roots(lattice, prec)[(index as number) - 1]!;
+    return isRealRoot(lattice, index as 1 | 2 | 3) ? ontoReal(root) : root;
+  },
+  ROOT_ROUTES,
+);
 
 /** Whether conjugation fixes the half-period of the root modulo the lattice. */
 export function isRealRoot(lattice: PeriodLattice, index: 1 | 2 | 3): boolean {
@@ -75,28 +102,40 @@ export function isRealRoot(lattice: PeriodLattice, index: 1 | 2 | 3): boolean {
 }
 
 /** [lattice, 1 or 2]: η1, η2. */
-export const QUASI_PERIOD = operation("quasi-period", (lattice, [index], _at, prec) => {
-  const eta = quasiPeriods(lattice, prec)[(index as number) - 1]!;
-  const w = index === 1 ? periods(lattice, 64).w1 : periods(lattice, 64).w2;
-  if (!lattice.conjugation || w.axis === "plane") return eta;
-  return w.axis === "real" ? ontoReal(eta) : disc.imaginary(disc.imag(eta));
-});
+export const QUASI_PERIOD = operation(
+  "quasi-period",
+  (lattice, [index], _at, prec) => {
+    const eta = quasiPeriods(lattice, prec)[(index as number) - 1]!;
+    const w = index === 1 ? periods(lattice, 64).w1 : periods(lattice, 64).w2;
+    if (!lattice.conjugation || w.axis === "plane") return eta;
+    return w.axis === "real" ? ontoReal(eta) : disc.imaginary(disc.imag(eta));
+  },
+  QUASI_PERIOD_ROUTES,
+);
 
 /** [lattice]: Δ = g2³ − 27 g3². */
-export const DISCRIMINANT = operation("discriminant", (lattice, _rest, _at, prec) => {
-  const { given } = lattice;
-  if (given.kind === "invariants" && exactRational(given.g2) && exactRational(given.g3)) {
-    return discriminant(given.g2, given.g3, prec);
-  }
-  const value = reducedDiscriminant(reduced(lattice, prec));
-  return lattice.conjugation ? ontoReal(value) : value;
-});
+export const DISCRIMINANT = operation(
+  "discriminant",
+  (lattice, _rest, _at, prec) => {
+    const { given } = lattice;
+    if (given.kind === "invariants" && exactRational(given.g2) && exactRational(given.g3)) {
+      return discriminant(given.g2, given.g3, prec);
+    }
+    const value = reducedDiscriminant(reduced(lattice, prec));
+    return lattice.conjugation ? ontoReal(value) : value;
+  },
+  DISCRIMINANT_ROUTES,
+);
 
 /** [lattice]: j. */
-export const J = operation("j", (lattice, _rest, _at, prec) => {
-  const value = reducedJ(reduced(lattice, prec));
-  return lattice.conjugation ? ontoReal(value) : value;
-});
+export const J = operation(
+  "j",
+  (lattice, _rest, _at, prec) => {
+    const value = reducedJ(reduced(lattice, prec));
+    return lattice.conjugation ? ontoReal(value) : value;
+  },
+  J_ROUTES,
+);
 
 /** [lattice]: Im(ω2 conj ω1). */
 export const AREA = operation("area", (lattice, _rest, _at, prec) => {
@@ -115,8 +154,11 @@ export const COORDINATE = operation("coordinate", (lattice, [z, index], at, prec
 
 /** [lattice, z]: a Weierstrass function at a number. */
 function atNumber(name: string, wanted: Wanted): Operation {
-  const evaluate = operation(name, (lattice, [z], at, prec) =>
-    persistent(lattice, name, z, at, prec, (x, bits) => weierstrassValues(lattice, x, bits, [wanted])[wanted]!),
+  const evaluate = operation(
+    name,
+    (lattice, [z], at, prec) =>
+      persistent(lattice, name, z, at, prec, (x, bits) => weierstrassValues(lattice, x, bits, [wanted])[wanted]!),
+    functionRoutes(wanted, "number"),
   );
   return moving(evaluate, 1, (operands, at, prec) => derivativeOf(wanted, "number", operands, at, prec));
 }
@@ -148,18 +190,22 @@ function derivativeOf(
 
 /** [lattice, r, s] or [lattice, r, s, number]: the same at r ω1 + s ω2 (+ number). */
 function atPoint(name: string, wanted: Wanted): Operation {
-  const evaluate = operation(name, (lattice, [r, s, rest], at, prec) => {
-    const where = [r as Rational, s as Rational] as const;
-    if (rest === undefined) return valuesAtPoint(lattice, where, undefined, prec, [wanted])[wanted]!;
-    return persistent(
-      lattice,
-      name,
-      rest,
-      at,
-      prec,
-      (x, bits) => valuesAtPoint(lattice, where, x, bits, [wanted])[wanted]!,
-    );
-  });
+  const evaluate = operation(
+    name,
+    (lattice, [r, s, rest], at, prec) => {
+      const where = [r as Rational, s as Rational] as const;
+      if (rest === undefined) return valuesAtPoint(lattice, where, undefined, prec, [wanted])[wanted]!;
+      return persistent(
+        lattice,
+        name,
+        rest,
+        at,
+        prec,
+        (x, bits) => valuesAtPoint(lattice, where, x, bits, [wanted])[wanted]!,
+      );
+    },
+    functionRoutes(wanted, "point"),
+  );
   return moving(evaluate, 3, (operands, at, prec) => derivativeOf(wanted, "point", operands, at, prec));
 }
 
@@ -200,6 +246,8 @@ export const WEIERSTRASS: Readonly<Record<Wanted, { readonly number: Operation; 
 };
 
 /** [lattice, x, y]: z with ℘(z) = x, ℘′(z) = y. */
-export const LOGARITHM = operation("elliptic logarithm", (lattice, [x, y], at, prec) =>
-  logarithm(lattice, { x: asDisc(at(x)), y: asDisc(at(y)) }, prec),
+export const LOGARITHM = operation(
+  "elliptic logarithm",
+  (lattice, [x, y], at, prec) => logarithm(lattice, { x: asDisc(at(x)), y: asDisc(at(y)) }, prec),
+  LOGARITHM_ROUTES,
 );

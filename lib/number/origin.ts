@@ -26,6 +26,8 @@ export interface Operation {
    * operation has none that is known here.
    */
   differential?(operands: readonly unknown[], at: At, d: At, prec: number): Enclosure;
+  /** Other ways to the same value from the same operands, by another method each; for second opinions. */
+  readonly routes?: readonly Operation[];
 }
 
 export interface Origin {

@@ -3,6 +3,7 @@
 import type { ComplexMultiplication } from "../surface/complex-multiplication.ts";
 import type { Homothety } from "../surface/homothety.ts";
 import type { LaurentExpansion } from "../surface/laurent-expansion.ts";
+import type { SecondRoute } from "../surface/second-route.ts";
 import type { Kind, Show } from "./kind.ts";
 import { prose } from "./prose.ts";
 import { standingProse, standingText } from "./standing.ts";
@@ -69,5 +70,23 @@ export const multiplicationKind: Kind<ComplexMultiplication> = {
     kind: "complex multiplication",
     outcome: cm.outcome,
     discriminant: cm.discriminant === undefined ? null : String(cm.discriminant),
+  }),
+};
+
+/** Both values under each other, with their agreement. */
+export const secondRouteKind: Kind<SecondRoute> = {
+  text: (pair) => String(pair),
+  tex: (pair, show) =>
+    array("ll", [
+      [show.tex(pair.value), `\\text{${pair.operation}}`],
+      [show.tex(pair.other), `\\text{${pair.route}}`],
+      [pair.agree ? `\\text{agree within } 10^{${-pair.digits!}}` : "\\text{do not meet}", ""],
+    ]),
+  data: (pair, show) => ({
+    kind: "second route",
+    route: pair.route,
+    value: show.data(pair.value),
+    other: show.data(pair.other),
+    standing: pair.standing.kind,
   }),
 };

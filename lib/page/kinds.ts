@@ -19,6 +19,7 @@ import { Moved } from "../surface/moved.ts";
 import { Point } from "../surface/point.ts";
 import { QSeries } from "../surface/q-series.ts";
 import { QuasiPeriodicFunction } from "../surface/quasi-periodic-function.ts";
+import { SecondRoute } from "../surface/second-route.ts";
 import { TorsionSubgroup } from "../surface/torsion.ts";
 import { TorusPoint } from "../surface/torus-point.ts";
 import { PlaneCurve, PlanePoint } from "../surface/variety.ts";
@@ -27,7 +28,7 @@ import { curveKind, pointKind } from "./curve-kind.ts";
 import { Derivation } from "./derivation.ts";
 import { derivationKind } from "./derivation-kind.ts";
 import { quadraticKind, rationalKind } from "./exact-kind.ts";
-import { homothetyKind, laurentKind, multiplicationKind } from "./expansion-kind.ts";
+import { homothetyKind, laurentKind, multiplicationKind, secondRouteKind } from "./expansion-kind.ts";
 import { factorisationKind } from "./factorisation-kind.ts";
 import { figureKind } from "./figure-kind.ts";
 import { entry, type KindEntry, shape } from "./kind.ts";
@@ -62,6 +63,7 @@ export const KINDS: readonly KindEntry[] = [
   entry(LaurentExpansion, laurentKind),
   entry(Homothety, homothetyKind),
   entry(ComplexMultiplication, multiplicationKind),
+  entry(SecondRoute, secondRouteKind),
   entry(Jacobi, jacobiKind),
   entry(ClassPolynomial, classPolynomialKind),
   entry(QSeries, qSeriesKind),

@@ -6,6 +6,8 @@ export interface Birth {
   readonly origin?: Origin | undefined;
   readonly standing: NumberStanding;
   readonly source?: string | undefined;
+  /** The record of a chain that was too deep is gone: the value is what it is. */
+  readonly dropped?: boolean | undefined;
   /** Digits that a display shows, if not those of the context. */
   readonly asked?: number | undefined;
 }
@@ -16,6 +18,14 @@ export const BIRTHS: Readonly<Record<NumberStanding, Birth>> = {
   defined: { standing: "defined" },
   measured: { standing: "measured" },
   double: { standing: "double" },
+};
+
+/** The same for a value whose record is dropped. */
+export const DROPPED: Readonly<Record<NumberStanding, Birth>> = {
+  exact: { standing: "exact", dropped: true },
+  defined: { standing: "defined", dropped: true },
+  measured: { standing: "measured", dropped: true },
+  double: { standing: "double", dropped: true },
 };
 
 /** The standing of what is built from both: a double caps all, then a measured value; exact and defined ones give defined. */

@@ -1,10 +1,10 @@
 // Values as data: every number a string, radius rounded up, so that a stored value can be compared with a new one.
 import type { Ball } from "./ball.ts";
+import * as ball from "./ball.ts";
 import { bitsOf, provedDigits } from "./context.ts";
 import * as disc from "./disc.ts";
-import { absBig, bitLength } from "./fixed/bits.ts";
 import { type Exact, isDisc, type Node, type NumberStanding, refinable, refineEnclosure } from "./origin.ts";
-import { decimalBounds } from "./print.ts";
+import { beyond, decimalBounds } from "./print.ts";
 import { Quadratic } from "./quadratic.ts";
 import { Rational } from "./rational.ts";
 
@@ -29,8 +29,8 @@ export function valueData(x: Rational | Quadratic | (Node & { readonly asked?: n
   const e = sharp(x, digits);
   const { standing } = x;
   if (!isDisc(e)) {
-    const { middle, radius } = scientific(e);
-    return { kind: "real", standing, middle, radius };
+    const part = scientific(e);
+    return { kind: "real", standing, middle: part.middle, radius: radiusText(part) };
   }
   const re = scientific(disc.real(e));
   const im = scientific(disc.imag(e));
@@ -52,36 +52,40 @@ function exactData(x: Exact): ValueData {
 
 interface Scientific {
   readonly middle: string;
-  readonly radius: string;
+  /** In units of 10^place. */
+  readonly radius: bigint;
+  readonly place: number;
 }
 
 /** With four digits of radius. */
 function scientific(x: Ball): Scientific {
-  if (x.rad === 0) return exactDecimal(x);
+  if (ball.isZero(x) || (x.rad === 0 && !beyond(x))) return exactDecimal(x);
   const { middle, radius, place } = decimalBounds(x, 4);
-  return { middle: `${middle}e${place}`, radius: `${radius}e${place}` };
+  return { middle: `${middle}e${place}`, radius, place };
 }
 
 function exactDecimal(x: Ball): Scientific {
   // A dyadic number ends in decimals after -exp places.
-  const middle = x.exp >= 0 ? `${x.man << BigInt(x.exp)}` : `${x.man * 5n ** BigInt(-x.exp)}e${x.exp}`;
-  return { middle, radius: "0" };
+  const middle =
+    x.man === 0n ? "0" : x.exp >= 0 ? `${x.man << BigInt(x.exp)}` : `${x.man * 5n ** BigInt(-x.exp)}e${x.exp}`;
+  return { middle, radius: 0n, place: 0 };
+}
+
+function radiusText({ radius, place }: Scientific): string {
+  return radius === 0n ? "0" : `${radius}e${place}`;
 }
 
 /** A radius that holds the disc around the two decimal middles: the one of the shadows plus what the other middle is off. */
 function cornerOf(re: Scientific, im: Scientific, axis: disc.Axis): string {
-  if (axis === "real") return re.radius;
-  if (axis === "imaginary") return im.radius;
-  const a = Rational.parse(re.radius);
-  const b = Rational.parse(im.radius);
-  const larger = a.compare(b) >= 0 ? a : b;
+  if (axis === "real") return radiusText(re);
+  if (axis === "imaginary") return radiusText(im);
   // The shadows' radii are the disc's plus at most one unit of the place each: the corner is under larger·1.02 + two units; 5/4 covers it.
-  return upward(larger.times(Rational.of(5n, 4n)));
+  const larger = im.radius === 0n || (re.radius > 0n && size(re) >= size(im)) ? re : im;
+  return radiusText({ ...larger, radius: (larger.radius * 5n + 3n) / 4n });
 }
 
-function upward(q: Rational): string {
-  if (q.num === 0n) return "0";
-  const place = Math.floor((bitLength(absBig(q.num)) - bitLength(q.den)) * 0.30103) - 2;
-  const ten = place >= 0 ? Rational.of(10n ** BigInt(place)) : Rational.of(1n, 10n ** BigInt(-place));
-  return `${-q.div(ten).neg().floor()}e${place}`;
+/** A measure that grows with the radius: the sum of place and digits, then the radius itself among equal places. */
+function size({ radius, place }: Scientific): number {
+  const digits = `${radius}`;
+  return place + digits.length + Number(`0.${digits}`);
 }

@@ -5,7 +5,7 @@ import { Fraction } from "fraction.js";
 import { DomainError } from "../proof/errors.ts";
 import { bitsOf, checkedDigits } from "./context.ts";
 import { asBall, refineEnclosure } from "./origin.ts";
-import { decimalBounds } from "./print.ts";
+import { beyond, decimalBounds } from "./print.ts";
 import { Rational } from "./rational.ts";
 import { type Complex, type Numeric, Real } from "./values.ts";
 
@@ -25,7 +25,7 @@ export function toDecimal(x: Numeric, digits: number): Decimal {
   if (value.exact instanceof Rational)
     return new Own(`${value.exact.num}`).div(`${value.exact.den}`).toSignificantDigits(digits);
   const e = asBall(refineEnclosure(value, bitsOf(digits) + 8));
-  if (e.rad === 0)
+  if (e.rad === 0 && !beyond(e))
     return new Own(toDecimal(Rational.of(e.man), digits + 5)).times(new Own(2).pow(e.exp)).toSignificantDigits(digits);
   const { middle, place } = decimalBounds(e);
   return new Own(`${middle}e${place}`).toSignificantDigits(digits);

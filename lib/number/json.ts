@@ -39,6 +39,7 @@ function storedDisc({ re, im, radius, axis }: Extract<ValueData, { kind: "comple
 }
 
 function stored(middle: string, radius: string, scale?: Ball): Ball {
+  if (vast(middle) || vast(radius)) return storedVast(middle, radius);
   const m = Rational.parse(middle);
   const r = Rational.parse(radius);
   const least =
@@ -51,4 +52,19 @@ function stored(middle: string, radius: string, scale?: Ball): Ball {
   const prec = least === undefined ? bitLength(m.num) + bitLength(m.den) + 64 : Math.max(40, size - least + 40);
   const centre = ball.fromRational(m, prec);
   return r.num === 0n ? centre : ball.widenBy(centre, ball.fromRational(r, 40), prec);
+}
+
+/** Whether a decimal is too large or too small for an exact rational. */
+function vast(text: string): boolean {
+  return Math.abs(Number(text.split("e")[1] ?? 0)) > 100_000;
+}
+
+function storedVast(middle: string, radius: string): Ball {
+  const power = (text: string): Ball => {
+    const [digits, e] = text.split("e");
+    const n = BigInt(digits!);
+    const prec = bitLength(n) + 64;
+    return ball.mul(ball.fromInt(n), ball.pow(ball.fromInt(10), Number(e ?? 0), prec), prec);
+  };
+  return ball.widenBy(power(middle), power(radius), bitLength(BigInt(middle.split("e")[0]!)) + 64);
 }

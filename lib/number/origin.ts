@@ -54,6 +54,8 @@ export interface Node {
   readonly standing: NumberStanding;
   /** The text of a measured input. */
   readonly source?: string | undefined;
+  /** Whether its record was dropped, because the chain was too deep. */
+  readonly dropped?: boolean | undefined;
 }
 
 export function isNode(x: unknown): x is Node {
@@ -138,7 +140,10 @@ export function mayPass(error: unknown): error is LibraryError {
  */
 export function refineEnclosure(x: Node, prec: number, limit = 4 * prec + 4096): Enclosure {
   if (accuracy(x.enclosure) >= prec) return x.enclosure;
-  if (!refinable(x)) return x.enclosure;
+  if (!refinable(x)) {
+    if (x.dropped && x.standing === "defined") throw recordDropped(x.enclosure, prec);
+    return x.enclosure;
+  }
   let best = x.enclosure;
   let failure: LibraryError | undefined;
   for (let bits = prec + 32; ; bits = Math.min(2 * bits, limit)) {
@@ -146,6 +151,9 @@ export function refineEnclosure(x: Node, prec: number, limit = 4 * prec + 4096):
       const next = evaluate(x, bits);
       const stuck = x.standing !== "defined" && x.standing !== "exact" && accuracy(next) <= accuracy(best) + 1;
       if (accuracy(next) >= prec || (stuck && bits > prec + 32)) return next;
+      // Two rungs without a gain are what a dropped record below looks like.
+      if (accuracy(next) <= accuracy(best) + 1 && bits > prec + 32 && restsOnDropped(x))
+        throw recordDropped(next, prec);
       best = next;
       failure = undefined;
     } catch (error) {
@@ -155,7 +163,29 @@ export function refineEnclosure(x: Node, prec: number, limit = 4 * prec + 4096):
     if (bits >= limit) break;
   }
   if (failure) throw failure;
+  if (restsOnDropped(x)) throw recordDropped(best, prec);
   throw tooNear(best, prec, limit);
+}
+
+/** Whether x was built from a value whose record is gone. */
+function restsOnDropped(x: Node): boolean {
+  const seen = new Set<unknown>();
+  const visit = (node: unknown): boolean => {
+    if (!isNode(node) || seen.has(node)) return false;
+    seen.add(node);
+    return (node.dropped === true && !refinable(node)) || (node.origin?.operands ?? []).some(visit);
+  };
+  return visit(x);
+}
+
+function recordDropped(best: Enclosure, prec: number): PrecisionError {
+  const known = Math.max(0, Math.floor(accuracy(best) * 0.30103));
+  return new PrecisionError({
+    subject: "digits",
+    given: `${known} proved digits of a value whose record of operations was dropped, since it was longer than ${DEEPEST}`,
+    expected: `${Math.floor(prec * 0.30103)} proved digits`,
+    hint: "Compute the chain at that precision: atDigits(n, () => ...), or provedDigits(n) before it.",
+  });
 }
 
 function tooNear(best: Enclosure, prec: number, limit: number): PrecisionError {

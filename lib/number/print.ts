@@ -66,7 +66,7 @@ function leading(x: Ball): number {
 export function significant(x: Ball, digits: number): DecimalParts | undefined {
   if (ball.isZero(x)) return { sign: "", digits: "0", exponent: 0, ellipsis: false };
   if (ball.containsZero(x)) return undefined;
-  if (Math.abs(x.exp) > FAR) return far(x, digits);
+  if (beyond(x)) return far(x, digits);
   let e = leading(x);
   for (let tries = 0; tries < 3; tries++) {
     const found = placed(x, digits - 1 - e);
@@ -86,15 +86,23 @@ function parts(found: Placed, text: string, exponent: number): DecimalParts {
   return { sign, digits: text.replace(/0+$/, ""), exponent, ellipsis: false };
 }
 
-// |x| = 10^E·y with y = exp(ln|x| − E·ln 10).
-function far(x: Ball, digits: number): DecimalParts | undefined {
-  const prec = Math.ceil(digits * 3.33) + 64;
-  const log = ball.ln(ball.abs(x), prec + 48);
-  const ten = ball.ln(ball.fromInt(10), prec + 96);
+/** x = y·10^e with |2^exp of x| = t·10^e, 1/2 < t < 20: y is wider than x by a relative 2^-prec. No power of ten is built. */
+function rescaled(x: Ball, prec: number): { readonly y: Ball; readonly e: number } {
+  const log = ball.mulInt(ball.ln2(prec + 56), x.exp, prec + 56);
+  const ten = ball.ln(ball.fromInt(10), prec + 104);
   const e = Math.floor(ball.toDouble(ball.div(log, ten, 64)));
-  const rest = ball.sub(log, ball.mulInt(ten, e, prec + 48), prec + 8);
-  const y = ball.exp(rest, prec);
-  const found = significant(x.man < 0n ? ball.neg(y) : y, digits);
+  const t = ball.exp(ball.sub(log, ball.mulInt(ten, e, prec + 56), prec + 8), prec + 4);
+  return { y: ball.mul({ man: x.man, exp: 0, rad: x.rad }, t, prec + 4), e };
+}
+
+/** Bits that keep what is known of x. */
+function fullBits(x: Ball): number {
+  return bitLength(x.man) + 64;
+}
+
+function far(x: Ball, digits: number): DecimalParts | undefined {
+  const { y, e } = rescaled(x, Math.ceil(digits * 3.33) + 64);
+  const found = significant(y, digits);
   return found && { ...found, exponent: found.exponent + e, ellipsis: true };
 }
 
@@ -106,13 +114,26 @@ export function aroundZero(x: Ball): DecimalParts {
 /** The parts of x with the last digit at 10^-places; undefined if x is not known well enough. */
 export function atPlaces(x: Ball, places: number): DecimalParts | undefined {
   if (ball.isZero(x)) return { sign: "", digits: "0", exponent: 0, ellipsis: false };
-  if (Math.abs(x.exp) > FAR) return undefined;
+  // Under a hundredth of a unit: 0, without building the power of ten.
+  if (ball.magnitude(x) < -places * 3.3219280948873626 - 8) return nothing(places, false);
+  if (beyond(x)) {
+    const { y, e } = rescaled(x, Math.max(64, Math.ceil(ball.magnitude(x) + places * 3.3219280948873626) + 64));
+    const found = atPlaces(y, places + e);
+    return found && { ...found, exponent: found.exponent + e, ellipsis: true };
+  }
   const found = placed(x, places);
   if (!found) return undefined;
   const text = absBig(found.n).toString();
-  if (found.n === 0n)
-    return { sign: "", digits: "0".repeat(Math.max(1, places + 1)), exponent: 0, ellipsis: !found.whole };
+  if (found.n === 0n) return nothing(places, found.whole);
   return parts(found, text, text.length - 1 - places);
+}
+
+/** 0 with its last digit at 10^-places: "0.000..." or "0...e7". */
+function nothing(places: number, whole: boolean): DecimalParts {
+  if (whole) return { sign: "", digits: "0", exponent: 0, ellipsis: false };
+  return places >= 0
+    ? { sign: "", digits: "0".repeat(places + 1), exponent: 0, ellipsis: true }
+    : { sign: "", digits: "0", exponent: -places, ellipsis: true };
 }
 
 /** The decimal parts of a rational number: exact if it ends within `digits`, else cut with an ellipsis. */
@@ -139,8 +160,16 @@ export interface DecimalBounds {
   readonly place: number;
 }
 
-/** Two to four digits of radius, rounded up over what the rounding of the middle leaves, and the middle to the same place. Not for exact balls. */
+/**
+ * Two to four digits of radius, rounded up over what the rounding of the middle leaves, and the middle to the same place. Not for exact balls, unless
+ * their size is beyond powers of ten that can be built.
+ */
 export function decimalBounds(x: Ball, digits = 2): DecimalBounds {
+  if (beyond(x)) {
+    const { y, e } = rescaled(x, fullBits(x));
+    const bounds = decimalBounds(y, digits);
+    return { ...bounds, place: bounds.place + e };
+  }
   const radius = dyadic(BigInt(Math.ceil(x.rad * 2 ** 20)), x.exp - 20);
   const place = leading({ man: BigInt(Math.ceil(x.rad * 2 ** 20)), exp: x.exp - 20, rad: 0 }) + 1 - digits;
   const unit = place >= 0 ? Rational.of(10n ** BigInt(place)) : Rational.of(1n, 10n ** BigInt(-place));
@@ -150,13 +179,18 @@ export function decimalBounds(x: Ball, digits = 2): DecimalBounds {
   return { middle: n, radius: -total.neg().floor(), place };
 }
 
+/** Whether a number is too large or too small to be written out. */
+export function beyond(x: Ball): boolean {
+  return Math.abs(x.exp) > FAR;
+}
+
 function dyadic(man: bigint, exp: number): Rational {
   return exp >= 0 ? Rational.of(man << BigInt(exp)) : Rational.of(man, 1n << BigInt(-exp));
 }
 
 /** Midpoint and radius in decimals, x within them; see `decimalBounds`. */
 export function withRadius(x: Ball): DecimalParts {
-  if (x.rad === 0) return exactParts(x);
+  if (x.rad === 0 && (ball.isZero(x) || !beyond(x))) return exactParts(x);
   const { middle: n, radius, place } = decimalBounds(x);
   const total = radius.toString();
   const text = absBig(n).toString();

@@ -1,11 +1,10 @@
 // Plain text of values: exact, with digits that go on, or with a radius.
 
-import type { Ball } from "./ball.ts";
 import * as ball from "./ball.ts";
 import { bitsOf } from "./context.ts";
 import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
-import { asBall, asDisc, displayLimit, evaluate, mayPass, type Node, refinable } from "./origin.ts";
+import { asBall, asDisc, displayLimit, type Enclosure, evaluate, mayPass, type Node, refinable } from "./origin.ts";
 import {
   aroundZero,
   atPlaces,
@@ -35,24 +34,34 @@ function byRadius(x: Node): boolean {
 export function decimal(x: Node, digits: number): DecimalParts {
   if (x.exact instanceof Rational) return rationalParts(x.exact, digits);
   if (byRadius(x)) return withRadius(asBall(x.enclosure));
-  const known = risen(x, digits, (e) => significant(e, digits));
-  if (known) return known;
-  const best = asBall(bestOf(x, digits));
-  return ball.containsZero(best) ? aroundZero(best) : withRadius(best);
+  const { shown, best } = risen(x, digits, (e) => significant(asBall(e), digits));
+  if (shown) return shown;
+  const last = asBall(best);
+  return ball.containsZero(last) ? aroundZero(last) : withRadius(last);
 }
 
-function risen<T>(x: Node, digits: number, show: (e: Ball) => T | undefined): T | undefined {
-  const first = show(asBall(x.enclosure));
-  if (first !== undefined || !refinable(x)) return first;
+interface Risen<T> {
+  readonly shown: T | undefined;
+  /** The sharpest enclosure met. */
+  readonly best: Enclosure;
+}
+
+/** What `show` makes of the value at the first precision where it can, and the last enclosure that was computed on the way. */
+function risen<T>(x: Node, digits: number, show: (e: Enclosure) => T | undefined): Risen<T> {
+  const first = show(x.enclosure);
+  if (first !== undefined || !refinable(x)) return { shown: first, best: x.enclosure };
+  let best = x.enclosure;
   for (const bits of rungs(digits)) {
     const e = attempt(x, bits);
-    const found = e === undefined ? undefined : show(asBall(e));
-    if (found !== undefined) return found;
+    if (e === undefined) continue;
+    best = e;
+    const shown = show(e);
+    if (shown !== undefined) return { shown, best };
   }
-  return undefined;
+  return { shown: undefined, best };
 }
 
-function attempt(x: Node, bits: number): Ball | Disc | undefined {
+function attempt(x: Node, bits: number): Enclosure | undefined {
   try {
     return evaluate(x, bits);
   } catch (error) {
@@ -67,10 +76,6 @@ function rungs(digits: number): number[] {
   for (let bits = bitsOf(digits) + 32; bits < limit; bits *= 2) list.push(bits);
   list.push(limit);
   return list;
-}
-
-function bestOf(x: Node, digits: number): Ball | Disc {
-  return (refinable(x) ? attempt(x, displayLimit(digits)) : undefined) ?? x.enclosure;
 }
 
 /** Text of a real value, which `real` reads back. `asked` digits of an exact fraction only if they were asked of it. */
@@ -92,16 +97,8 @@ export interface ComplexParts {
 /** The decimals of a complex value: `digits` significant digits of |z|, both parts to the same place. */
 export function complexDecimal(x: Node, digits: number): ComplexParts {
   if (byRadius(x)) return measuredParts(asDisc(x.enclosure));
-  const first = complexParts(asDisc(x.enclosure), digits);
-  if (first) return first;
-  if (refinable(x)) {
-    for (const bits of rungs(digits)) {
-      const e = attempt(x, bits);
-      const found = e && complexParts(asDisc(e), digits);
-      if (found) return found;
-    }
-  }
-  return measuredParts(asDisc(bestOf(x, digits)));
+  const { shown, best } = risen(x, digits, (e) => complexParts(asDisc(e), digits));
+  return shown ?? measuredParts(asDisc(best));
 }
 
 function complexParts(d: Disc, digits: number): ComplexParts | undefined {

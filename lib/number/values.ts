@@ -3,7 +3,7 @@
 import { DomainError } from "../proof/errors.ts";
 import type { Ball } from "./ball.ts";
 import * as ball from "./ball.ts";
-import { BIRTHS, type Birth, both } from "./birth.ts";
+import { BIRTHS, type Birth, both, DROPPED } from "./birth.ts";
 import { bitsOf, checkedDigits, provedDigits, workingPrecision } from "./context.ts";
 import { type ValueData, valueData } from "./data.ts";
 import { compareNodes, equalNodes, undecided } from "./decisions.ts";
@@ -64,6 +64,11 @@ abstract class Value implements Node {
     return this.birth.source;
   }
 
+  /** Whether the record of how it was built is gone, because the chain was too deep. */
+  get dropped(): boolean {
+    return this.birth.dropped === true;
+  }
+
   /** Digits that a display shows, if not those of the context. */
   get asked(): number | undefined {
     return this.birth.asked;
@@ -105,11 +110,7 @@ export class Real extends Value {
   plus(other: ComplexNumeric): Real | Complex;
   plus(other: ComplexNumeric): Real | Complex {
     if (other instanceof Real && inexact(this, other)) {
-      return new Real(
-        ball.add(this.ball, other.ball, workingPrecision()),
-        jointBirth(this, other),
-        link(PLUS, this, other),
-      );
+      return joined(ball.add(this.ball, other.ball, workingPrecision()), PLUS, this, other);
     }
     return arithmetic(PLUS, "plus", this, other);
   }
@@ -118,11 +119,7 @@ export class Real extends Value {
   minus(other: ComplexNumeric): Real | Complex;
   minus(other: ComplexNumeric): Real | Complex {
     if (other instanceof Real && inexact(this, other)) {
-      return new Real(
-        ball.sub(this.ball, other.ball, workingPrecision()),
-        jointBirth(this, other),
-        link(MINUS, this, other),
-      );
+      return joined(ball.sub(this.ball, other.ball, workingPrecision()), MINUS, this, other);
     }
     return arithmetic(MINUS, "minus", this, other);
   }
@@ -131,11 +128,7 @@ export class Real extends Value {
   times(other: ComplexNumeric): Real | Complex;
   times(other: ComplexNumeric): Real | Complex {
     if (other instanceof Real && inexact(this, other)) {
-      return new Real(
-        ball.mul(this.ball, other.ball, workingPrecision()),
-        jointBirth(this, other),
-        link(TIMES, this, other),
-      );
+      return joined(ball.mul(this.ball, other.ball, workingPrecision()), TIMES, this, other);
     }
     return arithmetic(TIMES, "times", this, other);
   }
@@ -398,7 +391,7 @@ export class Complex extends Value {
 
 /** All that a value keeps besides its enclosure. */
 export function birthOf(x: Real | Complex): Birth {
-  return { exact: x.exact, origin: x.origin, standing: x.standing, source: x.source };
+  return { exact: x.exact, origin: x.origin, standing: x.standing, source: x.source, dropped: x.dropped };
 }
 
 function fromForeign(x: unknown, subject: string): Real | Complex {
@@ -445,7 +438,7 @@ export function apply(operation: Operation, operands: readonly unknown[], exact?
   const origin: Origin = { operation, operands, depth };
   const standing = jointStanding(operands);
   const enclosure = firstEvaluation({ enclosure: ball.zero, origin, standing }, prec);
-  return newValue(enclosure, BIRTHS[standing], depth > DEEPEST ? undefined : origin);
+  return depth > DEEPEST ? newValue(enclosure, DROPPED[standing]) : newValue(enclosure, BIRTHS[standing], origin);
 }
 
 function newValue(enclosure: Enclosure, birth: Birth, origin = birth.origin): Real | Complex {
@@ -472,15 +465,13 @@ function inexact(x: Real, y: Real): boolean {
   return x.exact === undefined || y.exact === undefined;
 }
 
-function link(operation: Operation, x: Real, y: Real): Origin | undefined {
+function joined(enclosure: Ball, operation: Operation, x: Real, y: Real): Real {
   const below = x.origin === undefined ? 0 : x.origin.depth;
   const beside = y.origin === undefined ? 0 : y.origin.depth;
   const depth = Math.max(below, beside) + 1;
-  return depth > DEEPEST ? undefined : { operation, operands: [x, y], depth };
-}
-
-function jointBirth(x: Real, y: Real): Birth {
-  return BIRTHS[both(x.standing, y.standing)];
+  const standing = both(x.standing, y.standing);
+  if (depth > DEEPEST) return new Real(enclosure, DROPPED[standing]);
+  return new Real(enclosure, BIRTHS[standing], { operation, operands: [x, y], depth });
 }
 
 function checkedExponent(n: number): number {

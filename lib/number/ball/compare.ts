@@ -1,7 +1,7 @@
-import { absBig, shift } from "../fixed/bits.ts";
+import { absBig, bitLength, shift } from "../fixed/bits.ts";
 import { Rational } from "../rational.ts";
 import { sub } from "./arithmetic.ts";
-import { type Ball, containsZero, sign } from "./data.ts";
+import { type Ball, containsZero, fromRational, sign } from "./data.ts";
 
 /** -1, 0 or 1 if every pair of numbers of the two enclosures stands so; undefined if they overlap (and are not both exact). */
 export function compare(x: Ball, y: Ball): -1 | 0 | 1 | undefined {
@@ -13,7 +13,7 @@ export function overlaps(x: Ball, y: Ball): boolean {
   return containsZero(difference(x, y));
 }
 
-/** Whether every number of y (a rational, or a ball) lies in x; decided exactly. */
+/** Whether every number of y (a rational, or a ball) lies in x; decided exactly, but for exponents a million apart: there a doubt is a no. */
 export function contains(x: Ball, y: Rational | Ball): boolean {
   if (y instanceof Rational) return containsRational(x, y);
   const exp = Math.min(x.exp, y.exp);
@@ -25,6 +25,7 @@ export function contains(x: Ball, y: Rational | Ball): boolean {
 }
 
 function containsRational(x: Ball, q: Rational): boolean {
+  if (Math.abs(x.exp) > 1_000_000) return containsFar(x, fromRational(q, bitLength(q.num) + bitLength(q.den) + 64));
   const up = x.exp > 0 ? 1n << shift(x.exp) : 1n;
   const down = x.exp < 0 ? 1n << shift(-x.exp) : 1n;
   const distance = absBig(q.num * down - x.man * q.den * up);

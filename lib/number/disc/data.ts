@@ -251,6 +251,8 @@ export function contains(x: Disc, y: Disc | Ball | Rational): boolean {
 
 function containsRational(x: Disc, q: Rational): boolean {
   if (x.axis !== "plane") return x.axis === "real" || q.num === 0n ? compareBall.contains(along(x), q) : false;
+  // With exponents a million apart a doubt is a no.
+  if (Math.abs(x.exp) > 1_000_000) return q.num === 0n && containsZero(x);
   // |z − q|² <= r² times den²·4^k, with everything an integer.
   const down = x.exp < 0 ? shift(-x.exp) : 0n;
   const up = x.exp > 0 ? shift(x.exp) : 0n;

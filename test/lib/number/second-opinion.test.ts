@@ -34,6 +34,11 @@ const REAL: Readonly<Record<string, (prec: number) => Ball>> = {
   "agm 1 1/1000000": (p) => ball.agm(at("1", p), at("1/1000000", p), p),
   "gamma 1/3": (p) => ball.gammaRational(Rational.of(1n, 3n), p),
   "gamma -7/4": (p) => ball.gammaRational(Rational.of(-7n, 4n), p),
+  "gamma 100001/3": (p) => ball.gammaRational(Rational.of(100001n, 3n), p),
+  "gamma -3001/2": (p) => ball.gammaRational(Rational.of(-3001n, 2n), p),
+  "asinh 2/3": (p) => ball.asinh(at("2/3", p), p),
+  "acosh 4/3": (p) => ball.acosh(at("4/3", p), p),
+  "atanh 2/3": (p) => ball.atanh(at("2/3", p), p),
 };
 
 const COMPLEX: Readonly<Record<string, (prec: number) => Disc>> = {
@@ -43,6 +48,11 @@ const COMPLEX: Readonly<Record<string, (prec: number) => Disc>> = {
   "sin 1+2i": (p) => disc.sinCos(z("1", "2", p), p).sin,
   "atan 1+i": (p) => disc.atan(z("1", "1", p), p),
   "agm 1 2i": (p) => disc.agm(disc.one, z("0", "2", p), p),
+  "asinh 1+2i": (p) => disc.asinh(z("1", "2", p), p),
+  "acosh 1/2+i": (p) => disc.acosh(z("1/2", "1", p), p),
+  "atanh 2-i": (p) => disc.atanh(z("2", "-1", p), p),
+  "fifth root of -3+i": (p) => disc.nthRoot(z("-3", "1", p), 5, p),
+  mul: (p) => disc.mul(z("1/3", "2/7", p), z("5/11", "-3/13", p), p),
 };
 
 interface Entry {

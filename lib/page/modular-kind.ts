@@ -53,6 +53,11 @@ export const movedKind: Kind<Moved> = {
       ["M\\tau", "=", show.tex(m.tau)],
       ["c\\tau + d", "=", show.tex(m.factor)],
       ["\\eta(M\\tau)", "=", `e^{2\\pi i \\cdot ${m.etaTwentyFourths}/24}\\, (c\\tau + d)^{1/2}\\, \\eta(\\tau)`],
+      ...m.theta.map(({ index, of, eighths }) => [
+        `\\theta_${index}\\left(\\tfrac{v}{c\\tau+d} \\middle| M\\tau\\right)`,
+        "=",
+        `e^{2\\pi i \\cdot ${eighths}/8}\\, (c\\tau + d)^{1/2}\\, e^{\\pi i c v^2/(c\\tau+d)}\\, \\theta_${of}(v | \\tau)`,
+      ]),
     ]);
   },
   data: (m, show) => ({

@@ -1,7 +1,5 @@
 // What an exact τ shows by exact arithmetic: whether q-series have real values, the reduced τ, zeros and values at quadratic points.
-import { classPolynomial } from "../function/class-polynomial.ts";
 import { type Matrix, reduceForm } from "../function/matrix.ts";
-import { reducedForms } from "../function/quadratic-forms.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { gcd, Rational } from "../number/rational.ts";
 import type { Complex, Real } from "../number/values.ts";
@@ -33,7 +31,7 @@ export function hasRealThetaNome(tau: Complex): boolean {
 }
 
 /** a τ² + b τ + c = 0 with coprime integers, a > 0. */
-function equation(tau: Quadratic): { a: bigint; b: bigint; c: bigint } {
+export function equation(tau: Quadratic): { a: bigint; b: bigint; c: bigint } {
   const [trace, norm] = [tau.trace().neg(), tau.norm()];
   const a = (trace.den * norm.den) / gcd(trace.den, norm.den);
   return { a, b: (trace.num * a) / trace.den, c: (norm.num * a) / norm.den };
@@ -68,17 +66,4 @@ export function vanishes(tau: Complex, k: number): boolean {
   if (!reduced.norm().equals(1)) return false;
   if (reduced.a.sign() === 0) return k % 4 === 2;
   return reduced.a.equals(Rational.of(-1, 2)) && k % 6 !== 0;
-}
-
-/** Beyond this no discriminant has class number one (Heegner, Baker, Stark). */
-const LAST_OF_CLASS_NUMBER_ONE = -163n;
-
-/** j(τ) where it is a rational number: τ of class number one. */
-export function exactJ(tau: Complex): Rational | undefined {
-  const exact = exactTau(tau);
-  if (!exact) return undefined;
-  const { a, b, c } = equation(exact);
-  const discriminant = b * b - 4n * a * c;
-  if (discriminant < LAST_OF_CLASS_NUMBER_ONE || reducedForms(discriminant).length !== 1) return undefined;
-  return Rational.of(-classPolynomial(discriminant).coefficients[1]!);
 }

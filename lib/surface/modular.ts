@@ -1,5 +1,4 @@
 import { classPolynomial } from "../function/class-polynomial.ts";
-import { etaMultiplier } from "../function/eta-multiplier.ts";
 import type { Matrix } from "../function/matrix.ts";
 import { reduction } from "../function/modular-action.ts";
 import type { Order, WeberName } from "../function/modular-forms.ts";
@@ -15,22 +14,15 @@ import {
   MOVED,
   WEBER,
 } from "../function/modular-operations.ts";
+import { multipliers } from "../function/multipliers.ts";
 import { type ExpansionName, eisensteinExpansion, expansionOf } from "../function/q-expansion.ts";
 import { workingPrecision } from "../number/context.ts";
 import { Rational } from "../number/rational.ts";
 import { apply, Complex, type ComplexNumeric, type Real } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
 import { ClassPolynomial } from "./class-polynomial.ts";
-import {
-  acted,
-  exactJ,
-  exactReduction,
-  exactTau,
-  hasRealJ,
-  hasRealNome,
-  hasRealThetaNome,
-  vanishes,
-} from "./modular-point.ts";
+import { exactJ, exactLambda } from "./modular-exact.ts";
+import { acted, exactReduction, exactTau, hasRealJ, hasRealNome, hasRealThetaNome, vanishes } from "./modular-point.ts";
 import { upperHalf } from "./modulus.ts";
 import { Moved } from "./moved.ts";
 import { QSeries } from "./q-series.ts";
@@ -48,7 +40,7 @@ export type MatrixInput = readonly [
  * values where symmetry or class number one does (modular.j(i) is 1728), and Real ones where q is real.
  */
 export const modular = {
-  /** j(τ) = 1728 g2³/Δ = q^−1 + 744 + ..., j(i) = 1728; exact for τ of class number one. Source DLMF 23.15.7. */
+  /** j(τ) = 1728 g2³/Δ = q^−1 + 744 + ..., j(i) = 1728; exact for τ of class number one and two. Source DLMF 23.15.7. */
   j: (tau: ComplexNumeric): Value => {
     const t = upper(tau, "j");
     return apply(MODULAR_J, [t, hasRealJ(t)], exactJ(t));
@@ -94,16 +86,16 @@ export const modular = {
     return apply(LATTICE_DISCRIMINANT, [t, hasRealNome(t)]);
   },
 
-  /** λ(τ) = θ2⁴/θ3⁴, the parameter m of τ = iK′/K. */
+  /** λ(τ) = θ2⁴/θ3⁴, the parameter m of τ = iK′/K; exact where it is a rational or quadratic number: λ(i) = 1/2, λ(√2 i) = 3 − 2√2. */
   lambda: (tau: ComplexNumeric): Value => {
     const t = upper(tau, "lambda");
-    return apply(LAMBDA, [t, "lambda", hasRealThetaNome(t)]);
+    return apply(LAMBDA, [t, "lambda", hasRealThetaNome(t)], exactLambda(t));
   },
 
   /** 1 − λ(τ) = θ4⁴/θ3⁴ with all its digits. */
   lambdaComplement: (tau: ComplexNumeric): Value => {
     const t = upper(tau, "lambdaComplement");
-    return apply(LAMBDA, [t, "complement", hasRealThetaNome(t)]);
+    return apply(LAMBDA, [t, "complement", hasRealThetaNome(t)], exactLambda(t)?.neg().plus(1));
   },
 
   /** Weber's f(τ) = exp(−πi/24) η((τ+1)/2)/η(τ). */
@@ -114,7 +106,7 @@ export const modular = {
   weberF2: (tau: ComplexNumeric): Value => weberValue("f2", tau),
 
   /**
-   * τ moved by an integer matrix of determinant 1, with cτ + d and the multiplier of η.
+   * τ moved by an integer matrix of determinant 1, with cτ + d and the multipliers of η and of θ1 .. θ4.
    * Throws   DomainError for another determinant.
    */
   act: (matrix: MatrixInput, tau: ComplexNumeric): Moved => movedBy(matrixOf(matrix), upper(tau, "act")),
@@ -199,5 +191,5 @@ function matrixOf([[a, b], [c, d]]: MatrixInput): Matrix {
 function movedBy(matrix: Matrix, tau: Complex): Moved {
   const exact = exactTau(tau);
   const image = Complex.from(apply(MOVED, [tau, matrix], exact && acted(matrix, exact)));
-  return new Moved(matrix, image, tau.times(matrix.c).plus(matrix.d), etaMultiplier(matrix));
+  return new Moved(matrix, image, tau.times(matrix.c).plus(matrix.d), multipliers(matrix));
 }

@@ -8,6 +8,7 @@ import { Rational } from "../number/rational.ts";
 import { i, π } from "../number/symbols.ts";
 import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
+import { exactLambda } from "./modular-exact.ts";
 
 /** The ways to say which modulus is meant; a bare nome is refused, since two are in use. */
 export type ModulusInput =
@@ -85,7 +86,9 @@ function pairOf(input: Readonly<Record<string, unknown>>, subject: string): Modu
     }
     default: {
       const tau = tauOf(input, subject);
-      return { m: apply(LAMBDA, [tau, "lambda"]), m1: apply(LAMBDA, [tau, "complement"]) };
+      const exact = exactLambda(tau);
+      const m1 = apply(LAMBDA, [tau, "complement"], exact?.neg().plus(1));
+      return { m: apply(LAMBDA, [tau, "lambda"], exact), m1 };
     }
   }
 }

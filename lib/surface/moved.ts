@@ -1,4 +1,5 @@
 import type { Matrix } from "../function/matrix.ts";
+import type { Multipliers, ThetaAction } from "../function/multipliers.ts";
 import type { Complex, Real } from "../number/values.ts";
 
 /** A point of the upper half plane moved by a matrix of determinant 1, with what modular forms take up on the way. */
@@ -11,15 +12,18 @@ export class Moved {
   readonly factor: Real | Complex;
   /** e in 0 .. 23 with η(Mτ) = exp(2πi e/24) (cτ + d)^(1/2) η(τ), principal root. */
   readonly etaTwentyFourths: number;
+  /** θ_index(v/(cτ+d) | Mτ) = exp(2πi eighths/8) (cτ + d)^(1/2) exp(πi c v²/(cτ+d)) θ_of(v | τ), for index 1 to 4. */
+  readonly theta: readonly ThetaAction[];
 
-  constructor({ a, b, c, d }: Matrix, tau: Complex, factor: Real | Complex, etaTwentyFourths: number) {
+  constructor({ a, b, c, d }: Matrix, tau: Complex, factor: Real | Complex, { eta, theta }: Multipliers) {
     this.matrix = [
       [a, b],
       [c, d],
     ];
     this.tau = tau;
     this.factor = factor;
-    this.etaTwentyFourths = etaTwentyFourths;
+    this.etaTwentyFourths = eta;
+    this.theta = theta;
   }
 
   toString(): string {
@@ -29,6 +33,10 @@ export class Moved {
       `Mτ = ${this.tau}`,
       `cτ + d = ${this.factor}`,
       `η(Mτ) = exp(2πi·${this.etaTwentyFourths}/24) (cτ + d)^(1/2) η(τ)`,
+      ...this.theta.map(
+        ({ index, of, eighths }) =>
+          `θ${index}(v/(cτ+d) | Mτ) = exp(2πi·${eighths}/8) (cτ + d)^(1/2) exp(πi c v²/(cτ+d)) θ${of}(v | τ)`,
+      ),
     ].join("\n");
   }
 }

@@ -1,9 +1,9 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { etaMultiplier } from "../../../lib/function/eta-multiplier.ts";
 import type { Matrix } from "../../../lib/function/matrix.ts";
 import { moved } from "../../../lib/function/modular-action.ts";
 import { dedekindEta, modularLambda, weber } from "../../../lib/function/modular-forms.ts";
+import { multipliers } from "../../../lib/function/multipliers.ts";
 import {
   type ExpansionName,
   eisensteinExpansion,
@@ -98,7 +98,7 @@ describe("the multiplier of η", () => {
     const tau = read({ re: "0.3", im: "0.8" }, 300);
     fc.assert(
       fc.property(matrices, (m) => {
-        const e = etaMultiplier(m);
+        const e = multipliers(m).eta;
         const angle = ball.div(ball.mulInt(ball.pi(200), e, 200), ball.fromInt(12), 200);
         const factor = disc.add(disc.mulInt(tau, m.c, 200), { re: m.d, im: 0n, exp: 0, rad: 0, axis: "real" }, 200);
         const right = disc.mul(
@@ -117,9 +117,50 @@ describe("the multiplier of η", () => {
       fc.property(matrices, ({ a, b, c, d }) => {
         fc.pre(c > 0n && c % 2n === 1n);
         const e = (a + d) * c - b * d * (c * c - 1n) - 3n * c + (jacobi(d, c) === 1 ? 0n : 12n);
-        expect(etaMultiplier({ a, b, c, d })).toBe(Number(((e % 24n) + 24n) % 24n));
+        expect(multipliers({ a, b, c, d }).eta).toBe(Number(((e % 24n) + 24n) % 24n));
       }),
       { numRuns: 200, seed: 1_970 },
     );
+  });
+});
+
+describe("the multipliers of θ1 .. θ4", () => {
+  it("θ_i(v/(cτ+d) | Mτ) = ε (cτ+d)^½ exp(πi c v²/(cτ+d)) θ_j(v | τ) — oracle: values on both sides", () => {
+    const wp = 200;
+    const [tau, v] = [read({ re: "0.3", im: "0.8" }, 300), read({ re: "0.2", im: "-0.1" }, 300)];
+    const right = ([1, 2, 3, 4] as const).map((j) => thetaJet(j, v, tau, 0, wp)[0]!);
+    fc.assert(
+      fc.property(matrices, (m) => {
+        const factor = disc.add(disc.mulInt(tau, m.c, 300), { re: m.d, im: 0n, exp: 0, rad: 0, axis: "real" }, 300);
+        const at = disc.div(v, factor, 300);
+        const square = disc.mulInt(disc.mul(v, at, 300), m.c, 300);
+        for (const { index, of, eighths } of multipliers(m).theta) {
+          const turn = disc.add(square, disc.ldexp(disc.fromBall(ball.fromInt(eighths)), -2), 300);
+          const scale = disc.exp(disc.mulI(disc.mulBall(turn, ball.pi(300), 300)), wp);
+          const known = disc.mul(disc.mul(scale, disc.sqrt(factor, wp), wp), right[of - 1]!, wp);
+          expect(disc.overlaps(thetaJet(index, at, moved(m, tau, 400), 0, wp)[0]!, known), `θ${index}`).toBe(true);
+        }
+      }),
+      { numRuns: 100, seed: 1_829 },
+    );
+  });
+
+  it("−M turns the sign of θ1 and the root — oracle: exact tables", () => {
+    const plus = multipliers({ a: 1n, b: 0n, c: 0n, d: 1n });
+    const minus = multipliers({ a: -1n, b: 0n, c: 0n, d: -1n });
+    expect(plus.theta.map((t) => [t.index, t.of, t.eighths])).toEqual([
+      [1, 1, 0],
+      [2, 2, 0],
+      [3, 3, 0],
+      [4, 4, 0],
+    ]);
+    // (−1)^(1/2) = i = exp(2πi 2/8): the multiplier takes it back, and θ1(−v) = −θ1(v).
+    expect(minus.theta.map((t) => [t.index, t.of, t.eighths])).toEqual([
+      [1, 1, 2],
+      [2, 2, 6],
+      [3, 3, 6],
+      [4, 4, 6],
+    ]);
+    expect(minus.eta).toBe(18);
   });
 });

@@ -2,9 +2,12 @@ import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import { provedDigits } from "../../../lib/number/context.ts";
 import { exact } from "../../../lib/number/convert.ts";
 import { exp } from "../../../lib/number/functions.ts";
+import type { Quadratic } from "../../../lib/number/quadratic.ts";
+import type { Rational } from "../../../lib/number/rational.ts";
 import { i, π } from "../../../lib/number/symbols.ts";
 import { Complex, Real } from "../../../lib/number/values.ts";
 import { DomainError } from "../../../lib/proof/errors.ts";
+import { jacobi } from "../../../lib/surface/jacobi.ts";
 import { modular } from "../../../lib/surface/modular.ts";
 
 const before = provedDigits();
@@ -32,6 +35,41 @@ describe("modular in a cell", () => {
       [Complex.from(exact`(1+√(-163))/82`).plus(7), "-262537412640768000"],
     ];
     for (const [tau, value] of known) expect(modular.j(tau).exact?.toString()).toBe(value);
+  });
+
+  it("j of class number two is exact in its real quadratic field — oracle: Weber's tables", () => {
+    const known: [Quadratic | Rational, string][] = [
+      [exact`√(-5)`, "632000 + 282880 √5"],
+      [exact`√(-6)`, "2417472 + 1707264 √2"],
+      [exact`√(-15)`, "37018076625/2 + 16554983445/2 √5"],
+      [exact`(1+√(-15))/2`, "-191025/2 - 85995/2 √5"],
+      [exact`(1+√(-15))/4`, "-191025/2 + 85995/2 √5"],
+    ];
+    for (const [tau, value] of known) expect(String(modular.j(Complex.from(tau)).exact), String(tau)).toBe(value);
+    const { exact: last } = modular.j(exact`(1+√(-427))/2`);
+    expect((last as Quadratic).d).toBe(61n);
+    expect(modular.j(exact`√(-23)`).exact).toBeUndefined();
+  });
+
+  it("λ at quadratic points is exact where it is a quadratic number — oracle: the singular moduli k² of DLMF 19.7 and Ramanujan", () => {
+    const known: [Quadratic | Rational, string][] = [
+      [exact`i`, "1/2"],
+      [exact`1 + i`, "-1"],
+      [exact`(1 + i)/2`, "2"],
+      [exact`2 i`, "17 - 12 √2"],
+      [exact`√(-2)`, "3 - 2 √2"],
+      [exact`√(-3)`, "1/2 - 1/4 √3"],
+      [exact`√(-7)`, "1/2 - 3/16 √7"],
+      [exact`(1 + √(-3))/2`, "1/2 + 1/2 √(-3)"],
+      [exact`(1 + √(-7))/2`, "1/32 + 3/32 √(-7)"],
+    ];
+    for (const [tau, value] of known) {
+      expect(String(modular.lambda(Complex.from(tau)).exact), String(tau)).toBe(value);
+      const sum = modular.lambda(Complex.from(tau)).plus(modular.lambdaComplement(Complex.from(tau)));
+      expect(sum.exact?.toString()).toBe("1");
+    }
+    expect(modular.lambda(exact`√(-11)`).exact).toBeUndefined();
+    expect(jacobi({ tau: i }).m.exact?.toString()).toBe("1/2");
   });
 
   it("E6(i), E4(ρ) and the symmetric G2 at both are exactly 0 — oracle: weights under the stabilisers", () => {

@@ -1,4 +1,5 @@
 // Recognition of exact numbers from their digits: conjectures with their evidence.
+import { remember } from "../proof/behind.ts";
 import { DomainError } from "../proof/errors.ts";
 import type { Standing } from "../proof/standing.ts";
 import * as ball from "./ball.ts";
@@ -56,7 +57,8 @@ export function recognise(x: ComplexNumeric, options: RecogniseOptions = {}): Re
       standing: { kind: "proved", argument: "the value is exact" },
     };
   const enclosure = sharpened(value, height, spare);
-  return asRational(enclosure, height, spare) ?? asQuadratic(enclosure, height, spare);
+  const found = asRational(enclosure, height, spare) ?? asQuadratic(enclosure, height, spare);
+  return remember(found, { argument: value });
 }
 
 /** An enclosure with the digits that quadratic candidates of the height take, and the spare ones twice. */

@@ -1,5 +1,7 @@
-// What a result was made from, kept beside it for `working`. A weak reference: it costs no time and keeps nothing alive.
+// What results of curves and lattices were made from, as `working` reads it.
 
+import type { Complex, Real } from "../number/values.ts";
+import { recall, remember as rememberAny } from "../proof/behind.ts";
 import type { Curve } from "./curve.ts";
 import type { Lattice } from "./lattice.ts";
 import type { AnyPoint } from "./point.ts";
@@ -7,17 +9,19 @@ import type { AnyPoint } from "./point.ts";
 export interface Behind {
   readonly curve?: Curve;
   readonly point?: AnyPoint;
+  readonly second?: AnyPoint;
   readonly lattice?: Lattice;
+  /** The index of a division polynomial, the order of a pairing. */
+  readonly index?: number;
+  /** The argument of the exponential, the number that was recognised. */
+  readonly argument?: Real | Complex;
 }
 
-const BEHIND = new WeakMap<object, Behind>();
-
 /** The result itself, with a note of what it was made from. */
-export function remember<T extends object>(result: T, made: Behind): T {
-  BEHIND.set(result, made);
-  return result;
+export function remember<T>(result: T, made: Behind): T {
+  return rememberAny(result, made);
 }
 
 export function behind(result: object): Behind | undefined {
-  return BEHIND.get(result);
+  return recall(result);
 }

@@ -18,7 +18,7 @@ import { type Coefficients, type Invariants, invariantsOf, jInvariant, residual 
 import { abscissaOfMultiple, abscissasOfSums } from "../curve/xonly.ts";
 import type { Quadratic } from "../number/quadratic.ts";
 import { primitive, type Rational } from "../number/rational.ts";
-import type { Complex, ComplexNumeric, Numeric, Real } from "../number/values.ts";
+import { type Complex, type ComplexNumeric, type Numeric, type Real, scalar } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
 import { remember } from "./behind.ts";
 import { type Coordinate, carry } from "./fields.ts";
@@ -161,7 +161,8 @@ export class Curve<T = Rational> {
   exponential(z: Numeric): Point<Real>;
   exponential(z: ComplexNumeric): Point<Real> | Point<Complex>;
   exponential(z: ComplexNumeric): Point<Real> | Point<Complex> {
-    return exponentialOf(this.#analytic("exponential"), this.lattice(), z) as Point<Real>;
+    const P = exponentialOf(this.#analytic("exponential"), this.lattice(), z) as Point<Real>;
+    return remember(P, { curve: this as unknown as Curve, argument: scalar(z, "exponential") });
   }
 
   #analytic(subject: string): Curve<Coordinate> {
@@ -212,11 +213,12 @@ export class Curve<T = Rational> {
     const polynomials = divisionPolynomials(F, this.a);
     const f = polynomials.f(checkedIndex(n));
     const list = n % 2 === 0 ? mulUni(F, f, polynomials.psi2Squared) : f;
-    return fromTerms(
+    const polynomial = fromTerms(
       F,
       ["x"],
       list.map((c, k) => [c, [k]] as const),
     );
+    return remember(polynomial, { curve: this as unknown as Curve, index: n });
   }
 
   /** The quadratic twist by d; over Q its minimal model. */
@@ -276,7 +278,8 @@ export class Curve<T = Rational> {
    * Throws   DomainError for points that n does not kill.
    */
   weilPairing(n: number, P: Point<T>, Q: Point<T>): T {
-    return pairingOf(this, n, P, Q);
+    const made = { curve: this as unknown as Curve, point: P, second: Q, index: n };
+    return remember(pairingOf(this, n, P, Q), made);
   }
 
   /** Over F_p: the least n >= 0 with Q = n·P, or undefined. Cost: √l steps for the largest prime l dividing the order of P. */

@@ -2,15 +2,19 @@
 // has to satisfy.
 
 import type { PeriodLattice } from "../../lattice/period-lattice.ts";
-import { exp, ln } from "../../number/functions.ts";
-import type { Rational } from "../../number/rational.ts";
-import { i } from "../../number/symbols.ts";
+import { exp, gamma, ln, sin } from "../../number/functions.ts";
+import { isNode } from "../../number/origin.ts";
+import { Rational } from "../../number/rational.ts";
+import { i, π } from "../../number/symbols.ts";
 import { Complex, type ComplexNumeric, type Real } from "../../number/values.ts";
 import type { Standing } from "../../proof/standing.ts";
 import { carlson } from "../../surface/carlson.ts";
 import { standingOf } from "../../surface/claim-parts.ts";
+import { jacobi } from "../../surface/jacobi.ts";
 import { Lattice } from "../../surface/lattice.ts";
+import { legendre } from "../../surface/legendre.ts";
 import { modular } from "../../surface/modular.ts";
+import { theta } from "../../surface/theta.ts";
 import { plainNumber } from "./parts.ts";
 import { placeOf, wpByExpansion } from "./wp-expansion.ts";
 
@@ -86,7 +90,10 @@ const ROUTES: Readonly<Record<string, (x: Scalar, ...operands: never[]) => Route
       "16 times the squared differences of the roots",
     );
   },
-  j: (x, data) => agree(modular.j(on(data).reduced.tau), x, "by its q-series at the reduced ratio"),
+  j: (x, from) =>
+    isNode(from)
+      ? agree(number(modular.E(4, from)).pow(3).times(1728), number(x).times(cusp(from)), "1728 E4³/(E4³ − E6²)")
+      : agree(modular.j(on(from).reduced.tau), x, "by its q-series at the reduced ratio"),
   area: (x, data) => {
     const [w1, w2] = on(data).periods.map(plainNumber) as [Complex, Complex];
     return agree(w1.conj().times(w2).im, x, "Im of conj(ω1)·ω2");
@@ -122,15 +129,87 @@ const ROUTES: Readonly<Record<string, (x: Scalar, ...operands: never[]) => Route
       "duplication: σ(2z) = −℘′(z) σ(z)⁴",
     );
   },
-  "modular j": (x, tau) => {
-    const [four, six] = [number(modular.E(4, tau)).pow(3), number(modular.E(6, tau)).pow(2)];
-    return agree(four.times(1728), number(x).times(four.minus(six)), "1728 E4³/(E4³ − E6²)");
+  "Dedekind eta": (x, tau) => agree(number(x).pow(24).times(1728), cusp(tau), "its 24th power is (E4³ − E6²)/1728"),
+  "normalised discriminant": (x, tau) => agree(number(x).times(1728), cusp(tau), "(E4³ − E6²)/1728"),
+  "modular lambda": (x, tau, which) => {
+    // j = 256 (1 − λ + λ²)³/λ²(1 − λ)², the same for λ and 1 − λ.
+    const [l, m] = [number(x), number(1).minus(x)];
+    const left = number(1).minus(l.times(m)).pow(3).times(256);
+    return which === undefined
+      ? undefined
+      : agree(left, l.times(m).pow(2).times(modular.j(tau)), "j = 256(1 − λ + λ²)³/λ²(1 − λ)²");
   },
-  "modular eta": (x, tau) => {
-    const [four, six] = [number(modular.E(4, tau)).pow(3), number(modular.E(6, tau)).pow(2)];
-    return agree(number(x).pow(24).times(1728), four.minus(six), "its 24th power is (E4³ − E6²)/1728");
+  "Eisenstein E": (x, tau, _real, k) => {
+    if (k === 4) return agree(number(x).pow(2), modular.E(8, tau), "E4² = E8");
+    if (k === 6) return agree(number(x).times(modular.E(4, tau)), modular.E(10, tau), "E4 E6 = E10");
+    if (k === 8) return agree(number(modular.E(4, tau)).pow(2), x, "E4² = E8");
+    return undefined;
   },
-  "complete K": (x, m) => agree(x, completeK(m), "by Carlson's integral"),
+  theta: (x, v, tau, label, order) => {
+    // Duplication of θ1 by the four functions at v.
+    if (label !== 1 || order !== 0) return undefined;
+    const [two, three, four] = [2, 3, 4].map((k) => number(theta(k as 2, { v, tau }))) as [Complex, Complex, Complex];
+    const [b, c, d] = [2, 3, 4].map((k) => number(theta(k as 2, { v: 0, tau }))) as [Complex, Complex, Complex];
+    const left = number(theta(1, { v: number(v).times(2), tau }))
+      .times(b)
+      .times(c)
+      .times(d);
+    return agree(
+      left,
+      number(x).times(two).times(three).times(four).times(2),
+      "duplication: θ1(2v) θ2 θ3 θ4 = 2 θ1(v) θ2(v) θ3(v) θ4(v)",
+    );
+  },
+  sn: (x, u, m) =>
+    agree(
+      number(x)
+        .pow(2)
+        .plus(number(jacobi({ m }).cn(u)).pow(2)),
+      1,
+      "sn² + cn² = 1",
+    ),
+  cn: (x, u, m) =>
+    agree(
+      number(x)
+        .pow(2)
+        .plus(number(jacobi({ m }).sn(u)).pow(2)),
+      1,
+      "sn² + cn² = 1",
+    ),
+  dn: (x, u, m) =>
+    agree(
+      number(x)
+        .pow(2)
+        .plus(number(jacobi({ m }).sn(u)).pow(2).times(m)),
+      1,
+      "dn² + m sn² = 1",
+    ),
+  am: (x, u, m) => agree(legendre.F({ phi: x, m }), u, "F(am u, m) = u"),
+  agm: (x, a, b) =>
+    agree(
+      number(x)
+        .times(carlson.RF(0, number(a).pow(2), number(b).pow(2)))
+        .times(2),
+      π,
+      "π/2 R_F(0, a², b²) by duplication",
+    ),
+  gamma: (x, q) => {
+    const reflected = number(gamma(Rational.of(1).minus(q)))
+      .times(x)
+      .times(sin(π.times(q)));
+    return agree(reflected, π, "reflection: Γ(q) Γ(1 − q) sin πq = π");
+  },
+  "complete K": (x, _m, m1) => agree(carlson.RF(0, m1, 1), x, "R_F(0, m1, 1) by duplication"),
+  "complete E": (x, m, m1) =>
+    agree(
+      number(carlson.RF(0, m1, 1)).minus(
+        number(carlson.RD(0, m1, 1))
+          .times(m)
+          .div(3),
+      ),
+      x,
+      "R_F(0, m1, 1) − m R_D(0, m1, 1)/3 by duplication",
+    ),
 };
 
 function repeatedly(a: never, n: unknown): Complex | undefined {
@@ -163,6 +242,9 @@ function quasiPeriod(L: Lattice, k: unknown): Complex {
   return number(L.zeta(half)).times(2);
 }
 
-function completeK(m: never): Complex {
-  return number(carlson.RF(0, number(1).minus(m), 1));
+/** E4³ − E6² = 1728 q Π(1 − q^n)^24 */
+function cusp(tau: never): Complex {
+  return number(modular.E(4, tau))
+    .pow(3)
+    .minus(number(modular.E(6, tau)).pow(2));
 }

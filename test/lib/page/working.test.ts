@@ -1,7 +1,8 @@
 import temml from "temml";
 import { describe, expect, it } from "vitest";
-import { complex, exact, real } from "../../../lib/number/convert.ts";
-import { atDigits, cos, exp, ln, sin } from "../../../lib/number/functions.ts";
+import { complex, exact, rational, real } from "../../../lib/number/convert.ts";
+import { agm, atDigits, cos, exp, gamma, ln, sin } from "../../../lib/number/functions.ts";
+import { recognise } from "../../../lib/number/recognise.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
 import type { Derivation } from "../../../lib/page/derivation.ts";
 import { plainFormulas } from "../../../lib/page/plain-formula.ts";
@@ -9,10 +10,15 @@ import type { Table } from "../../../lib/page/table.ts";
 import { tex } from "../../../lib/page/typeset.ts";
 import { working } from "../../../lib/page/working.ts";
 import type { Standing } from "../../../lib/proof/standing.ts";
+import { factor } from "../../../lib/surface/factorisation.ts";
+import { homothety } from "../../../lib/surface/homothety.ts";
+import { jacobi } from "../../../lib/surface/jacobi.ts";
+import { legendre } from "../../../lib/surface/legendre.ts";
 import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
 import { lattice } from "../../../lib/surface/make-lattice.ts";
 import { quartic } from "../../../lib/surface/make-quartic.ts";
+import { modular } from "../../../lib/surface/modular.ts";
 
 const text = (value: unknown) => bundle(value)?.["text/plain"] as string;
 
@@ -176,6 +182,83 @@ describe("working of lattices and of what is computed on them", () => {
     expect((at(steps, "forms") as Table).rows.map(String)).toEqual(["1,1,6", "2,1,3", "2,-1,3"]);
     sound(working(curve`y^2 = x^3 - x`.lattice().complexMultiplication()));
     sound(working(E.lattice().complexMultiplication()));
+  });
+});
+
+describe("working of other values", () => {
+  const E = curve`y^2 + y = x^3 - x`;
+  const X = curve`y^2 = x^3 - x`;
+
+  it("curves and points: invariants, multiples, finite and infinite order — oracle: Δ = 37, order 7", () => {
+    sound(working(E));
+    sound(working(curve({ a: [0, "1/2", 0, "-81/16", 3] })));
+    const steps = working(E.point(0, 0));
+    sound(steps);
+    expect(at(steps, "order")).toBe(Number.POSITIVE_INFINITY);
+    const T = curve`y^2 + x y + y = x^3 - x^2 - 3x + 3`;
+    expect(at(working(T.point(1, 0)), "order")).toBe(7);
+    sound(working(T.point(1, 0)));
+    sound(working(E.origin));
+  });
+
+  it("points from the torus, division polynomials, the Weil pairing — oracle: ψ3 by hand, e2 = −1", () => {
+    sound(working(E.exponential(real("1/3"))));
+    sound(working(E.exponential(complex("1/3", "1/5"))));
+    sound(working(E.exponential(E.lattice().at("1/3", 0))));
+    const psi = working(E.divisionPolynomial(3));
+    sound(psi);
+    expect(text(psi)).toContain("3*x^4 - 6*x^2 + 3*x - 1");
+    sound(working(E.divisionPolynomial(4)));
+    const pairing = working(X.weilPairing(2, X.point(0, 0), X.point(1, 0)));
+    sound(pairing);
+    expect(String(at(pairing, "pairing"))).toBe("-1");
+  });
+
+  it("class polynomials, homotheties, sub- and overlattices, moduli, moved points, factors", () => {
+    const L = lattice({ invariants: [4, -1] });
+    sound(working(modular.classPolynomial(-23)));
+    sound(working(homothety(X.lattice(), curve`y^2 = x^3 - 5x`.lattice())));
+    const over = working(L.overlattice(L.at("1/3", 0)));
+    sound(over);
+    expect(at(over, "index")).toBe(3n);
+    sound(
+      working(
+        L.sublattice([
+          [1, 0],
+          [1, 2],
+        ]),
+      ),
+    );
+    sound(working(jacobi({ m: "1/3" })));
+    sound(working(modular.reduce(complex("1/3", "1/50"))));
+    sound(working(factor(-944784)));
+    for (const x of [modular.j(complex("1/3", 2)), modular.eta(complex("1/3", 2)), modular.lambda(complex("1/3", 2))])
+      sound(working(x));
+    for (const x of [
+      jacobi({ m: "1/3" }).sn("1/2"),
+      legendre.K({ m: "1/3" }),
+      agm(1, real(2).sqrt()),
+      gamma(rational("1/3")),
+    ])
+      sound(working(x));
+  });
+
+  it("a recognised number is a conjecture in its derivation too", () => {
+    const found = recognise(real(2).sqrt().times(real(3).sqrt()).times(real(6).sqrt()).div(18))!;
+    expect(working(found).checks.map(({ kind }) => kind)).toEqual(["certified", "certified", "conjectured"]);
+  });
+
+  it("a value without a derivation says so, by what it is", () => {
+    expect(() => working([1, 2])).toThrow("working: a list has no derivation: no record is kept of how it was made.");
+    expect(() => working("abc")).toThrow("the plain string abc has no derivation");
+    expect(() => working({})).toThrow("this record has no derivation");
+    expect(() => working(L2.wp)).toThrow("a function has no derivation");
+  });
+  const L2 = lattice({ tau: complex(0, 1) });
+
+  it("links are named on request, where a notebook holds two of a kind", () => {
+    expect(working(X.torsion(), { name: "X" }).anchor("bound")).toBe("step-x-bound");
+    expect(working(X.torsion()).anchor("bound")).toBe("step-torsion-bound");
   });
 });
 

@@ -41,6 +41,7 @@ export { zero } from "./number/zero.ts";
 
 // Lattices and curves
 
+export { Residue } from "./algebra/primefield.ts";
 export { ComplexMultiplication } from "./surface/complex-multiplication.ts";
 export { type Line, PlaneCubic, type ThroughPoint } from "./surface/cubic.ts";
 export { Curve } from "./surface/curve.ts";
@@ -60,12 +61,15 @@ export { LaurentExpansion } from "./surface/laurent-expansion.ts";
 export { cubic } from "./surface/make-cubic.ts";
 export { curve } from "./surface/make-curve.ts";
 export { lattice } from "./surface/make-lattice.ts";
+export { biquadratic, quadrics } from "./surface/make-quadrics.ts";
 export { quartic } from "./surface/make-quartic.ts";
 export { Morphism } from "./surface/morphism.ts";
 export { Point } from "./surface/point.ts";
+export { Biquadratic, QuadricPair } from "./surface/quadrics.ts";
 export { Quartic } from "./surface/quartic.ts";
 export { QuasiPeriodicFunction } from "./surface/quasi-periodic-function.ts";
 export { routesOf, SecondRoute, secondRoute } from "./surface/second-route.ts";
+export { TorsionSubgroup } from "./surface/torsion.ts";
 export { TorusPoint } from "./surface/torus-point.ts";
 export { PlanePoint } from "./surface/variety.ts";
 

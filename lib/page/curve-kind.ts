@@ -4,13 +4,14 @@ import type { Curve } from "../surface/curve.ts";
 import type { Point } from "../surface/point.ts";
 import type { Kind, Show } from "./kind.ts";
 import { elementTex, equationTex, fieldTex } from "./polynomial-tex.ts";
-import { texName } from "./tex.ts";
+import { array, small, texName, texWords } from "./tex.ts";
 
 export const curveKind: Kind<Curve<unknown>> = {
-  text: (E) => `${E}${givenText(E)}`,
+  text: (E) => `${E}${givenText(E)}${E.notice ? `\n  ${E.notice}` : ""}`,
   tex: (E, show) => {
     const equation = `${equationTex(E.field, E.equation, show)} \\quad \\text{over } ${fieldTex(E.field.name)}`;
-    return `${equation}${givenTex(E, show)}`;
+    const line = `${equation}${givenTex(E, show)}`;
+    return E.notice ? array("l", [[line], [small(texWords(E.notice))]]) : line;
   },
   data: (E) => E.toJSON() as { kind: string },
 };

@@ -2,13 +2,19 @@
 
 import type { Polynomial } from "../algebra/multivariate.ts";
 import { plainPolynomial } from "../curve/equation/print.ts";
+import { QuadricPair } from "../surface/quadrics.ts";
 import type { PlaneCurve, PlanePoint } from "../surface/variety.ts";
 import type { Kind } from "./kind.ts";
 import { type Coefficients, elementTex, fieldTex, polynomialTex } from "./polynomial-tex.ts";
+import { array } from "./tex.ts";
 
 export const planeCurveKind: Kind<PlaneCurve<unknown>> = {
   text: (C) => String(C),
   tex: (C, show) => {
+    if (C instanceof QuadricPair) {
+      const lines = C.polynomials.map((f) => [`${polynomialTex(C.field, f, show)} = 0`]);
+      return `${array("l", lines)} \\quad \\text{over } ${fieldTex(C.field.name)}`;
+    }
     const { left, right } = C.equation;
     const equation = `${polynomialTex(C.field, left, show)} = ${polynomialTex(C.field, right, show)}`;
     return `${equation} \\quad \\text{over } ${fieldTex(C.field.name)}`;

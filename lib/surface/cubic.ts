@@ -1,58 +1,64 @@
-// A nonsingular plane cubic over Q, as a user holds it: tangents, chords, and the way to Weierstrass form.
+// A nonsingular plane cubic, as a user holds it: tangents, chords, and the way to Weierstrass form.
 
+import type { Field } from "../algebra/field.ts";
 import { clearingFactor } from "../algebra/integral.ts";
-import { fromTerms, type Polynomial } from "../algebra/multivariate.ts";
-import { rationals as Q } from "../algebra/rationals.ts";
-import { globalMinimalModel, toRationals } from "../arithmetic/minimal.ts";
+import { fromTerms, mapCoefficients, type Polynomial } from "../algebra/multivariate.ts";
+import type { Residue } from "../algebra/primefield.ts";
 import { searchCubic } from "../arithmetic/search.ts";
 import { type CubicSteps, crossProduct, cubicThrough, tangentAt, thirdPoint } from "../curve/map/cubic.ts";
 import { cubicC4C6, cubicInvariants, modelOfInvariants } from "../curve/map/invariants.ts";
-import { type Coordinates, samePlace } from "../curve/map/model.ts";
-import type { Coefficients, ModelChange } from "../curve/weierstrass.ts";
+import { type Coordinates, type Model, samePlace } from "../curve/map/model.ts";
+import type { ModelChange } from "../curve/weierstrass.ts";
 import type { Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
-import { Curve } from "./curve.ts";
+import type { Curve } from "./curve.ts";
+import { type FieldInput, type InField, largerField, primeFieldOf, reducedTo } from "./extended.ts";
+import { carry } from "./fields.ts";
 import type { ExactInput } from "./input.ts";
-import { joinedMorphism } from "./joined.ts";
+import { jacobianCurve } from "./jacobian.ts";
+import { joinedCurve } from "./joined.ts";
 import type { Morphism } from "./morphism.ts";
+import { requireSmooth } from "./smooth.ts";
 import { PlaneCurve, PlanePoint } from "./variety.ts";
 
-/** A rational point of the cubic, or its coordinates by letter. */
-export type PointInput = PlanePoint | Readonly<Record<string, ExactInput>>;
+/** A point of the curve, or its coordinates by letter. */
+export type PointInput<T = Rational> = PlanePoint<T> | Readonly<Record<string, ExactInput | T>>;
 
-/** A cubic with a rational point as an elliptic curve. */
-export interface ThroughPoint<C extends PlaneCurve> {
-  /** The reduced global minimal model. */
-  readonly curve: Curve;
-  readonly to: Morphism<C, Curve>;
-  readonly from: Morphism<Curve, C>;
+/** A curve of genus one with a point as an elliptic curve. */
+export interface ThroughPoint<C extends PlaneCurve<T>, T = Rational> {
+  /** Over Q the reduced global minimal model. */
+  readonly curve: Curve<T>;
+  readonly to: Morphism<C, Curve<T>>;
+  readonly from: Morphism<Curve<T>, C>;
   /** What the construction went through, for a derivation. */
-  readonly steps: ThroughSteps;
+  readonly steps: ThroughSteps<T>;
 }
 
-export interface ThroughSteps {
-  readonly point: PlanePoint;
+export interface ThroughSteps<T = Rational> {
+  readonly point: PlanePoint<T>;
   /** The tangent at the point as a form, where it meets the cubic again, and whether the point is a flex. */
-  readonly tangent?: Polynomial<Rational>;
-  readonly third?: PlanePoint;
+  readonly tangent?: Polynomial<T>;
+  readonly third?: PlanePoint<T>;
   readonly flex?: boolean;
-  /** The model that the construction gives, and the change that makes it minimal. */
-  readonly raw: Curve;
-  readonly change: ModelChange<Rational>;
+  /** For two quadrics: the plane cubic that they are projected to from the point. */
+  readonly projected?: Polynomial<T>;
+  /** The model that the construction gives, and over Q the change that makes it minimal. */
+  readonly raw: Curve<T>;
+  readonly change?: ModelChange<T>;
 }
 
 /** A line in the plane of a cubic. */
-export interface Line {
+export interface Line<T = Rational> {
   /** The linear form that vanishes on it. */
-  readonly form: Polynomial<Rational>;
+  readonly form: Polynomial<T>;
   /** The third point of the cubic on it. */
-  readonly meets: PlanePoint;
+  readonly meets: PlanePoint<T>;
 }
 
-/** A nonsingular plane cubic over Q. Made by `cubic`. */
-export class PlaneCubic extends PlaneCurve {
+/** A nonsingular plane cubic over Q, a quadratic field, F_p, R or C. Made by `cubic`. */
+export class PlaneCubic<T = Rational> extends PlaneCurve<T> {
   /** The tangent at a point and where it meets the cubic again (at the point itself for a flex). */
-  tangent(P: PointInput): Line {
+  tangent(P: PointInput<T>): Line<T> {
     const point = this.#read(P);
     return this.#line(
       tangentAt(this.model, point.coordinates),
@@ -61,88 +67,96 @@ export class PlaneCubic extends PlaneCurve {
   }
 
   /** The line through two points and the third point of the cubic on it; the tangent if they are the same. */
-  chord(P: PointInput, R: PointInput): Line {
+  chord(P: PointInput<T>, R: PointInput<T>): Line<T> {
     const [p, r] = [this.#read(P), this.#read(R)];
     if (samePlace(this.model, p.coordinates, r.coordinates)) return this.tangent(p);
-    const line = crossProduct(Q, p.coordinates, r.coordinates);
+    const line = crossProduct(this.field, p.coordinates, r.coordinates);
     return this.#line(line, thirdPoint(this.model, p.coordinates, r.coordinates));
   }
 
   /**
-   * The cubic as an elliptic curve with the given point as O: its reduced global minimal model with the maps there and back.
+   * The cubic as an elliptic curve with the given point as O, with the maps there and back: over Q its reduced global minimal model.
    *
    * Method   a flex: a change of coordinates that takes its tangent to infinity; else lines through the third point of the tangent.
    * Throws   DomainError with the residual for a point that is not on the cubic.
    */
-  through(P: PointInput): ThroughPoint<this> {
+  through(P: PointInput<T>): ThroughPoint<this, T> {
     const point = this.#read(P);
-    const raw = cubicThrough(this.model, point.coordinates);
-    const { a, change } = globalMinimalModel(raw.a);
-    const curve = new Curve(Q, toRationals(a));
-    const maps = joinedMorphism(this, curve, {
-      to: raw.to,
-      from: raw.from,
-      change,
-      rawModel: raw.a,
+    const made = cubicThrough(this.model, point.coordinates);
+    const { raw, change, ...maps } = joinedCurve<T, this>(this, {
+      to: made.to,
+      from: made.from,
+      rawModel: made.a,
       basePoint: point.coordinates,
     });
-    return { curve, ...maps, steps: this.#steps(point, raw.steps, raw.a, change) };
+    const steps = { point, ...this.#steps(made.steps), raw, ...(change ? { change } : {}) };
+    return { ...maps, steps };
   }
 
-  #steps(
-    point: PlanePoint,
-    steps: CubicSteps<Rational>,
-    raw: Coefficients<Rational>,
-    change: ModelChange<Rational>,
-  ): ThroughSteps {
-    return {
-      point,
-      tangent: this.#form(steps.tangent),
-      third: new PlanePoint(this, steps.third),
-      flex: steps.flex,
-      raw: new Curve(Q, raw),
-      change,
-    };
+  #steps({ tangent, third, flex }: CubicSteps<T>) {
+    return { tangent: this.#form(tangent), third: new PlanePoint(this, third), flex };
   }
 
   /**
    * All rational points whose coprime whole coordinates are at most `height` in size, sorted by size.
    * Cost     height² steps, each a few small residues.
    */
-  points({ height }: { readonly height: number }): PlanePoint[] {
-    return searchCubic(this.model.equations[0]!, checkedHeight(height)).map((P) => new PlanePoint(this, P));
+  points({ height }: { readonly height: number }): PlanePoint<T>[] {
+    if (this.field.name !== "Q") {
+      throw new DomainError({ subject: "points", given: `${this}`, expected: "a cubic over Q" });
+    }
+    const form = this.model.equations[0] as unknown as Polynomial<Rational>;
+    return searchCubic(form, checkedHeight(height)).map((P) => new PlanePoint(this, P as unknown as Coordinates<T>));
   }
 
   /**
-   * The Jacobian, from Aronhold's invariants: isomorphic to the cubic over Q exactly if the cubic has a rational point; without
-   * one there is no map over Q, so none is given.
+   * The Jacobian, from Aronhold's invariants: isomorphic to the cubic over its field exactly if the cubic has a point there; without one
+   * there is no map, so none is given, and the curve says so (`notice`).
    */
-  jacobian(): Curve {
-    const invariants = cubicInvariants(Q, this.model.equations[0]!)!;
-    const [c4, c6] = cubicC4C6(Q, invariants);
-    return new Curve(Q, toRationals(globalMinimalModel(modelOfInvariants(Q, c4, c6)).a));
+  jacobian(): Curve<T> {
+    const F = this.field;
+    const [c4, c6] = cubicC4C6(F, cubicInvariants(F, this.model.equations[0]!)!);
+    return jacobianCurve(this, modelOfInvariants(F, c4, c6));
   }
 
-  #read(P: PointInput): PlanePoint {
+  /** The same equation over a larger field: C.over("R"), C.over(quadratic(5)). */
+  over<K extends FieldInput>(field: K): PlaneCubic<InField<K>> {
+    return this.#carried(largerField(field), (c) => carry(c, largerField(field)));
+  }
+
+  /** The cubic modulo a prime above 3 at which it stays nonsingular. */
+  mod(p: bigint | number): PlaneCubic<Residue> {
+    const F = primeFieldOf(BigInt(p), this);
+    return this.#carried(F, (c) => reducedTo(F, c, this));
+  }
+
+  #carried<U>(F: Field<U>, to: (c: T) => U): PlaneCubic<U> {
+    const form = mapCoefficients(F, this.model.equations[0]!, to);
+    requireSmooth(F, form);
+    const model: Model<U> = { ...(this.model as unknown as Model<U>), field: F, equations: [form] };
+    return new PlaneCubic<U>(model, this.letters);
+  }
+
+  #read(P: PointInput<T>): PlanePoint<T> {
     if (!(P instanceof PlanePoint)) return this.point(P);
     return P.curve === this ? P : new PlanePoint(this, this.checked(P.coordinates));
   }
 
-  #line(line: Coordinates<Rational>, meets: Coordinates<Rational>): Line {
+  #line(line: Coordinates<T>, meets: Coordinates<T>): Line<T> {
     return { form: this.#form(line), meets: new PlanePoint(this, meets) };
   }
 
-  /** The linear form with coprime whole coefficients, in the letters of the cubic. */
-  #form(line: Coordinates<Rational>): Polynomial<Rational> {
+  /** The linear form, over Q with coprime whole coefficients, in the letters of the cubic. */
+  #form(line: Coordinates<T>): Polynomial<T> {
+    const F = this.field;
     const { variables } = this.model;
     const unit = (k: number) => variables.map((_, l) => (k === l ? 1 : 0));
-    const factor = clearingFactor(line);
-    const whole = line.map((c) => c.times(factor));
+    const factor: T = carry(clearingFactor(line), F);
     return this.dehomogenise(
       fromTerms(
-        Q,
+        F,
         variables,
-        whole.map((c, k) => [c, unit(k)] as const),
+        line.map((c, k) => [F.mul(c, factor), unit(k)] as const),
       ),
     );
   }

@@ -60,16 +60,19 @@ export class Curve<T = Rational> {
   readonly a: Coefficients<T>;
   /** The equation the curve was given by, if it had to be rescaled. */
   readonly given: Reading<T> | undefined;
+  /** What a reader has to know of how the curve was come by. */
+  readonly notice: string | undefined;
   readonly #invariants: Invariants<T>;
   // Made on first use, and only ever set complete.
   #lattice: Lattice | undefined;
   #count: bigint | undefined;
 
   /** The model must be nonsingular: `curve` checks it and explains a singular one. */
-  constructor(field: Field<T>, a: Coefficients<T>, given?: Reading<T>) {
+  constructor(field: Field<T>, a: Coefficients<T>, given?: Reading<T>, notice?: string) {
     this.field = field;
     this.a = a;
     this.given = given;
+    this.notice = notice;
     this.#invariants = invariantsOf(field, a);
   }
 

@@ -1,43 +1,57 @@
 // The maps between a curve as written and its minimal model, put together from a construction and a change of model.
 
-import { rationals as Q } from "../algebra/rationals.ts";
+import type { Field } from "../algebra/field.ts";
+import { globalMinimalModel, toRationals } from "../arithmetic/minimal.ts";
 import { changeOfAbscissa } from "../curve/abscissamap.ts";
 import { composeMaps, type FormMap } from "../curve/map/map.ts";
 import { changeMap } from "../curve/map/weierstrassmodel.ts";
-import { type Coefficients, changeModel, invertChange, type ModelChange } from "../curve/weierstrass.ts";
+import { type Coefficients, invertChange, type ModelChange } from "../curve/weierstrass.ts";
 import type { Rational } from "../number/rational.ts";
-import type { Curve } from "./curve.ts";
+import { Curve } from "./curve.ts";
 import { Morphism, type MorphismData } from "./morphism.ts";
 import type { PlaneCurve } from "./variety.ts";
 
-export interface Construction {
-  readonly to: FormMap<Rational>;
-  readonly from: FormMap<Rational>;
-  readonly rawModel: Coefficients<Rational>;
-  readonly change: ModelChange<Rational>;
-  readonly basePoint: readonly Rational[];
+export interface Construction<T> {
+  readonly to: FormMap<T>;
+  readonly from: FormMap<T>;
+  readonly rawModel: Coefficients<T>;
+  readonly basePoint: readonly T[];
 }
 
-/** The maps between a curve and the minimal model of its raw Weierstrass form, each the other's inverse. */
-export function joinedMorphism<C extends PlaneCurve>(
-  source: C,
-  target: Curve,
-  { to, from, rawModel, change, basePoint }: Construction,
-): { readonly to: Morphism<C, Curve>; readonly from: Morphism<Curve, C> } {
-  const minimal = changeModel(Q, rawModel, change);
-  const there = composeMaps(to, changeMap(Q, rawModel, change));
-  const back = composeMaps(changeMap(Q, minimal, invertChange(Q, change)), from);
-  const forward: MorphismData<Rational> = {
+/** A curve as an elliptic curve: over Q its reduced global minimal model, over other fields the model that the construction gives. */
+export function joinedCurve<T, C extends PlaneCurve<T>>(source: C, { to, from, rawModel, basePoint }: Construction<T>) {
+  const { field: F } = source;
+  const { a, change } = simplestModel(F, rawModel);
+  const curve = new Curve(F, a);
+  const there = change ? composeMaps(to, changeMap(F, rawModel, change)) : to;
+  const back = change ? composeMaps(changeMap(F, a, invertChange(F, change)), from) : from;
+  const forward: MorphismData<T> = {
     map: there,
     degree: 1,
     title: "birational map",
     basePoint,
     inverse: () => backward,
   };
-  const backward: MorphismData<Rational> = { map: back, degree: 1, title: "birational map", inverse: () => forward };
+  const backward: MorphismData<T> = { map: back, degree: 1, title: "birational map", inverse: () => forward };
   return {
-    to: new Morphism<C, Curve>(source, target, forward as MorphismData<unknown>),
-    from: new Morphism<Curve, C>(target, source, backward as MorphismData<unknown>),
+    curve,
+    to: new Morphism<C, Curve<T>>(source, curve, forward as MorphismData<unknown>),
+    from: new Morphism<Curve<T>, C>(curve, source, backward as MorphismData<unknown>),
+    raw: new Curve(F, rawModel),
+    change,
+  };
+}
+
+/** The reduced global minimal model over Q with the change to it; over other fields the model itself. */
+export function simplestModel<T>(
+  F: Field<T>,
+  a: Coefficients<T>,
+): { readonly a: Coefficients<T>; readonly change?: ModelChange<T> } {
+  if (F.name !== "Q") return { a };
+  const minimal = globalMinimalModel(a as unknown as Coefficients<Rational>);
+  return {
+    a: toRationals(minimal.a) as unknown as Coefficients<T>,
+    change: minimal.change as unknown as ModelChange<T>,
   };
 }
 

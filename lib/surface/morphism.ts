@@ -189,14 +189,14 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
     const { inverse, check } = this.data;
     if (check && !inverse) return check();
     const { map } = this.data;
+    if (inverse && map.from.kind === "quadrics") return verifiedFrom(inverse().map, map);
+    if (inverse && map.to.kind === "quadrics") return verifiedFrom(map, inverse().map);
     if (!landsOnTarget(map))
       return { kind: "refuted", evidence: "the image does not satisfy the equation of the target" };
     if (!inverse) return { kind: "proved", argument: "exact substitution in the target's equation" };
     const back = inverse().map;
     const identities = landsOnTarget(back) && isIdentity(composeMaps(map, back)) && isIdentity(composeMaps(back, map));
-    return identities
-      ? { kind: "proved", argument: "exact substitution in both equations, and both compositions are the identity" }
-      : { kind: "refuted", evidence: "the map and its inverse do not compose to the identity" };
+    return identities ? BOTH_IDENTITIES : NOT_INVERSE;
   }
 
   /** "change of model from y^2 = ... to y^2 = ...". */
@@ -207,6 +207,20 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
   [Symbol.toPrimitive](hint: string): string {
     return primitive(hint, this, "map");
   }
+}
+
+const BOTH_IDENTITIES: Standing = {
+  kind: "proved",
+  argument: "exact substitution in both equations, and both compositions are the identity",
+};
+const NOT_INVERSE: Standing = { kind: "refuted", evidence: "the map and its inverse do not compose to the identity" };
+
+/**
+ * All from the side with one equation: if `out` lands on the irreducible curve and `home` after it is the identity, then `home` is its
+ * inverse on the image, which is the whole curve, and so lands too.
+ */
+function verifiedFrom(out: FormMap<unknown>, home: FormMap<unknown>): Standing {
+  return landsOnTarget(out) && isIdentity(composeMaps(out, home)) ? BOTH_IDENTITIES : NOT_INVERSE;
 }
 
 type Data = MorphismData<unknown>;

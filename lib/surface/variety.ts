@@ -8,10 +8,9 @@ import { plainPolynomial } from "../curve/equation/print.ts";
 import { type Coordinates, chartOf, type Model, normalise, onModel, samePlace } from "../curve/map/model.ts";
 import { primitive, Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
-import { carry } from "./fields.ts";
-import { type ExactInput, toRational } from "./input.ts";
+import { type ExactInput, elementOf } from "./input.ts";
 
-/** A curve of genus one as it is written in a plane. */
+/** A curve of genus one as it is written: in a plane, or as two quadrics in space. */
 export abstract class PlaneCurve<T = Rational> {
   readonly model: Model<T>;
   /** The letters that the equation was written with: three for a homogeneous cubic, else two. */
@@ -57,12 +56,21 @@ export abstract class PlaneCurve<T = Rational> {
    * equation takes the third letter 0.
    * Throws   DomainError with the residual if it is not on the curve.
    */
-  point(coordinates: Readonly<Record<string, ExactInput>>): PlanePoint<T> {
+  point(coordinates: Readonly<Record<string, ExactInput | T>>): PlanePoint<T> {
     const { variables } = this.model;
-    const values = variables.map((name) => this.#coordinate(coordinates, name));
     const unknown = Object.keys(coordinates).find((name) => !variables.includes(name));
     if (unknown !== undefined) throw this.#wrongLetter(unknown);
-    return new PlanePoint(this, this.checked(values));
+    return new PlanePoint(this, this.checked(this.valuesOf(coordinates)));
+  }
+
+  /** Coordinates in the order of the letters; a letter that was put to 1 may be left out. */
+  protected valuesOf(coordinates: Readonly<Record<string, ExactInput | T>>): Coordinates<T> {
+    return this.model.variables.map((name) => this.coordinate(coordinates, name));
+  }
+
+  /** How a point is written, where it is not by its projective or affine coordinates. */
+  pointText(_coordinates: Coordinates<T>): string | undefined {
+    return undefined;
   }
 
   /** The coordinates, if they are a point of the curve. */
@@ -76,12 +84,12 @@ export abstract class PlaneCurve<T = Rational> {
       });
     }
     if (onModel(this.model, values)) return values;
-    const [f] = this.model.equations;
-    const at = `(${values.map((c) => F.format(c)).join(" : ")})`;
-    const value = this.#valueAt(f!, values);
+    const f = this.model.equations.find((g) => !F.isZero(this.#valueAt(g, values)))!;
+    const at = this.pointText(values) ?? `(${values.map((c) => F.format(c)).join(" : ")})`;
+    const value = this.#valueAt(f, values);
     throw new DomainError({
       subject: "point",
-      given: `${at} is not on ${this}: ${plainPolynomial(F, f!)} is ${F.format(value)} there`,
+      given: `${at} is not on ${this}: ${plainPolynomial(F, f)} is ${F.format(value)} there`,
       expected: "0",
       argument: "coordinates",
     });
@@ -97,8 +105,8 @@ export abstract class PlaneCurve<T = Rational> {
     return fixed.terms.get(0) ?? F.zero;
   }
 
-  #coordinate(given: Readonly<Record<string, ExactInput>>, name: string): T {
-    if (Object.hasOwn(given, name)) return carry(toRational("point", name, given[name]!), this.field);
+  protected coordinate(given: Readonly<Record<string, ExactInput | T>>, name: string): T {
+    if (Object.hasOwn(given, name)) return elementOf(this.field, "point", name, given[name]!);
     if (this.letters.includes(name)) {
       throw new DomainError({
         subject: "point",
@@ -159,6 +167,8 @@ export class PlanePoint<T = Rational> {
   toString(): string {
     const F = this.curve.field;
     const { affine } = this;
+    const own = this.curve.pointText(this.coordinates);
+    if (own !== undefined) return own;
     if (affine) return `(${this.curve.letters.map((name) => F.format(affine[name]!)).join(", ")})`;
     return `(${this.coordinates.map((c) => F.format(c)).join(" : ")})`;
   }

@@ -8,7 +8,8 @@ import { branchAt, type Coordinates, type Model } from "./model.ts";
 
 /**
  * c with φ*ω = c·ω, for the residue forms of the two models: (w du − u dw)/F_v for a plane cubic F(u, v, w), which is du/F_v for w = 1
- * and dx/(2y + a1x + a3) for the long form, and dx/(2y) for y² = quartic(x).
+ * and dx/(2y + a1x + a3) for the long form, dx/(2y) for y² = quartic(x), and the residue form of two quadrics, which is dx/F_y for a curve
+ * F(x, y) = 0 of bidegree (2, 2).
  *
  * The pull-back of a holomorphic form is holomorphic, hence a constant multiple of ω, and one point P of the curve
  * shows the constant.
@@ -55,7 +56,12 @@ interface Ratio<T> {
 
 /** ω/dε along coordinate series, from the first partial derivative that does not vanish at the point. */
 function ratioAlong<T>(model: Model<T>, coordinates: readonly Series<T>[]): Ratio<T> {
-  const options = model.kind === "quartic" ? quarticForms(model, coordinates) : planeForms(model, coordinates);
+  const options =
+    model.kind === "quartic"
+      ? quarticForms(model, coordinates)
+      : model.kind === "quadrics"
+        ? spaceForms(model, coordinates)
+        : planeForms(model, coordinates);
   const F = model.field;
   return options.reduce((best, option) =>
     orderOf(F, option.denominator) < orderOf(F, best.denominator) ? option : best,
@@ -71,6 +77,25 @@ function planeForms<T>(model: Model<T>, coordinates: readonly Series<T>[]): Rati
       denominator: partial(model, k, coordinates),
     };
   });
+}
+
+/** (x_i dx_j − x_j dx_i)/∂(f, g)/∂(x_k, x_l), with the sign that makes it dx/F_y for a curve F = 0 of bidegree (2, 2). */
+function spaceForms<T>(model: Model<T>, coordinates: readonly Series<T>[]): Ratio<T>[] {
+  const F = model.field;
+  const ring = seriesRing(F, coordinates[0]!.length);
+  const d = (equation: number, k: number) => partial(model, k, coordinates, equation);
+  const places = [
+    [3, 0, 1, 2],
+    [3, 1, 2, 0],
+    [3, 2, 0, 1],
+    [0, 1, 3, 2],
+    [1, 2, 3, 0],
+    [2, 0, 3, 1],
+  ] as const;
+  return places.map(([i, j, k, l]) => ({
+    numerator: wronskian(F, coordinates[i]!, coordinates[j]!),
+    denominator: ring.add(ring.mul(d(0, k), d(1, l)), negated(F, ring.mul(d(0, l), d(1, k)))),
+  }));
 }
 
 /** (z dx − x dz)/(2y), or where y = 0 the same from the derivatives of the quartic: z dy/q_x and −x dy/q_z up to weights. */
@@ -91,10 +116,10 @@ function quarticForms<T>(model: Model<T>, coordinates: readonly Series<T>[]): Ra
   ];
 }
 
-function partial<T>(model: Model<T>, k: number, coordinates: readonly Series<T>[]): Series<T> {
+function partial<T>(model: Model<T>, k: number, coordinates: readonly Series<T>[], equation = 0): Series<T> {
   const F = model.field;
   const { length } = coordinates[0]!;
-  const f = derivative(F, model.equations[0]!, model.variables[k]!);
+  const f = derivative(F, model.equations[equation]!, model.variables[k]!);
   return evaluateIn(f, coordinates, seriesRing(F, length), (c) => constantSeries(F, c, length));
 }
 

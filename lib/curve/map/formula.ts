@@ -47,7 +47,8 @@ export interface Formula<T> {
  */
 export function formulaOf<T>(map: FormMap<T>, from: readonly string[], to: readonly string[]): Formula<T> {
   const F = map.from.field;
-  const forms = map.forms.map((f) => inLetters(F, f, map.from.variables, from));
+  const { affine } = map.from;
+  const forms = map.forms.map((f) => (affine ? substitute(F, f, affine) : inLetters(F, f, map.from.variables, from)));
   const letters = map.to.variables;
   if (to.length === letters.length) {
     const parts = simplestForms(F, lowestTerms(F, forms));
@@ -63,9 +64,9 @@ export function formulaOf<T>(map: FormMap<T>, from: readonly string[], to: reado
       })),
     };
   }
-  const scale = letters.findIndex((name) => !to.includes(name));
+  const scale = letters.findLastIndex((name) => !to.includes(name));
   const parts = letters.flatMap((letter, k) => {
-    if (k === scale) return [];
+    if (!to.includes(letter)) return [];
     const below = map.to.weights[k] === 2 ? multiply(F, forms[scale]!, forms[scale]!) : forms[scale]!;
     return [{ letter, ...quotient(F, forms[k]!, below) }];
   });

@@ -77,14 +77,31 @@ function formsOnBranch<T>({ from, forms }: FormMap<T>, P: Coordinates<T>, length
   return forms.map((f) => evaluateIn(f, branch.coordinates, ring, (c) => constantSeries(F, c, length)));
 }
 
-/** True if a form in the letters of the model vanishes on the whole curve (a curve with one equation). */
+/** True if a form in the letters of the model vanishes on the whole curve. */
 export function vanishesOn<T>(model: Model<T>, f: Polynomial<T>): boolean {
-  return isZero(divideBy(model.field, f, model.equations[0]!).remainder);
+  if (model.kind !== "quadrics") return isZero(divideBy(model.field, f, model.equations[0]!).remainder);
+  const letters = model.variables.map((name) => variable(model.field, model.variables, name));
+  return vanishesAfter(model, letters, f);
+}
+
+/**
+ * True if g(forms) vanishes on the curve, exactly. With one equation by division; on the intersection of two quadrics by Bézout's theorem: a
+ * form of degree d that is not zero on this smooth curve of degree 4 has 4d zeros on it, so its series at one point cannot begin later.
+ */
+function vanishesAfter<T>(model: Model<T>, forms: readonly Polynomial<T>[], g: Polynomial<T>): boolean {
+  const F = model.field;
+  if (model.kind !== "quadrics") return vanishesOn(model, substitute(F, g, forms));
+  if (isZero(g)) return true;
+  if (!model.base) throw new Error("an intersection of quadrics is verified at a point of it");
+  const length = 4 * Math.max(0, ...forms.map(degree)) * degree(g) + 1;
+  const ring = seriesRing(F, length);
+  const image = formsOnBranch({ from: model, to: model, forms }, model.base, length);
+  return evaluateIn(g, image, ring, (c) => constantSeries(F, c, length)).every((c) => F.isZero(c));
 }
 
 /** Exact substitution: the image of the general point satisfies every equation of the target. */
 export function landsOnTarget<T>({ from, to, forms }: FormMap<T>): boolean {
-  return to.equations.every((g) => vanishesOn(from, substitute(from.field, g, forms)));
+  return to.equations.every((g) => vanishesAfter(from, forms, g));
 }
 
 /** The map that first does one, then another; forms of higher degree in lowest terms on the curve it starts from. */

@@ -15,6 +15,10 @@ export interface Model<T> {
   /** 1 for each letter, except 2 for y of y² = quartic(x, z). */
   readonly weights: readonly number[];
   readonly equations: readonly Polynomial<T>[];
+  /** The letters as polynomials in those the equation was written with, where that is not leaving one out by 1. */
+  readonly affine?: readonly Polynomial<T>[];
+  /** A point of a curve with two equations, at whose branch it is read whether a form vanishes on the curve. */
+  readonly base?: Coordinates<T>;
 }
 
 /** Projective coordinates, one a letter, not all zero. */

@@ -1,12 +1,16 @@
 // Where a plane cubic is singular: rational singular points by elimination, and whether it holds a line.
 
+import type { Field } from "../../algebra/field.ts";
+import { clearingFactor } from "../../algebra/integral.ts";
 import { coefficientsIn } from "../../algebra/multigcd.ts";
 import {
   add,
   constant,
   degreeIn,
   derivative,
+  divideBy,
   evaluate,
+  fromTerms,
   isZero,
   multiply,
   type Polynomial,
@@ -29,20 +33,66 @@ export type NodeKind = "split node" | "nonsplit node" | "cusp" | "triple point";
 export interface SingularPoint {
   readonly point: Triple;
   readonly kind: NodeKind;
+  /** The discriminant of the two tangents, up to squares: zero at a cusp. */
+  readonly tangents: Rational;
 }
 
 /** True if the Hessian is a multiple of the cubic (or zero): exactly then it is three lines, over some field. */
-export function isThreeLines(f: Form): boolean {
-  const h = hessian(Q, f);
+export function isThreeLines<T>(F: Field<T>, f: Polynomial<T>): boolean {
+  const h = hessian(F, f);
   const keys = [...new Set([...f.terms.keys(), ...h.terms.keys()])];
-  const at = (p: Form, key: number) => p.terms.get(key) ?? Q.zero;
-  return keys.every((k) =>
-    keys.every((l) =>
-      at(f, k)
-        .times(at(h, l))
-        .equals(at(f, l).times(at(h, k))),
-    ),
+  const at = (p: Polynomial<T>, key: number) => p.terms.get(key) ?? F.zero;
+  return keys.every((k) => keys.every((l) => F.isZero(F.sub(F.mul(at(f, k), at(h, l)), F.mul(at(f, l), at(h, k))))));
+}
+
+/** The lines over Q that the cubic contains, each once, with coprime whole coefficients. */
+export function rationalLines(f: Form): Form[] {
+  const letters = f.variables.map((name) => variable(Q, f.variables, name));
+  const sides = letters.filter((letter) => isZero(divideBy(Q, f, letter).remainder));
+  const rest = letters.reduce(withoutFactor, f);
+  // Any other line meets the three sides of the triangle of reference; two of the places differ and span it.
+  const places = [0, 1, 2].flatMap((side) => rationalZerosOnSide(rest, side));
+  const lines: Form[] = [];
+  places.forEach((P, k) => {
+    for (const R of places.slice(k + 1)) {
+      const form = simplestLine(f.variables, crossProduct(Q, P, R));
+      if (!form || lines.some((other) => isZero(subtract(Q, other, form)))) continue;
+      if (isZero(divideBy(Q, rest, form).remainder)) lines.push(form);
+    }
+  });
+  return [...sides, ...lines];
+}
+
+function withoutFactor(f: Form, g: Form): Form {
+  const { quotient, remainder } = divideBy(Q, f, g);
+  return isZero(remainder) ? withoutFactor(quotient, g) : f;
+}
+
+/** Coprime whole coefficients, the first positive; undefined for the zero form. */
+function simplestLine(variables: readonly string[], line: Triple): Form | undefined {
+  const first = line.find((c) => c.num !== 0n);
+  if (!first) return undefined;
+  const factor = clearingFactor(line).times(first.sign());
+  const unit = (k: number) => variables.map((_, l) => (k === l ? 1 : 0));
+  return fromTerms(
+    Q,
+    variables,
+    line.map((c, k) => [c.times(factor), unit(k)] as const),
   );
+}
+
+/** The rational points of the cubic where one letter is 0; none if the whole side belongs to it. */
+function rationalZerosOnSide(f: Form, side: number): Triple[] {
+  const [p, q] = [0, 1, 2].filter((k) => k !== side) as [number, number];
+  const place = (x: Rational, y: Rational): Triple => [0, 1, 2].map((k) => (k === side ? Q.zero : k === p ? x : y));
+  const restricted = substitutedAt(f, f.variables[side]!, Q.zero);
+  if (isZero(restricted)) return [];
+  const at = (x: Rational) => substitutedAt(restricted, f.variables[p]!, x);
+  const list = univariateIn(at(Q.one), f.variables[q]!);
+  const finite = list.length > 1 ? rationalRoots(list).map((y) => place(Q.one, y)) : [];
+  return isZero(divideBy(Q, restricted, variable(Q, f.variables, f.variables[p]!)).remainder)
+    ? [...finite, place(Q.zero, Q.one)]
+    : finite;
 }
 
 /** The rational singular points; complete unless a whole line of the cubic is singular, when some are returned. */
@@ -53,7 +103,7 @@ export function rationalSingularPoints(f: Form): SingularPoint[] {
       if (!found.some((R) => crossProduct(Q, P, R).every((c) => c.num === 0n))) found.push(P);
     }
   }
-  return found.map((point) => ({ point, kind: kindAt(f, point) }));
+  return found.map((point) => ({ point, ...kindAt(f, point) }));
 }
 
 /** Common zeros of the derivatives with one letter 1: a resultant in one letter, then the other by common roots. */
@@ -129,7 +179,7 @@ function determinantOf(matrix: readonly (readonly Form[])[]): Form {
 }
 
 /** The quadratic part at the point: two tangents, one, or none. */
-function kindAt(f: Form, P: Triple): NodeKind {
+function kindAt(f: Form, P: Triple): { readonly kind: NodeKind; readonly tangents: Rational } {
   const [i, j] = tangentPlane(P);
   const second = (a: Triple, b: Triple) =>
     f.variables.reduce(
@@ -146,10 +196,10 @@ function kindAt(f: Form, P: Triple): NodeKind {
       Q.zero,
     );
   const [A, B, C] = [second(i, i), second(i, j), second(j, j)];
-  if ([A, B, C].every((c) => c.num === 0n)) return "triple point";
-  const discriminant = B.times(B).minus(A.times(C));
-  if (discriminant.num === 0n) return "cusp";
-  return Q.sqrt(discriminant) ? "split node" : "nonsplit node";
+  const tangents = B.times(B).minus(A.times(C));
+  if ([A, B, C].every((c) => c.num === 0n)) return { kind: "triple point", tangents };
+  if (tangents.num === 0n) return { kind: "cusp", tangents };
+  return { kind: Q.sqrt(tangents) ? "split node" : "nonsplit node", tangents };
 }
 
 /** Two directions that with P span the plane. */

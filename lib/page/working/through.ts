@@ -15,11 +15,13 @@ import { curveCheck, exactly, jointly } from "./parts.ts";
 export function isThroughPoint(value: unknown): value is ThroughPoint<PlaneCurve> {
   if (typeof value !== "object" || value === null) return false;
   const { curve, to, from, steps } = value as Partial<ThroughPoint<PlaneCurve>>;
-  return curve instanceof Curve && to instanceof Morphism && from instanceof Morphism && steps !== undefined;
+  const isOne = curve instanceof Curve && to instanceof Morphism && from instanceof Morphism && steps !== undefined;
+  return isOne && curve.field.name === "Q"; // the steps lead to a minimal model
 }
 
 export function throughWorking({ curve, to, from, steps }: ThroughPoint<PlaneCurve>): Derivation {
-  const { point, tangent, third, flex, raw, change } = steps;
+  const { point, tangent, third, flex, raw, projected } = steps;
+  const change = steps.change!; // over Q there is one
   const C = point.curve as unknown as PlaneCurve;
   let working = new Derivation("From the curve and its point to a Weierstrass model", { name: "through" })
     .under("modelChange")
@@ -29,6 +31,9 @@ export function throughWorking({ curve, to, from, steps }: ThroughPoint<PlaneCur
       route: "exact substitution into the equation",
       label: "point",
     });
+  if (projected) {
+    working = working.step("the plane cubic to which the quadrics are projected from the point", { value: projected });
+  }
   if (tangent && third) working = tangentSteps(working, C, point, { tangent, third, flex: flex === true });
   return working
     .step("the model that lines through this point give", {

@@ -72,8 +72,8 @@ def at_best(seconds, attempt, tries=3):
     assert min(took) <= seconds, f"{took} s, expected {seconds} s"
 
 
-def start(**options):
-    manager = KernelManager(kernel_name="halfperiod")
+def start(kernel_name="halfperiod", **options):
+    manager = KernelManager(kernel_name=kernel_name)
     manager.start_kernel(**options)
     client = manager.client()
     client.start_channels()

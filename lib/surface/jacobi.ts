@@ -1,12 +1,14 @@
 import { AMPLITUDE, EPSILON, JACOBI, JACOBI_INVERSE, ZETA } from "../function/jacobi-operations.ts";
 import { COMPLETE } from "../function/operations.ts";
+import { latticeOfInvariants } from "../lattice/build.ts";
 import { exp } from "../number/functions.ts";
 import type { Operation } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
 import { i, π } from "../number/symbols.ts";
-import { apply, Complex, type ComplexNumeric, type Real, scalar } from "../number/values.ts";
+import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
 import type { ConventionKey } from "../proof/conventions.ts";
-import { type ModulusInput, type ModulusPair, modulusPair, type SideInput } from "./modulus.ts";
+import { Lattice } from "./lattice.ts";
+import { type ModulusInput, type ModulusPair, modulusPair, principalRoot, type SideInput } from "./modulus.ts";
 
 type Value = Real | Complex;
 
@@ -21,8 +23,11 @@ export class Jacobi {
   readonly m1: Value;
   /** For a real m > 1 the side of the cut on which K, E, τ and the nome are taken. */
   readonly side: "above" | "below" | undefined;
+  /** √(e1 − e3) of the cubic where periods, roots, invariants or a lattice were given, else 1: ℘(z) = e3 + (scale·ns(scale·z))². */
+  readonly scale: Value;
 
-  constructor({ m, m1, side }: ModulusPair) {
+  constructor({ m, m1, side, scale }: ModulusPair) {
+    this.scale = scale ?? Real.from(1);
     this.m = m;
     this.m1 = m1;
     this.side = side && (side === 1 ? "above" : "below");
@@ -62,10 +67,27 @@ export class Jacobi {
     return Complex.from(i.times(this.K1).div(this.K));
   }
 
+  /** j = 256 (1 − m + m²)³/(m m1)², with j(i) = 1728. Throws PoleError for m = 0 and 1. */
+  get j(): Value {
+    const t = this.m.times(this.m1);
+    return t.neg().plus(1).pow(3).times(256).div(t.pow(2));
+  }
+
+  /**
+   * The lattice of ℘, with e1 − e3 = scale², by its invariants: 2K/scale and 2iK′/scale are a basis of it for m off the cuts.
+   * Throws   DomainError for m = 0 and 1, where there is none.
+   */
+  get lattice(): Lattice {
+    const { m, m1 } = this;
+    const square = this.scale.pow(2);
+    const g2 = m.times(m1).neg().plus(1).times("4/3").times(square.pow(2));
+    const g3 = m1.plus(1).times(m.plus(1)).times(m1.minus(m)).times("4/27").times(square.pow(3));
+    return new Lattice(latticeOfInvariants(g2, g3));
+  }
+
   /** The modulus k = √m, principal root. */
   get k(): Value {
-    const { m } = this;
-    return m instanceof Complex || m.sign() === -1 ? Complex.from(m).sqrt() : m.sqrt();
+    return principalRoot(this.m);
   }
 
   /** q_θ = exp(πiτ) = exp(−πK′/K). */
@@ -237,7 +259,7 @@ function isZero(x: Value): boolean {
 
 /**
  * Jacobi's functions for a modulus that is named: jacobi({ m }), jacobi({ m1 }) with m1 = 1 − m, jacobi({ k }), jacobi({ tau }), jacobi({ qTheta }),
- * jacobi({ qMod }), jacobi({ roots: [e1, e2, e3] }).
+ * jacobi({ qMod }), jacobi({ periods }), jacobi({ roots: [e1, e2, e3] }), jacobi({ lattice: L }) and the other names of ModulusInput.
  *
  * Throws   TypeError for a bare { q }, or unless exactly one name is used.
  * @example jacobi({ m: "81/100" }).dn("1/5")   // 0.9840560289645665155...

@@ -3,6 +3,7 @@ import type { Quantity } from "../lattice/quantity.ts";
 import { Rational } from "../number/rational.ts";
 import { type Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
+import { invariantsOfJ } from "./invariants-of-j.ts";
 import { Lattice, type LatticeInput } from "./lattice.ts";
 
 /**
@@ -83,6 +84,8 @@ function fromJ(given: ComplexNumeric): Lattice {
   const exact = j.exact instanceof Rational ? j.exact : undefined;
   if (exact?.sign() === 0) return fromInvariants(0, 1, "j = 0 has the lattices with g2 = 0; this one has g3 = 1.");
   if (exact?.equals(1728)) return fromInvariants(1, 0, "j = 1728 has the lattices with g3 = 0; this one has g2 = 1.");
-  const g = j.times(27).div(j.minus(1728));
-  return fromInvariants(g, g, "j fixes a lattice up to a factor; this one has g2 = g3 = 27j/(j − 1728).");
+  return fromInvariants(
+    ...invariantsOfJ(j),
+    "j fixes a lattice up to a factor; this one has g2 = g3 = 27j/(j − 1728).",
+  );
 }

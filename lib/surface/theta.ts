@@ -5,17 +5,10 @@ import { π } from "../number/symbols.ts";
 import { apply, type Complex, type ComplexNumeric, type Numeric, type Real, scalar } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
 import { coordinates } from "./modular-point.ts";
-import { tauOf } from "./modulus.ts";
+import { type ModulusInput, tauOf } from "./modulus.ts";
 
-/** The argument by name: { v } has sin πv, { z } has sin z; and τ, or a nome by its name. */
-export type ThetaInput = ({ readonly v: ComplexNumeric } | { readonly z: ComplexNumeric }) &
-  (
-    | { readonly tau: ComplexNumeric }
-    | { readonly qTheta: ComplexNumeric }
-    | { readonly qMod: ComplexNumeric }
-    /** Refused with a word on why: q names two different nomes. */
-    | { readonly q: ComplexNumeric }
-  );
+/** The argument by name: { v } has sin πv, { z } has sin z; and τ, a nome by its name, or whatever else names a modulus. */
+export type ThetaInput = ({ readonly v: ComplexNumeric } | { readonly z: ComplexNumeric }) & ModulusInput;
 
 export interface ThetaOptions {
   /** Order of the derivative in the named variable. */

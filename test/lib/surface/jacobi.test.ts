@@ -1,10 +1,14 @@
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import { provedDigits } from "../../../lib/number/context.ts";
+import { exact } from "../../../lib/number/convert.ts";
 import { i } from "../../../lib/number/symbols.ts";
 import { Complex, Real } from "../../../lib/number/values.ts";
-import { PoleError } from "../../../lib/proof/errors.ts";
+import { DomainError, PoleError } from "../../../lib/proof/errors.ts";
 import { jacobi } from "../../../lib/surface/jacobi.ts";
+import type { Lattice } from "../../../lib/surface/lattice.ts";
 import { legendre } from "../../../lib/surface/legendre.ts";
+import { lattice } from "../../../lib/surface/make-lattice.ts";
+import type { ModulusInput } from "../../../lib/surface/modulus.ts";
 import { type ThetaInput, theta, thetaLogarithmic } from "../../../lib/surface/theta.ts";
 
 const before = provedDigits();
@@ -63,6 +67,68 @@ describe("jacobi in a cell", () => {
     expect(legendre.E({ phi: J.am(20), m: "7/10" }).overlaps(J.epsilon(20))).toBe(true);
     expect(J.zeta(J.K.times(2).plus(1)).overlaps(J.zeta(1))).toBe(true);
     expect(String(J.am(20))).toBe("14.998392819909866057...");
+  });
+});
+
+describe("one modulus by all its names", () => {
+  it("m → K, K′, τ, both nomes, k, λ, periods, half-periods, roots, g2 g3, j, J, lattice → m — oracle: there and back", () => {
+    for (const m of ["1/3", "1/1000000", "999/1000"]) {
+      const J = jacobi({ m });
+      const [w1, w2] = [J.K.times(2), i.times(J.K1).times(2)];
+      const lattice = J.lattice;
+      const names: ModulusInput[] = [
+        { m1: J.m1 },
+        { k: J.k },
+        { lambda: m },
+        { tau: J.tau },
+        { qTheta: J.qTheta },
+        { qMod: J.qMod },
+        { periods: [w1, w2] },
+        { halfPeriods: [w1.div(2), w2.div(2)] },
+        { roots: [J.m1.plus(1), J.m.minus(J.m1), J.m.neg().minus(1)] },
+        { invariants: lattice.invariants as unknown as [Real, Real] },
+        { lattice },
+      ];
+      for (const input of names) {
+        const back = jacobi(input);
+        expect(back.m.overlaps(m), `${m} by ${Object.keys(input)[0]}`).toBe(true);
+        expect(back.K.overlaps(J.K)).toBe(true);
+        expect(theta(3, { v: "1/5", ...input }).overlaps(theta(3, { v: "1/5", tau: J.tau }))).toBe(true);
+      }
+      // j and J do not say which of the six values of λ: the least of the real basis is taken.
+      for (const input of [{ j: J.j }, { J: J.j.div(1728) }]) expect(jacobi(input).j.overlaps(J.j)).toBe(true);
+    }
+  });
+
+  it("℘(z) = e3 + (scale·ns(scale·z))² for periods, invariants and lattices, also complex ones — oracle: ℘ by theta jets, DLMF 22.16(ii), 23.6.24", () => {
+    const inputs = [
+      { periods: [exact`1 + i/7`, exact`1/3 + 2 i`] },
+      { halfPeriods: [1, exact`1/5 + i/3`] },
+      { invariants: [4, "1/3"] },
+      { invariants: ["-3/2", 5] },
+    ] as const;
+    for (const input of inputs) {
+      const [L, J] = [lattice(input), jacobi(input)];
+      const z = Complex.from(exact`1/3 + i/11`);
+      const ns = J.ns(J.scale.times(z)).times(J.scale);
+      expect(L.roots[2].plus(ns.pow(2)).overlaps(L.wp(z)), JSON.stringify(Object.keys(input))).toBe(true);
+      expect(J.j.overlaps(L.j)).toBe(true);
+      expect(jacobi({ lattice: L }).m.overlaps(J.m)).toBe(true);
+    }
+  });
+
+  it("exact moduli of exact lattices — oracle: roots 1, 0, −1; λ(i) = 1/2", () => {
+    expect(jacobi({ invariants: [4, 0] }).m.exact?.toString()).toBe("1/2");
+    expect(jacobi({ halfPeriods: [1, i] }).m.exact?.toString()).toBe("1/2");
+    expect(jacobi({ J: 1 }).m.exact?.toString()).toBe("1/2");
+    expect(jacobi({ lambda: "1/3" }).j.exact?.toString()).toBe("21952/9");
+  });
+
+  it("periods below the axis, a real ratio, no lattice, no lattice of m = 0", () => {
+    expect(() => jacobi({ periods: [1, i.neg()] })).toThrow(/ω2\/ω1 = -i, below the real axis.*Exchange the periods/);
+    expect(() => jacobi({ periods: [1, 2] })).toThrow(DomainError);
+    expect(() => jacobi({ lattice: 3 as unknown as Lattice })).toThrow(/a value of lattice\(/);
+    expect(() => jacobi({ m: 0 }).lattice).toThrow(/multiple root/);
   });
 });
 

@@ -2,12 +2,13 @@
 
 import { classPolynomial } from "../function/class-polynomial.ts";
 import { nearestInteger } from "../function/enclosure.ts";
+import type { Gram } from "../function/matrix.ts";
 import { reducedForms } from "../function/quadratic-forms.ts";
 import * as ball from "../number/ball.ts";
 import * as disc from "../number/disc.ts";
 import type { Exact } from "../number/origin.ts";
 import { Quadratic } from "../number/quadratic.ts";
-import { gcd, type Rational } from "../number/rational.ts";
+import { gcd, Rational } from "../number/rational.ts";
 import { reduced } from "./context.ts";
 import { exactFormOf } from "./exact-form.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
@@ -45,6 +46,22 @@ export function complexMultiplication(lattice: PeriodLattice, j: Exact | undefin
   }
   if (j) return byExactJ(j);
   return byEnclosure(lattice);
+}
+
+/** j of exact periods with complex multiplication by an order of class number one, where it is a rational integer. */
+export function rationalModulus(lattice: PeriodLattice): Rational | undefined {
+  const form = exactFormOf(lattice.given);
+  if (!form) return undefined;
+  const discriminant = discriminantOf(form);
+  if (!ONE.some((D) => BigInt(D) === discriminant)) return undefined;
+  const { coefficients } = classPolynomial(discriminant);
+  return Rational.of(-coefficients.find((_, k) => coefficients[1 - k] === 1n)!);
+}
+
+/** Of the order of multiplications of the lattice with the form AX² + 2BXY + CY². */
+function discriminantOf({ A, B, C }: Gram): bigint {
+  const g = gcd(gcd(A, 2n * B), C);
+  return ((2n * B) / g) ** 2n - 4n * (A / g) * (C / g);
 }
 
 function yes(discriminant: bigint, reason: string): Multiplication {

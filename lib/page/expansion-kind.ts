@@ -18,7 +18,8 @@ export const laurentKind: Kind<LaurentExpansion> = {
       .map((c, k) => ({ tex: show.tex(c), exponent: series.order + k }))
       .filter(({ tex }) => tex !== "0");
     const shown = terms.slice(0, MOST_TERMS).map(({ tex, exponent }) => termTex(tex, exponent));
-    const rest = `O(t^{${series.order + series.coefficients.length}})`;
+    const end = series.order + series.coefficients.length;
+    const rest = end === 0 ? "O(1)" : end === 1 ? "O(t)" : `O(t^{${end}})`;
     const long = shown.some((term) => term.length > 60);
     const where = `\\quad t = z ${atTex(series, show)}`;
     if (long)

@@ -1,5 +1,5 @@
 import type { Wanted } from "../function/weierstrass.ts";
-import { rationalRoot } from "../lattice/exact-roots.ts";
+import { rationalPoint } from "../lattice/exact-torsion.ts";
 import { type DivisorPoint, divisorOf } from "../lattice/field/divisor.ts";
 import {
   addElements,
@@ -17,7 +17,7 @@ import {
 } from "../lattice/field/element.ts";
 import { type Expression, expressionOf, PLACE, VALUE, VALUE_AT_POINT } from "../lattice/field/operations.ts";
 import { exactOf } from "../lattice/field/scalar.ts";
-import { genericPoint, multiplePoint, substituted } from "../lattice/field/substitute.ts";
+import { multipleElement } from "../lattice/field/substitute.ts";
 import { elementText } from "../lattice/field/text.ts";
 import { LOGARITHM, WEIERSTRASS } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
@@ -115,8 +115,7 @@ export class EllipticFunction extends Callable {
         argument: "n",
       });
     }
-    const point = multiplePoint(genericPoint(this.element.field), Math.abs(n))!;
-    const element = substituted(this.element, point);
+    const element = multipleElement(this.element, Math.abs(n));
     return new EllipticFunction(n < 0 ? reflectElement(element) : element);
   }
 
@@ -288,10 +287,10 @@ function weierstrassKind({ A, B, D }: Element): "wp" | "prime" | undefined {
   return A.length === 0 && B.length === 1 && isOne(B[0]) ? "prime" : undefined;
 }
 
-/** Values that symmetry alone settles: ℘′ is 0 at the half-periods, ℘ a root, exactly if it is rational. */
+/** Values that are known exactly: ℘′ is 0 at the half-periods, and ℘ and ℘′ may be rational at points of small order. */
 function exactValue(z: TorusPoint, kind: Wanted): Rational | undefined {
-  if (z.order !== 2n || kind === "zeta" || kind === "sigma") return undefined;
-  if (kind === "prime") return Rational.zero;
-  const [first, second] = z.coordinates.map((q) => !q.isInteger());
-  return rationalRoot(z.lattice, first ? (second ? 2 : 1) : 3);
+  if (z.remainder || kind === "zeta" || kind === "sigma") return undefined;
+  if (kind === "prime" && z.order === 2n) return Rational.zero;
+  const point = rationalPoint(z.lattice, z.coordinates);
+  return kind === "prime" ? point?.y : point?.x;
 }

@@ -1,4 +1,5 @@
-import { complexMultiplication } from "../lattice/complex-multiplication.ts";
+import { complexMultiplication, rationalModulus } from "../lattice/complex-multiplication.ts";
+import { exactInvariant } from "../lattice/exact-invariants.ts";
 import { rationalRoot } from "../lattice/exact-roots.ts";
 import {
   AREA,
@@ -114,7 +115,8 @@ export class Lattice {
   get invariants(): readonly [Real | Complex, Real | Complex] {
     const { given } = this.data;
     if (given.kind === "invariants") return [given.g2 as Real | Complex, given.g3 as Real | Complex];
-    return [apply(INVARIANT, [this.data, 2]), apply(INVARIANT, [this.data, 3])];
+    const known = (index: 2 | 3) => exactInvariant(this.data, index === 2 ? "g2" : "g3");
+    return [apply(INVARIANT, [this.data, 2], known(2)), apply(INVARIANT, [this.data, 3], known(3))];
   }
 
   /** e1 = ℘(ω1/2), e2 = ℘((ω1+ω2)/2), e3 = ℘(ω2/2); rational ones exactly. */
@@ -131,7 +133,8 @@ export class Lattice {
   /** j = 1728 g2³/Δ. */
   get j(): Real | Complex {
     const exact = exactDiscriminant(this);
-    return apply(J, [this.data], exact && this.invariants[0].pow(3).times(1728).div(exact).exact);
+    const known = exact ? this.invariants[0].pow(3).times(1728).div(exact).exact : rationalModulus(this.data);
+    return apply(J, [this.data], known);
   }
 
   /** η1, η2 of the full periods: η1 ω2 − η2 ω1 = 2πi. */

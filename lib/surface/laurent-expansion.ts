@@ -1,12 +1,14 @@
 import { gcdUni } from "../algebra/univariate.ts";
 import { LatticePointError } from "../function/weierstrass.ts";
 import { rationalRoot } from "../lattice/exact-roots.ts";
+import { rationalPoint } from "../lattice/exact-torsion.ts";
 import { coordinatesOf, type DivisorPoint, divisorOf } from "../lattice/field/divisor.ts";
 import type { Element } from "../lattice/field/element.ts";
 import { type LaurentSeries, type Parts, seriesAtOrigin, seriesAtPoint } from "../lattice/field/laurent.ts";
 import { type Centre, COEFFICIENT, type Expression } from "../lattice/field/operations.ts";
 import { exactOf, exactScalar, namedScalar, type Scalar } from "../lattice/field/scalar.ts";
 import { isExactElement, orderAtOrigin } from "../lattice/field/valuation.ts";
+import { LOGARITHM } from "../lattice/operations.ts";
 import * as disc from "../number/disc.ts";
 import { Rational } from "../number/rational.ts";
 import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
@@ -47,20 +49,32 @@ export class LaurentExpansion {
     return this.coefficient(-1);
   }
 
+  /** "t^-4 − 6 t^-3 + O(1)". */
   toString(): string {
     const terms = this.coefficients
       .map((c, k) => ({ text: `${c}`, exponent: this.order + k }))
-      .filter(({ text }) => text !== "0");
-    const shown = terms.map(({ text, exponent }) => {
-      const factor = /[ /]/.test(text) ? `(${text})` : text;
-      return exponent === 0 ? text : `${factor === "1" ? "" : `${factor}·`}t^${exponent}`;
-    });
-    return `${shown.join(" + ")} + O(t^${this.order + this.coefficients.length})`;
+      .filter(({ text }) => text !== "0")
+      .map(({ text, exponent }) => termText(text, powerText(exponent)));
+    return `${[...terms, `O(${powerText(this.order + this.coefficients.length) || "1"})`].join(" + ").replaceAll("+ −", "− ")}`;
   }
 }
 
-/** The series of an expression at p with n coefficients. */
-export function laurentExpansion(expression: Expression, p: ComplexNumeric, n: number): LaurentExpansion {
+function powerText(exponent: number): string {
+  return exponent === 0 ? "" : exponent === 1 ? "t" : `t^${exponent}`;
+}
+
+/** A coefficient before a power, its sign in front; sums and quotients in brackets. */
+function termText(coefficient: string, power: string): string {
+  const negative = coefficient.startsWith("-") && !/[ ]/.test(coefficient);
+  const size = negative ? coefficient.slice(1) : coefficient;
+  const sign = negative ? "−" : "";
+  if (power === "") return `${sign}${size}`;
+  if (size === "1") return `${sign}${power}`;
+  return `${sign}${/[ /]/.test(size) ? `(${size})` : size} ${power}`;
+}
+
+/** Throws DomainError unless n is a number of coefficients that can be asked for. */
+export function checkCount(n: number): void {
   if (!(Number.isSafeInteger(n) && n >= 1 && n <= 10_000)) {
     throw new DomainError({
       subject: "laurent",
@@ -69,6 +83,11 @@ export function laurentExpansion(expression: Expression, p: ComplexNumeric, n: n
       argument: "n",
     });
   }
+}
+
+/** The series of an expression at p with n coefficients. */
+export function laurentExpansion(expression: Expression, p: ComplexNumeric, n: number): LaurentExpansion {
+  checkCount(n);
   const point = p instanceof TorusPoint ? p : Complex.from(scalar(p, "laurent"));
   const { centre, number } = centreOf(expression.element, point, divisorPointOf(p));
   const coefficient = (k: number, exact?: LaurentSeries<Scalar>): Real | Complex => {
@@ -94,7 +113,7 @@ function vanishes({ A, B, D }: Element, centre: Centre, point: unknown, k: numbe
 
 function orderAt(element: Element, centre: Centre): number {
   if (centre.kind === "origin") return orderAtOrigin(element);
-  return centre.kind === "number" ? 0 : centre.zeros - centre.poles;
+  return centre.zeros - centre.poles;
 }
 
 function centreOf(
@@ -110,25 +129,44 @@ function centreOf(
     };
   }
   if (point.exact instanceof Rational && point.exact.sign() === 0) return { centre: { kind: "origin" } };
+  const known = exactPoint(element, point);
+  const place = known ? placeAt(element, known) : { zeros: 0, poles: 0 };
   if (!(point instanceof TorusPoint && point.lattice === element.field.lattice)) {
-    return { centre: { kind: "number" }, number: point };
+    return { centre: { kind: "number", ...place }, number: point };
   }
   if (point.isLatticePoint) return { centre: { kind: "origin" } };
   const [r, s] = point.coordinates;
-  const half = point.order === 2n ? halfPeriodPlace(element, point) : { zeros: 0, poles: 0 };
-  const centre: Centre = { kind: "point", r, s, ...half };
+  const centre: Centre = { kind: "point", r, s, ...place };
   return point.remainder ? { centre, number: point.remainder } : { centre };
 }
 
-/** Multiplicities of numerator and denominator at a half-period, from their series over the ring of constants. */
-function halfPeriodPlace(element: Element, point: TorusPoint): { zeros: number; poles: number } {
+interface ExactPoint {
+  readonly x: Scalar;
+  readonly y: Scalar;
+}
+
+/** ℘ and ℘′ at a half-period, at a point of finite order where both are rational, or at the logarithm of a point with exact coordinates. */
+function exactPoint(element: Element, point: TorusPoint | Complex): ExactPoint | undefined {
+  const { lattice, ring } = element.field;
+  if (point instanceof TorusPoint && point.lattice === lattice) {
+    if (point.order === 2n) return { x: rootScalar(element.field, halfPeriodIndex(point)), y: ring.zero };
+    const rational = point.remainder ? undefined : rationalPoint(lattice, point.coordinates);
+    return rational?.y && { x: exactScalar(rational.x), y: exactScalar(rational.y) };
+  }
+  const { origin } = point;
+  if (origin?.operation !== LOGARITHM || origin.operands[0] !== lattice) return undefined;
+  const [x, y] = origin.operands.slice(1).map((part) => (part as Real | Complex).exact);
+  return x && y && { x: exactScalar(x), y: exactScalar(y) };
+}
+
+/** Multiplicities of numerator and denominator at an exact point, from their series over the ring of constants. */
+function placeAt(element: Element, { x, y }: ExactPoint): { zeros: number; poles: number } {
   const { field, A, B, D } = element;
-  const x = rootScalar(field, halfPeriodIndex(point));
   const g2 = field.ring.neg(field.cubic[1] ?? field.ring.zero);
   const n = 2 * Math.max(A.length, B.length + 2, D.length) + 2;
   const order = (numerator: Pick<Parts<Scalar>, "A" | "B">) => {
     const parts = { ...numerator, D: [field.ring.one], g2, g3: g2 };
-    return seriesAtPoint(field.ring, parts, x, field.ring.zero, 0, 0, n).coefficients.findIndex((c) => c.size > 0);
+    return seriesAtPoint(field.ring, parts, x, y, 0, 0, n).coefficients.findIndex((c) => c.size > 0);
   };
   return { zeros: Math.max(0, order({ A, B })), poles: order({ A: D, B: [] }) };
 }
@@ -156,8 +194,13 @@ function halfPeriodIndex(point: TorusPoint): 1 | 2 | 3 {
   return first ? (second ? 2 : 1) : 3;
 }
 
-/** The series with exact coefficients, at lattice points and at half-periods with a rational root. */
-function exactSeries(element: Element, centre: Centre, point: unknown, n: number): LaurentSeries<Scalar> | undefined {
+/** The series with exact coefficients, at lattice points and where ℘ and ℘′ are exact. */
+function exactSeries(
+  element: Element,
+  centre: Centre,
+  point: TorusPoint | Complex,
+  n: number,
+): LaurentSeries<Scalar> | undefined {
   const { field, A, B, D } = element;
   const lead = D[D.length - 1]!;
   const [g3, g2] = [
@@ -168,11 +211,11 @@ function exactSeries(element: Element, centre: Centre, point: unknown, n: number
   if (centre.kind === "origin") {
     return exactOf(lead) ? seriesAtOrigin(field.ring, parts, n) : undefined;
   }
-  if (centre.kind !== "point" || !(point instanceof TorusPoint) || point.order !== 2n) return undefined;
-  const x = rationalRoot(field.lattice, halfPeriodIndex(point));
-  const exact = [A, B, D].every((p) => p.every((c) => exactOf(c) !== undefined));
-  if (!x || !exact) return undefined;
-  return seriesAtPoint(field.ring, parts, exactScalar(x), field.ring.zero, centre.zeros, centre.poles, n);
+  if (centre.kind === "divisor") return undefined;
+  const at = exactPoint(element, point);
+  const exact = at && [[at.x, at.y, g2], A, B, D].every((p) => p.every((c) => exactOf(c) !== undefined));
+  if (!exact) return undefined;
+  return seriesAtPoint(field.ring, parts, at.x, at.y, centre.zeros, centre.poles, n);
 }
 
 /** The value at a lattice point: by the leading term. Throws LatticePointError at a pole. */

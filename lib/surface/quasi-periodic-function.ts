@@ -6,6 +6,8 @@ import { apply, type Complex, type ComplexNumeric, type Real, scalar } from "../
 import type { ConventionKey } from "../proof/conventions.ts";
 import { Callable } from "./callable.ts";
 import { EllipticFunction } from "./elliptic-function.ts";
+import type { LaurentExpansion } from "./laurent-expansion.ts";
+import { quasiExpansion } from "./quasi-expansion.ts";
 import { TorusPoint } from "./torus-point.ts";
 
 /** Weierstrass ζ or σ: a value that is called as f(z); not elliptic, but with a known change under each period. */
@@ -28,6 +30,20 @@ export class QuasiPeriodicFunction extends Callable {
   get derivative(): EllipticFunction {
     if (this.kind === "zeta") return EllipticFunction.wp(this.lattice).neg();
     throw new TypeError("sigma.derivative: σ′ = ζσ is not elliptic; L.zeta is the logarithmic derivative of σ");
+  }
+
+  /**
+   * The Laurent series at p with n coefficients from the leading one: exact at lattice points where the invariants are.
+   *
+   * Domain   any p. At a lattice point w the series of ζ has the constant term η(w), and that of σ the factor ±exp(η(w)(t + w/2)).
+   */
+  laurent(p: ComplexNumeric, n = 8): LaurentExpansion {
+    return quasiExpansion(this.lattice, this.kind, p, n);
+  }
+
+  /** The coefficient of 1/(z − p): 1 for ζ at a lattice point, else 0. */
+  residue(p: ComplexNumeric): Real | Complex {
+    return this.laurent(p, 1).residue;
   }
 
   get conventions(): readonly ConventionKey[] {

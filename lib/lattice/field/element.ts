@@ -13,8 +13,8 @@ import {
 } from "../../algebra/univariate.ts";
 import type { Node } from "../../number/origin.ts";
 import { Rational } from "../../number/rational.ts";
+import { exactInvariant } from "../exact-invariants.ts";
 import type { PeriodLattice } from "../period-lattice.ts";
-import { exactComplexOf } from "./exact-value.ts";
 import { type Constants, exactOf, exactScalar, namedScalar, type Scalar, scalarRing } from "./scalar.ts";
 
 export type ScalarPolynomial = Univariate<Scalar>;
@@ -42,9 +42,8 @@ const fields = new WeakMap<PeriodLattice, FunctionField>();
 export function fieldOf(lattice: PeriodLattice): FunctionField {
   const known = fields.get(lattice);
   if (known) return known;
-  const { given } = lattice;
   const constant = (name: "g2" | "g3"): Scalar => {
-    const exact = given.kind === "invariants" ? exactComplexOf(given[name]) : undefined;
+    const exact = exactInvariant(lattice, name);
     return exact ? exactScalar(exact) : namedScalar(name);
   };
   const [g2, g3] = [constant("g2"), constant("g3")];

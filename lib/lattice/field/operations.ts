@@ -103,7 +103,7 @@ export type Centre =
       readonly zeros: number;
       readonly poles: number;
     }
-  | { readonly kind: "number" };
+  | { readonly kind: "number"; readonly zeros: number; readonly poles: number };
 
 /** [expression, centre, k] or [expression, centre, k, number]: coefficient number k from the leading one. */
 export const COEFFICIENT = operation("series coefficient", (f, [centre, k, number], at, prec) => {
@@ -116,7 +116,7 @@ export const COEFFICIENT = operation("series coefficient", (f, [centre, k, numbe
   const c = centre as Centre;
   if (c.kind === "origin") return disc.round(seriesAtOrigin(F, parts, index + 1).coefficients[index]!, prec);
   const { x, y } = centreValues(f, c, number === undefined ? undefined : asDisc(at(number)), wp);
-  const [zeros, poles] = c.kind === "number" ? [0, 0] : [c.zeros, c.poles];
+  const { zeros, poles } = c;
   if (poles === 0 && disc.containsZero(hornerDisc(parts.D, x, wp))) {
     throw new PoleError({
       subject: "laurent",

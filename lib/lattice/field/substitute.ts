@@ -1,6 +1,7 @@
 // Elliptic functions at other arguments: f(nz), f(z − p), by the addition theorem in the function field.
 
 import { Rational } from "../../number/rational.ts";
+import { multipleAsElements } from "./division.ts";
 import {
   addElements,
   constantElement,
@@ -10,19 +11,14 @@ import {
   isZeroElement,
   mulElements,
   negElement,
-  primeElement,
   type ScalarPolynomial,
+  sameElement,
   wpElement,
 } from "./element.ts";
 import { exactScalar, type Scalar } from "./scalar.ts";
 
 /** A point of the curve with coordinates in the function field; undefined is the origin. */
 export type GenericPoint = { readonly x: Element; readonly y: Element } | undefined;
-
-/** (℘(z), ℘′(z)). */
-export function genericPoint(field: FunctionField): GenericPoint {
-  return { x: wpElement(field), y: primeElement(field) };
-}
 
 /**
  * The sum of two points on y² = 4x³ − g2 x − g3: with the slope λ of the chord or tangent, x = λ²/4 − x1 − x2 and
@@ -59,15 +55,10 @@ export function quotient(f: Element, g: Element): Element {
   return mulElements(f, invElement(g));
 }
 
-/** n·P for n >= 0. */
-export function multiplePoint(P: GenericPoint, n: number): GenericPoint {
-  let sum: GenericPoint;
-  let power = P;
-  for (let k = n; k > 0; k = Math.floor(k / 2)) {
-    if (k % 2 === 1) sum = addPoints(sum, power);
-    if (k > 1) power = addPoints(power, power);
-  }
-  return sum;
+/** f(nz) for n >= 1. */
+export function multipleElement(f: Element, n: number): Element {
+  const point = multipleAsElements(f.field, n);
+  return sameElement(f, wpElement(f.field)) ? point.x : substituted(f, point);
 }
 
 /** f with ℘ and ℘′ replaced by the coordinates of a generic point. */

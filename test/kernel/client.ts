@@ -126,7 +126,7 @@ export class Client {
   /** Frames of a signed message; `key` and `parent` may be wrong on purpose. */
   frames(header: object, content: unknown, { key = this.fields.key, parent = {}, metadata = {} } = {}): Buffer[] {
     const parts = [header, parent, metadata, content].map((part) => Buffer.from(JSON.stringify(part)));
-    return [DELIMITER, Buffer.from(sign(key, parts)), ...parts];
+    return [DELIMITER, Buffer.from(sign(key, parts, this.fields.signature_scheme)), ...parts];
   }
 
   async send(channel: "shell" | "control" | "stdin", type: string, content: object, parent: object = {}) {
@@ -187,7 +187,7 @@ export class Client {
 
   private async collect(socket: AsyncIterable<Buffer[]>, into: Received[]): Promise<void> {
     for await (const frames of socket) {
-      into.push(read(frames, this.fields.key));
+      into.push(read(frames, this.fields));
       for (const look of [...this.waiting]) look();
     }
   }
@@ -203,16 +203,16 @@ export function summary(published: readonly Received[]): string[] {
   return published.map(({ header, content }) => content.execution_state ?? header.msg_type);
 }
 
-function read(frames: readonly Buffer[], key: string): Received {
+function read(frames: readonly Buffer[], { key, signature_scheme }: ConnectionFields): Received {
   const at = frames.findIndex((frame) => frame.equals(DELIMITER));
   const [signature, ...rest] = frames.slice(at + 1) as [Buffer, ...Buffer[]];
   const parts = rest.slice(0, 4);
-  if (signature.toString() !== sign(key, parts)) throw new Error("the kernel signed wrongly");
+  if (signature.toString() !== sign(key, parts, signature_scheme)) throw new Error("the kernel signed wrongly");
   const [header, parent, metadata, content] = parts.map((part) => JSON.parse(part.toString("utf8")));
   const prefix = frames.slice(0, at);
   return { prefix, signature: signature.toString(), header, parent, metadata, content, buffers: rest.slice(4) };
 }
 
-function sign(key: string, parts: readonly Buffer[]): string {
-  return key === "" ? "" : createHmac("sha256", key).update(Buffer.concat(parts)).digest("hex");
+function sign(key: string, parts: readonly Buffer[], scheme: string): string {
+  return key === "" ? "" : createHmac(scheme.replace("hmac-", ""), key).update(Buffer.concat(parts)).digest("hex");
 }

@@ -53,7 +53,7 @@ beforeAll(async () => {
     ...all(channelOf, client.replies),
     ...all(() => "stdin", client.questions),
   );
-}, 120_000);
+}, 600_000);
 afterAll(async () => {
   client?.close();
   await kernel?.exited;

@@ -4,7 +4,7 @@ import { Router, Subscriber } from "zeromq";
 import { Client, freeConnection } from "../client.ts";
 import { build, groupLives, startProcess } from "../process.ts";
 
-beforeAll(build, 120_000);
+beforeAll(build, 600_000);
 
 /** Memory of a process in MB. */
 const memoryOf = (pid: number) => (Number(readFileSync(`/proc/${pid}/statm`, "utf8").split(" ")[1]) * 4096) / 1e6;

@@ -30,6 +30,7 @@ it("whatever a request holds: one reply of its type with a status, busy first, i
       await test.client.shell.send(test.client.frames(header, content, { parent, metadata }));
       const { reply, published } = await test.client.exchange(header.msg_id);
       expect(reply.header.msg_type).toBe(`${type}_reply`);
+      expect(test.client.replies.filter(({ parent }) => parent.msg_id === header.msg_id).length).toBe(1);
       expect(["ok", "error", "complete", "incomplete", "invalid", "unknown"]).toContain(reply.content.status);
       if (type === "execute") expect(reply.content.execution_count).toEqual(expect.any(Number));
       const states = summary(published);

@@ -5,7 +5,7 @@ import { Router } from "zeromq";
 import { Client, freeConnection, summary } from "../client.ts";
 import { build, connectionFile, groupLives, KERNEL_ENTRY, startProcess, startWith } from "../process.ts";
 
-beforeAll(build, 120_000);
+beforeAll(build, 600_000);
 
 const sleep = (ms: number) => new Promise((resolve) => setTimeout(resolve, ms));
 /** Resolves when no process of the group is left; how fast that has to be, the host tests measure. */
@@ -88,8 +88,9 @@ it("a taken port: status 1 and one line — oracle: the port taken here", async 
   const fields = await freeConnection();
   const taken = new Router({ linger: 0 });
   await taken.bind(`tcp://127.0.0.1:${fields.hb_port}`);
-  const { exited, errors } = await startProcess(fields);
+  const { exited, errors, pid } = await startProcess(fields);
   expect(await exited).toBe(1);
+  expect(await gone(pid)).toBe(true);
   expect(errors()).toMatch(/^halfperiod: hb socket: tcp:\/\/127\.0\.0\.1:\d+ cannot be bound \(it is in use\).*\n$/);
   taken.close();
 });

@@ -167,3 +167,26 @@ it("a second client is welcomed and sees what the first one does — oracle: pro
   await other.idle(id);
   expect(summary(other.of(id))).toEqual(["busy", "execute_input", "execute_result", "idle"]);
 });
+
+it("requests sent back to back are served one at a time, in order: no state overlaps — oracle: protocol", async () => {
+  const { client } = test;
+  const kinds = ["execute", "complete", "is_complete", "kernel_info", "history", "inspect", "comm_info"] as const;
+  const ids: string[] = [];
+  for (let n = 0; n < 105; n += 1) {
+    const content = { code: "print a\nvalue 1", cursor_pos: 3, hist_access_type: "tail" };
+    ids.push(await client.send("shell", `${kinds[n % kinds.length]}_request`, content));
+  }
+  await client.exchange(ids.at(-1) as string);
+  const states = client.published.filter(({ parent }) => ids.includes(String(parent.msg_id)) && parent.msg_type);
+  const heard = states.flatMap(({ parent, content }) =>
+    content.execution_state ? [[parent.msg_id, content.execution_state]] : [],
+  );
+  expect(heard).toEqual(
+    ids.flatMap((id) => [
+      [id, "busy"],
+      [id, "idle"],
+    ]),
+  );
+  const answered = client.replies.flatMap(({ parent }) => (ids.includes(String(parent.msg_id)) ? [parent.msg_id] : []));
+  expect(answered).toEqual(ids);
+});

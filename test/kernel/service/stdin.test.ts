@@ -46,8 +46,10 @@ it("end of file arrives as such — oracle: protocol, U+0004", async () => {
 
 it("without allow_stdin nobody is asked and the cell goes on — oracle: protocol", async () => {
   const questions = test.client.questions.length;
-  const { reply } = await test.client.execute("ask x?", { allow_stdin: false });
-  expect(reply.content.status).toBe("ok");
+  for (const options of [{ allow_stdin: false }, {}, { allow_stdin: null }]) {
+    const { reply } = await test.client.execute("ask x?", options);
+    expect(reply.content.status).toBe("ok");
+  }
   expect(test.client.questions.length).toBe(questions);
 });
 

@@ -62,3 +62,15 @@ it("curve: whoever has the public key is served on all sockets, others are not h
   expect((await test.client.execute("value 1")).reply.content.status).toBe("ok");
   await test.stop();
 });
+
+it.each([{ signature_scheme: "hmac-sha512" }, { signature_scheme: "hmac-md5" }, { key: "" }])(
+  "a connection with %j works on shell, control and iopub — oracle: the client's own signatures",
+  async (change) => {
+    const test = await startTestKernel(change);
+    const { published } = await test.client.execute("print a");
+    expect(summary(published)).toEqual(["busy", "execute_input", "stream", "idle"]);
+    const { reply } = await test.client.request("control", "kernel_info_request");
+    expect(reply.signature.length).toBe("key" in change ? 0 : change.signature_scheme === "hmac-md5" ? 32 : 128);
+    await test.stop();
+  },
+);

@@ -7,7 +7,7 @@ import { install } from "../../../../kernel/service/install/install.ts";
 import { survey } from "../../../../kernel/service/install/survey.ts";
 import { build } from "../../process.ts";
 
-beforeAll(build, 120_000);
+beforeAll(build, 600_000);
 const data = mkdtempSync(path.join(tmpdir(), "halfperiod diagnose "));
 const kernelJson = path.join(data, "kernels", "halfperiod", "kernel.json");
 const machine = { platform: process.platform, env: { JUPYTER_DATA_DIR: data }, home: data };

@@ -15,7 +15,7 @@ import { searchedDataFolders, sharedDataFolder, userDataFolder } from "../../../
 import { install, remove } from "../../../../kernel/service/install/install.ts";
 import { build } from "../../process.ts";
 
-beforeAll(build, 120_000);
+beforeAll(build, 600_000);
 
 const base = mkdtempSync(path.join(tmpdir(), "halfperiod install "));
 afterAll(() => rmSync(base, { recursive: true }));

@@ -100,6 +100,7 @@ export { ask } from "./page/ask.ts";
 export { Derivation, derivation } from "./page/derivation.ts";
 export { notebook } from "./page/notebook.ts";
 export { progress } from "./page/progress.ts";
+export { sources } from "./page/sources.ts";
 export { type Row, Table, type TableOptions, type TableValue, table } from "./page/table.ts";
 export { tex, typeset } from "./page/typeset.ts";
 export { working } from "./page/working.ts";

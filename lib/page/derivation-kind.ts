@@ -29,6 +29,7 @@ export const derivationKind: Kind<Derivation> = {
     steps: derivation.steps.map((step) => ({
       text: step.text,
       ...(step.label ? { label: step.label } : {}),
+      ...(step.source ? { source: step.source } : {}),
       value: step.value === undefined || step.trace ? null : show.data(step.value),
       check: step.check ? standingOf(step)!.kind : null,
     })),

@@ -3,6 +3,7 @@
 import type { ConventionKey } from "../proof/conventions.ts";
 import type { Standing } from "../proof/standing.ts";
 import { Claim } from "../surface/claim-value.ts";
+import { citeSource } from "./sources.ts";
 
 /** How much of a derivation is shown: the words only, the steps with their values, or sources and checks too. */
 export type Level = "outline" | "steps" | "all";
@@ -63,6 +64,7 @@ export class Derivation {
    * stands for the number of an earlier step.
    */
   step(text: string, parts: StepParts = {}): Derivation {
+    if (parts.source) citeSource(parts.source);
     return this.#with({ steps: [...this.steps, { text, ...parts }] });
   }
 

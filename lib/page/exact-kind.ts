@@ -1,5 +1,6 @@
 // Exact numbers: rationals and numbers a + b√d.
 
+import type { Residue } from "../algebra/primefield.ts";
 import type { Quadratic } from "../number/quadratic.ts";
 import type { Rational } from "../number/rational.ts";
 import { parseDecimal, texInteger } from "./digits.ts";
@@ -14,6 +15,13 @@ export const rationalKind: Kind<Rational> = {
     return re ? { kind: "number", re } : { kind: "formula", text: String(q), tex: rationalTex(q) };
   },
   data: (q) => ({ kind: "rational", value: String(q) }),
+};
+
+/** A residue with its modulus; in an equation over F_p the number alone. */
+export const residueKind: Kind<Residue> = {
+  text: (r) => `${r.value} mod ${r.modulus}`,
+  tex: (r) => `${texInteger(String(r.value))} \\bmod ${texInteger(String(r.modulus))}`,
+  data: (r) => ({ kind: "residue", value: String(r.value), modulus: String(r.modulus) }),
 };
 
 export function rationalTex(q: Rational): string {

@@ -1,13 +1,16 @@
 // The one table of how each class of values is shown. A class must stand above the classes it extends.
 
+import { Residue } from "../algebra/primefield.ts";
 import { Figure } from "../figure/figure.ts";
 import { Quadratic } from "../number/quadratic.ts";
 import { Rational } from "../number/rational.ts";
 import { Complex, Real } from "../number/values.ts";
+import { isRecognition } from "../surface/claim-answer.ts";
 import { Claim } from "../surface/claim-value.ts";
 import { ClassPolynomial } from "../surface/class-polynomial.ts";
 import { ComplexMultiplication } from "../surface/complex-multiplication.ts";
 import { Curve } from "../surface/curve.ts";
+import { DegenerateLattice } from "../surface/degenerate.ts";
 import { EllipticFunction } from "../surface/elliptic-function.ts";
 import { Factorisation } from "../surface/factorisation.ts";
 import { Homothety } from "../surface/homothety.ts";
@@ -27,7 +30,7 @@ import { claimKind } from "./claim-kind.ts";
 import { curveKind, pointKind } from "./curve-kind.ts";
 import { Derivation } from "./derivation.ts";
 import { derivationKind } from "./derivation-kind.ts";
-import { quadraticKind, rationalKind } from "./exact-kind.ts";
+import { quadraticKind, rationalKind, residueKind } from "./exact-kind.ts";
 import { homothetyKind, laurentKind, multiplicationKind, secondRouteKind } from "./expansion-kind.ts";
 import { factorisationKind } from "./factorisation-kind.ts";
 import { figureKind } from "./figure-kind.ts";
@@ -37,9 +40,11 @@ import { classPolynomialKind, jacobiKind, movedKind, qSeriesKind } from "./modul
 import { morphismKind } from "./morphism-kind.ts";
 import { complexKind, realKind } from "./number-kind.ts";
 import { isPolynomial, planeCurveKind, planePointKind, polynomialKind } from "./plane-kind.ts";
+import { degenerateKind, isReducedBasis, recognitionKind, reducedBasisKind, throughKind } from "./record-kind.ts";
 import { isStanding, standingKind } from "./standing.ts";
 import { Table } from "./table.ts";
 import { tableKind } from "./table-kind.ts";
+import { isThroughPoint } from "./through-shape.ts";
 import { torsionKind } from "./torsion-kind.ts";
 
 export const KINDS: readonly KindEntry[] = [
@@ -48,6 +53,7 @@ export const KINDS: readonly KindEntry[] = [
   entry(Complex, complexKind),
   entry(Rational, rationalKind),
   entry(Quadratic, quadraticKind),
+  entry(Residue, residueKind),
   entry(Factorisation, factorisationKind),
   entry(Lattice, latticeKind),
   entry(EllipticFunction, functionKind),
@@ -60,6 +66,10 @@ export const KINDS: readonly KindEntry[] = [
   entry(Morphism, morphismKind),
   shape(isPolynomial, polynomialKind),
   shape(isStanding, standingKind),
+  shape(isReducedBasis, reducedBasisKind),
+  shape(isThroughPoint, throughKind),
+  shape(isRecognition, recognitionKind),
+  entry(DegenerateLattice, degenerateKind),
   entry(LaurentExpansion, laurentKind),
   entry(Homothety, homothetyKind),
   entry(ComplexMultiplication, multiplicationKind),

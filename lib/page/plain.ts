@@ -104,6 +104,8 @@ class Writer {
   }
 
   #list(value: readonly unknown[], depth: number): string {
+    const matrix = matrixText(value);
+    if (matrix !== undefined) return matrix;
     const shown = Math.min(value.length, this.#limits.items);
     const parts: string[] = [];
     for (let k = 0; k < shown && this.#left > 0; k++) parts.push(this.#property(value, String(k), depth) ?? "(empty)");
@@ -145,6 +147,8 @@ class Writer {
       );
     }
     const name = className(value);
+    // Parts of several lines stand in lines of their own.
+    if (parts.some((part) => part.includes("\n")) && (name === undefined || name === "Object")) return inLines(parts);
     const body = parts.length === 0 ? "{}" : `{ ${this.#joined(parts, keys.length)} }`;
     return name === undefined || name === "Object" ? body : `${name} ${body}`;
   }
@@ -160,6 +164,24 @@ class Writer {
     const rest = count - parts.length;
     return [...parts, ...(rest > 0 ? [`... ${rest} more`] : [])].join(", ");
   }
+}
+
+/** A short matrix of bigints, written without the n of a literal: [[0, -1], [1, 0]]. */
+function matrixText(value: readonly unknown[]): string | undefined {
+  if (value.length === 0 || value.length > 12) return undefined;
+  const rows = Array.from(value, (_, k) => Object.getOwnPropertyDescriptor(value, k)?.value as unknown);
+  const width = Array.isArray(rows[0]) ? rows[0].length : 0;
+  const whole = rows.every(
+    (row) =>
+      Array.isArray(row) && row.length === width && width <= 12 && row.every((entry) => typeof entry === "bigint"),
+  );
+  if (!whole || width === 0) return undefined;
+  return `[${(rows as bigint[][]).map((row) => `[${row.join(", ")}]`).join(", ")}]`;
+}
+
+/** "name: value", one a line, what goes on in further lines moved in. */
+function inLines(parts: readonly string[]): string {
+  return parts.map((part) => part.replace(/\n/g, "\n  ")).join("\n");
 }
 
 function quoted(text: string, limit: number): string {

@@ -2,7 +2,9 @@
 
 import type { Field } from "../algebra/field.ts";
 import { type Polynomial, sortedTerms } from "../algebra/multivariate.ts";
+import { Residue } from "../algebra/primefield.ts";
 import { type Equation, leadingSide } from "../curve/equation/print.ts";
+import { texInteger } from "./digits.ts";
 import type { Show } from "./kind.ts";
 import { texName, texWords } from "./tex.ts";
 
@@ -11,6 +13,7 @@ export type Coefficients<T> = Pick<Field<T>, "format" | "neg">;
 
 /** An element of a field: typeset by its class where it has one, else by the text of the field. */
 export function elementTex<T>(F: Coefficients<T>, c: T, show: Show): string {
+  if (c instanceof Residue) return texInteger(F.format(c));
   return typeof c === "object" && c !== null ? show.tex(c) : texWords(F.format(c));
 }
 

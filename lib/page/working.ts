@@ -14,6 +14,7 @@ import { Point } from "../surface/point.ts";
 import { TorsionSubgroup } from "../surface/torsion.ts";
 import type { Derivation } from "./derivation.ts";
 import { isPolynomial } from "./plane-kind.ts";
+import { isThroughPoint } from "./through-shape.ts";
 import { curveWorking, exponentialWorking, pointWorking } from "./working/curve.ts";
 import { factorisationWorking } from "./working/factorisation.ts";
 import { morphismWorking } from "./working/isogeny.ts";
@@ -31,7 +32,7 @@ import {
   recognitionWorking,
   relatedWorking,
 } from "./working/relations.ts";
-import { isThroughPoint, throughWorking } from "./working/through.ts";
+import { throughWorking } from "./working/through.ts";
 import { torsionWorking } from "./working/torsion.ts";
 import { valueOfWp, wpWorking } from "./working/weierstrass.ts";
 

@@ -169,6 +169,13 @@ export class Lattice {
 
   /** The basis with τ in the fundamental domain, and the matrix that leads to it. */
   get reduced(): ReducedBasis {
+    this.#reduced ??= remember(this.#reduction(), { lattice: this });
+    return this.#reduced;
+  }
+
+  #reduced: ReducedBasis | undefined;
+
+  #reduction(): ReducedBasis {
     const { toReduced, boundary } = this.data;
     const { a, b, c, d } = toReduced;
     const matrix: IntegerMatrix = [
@@ -176,7 +183,7 @@ export class Lattice {
       [c, d],
     ];
     const tau = Complex.from(apply(REDUCED_TAU, [this.data], exactReducedTau(this.data)));
-    return remember({ periods: [this.at(d, c), this.at(b, a)], tau, matrix, boundary }, { lattice: this });
+    return { periods: [this.at(d, c), this.at(b, a)], tau, matrix, boundary };
   }
 
   /** z in the coordinates of the basis, with a nearest lattice point. */

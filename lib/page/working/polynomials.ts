@@ -22,7 +22,7 @@ export function divisionWorking(psi: Polynomial<Rational>, E: Curve, n: number):
     .step(
       "$\\psi_1 = 1$, $\\psi_2 = 2y + a_1x + a_3$, $\\psi_3$, $\\psi_4$ and the recursion $\\psi_{2m+1} = \\psi_{m+2}\\psi_m^3 - \\psi_{m-1}\\psi_{m+1}^3$, $\\psi_{2m}\\psi_2 = \\psi_m(\\psi_{m+2}\\psi_{m-1}^2 - \\psi_{m-2}\\psi_{m+1}^2)$",
       {
-        source: "common practice; Silverman AEC, exercise 3.7",
+        source: "common practice; Silverman AEC, exercise 3.7 (from memory)",
         formula: `\\deg = ${n % 2 === 0 ? "(n^2 + 2)/2" : "(n^2 - 1)/2"}`,
         value: degree,
         check: exactly(
@@ -133,7 +133,7 @@ export function pairingWorking(value: object, E: Curve, n: number, P: AnyPoint, 
     .step("by Miller's functions with divisors $n(P) - n(O)$ and $n(Q) - n(O)$", {
       formula: `e_{${n}}(P, Q)`,
       value: e,
-      source: "common practice; Miller, J. Cryptology 17 (2004)",
+      source: "common practice; Miller, J. Cryptology 17 (2004) (from memory)",
       check: exactly(F.format(power(F, e!, n)) === F.format(F.one), `its ${n}-th power is 1`),
       route: "as a root of unity",
       label: "pairing",

@@ -95,7 +95,7 @@ export function jacobiWorking(J: Jacobi): Derivation {
     })
     .step("complete integrals $K(m)$ and $K(m_1)$ by arithmetic-geometric means, $K = \\pi/2M(1, \\sqrt{m_1})$", {
       value: { K: J.K, "K′": J.K1 },
-      source: "common practice; DLMF 19.8 (number from memory)",
+      source: "common practice; DLMF 19.8 (from memory)",
       check: jointly(standingOf(carlson.RF(0, J.m1, 1), "=", K), standingOf(carlson.RF(0, J.m, 1), "=", K1)),
       route: "$R_F(0, m_1, 1)$ and $R_F(0, m, 1)$ by duplication",
       label: "periods",

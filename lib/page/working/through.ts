@@ -1,23 +1,15 @@
 // The way from a cubic or a quartic with a point to its Weierstrass model, as a derivation.
 
-import { evaluate } from "../../algebra/multivariate.ts";
+import { evaluate, type Polynomial } from "../../algebra/multivariate.ts";
 import { rationals as Q } from "../../algebra/rationals.ts";
+import { cubicC4C6, cubicInvariants } from "../../curve/map/invariants.ts";
 import { changeModel } from "../../curve/weierstrass.ts";
 import { Rational } from "../../number/rational.ts";
 import type { ThroughPoint } from "../../surface/cubic.ts";
-import { Curve } from "../../surface/curve.ts";
-import { Morphism } from "../../surface/morphism.ts";
 import type { PlaneCurve, PlanePoint } from "../../surface/variety.ts";
 import { Derivation } from "../derivation.ts";
 import { minimality } from "./minimal.ts";
 import { curveCheck, exactly, jointly } from "./parts.ts";
-
-export function isThroughPoint(value: unknown): value is ThroughPoint<PlaneCurve> {
-  if (typeof value !== "object" || value === null) return false;
-  const { curve, to, from, steps } = value as Partial<ThroughPoint<PlaneCurve>>;
-  const isOne = curve instanceof Curve && to instanceof Morphism && from instanceof Morphism && steps !== undefined;
-  return isOne && curve.field.name === "Q"; // the steps lead to a minimal model
-}
 
 export function throughWorking({ curve, to, from, steps }: ThroughPoint<PlaneCurve>): Derivation {
   const { point, tangent, third, flex, raw, projected } = steps;
@@ -27,12 +19,20 @@ export function throughWorking({ curve, to, from, steps }: ThroughPoint<PlaneCur
     .under("modelChange")
     .step("the curve and the point that becomes $O$", {
       value: { curve: C, point },
-      check: exactly(residual(C, point.coordinates).sign() === 0, "the equation is 0 at the point"),
+      check: exactly(
+        C.model.equations.every((f) => evaluate(Q, f, point.coordinates).sign() === 0),
+        "the equation is 0 at the point",
+      ),
       route: "exact substitution into the equation",
       label: "point",
     });
   if (projected) {
-    working = working.step("the plane cubic to which the quadrics are projected from the point", { value: projected });
+    working = working.step("the plane cubic to which the quadrics are projected from the point", {
+      value: projected,
+      check: exactly(invariantOf(projected)?.equals(curve.j) ?? false, "its invariants give the j of the model found"),
+      route: "by the invariants of the cubic",
+      label: "projected",
+    });
   }
   if (tangent && third) working = tangentSteps(working, C, point, { tangent, third, flex: flex === true });
   return working
@@ -112,6 +112,17 @@ function tangentSteps(working: Derivation, C: PlaneCurve, point: PlanePoint, { t
         route: "exact substitution into the equation",
         label: "third",
       });
+}
+
+/** j of a ternary cubic by Aronhold's invariants. */
+function invariantOf(form: Polynomial<Rational>): Rational | undefined {
+  const invariants = cubicInvariants(Q, form);
+  if (!invariants) return undefined;
+  const [c4, c6] = cubicC4C6(Q, invariants);
+  return c4
+    .pow(3)
+    .times(1728)
+    .div(c4.pow(3).minus(c6.pow(2)));
 }
 
 function residual(C: PlaneCurve, coordinates: readonly Rational[]): Rational {

@@ -19,7 +19,7 @@ import { table } from "../table.ts";
 import { curveCheck, exactly, factorTex, inX } from "./parts.ts";
 
 const INJECTIVE =
-  "common practice; Silverman AEC, VII.3: for an odd prime of good reduction torsion meets the kernel of reduction in O only";
+  "common practice; Silverman AEC, VII.3 (from memory): for an odd prime of good reduction torsion meets the kernel of reduction in O only";
 
 export function torsionWorking(group: TorsionSubgroup, E: Curve): Derivation {
   const { curve: minimal, to } = E.minimal();
@@ -91,7 +91,7 @@ function left(working: Derivation, group: TorsionSubgroup, minimal: Curve, a: In
     const shown = f.length <= LONGEST ? { formula, value: inX(f) } : { formula: shortened(l, f) };
     const parts = {
       ...shown,
-      source: "common practice; Silverman AEC, exercise 3.7",
+      source: "common practice; Silverman AEC, exercise 3.7 (from memory)",
       ...divisionCheck(minimal, a, group, f, l),
       label: `psi${l}`,
     };

@@ -17,6 +17,7 @@ import { legendre } from "../../../lib/surface/legendre.ts";
 import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
 import { lattice } from "../../../lib/surface/make-lattice.ts";
+import { quadrics } from "../../../lib/surface/make-quadrics.ts";
 import { quartic } from "../../../lib/surface/make-quartic.ts";
 import { modular } from "../../../lib/surface/modular.ts";
 
@@ -134,6 +135,7 @@ describe("working of lattices and of what is computed on them", () => {
     expect(text(steps)).toContain("(3) the tangent meets the curve again in\n    (1 : -2 : 1)");
     sound(working(cubic`x^3 + y^3 + z^3 = 0`.through({ x: 1, y: -1, z: 0 })));
     sound(working(quartic`y^2 = x^4 + 1`.through({ x: 0, y: 1 })));
+    sound(working(quadrics`a^2 + 5b^2 = c^2, a^2 - 5b^2 = d^2`.through({ a: 1, b: 0, c: 1, d: 1 })));
   });
 
   it("numbers: each operation by its inverse or an identity", () => {

@@ -10,6 +10,7 @@ import {
   rootsOf,
   type Triple,
 } from "./carlson-duplication.ts";
+import { isSpread, rcByLogarithm, rfByMean } from "./carlson-mean.ts";
 import { carlsonSeries, farEnough, termCount } from "./carlson-series.ts";
 import { ontoReal } from "./enclosure.ts";
 
@@ -20,26 +21,40 @@ const THREE: { man: bigint; exp: number; rad: number } = { man: 3n, exp: 0, rad:
  *
  * Domain   x, y, z off the negative real axis, at most one of them 0.
  * Branch   roots with positive real part along the path; analytic in the cut planes.
- * Error    enclosure: duplication on discs, the tail of the series by carlson-series.ts. Relative, about 2^−prec for exact arguments.
- * Cost     about √prec/4 duplications of three roots, √(3 prec) terms; log of the spread of the arguments besides.
+ * Error    enclosure, relative, about 2^−prec for exact arguments.
+ * Cost     real arguments: log2(prec) steps of two roots, and a logarithm. Complex ones, and such that are near each other: about √prec/4
+ *          duplications of three roots, √(3 prec) terms; log of the spread of the arguments besides.
  * Throws   DomainError for a negative argument, PoleError for two zeros, BranchError for a disc that meets the cut.
- * Source   DLMF 19.16.1, 19.36.1; B. C. Carlson, Numer. Algorithms 10 (1995), 13-26, section 2.
+ * Source   DLMF 19.16.1, 19.36.1, 19.36(ii); B. C. Carlson, Numer. Algorithms 10 (1995), 13-26, section 2.
  */
 export function carlsonRF(x: Disc, y: Disc, z: Disc, prec: number, real = false): Disc {
   refuseZeros("RF", [x, y, z], 1);
-  const wp = prec + 24;
-  const [a, b, c] = rootsOf("RF", [x, y, z], wp) as unknown as Triple;
-  const value = rfOfRoots([a, b, c], prec, [x, y, z]);
-  return closedUnderConjugation([x, y, z], real) ? ontoReal(value) : value;
+  return rfBy(rfOfRoots, [x, y, z], prec, real);
+}
+
+/** RF by Carlson's duplication alone, the second route of real arguments. */
+export function rfByDuplication(x: Disc, y: Disc, z: Disc, prec: number, real = false): Disc {
+  return rfBy(duplicatedRF, [x, y, z], prec, real);
+}
+
+function rfBy(method: typeof rfOfRoots, squares: Triple, prec: number, real: boolean): Disc {
+  const roots = rootsOf("RF", squares, prec + 24) as unknown as Triple;
+  const value = method(roots, prec, squares);
+  return closedUnderConjugation(squares, real) ? ontoReal(value) : value;
 }
 
 /**
- * RF(a², b², c²) for a, b, c with positive real part (one of them may be 0).
- * `squares` are their squares, if at hand.
+ * RF(a², b², c²) for a, b, c with positive real part (one of them may be 0), from their squares too.
+ * Positive roots go by the mean where their squares are apart.
  */
-export function rfOfRoots(roots: Triple, prec: number, squares?: Triple): Disc {
+export function rfOfRoots(roots: Triple, prec: number, squares: Triple): Disc {
+  const positive = roots.every((a) => a.axis === "real" && a.re >= 0n && (disc.isZero(a) || !disc.containsZero(a)));
+  return positive && isSpread(squares) ? rfByMean(...squares, prec) : duplicatedRF(roots, prec, squares);
+}
+
+/** RF by Carlson's duplication, as rfOfRoots. */
+export function duplicatedRF(roots: Triple, prec: number, [x, y, z]: Triple): Disc {
   const wp = prec + 24;
-  const [x, y, z] = squares ?? (roots.map((a) => disc.sqr(a, wp)) as unknown as Triple);
   const [xy, yz, zx] = [disc.sub(x, y, wp), disc.sub(y, z, wp), disc.sub(z, x, wp)];
   // 3(A − x) = (y − x) + (z − x), and so on; the sum of the three is 0.
   const gaps = [disc.sub(zx, xy, wp), disc.sub(xy, yz, wp), disc.sub(yz, zx, wp)];
@@ -81,8 +96,12 @@ export function rootOfMean(a: Disc, mean: Disc, wp: number): Disc {
 export function carlsonRC(x: Disc, y: Disc, prec: number): Disc {
   refuseZeros("RC", [y], 0);
   if (y.axis === "real" && y.re < 0n && !disc.containsZero(y)) return principalRC(x, disc.neg(y), prec);
-  const wp = prec + 24;
-  const [a, b] = rootsOf("RC", [x, y], wp) as [Disc, Disc];
+  return isSpread([x, y]) ? rcByLogarithm(x, y, prec) : duplicatedRC(x, y, prec);
+}
+
+/** RC by Carlson's duplication, off the cut. */
+export function duplicatedRC(x: Disc, y: Disc, prec: number): Disc {
+  const [a, b] = rootsOf("RC", [x, y], prec + 24) as [Disc, Disc];
   return rcOfRoots(a, b, prec, x, y);
 }
 

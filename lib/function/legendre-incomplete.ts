@@ -63,6 +63,13 @@ function isNegative(x: Disc): boolean {
   return x.axis === "real" && x.re < 0n && !disc.containsZero(x);
 }
 
+/** sin φ, cos φ, their squares and Δ at φ itself, for the derivatives. */
+export type AmplitudeParts = Pick<Amplitude, "s" | "c" | "delta" | "c2" | "s2">;
+
+export function amplitudeParts(phi: Disc, k: Modulus, prec: number): AmplitudeParts {
+  return amplitude(phi, k, prec + 8);
+}
+
 function reduced(phi: Disc, wp: number): { rest: Disc; halfTurns: bigint } {
   const pi = ball.pi(wp + Math.max(0, disc.magnitude(phi)) + 8);
   const turns = ball.div(disc.real(phi), pi, 64 + Math.max(0, disc.magnitude(phi)));

@@ -69,19 +69,17 @@ class Session:
         }
 
     def interrupt(self, code):
-        """Starts endless code, interrupts it, and tells how long it took to end."""
+        """Starts endless code, interrupts it, and tells how it ended."""
         msg_id = self.client.execute(code)
         while True:
             message = self.client.get_iopub_msg(timeout=30)
             if message["msg_type"] == "execute_input" and message["parent_header"].get("msg_id") == msg_id:
                 break
         time.sleep(1.0)
-        began = time.monotonic()
         self.manager.interrupt_kernel()
         reply = self.client.get_shell_msg(timeout=30)
-        took = time.monotonic() - began
         heard = self.outputs(msg_id)
-        return {"reply": reply["content"], "seconds": took, "order": [kind for kind, _ in heard]}
+        return {"reply": reply["content"], "order": [kind for kind, _ in heard]}
 
     def complete(self, code, position):
         self.client.complete(code, position)
@@ -114,11 +112,9 @@ def main():
         facts["completion_start"] = len(emoji) - len("latt")
 
         first = session.pid()
-        began = time.monotonic()
         session.client.stop_channels()
         session.manager.restart_kernel(now=False)
         session.connect()
-        facts["restart_seconds"] = time.monotonic() - began
         facts["restart_new_process"] = session.pid() != first
         facts["after_restart"] = session.execute("kept")
         facts["count_after_restart"] = session.execute("1")["reply"]["execution_count"]
@@ -126,11 +122,12 @@ def main():
         family = [session.pid()] + descendants(session.pid())
         facts["family_size"] = len(family)
         session.execute("setInterval(() => {}, 1000); 1")
-        began = time.monotonic()
+        process = session.manager.provisioner.process
         session.client.stop_channels()
+        session.manager.shutdown_wait_time = 60  # it is to go by itself: no signal before
         session.manager.shutdown_kernel(now=False)
-        facts["shutdown_seconds"] = time.monotonic() - began
-        deadline = time.monotonic() + 3
+        facts["shutdown_status"] = process.returncode
+        deadline = time.monotonic() + 30
         while any(alive(pid) for pid in family) and time.monotonic() < deadline:
             time.sleep(0.05)
         facts["left_alive"] = [pid for pid in family if alive(pid)]

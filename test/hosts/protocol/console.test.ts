@@ -30,13 +30,21 @@ describe.skipIf(absent !== "")("the terminal console", () => {
   }
 
   it("shows banner, results, text and errors in order, counts, and ends — oracle: what was typed", async () => {
-    const text = await converse(["const a = 20", "a + 1", 'console.log("h" + "i")', 'const n: number = "x"', "a * 2"]);
+    const text = await converse([
+      "const a = 20",
+      "a + 1",
+      'console.log("h" + "i")',
+      'const n: number = "x"',
+      "a * 2",
+      "curve`y^2 = x^3 - x`",
+    ]);
     const shown = [
       /halfperiod \d+\.\d+\.\d+: cubic curves/,
       /In \[2\]: Out\[2\]: 21\n/,
       /In \[3\]: hi\n/,
       /In \[4\]: .*TypeScriptError.*: TS2322: /,
       /In \[5\]: Out\[5\]: 40\n/,
+      /In \[6\]: Out\[6\]:\s[\s\S]*y\^2 = x\^3 - x/,
       /Shutting down kernel/,
     ];
     let from = 0;

@@ -26,8 +26,14 @@ const shared = new Int32Array(state);
 const reporter = new Reporter(shared);
 const frames = new Frames();
 
-/** Starts the watchdog; its messages arrive whenever the event loop is free. */
+/** How long the watchdog may be put off, in ms: its start would hold up that of the session. */
+const WATCHDOG_BY = 500;
+let watched = false;
+
+/** Starts the watchdog, once; its messages arrive whenever the event loop is free. */
 function startWatchdog(runner: Runner): void {
+  if (watched) return;
+  watched = true;
   const { port1, port2 } = new MessageChannel();
   const data = { port: port2, state, group: process.platform !== "win32" };
   // No execArgv of the main thread: its memory limit is not meant for this one.
@@ -65,11 +71,15 @@ function addGlobals(modules: Modules): void {
 function readCommands(runner: Runner, answer: (value: string | null) => void): void {
   const reader = new LineReader();
   const commands = new Socket({ fd: 3, readable: true, writable: false });
+  // Later on the watchdog sees the kernel go, also while a cell runs.
+  commands.on("end", () => watched || process.kill(process.pid, "SIGKILL"));
   commands.on("data", (chunk: Buffer) => {
     for (const line of reader.push(chunk)) {
       const command = JSON.parse(line) as ChildCommand;
-      if (command.kind === "run") runner.run(command);
-      else if (command.kind === "peek") runner.peek(command.id, command.name);
+      if (command.kind === "run") {
+        startWatchdog(runner);
+        runner.run(command);
+      } else if (command.kind === "peek") runner.peek(command.id, command.name);
       else answer(command.value);
     }
   });
@@ -94,7 +104,7 @@ function main(): void {
   Object.defineProperty(globalThis, "__cells", { value: machine, enumerable: false });
   addGlobals(modules);
   frames.install();
-  startWatchdog(runner);
+  setTimeout(startWatchdog, WATCHDOG_BY, runner).unref();
   const answer = connectHost(reporter, runner);
   readCommands(runner, answer);
   reporter.send({ kind: "ready" });

@@ -49,9 +49,18 @@ export function complete(types: NotebookTypes, code: string, offset: number): Co
     .filter((entry) => fits(entry, prefix) && !entry.name.startsWith(operators))
     .sort(bySortText)
     .slice(0, MOST);
+  const members = list?.isMemberCompletion ?? false;
   const detailed = entries.length <= MOST_DETAILED;
   const matches = entries.map((entry) => completion(entry, detailed ? details(types, file, at, entry) : undefined));
+  if (!members && prefix !== "") matches.push(...unread(types, prefix, matches));
   return { start: offset - prefix.length, end: offset, matches };
+}
+
+/** Globals of Node's that the checker has not read yet. */
+function unread(types: NotebookTypes, prefix: string, known: readonly Completion[]): Completion[] {
+  return types.unreadGlobals
+    .filter((name) => name.toLowerCase().startsWith(prefix.toLowerCase()) && !known.some((one) => one.text === name))
+    .map((text) => ({ text, type: "variable" }));
 }
 
 /** The part of a name that stands before the cursor. */

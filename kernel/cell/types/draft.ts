@@ -4,10 +4,7 @@ import { exportEdits } from "./exports.ts";
 import { surroundings } from "./notebook.ts";
 import { operatorEdits, operatorImport, operatorPrefix } from "./operators.ts";
 import { type Outline, outline } from "./outline.ts";
-import type { NotebookTypes } from "./service.ts";
-
-/** Number of the draft's file; no cell has it. */
-const DRAFT = 999_999_999;
+import { CURRENT, type NotebookTypes } from "./service.ts";
 
 export interface Draft {
   readonly file: string;
@@ -20,10 +17,11 @@ export interface Draft {
 /** Puts the text of a draft before the checker. */
 export function draft(types: NotebookTypes, code: string): Draft {
   const parsed = outline(code);
+  types.readNodeIfNeeded(code, parsed);
   const operators = operatorPrefix(code);
   const edits = [...exportEdits(parsed.source).edits, ...operatorEdits(parsed.source, operators)];
   const edited = new EditedText(code, inOrder(edits));
   const around = surroundings(() => true, parsed.declared, types.names, types.libraryNames());
-  types.host.setCell(DRAFT, `${edited.text}${around.text}\n${operatorImport(operators)}`, true);
-  return { file: types.host.cellFile(DRAFT), edited, parsed, operators };
+  types.host.setCell(CURRENT, `${edited.text}${around.text}\n${operatorImport(operators)}`, true);
+  return { file: types.host.cellFile(CURRENT), edited, parsed, operators };
 }

@@ -3,6 +3,7 @@
 import { existsSync, readFileSync, statSync } from "node:fs";
 import { isBuiltin } from "node:module";
 import { dirname, join } from "node:path";
+import { BASICS } from "./basics.ts";
 import { cellNumber, LIBRARY } from "./notebook.ts";
 import { OPERATORS } from "./operators.ts";
 import { type TS, ts } from "./typescript.ts";
@@ -28,15 +29,14 @@ export interface Places {
 }
 
 /** Strict, save where strictness only annoys in a notebook. */
-export function compilerOptions(places: Places): TS.CompilerOptions {
+export function compilerOptions(): TS.CompilerOptions {
   return {
     target: ts.ScriptTarget.ES2023,
     module: ts.ModuleKind.ESNext,
     moduleResolution: ts.ModuleResolutionKind.Bundler,
     customConditions: ["node"],
     lib: ["lib.es2023.d.ts"],
-    types: ["node"],
-    typeRoots: [...places.typeRoots],
+    types: [],
     strict: true,
     skipLibCheck: true,
     declaration: true,
@@ -59,25 +59,55 @@ const settledModules = new Map<string, TS.ResolvedModuleWithFailedLookupLocation
 /** Parsed files, shared in the same way. */
 export const registry: TS.DocumentRegistry = ts.createDocumentRegistry();
 
+/**
+ * Folder of the files of the cells, which exist in memory alone. The same for all notebooks, so that a program made in
+ * advance serves every one; what a cell imports is looked for from the notebook's own folder.
+ */
+const FOLDER = "/halfperiod";
+const BASICS_FILE = `${FOLDER}/basics.d.ts`;
+const BASICS_TEXT = ts.ScriptSnapshot.fromString(BASICS);
+
 /** Host of the language service of one notebook. */
 export class NotebookHost implements TS.LanguageServiceHost {
-  readonly #places: Places;
-  readonly #options: TS.CompilerOptions;
+  #places: Places;
+  readonly #options: TS.CompilerOptions = compilerOptions();
   readonly #cells = new Map<number, CellFile>();
-  readonly #resolutions: TS.ModuleResolutionCache;
+  #resolutions: TS.ModuleResolutionCache;
   readonly #libraryFolder: string;
   readonly #operatorsFile: string;
   #version = 0;
   /** A module was missing: it may be there for the next cell. */
   #forget = false;
   #root: string[] = [];
+  /** Whether Node's whole types are read, or only the basics. */
+  #wholeNode: boolean;
 
-  constructor(places: Places) {
+  constructor(places: Places, wholeNode: boolean) {
     this.#places = places;
-    this.#options = compilerOptions(places);
+    this.#wholeNode = wholeNode;
     this.#libraryFolder = dirname(places.library);
     this.#operatorsFile = join(this.#libraryFolder, "surface", "operators.d.ts");
     this.#resolutions = ts.createModuleResolutionCache(places.cwd, (name) => name, this.#options);
+  }
+
+  /** Turns to the notebook of another folder, with the same installation. */
+  move(places: Places): void {
+    this.#places = places;
+    this.#resolutions = ts.createModuleResolutionCache(places.cwd, (name) => name, this.#options);
+  }
+
+  get wholeNode(): boolean {
+    return this.#wholeNode;
+  }
+
+  /** From the next cell on Node's whole types are there. */
+  readWholeNode(): void {
+    this.#wholeNode = true;
+  }
+
+  /** Folder of Node's types, if there is one. */
+  get nodeFolder(): string | undefined {
+    return this.#places.typeRoots.map((root) => join(root, "node")).find((folder) => existsSync(folder));
   }
 
   get confined(): boolean {
@@ -89,9 +119,8 @@ export class NotebookHost implements TS.LanguageServiceHost {
     return this.#libraryFolder;
   }
 
-  /** Absolute name of the file of a cell: in the notebook's folder, so that relative imports resolve. */
   cellFile(cell: number): string {
-    return join(this.#places.cwd, `halfperiod-cell-${cell}.ts`);
+    return `${FOLDER}/halfperiod-cell-${cell}.ts`;
   }
 
   /** Sets the text of a cell's file, and makes it the root of the next program if asked. */
@@ -101,7 +130,13 @@ export class NotebookHost implements TS.LanguageServiceHost {
     this.#version++;
     this.#cells.set(cell, { version: this.#version, snapshot: ts.ScriptSnapshot.fromString(text) });
     // The library is always part of the program: else its parsed files are dropped by every cell that does not use it.
-    if (root) this.#root = [this.cellFile(cell), this.#places.library, this.#operatorsFile];
+    if (root) this.#root = [this.cellFile(cell), this.#places.library, this.#operatorsFile, this.#globals()];
+  }
+
+  /** File of the globals that are not of the language. */
+  #globals(): string {
+    const folder = this.#wholeNode ? this.nodeFolder : undefined;
+    return folder === undefined ? BASICS_FILE : join(folder, "index.d.ts");
   }
 
   dropCell(cell: number): void {
@@ -124,6 +159,7 @@ export class NotebookHost implements TS.LanguageServiceHost {
   getScriptVersion(file: string): string {
     const cell = this.#cell(file);
     if (cell) return String(cell.version);
+    if (file === BASICS_FILE) return "0";
     // A module of the user beside the notebook may be edited between two cells.
     return this.#isSettled(file) ? "0" : String(statSync(file, { throwIfNoEntry: false })?.mtimeMs ?? 0);
   }
@@ -131,6 +167,7 @@ export class NotebookHost implements TS.LanguageServiceHost {
   getScriptSnapshot(file: string): TS.IScriptSnapshot | undefined {
     const cell = this.#cell(file);
     if (cell) return cell.snapshot;
+    if (file === BASICS_FILE) return BASICS_TEXT;
     if (disk.has(file)) return disk.get(file);
     const snapshot =
       this.#isOpen(file) && existsSync(file) ? ts.ScriptSnapshot.fromString(readFileSync(file, "utf8")) : undefined;
@@ -140,7 +177,7 @@ export class NotebookHost implements TS.LanguageServiceHost {
   }
 
   getCurrentDirectory(): string {
-    return this.#places.cwd;
+    return FOLDER;
   }
 
   getDefaultLibFileName(options: TS.CompilerOptions): string {
@@ -152,7 +189,7 @@ export class NotebookHost implements TS.LanguageServiceHost {
   }
 
   fileExists(file: string): boolean {
-    return this.#cell(file) !== undefined || (this.#isOpen(file) && ts.sys.fileExists(file));
+    return file === BASICS_FILE || this.#cell(file) !== undefined || (this.#isOpen(file) && ts.sys.fileExists(file));
   }
 
   readFile(file: string, encoding?: string): string | undefined {
@@ -193,11 +230,26 @@ export class NotebookHost implements TS.LanguageServiceHost {
       const key = `${text} ${containingFile}`;
       const known = settled ? settledModules.get(key) : undefined;
       if (known) return known;
-      const found = ts.resolveModuleName(text, containingFile, options, this, this.#resolutions, redirected);
+      const found = this.#resolve(text, containingFile, options, redirected);
       if (settled) settledModules.set(key, found);
       else if (!found.resolvedModule) this.#forget = true;
       return found;
     });
+  }
+
+  /** What a cell imports is looked for from the notebook's folder. */
+  #resolve(
+    text: string,
+    from: string,
+    options: TS.CompilerOptions,
+    redirected: TS.ResolvedProjectReference | undefined,
+  ): TS.ResolvedModuleWithFailedLookupLocations {
+    const inCell = from.startsWith(`${FOLDER}/`);
+    const place = inCell ? join(this.#places.cwd, "cell.ts") : from;
+    const found = ts.resolveModuleName(text, place, options, this, this.#resolutions, redirected);
+    if (found.resolvedModule || !inCell || !text.startsWith("..")) return found;
+    // A path that the compiler itself wrote into the declarations of a cell starts from where it believes the cell is.
+    return ts.resolveModuleName(text, from, options, this, this.#resolutions, redirected);
   }
 
   /** Whether a file may be read: of a confined notebook no other than those of the installation. */

@@ -88,7 +88,8 @@ export function surroundings(
   for (const name of libraryNames) {
     if (!own.has(name) && !notebook.get(name) && wanted(name)) library.add(name);
   }
-  if (library.size > 0) lines.push(`import { ${[...library].join(", ")} } from "${LIBRARY}";`);
+  // Also when it is empty: a program is taken over if its root imports the same modules as before.
+  lines.push(`import { ${[...library].join(", ")} } from "${LIBRARY}";`);
   const exported = [...own.values()].filter((declared) => declared.kind !== "using").map((declared) => declared.name);
   if (exported.length > 0) lines.push(`export { ${exported.join(", ")} };`);
   return { text: lines.join("\n"), library, notebook: used };

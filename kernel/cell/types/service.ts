@@ -1,14 +1,15 @@
 // One notebook as the compiler sees it: check and emit a cell, remember what it defined, answer questions.
 import { confinedRefusals } from "../confined/refusals.ts";
 import type { CheckResult, CommittedCell, EmittedCell } from "../messages.ts";
+import { goesBeyondBasics, type NodeWords, readNodeWords } from "./basics.ts";
 import { type Finding, findings, throughEdits, typeScriptError } from "./diagnostics.ts";
 import { type Edit, EditedText, inOrder } from "./edits.ts";
 import { exportEdits } from "./exports.ts";
 import { NotebookHost, type Places, registry } from "./host.ts";
-import { NotebookNames, seesLibrary, surroundings } from "./notebook.ts";
+import { LIBRARY, NotebookNames, seesLibrary, surroundings } from "./notebook.ts";
 import { emitOperators } from "./operator-emit.ts";
 import { operatorFindings } from "./operator-findings.ts";
-import { hasOperators, operatorEdits, operatorImport, operatorPrefix } from "./operators.ts";
+import { hasOperators, OPERATORS, operatorEdits, operatorImport, operatorPrefix } from "./operators.ts";
 import { type Declared, type Outline, outline, syntaxErrors } from "./outline.ts";
 import { rewriteCell } from "./rewrite.ts";
 import { finalObjectEdits, loopNotices, textNotices, withHint } from "./slips.ts";
@@ -34,11 +35,19 @@ interface Pending {
   readonly text: string;
 }
 
+/** Cells that use what most cells use. The last one leaves the program in the state in which a plain cell finds it. */
+const WARMING = [
+  "const half = real('0.5'); let sum = half; for (const k of [1, 2, 3]) sum += k * half; sum",
+  "const numbers: number[] = [1].map((x) => x + 1); function twice(x: number) { return 2 * x } numbers.map(twice)",
+  "const E = curve`y^2 + y = x^3 - x`; const [P] = [E.point(0, 0)]; console.log(-P, 3/7 * E.lattice().periods[0]); 2 * P",
+  "const two: number = 1 + 1; two",
+];
+
 /**
  * Number of the file in which a cell is checked. One file for all: a program whose root has another name is made anew
  * from all its files, one whose root has the same imports is taken over.
  */
-const CURRENT = 999_999_998;
+export const CURRENT = 999_999_998;
 
 /** Names of a library by its folder; a snapshot keeps them, and saves a start one whole program. */
 const librariesRead = new Map<string, readonly string[]>();
@@ -49,15 +58,50 @@ export class NotebookTypes {
   readonly host: NotebookHost;
   readonly service: TS.LanguageService;
   readonly #pending = new Map<number, Pending>();
-  constructor(places: Places) {
-    this.host = new NotebookHost(places);
+  /** Where Node's whole types are not read yet: what tells that they are needed. */
+  #nodeWords: NodeWords | undefined;
+
+  /** `wholeNode` false: Node's whole types are read when a cell needs them; `warm` finds out when. */
+  constructor(places: Places, wholeNode = true) {
+    this.host = new NotebookHost(places, wholeNode);
     this.service = ts.createLanguageService(this.host, registry);
   }
 
-  /** Loads library and node types, so that the first cell need not. */
+  /** Loads what cells need and compiles what checks them, so that the first cell need not wait for it. */
   warm(): void {
-    this.check(0, 0, "export const warm: number = [1].map((x) => x + 1).length; console.log(process.argv, await warm)");
-    this.#pending.clear();
+    for (const cell of WARMING) this.check(0, 0, cell);
+    this.reset();
+    if (this.host.wholeNode) return;
+    const { nodeFolder } = this.host;
+    if (nodeFolder !== undefined) this.#nodeWords = readNodeWords(nodeFolder, this.#languageTypes());
+  }
+
+  /** Turns to the notebook of another folder, with the same installation. */
+  move(places: Places): void {
+    this.host.move(places);
+  }
+
+  /** Global names that only Node's whole types declare, while these are not read. */
+  get unreadGlobals(): readonly string[] {
+    return this.host.wholeNode ? [] : (this.#nodeWords?.globals ?? []);
+  }
+
+  /** Reads Node's whole types if a text speaks of what they alone declare. */
+  readNodeIfNeeded(code: string, { words, texts }: Outline): void {
+    if (this.host.wholeNode) return;
+    const known = this.#nodeWords?.words;
+    const imports = /\b(?:import|require)\b/.test(code) && [...texts].some((text) => text !== LIBRARY);
+    const spoken = known !== undefined && [...words].some((word) => known.has(word));
+    const needed = spoken || imports || goesBeyondBasics(code, words) || /\busing\b|\/\/\/\s*</.test(code);
+    if (needed) this.host.readWholeNode();
+  }
+
+  /** Names of the interfaces that the language itself declares. */
+  #languageTypes(): Set<string> {
+    const program = this.service.getProgram() as TS.Program;
+    const files = program.getSourceFiles().filter((file) => program.isSourceFileDefaultLibrary(file));
+    const interfaces = files.flatMap((file) => file.statements.filter(ts.isInterfaceDeclaration));
+    return new Set(interfaces.map(({ name }) => name.text));
   }
 
   /** Names of the values and types that the library exports. */
@@ -89,6 +133,7 @@ export class NotebookTypes {
     if (reaching.length > 0) return failed(reaching);
     const exported = exportEdits(parsed.source);
     if (exported.refusals.length > 0) return failed(exported.refusals);
+    this.readNodeIfNeeded(text, parsed);
     const prepared = this.#prepare(text, parsed, exported.edits);
     this.host.setCell(CURRENT, prepared.edited.text + prepared.around, true);
     const found = this.#findings(this.host.cellFile(CURRENT), text, prepared);
@@ -109,7 +154,8 @@ export class NotebookTypes {
     const { library } = around;
     const uses = around.notebook.map(({ name, cell }) => ({ name, cell }));
     if (!directed) {
-      return { edited: new EditedText(code, exported), around: around.text, library, uses, operators: undefined };
+      const text = `${around.text}\nimport {} from "${OPERATORS}";`;
+      return { edited: new EditedText(code, exported), around: text, library, uses, operators: undefined };
     }
     const operators = operatorPrefix(code);
     const edits = inOrder([...exported, ...operatorEdits(parsed.source, operators)]);

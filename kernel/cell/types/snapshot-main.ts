@@ -1,4 +1,4 @@
-// Process "types", as a start-up snapshot: the compiler with library and node types parsed, for any notebook.
+// Process "types", as a start-up snapshot: the compiler with language and library parsed, for a notebook in any folder.
 import { startupSnapshot } from "node:v8";
 import { placesOf } from "./host.ts";
 import { serve } from "./serve.ts";
@@ -6,12 +6,11 @@ import { NotebookTypes } from "./service.ts";
 
 // The builder passes the root of the installation; the process that starts from the snapshot passes a folder.
 const root = process.argv[2] ?? "";
-const warmed = new NotebookTypes(placesOf(root, root));
-warmed.warm();
+const types = new NotebookTypes(placesOf(root, root), false);
+types.warm();
 
 startupSnapshot.setDeserializeMainFunction(() => {
-  // The warmed one keeps the parsed files alive; files are shared by all notebooks of a process.
-  warmed.reset();
   // Started from a snapshot, a process has no script among its arguments; it runs in the notebook's folder.
-  serve(new NotebookTypes(placesOf(root, process.cwd(), process.argv.at(-1) === "confined")));
+  types.move(placesOf(root, process.cwd(), process.argv.at(-1) === "confined"));
+  serve(types);
 });

@@ -1,25 +1,91 @@
-// #E(F_p): plain counting for small p, baby and giant steps on E and its twist beyond.
+// #E(F_p): plain counting for small p, baby and giant steps on E and its twist beyond, with traces modulo small primes for large p.
 
 import { factorInteger, type PrimePower } from "../algebra/factor.ts";
 import { integerSqrt, lcm, modulo } from "../algebra/integer.ts";
 import { quadraticCharacter } from "../algebra/primefield.ts";
+import { primesUpTo } from "../algebra/primes.ts";
 import { countPlainly } from "./count.ts";
-import { addMod, addToAll, type ModCurve, type ModPoint, multiplyMod, pointFrom } from "./group-fp.ts";
+import { addMod, addToAll, type ModCurve, type ModPoint, multiplyMod, negateMod, pointFrom } from "./group-fp.ts";
 import type { IntegerModel } from "./minimal.ts";
+import { traceModulo } from "./schoof.ts";
 
 /** Below this plain counting takes a few milliseconds, about as long as the steps. */
 const PLAIN = 200_000n;
 
+/** Above this the trace modulo small primes comes first: the steps alone would be 3·2^17 additions and as many stored points. */
+const STEPS_ALONE = 1n << 66n;
+
 /**
  * The number of points of a nonsingular reduction, proved.
  *
- * Method   p < 200,000: plain counting. Else, by Mestre's theorem, E or its quadratic twist has a point whose order leaves one
- *          candidate in Hasse's interval; points of both are tried by baby and giant steps until one candidate is left.
- * Cost     about 3 p^(1/4) additions: some 100,000 for p near 2^60.
- * Source   Schoof, Counting points on elliptic curves over finite fields (1995), section 3; Cohen 7.4.3.
+ * Method   p < 200,000: plain counting. Below 2^66, by Mestre's theorem, E or its quadratic twist has a point whose order leaves one
+ *          candidate in Hasse's interval; points of both are tried by baby and giant steps until one candidate is left. Above, the trace
+ *          modulo small primes by Schoof's algorithm leaves 2^36 candidates or fewer to the steps.
+ * Cost     about 3 p^(1/4) additions: some 100,000 for p near 2^60. Seconds at 100 bits, a minute or so at 160; minutes beyond.
+ * Source   Schoof, Counting points on elliptic curves over finite fields (1995), sections 3 and 5; Cohen 7.4.3.
  */
 export function countPoints(a: IntegerModel, p: bigint): bigint {
   if (p < PLAIN) return BigInt(countPlainly(a, Number(p)));
+  return p < STEPS_ALONE ? countBySteps(a, p) : countByTraces(a, p);
+}
+
+/** Candidates that are left to the steps after Schoof's algorithm. */
+const LEFT_TO_STEPS = 1n << 36n;
+
+/** #E(F_p) from t modulo small primes, and steps for the rest; for p above some hundred. */
+export function countByTraces(a: IntegerModel, p: bigint, left = LEFT_TO_STEPS): bigint {
+  const E = shortModel(a, p);
+  const short = { A: E.a[3], B: E.a[4], p };
+  const bound = integerSqrt(4n * p) + 1n; // |t| <= 2√p
+  let [t, modulus] = [0n, 1n];
+  for (const l of primesUpTo(1000)) {
+    if (2n * bound < modulus * left) break;
+    const L = BigInt(l);
+    if (L === p) continue;
+    const residue = traceModulo(short, l);
+    while (modulo(t, L) !== residue) t += modulus;
+    modulus *= L;
+  }
+  // t = t0 + k·modulus with |t| <= bound.
+  const lowest = t - modulus * ((t + bound) / modulus);
+  const count = (2n * bound) / modulus + 1n;
+  if (count === 1n) return p + 1n - lowest;
+  for (let x = 1n; ; x += 7919n) {
+    const found = residualTraces(E, pointFrom(E, x), lowest, modulus, count);
+    if (found.length === 1) return p + 1n - found[0]!;
+  }
+}
+
+/** All t = t0 + k·m, 0 <= k <= count, with (p + 1 − t)P = O, at most two of them: baby and giant steps over the whole range. */
+function residualTraces(curve: ModCurve, P: ModPoint, t0: bigint, m: bigint, count: bigint): bigint[] {
+  const s = integerSqrt(count) / 2n + 1n;
+  const step = multiplyMod(curve, m, P);
+  const table = babySteps(curve, step, s);
+  if (table.killed !== undefined) return []; // a point of small order tells too little
+  const stride = 2n * s + 1n;
+  const giant = multiplyMod(curve, stride, step);
+  const start = multiplyMod(curve, curve.p + 1n - t0, P);
+  const rounds = count / stride + 2n;
+  let points = chain(curve, start, negateMod(curve, giant), BLOCK);
+  const jump = multiplyMod(curve, -BigInt(BLOCK), giant);
+  const found = new Set<bigint>();
+  for (let k = 0n; k <= rounds && found.size < 2; k += BigInt(BLOCK)) {
+    points.forEach((Q, l) => {
+      const j = Q ? table.index.get(Q[0]) : 0;
+      if (j === undefined) return;
+      const centre = (k + BigInt(l)) * stride;
+      for (const n of new Set([centre + BigInt(j), centre - BigInt(j)])) {
+        const t = t0 + n * m;
+        if (n >= 0n && n <= count && multiplyMod(curve, curve.p + 1n - t, P) === undefined) found.add(t);
+      }
+    });
+    points = addToAll(curve, points, jump);
+  }
+  return [...found];
+}
+
+/** #E(F_p) by steps on points of E and its twist; for p above some hundred. */
+export function countBySteps(a: IntegerModel, p: bigint): bigint {
   const E = shortModel(a, p);
   const twist = twistOf(E);
   const width = 2n * integerSqrt(p) + 2n;

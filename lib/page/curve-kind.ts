@@ -1,7 +1,10 @@
 import { unpack } from "../algebra/multivariate.ts";
 import { type Equation, leadingSide, plainPolynomial } from "../curve/equation/print.ts";
+import type { Standing } from "../proof/standing.ts";
 import type { Curve } from "../surface/curve.ts";
+import type { EndomorphismRing } from "../surface/endomorphisms.ts";
 import type { Point } from "../surface/point.ts";
+import type { PointRelations } from "../surface/relations.ts";
 import type { Kind, Show } from "./kind.ts";
 import { elementTex, equationTex, fieldTex } from "./polynomial-tex.ts";
 import { array, small, texName, texWords } from "./tex.ts";
@@ -66,3 +69,20 @@ export const pointKind: Kind<Point<unknown>> = {
   },
   data: (P) => ({ kind: "point", curve: P.curve.toJSON().a, coordinates: P.toJSON().coordinates }),
 };
+
+export const endomorphismKind: Kind<EndomorphismRing> = {
+  text: (ring) => String(ring),
+  tex: (ring) => texWords(String(ring)),
+  data: (ring) => ring.toJSON(),
+};
+
+export const relationsKind: Kind<PointRelations> = {
+  text: (relations) => `${relations}\n  ${relations.standing.kind}: ${argumentOf(relations.standing)}`,
+  tex: (relations) =>
+    array("l", [[texWords(String(relations))], [small(texWords(`proved: ${argumentOf(relations.standing)}`))]]),
+  data: (relations) => relations.toJSON(),
+};
+
+function argumentOf(standing: Standing): string {
+  return standing.kind === "proved" ? standing.argument : "";
+}

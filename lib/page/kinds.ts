@@ -12,6 +12,7 @@ import { ComplexMultiplication } from "../surface/complex-multiplication.ts";
 import { Curve } from "../surface/curve.ts";
 import { DegenerateLattice } from "../surface/degenerate.ts";
 import { EllipticFunction } from "../surface/elliptic-function.ts";
+import { EndomorphismRing } from "../surface/endomorphisms.ts";
 import { Factorisation } from "../surface/factorisation.ts";
 import { Homothety } from "../surface/homothety.ts";
 import { Jacobi } from "../surface/jacobi.ts";
@@ -22,12 +23,13 @@ import { Moved } from "../surface/moved.ts";
 import { Point } from "../surface/point.ts";
 import { QSeries } from "../surface/q-series.ts";
 import { QuasiPeriodicFunction } from "../surface/quasi-periodic-function.ts";
+import { PointRelations } from "../surface/relations.ts";
 import { SecondRoute } from "../surface/second-route.ts";
 import { TorsionSubgroup } from "../surface/torsion.ts";
 import { TorusPoint } from "../surface/torus-point.ts";
 import { PlaneCurve, PlanePoint } from "../surface/variety.ts";
 import { claimKind } from "./claim-kind.ts";
-import { curveKind, pointKind } from "./curve-kind.ts";
+import { curveKind, endomorphismKind, pointKind, relationsKind } from "./curve-kind.ts";
 import { Derivation } from "./derivation.ts";
 import { derivationKind } from "./derivation-kind.ts";
 import { quadraticKind, rationalKind, residueKind } from "./exact-kind.ts";
@@ -60,6 +62,8 @@ export const KINDS: readonly KindEntry[] = [
   entry(QuasiPeriodicFunction, functionKind),
   entry(Point, pointKind),
   entry(Curve, curveKind),
+  entry(EndomorphismRing, endomorphismKind),
+  entry(PointRelations, relationsKind),
   entry(TorsionSubgroup, torsionKind),
   entry(PlaneCurve, planeCurveKind),
   entry(PlanePoint, planePointKind),

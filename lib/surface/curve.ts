@@ -21,6 +21,7 @@ import { primitive, type Rational } from "../number/rational.ts";
 import { type Complex, type ComplexNumeric, type Numeric, type Real, scalar } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
 import { remember } from "./behind.ts";
+import { type EndomorphismRing, endomorphismRingOf } from "./endomorphisms.ts";
 import { type Coordinate, carry } from "./fields.ts";
 import { countOf, countOverExtension, modCurve, reductionOf } from "./finite.ts";
 import { type ExactInput, elementOf } from "./input.ts";
@@ -37,7 +38,9 @@ import type { Lattice } from "./lattice.ts";
 import type { Morphism } from "./morphism.ts";
 import { indexOf, pairingOf } from "./pairing.ts";
 import { type AnyPoint, Point } from "./point.ts";
+import { type NamedPoints, type PointRelations, relationsOf } from "./relations.ts";
 import { rationalPoints, type TorsionSubgroup, torsionOf } from "./torsion.ts";
+import { type TorsionPlace, torsionPlaces } from "./torsion-places.ts";
 import { fromInclusion } from "./torus-isogeny.ts";
 import type { TorusPoint } from "./torus-point.ts";
 import { exponentialOf, latticeOf, logarithmOf, noTorus } from "./uniformise.ts";
@@ -191,6 +194,22 @@ export class Curve<T = Rational> {
   }
 
   /**
+   * Over Q: all relations between given points modulo torsion, with the torsion point that each gives, and the rank of what they generate: proved,
+   * by exact arithmetic and by reduction modulo primes. E.relations({ P, Q }) or a list.
+   */
+  relations(points: NamedPoints): PointRelations {
+    return relationsOf(this.#rational("relations"), points);
+  }
+
+  /**
+   * Over Q: the n² − 1 points but O that n kills, with their exact places z on C/Λ: values of ℘ and ℘′ at r·ω1 + s·ω2. The rational ones have
+   * exact coordinates, found complete by the torsion subgroup; the others are enclosures.
+   */
+  torsionPoints(n: number): TorsionPlace[] {
+    return torsionPlaces(this.#rational("torsionPoints"), n);
+  }
+
+  /**
    * The rational points whose x on the minimal model is m/e² with |m| and e² at most `height`, one of ±P each, smallest first: a search,
    * which proves nothing about larger points.
    */
@@ -268,6 +287,14 @@ export class Curve<T = Rational> {
   /** Over F_p: true if p divides the trace. */
   get isSupersingular(): boolean {
     return this.trace % this.field.characteristic === 0n;
+  }
+
+  /**
+   * The ring of endomorphisms over the algebraic closure: Z or an imaginary quadratic order with its discriminant, exact for exact j; over
+   * F_p ordinary with the discriminant of Z[π], or supersingular.
+   */
+  endomorphismRing(): EndomorphismRing {
+    return endomorphismRingOf(this);
   }
 
   /** Over F_p: the group as [n] (cyclic) or [n1, n2] with n1 | n2. */

@@ -1,5 +1,7 @@
 // From a curve to its torus and back: what `E.lattice()`, `E.logarithm(P)` and `E.exponential(z)` delegate to.
 
+import { reals } from "../algebra/enclosures.ts";
+import type { Field } from "../algebra/field.ts";
 import { COMPLEX_LOGARITHM, canonicalPlace, REAL_LOGARITHM, realPlace, torsionIndex } from "../curve/uniformisation.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
 import { workingPrecision } from "../number/context.ts";
@@ -14,6 +16,7 @@ import { coordinateOf, fieldOf, joinFields } from "./fields.ts";
 import type { Lattice } from "./lattice.ts";
 import { lattice } from "./make-lattice.ts";
 import { Point } from "./point.ts";
+import { rationalPointAt } from "./torsion-places.ts";
 import { TorusPoint } from "./torus-point.ts";
 
 /** The lattice of dx/(2y + a1x + a3): invariants c4/12 and c6/216, in the real basis if the curve is real. */
@@ -86,6 +89,9 @@ function complexLogarithm(L: Lattice, x: Real | Complex, y: Real | Complex): Com
  */
 export function exponentialOf(E: Curve<Coordinate>, L: Lattice, z: ComplexNumeric): Point<Coordinate> {
   if (isLatticePoint(z)) return E.origin;
+  const rational =
+    z instanceof TorusPoint && E.field.name === "Q" ? rationalPointAt(E as unknown as Curve, z) : undefined;
+  if (rational) return overReals(E, rational);
   const b2 = scalar(E.b[0], "exponential");
   const [a1, , a3] = E.a;
   const wp = L.wp(z);
@@ -95,6 +101,12 @@ export function exponentialOf(E: Curve<Coordinate>, L: Lattice, z: ComplexNumeri
   const field = joinFields(joinFields(fieldOf(px), fieldOf(py))!, E.field)!;
   const curve = E.carriedTo(field);
   return new Point(curve, [lift(px, field.name), lift(py, field.name)]);
+}
+
+/** A rational point as the type of the exponential promises it: over R, its coordinates still exact. */
+function overReals(E: Curve<Coordinate>, P: Point): Point<Coordinate> {
+  const [x, y] = P.coordinates!;
+  return new Point(E.carriedTo(reals as unknown as Field<Coordinate>), [Real.from(x), Real.from(y)]);
 }
 
 function lift(value: Coordinate, name: string): Coordinate {

@@ -5,7 +5,7 @@ import { primesUpTo } from "../../../lib/algebra/primes.ts";
 import { countPlainly } from "../../../lib/arithmetic/count.ts";
 import { multiplyMod, pointFrom, reduceModel } from "../../../lib/arithmetic/group-fp.ts";
 import type { IntegerModel } from "../../../lib/arithmetic/minimal.ts";
-import { countPoints, orderDividing } from "../../../lib/arithmetic/order-fp.ts";
+import { countBySteps, countByTraces, countPoints, orderDividing } from "../../../lib/arithmetic/order-fp.ts";
 import { discreteLogarithm, groupStructure } from "../../../lib/arithmetic/structure-fp.ts";
 import type { Curve } from "../../../lib/surface/curve.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
@@ -40,6 +40,66 @@ describe("points over F_p", () => {
       }),
       { seed: 5, numRuns: 12 }, // plain counting takes milliseconds each
     );
+  });
+
+  it("plain counting itself, p < 60 — oracle: every pair (x, y) tried", () => {
+    for (const a of [
+      [0, 0, 1, -1, 0],
+      [1, 0, 1, -19, 26],
+      [1, 1, 1, -10, -10],
+    ]) {
+      for (const p of primesUpTo(60)) {
+        let points = 1;
+        for (let x = 0; x < p; x++) {
+          for (let y = 0; y < p; y++) {
+            const value = y * y + a[0]! * x * y + a[2]! * y - x ** 3 - a[1]! * x * x - a[3]! * x - a[4]!;
+            if (value % p === 0) points++;
+          }
+        }
+        expect(countPlainly(model(a), p)).toBe(points);
+      }
+    }
+  });
+
+  it("by steps, and by traces modulo small primes, for all good p < 2000 — oracle: plain counting", () => {
+    for (const [a, bad] of [
+      [[0, 0, 1, -1, 0], [37]],
+      [
+        [0, 0, 0, -7, 6],
+        [2, 5],
+      ], // all points of order two are rational
+      [
+        [0, 0, 0, 0, 1],
+        [2, 3],
+      ], // supersingular at p = 2 mod 3
+    ] as const) {
+      for (const p of primesUpTo(2000)) {
+        if (p < 5 || (bad as readonly number[]).includes(p)) continue;
+        const plain = BigInt(countPlainly(model(a), p));
+        if (p > 500) expect(countBySteps(model(a), BigInt(p))).toBe(plain);
+        if (p % 19 === 3 || p < 60) expect(countByTraces(model(a), BigInt(p), 1n)).toBe(plain);
+      }
+    }
+  }, 120_000);
+
+  it("a prime of 80 bits — oracle: the order kills points of E, that of the twist points of the twist, one multiple in Hasse's interval", () => {
+    const p = 1208925819614629174706111n;
+    const E = reduceModel(model([0, 0, 1, -1, 0]), p);
+    const count = countPoints(E.a, p);
+    expect(count).toBe(1208925819613430426310836n);
+    for (const x of [1n, 10n]) expect(multiplyMod(E, count, pointFrom(E, x))).toBe(undefined);
+    const order = orderDividing(E, pointFrom(E, 1n), count);
+    expect(order * order > 16n * p).toBe(true); // so no other number in the interval kills it
+  }, 120_000);
+
+  it("over extensions — oracle: the recurrence by hand for n = 2, 3, and the count over F_5 as F_(5^1)", () => {
+    const E = curve`y^2 + y = x^3 - x`.mod(5);
+    const t = E.trace;
+    expect(E.countOver(1)).toBe(E.count);
+    expect(E.countOver(2)).toBe(26n - (t * t - 10n));
+    expect(E.countOver(3)).toBe(126n - (t ** 3n - 15n * t));
+    expect(E.countOver(6) % E.countOver(2)).toBe(0n);
+    expect(() => E.countOver(0)).toThrow(/expected an integer from 1 to 1000/);
   });
 
   it("a curve of 60 bits: the order kills points of E, and lies in Hasse's interval — oracle: definition", () => {

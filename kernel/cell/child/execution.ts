@@ -85,6 +85,8 @@ export class Execution {
   readonly defined = new Set<string>();
   /** Value of the last expression. */
   value: unknown = undefined;
+  /** What the target of a compound assignment hangs on, between its evaluation and the reading of the old value. */
+  held: unknown = undefined;
   /** True once the outcome has been reported: what still runs defines nothing. */
   closed = false;
   readonly #modules: Importing;

@@ -66,6 +66,11 @@ function compoundAssignment(
     const value = dispatch(call.name, [pass.visit(node.left), pass.visit(operand)], pass);
     return ts.setTextRange(factory.createAssignment(pass.visit(node.left), value), node);
   }
+  const held = heldTarget(target, pass);
+  if (held) {
+    const value = dispatch(call.name, [held.again, pass.visit(operand)], pass);
+    return ts.setTextRange(factory.createAssignment(held.first, value), node);
+  }
   const [object, key] = splitTarget(target as TS.PropertyAccessExpression | TS.ElementAccessExpression, pass);
   const into = pass.runtime("into", [object, key]);
   const update = factory.createCallExpression(factory.createPropertyAccessExpression(into, call.name), undefined, [
@@ -82,6 +87,26 @@ function isSimpleTarget(target: TS.Node): boolean {
   return (
     ts.isIdentifier(target.expression) || kind === ts.SyntaxKind.ThisKeyword || kind === ts.SyntaxKind.SuperKeyword
   );
+}
+
+/**
+ * A target that no helper can reach: a private member, or an element of super. What it hangs on is evaluated once and held
+ * in `$rt.held`, from which the old value is read before anything else runs: `($rt.held = f()).#p = add($rt.held.#p, v)`.
+ */
+function heldTarget(target: TS.Node, pass: Pass): { first: TS.Expression; again: TS.Expression } | undefined {
+  const { factory } = pass;
+  const held = () => factory.createPropertyAccessExpression(factory.createIdentifier(`${pass.prefix}rt`), "held");
+  const hold = (value: TS.Expression) =>
+    factory.createParenthesizedExpression(factory.createAssignment(held(), pass.visit(value)));
+  if (ts.isPropertyAccessExpression(target) && ts.isPrivateIdentifier(target.name)) {
+    const member = (object: TS.Expression) => factory.createPropertyAccessExpression(object, target.name);
+    return { first: member(hold(target.expression)), again: member(held()) };
+  }
+  if (ts.isElementAccessExpression(target) && target.expression.kind === ts.SyntaxKind.SuperKeyword) {
+    const element = (key: TS.Expression) => factory.createElementAccessExpression(factory.createSuper(), key);
+    return { first: element(hold(target.argumentExpression)), again: element(held()) };
+  }
+  return undefined;
 }
 
 function splitTarget(

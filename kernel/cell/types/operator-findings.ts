@@ -2,6 +2,7 @@
 // nothing on library values. Worded in the user's terms, at the user's operator.
 import type { Finding } from "./diagnostics.ts";
 import type { EditedText } from "./edits.ts";
+import { literalValue } from "./literals.ts";
 import { type OperatorCall, operatorCall } from "./operator-call.ts";
 import { type TS, ts } from "./typescript.ts";
 import { members, type Values } from "./values.ts";
@@ -56,7 +57,7 @@ export function operatorFindings(
   const visit = (node: TS.Node): void => {
     if (node.getStart(source) >= edited.text.length) return;
     const call = operatorCall(node, prefix);
-    if (call) checkOperation(call, values, edited, user, found);
+    if (call) checkOperation(call, prefix, values, edited, user, found);
     else checkPlain(node, values, at);
     ts.forEachChild(node, visit);
   };
@@ -64,9 +65,16 @@ export function operatorFindings(
   return found;
 }
 
-function checkOperation(call: OperatorCall, values: Values, edited: EditedText, user: string, found: Finding[]): void {
-  if (!hasNoOp(values.typeOf(call.node))) return;
+function checkOperation(
+  call: OperatorCall,
+  prefix: string,
+  values: Values,
+  edited: EditedText,
+  user: string,
+  found: Finding[],
+): void {
   const types = call.operands.map((operand) => values.typeOf(operand));
+  if (!hasNoOp(values.typeOf(call.node)) && !takesPartOfPoint(call, prefix, types, values)) return;
   // The cause is shown where it is, not again at every operator around it.
   if (types.some(hasNoOp)) return;
   const start = call.name === "neg" ? edited.toUser(call.node.getStart()) : operatorAt(call, edited, user);
@@ -93,7 +101,27 @@ function impossible(call: OperatorCall, types: readonly TS.Type[], values: Value
   const [left, right] = types.map((type) => values.describe(type));
   if (call.name === "neg") return `${left} has no negative.`;
   if (noun === "order") return `${left} and ${right} have no order.${orderHint(types, values)}`;
-  return `${left} has no ${noun} with ${right}.`;
+  return `${left} has no ${noun} with ${right}.${pointHint(call, types, values)}`;
+}
+
+/** `P * 0.5`, `P / 2`: the literal is not a whole multiple, although its type is that of one. */
+function takesPartOfPoint(call: OperatorCall, prefix: string, types: readonly TS.Type[], values: Values): boolean {
+  if (call.name !== "mul" || !types.some((type) => values.describe(type) === "a point")) return false;
+  return call.operands.some((operand) => {
+    const value = literalValue(operand, prefix);
+    return value !== undefined && value.den !== 1n;
+  });
+}
+
+/** Points are multiplied by whole numbers: what stands for a part of one, and for a product of two. */
+function pointHint(call: OperatorCall, types: readonly TS.Type[], values: Values): string {
+  const points = types.filter((type) => values.describe(type) === "a point").length;
+  if (points === 0) return "";
+  if (points === 2) return " Points are added: P + Q.";
+  if (call.name === "mul" || call.name === "div") {
+    return " A point has whole multiples, 3 * P. A part of it is a question about the torus: take a part of E.logarithm(P), and E.exponential of that.";
+  }
+  return call.name === "add" || call.name === "sub" ? " The other side must be a point of the same curve." : "";
 }
 
 function orderHint(types: readonly TS.Type[], values: Values): string {

@@ -19,7 +19,7 @@ export function withHint(found: Finding, code: string): Finding {
   return hint === undefined ? found : { ...found, message: `${found.message} ${hint}` };
 }
 
-function hintFor({ code: name, start, length }: Finding, code: string): string | undefined {
+function hintFor({ code: name, message, start, length }: Finding, code: string): string | undefined {
   const rest = code.slice(start);
   if (name === "TS17006" || name === "TS17007") return "Write -(x ** 2) or (-x) ** 2.";
   if (name === "TS1351")
@@ -27,6 +27,8 @@ function hintFor({ code: name, start, length }: Finding, code: string): string |
   const word = rest.slice(0, length);
   if (name === "TS2304" && /^\s*=(?![=>])/.test(rest.slice(length)))
     return `Write const ${word} = ... to give it a value.`;
+  if (name === "TS2322" && /^\s*(?:\*\*|[-+*/])=/.test(rest.slice(length)) && /type 'number'/.test(message))
+    return `${word} was given a number first. Begin with a library value: let ${word} = real(0).`;
   if (JOINED.has(name) && joinsLineAbove(code, start + length)) {
     return "This line begins with a bracket and joins the one above: end that one with a semicolon.";
   }

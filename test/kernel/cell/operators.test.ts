@@ -57,6 +57,24 @@ const VALUES: readonly (readonly [title: string, code: string, expected: string]
     "let a1: Rational = r; const bump = () => { a1 = rational(50); return r }; a1 += bump(); a1",
     "2/3",
   ],
+  ["s += x on a library value", "let s2 = w; s2 += x; s2 -= w; s2.minus(3).overlaps(0)", "true"],
+  ["s += x on a number stays a number", "let n1 = 1; n1 += 2; n1 += [x].length; n1", "4"],
+  [
+    "a private member behind a call, which is made once",
+    "let made = 0; class G1 { #p: Rational = r; static bump(f: () => G1, v: Rational) { f().#p += v; return f().#p } }; const g0 = new G1(), one = () => { made++; return g0 }; [G1.bump(one, r), made].join(' ')",
+    "2/3 2",
+  ],
+  [
+    "a private member of a private member",
+    "class H1 { #n?: H1; #p: Rational = r; static go(h: H1) { h.#n = new H1(); h.#n.#p *= 6; return h.#n.#p } }; H1.go(new H1())",
+    "2",
+  ],
+  [
+    "an element of super, its key evaluated once",
+    "let keys = 0, kept: Rational = r; class J1 { get q() { return kept } set q(v: Rational) { kept = v } }; class J2 extends J1 { key(): 'q' { keys++; return 'q' } go() { super[this.key()] += r } }; new J2().go(); [kept, keys].join(' ')",
+    "2/3 1",
+  ],
+  ["Real | undefined, tested first", "const m1: Real | undefined = [x].at(0); m1 ? m1 + 1 : 0", "4"],
   ["compound: each operator", "let c1: Rational = r; c1 -= 1; c1 *= 3; c1 /= 4; c1 **= 2; c1", "1/4"],
   [
     "private members, super, fields, defaults",
@@ -100,8 +118,12 @@ const VALUES: readonly (readonly [title: string, code: string, expected: string]
 ];
 
 const REFUSED: readonly (readonly [code: string, message: string, column: number])[] = [
-  ["P * w", "a point has no product with a real number.", 3],
-  ["P + 1", "a point has no sum with a number.", 3],
+  ["P * w", "a point has no product with a real number. A point has whole multiples, 3 * P.", 3],
+  ["P * 0.5", "a point has no product with a number. A point has whole multiples, 3 * P.", 3],
+  ["1/3 * P", "a number has no product with a point. A point has whole multiples", 5],
+  ["P / 2", "A part of it is a question about the torus", 3],
+  ["P * P", "a point has no product with a point. Points are added: P + Q.", 3],
+  ["P + 1", "a point has no sum with a number. The other side must be a point of the same curve.", 3],
   ["1 + (2 * (P * z)) - w", "a point has no product with a complex number.", 13],
   ["const u1 = [x].at(0); u1 + 1", "the value may be absent", 26],
   ["((v: unknown) => v + r)(1)", "a value of unknown type has no sum with a rational number.", 20],

@@ -15,6 +15,7 @@ describe("errors with a hint", () => {
     ["2π", "A product needs its sign: 2*π."],
     ["F = 3", "Write const F = ... to give it a value."],
     ["w ^ 2", "A power is written **."],
+    ["let s = 0; for (const k of list) s += k * w", "Begin with a library value: let s = real(0)."],
     ["const q = a\n[list]", "This line begins with a bracket and joins the one above"],
     ["const q = a\n(w)", "This line begins with a bracket and joins the one above"],
   ])("%j", async (code, hint) => {

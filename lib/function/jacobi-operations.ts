@@ -1,8 +1,11 @@
 // Jacobi's functions as operations that a value records: operands u (or x), m, m1.
+import type { Disc } from "../number/disc.ts";
+import * as disc from "../number/disc.ts";
 import { asDisc, type Operation } from "../number/origin.ts";
 import { jacobiAmplitude } from "./jacobi-amplitude.ts";
 import { jacobiInverse } from "./jacobi-inverse.ts";
 import { jacobiEpsilon, jacobiZeta } from "./jacobi-second.ts";
+import { jacobiByTheta, jacobiSlope } from "./jacobi-theta.ts";
 import {
   type JacobiContext,
   type JacobiLetter,
@@ -11,7 +14,9 @@ import {
   jacobiValues,
 } from "./jacobi-values.ts";
 import type { Modulus } from "./legendre-complete.ts";
-import { operationOf, settle } from "./operations.ts";
+import { completeE, completeK } from "./legendre-complete.ts";
+import { incompleteE } from "./legendre-incomplete.ts";
+import { type Evaluate, operationOf, settle } from "./operations.ts";
 
 const LETTERS: readonly JacobiLetter[] = ["s", "c", "d", "n"];
 
@@ -44,26 +49,57 @@ function keptContext(key: unknown): (modulus: Modulus, prec: number) => JacobiCo
   };
 }
 
+const modulusOf = (m: Disc, m1: Disc): Modulus => ({ m, m1 });
+
 /** The twelve functions. */
 export const JACOBI = table("", (name) => ({
-  name,
+  ...operationOf(name, 3, ([u, m, m1], _rest, prec) => jacobiValues([name], u!, modulusOf(m!, m1!), prec)[0]!, {
+    partials: [([u, m, m1], _rest, prec) => jacobiSlope(name, u!, modulusOf(m!, m1!), prec)],
+    routes: { "theta series": ([u, m, m1], _rest, prec) => jacobiByTheta(name, u!, modulusOf(m!, m1!), prec) },
+  }),
   evaluate: ([u, m, m1], at, prec) => {
-    const modulus: Modulus = { m: asDisc(at(m)), m1: asDisc(at(m1)) };
+    const modulus = modulusOf(asDisc(at(m)), asDisc(at(m1)));
     return settle(jacobiValues([name], asDisc(at(u)), modulus, prec, keptContext(m))[0]!);
   },
 }));
 
-/** Their inverses. */
-export const JACOBI_INVERSE = table("arc", (name) =>
-  operationOf(name, 3, ([x, m, m1], _rest, prec) => jacobiInverse(name, x!, { m: m!, m1: m1! }, prec)),
-);
+/** Their inverses, with derivative 1/(pq)′. */
+export const JACOBI_INVERSE = table("arc", (name) => {
+  const f: Evaluate = ([x, m, m1], _rest, prec) => jacobiInverse(name, x!, modulusOf(m!, m1!), prec);
+  return operationOf(name, 3, f, {
+    partials: [
+      (x, rest, prec) => disc.inv(jacobiSlope(name, f(x, rest, prec + 8), modulusOf(x[1]!, x[2]!), prec + 8), prec),
+    ],
+  });
+});
 
-export const AMPLITUDE: Operation = operationOf("am", 3, ([u, m, m1], _rest, prec) =>
-  jacobiAmplitude(u!, { m: m!, m1: m1! }, prec),
+const dn = (u: Disc, modulus: Modulus, prec: number) => jacobiValues(["dn"], u, modulus, prec)[0]!;
+
+function integral(
+  name: string,
+  f: (u: Disc, modulus: Modulus, prec: number) => Disc,
+  slope: (u: Disc, modulus: Modulus, prec: number) => Disc,
+  routes: Readonly<Record<string, Evaluate>> = {},
+): Operation {
+  return operationOf(name, 3, ([u, m, m1], _rest, prec) => f(u!, modulusOf(m!, m1!), prec), {
+    partials: [([u, m, m1], _rest, prec) => slope(u!, modulusOf(m!, m1!), prec)],
+    routes,
+  });
+}
+
+export const AMPLITUDE: Operation = integral("am", jacobiAmplitude, dn);
+export const EPSILON: Operation = integral(
+  "Jacobi epsilon",
+  jacobiEpsilon,
+  (u, modulus, prec) => disc.sqr(dn(u, modulus, prec), prec),
+  {
+    "E of the amplitude": ([u, m, m1], _rest, prec) => {
+      const modulus = modulusOf(m!, m1!);
+      return incompleteE(jacobiAmplitude(u!, modulus, prec + 8), modulus, prec);
+    },
+  },
 );
-export const EPSILON: Operation = operationOf("Jacobi epsilon", 3, ([u, m, m1], _rest, prec) =>
-  jacobiEpsilon(u!, { m: m!, m1: m1! }, prec),
-);
-export const ZETA: Operation = operationOf("Jacobi zeta", 3, ([u, m, m1], _rest, prec) =>
-  jacobiZeta(u!, { m: m!, m1: m1! }, prec),
-);
+export const ZETA: Operation = integral("Jacobi zeta", jacobiZeta, (u, modulus, prec) => {
+  const mean = disc.div(completeE(modulus, prec), completeK(modulus, prec), prec);
+  return disc.sub(disc.sqr(dn(u, modulus, prec), prec), mean, prec);
+});

@@ -1,4 +1,4 @@
-// Jacobi's functions by theta functions on a reduced basis of the lattice 2K Z + 2iK′ Z.
+// Jacobi's functions on a reduced basis of the lattice 2K Z + 2iK′ Z, by Landen's transformations.
 //
 // Let σ_s = σ and σ_c, σ_d, σ_n be the sigma functions of the half periods K, K + iK′, iK′, each divided by the common factor e^(η u²/..).
 // Then pq(u) = σ_p(u)/σ_q(u) for p, q among s, c, d, n (DLMF 22.2.4–22.2.9 by 23.6(ii)): with v = u/r1 on any basis r1, r2,
@@ -12,8 +12,8 @@ import { ontoImaginary, ontoReal } from "./enclosure.ts";
 import type { Modulus } from "./legendre-complete.ts";
 import { gram, type Matrix, reduceForm } from "./matrix.ts";
 import type { ThetaIndex } from "./theta-multiplier.ts";
-import { type ThetaConstants, thetaConstants } from "./theta-sums.ts";
-import { type CellPoint, cellPoint, cellSums } from "./theta-values.ts";
+import { thetaConstants } from "./theta-sums.ts";
+import { type CellPlace, cellPlace, negative } from "./theta-values.ts";
 
 export type JacobiLetter = "s" | "c" | "d" | "n";
 export type JacobiName = `${JacobiLetter}${JacobiLetter}`;
@@ -28,7 +28,11 @@ export interface JacobiContext {
   readonly r2: Disc;
   readonly tau: Disc;
   readonly q: Disc;
-  readonly sums: ThetaConstants;
+  /** κ_N, ..., κ_1 and a_N of the means that begin at θ3², θ4². */
+  readonly kappas: readonly Disc[];
+  readonly last: Disc;
+  /** The start of the chain is right to 2^rest. */
+  readonly rest: number;
   /** Theta index of c, d, n. */
   readonly index: Readonly<Record<JacobiLetter, ThetaIndex>>;
   readonly matrix: Matrix;
@@ -39,7 +43,7 @@ export interface JacobiContext {
  * Periods and theta constants for a modulus other than 0 and 1.
  *
  * Branch   K and K′ are principal values, on a cut those from one side for both; the functions do not depend on it.
- * Cost     two arithmetic-geometric means, one exponential, theta series.
+ * Cost     three arithmetic-geometric means, one exponential, theta series.
  */
 export function jacobiContext(modulus: Modulus, prec: number): JacobiContext {
   const wp = prec + 40;
@@ -54,11 +58,33 @@ export function jacobiContext(modulus: Modulus, prec: number): JacobiContext {
   const q = disc.exp(disc.mulI(disc.mulBall(tau, ball.pi(wp + 8), wp + 8)), wp);
   // w1 = a r1 − c r2 and w2 = −b r1 + d r2, modulo 2.
   const index = { s: 1, c: half(a, c), d: half(a + b, c + d), n: half(b, d) } as const;
-  return { modulus, quarter, coQuarter, r1, r2, tau, q, sums: thetaConstants(q, wp), index, matrix, wp };
+  return { modulus, quarter, coQuarter, r1, r2, tau, q, ...landenChain(q, wp), index, matrix, wp };
+}
+
+/** The means a_n = θ3²(q^(2^n)), b_n = θ4²(q^(2^n)), c_(n+1) = c_n²/(4 a_(n+1)), and κ_n = c_n a_n/a_N², until the nome is negligible. */
+function landenChain(q: Disc, wp: number): Pick<JacobiContext, "kappas" | "last" | "rest"> {
+  const sums = thetaConstants(q, wp);
+  const fall = -disc.magnitude(q);
+  let [a, b] = [disc.sqr(sums.theta3, wp), disc.sqr(sums.theta4, wp)];
+  // c_0 = θ2² = 4 q^(1/2) half2²
+  let square = disc.ldexp(disc.mul(q, disc.sqr(disc.sqr(sums.half2, wp), wp), wp), 4);
+  const products: Disc[] = [];
+  let power = 1;
+  // 6 < 2^3 and a unit for the magnitude of what is widened.
+  for (; (power - 1) * fall < wp + 4; power *= 2) {
+    const mean = disc.ldexp(disc.add(a, b, wp), -1);
+    b = disc.sqrt(disc.mul(a, b, wp), wp);
+    a = mean;
+    const c = disc.ldexp(disc.div(square, a, wp), -2);
+    square = disc.sqr(c, wp);
+    products.unshift(disc.mul(c, a, wp));
+  }
+  const over = disc.inv(disc.sqr(a, wp), wp);
+  return { kappas: products.map((x) => disc.mul(x, over, wp)), last: a, rest: 3 - (power - 1) * fall };
 }
 
 /** π/(2 agm(1, √x)). */
-function quarterPeriod(x: Disc, wp: number): Disc {
+export function quarterPeriod(x: Disc, wp: number): Disc {
   const mean = disc.agm(disc.one, disc.sqrt(x, wp, { cut: "continuous" }), wp);
   return disc.div(disc.fromBall(ball.ldexp(ball.pi(wp), -1)), mean, wp);
 }
@@ -74,45 +100,30 @@ function half(x: bigint, y: bigint): ThetaIndex {
   return x & 1n ? (y & 1n ? 3 : 2) : 4;
 }
 
-/** u as a point of the cell, and the sums that its functions share. */
-interface JacobiPoint {
-  readonly context: JacobiContext;
-  readonly at: CellPoint;
-  readonly known: Map<JacobiLetter, Disc>;
-}
-
-function jacobiPoint(context: JacobiContext, u: Disc): JacobiPoint {
-  const at = cellPoint(disc.div(u, context.r1, context.wp), context.tau, context.wp);
-  return { context, at, known: new Map() };
-}
-
-/** σ_x(u) up to the factor that is common to the four. */
-function sigma({ context, at, known }: JacobiPoint, letter: JacobiLetter): Disc {
-  const old = known.get(letter);
-  if (old) return old;
-  const { q, wp, sums, index, r1 } = context;
-  const j = index[letter];
-  const [sum] = cellSums(j, at, q, disc.sqr(q, wp), 0, wp) as [Disc];
-  let value: Disc;
-  if (j === 1) {
-    // θ1′(0) = 2π q^(1/4) first, and q^(1/4) cancels; i e^(−πiv) S_0 stands for θ1.
-    const scale = disc.div(r1, disc.mulBall(sums.first, ball.ldexp(ball.pi(wp), 1), wp), wp);
-    value = disc.mul(disc.mul(sum, scale, wp), lowering(at, wp), wp);
-  } else if (j === 2) {
-    value = disc.mul(disc.div(sum, disc.ldexp(sums.half2, 1), wp), lowering(at, wp), wp);
-  } else {
-    value = disc.div(sum, j === 3 ? sums.theta3 : sums.theta4, wp);
+/**
+ * θ1(v)/θ1′(0), θ2(v)/θ2(0), θ3(v)/θ3(0), θ4(v)/θ4(0) at v = u/r1, up to one common factor.
+ *
+ * In the means that begin at θ3², θ4² the nome of step n is q^(2^n) and its modulus c_n/a_n. From sin πv, cos πv, 1, 1 at a step N where the nome is
+ * negligible the chain of Landen's transformations leads back, with s/n = sn·a_N/a_n at step n and κ_n = c_n a_n/a_N²:
+ *     s, c, d, n  →  s n,  c d,  n² − κ s²,  n² + κ s²,          θ1(v)/θ1′(0) : θ4(v)/θ4(0) = s/(π a_N) : n
+ * Error    the start is right to 6 |q^(2^N)/q| relatively: |cos 2πkv| <= |q|^−k in the cell, and sin (2k+1)x/sin x is as small.
+ * Source   DLMF 22.7.2–22.7.4 with 22.2.
+ */
+function thetaQuotients(context: JacobiContext, place: CellPlace): readonly Disc[] {
+  const { wp, kappas, last, r1, rest } = context;
+  const pi = ball.pi(wp + 8);
+  const { sin, cos } = disc.sinCos(disc.mulBall(place.point, pi, wp + 8), wp);
+  const near = (x: Disc) =>
+    disc.isZero(x) ? x : disc.widenBy(x, { man: 1n, exp: disc.magnitude(x) + rest, rad: 0 }, wp, true);
+  let [s, c, d, n] = [near(sin), near(cos), near(disc.one), near(disc.one)];
+  for (const kappa of kappas) {
+    const [product, small] = [disc.mul(c, d, wp), disc.mul(kappa, disc.sqr(s, wp), wp)];
+    s = disc.mul(s, n, wp);
+    const square = disc.sqr(n, wp);
+    [c, d, n] = [product, disc.sub(square, small, wp), disc.add(square, small, wp)];
   }
-  const { m, n, flipped } = at;
-  const parity = j === 1 ? m + n + (flipped ? 1n : 0n) : j === 2 ? m : j === 4 ? n : 0n;
-  if (parity & 1n) value = disc.neg(value);
-  known.set(letter, value);
-  return value;
-}
-
-/** e^(−πiv). */
-function lowering(at: CellPoint, wp: number): Disc {
-  return disc.exp(disc.neg(disc.mulI(disc.mulBall(at.point, ball.pi(wp + 8), wp + 8))), wp);
+  const first = disc.div(disc.mul(s, r1, wp), disc.mulBall(last, pi, wp), wp);
+  return [first, c, d, n].map((x, k) => (negative((k + 1) as ThetaIndex, place) ? disc.neg(x) : x));
 }
 
 /**
@@ -121,7 +132,7 @@ function lowering(at: CellPoint, wp: number): Disc {
  * Domain   any u off the poles (zeros of qn(u), all of them simple), any m.
  * Branch   none: meromorphic in u, and single-valued in m.
  * Error    enclosures; relative away from zeros and poles.
- * Cost     two means, two exponentials, one theta series of √prec terms a letter; the means only once if `contextOf` keeps them.
+ * Cost     two means, a sine, log2(prec) steps of five products; the means and moduli only once if `contextOf` keeps them.
  * Throws   PoleError at a pole, or if the disc of u holds one.
  * Source   DLMF 22.2.4–22.2.9; for m = 0 and 1 DLMF 22.5(ii).
  */
@@ -134,14 +145,16 @@ export function jacobiValues(
 ): Disc[] {
   if (disc.isZero(modulus.m) || disc.isZero(modulus.m1)) return names.map((name) => degenerate(name, u, modulus, prec));
   const context = contextOf(modulus, prec + guard(u, prec));
-  const point = jacobiPoint(context, u);
+  const place = cellPlace(disc.div(u, context.r1, context.wp), context.tau, context.wp);
+  const quotients = thetaQuotients(context, place);
+  const sigma = (letter: JacobiLetter) => quotients[context.index[letter] - 1]!;
   return names.map((name) => {
     const [p, q] = [...name] as [JacobiLetter, JacobiLetter];
     if (p === q) return disc.one;
     if (disc.isZero(u) && (p === "s" || q !== "s")) return p === "s" ? disc.zero : disc.one;
-    const bottom = disc.isZero(u) ? disc.zero : sigma(point, q);
+    const bottom = disc.isZero(u) ? disc.zero : sigma(q);
     if (disc.containsZero(bottom)) throw pole(name, u);
-    return axisOf(p, q, u, modulus, disc.div(sigma(point, p), bottom, prec + 2));
+    return axisOf(p, q, u, modulus, disc.div(sigma(p), bottom, prec + 2));
   });
 }
 

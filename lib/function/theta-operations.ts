@@ -1,11 +1,13 @@
 // Theta functions as operations that a value records.
+import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import type { Operation } from "../number/origin.ts";
 import type { Rational } from "../number/rational.ts";
 import { PoleError } from "../proof/errors.ts";
-import { operationOf } from "./operations.ts";
+import { type Evaluate, operationOf } from "./operations.ts";
 import { thetaCharacteristicJet } from "./theta-characteristic.ts";
+import { plainTheta } from "./theta-plain.ts";
 import { type ThetaIndex, thetaJet } from "./theta-values.ts";
 
 /** θ1 .. θ4 by number, or characteristics [a, b]. */
@@ -22,18 +24,37 @@ export function thetaText(label: ThetaLabel): string {
   return typeof label === "number" ? `θ${label}` : `θ[${label.join(", ")}]`;
 }
 
-/** [v, τ, label, order]: the derivative of θ(v|τ) in v of that order. */
-export const THETA: Operation = operationOf(
-  "theta",
-  2,
-  ([v, tau], [label, order], prec) => jet(label as ThetaLabel, v!, tau!, order as number, prec)[order as number]!,
-);
+/** [v, τ, label, order]: the derivative of θ(v|τ) in v of that order. The heat equation θ_vv = 4πi θ_τ gives that by τ (DLMF 20.13.1). */
+export const THETA: Operation = operationOf("theta", 2, derivative(0), {
+  partials: [
+    derivative(1),
+    (x, rest, prec) =>
+      disc.neg(disc.mulI(disc.divBall(disc.ldexp(derivative(2)(x, rest, prec + 8), -2), ball.pi(prec + 8), prec))),
+  ],
+  routes: {
+    "the series at τ itself": ([v, tau], [label, order], prec) =>
+      plainTheta(label as ThetaLabel, v!, tau!, order as number, prec),
+  },
+});
+
+/** The derivative of an order that is higher by so much. */
+function derivative(more: number): Evaluate {
+  return ([v, tau], [label, order], prec) => jet(label as ThetaLabel, v!, tau!, (order as number) + more, prec).at(-1)!;
+}
 
 /** [v, τ, label, order]: the derivative of ln θ(v|τ) in v of that order, from 1 on. */
-export const THETA_LOGARITHMIC: Operation = operationOf("theta logarithmic", 2, ([v, tau], [given, order], prec) => {
-  const label = given as ThetaLabel;
-  const wp = prec + 8 + 4 * (order as number);
-  const derivatives = jet(label, v!, tau!, order as number, wp);
+export const THETA_LOGARITHMIC: Operation = operationOf("theta logarithmic", 2, logarithmicDerivative(0), {
+  partials: [logarithmicDerivative(1)],
+});
+
+function logarithmicDerivative(more: number): Evaluate {
+  return ([v, tau], [label, order], prec) =>
+    logarithmicAt(label as ThetaLabel, v!, tau!, (order as number) + more, prec);
+}
+
+function logarithmicAt(label: ThetaLabel, v: Disc, tau: Disc, order: number, prec: number): Disc {
+  const wp = prec + 8 + 4 * order;
+  const derivatives = jet(label, v, tau, order, wp);
   if (disc.containsZero(derivatives[0]!)) {
     throw new PoleError({
       subject: "theta",
@@ -43,7 +64,7 @@ export const THETA_LOGARITHMIC: Operation = operationOf("theta logarithmic", 2, 
     });
   }
   return disc.round(logarithmic(derivatives, wp), prec + 2);
-});
+}
 
 /** The last of L_n = (ln f)^(n): f^(n) = Σ_k C(n−1, k) f^(k) L_(n−k), k = 0 .. n−1. */
 function logarithmic(f: readonly Disc[], wp: number): Disc {

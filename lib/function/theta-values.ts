@@ -19,16 +19,26 @@ export type { ThetaIndex } from "./theta-multiplier.ts";
 export const MAX_ORDER = 1000;
 
 /** A point of the cell of a reduced τ in its upper half, and how it got there: v = ±(point + m + nτ). */
-export interface CellPoint {
-  readonly u: Disc;
-  readonly inverse: Disc;
+export interface CellPlace {
   readonly point: Disc;
   readonly flipped: boolean;
   readonly m: bigint;
   readonly n: bigint;
 }
 
+/** The same with u = exp(2πi·point) and 1/u. */
+export interface CellPoint extends CellPlace {
+  readonly u: Disc;
+  readonly inverse: Disc;
+}
+
 export function cellPoint(v: Disc, tau: Disc, wp: number): CellPoint {
+  const place = cellPlace(v, tau, wp);
+  const u = disc.exp(disc.mulI(disc.mulBall(place.point, ball.ldexp(ball.pi(wp + 8), 1), wp + 8)), wp);
+  return { ...place, u, inverse: disc.inv(u, wp) };
+}
+
+export function cellPlace(v: Disc, tau: Disc, wp: number): CellPlace {
   const height = disc.imag(tau);
   const turned = ball.sign(disc.imag(v)) === -1 || (disc.imag(v).man < 0n && !ball.isZero(disc.imag(v)));
   const up = turned ? disc.neg(v) : v;
@@ -41,8 +51,7 @@ export function cellPoint(v: Disc, tau: Disc, wp: number): CellPoint {
   const point = low ? disc.neg(centred) : centred;
   const flipped = turned !== low;
   const sign = low ? -1n : 1n;
-  const u = disc.exp(disc.mulI(disc.mulBall(point, ball.ldexp(ball.pi(wp + 8), 1), wp + 8)), wp);
-  return { u, inverse: disc.inv(u, wp), point, flipped, m: sign * m, n: sign * n };
+  return { point, flipped, m: sign * m, n: sign * n };
 }
 
 /** D^k θ_j of the header at a point of the cell for k = 0 .. order, divided by e^(πiτ/4 − πiv) for j = 1, 2. */
@@ -153,7 +162,7 @@ function refuseFar(exponent: Disc, v: Disc, tall: Disc | undefined): void {
 }
 
 /** The sign from the cell, θ1(v + m + nτ) ∝ (−1)^(m+n) θ1(v), θ2 ∝ (−1)^m, θ3 ∝ 1, θ4 ∝ (−1)^n, and from θ1(−v) = −θ1(v). */
-function negative(j: ThetaIndex, { m, n, flipped }: CellPoint): boolean {
+export function negative(j: ThetaIndex, { m, n, flipped }: CellPlace): boolean {
   const parity = j === 1 ? (m + n + (flipped ? 1n : 0n)) & 1n : j === 2 ? m & 1n : j === 4 ? n & 1n : 0n;
   return parity === 1n;
 }

@@ -27,8 +27,13 @@ const COMMANDS: Readonly<Record<Name, Command>> = {
     run: async (args, console) => (await import("./notebook/command/check.ts")).checkCommand(args, console),
   },
   export: {
-    purpose: "write a page that opens anywhere and prints well",
+    purpose: "write a page that opens anywhere, the LaTeX source of a paper, or a plain TypeScript script",
     run: async (args, console) => (await import("./notebook/command/export.ts")).exportCommand(args, console),
+  },
+  dossier: {
+    purpose:
+      "one archive for a referee: notebook, page, script, values and certificates as data, how to cite and check",
+    run: async (args, console) => (await import("./notebook/command/dossier.ts")).dossierCommand(args, console),
   },
   install: {
     purpose: "make the kernel known to notebook front ends, of this user or in DIR/kernels; again: repair",

@@ -35,10 +35,10 @@ export async function writeNotebook(file: string, notebook: Notebook): Promise<v
 }
 
 /**
- * Writes a text file through a temporary file in the same folder and a rename: a reader sees the old file or the new
+ * Writes a file through a temporary file in the same folder and a rename: a reader sees the old file or the new
  * one, and a failure (a full disk, no permission) leaves the old one as it was. A symbolic link stays a link.
  */
-export async function writeAtomically(file: string, text: string): Promise<void> {
+export async function writeAtomically(file: string, content: string | Uint8Array): Promise<void> {
   const target = await realpath(file).catch(() => path.resolve(file));
   const temporary = path.join(path.dirname(target), `.${path.basename(target)}.${randomBytes(6).toString("hex")}.part`);
   try {
@@ -46,7 +46,7 @@ export async function writeAtomically(file: string, text: string): Promise<void>
       (existing) => existing.mode & 0o7777,
       () => undefined,
     );
-    await writeNew(temporary, text);
+    await writeNew(temporary, content);
     if (mode !== undefined) await chmod(temporary, mode);
     await rename(temporary, target);
   } catch (error) {
@@ -55,10 +55,10 @@ export async function writeAtomically(file: string, text: string): Promise<void>
   }
 }
 
-async function writeNew(file: string, text: string): Promise<void> {
+async function writeNew(file: string, content: string | Uint8Array): Promise<void> {
   const handle = await open(file, "wx");
   try {
-    await handle.writeFile(text, "utf8");
+    await handle.writeFile(content);
     await handle.sync();
   } finally {
     await handle.close();

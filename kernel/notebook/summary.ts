@@ -37,7 +37,10 @@ function extent(kind: string, certified: number | undefined): string {
 
 function numbersText({ exactNumbers, definedNumbers, measuredNumbers, digits }: Tally): string {
   const parts = [`${exactNumbers} exact`];
-  if (definedNumbers > 0) parts.push(`${definedNumbers} with ${digits} or more proved digits`);
+  if (definedNumbers > 0)
+    parts.push(
+      digits === undefined ? `${definedNumbers} defined` : `${definedNumbers} with ${digits} or more proved digits`,
+    );
   if (measuredNumbers > 0) parts.push(`${measuredNumbers} measured`);
   return parts.join(", ");
 }

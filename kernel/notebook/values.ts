@@ -31,6 +31,8 @@ export function tally(notebook: Notebook): Tally {
   }
   const exact = numbers.filter((number) => digitsOf(number) === Number.POSITIVE_INFINITY);
   const defined = numbers.filter((number) => !exact.includes(number) && number.standing === "defined");
+  // A value that is 0 within its radius has no digits of its own to count.
+  const digits = defined.map(digitsOf).filter((count) => count > 0);
   const certified = [...claims.values()].filter(({ kind }) => kind === "certified").map(({ digits }) => Number(digits));
   const standings = new Map<string, number>();
   for (const { kind } of claims.values()) standings.set(String(kind), (standings.get(String(kind)) ?? 0) + 1);
@@ -40,7 +42,7 @@ export function tally(notebook: Notebook): Tally {
     definedNumbers: defined.length,
     measuredNumbers: numbers.length - exact.length - defined.length,
     ...(certified.length > 0 ? { certified: Math.min(...certified) } : {}),
-    ...(defined.length > 0 ? { digits: Math.min(...defined.map(digitsOf)) } : {}),
+    ...(digits.length > 0 ? { digits: Math.min(...digits) } : {}),
   };
 }
 

@@ -12,15 +12,7 @@ import { array, fraction, texName } from "./tex.ts";
 type AnyMorphism = Morphism<any, any>;
 
 export const morphismKind: Kind<AnyMorphism> = {
-  text: (phi) => {
-    const F = fieldOf(phi);
-    const { kind, parts } = phi.formula;
-    const formula =
-      kind === "affine"
-        ? parts.map((part) => `  ${primed(part.letter)} = ${quotientText(F, part)}`).join("\n")
-        : `  (${parts.map(({ letter }) => primed(letter)).join(" : ")}) = (${parts.map((part) => quotientText(F, part)).join(" : ")})`;
-    return `${phi}\n${formula}`;
-  },
+  text: (phi) => [String(phi), ...formulaLines(phi).map((line) => `  ${line}`)].join("\n"),
   tex: (phi, show) => {
     const F = fieldOf(phi);
     const { kind, parts } = phi.formula;
@@ -36,8 +28,25 @@ export const morphismKind: Kind<AnyMorphism> = {
     ]);
     return `\\left( ${letters} \\right) = \\left( ${array("l", rows)} \\right)`;
   },
-  data: (phi) => ({ kind: "map", title: String(phi), degree: String(phi.degree) }),
+  // All that a reader needs to check the map by substitution: both curves, the formula, and the kernel of an isogeny.
+  data: (phi, show) => ({
+    kind: "map",
+    title: String(phi),
+    degree: String(phi.degree),
+    from: show.data(phi.from),
+    to: show.data(phi.to),
+    formula: formulaLines(phi),
+    ...(phi.kernelPolynomial ? { kernel: plainPolynomial(fieldOf(phi), phi.kernelPolynomial) } : {}),
+  }),
 };
+
+function formulaLines(phi: AnyMorphism): string[] {
+  const F = fieldOf(phi);
+  const { kind, parts } = phi.formula;
+  if (kind === "affine") return parts.map((part) => `${primed(part.letter)} = ${quotientText(F, part)}`);
+  const letters = parts.map(({ letter }) => primed(letter)).join(" : ");
+  return [`(${letters}) = (${parts.map((part) => quotientText(F, part)).join(" : ")})`];
+}
 
 function fieldOf(phi: AnyMorphism): Field<unknown> {
   return phi.from.field as Field<unknown>;

@@ -15,6 +15,7 @@ export const torsionKind: Kind<TorsionSubgroup> = {
     kind: "torsion",
     structure: group.structure.map(String),
     generators: group.generators.map(String),
+    proof: [...group.proof],
   }),
 };
 

@@ -67,6 +67,9 @@ const FOLDER = "/halfperiod";
 const BASICS_FILE = `${FOLDER}/basics.d.ts`;
 const BASICS_TEXT = ts.ScriptSnapshot.fromString(BASICS);
 
+/** Versions of cells rise over all notebooks of a process: they share the registry, which knows files by name and version. */
+let lastVersion = 0;
+
 /** Host of the language service of one notebook. */
 export class NotebookHost implements TS.LanguageServiceHost {
   #places: Places;
@@ -75,7 +78,6 @@ export class NotebookHost implements TS.LanguageServiceHost {
   #resolutions: TS.ModuleResolutionCache;
   readonly #libraryFolder: string;
   readonly #operatorsFile: string;
-  #version = 0;
   /** A module was missing: it may be there for the next cell. */
   #forget = false;
   #root: string[] = [];
@@ -127,8 +129,8 @@ export class NotebookHost implements TS.LanguageServiceHost {
   setCell(cell: number, text: string, root: boolean): void {
     if (this.#forget) this.#resolutions.clear();
     this.#forget = false;
-    this.#version++;
-    this.#cells.set(cell, { version: this.#version, snapshot: ts.ScriptSnapshot.fromString(text) });
+    lastVersion++;
+    this.#cells.set(cell, { version: lastVersion, snapshot: ts.ScriptSnapshot.fromString(text) });
     // The library is always part of the program: else its parsed files are dropped by every cell that does not use it.
     if (root) this.#root = [this.cellFile(cell), this.#places.library, this.#operatorsFile, this.#globals()];
   }

@@ -1,6 +1,6 @@
 // Operators directed by types, second half: what runs. Native where both operands are proved plain, so that loops over
 // numbers cost nothing; dispatch where one is, or may be, a library value. Exact literals are found on the way.
-import { fractionText, isSafeInteger, literalValue } from "./literals.ts";
+import { type Fraction, fractionText, isSafeInteger, literalValue } from "./literals.ts";
 import { type OperatorCall, operatorCall, unwrap } from "./operator-call.ts";
 import { COMPOUND_TOKENS, TOKENS } from "./operators.ts";
 import type { Pass } from "./rewrite.ts";
@@ -41,7 +41,8 @@ function dispatch(name: string, operands: readonly TS.Expression[], pass: Pass):
   return factory.createCallExpression(factory.createPropertyAccessExpression(operators, name), undefined, operands);
 }
 
-function isNative(call: OperatorCall, values: Values): boolean {
+/** Whether the language's own operator does what the user means. */
+export function isNative(call: OperatorCall, values: Values): boolean {
   const types = call.operands.map((operand) => values.typeOf(operand));
   if (types.every((type) => values.isPlain(type))) return true;
   const text = call.name === "add" && types.some((type) => values.isText(type));
@@ -118,11 +119,22 @@ function splitTarget(
   return [object, pass.factory.createStringLiteral(target.name.text)];
 }
 
-/** A maximal tree of literals that meets a library value: as an operand, or where a library number is taken. */
-function exactLiteral(node: TS.Expression, prefix: string, values: Values, pass: Pass): TS.Expression | undefined {
+/** The value of a maximal tree of literals that meets a library value; undefined for any other node. */
+export function exactValue(
+  node: TS.Expression,
+  prefix: string,
+  values: Values,
+  checker: TS.TypeChecker,
+): Fraction | undefined {
   if (!startsLiteral(node, prefix)) return undefined;
   const value = literalValue(node, prefix);
-  if (!value || !meetsLibrary(node, prefix, values, pass)) return undefined;
+  return value && meetsLibrary(node, prefix, values, checker) ? value : undefined;
+}
+
+/** A maximal tree of literals that meets a library value: as an operand, or where a library number is taken. */
+function exactLiteral(node: TS.Expression, prefix: string, values: Values, pass: Pass): TS.Expression | undefined {
+  const value = exactValue(node, prefix, values, pass.checker);
+  if (!value) return undefined;
   const { factory } = pass;
   if (!isSafeInteger(value)) {
     return ts.setTextRange(pass.runtime("rational", [factory.createStringLiteral(fractionText(value))]), node);
@@ -144,12 +156,12 @@ function startsLiteral(node: TS.Expression, prefix: string): boolean {
   );
 }
 
-function meetsLibrary(node: TS.Expression, prefix: string, values: Values, pass: Pass): boolean {
+function meetsLibrary(node: TS.Expression, prefix: string, values: Values, checker: TS.TypeChecker): boolean {
   const call = operatorCall(node.parent, prefix);
   if (call) {
     // The exponent of a power stays a number unless it is a fraction: powers take whole exponents.
     return call.operands.some((operand) => operand !== node && values.mayBeLibrary(values.typeOf(operand)));
   }
-  const expected = pass.checker.getContextualType(node);
+  const expected = checker.getContextualType(node);
   return expected !== undefined && values.takesRational(expected);
 }

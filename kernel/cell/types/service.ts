@@ -16,6 +16,7 @@ import { finalObjectEdits, loopNotices, textNotices, withHint } from "./slips.ts
 import { type SourceMapData, toUserMap } from "./sourcemap.ts";
 import { type TS, ts } from "./typescript.ts";
 import { Values } from "./values.ts";
+import { type WrittenCell, writtenCell } from "./written-cell.ts";
 
 /** A cell as it is checked. */
 interface Prepared {
@@ -58,6 +59,8 @@ export class NotebookTypes {
   readonly host: NotebookHost;
   readonly service: TS.LanguageService;
   readonly #pending = new Map<number, Pending>();
+  /** The cell that was found right last. */
+  #last: Prepared | undefined;
   /** Where Node's whole types are not read yet: what tells that they are needed. */
   #nodeWords: NodeWords | undefined;
 
@@ -138,6 +141,7 @@ export class NotebookTypes {
     this.host.setCell(CURRENT, prepared.edited.text + prepared.around, true);
     const found = this.#findings(this.host.cellFile(CURRENT), text, prepared);
     if (found.length > 0) return failed(found);
+    this.#last = prepared;
     const emitted = this.#emit(cell, text, prepared, parsed);
     return { status: "ok", emitted: { ...emitted, map: toUserMap(emitted.map, braced, code) } };
   }
@@ -180,6 +184,23 @@ export class NotebookTypes {
     const own = operatorFindings(source, operators ?? "", values, edited, code);
     // What follows from an impossible operation is said once, at the operation.
     return own.length === 0 ? found : [...own, ...found.filter((one) => !followsFromOperator(one))];
+  }
+
+  /** Names that a checked cell declares, before it is committed. */
+  declared(cell: number): readonly string[] {
+    return (this.#pending.get(cell)?.declared ?? []).map(({ name }) => name);
+  }
+
+  /** The cell that was found right last, as plain TypeScript; `rename` gives top-level names other ones. */
+  writeOut(rename: (name: string) => string): WrittenCell | undefined {
+    const prepared = this.#last;
+    if (!prepared) return undefined;
+    const program = this.service.getProgram() as TS.Program;
+    const source = program.getSourceFile(this.host.cellFile(CURRENT)) as TS.SourceFile;
+    const checker = program.getTypeChecker();
+    const values = new Values(checker, this.host.libraryFolder);
+    const { edited, library, operators } = prepared;
+    return writtenCell({ source, userEnd: edited.text.length, checker, values, operators, library, rename });
   }
 
   /** Records what a cell that ran has defined; undefined if it was not checked here. */

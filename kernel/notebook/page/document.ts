@@ -1,5 +1,6 @@
 // A notebook as one page: opens from disk, needs no network and no script, prints like a short paper.
 import { type Cell, type CodeCell, isCode, type Notebook } from "../format.ts";
+import { titleOf } from "../title.ts";
 import { codeHtml } from "./code.ts";
 import { escapeHtml } from "./escape.ts";
 import { markdownHtml } from "./markdown.ts";
@@ -40,16 +41,6 @@ ${headed ? "" : `<h1>${escapeHtml(title)}</h1>\n`}${body.join("\n")}
 ${colophon ? `<footer><p>${escapeHtml(colophon)}</p></footer>\n` : ""}</body>
 </html>
 `;
-}
-
-function titleOf(notebook: Notebook): string | undefined {
-  const { title } = notebook.metadata;
-  if (typeof title === "string" && title.trim() !== "") return title;
-  for (const cell of notebook.cells) {
-    const heading = cell.cell_type === "markdown" ? /^#\s+(.+)$/m.exec(cell.source)?.[1] : undefined;
-    if (heading) return heading.replace(/[*_`$\\]/g, "").trim();
-  }
-  return undefined;
 }
 
 function cellHtml(cell: Cell, position: number): string {

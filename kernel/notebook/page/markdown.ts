@@ -16,7 +16,7 @@ export function markdownHtml(source: string, attachments: Readonly<Record<string
     formulas.push(mathml(tex, display));
     return `${OPEN}${formulas.length - 1}${CLOSE}`;
   };
-  const html = renderer(keep, attachments).render(source.replace(/[\uE0F0\uE0F1]/g, ""));
+  const html = markdownParser(keep, attachments).render(source.replace(/[\uE0F0\uE0F1]/g, ""));
   const putBack = (text: string) => {
     const [first = "", ...behind] = text.replace(/>/g, "&gt;").split(OPEN);
     const set = behind.map((part) => {
@@ -28,7 +28,11 @@ export function markdownHtml(source: string, attachments: Readonly<Record<string
   return sanitise(html, { text: putBack });
 }
 
-function renderer(keep: (tex: string, display: boolean) => string, attachments: Readonly<Record<string, Bundle>>) {
+/** A reader of Markdown that hands every formula to \`keep\` and puts its answer into the token. */
+export function markdownParser(
+  keep: (tex: string, display: boolean) => string,
+  attachments: Readonly<Record<string, Bundle>>,
+): InstanceType<typeof MarkdownIt> {
   const markdown = new MarkdownIt({ html: true, linkify: false, typographer: false });
   markdown.inline.ruler.before("escape", "formula", (state, silent) => {
     const formula = /[\\$]/.test(state.src[state.pos] ?? "") ? formulaAt(state.src, state.pos) : undefined;

@@ -6,6 +6,7 @@ import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { BranchError, DomainError, PoleError, PrecisionError } from "../proof/errors.ts";
 import { midpoint } from "./enclosure.ts";
+import { nearestZero } from "./jacobi-poles.ts";
 import { type JacobiContext, jacobiContext, jacobiValues } from "./jacobi-values.ts";
 import type { Modulus } from "./legendre-mean.ts";
 
@@ -91,29 +92,16 @@ function isShort(walk: Walk, from: number, to: number): boolean {
 }
 
 function onThePole(walk: Walk, t: number): DomainError {
-  const [even, odd] = nearestPole(walk, t);
   return new DomainError({
     subject: "am",
-    given: `a segment from 0 to u that meets, or all but meets, the pole ${poleText(even, odd)} of dn`,
+    given: `a segment from 0 to u that meets, or all but meets, the pole ${poleNear(walk, t)} of dn`,
     expected: "a segment that passes the poles at a distance: am is the integral of dn along it",
     hint: "An argument beside u says on which side the pole is passed; sn, cn and dn do not depend on it.",
     argument: "u",
   });
 }
 
-/** The even a and the odd b with a·K + b·iK′ nearest in coordinates. */
-function nearestPole(walk: Walk, t: number): readonly [number, number] {
-  const [x, y] = disc.toDouble(at(walk, t));
-  if (!walk.context) return [0, 2 * Math.floor(y / Math.PI) + 1];
-  const [[a, b], [c, d]] = [disc.toDouble(walk.context.quarter), disc.toDouble(disc.mulI(walk.context.coQuarter))];
-  const area = a * d - b * c;
-  return [2 * Math.round((x * d - y * c) / area / 2), 2 * Math.floor((a * y - b * x) / area / 2) + 1];
-}
-
-/** "2K − 3iK′". */
-function poleText(even: number, odd: number): string {
-  const times = (n: number, name: string) => `${Math.abs(n) === 1 ? "" : Math.abs(n)}${name}`;
-  const tail = times(odd, "iK′");
-  if (even === 0) return odd < 0 ? `−${tail}` : tail;
-  return `${even < 0 ? "−" : ""}${times(even, "K")} ${odd < 0 ? "−" : "+"} ${tail}`;
+function poleNear(walk: Walk, t: number): string {
+  const half: Disc = disc.fromBall(ball.ldexp(ball.pi(53), -1));
+  return nearestZero("n", at(walk, t), walk.context?.quarter, walk.context?.coQuarter ?? half);
 }

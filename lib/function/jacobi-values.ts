@@ -9,6 +9,7 @@ import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { PoleError } from "../proof/errors.ts";
 import { ontoImaginary, ontoReal } from "./enclosure.ts";
+import { nearestZero } from "./jacobi-poles.ts";
 import type { Modulus } from "./legendre-complete.ts";
 import { gram, type Matrix, reduceForm } from "./matrix.ts";
 import type { ThetaIndex } from "./theta-multiplier.ts";
@@ -153,7 +154,7 @@ export function jacobiValues(
     if (p === q) return disc.one;
     if (disc.isZero(u) && (p === "s" || q !== "s")) return p === "s" ? disc.zero : disc.one;
     const bottom = disc.isZero(u) ? disc.zero : sigma(q);
-    if (disc.containsZero(bottom)) throw pole(name, u);
+    if (disc.containsZero(bottom)) throw pole(name, nearestZero(q, u, context.quarter, context.coQuarter));
     return axisOf(p, q, u, modulus, disc.div(sigma(p), bottom, prec + 2));
   });
 }
@@ -172,12 +173,12 @@ function axisOf(p: JacobiLetter, q: JacobiLetter, u: Disc, { m }: Modulus, value
   return (p === "s") !== (q === "s") ? ontoImaginary(value) : ontoReal(value);
 }
 
-function pole(name: string, u: Disc): PoleError {
+function pole(name: string, where: string): PoleError {
   return new PoleError({
     subject: name,
-    given: disc.isZero(u) ? "u = 0, a pole" : "an argument that is a pole, or cannot be told from one",
+    given: `an argument that is, or cannot be told from, the pole ${where}`,
     expected: "an argument away from the poles",
-    hint: "The poles are the zeros of the function with the letters exchanged.",
+    hint: `The poles of ${name} are the zeros of ${[...name].reverse().join("")}, a double lattice of them with the periods 2K and 2iK′.`,
     argument: "u",
   });
 }
@@ -193,6 +194,9 @@ function degenerate(name: JacobiName, u: Disc, { m }: Modulus, prec: number): Di
   const values: Record<JacobiLetter, Disc> = circular
     ? { s: sin, c: cos, d: disc.one, n: disc.one }
     : { s: disc.neg(disc.mulI(sin)), c: disc.one, d: disc.one, n: cos };
-  if (disc.containsZero(values[q])) throw pole(name, u);
+  if (disc.containsZero(values[q])) {
+    const half = disc.fromBall(ball.ldexp(ball.pi(53), -1));
+    throw pole(name, circular ? nearestZero(q, u, half, undefined) : nearestZero(q, u, undefined, half));
+  }
   return disc.div(values[p], values[q], prec + 2);
 }

@@ -52,11 +52,11 @@ export const movedKind: Kind<Moved> = {
       ["M", "=", `\\begin{pmatrix} ${a} & ${b} \\\\ ${c} & ${d} \\end{pmatrix}`],
       ["M\\tau", "=", show.tex(m.tau)],
       ["c\\tau + d", "=", show.tex(m.factor)],
-      ["\\eta(M\\tau)", "=", `e^{2\\pi i \\cdot ${m.etaTwentyFourths}/24}\\, (c\\tau + d)^{1/2}\\, \\eta(\\tau)`],
+      ["\\eta(M\\tau)", "=", `${turnTex(m.etaTwentyFourths, 24)}(c\\tau + d)^{1/2}\\, \\eta(\\tau)`],
       ...m.theta.map(({ index, of, eighths }) => [
         `\\theta_${index}\\left(\\tfrac{v}{c\\tau+d} \\middle| M\\tau\\right)`,
         "=",
-        `e^{2\\pi i \\cdot ${eighths}/8}\\, (c\\tau + d)^{1/2}\\, e^{\\pi i c v^2/(c\\tau+d)}\\, \\theta_${of}(v | \\tau)`,
+        `${turnTex(eighths, 8)}(c\\tau + d)^{1/2}\\, e^{\\pi i c v^2/(c\\tau+d)}\\, \\theta_${of}(v | \\tau)`,
       ]),
     ]);
   },
@@ -67,6 +67,10 @@ export const movedKind: Kind<Moved> = {
     etaTwentyFourths: String(m.etaTwentyFourths),
   }),
 };
+
+function turnTex(part: number, whole: number): string {
+  return part === 0 ? "" : `e^{2\\pi i \\cdot ${part}/${whole}}\\, `;
+}
 
 export const jacobiKind: Kind<Jacobi> = {
   text: (J, show) => `Jacobi functions with m = ${show.text(J.m)}, m1 = ${show.text(J.m1)}`,

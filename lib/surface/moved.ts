@@ -32,11 +32,15 @@ export class Moved {
       `M = [[${a}, ${b}], [${c}, ${d}]]`,
       `Mτ = ${this.tau}`,
       `cτ + d = ${this.factor}`,
-      `η(Mτ) = exp(2πi·${this.etaTwentyFourths}/24) (cτ + d)^(1/2) η(τ)`,
+      `η(Mτ) = ${turn(this.etaTwentyFourths, 24)}(cτ + d)^(1/2) η(τ)`,
       ...this.theta.map(
         ({ index, of, eighths }) =>
-          `θ${index}(v/(cτ+d) | Mτ) = exp(2πi·${eighths}/8) (cτ + d)^(1/2) exp(πi c v²/(cτ+d)) θ${of}(v | τ)`,
+          `θ${index}(v/(cτ+d) | Mτ) = ${turn(eighths, 8)}(cτ + d)^(1/2) exp(πi c v²/(cτ+d)) θ${of}(v | τ)`,
       ),
     ].join("\n");
   }
+}
+
+function turn(part: number, whole: number): string {
+  return part === 0 ? "" : `exp(2πi·${part}/${whole}) `;
 }

@@ -21,7 +21,9 @@ export const kernelModule = path.join(packageRoot, "dist", "kernel", "service", 
 const LOGOS = ["logo-32x32.png", "logo-64x64.png", "logo-svg.svg"];
 
 /**
- * Content of kernel.json. Paths are absolute: hosts run with another PATH than a shell. The mark in `metadata` is how
+ * Content of kernel.json. The optional kernel_protocol_version is left out: jupyter_client 7.4.9 warns of every key that it
+ * does not know, as of an error to come, and below 5.6 nobody reads it.
+ * Paths are absolute: hosts run with another PATH than a shell. The mark in `metadata` is how
  * `remove` knows what it may take away.
  */
 export function kernelspec(env: Readonly<Record<string, string>>): Kernelspec {

@@ -928,6 +928,17 @@ print("lived", reply["content"]["status"])
         done = subprocess.run([*unshare, sys.executable, "-c", host], capture_output=True, text=True)
         self.assertIn("lived ok", done.stdout, done.stderr)
 
+    def test_place(self):
+        """it works in the folder that the host chose, without a terminal and with its standard input closed"""
+        folder = tempfile.mkdtemp(prefix="working place ")
+        manager, client = start(cwd=folder, stdin=subprocess.DEVNULL)
+        shown = Exchange(client, client.execute("process.cwd()")).of("execute_result")[0]["data"]["text/plain"]
+        self.assertIn(folder, shown)
+        closed = Exchange(client, client.execute("process.stdin.isTTY ?? false")).of("execute_result")[0]["data"]
+        self.assertEqual(closed["text/plain"], "false")
+        client.stop_channels()
+        manager.shutdown_kernel()
+
     def test_ipc(self):
         """the transport ipc works, and no socket file is left"""
         folder = tempfile.mkdtemp()

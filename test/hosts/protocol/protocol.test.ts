@@ -1,3 +1,4 @@
+import { readFileSync } from "node:fs";
 import path from "node:path";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { type HostPlace, makePlace, missing, PYTHON, root, run } from "../hosts.ts";
@@ -7,6 +8,13 @@ const absent = missing(
   { module: "jupyter_kernel_test", debianPackage: "python3-jupyter-kernel-test" },
 );
 if (absent) console.warn(`skipped, ${absent}`);
+
+it("each rule names tests that exist, and each test stands beside a rule — oracle: the two files", () => {
+  const read = (name: string) => readFileSync(path.join(root, "test/hosts/protocol", name), "utf8");
+  const named = new Set(read("RULES.md").match(/\btest_\w+/g));
+  const written = new Set(Array.from(read("conformance.py").matchAll(/def (test_\w+)/g), ([, name]) => name));
+  expect(named).toEqual(written);
+});
 
 describe.skipIf(absent !== "")("the protocol, seen from outside", () => {
   let place: HostPlace;

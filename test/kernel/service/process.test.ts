@@ -69,6 +69,16 @@ it("SIGINT and SIGUSR1 do not end it, and no debugger opens — oracle: it answe
   client.close();
 });
 
+it("a connection without a key works, and the log says once what that means — oracle: the log", async () => {
+  const { fields, exited, errors } = await startProcess({ ...(await freeConnection()), key: "" });
+  const client = await new Client(fields).connect();
+  expect((await client.request("shell", "kernel_info_request")).reply.signature).toBe("");
+  await client.request("control", "shutdown_request", {});
+  expect(await exited).toBe(0);
+  expect(errors().match(/no key/g)?.length).toBe(1);
+  client.close();
+});
+
 it.each([
   [[], 2, /^halfperiod: kernel: no connection file given; expected -f FILE.*\n$/],
   [["-f", "/no/such/file.json"], 1, /^halfperiod: connection file \/no\/such\/file.json: no such file; expected.*\n$/],

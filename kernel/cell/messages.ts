@@ -63,6 +63,7 @@ export type ChildCommand =
       readonly executionCount: number;
       readonly code: string;
       readonly emitted: EmittedCell;
+      readonly cellId?: string;
       readonly allowStdin: boolean;
       /** Of a user expression: events and names are not wanted. */
       readonly quiet: boolean;

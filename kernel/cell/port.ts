@@ -39,6 +39,8 @@ export interface ExecuteRequest {
   readonly cell: number;
   /** The count shown to the user, "in cell N". */
   readonly executionCount: number;
+  /** The front end's own name of the cell: the same when the cell runs again. */
+  readonly cellId?: string;
   readonly silent: boolean;
   readonly allowStdin: boolean;
   readonly userExpressions: Readonly<Record<string, string>>;

@@ -197,7 +197,7 @@ class NotebookSession implements CellSession {
   ): Promise<Done | Death> {
     current.running = true;
     try {
-      const { executionCount, allowStdin } = request;
+      const { executionCount, allowStdin, cellId } = request;
       const cells = this.#liveCells();
       return await cells.run({
         kind: "run",
@@ -205,6 +205,7 @@ class NotebookSession implements CellSession {
         executionCount,
         code,
         emitted,
+        ...(cellId !== undefined && { cellId }),
         allowStdin,
         quiet: this.#quiet,
       });

@@ -13,6 +13,7 @@ import type { Modules } from "./modules.ts";
 import { type Owner, own } from "./ownership.ts";
 import type { Reporter } from "./report.ts";
 import { CELL, FIRING, IDLE, LEFT, PHASE, SYNC } from "./shared.ts";
+import { staleLines, staleNote, type TracedRun } from "./staleness.ts";
 import type { Shown } from "./value.ts";
 
 type RunCommand = Extract<ChildCommand, { kind: "run" }>;
@@ -60,7 +61,7 @@ export class Runner {
   readonly #parts: RunnerParts;
   #running: Running | undefined;
   #interruptEarly = 0;
-  readonly #runs: CellRun[] = [];
+  readonly #runs: TracedRun[] = [];
   /** Execution counts by the number of the file. */
   readonly #counts = new Map<number, number>();
   #next: (() => Attempt) | undefined;
@@ -212,11 +213,15 @@ export class Runner {
     reporter.send({ kind: "done", cell, defined, ...(error && { error }), ...(result && { result }) });
   }
 
-  #remember({ cell, executionCount, emitted, quiet }: RunCommand, defines: readonly string[], failed: boolean): void {
-    if (quiet) return;
+  #remember(command: RunCommand, defines: readonly string[], failed: boolean): void {
+    const { cell, executionCount, emitted, code, cellId, allowStdin } = command;
+    if (command.quiet) return;
     this.#counts.set(cell, executionCount);
     const uses = emitted.uses.map((use) => ({ name: use.name, cell: this.#counts.get(use.cell) ?? 0 }));
-    this.#runs.push({ cell: executionCount, defines, uses, failed });
+    const id = cellId === undefined ? {} : { id: cellId };
+    this.#runs.push({ cell: executionCount, defines, uses, failed, code, ...id, watched: allowStdin });
+    const lines = staleLines(this.#runs);
+    if (lines.length > 0) this.#parts.reporter.send({ kind: "display", cell, data: staleNote(lines), metadata: {} });
   }
 
   /** Reports the text of a variable; formatting runs no code of the user. */

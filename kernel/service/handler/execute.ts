@@ -6,6 +6,7 @@ import { type Answer, failure, type Handler, type Service } from "../service.ts"
 
 interface Options {
   readonly code: string;
+  readonly cellId?: string;
   readonly silent: boolean;
   /** Counted and kept in the history. */
   readonly stored: boolean;
@@ -19,7 +20,7 @@ export const executeRequest: Handler = async (request, service) => {
   const started = new Date().toISOString();
   let options: Options;
   try {
-    options = readOptions(request.content);
+    options = readOptions(request.content, request.metadata);
   } catch (error) {
     return { content: { ...failure(error), execution_count: service.executionCount } };
   }
@@ -52,10 +53,11 @@ export function abortedAnswer(service: Service): Answer {
   };
 }
 
-function readOptions(content: Json): Options {
+function readOptions(content: Json, { cellId }: Json): Options {
   const silent = flag(content, "silent", false);
   return {
     code: requiredText(content, "code"),
+    ...(typeof cellId === "string" && { cellId }),
     silent,
     stored: !silent && flag(content, "store_history", true),
     allowStdin: flag(content, "allow_stdin", false),
@@ -76,9 +78,9 @@ async function runCell(options: Options, run: Run, executionCount: number, servi
   // A prompt asks for the counter with an empty cell; that needs no cells to be up.
   if (options.code.trim() === "" && Object.keys(options.userExpressions).length === 0) return NOTHING;
   try {
-    const { code, silent, allowStdin, userExpressions } = options;
+    const { stored, stopOnError, ...asked } = options;
     const cells = await service.cells();
-    return await cells.execute({ code, cell: run.cell, executionCount, silent, allowStdin, userExpressions });
+    return await cells.execute({ ...asked, cell: run.cell, executionCount });
   } catch (error) {
     return failure(error);
   }

@@ -1,5 +1,6 @@
 import { Complex, Real } from "../number/values.ts";
 import type { Claim } from "../surface/claim-value.ts";
+import { TorsionSubgroup } from "../surface/torsion.ts";
 import type { Kind, Show } from "./kind.ts";
 import { prose } from "./prose.ts";
 import { LINE_DIGITS, shortTex, shortText } from "./short.ts";
@@ -62,10 +63,31 @@ const CELL_DIGITS = 6;
 function statementText(claim: Claim, show: Show, digits = LINE_DIGITS): string {
   if (claim.relation === "and") return names(claim).join(" and ").replace(/\$/g, "");
   const relation = claim.relation === "homothetic" ? "homothetic to" : claim.relation;
-  return `${shortText(claim.lhs, show, digits)} ${relation} ${shortText(claim.rhs, show, digits)}`;
+  const order = countsElements(claim) ? "#" : "";
+  return `${order}${shortText(claim.lhs, show, digits)} ${relation} ${wordsOr(claim.rhs, shortText(claim.rhs, show, digits))}`;
 }
 
 function statementTex(claim: Claim, show: Show, digits = LINE_DIGITS): string {
   if (claim.relation === "and") return names(claim).map(texProse).join("\\text{ and }");
-  return `${shortTex(claim.lhs, show, digits)} ${RELATIONS[claim.relation]} ${shortTex(claim.rhs, show, digits)}`;
+  const order = countsElements(claim) ? "\\#" : "";
+  return `${order}${shortTex(claim.lhs, show, digits)} ${RELATIONS[claim.relation]} ${groupTex(claim.rhs) ?? shortTex(claim.rhs, show, digits)}`;
+}
+
+/** A group compared with a number is compared by its order. */
+function countsElements({ lhs, rhs }: Claim): boolean {
+  return lhs instanceof TorsionSubgroup && ["number", "bigint"].includes(typeof rhs);
+}
+
+/** Words, such as the name of a group, without quotation marks. */
+function wordsOr(value: unknown, text: string): string {
+  return typeof value === "string" ? value : text;
+}
+
+/** Z/2 × Z/4 with blackboard letters. */
+function groupTex(value: unknown): string | undefined {
+  if (typeof value !== "string" || !/^\s*Z\/\d+(\s*[×x]\s*Z\/\d+)*\s*$/.test(value)) return undefined;
+  return value
+    .trim()
+    .replace(/Z\/(\d+)/g, "\\mathbb{Z}/$1")
+    .replace(/\s*[×x]\s*/g, " \\times ");
 }

@@ -59,7 +59,9 @@ export function conventionHtml(keys: readonly ConventionKey[]): string {
   return lines.length === 0 ? "" : `<div style="${NOTE}">${lines.join("")}</div>`;
 }
 
-const NOTE = "font-size:.82em;line-height:1.45;opacity:.8;margin:.5em 0 .2em";
+/** No wider than what it stands below, unless that is narrow: it must not push a table from its place. */
+const NOTE =
+  "width:0;min-width:max(100%,34em);text-align:left;font-size:.82em;line-height:1.45;opacity:.8;margin:.5em 0 .2em";
 
 /** One line a row, in small type; none if nothing needs saying. */
 export function conventionTex(keys: readonly ConventionKey[]): string[] {

@@ -4,7 +4,7 @@
 import { citedPieces } from "./citation.ts";
 import { conventionHtml } from "./convention.ts";
 import { anchorOf, type Derivation, type Step } from "./derivation.ts";
-import { checkHead, formulaTex, standingOf, summary } from "./derivation-parts.ts";
+import { checkHead, formulaParts, standingOf, summary } from "./derivation-parts.ts";
 import { escapeHtml } from "./html.ts";
 import type { Show } from "./kind.ts";
 import { standingHead, standingProse } from "./standing.ts";
@@ -49,14 +49,16 @@ function itemHtml(derivation: Derivation, step: Step, index: number, show: Show)
 function valueHtml(step: Step, show: Show): string {
   const html = step.value instanceof Table ? tableHtml(step.value, show) : undefined;
   if (html === undefined) {
-    const whole = formulaTex(step, show);
-    return whole === "" ? "" : formulaHtml(whole);
+    const parts = formulaParts(step, show);
+    return parts.length === 0 ? "" : formulaHtml(...parts);
   }
   return `${step.formula ? formulaHtml(step.formula) : ""}<div style="${STYLE.value}">${html}</div>`;
 }
 
-function formulaHtml(tex: string): string {
-  return `<div style="${STYLE.value}">$\\displaystyle ${escapeHtml(tex)}$</div>`;
+/** Between the parts a line may be broken. */
+function formulaHtml(...parts: readonly string[]): string {
+  const formulas = parts.map((tex) => `$\\displaystyle ${tex.startsWith("=") ? "{}" : ""}${escapeHtml(tex)}$`);
+  return `<div style="${STYLE.value}">${formulas.join(" ")}</div>`;
 }
 
 /** Source and check, folded under the standing in a word. */

@@ -2,6 +2,7 @@
 
 import { weakest } from "../proof/standing.ts";
 import { Claim } from "../surface/claim-value.ts";
+import { TorusPoint } from "../surface/torus-point.ts";
 import type { Derivation, Step } from "./derivation.ts";
 import type { Show } from "./kind.ts";
 import { standingHead } from "./standing.ts";
@@ -13,9 +14,23 @@ export function standingOf({ check }: Step) {
 
 /** "formula = value"; either may be missing. */
 export function formulaTex(step: Step, show: Show): string {
+  return formulaParts(step, show).join(" ");
+}
+
+/** The same in the two parts between which a line may be broken. */
+export function formulaParts(step: Step, show: Show): string[] {
   const formula = step.formula ? `{${step.formula}}` : "";
-  const value = step.value === undefined ? "" : show.tex(step.value);
-  return formula && value ? `${formula} = ${value}` : formula || value;
+  const value = step.value === undefined ? "" : valueTex(step, show);
+  if (formula && value) return [formula, `= ${value}`];
+  return [formula || value].filter((part) => part !== "");
+}
+
+/** The name of a point of the torus is not said twice, where the formula begins or ends with it. */
+function valueTex({ formula, value }: Step, show: Show): string {
+  const tex = show.tex(value);
+  if (!formula || !(value instanceof TorusPoint)) return tex;
+  const [whole = "", name = ""] = /^(.+?) = (?=-?[\d.])/.exec(tex) ?? [];
+  return name !== "" && (formula.startsWith(name) || formula.endsWith(name)) ? tex.slice(whole.length) : tex;
 }
 
 /** "check: " with the other way of computing, where one was taken. */

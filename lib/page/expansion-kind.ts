@@ -67,6 +67,11 @@ export const multiplicationKind: Kind<ComplexMultiplication> = {
   text: (cm) => String(cm),
   tex: (cm) => texWords(String(cm)),
   prose: (cm) => prose(String(cm)),
+  // What a claim compares: the discriminant where there is one, else whether there is any.
+  short: ({ discriminant }) => {
+    const words = discriminant === undefined ? "complex multiplication" : "discriminant of complex multiplication";
+    return { text: words, tex: texWords(words) };
+  },
   data: (cm) => ({
     kind: "complex multiplication",
     outcome: cm.outcome,

@@ -61,6 +61,10 @@ export const recognitionKind: Kind<Recognition> = {
   text: ({ value, standing }, show) => `${show.text(value)}   ${standingText(standing)}`,
   tex: ({ value }, show) => show.tex(value),
   prose: ({ value, standing }, show) => `$\\displaystyle ${show.tex(value)}$ — ${standingProse(standing)}`,
+  short: ({ value }, part) => ({
+    text: `the recognised ${part.text(value)}`,
+    tex: `\\text{the recognised }${part.tex(value)}`,
+  }),
   cell: ({ value }, show) => show.cell(value),
   data: ({ value, standing }, show) => ({ kind: "recognised", value: show.data(value), standing: standing.kind }),
 };

@@ -25,7 +25,7 @@ export function tableText(table: Table, show: Show): string {
 
 function cellText(cell: Cell | undefined, column: Column): string {
   if (!cell) return "";
-  if (cell.kind !== "number") return cell.text.replace(/\$/g, "").replace(/\s*\n\s*/g, "; ");
+  if (cell.kind !== "number") return plainFormulas(cell.text).replace(/\s*\n\s*/g, "; ");
   const re = cell.re ? aligned(cell.re, column.re) : "";
   if (!cell.im) return re;
   const { negative } = cell.im;

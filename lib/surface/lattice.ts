@@ -318,8 +318,13 @@ export class Lattice {
    * give "consistent with" and "excluded".
    */
   complexMultiplication(): ComplexMultiplication {
-    return remember(new ComplexMultiplication(complexMultiplication(this.data, this.j.exact)), { lattice: this });
+    this.#multiplication ??= remember(new ComplexMultiplication(complexMultiplication(this.data, this.j.exact)), {
+      lattice: this,
+    });
+    return this.#multiplication;
   }
+
+  #multiplication: ComplexMultiplication | undefined;
 
   /** The conventions that the numbers of this lattice rest on. */
   get conventions(): readonly ConventionKey[] {

@@ -225,7 +225,8 @@ function mean({ a, b }: Mean) {
   const checks = rows.map(([, p, q], n) => standingOf(q.pow(2).plus(c[n]!.pow(2)), "=", p.pow(2)));
   return {
     value: table(
-      rows.map(([n, p, q], k) => [n, p, q, c[k]]),
+      // The differences need few digits.
+      rows.map(([n, p, q], k) => [n, p, q, c[k]!.exact ? c[k] : c[k]!.digits(8)]),
       { columns: ["$n$", "$a_n$", "$b_n$", "$c_n$"] },
     ),
     trace: true,

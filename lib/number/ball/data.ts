@@ -5,7 +5,7 @@ import {
   bitLength,
   DOWN,
   exponent,
-  lastDouble,
+  leadingPart,
   pow2,
   shift,
   size,
@@ -20,9 +20,9 @@ export interface Ball {
   readonly man: bigint;
   readonly exp: number;
   readonly rad: number;
-  /** A product leaves here what it knows of |man|: it lies within about·(1 ± blur). Others find out by `Number(man)`. */
-  readonly about?: number;
-  readonly blur?: number;
+  /** What the operation that made the ball knew of its size: |man| <= lead·2^size, with few bits to spare. Asking a BigInt costs as much as a sum. */
+  readonly lead?: number;
+  readonly size?: number;
 }
 
 /** A radius above this drops mantissa bits. */
@@ -36,24 +36,28 @@ export const one: Ball = { man: 1n, exp: 0, rad: 0 };
  * The ball of centre man·2^exp and radius err ulps, rounded outward to about `prec` bits: up to 4 more are left, a radius
  * above 2^30 ulps cuts the mantissa. An exact value that fits stays exact. All results pass here.
  * Throws DomainError if the exponent leaves ±2^45.
+ *
+ * @param hint about the number of bits of man.
  */
-export function finish(man: bigint, exp: number, err: number, prec: number): Ball {
+export function finish(man: bigint, exp: number, err: number, prec: number, hint = prec): Ball {
   if (!(exp < MAX_EXPONENT && exp > -MAX_EXPONENT)) throw overflow(exp);
-  const length = bitLength(man, prec);
-  const about = lastDouble();
-  let drop = length - prec;
+  const size = bitLength(man, hint);
+  const lead = leadingPart();
+  let drop = size - prec;
   if (err === 0) return exactly(man, exp, drop);
   if (!(err <= MAX_RAD)) {
     if (!(err < Infinity)) throw overflow(exp);
     const wide = exponent(err) - 30;
     if (wide > drop) drop = wide;
   }
-  if (drop <= 4 && err <= MAX_RAD) return { man, exp, rad: Math.max(err, 1) };
-  const kept = man >> shift(drop);
-  const rad = (err * pow2(-drop) + 1) * UP;
-  // A mantissa of 64 bits or more is about what it was: take the size that was just measured along.
-  if (length > 1000 || length - drop < 64) return { man: kept, exp: exp + drop, rad };
-  return { man: kept, exp: exp + drop, rad, about: Math.abs(about) * pow2(-drop), blur: 2 ** -51 };
+  if (drop <= 4 && err <= MAX_RAD) return { man, exp, rad: Math.max(err, 1), lead, size };
+  return cut(man, exp, drop, (err * pow2(-drop) + 1) * UP, lead, size);
+}
+
+/** man >> drop with a radius that counts it, and what is known of its size: floor moves a negative number out by less than a unit. */
+export function cut(man: bigint, exp: number, drop: number, rad: number, lead: number, size: number): Ball {
+  const kept = size - drop;
+  return { man: man >> shift(drop), exp: exp + drop, rad, lead: lead + pow2(-kept), size: kept };
 }
 
 function exactly(man: bigint, exp: number, drop: number): Ball {
@@ -64,7 +68,7 @@ function exactly(man: bigint, exp: number, drop: number): Ball {
   return { man: man >> shift(drop), exp: exp + drop, rad: 1 };
 }
 
-function overflow(exp: number): DomainError {
+export function overflow(exp: number): DomainError {
   return new DomainError({
     subject: "number",
     given: `a result with the binary exponent ${exp}`,

@@ -15,13 +15,15 @@ export function exponent(x: number): number {
   return ((words[HIGH]! >>> 20) & 2047) - 1022;
 }
 
+// A look-up, since putting a double together from its words costs as much as three products.
+const LEAST_POWER = -1000;
+const powers = new Float64Array(1023 - LEAST_POWER + 1);
+for (let k = 0, value = 2 ** LEAST_POWER; k < powers.length; k++, value *= 2) powers[k] = value;
+
 /** 2^k as a double, for use in upper bounds: never less than 2^k while k <= 1023, at least 2^-1000. */
 export function pow2(k: number): number {
   if (k > 1023) return Infinity;
-  if (k < -1000) k = -1000;
-  words[HIGH] = (k + 1023) << 20;
-  words[1 - HIGH] = 0;
-  return view[0]!;
+  return powers[k < LEAST_POWER ? 0 : k - LEAST_POWER]!;
 }
 
 /** rad·2^k as an upper bound; a radius 0 stays 0 whatever k is. */
@@ -73,11 +75,11 @@ export function shift(k: number): bigint {
   return shifts[k]!;
 }
 
-let double = 0;
+let lead = 0;
 
-/** The double nearest to the number that `bitLength` measured last; infinite for long ones. */
-export function lastDouble(): number {
-  return double;
+/** For the number n that `bitLength` measured last, with e bits: d with |n| <= d·2^e and d <= 1, or 0 for 0. */
+export function leadingPart(): number {
+  return lead;
 }
 
 /**
@@ -86,8 +88,10 @@ export function lastDouble(): number {
  */
 export function bitLength(n: bigint, hint = 0): number {
   const d = Number(n);
-  double = d;
-  if (d === 0) return 0;
+  if (d === 0) {
+    lead = 0;
+    return 0;
+  }
   if (d !== Infinity && d !== -Infinity) return doubleLength(n, d, 0);
   // Find a shift that leaves 1 to 1023 bits: the hint's, else by doubling and halving.
   const m = absBig(n);
@@ -107,11 +111,11 @@ export function bitLength(n: bigint, hint = 0): number {
 function doubleLength(n: bigint, d: number, low: number): number {
   view[0] = d;
   const high = words[HIGH]!;
-  const e = ((high >>> 20) & 2047) - 1022;
+  let e = ((high >>> 20) & 2047) - 1022;
   // Only a power of two can be the result of rounding up past one; then look at the bits.
-  if ((high & 0xfffff) === 0 && words[1 - HIGH] === 0 && e > 53) {
-    return low + (absBig(n) >> shift(e - 1) ? e : e - 1);
-  }
+  if ((high & 0xfffff) === 0 && words[1 - HIGH] === 0 && e > 53 && !(absBig(n) >> shift(e - 1))) e--;
+  // Number() rounds to nearest, and a shift cuts less than one unit: under 2^-50 of the leading part if that has 52 bits, else up to all of it.
+  lead = low > 0 && e < 52 ? 1 : Math.min(1, Math.abs(d) * pow2(-e) * (1 + 2 ** -50));
   return low + e;
 }
 

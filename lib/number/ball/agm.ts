@@ -1,8 +1,8 @@
 import { BranchError, DomainError } from "../../proof/errors.ts";
 import { agmFixed } from "../fixed/agm.ts";
-import { bitLength, pow2, scaled, size, sizePower, UP } from "../fixed/bits.ts";
+import { bitLength, exponent, pow2, scaled, size, sizePower, UP } from "../fixed/bits.ts";
 import { add, hull, ldexp, mul, sqrt } from "./arithmetic.ts";
-import { type Ball, bits, finish, isZero, lowerPositive, sign, sizeBelow, upper, zero } from "./data.ts";
+import { type Ball, finish, isZero, lowerPositive, sign, sizeBelow, upper, zero } from "./data.ts";
 
 /**
  * Arithmetic-geometric mean of two numbers >= 0; agm(x, 0) = 0.
@@ -20,12 +20,14 @@ export function agm(a: Ball, b: Ball, prec: number): Ball {
       expected: "two numbers that are not negative",
     });
   }
-  const accuracy = Math.min(bits(a), bits(b));
-  return accuracy < 8 ? agmWide(a, b) : near(a, b, Math.min(prec, accuracy + 8));
+  const wide = wider(a, b, prec);
+  const accuracy = -exponent(wide.part) - wide.power;
+  if (wide.part > 0 && accuracy < 8) return agmWide(a, b);
+  return near(a, b, wide.part === 0 ? prec : Math.min(prec, accuracy + 10), wide);
 }
 
 /** Steps in enclosures until the two are within a factor 4 (relative errors of both then count), then the kernel. */
-function near(a: Ball, b: Ball, prec: number): Ball {
+function near(a: Ball, b: Ball, prec: number, wide: Relative): Ball {
   let x = a;
   let y = b;
   let top = height(x, prec);
@@ -36,29 +38,55 @@ function near(a: Ball, b: Ball, prec: number): Ball {
     x = mean;
     top = height(x, prec);
     other = height(y, prec);
+    wide = wider(x, y, prec);
   }
-  const work = prec + 24;
+  const work = prec + 16;
   const exp = Math.max(top, other) - work;
   const p = scaled(x.man, x.exp - exp);
   const q = scaled(y.man, y.exp - exp);
   const mean = p > q ? agmFixed(p, q, work) : agmFixed(q, p, work);
-  // The kernel's 2^12 units, one unit of a quarter of the size for each cut, and the mean times the larger relative radius.
-  const m = size(mean, prec);
-  const power = sizePower();
-  const err = 2 ** 12 + 8 + Math.max(moved(m, power, x, prec), moved(m, power, y, prec));
-  return finish(mean, exp, err * UP, prec);
+  // The kernel's 2^12 units, one unit of a quarter of the size for each cut, and the mean, below 2^work, times the larger relative radius.
+  return finish(mean, exp, (2 ** 12 + 8 + moved(mean, work, wide)) * UP, prec);
+}
+
+/** part·2^power, since a relative radius may be below all doubles. */
+interface Relative {
+  readonly part: number;
+  readonly power: number;
+}
+
+const NONE: Relative = { part: 0, power: 0 };
+
+/** An upper bound of both relative radii. */
+function wider(x: Ball, y: Ball, prec: number): Relative {
+  const a = relativeRadius(x, prec);
+  const b = relativeRadius(y, prec);
+  if (a.part === 0) return b;
+  if (b.part === 0) return a;
+  if (a.power === b.power) return a.part > b.part ? a : b;
+  return exponent(a.part) + a.power > exponent(b.part) + b.power
+    ? { part: 2 * a.part, power: a.power }
+    : { part: 2 * b.part, power: b.power };
+}
+
+/** An upper bound of radius/|midpoint|, infinite for a midpoint 0. */
+function relativeRadius(x: Ball, prec: number): Relative {
+  if (x.rad === 0) return NONE;
+  const low = sizeBelow(x.man, prec);
+  const power = -sizePower();
+  return { part: low === 0 ? 2 ** 1000 : (x.rad / low) * UP, power };
+}
+
+/** An upper bound of the mean times the relative radius, in units of its last place. */
+function moved(mean: bigint, work: number, { part, power }: Relative): number {
+  if (part === 0) return 0;
+  const m = size(mean, work);
+  return m * part * pow2(sizePower() + power) * UP;
 }
 
 /** |midpoint| < 2^height. */
 function height(x: Ball, prec: number): number {
-  return x.exp + bitLength(x.man, prec);
-}
-
-/** An upper bound of m·2^power·(radius of x)/|x|. */
-function moved(m: number, power: number, x: Ball, prec: number): number {
-  if (x.rad === 0) return 0;
-  const low = sizeBelow(x.man, prec);
-  return ((x.rad * m) / low) * pow2(power - sizePower()) * UP;
+  return x.exp + (x.size ?? bitLength(x.man, prec));
 }
 
 /** The mean grows with both arguments, so its values at the ends enclose it. */

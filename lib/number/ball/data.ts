@@ -180,7 +180,10 @@ export function sign(x: Ball): -1 | 0 | 1 | undefined {
   return undefined;
 }
 
+const FAR_FROM_ZERO = 2n ** 41n;
+
 export function containsZero(x: Ball): boolean {
+  if (x.rad < 2 ** 40 && (x.man > FAR_FROM_ZERO || x.man < -FAR_FROM_ZERO)) return false;
   return absBig(x.man) <= radiusInt(x) && compareRadius(x);
 }
 

@@ -1,15 +1,15 @@
 // Arithmetic-geometric mean in fixed point.
-import { bitLength, scaled, shift } from "./bits.ts";
+import { bitLength, pow2, scaled, shift, UP } from "./bits.ts";
+import { boundedCache } from "./cache.ts";
 import { sqrtNear } from "./isqrt.ts";
 
 /** agm(1+x, 1−x) = 1 − Σ b_n x^(2n): b_1 .. b_7 times 2^28. */
 const TAIL: readonly bigint[] = [67108864n, 20971520n, 11534336n, 7684096n, 5648384n, 4409088n, 3584064n];
 const TAIL_BITS = 28;
 
-/** Terms of the tail: short numbers take more of them and one root less (measured). */
-function tailTerms(work: number): number {
-  return work < 600 ? 7 : 4;
-}
+/** Up to here the sizes are doubles, and seven terms spare a root (measured). */
+const SHORT = 600;
+const LONG_TERMS = 4;
 
 /**
  * agm(a, b) for integers a >= b >= a/4 in a common unit, a of about `work` bits; the relative error is under 2^(12 − work).
@@ -21,15 +21,44 @@ function tailTerms(work: number): number {
  *          1 − Σ b_n x^(2n) with b_n >= 0 (Kaluza 1928) and Σ b_n = 1: the terms from n = N on are under x^(2N) for |x| < 1.
  */
 export function agmFixed(a: bigint, b: bigint, work: number): bigint {
+  const enough = work < SHORT ? pow2(-work) : 0;
   for (;;) {
     const sum = a + b;
     const difference = a > b ? a - b : b - a;
     if (difference <= 1n) return a;
-    const lost = work - 1 - bitLength(difference, work);
-    if (2 * (tailTerms(work) + 1) * lost > work) return closed(sum, difference, lost, work);
+    if (work < SHORT) {
+      const z = (Number(difference) / Number(sum)) * UP;
+      const square = z * z * UP;
+      const fourth = square * square * UP;
+      if (fourth * fourth * fourth * fourth * UP < enough) return closedShort(sum, difference, square, work);
+    } else {
+      const lost = work - 1 - bitLength(difference, work);
+      if (2 * (LONG_TERMS + 1) * lost > work) return closed(sum, difference, lost, work);
+    }
     b = sqrtNear(a * b);
     a = sum >> 1n;
   }
+}
+
+/** The coefficients in units of 2^-work. */
+const coefficients = boundedCache(16, (work): readonly bigint[] => TAIL.map((b) => b << shift(work - TAIL_BITS)));
+
+/**
+ * The same for short numbers, where cutting to the digits that count costs more than it saves (measured): Horner's rule in units of 2^-work, each step cut
+ * by under 3 units of which the next keeps a quarter at most: under 4 units of the sum, which is under 1/4, and 3 for z² and the last product.
+ */
+function closedShort(sum: bigint, difference: bigint, square: number, work: number): bigint {
+  const w = shift(work);
+  const b = coefficients(work);
+  const z = (difference << w) / sum;
+  const u = (z * z) >> w;
+  let last = 1;
+  // Terms from the first below a thousandth of a unit on are left out.
+  for (let rest = square * square; last < b.length && rest > pow2(-work - 10); rest *= square) last++;
+  let inner = b[last - 1]!;
+  for (let n = last - 2; n >= 0; n--) inner = b[n]! + ((u * inner) >> w);
+  const series = (u * inner) >> w;
+  return (sum - ((sum * series) >> w)) >> 1n;
 }
 
 /**
@@ -48,7 +77,7 @@ function closed(sum: bigint, difference: bigint, lost: number, work: number): bi
   const u = (q * q) >> shift(first);
   const scale = first + 2 * (cutSum - cutDifference + 1);
   // Terms below the last place are left out.
-  let last = tailTerms(work);
+  let last = LONG_TERMS;
   while (last > 1 && 2 * last * lost > work + 10) last--;
   let inner = scaled(TAIL[last - 1]!, bits(last) - TAIL_BITS);
   for (let n = last - 1; n > 0; n--) {

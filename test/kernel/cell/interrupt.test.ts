@@ -73,5 +73,5 @@ describe("soak", () => {
     const own = new TestNotebook();
     await soak(own, { rounds: 100, seed: 20261201, hook: true });
     await own.session.shutdown();
-  }, 240_000);
+  }, 600_000);
 });

@@ -33,7 +33,7 @@ const write = (name: string, ...sources: string[]) => {
 };
 const read = (file: string) => readFileSync(file, "utf8");
 
-describe("halfperiod run, check and export with the real kernel", { timeout: 60_000 }, () => {
+describe("halfperiod run, check and export with the real kernel", { timeout: 240_000 }, () => {
   it("runs in the notebook's folder, stores what it gave, and check finds the same", () => {
     writeFileSync(path.join(folder, "beside.txt"), "7");
     const file = write(

@@ -17,9 +17,12 @@ function words(text: string): string {
   return text
     .replace(/\p{Cc}+/gu, " ")
     .split(/( +)/)
-    .map((word) => (SAFE.test(word) ? word : special(word)))
+    .map((word) => (SAFE.test(word) && !INDEXED.test(word) ? word : special(word)))
     .join("");
 }
+
+/** b2, c4, g2 and the like, alone or with punctuation behind. */
+const INDEXED = /^[([]*[abceg]\d′*[.,;:)\]]*$/;
 
 /** A word with its opening brackets and closing punctuation left outside the formula. */
 function special(word: string): string {
@@ -29,6 +32,13 @@ function special(word: string): string {
 
 /** A word with special characters: x^3, 10^-5 and 4*x are read as powers and products, others are set as words. */
 function wordTex(word: string): string {
+  const [, sign, prime] = /^(#?)E\(F_(\w+)\)?$/.exec(word) ?? [];
+  if (prime !== undefined) return `${sign ? "\\#" : ""}E(\\mathbb{F}_{${prime}})`;
+  const [, field] = /^F_(\w+)$/.exec(word) ?? [];
+  if (field !== undefined) return `\\mathbb{F}_{${field}}`;
+  const [, letter, index, marks] = /^([abceg])(\d)(′*)$/.exec(word) ?? [];
+  if (letter !== undefined) return `${letter}_{${index}}${"'".repeat(marks?.length ?? 0)}`;
   if (!/^[\w^*+/().,=-]+$/.test(word) || !word.includes("^") || /\^(?![-\w])|[_]/.test(word)) return texWords(word);
-  return word.replace(/\^(-?\w+)/g, "^{$1}").replace(/\*/g, " ");
+  const indexed = word.replace(/\b([a-z])(\d+)(?=\^)/gi, "$1_{$2}");
+  return indexed.replace(/\^(-?\w+)/g, "^{$1}").replace(/\*/g, " ");
 }

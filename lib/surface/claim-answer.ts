@@ -2,7 +2,7 @@
 
 import { sameExact } from "../number/exactness.ts";
 import { Quadratic } from "../number/quadratic.ts";
-import { Rational } from "../number/rational.ts";
+import { gcd, Rational } from "../number/rational.ts";
 import type { Recognition } from "../number/recognise.ts";
 import { Complex, Real } from "../number/values.ts";
 import type { Standing } from "../proof/standing.ts";
@@ -47,10 +47,25 @@ function torsion(group: TorsionSubgroup, other: unknown): Standing | undefined {
           ? other.replace(/\s/g, "") === String(group).replace(/\s/g, "")
           : undefined;
   if (same === undefined) return undefined;
-  const argument = group.proof.join(" ").replace(/\.$/, "");
   return same
-    ? { kind: "proved", argument }
+    ? { kind: "proved", argument: groundOf(group) }
     : { kind: "refuted", evidence: `the torsion subgroup is ${group}, of order ${group.order}` };
+}
+
+/** The counts that settle the bound, and the points that reach it. */
+function groundOf({ counts, generators, structure, order, settledByDivision }: TorsionSubgroup): string {
+  let bound = 0n;
+  const used: string[] = [];
+  for (const { p, count } of counts) {
+    const next = gcd(bound, BigInt(count));
+    if (next !== bound) used.push(`#E(F_${p}) = ${count}`);
+    bound = next;
+  }
+  const points = generators.map((P, k) => `${P} has order ${structure[k]}`);
+  const excluded = settledByDivision.map((l) => `no point has order ${l}, by its division polynomial`);
+  const divides = order === 1 && bound === 1n ? "have no common divisor" : "its order divides";
+  const first = order === 1 && bound === 1n ? `${used.join(", ")} ${divides}` : `${divides} ${used.join(", ")}`;
+  return [first, ...excluded, ...points].join("; ");
 }
 
 /** A point of the same curve whose order is finite. */

@@ -15,6 +15,7 @@ import type { Standing } from "../../proof/standing.ts";
 import type { Curve } from "../../surface/curve.ts";
 import type { TorsionSubgroup } from "../../surface/torsion.ts";
 import { Derivation } from "../derivation.ts";
+import { rationalTex } from "../exact-kind.ts";
 import { table } from "../table.ts";
 import { curveCheck, exactly, factorTex, inX } from "./parts.ts";
 
@@ -123,7 +124,8 @@ function shortened(l: number, f: Univariate<Rational>): string {
   const n = f.length - 1;
   const second = f[n - 1]!;
   const sign = (q: Rational) => (q.sign() < 0 ? "-" : "+");
-  return `\\psi_{${l}} = ${f[n]} x^{${n}} ${sign(second)} ${second.abs()} x^{${n - 1}} + \\cdots ${sign(f[0]!)} ${f[0]!.abs()}`;
+  const size = (q: Rational) => rationalTex(q.abs());
+  return `\\psi_{${l}} = ${size(f[n]!)} x^{${n}} ${sign(second)} ${size(second)} x^{${n - 1}} + \\cdots ${sign(f[0]!)} ${size(f[0]!)}`;
 }
 
 /** Another reason that no rational point has order l: a prime of good reduction over which there is none, or else the real points. */

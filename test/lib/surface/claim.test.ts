@@ -255,12 +255,9 @@ describe("claims about answers that carry their ground", () => {
     });
     expect(claim("over", M, "in", L).standing.kind).toBe("refuted");
     expect(claim("twists", curve`y^2 = x^3 - x`, "homothetic", curve`y^2 = x^3 - 5x`).standing.kind).toBe("proved");
-    expect(claim("τ", lattice({ tau: complex(0, 1) }), "homothetic", lattice({ tau: complex(1, 1) })).standing).toEqual(
-      {
-        kind: "proved",
-        argument: "both reduced bases have τ = i",
-      },
-    );
+    expect(
+      claim("τ", lattice({ tau: complex(0, 1) }), "homothetic", lattice({ tau: complex(1, 1) })).standing,
+    ).toMatchObject({ kind: "proved" });
   });
 });
 

@@ -58,14 +58,21 @@ export function simplestModel<T>(
 /** The change of model as a map of curves with its inverse. */
 export function changeMorphism<T>(from: Curve<T>, to: Curve<T>, change: ModelChange<T>): Morphism<Curve<T>, Curve<T>> {
   const F = from.field;
-  const data = (a: Coefficients<T>, by: ModelChange<T>, back: () => MorphismData<T>): MorphismData<T> => ({
-    map: changeMap(F, a, by),
-    degree: 1,
-    title: "change of model",
-    change: by,
-    abscissa: changeOfAbscissa(F, a, by),
-    inverse: back,
-  });
+  const data = (a: Coefficients<T>, by: ModelChange<T>, back: () => MorphismData<T>): MorphismData<T> => {
+    let map: FormMap<T> | undefined;
+    return {
+      degree: 1,
+      title: "change of model",
+      change: by,
+      abscissa: changeOfAbscissa(F, a, by),
+      inverse: back,
+      // Most changes of model are only read as (u, r, s, t).
+      get map() {
+        map ??= changeMap(F, a, by);
+        return map;
+      },
+    };
+  };
   const forward = data(from.a, change, () => backward);
   const backward = data(to.a, invertChange(F, change), () => forward);
   return new Morphism<Curve<T>, Curve<T>>(from, to, forward as MorphismData<unknown>);

@@ -29,9 +29,25 @@ export function toRational(subject: string, argument: string, value: ExactInput)
 /** A number or an element of the field as an element of the field. */
 export function elementOf<T>(F: Field<T>, subject: string, argument: string, value: ExactInput | T): T {
   const exact = value instanceof Rational || !["object", "function"].includes(typeof value);
-  if (!exact) return value as T;
+  if (!exact) return inField(F, subject, argument, value as T);
   const q = toRational(subject, argument, value as ExactInput);
   return F.mul(F.fromInt(q.num), F.inv(F.fromInt(q.den)));
+}
+
+/** An element as it is, if it is of the field's kind: a number of another field is refused with the way to it. */
+function inField<T>(F: Field<T>, subject: string, argument: string, value: T): T {
+  const isNumber = value instanceof Quadratic || value instanceof Real || value instanceof Complex;
+  if (!isNumber || joinFields(F, fieldOf(value as Coordinate) as unknown as Field<T>)?.name === F.name) {
+    return isNumber ? carry(value, F) : value;
+  }
+  const own = fieldOf(value as Coordinate).name;
+  throw new DomainError({
+    subject,
+    given: `${argument} = ${value}, a number of ${own}, on a curve over ${F.name}`,
+    expected: `a number of ${F.name}`,
+    hint: F.characteristic === 0n ? "Take the curve to a larger field first: E.over(...)." : "",
+    argument,
+  });
 }
 
 /** What a template or a list of coefficients takes: exact numbers, and real or complex values that put the curve over R or C. */
@@ -52,9 +68,24 @@ export function inOneField(subject: string, values: readonly NumberInput[]) {
   const read = values.map((value, k) =>
     isFieldNumber(value) ? value : toRational(subject, `slot ${k + 1}`, value as ExactInput),
   );
+  requireOneQuadraticField(subject, read);
   let field = rationals as unknown as Field<Coordinate>;
   for (const value of read) field = joinFields(field, fieldOf(value))!;
   return { field, values: read.map((value) => carry(value, field)) };
+}
+
+/** Numbers of two quadratic fields have no common one among ours but R and C, where they would stop being exact. */
+function requireOneQuadraticField(subject: string, values: readonly unknown[]): void {
+  const irrational = values.filter((value): value is Quadratic => value instanceof Quadratic && !value.isRational());
+  const [first] = irrational;
+  const other = irrational.find(({ d }) => d !== first!.d);
+  if (!first || !other) return;
+  throw new DomainError({
+    subject,
+    given: `${first} of Q(√${first.d}) and ${other} of Q(√${other.d})`,
+    expected: "numbers of one quadratic field",
+    hint: "Write real(x) or complex(x) around them for a curve over R or C, with enclosures.",
+  });
 }
 
 function isFieldNumber(value: NumberInput): value is Quadratic | Real | Complex {

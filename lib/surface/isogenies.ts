@@ -82,6 +82,14 @@ function checkedPolynomial<T>(E: Curve<T>, f: Polynomial<T>): Univariate<T> {
 
 function generated<T>(E: Curve<T>, P: Point<T>): Affine<T>[] {
   requireOn(E, P);
+  if (E.field.name === "Q" && P.order() === Infinity) {
+    throw new DomainError({
+      subject: "isogeny",
+      given: `the point ${P}, of infinite order`,
+      expected: "a point of finite order",
+      argument: "kernel",
+    });
+  }
   const list: Affine<T>[] = [];
   for (let Q: AnyPoint = P; !Q.isOrigin; Q = Q.plus(P)) {
     list.push(Q.coordinates);

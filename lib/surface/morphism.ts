@@ -121,7 +121,7 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
     if (!data) {
       throw new DomainError({
         subject: "inverse",
-        given: `a ${this.title}`,
+        given: withArticle(this.title),
         expected: "an isomorphism",
         hint: this.degree > 1 ? "An isogeny has a dual: phi.dual()." : "",
       });
@@ -138,7 +138,7 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
     if (data) return new Morphism(this.to, this.from, data);
     throw new DomainError({
       subject: "dual",
-      given: `a ${this.title}`,
+      given: withArticle(this.title),
       expected: "an isogeny made by E.isogeny({ kernel })",
       hint: this.degree === 1 ? "An isomorphism has an inverse." : "",
     });
@@ -207,6 +207,10 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
   [Symbol.toPrimitive](hint: string): string {
     return primitive(hint, this, "map");
   }
+}
+
+function withArticle(title: string): string {
+  return title.startsWith("multiplication") ? title : `${/^[aeio]/.test(title) ? "an" : "a"} ${title}`;
 }
 
 const BOTH_IDENTITIES: Standing = {

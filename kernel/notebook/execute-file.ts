@@ -48,7 +48,8 @@ export async function executeFile(file: string, options: ExecuteFileOptions): Pr
     });
     try {
       const { signal, stopped } = stop;
-      const run = await Promise.race([stopped, runNotebook(notebook, client, { ...progress, limit, signal })]);
+      const stamp = { folder: path.dirname(file), digits };
+      const run = await Promise.race([stopped, runNotebook(notebook, client, { ...progress, limit, signal, stamp })]);
       return confined ? { ...run, notebook: cleanOutputs(run.notebook) } : run;
     } finally {
       await client.shutdown();

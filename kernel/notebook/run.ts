@@ -2,7 +2,7 @@
 import { type KernelClient, KernelLost } from "./client.ts";
 import { OutputCollector } from "./collect.ts";
 import { type Cell, type CodeCell, type ErrorOutput, hasTag, isCode, type Notebook, type Output } from "./format.ts";
-import { stamped } from "./stamp.ts";
+import { type StampOptions, stamped } from "./stamp.ts";
 
 /** Tag by which a notebook's author says that a cell is meant to fail. */
 const MAY_FAIL = "raises-exception";
@@ -27,6 +27,8 @@ export interface RunEvents {
 export interface RunOptions extends RunEvents {
   /** Milliseconds a cell may take; no limit if absent. */
   readonly limit?: number | undefined;
+  /** What the stamp is to tell of the run. */
+  readonly stamp?: StampOptions;
   /** Stops the run between cells; whoever aborts also ends the kernel, which ends the cell. */
   readonly signal?: AbortSignal;
 }
@@ -63,7 +65,7 @@ export async function runNotebook(notebook: Notebook, client: KernelClient, opti
   }
   // Outputs are read last: a later cell may have updated an earlier display.
   const cells = finish.map((cell) => cell());
-  const executed = stamped({ ...notebook, metadata: namedMetadata(notebook, client), cells });
+  const executed = stamped({ ...notebook, metadata: namedMetadata(notebook, client), cells }, options.stamp);
   return { notebook: executed, reports, total, ...(failure ? { failure } : {}) };
 }
 

@@ -28,12 +28,13 @@ export function isNumberData(data: unknown): data is NumberData {
  * Compares a stored number with a fresh one.
  *
  * `digits` is what the fresh run was asked for, if less than what is stored: an enclosure that is wider only for that
- * reason is the same. Quadratic numbers are compared exactly with each other only.
+ * reason is the same. Quadratic numbers are compared exactly with each other, and by enclosures with all else.
  */
 export function compareNumbers(stored: NumberData, fresh: NumberData, where: string, digits = Infinity): Verdict {
   if (sameFields(stored, fresh)) return SAME;
   const [before, now] = [enclosed(stored), enclosed(fresh)];
-  if (!before || !now) return verdict("differs", `${where}: was ${show(stored)}, is ${show(fresh)}`);
+  const bothQuadratic = stored.kind === "quadratic" && fresh.kind === "quadratic";
+  if (!before || !now || bothQuadratic) return verdict("differs", `${where}: was ${show(stored)}, is ${show(fresh)}`);
   if (!overlaps(before, now))
     return verdict("differs", `${where}: was ${show(stored)}, is ${show(fresh)}${relation(before, now)}`);
   const [had, has] = [accuracy(before), accuracy(now)];
@@ -53,17 +54,36 @@ export function digitsOf(data: NumberData): number {
   return value ? accuracy(value) : Number.POSITIVE_INFINITY;
 }
 
-/** The disc of a number's data; undefined for a quadratic number, and for what is no number after all. */
+/** The disc of a number's data; undefined for what is no number after all. */
 export function enclosed(data: NumberData): Enclosed | undefined {
   const part = (field: string) => Rational.parse(String(data[field]));
   try {
     if (data.kind === "rational") return { re: part("value"), im: ZERO, radius: ZERO };
     if (data.kind === "real") return { re: part("middle"), im: ZERO, radius: part("radius") };
+    if (data.kind === "quadratic") return enclosedQuadratic(part("a"), part("b"), BigInt(String(data.d)));
     if (data.kind === "complex") return { re: part("re"), im: part("im"), radius: part("radius") };
   } catch {
     return undefined;
   }
   return undefined;
+}
+
+/** Decimals to which a root is enclosed: far more than is ever stored of a value. */
+const ROOT_DIGITS = 400;
+
+/** a + b√d, on the imaginary axis of b for negative d. */
+function enclosedQuadratic(a: Rational, b: Rational, d: bigint): Enclosed {
+  const scale = 10n ** BigInt(ROOT_DIGITS);
+  const root = Rational.of(squareRoot((d < 0n ? -d : d) * scale * scale), scale).times(b);
+  const radius = b.abs().div(Rational.of(scale));
+  return d < 0n ? { re: a, im: root, radius } : { re: a.plus(root), im: ZERO, radius };
+}
+
+/** The whole part of a root, by Newton from above. */
+function squareRoot(n: bigint): bigint {
+  let root = 1n << BigInt((n.toString(2).length + 1) >> 1);
+  for (let next = (root + n / root) >> 1n; next < root; next = (root + n / root) >> 1n) root = next;
+  return root;
 }
 
 /** Can both be true of one value? Squares, since distances of rational points need not be rational. */

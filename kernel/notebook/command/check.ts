@@ -1,17 +1,21 @@
 // halfperiod check: rerun in a fresh kernel and compare with what is stored, by mathematics.
+import path from "node:path";
 import { type CellVerdict, compareNotebooks } from "../check/cells.ts";
 import { type Finding, stands, worst } from "../check/verdict.ts";
 import { executeFile } from "../execute-file.ts";
 import { readNotebook, writeAtomically } from "../file.ts";
 import type { Notebook } from "../format.ts";
-import { changesSince, readStamp } from "../stamp.ts";
+import { changesSince, orderOfRun, readStamp, type Stamp } from "../stamp.ts";
 import { type Console, EXIT, readArguments, readDigits, readLimit, UsageError } from "./console.ts";
 import { USAGE } from "./usage.ts";
 
 interface Checked {
   readonly file: string;
   readonly finding: Finding;
-  /** What the stamp tells: edits and other versions. */
+  readonly stands: boolean;
+  /** The stamp of the stored run. */
+  readonly stamp: Stamp | null;
+  /** What the stamp and the counts of execution tell: edits, another order, other versions and packages. */
   readonly since: readonly string[];
   readonly cells: readonly CellVerdict[];
 }
@@ -38,7 +42,13 @@ export async function checkCommand(args: readonly string[], { out, err }: Consol
 function check(file: string, stored: Notebook, fresh: Notebook, digits: number | undefined): Checked {
   const cells = compareNotebooks(stored, fresh, digits === undefined ? {} : { digits });
   const stamp = readStamp(stored);
-  return { file, finding: worst(cells).finding, since: stamp ? changesSince(stamp, stored) : [], cells };
+  const order = orderOfRun(stored);
+  const since = stamp
+    ? changesSince(stamp, stored, { folder: path.dirname(file), digits })
+    : ["there is no stamp of a run by this program"];
+  if (order !== undefined) since.push(order);
+  const { finding } = worst(cells);
+  return { file, finding, stands: stands(finding), stamp: stamp ?? null, since, cells };
 }
 
 const WORDS: Readonly<Record<Finding, string>> = {

@@ -1,8 +1,10 @@
 // What the notebook commands share: where they write, how they read their arguments, how they say that something is off.
 import { parseArgs } from "node:util";
+import type { Notebook } from "../format.ts";
 import { plainText } from "../page/terminal.ts";
 import type { Screen } from "../progress.ts";
 import type { CellReport } from "../run.ts";
+import { changesSince, isEdited, readStamp } from "../stamp.ts";
 
 export interface Console {
   /** Results. */
@@ -65,6 +67,13 @@ export function readDigits(text: string | undefined, usage: string): number | un
   if (text === undefined) return undefined;
   if (!/^[1-9]\d{0,5}$/.test(text)) throw new UsageError(`--digits ${text}; expected a count, such as 80`, usage);
   return Number(text);
+}
+
+/** Says, without running anything, that the code is another than that of the stored run. */
+export function tellEdits(notebook: Notebook, err: Screen): void {
+  const stamp = readStamp(notebook);
+  const edits = stamp && isEdited(stamp, notebook) ? changesSince(stamp, notebook).slice(0, 1) : [];
+  for (const edit of edits) err.write(`halfperiod: ${edit}; halfperiod run makes the results anew\n`);
 }
 
 /** The cell that stopped a run, with its error, as a person reads it in a terminal. */

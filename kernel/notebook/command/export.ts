@@ -3,7 +3,7 @@ import path from "node:path";
 import { readNotebook, writeAtomically } from "../file.ts";
 import type { Notebook } from "../format.ts";
 import { colophon } from "../summary.ts";
-import { type Console, EXIT, readArguments, UsageError } from "./console.ts";
+import { type Console, EXIT, readArguments, tellEdits, UsageError } from "./console.ts";
 import { USAGE } from "./usage.ts";
 
 /** One file of an export; the first of a list is the one asked for. */
@@ -58,6 +58,7 @@ export async function exportCommand(args: readonly string[], { out, err }: Conso
   if (!form) throw new UsageError(`--as ${as}; expected ${Object.keys(FORMS).join(", ")}`, USAGE.export);
   const target = values.to ?? path.join(path.dirname(file), `${path.basename(file, ".ipynb")}${form.extension}`);
   const notebook = await readNotebook(file);
+  tellEdits(notebook, err);
   const name = path.basename(target, form.extension);
   const { files, advice } = await form.files(notebook, name, path.dirname(file));
   for (const [index, { name: written, content }] of files.entries()) {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import type { Cell, Notebook } from "../../../kernel/notebook/format.ts";
-import { changesSince, makeStamp, readStamp, stamped } from "../../../kernel/notebook/stamp.ts";
+import { changesSince, makeStamp, orderOfRun, readStamp, stamped } from "../../../kernel/notebook/stamp.ts";
 import { colophon, summaryLines } from "../../../kernel/notebook/summary.ts";
 import { VALUE_TYPE } from "../../../kernel/notebook/values.ts";
 import { VALUE_TYPE as LIBRARY_TYPE } from "../../../lib/page/bundle.ts";
@@ -61,10 +61,39 @@ describe("the stamp of a run", () => {
     const stamp = makeStamp(plain);
     expect(changesSince(stamp, notebook(cell("const a=1;\n\nf(a)  /* done */")))).toEqual([]);
     expect(changesSince(stamp, notebook(cell("const a = 2; f(a)")))).toEqual([
-      "the code was edited after the stored run",
+      "the code was edited after the stored run: code cell 1",
     ]);
     expect(makeStamp(notebook(cell('"a b"'))).code).not.toBe(makeStamp(notebook(cell('"ab"'))).code);
     expect(makeStamp(notebook(cell("a"), cell("b"))).code).not.toBe(makeStamp(notebook(cell("b"), cell("a"))).code);
+  });
+
+  it("tells which cells are new or changed, that one is gone, that they stand in another order", () => {
+    const three = notebook(cell("a"), cell("b"), cell("c"));
+    const stamp = makeStamp(three);
+    const since = (...sources: string[]) => changesSince(stamp, notebook(...sources.map((source) => cell(source))));
+    expect(since("a", "b", "c // words")).toEqual([]);
+    expect(since("a", "x", "c")).toEqual(["the code was edited after the stored run: code cell 2"]);
+    expect(since("a", "b", "y", "c", "z")).toEqual(["the code was edited after the stored run: code cells 3, 5"]);
+    expect(since("a", "c")).toEqual(["the code was edited after the stored run: 1 cell taken out"]);
+    expect(since("c", "a", "b")).toEqual(["the cells were put in another order after the stored run"]);
+    const { cells: _, ...old } = stamp;
+    expect(changesSince(old, notebook(cell("x")))).toEqual(["the code was edited after the stored run"]);
+  });
+
+  it("tells that stored results come from cells run in another order", () => {
+    const counted = (...counts: (number | null)[]) =>
+      notebook(...counts.map((count) => ({ ...cell("a"), execution_count: count })));
+    expect(orderOfRun(counted(1, 2, null, 7))).toBeUndefined();
+    expect(orderOfRun(counted(3, 1, 2))).toBe("the stored results were made in another order: 3, 1, 2");
+  });
+
+  it("holds the digits that the cells ask for, or those asked for at the run", () => {
+    const asks = notebook(cell("provedDigits(50);"), cell("atDigits(80, f); provedDigits( 20 )"));
+    expect(makeStamp(asks).digits).toBe("50, 20");
+    expect(makeStamp(asks, { digits: 30 }).digits).toBe("30 (asked for at the run)");
+    expect(changesSince(makeStamp(asks), asks, { digits: 30 })).toEqual([
+      "proved digits: 50, 20 then, 30 (asked for at the run) now",
+    ]);
   });
 
   it("names other versions", () => {

@@ -37,6 +37,16 @@ describe("numbers compared by what they are", () => {
     expect(finding(stored, fresh)).toBe("same");
   });
 
+  it("same: a root that was stored by its decimals and is exact now; weaker the other way — oracle: √2, i√3", () => {
+    const exactly = (a: string, b: string, d: string) => ({ kind: "quadratic", a, b, d });
+    const decimals = real("141421356237309504880e-20", "1e-20");
+    expect(finding(decimals, exactly("0", "1", "2"))).toBe("same");
+    expect(finding(exactly("0", "1", "2"), decimals)).toBe("weaker");
+    expect(finding(decimals, exactly("0", "1", "3"))).toBe("differs");
+    expect(finding(complex("0", "17320508e-7", "1e-7"), exactly("0", "1", "-3"))).toBe("same");
+    expect(finding(exactly("0", "1", "2"), exactly("1/1000", "1", "2"))).toBe("differs");
+  });
+
   it("differs: one digit within the proved ones, an exact value changed, enclosures just apart", () => {
     expect(finding(x, real("12345678901234567990e-20", "1e-20"))).toBe("differs");
     expect(finding(rational("1/2"), rational("1/3"))).toBe("differs");

@@ -6,10 +6,12 @@ import { log } from "../wire/log.ts";
 import { createHistoryFile, historyFolder } from "./history/file.ts";
 import { startKernel } from "./kernel.ts";
 
-/** Loads the cells; with --confined among the arguments they have the language and the library alone. */
+/** Loads the cells; HALFPERIOD_MEMORY limits their heap, in MB; with --confined among the arguments they have the language and the library alone. */
 async function createCells(options: CellSessionOptions): Promise<CellSession> {
   const { createCellSession } = await import("../cell/session.ts");
-  return createCellSession(process.argv.includes("--confined") ? { ...options, confined: {} } : options);
+  const limit = process.env.HALFPERIOD_MEMORY ?? "";
+  const limited = /^[1-9]\d{1,6}$/.test(limit) ? { ...options, memoryLimit: Number(limit) } : options;
+  return createCellSession(process.argv.includes("--confined") ? { ...limited, confined: {} } : limited);
 }
 
 async function serve(file: string): Promise<void> {

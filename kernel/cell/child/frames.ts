@@ -1,5 +1,5 @@
 // Stack traces in the user's terms: cells by number, TypeScript positions, no machinery.
-import { SourceMap } from "node:module";
+import { findSourceMap, SourceMap } from "node:module";
 import { fileURLToPath } from "node:url";
 import type { SourceMapData } from "../types/sourcemap.ts";
 
@@ -87,7 +87,7 @@ export class Frames {
       const script = this.#scripts.get(file);
       if (script) return mapped(script, site, line, column);
       if (file === "" || file.startsWith("node:") || isMachinery(file)) return [];
-      return [{ name: site.getFunctionName() ?? "", file: plainFile(file), line, column }];
+      return [{ name: site.getFunctionName() ?? "", file: plainFile(file), ...inSource(file, line, column) }];
     });
   }
 
@@ -97,6 +97,16 @@ export class Frames {
       .replace(/\(0\s*,\s*\$+([\p{ID_Continue}$]+)\.v\)/gu, "$1")
       .replace(/\$+([\p{ID_Start}_][\p{ID_Continue}$]*)\.[vc]\b/gu, "$1");
   }
+}
+
+/** The place in a TypeScript module beside the notebook: Node keeps the map that came with the code. */
+function inSource(file: string, line: number, column: number): { line: number; column: number } {
+  if (!/\.[mc]?ts(?:\?|$)/.test(file)) return { line, column };
+  const map = findSourceMap(file) as SourceMap | undefined;
+  if (!map) return { line, column };
+  const entry = map.findEntry(line - 1, column - 1);
+  if (!("originalLine" in entry)) return { line, column };
+  return { line: entry.originalLine + 1, column: entry.originalColumn + 1 };
 }
 
 function mapped(script: Script, site: NodeJS.CallSite, line: number, column: number): Frame[] {

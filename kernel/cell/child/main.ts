@@ -100,6 +100,7 @@ function main(): void {
     enter: () => runner.enter(),
     stop: (cell: number, level: 0 | 1 | 2) => stops.stop(cell, level),
     where: (cell: number) => stops.where(cell),
+    rung: stops.rung,
   });
   Object.defineProperty(globalThis, "__cells", { value: machine, enumerable: false });
   addGlobals(modules);

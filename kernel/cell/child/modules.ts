@@ -41,6 +41,8 @@ export class Modules {
   #hook(): void {
     if (this.#hooked) return;
     this.#hooked = true;
+    // Stack traces then speak of the lines of the TypeScript (frames.ts).
+    process.setSourceMapsEnabled(true);
     const { registerHooks } = nodeModule as unknown as { registerHooks?: (hooks: object) => void };
     if (!registerHooks) {
       nodeModule.register("./typescript-modules.js", import.meta.url);

@@ -45,7 +45,7 @@ export function loadTypeScript(url: string): Loaded | undefined {
   if (!TYPESCRIPT.test(file)) return undefined;
   compiler ??= createRequire(import.meta.url)("typescript") as typeof TS;
   const { ModuleKind, ScriptTarget } = compiler;
-  const compilerOptions = { module: ModuleKind.ESNext, target: ScriptTarget.ES2022 };
+  const compilerOptions = { module: ModuleKind.ESNext, target: ScriptTarget.ES2022, inlineSourceMap: true };
   const { outputText } = compiler.transpileModule(readFileSync(file, "utf8"), { fileName: file, compilerOptions });
   return { format: "module", source: outputText, shortCircuit: true };
 }

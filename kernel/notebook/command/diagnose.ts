@@ -83,6 +83,7 @@ async function trial(): Promise<Trial> {
     client = started;
     await timed("first cell, checked and run", () => expectValue(started, "const two: number = 1 + 1; two", "2"));
     await timed("next cell", () => expectValue(started, "two + 1", "3"));
+    facts.push(["way to stop any code", await stopWay(started)]);
     const endless = endlessTimer(started);
     await sleep(200);
     await timed("stops an endless timer", () => stop(started, endless));
@@ -107,6 +108,25 @@ async function expectValue(client: KernelClient, code: string, expected: string)
     },
   });
   if (shown !== expected) throw new Error(`${code} gave ${shown ?? `${reply.ename}: ${reply.evalue}`}`);
+}
+
+const STOP_WAYS: Readonly<Record<string, string>> = {
+  binding: "whole (by a binding of this Node)",
+  internals: "whole (by internals of this Node)",
+  none: "whole but for code that runs under an async hook of its own, where the session is ended",
+};
+
+/** How the cells' process clears what Node keeps of interrupted callbacks; it differs between versions of Node. */
+async function stopWay(client: KernelClient): Promise<string> {
+  let shown = "";
+  await client.execute("String((globalThis as Record<string, any>).__cells?.rung)", {
+    limit: 60_000,
+    onMessage: (type, content) => {
+      if (type === "execute_result") shown = String((content.data as Record<string, unknown>)["text/plain"]);
+    },
+  });
+  const rung = shown.replaceAll('"', "");
+  return STOP_WAYS[rung] ?? "not known";
 }
 
 // A loop in a timer is the hardest to stop: it has no await, and the cell that started it waits elsewhere.

@@ -1,4 +1,6 @@
 // Errors point at the user's own symbols.
+import { writeFileSync } from "node:fs";
+import { join } from "node:path";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { TestNotebook } from "./notebook.ts";
 
@@ -67,6 +69,15 @@ describe("errors of a cell", () => {
     ["throw new Proxy({}, { getPrototypeOf() { throw 1 } })", "Thrown: a value that throws when it is looked at"],
   ])("%s", async (code, expected) => {
     expect(await notebook.error(code)).toBe(expected);
+  });
+
+  it("a place in a TypeScript module beside the notebook is that of its source", async () => {
+    const source =
+      "interface Only {\n  types: string;\n}\n\nexport function fall(given: Only): number {\n  throw new Error(given.types);\n}\n";
+    writeFileSync(join(notebook.cwd, "falling.ts"), source);
+    const trace = await notebook.traceback("import { fall } from './falling.ts';\nfall({ types: 'down' })");
+    expect(trace).toMatch(/fall, .*falling\.ts, line 6, column 9/);
+    expect(trace).toContain(`in cell ${notebook.last}, line 2, column 1`);
   });
 
   it("a cause is shown", async () => {

@@ -44,6 +44,18 @@ describe("interrupt", () => {
     expect(await notebook.value("finals")).toBe("7");
   });
 
+  it("a long evaluation of the library stops, and its next value is right — oracle: a session that was never stopped", async () => {
+    const setup = "const deep = lattice({ tau: 2*i }).wp(1/3)";
+    await notebook.value(setup);
+    await interrupted("deep.digits(10000)", 100);
+    const fresh = new TestNotebook();
+    await fresh.value(setup);
+    for (const code of ["String(deep.digits(200))", "String(lattice({ tau: 2*i }).wp(1/5).digits(300))"]) {
+      expect(await notebook.value(code)).toBe(await fresh.value(code));
+    }
+    await fresh.session.shutdown();
+  });
+
   it("without a running cell it does nothing to the next", async () => {
     notebook.session.interrupt();
     expect(await notebook.value("await new Promise((r) => setTimeout(() => r(kept), 50))")).toBe('"kept"');

@@ -17,14 +17,19 @@ export interface Run extends Parent {
 export interface Runs {
   /** Registers the run of a request. */
   open(request: Parent, options: { readonly silent: boolean; readonly allowStdin: boolean }): Run;
-  /** Ends the flow of a run: no prompt of it stays open. Its late output is still published. */
-  close(run: Run): void;
+  /**
+   * Ends the flow of a run: no prompt of it stays open. Its late output is still published. What a failed run showed aside
+   * is shown in the page, as the reply of a failure holds nothing else.
+   */
+  close(run: Run, failed: boolean): void;
   /** Publishes what a cell reports, with the request that started it as parent. */
   report(event: CellEvent): void;
 }
 
 /** Runs remembered: the parent of a late print costs some hundred bytes each. */
 const REMEMBERED = 100_000;
+/** What a reply asks for at most: a cell that shows aside for ever must not grow the kernel. */
+const PAYLOADS = 50;
 
 export function createRuns(output: Output, prompts: Prompts): Runs {
   const runs = new Map<number, Run>();
@@ -40,8 +45,9 @@ export function createRuns(output: Output, prompts: Prompts): Runs {
       open.add(run);
       return run;
     },
-    close(run) {
+    close(run, failed) {
       open.delete(run);
+      for (const { source, data } of failed ? run.payload : []) if (source === "page") showPage(data, run, output);
       prompts.close(run.cell);
     },
     report(event) {
@@ -49,11 +55,16 @@ export function createRuns(output: Output, prompts: Prompts): Runs {
       if (!run) log(`output of a cell that is not known: ${event.type}`);
       else if (event.type === "input") prompts.ask(run, event.prompt, event.password);
       else if (run.silent) return;
-      else if (event.type === "page" && open.has(run)) addPage(run.payload, event.data);
+      else if (event.type === "page" && open.has(run) && run.payload.length < PAYLOADS)
+        addPage(run.payload, event.data);
       else if (event.type === "propose") open.has(run) && addProposal(run.payload, event.code, event.replace);
       else publishEvent(event, run, output);
     },
   };
+}
+
+function showPage(data: unknown, run: Run, output: Output): void {
+  output.publish("display_data", { data, metadata: {}, transient: {} }, run);
 }
 
 function addPage(payload: Json[], data: MimeBundle): void {
@@ -68,8 +79,8 @@ function addProposal(payload: Json[], text: string, replace: boolean): void {
 }
 
 function publishEvent(event: Exclude<CellEvent, { type: "input" | "propose" }>, run: Run, output: Output): void {
-  // too late for the reply: shown in the page after all
-  if (event.type === "page") output.publish("display_data", { data: event.data, metadata: {}, transient: {} }, run);
+  if (event.type === "page")
+    showPage(event.data, run, output); // too late for the reply, or too many
   else if (event.type === "stream") output.stream(event.name, event.text, run);
   else if (event.type === "clear") output.publish("clear_output", { wait: event.wait }, run);
   else publishDisplay(event, run, output);

@@ -33,7 +33,7 @@ export const executeRequest: Handler = async (request, service) => {
   const entry = options.stored ? (await service.history()).add(count, options.code) : undefined;
   const stopped = service.interruptions !== interruptions;
   const outcome = stopped ? STOPPED : await runCell(options, run, count, service);
-  service.runs.close(run);
+  service.runs.close(run, outcome.status === "error");
   if (!options.silent) publishOutcome(outcome, run, count, service);
   if (entry && outcome.status === "ok") entry.output = plainText(outcome);
   if (outcome.status === "error" && options.stopOnError && !options.silent) await service.abortQueued();

@@ -161,6 +161,11 @@ it("what a cell shows aside and proposes is in the reply, one proposal at most â
   expect(await payload("page one\npropose a", { silent: true })).toEqual([]);
   const { published } = await test.client.execute("page one\npropose a");
   expect(summary(published)).toEqual(["busy", "execute_input", "idle"]);
+  const failed = await test.client.execute("page one\nfail");
+  expect(summary(failed.published)).toEqual(["busy", "execute_input", "display_data", "error", "idle"]);
+  const many = await test.client.execute("page one\n".repeat(60));
+  expect(many.reply.content.payload.length).toBe(50);
+  expect(summary(many.published).filter((kind) => kind === "display_data").length).toBe(10);
 });
 
 it("late text goes to the cell that started it, with no new busy â€” oracle: protocol", async () => {

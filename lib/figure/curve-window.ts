@@ -87,7 +87,17 @@ function turns(equation: PlaneEquation): Point[] {
     realRoots(leading, -reach, reach).some((pole) => Math.abs(pole - x) < 1e-6 * reach);
   return turningX(equation, -reach, reach)
     .filter((x) => !atPole(x))
-    .flatMap((x) => samples(equation, [x, x]));
+    .flatMap((x) => {
+      const found = samples(equation, [x, x]);
+      return found.length > 0 ? found : vertexAt(equation, x);
+    });
+}
+
+/** Where two values of y meet, A y² + B y + C has the root −B/(2A); rounding may leave its roots just off the real line. */
+function vertexAt(equation: PlaneEquation, x: number): Point[] {
+  if (degreeInY(equation) !== 2) return [];
+  const [, b = 0, a = 0] = equation.rows.map((row) => row.reduceRight((total, c) => total * x + c, 0));
+  return [[x, -b / (2 * a)]];
 }
 
 /** Where turning points can be: a bound from the sizes of the coefficients, homogeneous of degree one in x and y. */

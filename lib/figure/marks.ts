@@ -53,15 +53,33 @@ export function placeLabels(
   return requests
     .filter(({ at }) => inside(frame, at, DOT))
     .map((request) => {
-      const box = best(request, ink, placed, frame);
+      const others = requests.filter(({ at }) => at !== request.at).map(({ at }) => at);
+      const box = best(request, { ink, placed, others }, frame);
       placed.push(box);
       return mathLabel(request.label, box.x, box.y + LINE_HEIGHT - 4);
     });
 }
 
-function best(request: LabelRequest, ink: readonly Pixel[], placed: readonly Box[], frame: Frame): Box {
-  const candidates = around(request).map((box, order) => ({ box, cost: cost(box, ink, placed, frame) + order * 0.3 }));
+/** What stands around a label: strokes and points as pixels, labels placed before, and the other named points. */
+interface Surroundings {
+  readonly ink: readonly Pixel[];
+  readonly placed: readonly Box[];
+  readonly others: readonly Pixel[];
+}
+
+function best(request: LabelRequest, { ink, placed, others }: Surroundings, frame: Frame): Box {
+  const candidates = around(request).map((box, order) => ({
+    box,
+    cost: cost(box, ink, placed, frame) + order * 0.3 + (nearerTo(others, request.at, box) ? 40 : 0),
+  }));
   return candidates.reduce((low, next) => (next.cost < low.cost ? next : low)).box;
+}
+
+/** Whether another named point is as near to the label as its own: it would seem to belong to that. */
+function nearerTo(others: readonly Pixel[], own: Pixel, box: Box): boolean {
+  const distance = ([x, y]: Pixel) =>
+    Math.hypot(Math.max(box.x - x, 0, x - box.x - box.width), Math.max(box.y - y, 0, y - box.y - box.height));
+  return others.some((other) => distance(other) < distance(own) + 2);
 }
 
 function around({ at: [x, y], label, gap = 7 }: LabelRequest): Box[] {
@@ -96,8 +114,12 @@ function within(box: Box, x: number, y: number, slack: number): boolean {
   return x >= box.x - slack && x <= box.x + box.width + slack && y >= box.y - slack && y <= box.y + box.height + slack;
 }
 
+/** Labels side by side need a gap, or "P" beside "P + Q" reads as one. */
+const GAP = 6;
+
 function overlap(a: Box, b: Box): boolean {
-  return a.x < b.x + b.width && b.x < a.x + a.width && a.y < b.y + b.height && b.y < a.y + a.height;
+  const beside = a.x < b.x + b.width + GAP && b.x < a.x + a.width + GAP;
+  return beside && a.y < b.y + b.height && b.y < a.y + a.height;
 }
 
 /** Points along a stroke no more than four pixels apart: what a label would cover. */

@@ -3,6 +3,7 @@
 import { sortedTerms } from "../algebra/multivariate.ts";
 import { DomainError } from "../proof/errors.ts";
 import { PlaneCubic } from "../surface/cubic.ts";
+import { QuadricPair } from "../surface/quadrics.ts";
 import { type PlaneCurve, PlanePoint } from "../surface/variety.ts";
 import { realDouble } from "./doubles.ts";
 import type { PlaneEquation } from "./fibre.ts";
@@ -10,6 +11,14 @@ import type { Mark } from "./marks.ts";
 import { along, type Extras, NOTHING, type Plain, type Subject } from "./subject.ts";
 
 export function planeSubject(C: PlaneCurve, chart: string | undefined): Subject<PlanePoint> {
+  if (C instanceof QuadricPair) {
+    throw new DomainError({
+      subject: "figure.curve",
+      given: `${C}, a curve in space`,
+      expected: "a plane curve",
+      hint: "Draw its Weierstrass model: C.through(P).curve.",
+    });
+  }
   const axes = axesOf(C, chart);
   const equation = equationOf(C, axes);
   const place = (P: PlanePoint): Plain | undefined => placeOf(C, P, axes);

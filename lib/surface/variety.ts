@@ -153,10 +153,11 @@ export class PlanePoint<T = Rational> {
   get affine(): Readonly<Record<string, T>> | undefined {
     const { curve } = this;
     const { variables, field } = curve.model;
-    const extra = variables.findIndex((name) => !curve.letters.includes(name));
+    const extra = variables.findLastIndex((name) => !curve.letters.includes(name));
     if (extra < 0 || field.isZero(this.coordinates[extra]!)) return undefined;
     const values = normalise(curve.model, this.coordinates);
-    return Object.fromEntries(variables.map((name, k) => [name, values[k]!] as const).filter((_, k) => k !== extra));
+    const named = variables.map((name, k) => [name, values[k]!] as const);
+    return Object.fromEntries(named.filter(([name]) => curve.letters.includes(name)));
   }
 
   equals(other: PlanePoint<T>): boolean {

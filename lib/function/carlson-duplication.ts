@@ -6,6 +6,7 @@
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { DomainError, PoleError, PrecisionError } from "../proof/errors.ts";
+import { carlsonSeries, farEnough, type Kind, termCount } from "./carlson-series.ts";
 import { lowMagnitude } from "./enclosure.ts";
 
 export type Triple = readonly [Disc, Disc, Disc];
@@ -51,8 +52,41 @@ export function refuseZeros(name: string, arguments_: readonly Disc[], allowed: 
   });
 }
 
+/** A duplication: the roots, how they go on, and the weighted sum of their squares, which is the mean times the sum of the weights. */
+export interface Duplication<R> {
+  readonly name: string;
+  readonly start: R;
+  /** The differences of the mean and the arguments, times the sum of the weights; each step divides them by 4. */
+  readonly gaps: readonly Disc[];
+  total(roots: R, bits: number): Disc;
+  next(roots: R, step: number): R;
+}
+
+/** Where a duplication ended. */
+export interface Ended<R> {
+  readonly roots: R;
+  readonly steps: number;
+  readonly total: Disc;
+  readonly series: Disc;
+}
+
+/** Duplications until the series is short, and the series. */
+export function duplicated<R>(kind: Kind, { name, start, gaps, total, next }: Duplication<R>, wp: number): Ended<R> {
+  const terms = termCount(wp);
+  let roots = start;
+  let steps = 0;
+  while (!farEnough(fallOf(gaps, total(roots, 32), steps), terms, wp)) {
+    roots = next(roots, steps);
+    steps = nextStep(name, steps);
+  }
+  const sum = total(roots, wp);
+  const fall = Math.min(fallOf(gaps, sum, steps), 2 * wp);
+  const scaled = gaps.map((g) => disc.ldexp(disc.div(g, sum, wp), -2 * steps));
+  return { roots, steps, total: sum, series: carlsonSeries(kind, scaled, fall, terms, wp) };
+}
+
 /** The largest e such that every |difference|·4^−step < 2^−e·|mean|; −Infinity as long as the mean is not known to be off 0. */
-export function fallOf(differences: readonly Disc[], mean: Disc, step: number): number {
+function fallOf(differences: readonly Disc[], mean: Disc, step: number): number {
   const top = Math.max(...differences.map((d) => disc.magnitude(d)));
   if (top === -Infinity) return Infinity;
   return lowMagnitude(mean) + 2 * step - top;
@@ -76,7 +110,7 @@ function isConjugate(x: Disc, y: Disc): boolean {
 const MAX_STEPS = 200_000;
 
 /** The number of the next duplication. Throws PrecisionError where enclosures are too wide for the arguments ever to come together. */
-export function nextStep(name: string, step: number): number {
+function nextStep(name: string, step: number): number {
   if (step < MAX_STEPS) return step + 1;
   throw new PrecisionError({
     subject: name,

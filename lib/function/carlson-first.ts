@@ -3,15 +3,13 @@ import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import {
   closedUnderConjugation,
-  fallOf,
+  duplicated,
   halved,
-  nextStep,
   refuseZeros,
   rootsOf,
   type Triple,
 } from "./carlson-duplication.ts";
 import { isSpread, rcByLogarithm, rfByMean } from "./carlson-mean.ts";
-import { carlsonSeries, farEnough, termCount } from "./carlson-series.ts";
 import { ontoReal } from "./enclosure.ts";
 
 const THREE: { man: bigint; exp: number; rad: number } = { man: 3n, exp: 0, rad: 0 };
@@ -58,22 +56,13 @@ export function duplicatedRF(roots: Triple, prec: number, [x, y, z]: Triple): Di
   const [xy, yz, zx] = [disc.sub(x, y, wp), disc.sub(y, z, wp), disc.sub(z, x, wp)];
   // 3(A − x) = (y − x) + (z − x), and so on; the sum of the three is 0.
   const gaps = [disc.sub(zx, xy, wp), disc.sub(xy, yz, wp), disc.sub(yz, zx, wp)];
-  const terms = termCount(wp);
-  let r = roots;
-  let step = 0;
-  while (!farEnough(fallOf(gaps, tripleMean(r, 32), step), terms, wp)) {
-    r = halved(r, wp);
-    step = nextStep("RF", step);
-  }
-  const total = tripleMean(r, wp);
-  const fall = Math.min(fallOf(gaps, total, step), 2 * wp);
-  const scaled = gaps.map((g) => disc.ldexp(disc.div(g, total, wp), -2 * step));
-  const series = carlsonSeries(1, scaled, fall, terms, wp);
-  return disc.div(series, rootOfMean(r[2], disc.divBall(total, THREE, wp), wp), prec + 2);
+  const next = (r: Triple) => halved(r, wp);
+  const { roots: last, total, series } = duplicated(1, { name: "RF", start: roots, gaps, total: tripleSum, next }, wp);
+  return disc.div(series, rootOfMean(last[2], disc.divBall(total, THREE, wp), wp), prec + 2);
 }
 
 /** a² + b² + c². */
-function tripleMean([a, b, c]: Triple, wp: number): Disc {
+function tripleSum([a, b, c]: Triple, wp: number): Disc {
   return disc.add(disc.add(disc.sqr(a, wp), disc.sqr(b, wp), wp), disc.sqr(c, wp), wp);
 }
 
@@ -119,20 +108,14 @@ export function rcOfRoots(a: Disc, b: Disc, prec: number, x?: Disc, y?: Disc): D
   const gap = disc.sub(x ?? disc.sqr(a, wp), y ?? disc.sqr(b, wp), wp);
   // A = (x + 2y)/3: 3(A − x) = −2(x − y), 3(A − y) = x − y.
   const gaps = [disc.ldexp(disc.neg(gap), 1), gap, gap];
-  const terms = termCount(wp);
-  let step = 0;
-  while (!farEnough(fallOf(gaps, tripleMean([a, b, b], 32), step), terms, wp)) {
-    // √((x + λ)/4) = (a + b)/2 and √((y + λ)/4) = √b √((a + b)/2).
-    const next = disc.ldexp(disc.add(a, b, wp), -1);
-    b = disc.mul(disc.sqrt(b, wp), disc.sqrt(next, wp), wp);
-    a = next;
-    step = nextStep("RC", step);
-  }
-  const total = tripleMean([a, b, b], wp);
-  const fall = Math.min(fallOf(gaps, total, step), 2 * wp);
-  const scaled = gaps.map((g) => disc.ldexp(disc.div(g, total, wp), -2 * step));
-  const series = carlsonSeries(1, scaled, fall, terms, wp);
-  return disc.div(series, rootOfMean(b, disc.divBall(total, THREE, wp), wp), prec + 2);
+  // √((x + λ)/4) = (a + b)/2 and √((y + λ)/4) = √b √((a + b)/2).
+  const next = ([p, q]: Triple): Triple => {
+    const mean = disc.ldexp(disc.add(p, q, wp), -1);
+    const other = disc.mul(disc.sqrt(q, wp), disc.sqrt(mean, wp), wp);
+    return [mean, other, other];
+  };
+  const { roots, total, series } = duplicated(1, { name: "RC", start: [a, b, b], gaps, total: tripleSum, next }, wp);
+  return disc.div(series, rootOfMean(roots[1], disc.divBall(total, THREE, wp), wp), prec + 2);
 }
 
 /**

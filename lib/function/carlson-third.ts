@@ -5,15 +5,14 @@ import { DomainError } from "../proof/errors.ts";
 import { settledBranch } from "./carlson-branch.ts";
 import {
   closedUnderConjugation,
-  fallOf,
+  duplicated,
+  type Ended,
   halved,
-  nextStep,
   refuseZeros,
   rootsOf,
   type Triple,
 } from "./carlson-duplication.ts";
 import { carlsonRC, carlsonRF, rcNearOne, rootOfMean } from "./carlson-first.ts";
-import { carlsonSeries, farEnough, termCount } from "./carlson-series.ts";
 import { midpoint, ontoReal } from "./enclosure.ts";
 
 const FIVE = { man: 5n, exp: 0, rad: 0 };
@@ -51,20 +50,17 @@ export function rdOfRoots(roots: Triple, prec: number, squares?: Triple): Disc {
     last,
     last,
   ];
-  const terms = termCount(wp);
-  let r = roots;
   let sum: Disc = disc.zero;
-  let step = 0;
-  while (!farEnough(fallOf(gaps, weighted(r, r[2], 3, 32), step), terms, wp)) {
+  const next = (r: Triple, step: number): Triple => {
     const [a, b, c] = r;
     // √z (z + λ) = c (c + a)(c + b)
     const bottom = disc.mul(disc.mul(disc.add(c, a, wp), disc.add(c, b, wp), wp), c, wp);
     sum = disc.add(sum, disc.ldexp(disc.inv(bottom, wp), -2 * step), wp);
-    r = halved(r, wp);
-    step = nextStep("RD", step);
-  }
-  const rest = lastTerm(gaps, weighted(r, r[2], 3, wp), r[2], step, terms, wp);
-  return disc.add(disc.mulInt(sum, 3, wp), rest, prec + 2);
+    return halved(r, wp);
+  };
+  const total = (r: Triple, bits: number) => weighted(r, r[2], 3, bits);
+  const end = duplicated(3, { name: "RD", start: roots, gaps, total, next }, wp);
+  return disc.add(disc.mulInt(sum, 3, wp), lastTerm(end, end.roots[2], wp), prec + 2);
 }
 
 /** a² + b² + (weight)·p² with p the root that counts more; RJ adds c² in the caller. */
@@ -74,12 +70,9 @@ function weighted([a, b]: readonly [Disc, Disc, ...Disc[]], p: Disc, weight: num
 }
 
 /** 4^−n A^(−3/2) times the series, with `total` = 5 A and A near root². */
-function lastTerm(gaps: readonly Disc[], total: Disc, root: Disc, step: number, terms: number, wp: number): Disc {
-  const fall = Math.min(fallOf(gaps, total, step), 2 * wp);
-  const scaled = gaps.map((g) => disc.ldexp(disc.div(g, total, wp), -2 * step));
-  const series = carlsonSeries(3, scaled, fall, terms, wp);
+function lastTerm({ total, steps, series }: Ended<unknown>, root: Disc, wp: number): Disc {
   const mean = disc.divBall(total, FIVE, wp);
-  return disc.ldexp(disc.div(series, disc.mul(mean, rootOfMean(root, mean, wp), wp), wp), -2 * step);
+  return disc.ldexp(disc.div(series, disc.mul(mean, rootOfMean(root, mean, wp), wp), wp), -2 * steps);
 }
 
 /**
@@ -133,22 +126,24 @@ function duplicatedRJ([a, b, c, s]: Four, [x, y, z, p]: Four, prec: number, loos
   const gap = (d: Disc) => disc.add(last, disc.mulInt(d, 5, wp), wp);
   const gaps = [gap(px), gap(py), gap(pz), last, last];
   const delta = disc.mul(disc.mul(px, py, wp), pz, wp);
-  const terms = termCount(wp);
-  let r: Triple = [a, b, c];
-  let root = s;
   let sum: Disc = disc.zero;
-  let step = 0;
-  const total = (bits: number) => disc.add(weighted(r, root, 2, bits), disc.sqr(r[2], bits), bits);
-  while (!farEnough(fallOf(gaps, total(32), step), terms, wp)) {
+  const next = ({ r, root }: WithLast, step: number): WithLast => {
     // Term m is 6·4^−m/d RC(1, 1 + 4^−3m δ/d²).
     const d = disc.mul(disc.mul(disc.add(root, r[0], wp), disc.add(root, r[1], wp), wp), disc.add(root, r[2], wp), wp);
     const e = disc.ldexp(disc.div(delta, disc.sqr(d, wp), wp), -6 * step);
     sum = disc.add(sum, disc.ldexp(disc.div(rcNearOne(e, wp, loose), d, wp), -2 * step), wp);
-    root = halvedLast(r, root, wp, loose);
-    r = halved(r, wp);
-    step = nextStep("RJ", step);
-  }
-  return disc.add(disc.mulInt(sum, 6, wp), lastTerm(gaps, total(wp), root, step, terms, wp), prec + 2);
+    return { r: halved(r, wp), root: halvedLast(r, root, wp, loose) };
+  };
+  const total = ({ r, root }: WithLast, bits: number) =>
+    disc.add(weighted(r, root, 2, bits), disc.sqr(r[2], bits), bits);
+  const end = duplicated(3, { name: "RJ", start: { r: [a, b, c], root: s }, gaps, total, next }, wp);
+  return disc.add(disc.mulInt(sum, 6, wp), lastTerm(end, end.roots.root, wp), prec + 2);
+}
+
+/** Roots of x, y, z and of p. */
+interface WithLast {
+  readonly r: Triple;
+  readonly root: Disc;
 }
 
 /** √((p + λ)/4) from the roots. */

@@ -2,6 +2,7 @@
 import { Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 import { bernoulli } from "./modular-forms.ts";
+import { divide, multiply } from "./power-series.ts";
 
 /** Σ coefficients[n] q^(first + n) with q named by `nome`; all coefficients up to the length are exact, later ones not given. */
 export interface QExpansion {
@@ -59,7 +60,7 @@ function checkCount(count: number): void {
  * The first `count` coefficients of a function of the list.
  *
  * Error    none.
- * Cost     up to a dozen products of power series with `count` terms.
+ * Cost     up to two dozen products of power series with `count` terms, each one product of integers.
  * Source   Euler: η; Jacobi: η³ = Σ (−1)^n (2n+1) q^((2n+1)²/8), so Δ is its 8th power; j = E4³/Δ; theta series DLMF 20.2;
  *          λ = θ2⁴/θ3⁴; Weber's products.
  */
@@ -176,24 +177,4 @@ function binomials(count: number, start: number, step: number, sign: bigint): bi
     for (let n = count - 1; n >= e; n--) series[n]! += sign * series[n - e]!;
   }
   return series;
-}
-
-function multiply(x: readonly bigint[], y: readonly bigint[], count: number): bigint[] {
-  const z: bigint[] = new Array(count).fill(0n);
-  x.forEach((a, i) => {
-    if (a === 0n) return;
-    for (let k = 0; k + i < count; k++) if (y[k]) z[i + k]! += a * y[k]!;
-  });
-  return z;
-}
-
-/** x/y for a series y with constant term 1. */
-function divide(x: readonly bigint[], y: readonly bigint[], count: number): bigint[] {
-  const z: bigint[] = [];
-  for (let n = 0; n < count; n++) {
-    let value = x[n]!;
-    for (let k = 1; k <= n; k++) if (y[k]) value -= y[k]! * z[n - k]!;
-    z[n] = value;
-  }
-  return z;
 }

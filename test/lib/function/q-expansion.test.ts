@@ -4,6 +4,7 @@ import type { Matrix } from "../../../lib/function/matrix.ts";
 import { moved } from "../../../lib/function/modular-action.ts";
 import { dedekindEta, modularLambda, weber } from "../../../lib/function/modular-forms.ts";
 import { multipliers } from "../../../lib/function/multipliers.ts";
+import { divide, multiply } from "../../../lib/function/power-series.ts";
 import {
   type ExpansionName,
   eisensteinExpansion,
@@ -162,5 +163,43 @@ describe("the multipliers of θ1 .. θ4", () => {
       [4, 4, 6],
     ]);
     expect(minus.eta).toBe(18);
+  });
+});
+
+describe("long series", () => {
+  it("a packed product is the product, signs and all — oracle: coefficient by coefficient", () => {
+    fc.assert(
+      fc.property(
+        fc.array(fc.bigInt({ min: -(10n ** 20n), max: 10n ** 20n }), { minLength: 150, maxLength: 220 }),
+        (x) => {
+          const y = [1n, ...x.slice(1).reverse()];
+          const count = x.length;
+          const direct = Array.from({ length: count }, (_, n) => {
+            let sum = 0n;
+            for (let k = 0; k <= n; k++) sum += x[k]! * y[n - k]!;
+            return sum;
+          });
+          expect(multiply(x, y, count)).toEqual(direct);
+          expect(multiply(divide(x, y, count), y, count)).toEqual(x);
+        },
+      ),
+      // 20 runs: each compares some 20000 products.
+      { numRuns: 20, seed: 1_882 },
+    );
+  });
+
+  it("the coefficients of j up to q^1000: congruences c(5^a n) ≡ 0 mod 5^(a+1), c(2^a n) ≡ 0 mod 2^(3a+8) — oracle: Lehner 1949", () => {
+    const { coefficients } = expansionOf("j", 1002);
+    const c = (n: number) => coefficients[n + 1]!.num;
+    for (const n of [25, 125, 625, 1000]) {
+      let power = 0;
+      for (let m = n; m % 5 === 0; m /= 5) power++;
+      expect(c(n) % 5n ** BigInt(power + 1), `c(${n})`).toBe(0n);
+    }
+    for (const n of [512, 256, 768, 1000]) {
+      let power = 0;
+      for (let m = n; m % 2 === 0; m /= 2) power++;
+      expect(c(n) % 2n ** BigInt(3 * power + 8), `c(${n})`).toBe(0n);
+    }
   });
 });

@@ -6,6 +6,7 @@ import { lowMagnitude } from "./enclosure.ts";
 
 /** Whether the least and the greatest differ by a good part of the greatest, as the formulas of this file want it for their digits. */
 export function isSpread(all: readonly Disc[]): boolean {
+  if (all.some((x) => disc.bits(x) < LEAST_BITS)) return false;
   if (!all.every((x) => x.axis === "real" && (disc.isZero(x) || (x.re > 0n && !disc.containsZero(x))))) return false;
   const [low, mid, top] = inOrder(all, 64);
   const apart = (x: Disc, y: Disc) => lowMagnitude(disc.sub(x, y, 64)) > disc.magnitude(x) - LEAST_SPREAD;
@@ -14,6 +15,8 @@ export function isSpread(all: readonly Disc[]): boolean {
 }
 
 const LEAST_SPREAD = 12;
+/** Coarser enclosures stay narrower by duplication, which takes differences once. */
+const LEAST_BITS = 40;
 
 /** The numbers by size, the middle one twice if there are two. */
 function inOrder(all: readonly Disc[], wp: number): readonly Disc[] {

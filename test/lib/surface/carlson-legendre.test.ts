@@ -55,6 +55,18 @@ describe("carlson in a cell", () => {
     expect(value.overlaps(carlson.RF("1.249999", 2, 3))).toBe(true);
   });
 
+  it("coarse arguments give an enclosure, of RF, RC and F — oracle: values at the ends", () => {
+    const [rf, rc] = [carlson.RF(enclose("1", "0.5"), 2, 3), carlson.RC(enclose("1", "0.5"), 2)];
+    const f = legendre.F({ phi: enclose("1", "0.1"), m: "1/2" });
+    for (const x of ["0.5", "1", "1.5"]) {
+      expect(rf.overlaps(carlson.RF(x, 2, 3))).toBe(true);
+      expect(rc.overlaps(carlson.RC(x, 2))).toBe(true);
+    }
+    for (const phi of ["0.9", "1.1"]) expect(f.overlaps(legendre.F({ phi, m: "1/2" }))).toBe(true);
+    expect((rf as Real).radius.toDouble()).toBeLessThan(1);
+    expect((f as Real).radius.toDouble()).toBeLessThan(1);
+  });
+
   it("RC(0, −1) is exactly 0; a negative argument of RF and a zero of RC are refused", () => {
     expect(carlson.RC(0, -1).exact?.toString()).toBe("0");
     expect(() => carlson.RF(-1, 2, 3)).toThrow(DomainError);

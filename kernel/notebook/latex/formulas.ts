@@ -28,6 +28,9 @@ export function splitTop(tex: string, mark: "\\\\" | "&"): string[] {
   return parts.map((part) => part.trim());
 }
 
+/** A row of groups of digits. */
+const DIGITS = /^-?[\d.]+(?:\\,\d+)*(?:\\ldots)?$/;
+
 const COLUMN = /^\\begin\{array\}\{l\}([\s\S]*)\\end\{array\}$/;
 const EQUATIONS = /^\\begin\{array\}\{rcl\}([\s\S]*)\\end\{array\}$/;
 
@@ -49,11 +52,13 @@ export function displayTex(tex: string): string {
   const body = bare(tex);
   const rows = whole(body, COLUMN);
   if (rows === undefined) return shownTex(body);
-  return splitTop(rows, "\\\\")
-    .map((row) => bare(row))
-    .filter((row) => row !== "")
-    .map((row) => noteTex(row) ?? wordsTex(row) ?? displayTex(row))
-    .join("\n");
+  const parts = splitTop(rows, "\\\\")
+    .map((row) => bare(row).replace(/^\\phantom\{[^{}]*\}\s*(?=\d)/, ""))
+    .filter((row) => row !== "");
+  // The digits of one number, in lines of a screen: a paper breaks them by itself.
+  if (parts.length > 1 && parts.every((row) => DIGITS.test(row)))
+    return `\\longvalue{$${breakable(parts.join("\\,"))}$}`;
+  return parts.map((row) => noteTex(row) ?? wordsTex(row) ?? displayTex(row)).join("\n");
 }
 
 function bare(tex: string): string {

@@ -51,6 +51,10 @@ describe("formulas in a column", () => {
     expect(displayTex(number)).toMatch(/^\\longvalue\{\$1\.23456\\,\\allowbreak 23456/);
     const pair = `\\begin{array}{rcl} a & = & ${number} \\\\ b & = & 2 \\end{array}`;
     expect(displayTex(pair).split("\n")).toHaveLength(2);
+    const lines = "\\begin{array}{l} 3.14159\\,26535 \\\\ \\phantom{3.}58979\\,32384\\ldots \\end{array}";
+    expect(displayTex(lines)).toBe(
+      "\\longvalue{$3.14159\\,\\allowbreak 26535\\,\\allowbreak 58979\\,\\allowbreak 32384\\ldots$}",
+    );
     const table = `\\begin{array}{l} \\text{c4} \\\\ \\hline ${number} \\end{array}`;
     expect(displayTex(table)).toMatch(/^\\shown\{\\begin\{array\}/);
     expect(breakable("a\\,b 12\\,345")).toBe("a\\,b 12\\,\\allowbreak 345");

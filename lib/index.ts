@@ -46,10 +46,17 @@ export { ComplexMultiplication } from "./surface/complex-multiplication.ts";
 export { type Line, PlaneCubic, type ThroughPoint } from "./surface/cubic.ts";
 export { Curve } from "./surface/curve.ts";
 export { DegenerateLattice, degenerate } from "./surface/degenerate.ts";
-export { DivisorFunction, type EllipticData, type PrincipalPart, type Weighted } from "./surface/elliptic.ts";
+export {
+  DivisorFunction,
+  type EllipticData,
+  type PrincipalPart,
+  PrincipalPartsFunction,
+  type Weighted,
+} from "./surface/elliptic.ts";
 export { EllipticFunction, type FunctionPoint } from "./surface/elliptic-function.ts";
 export { EndomorphismRing } from "./surface/endomorphisms.ts";
 export { Factorisation, factor } from "./surface/factorisation.ts";
+export { SigmaForm, ZetaForm, type ZetaPart } from "./surface/function-forms.ts";
 export { Homothety, homothety } from "./surface/homothety.ts";
 export {
   type IntegerMatrix,
@@ -69,6 +76,7 @@ export { Point } from "./surface/point.ts";
 export { Biquadratic, QuadricPair } from "./surface/quadrics.ts";
 export { Quartic } from "./surface/quartic.ts";
 export { QuasiPeriodicFunction } from "./surface/quasi-periodic-function.ts";
+export { AlgebraicRelation } from "./surface/relation.ts";
 export { PointRelations } from "./surface/relations.ts";
 export { routesOf, SecondRoute, secondRoute } from "./surface/second-route.ts";
 export { TorsionSubgroup } from "./surface/torsion.ts";

@@ -3,6 +3,7 @@
 import type { ComplexMultiplication } from "../surface/complex-multiplication.ts";
 import type { Homothety } from "../surface/homothety.ts";
 import type { LaurentExpansion } from "../surface/laurent-expansion.ts";
+import type { AlgebraicRelation } from "../surface/relation.ts";
 import type { SecondRoute } from "../surface/second-route.ts";
 import type { Kind, Show } from "./kind.ts";
 import { prose } from "./prose.ts";
@@ -96,3 +97,21 @@ export const secondRouteKind: Kind<SecondRoute> = {
     standing: pair.standing.kind,
   }),
 };
+
+/** F(X, Y) = 0 with what X and Y are, and its standing. */
+export const relationKind: Kind<AlgebraicRelation> = {
+  text: (relation) => `${relation}, X = ${relation.first}, Y = ${relation.second}   ${standingText(relation.standing)}`,
+  tex: (relation) =>
+    `${relationTex(String(relation))}, \\quad X = ${relationTex(String(relation.first))}, \\; Y = ${relationTex(String(relation.second))}`,
+  data: (relation) => ({ kind: "relation", formula: String(relation) }),
+};
+
+function relationTex(text: string): string {
+  const digits = "⁰¹²³⁴⁵⁶⁷⁸⁹";
+  return text
+    .replace(new RegExp(`[${digits}]+`, "g"), (raised) => `^{${[...raised].map((d) => digits.indexOf(d)).join("")}}`)
+    .replaceAll("℘", "\\wp")
+    .replaceAll("′", "'")
+    .replaceAll("·", "\\,")
+    .replaceAll("−", "-");
+}

@@ -14,6 +14,7 @@ import { DegenerateLattice } from "../surface/degenerate.ts";
 import { EllipticFunction } from "../surface/elliptic-function.ts";
 import { EndomorphismRing } from "../surface/endomorphisms.ts";
 import { Factorisation } from "../surface/factorisation.ts";
+import { SigmaForm, ZetaForm } from "../surface/function-forms.ts";
 import { Homothety } from "../surface/homothety.ts";
 import { Jacobi } from "../surface/jacobi.ts";
 import { Lattice } from "../surface/lattice.ts";
@@ -23,6 +24,7 @@ import { Moved } from "../surface/moved.ts";
 import { Point } from "../surface/point.ts";
 import { QSeries } from "../surface/q-series.ts";
 import { QuasiPeriodicFunction } from "../surface/quasi-periodic-function.ts";
+import { AlgebraicRelation } from "../surface/relation.ts";
 import { PointRelations } from "../surface/relations.ts";
 import { SecondRoute } from "../surface/second-route.ts";
 import { TorsionSubgroup } from "../surface/torsion.ts";
@@ -32,12 +34,12 @@ import { claimKind } from "./claim-kind.ts";
 import { curveKind, endomorphismKind, pointKind, relationsKind } from "./curve-kind.ts";
 import { Derivation } from "./derivation.ts";
 import { derivationKind } from "./derivation-kind.ts";
-import { quadraticKind, rationalKind, residueKind } from "./exact-kind.ts";
-import { homothetyKind, laurentKind, multiplicationKind, secondRouteKind } from "./expansion-kind.ts";
+import { quadraticKind, quadraticKind, rationalKind, rationalKind, residueKind } from "./exact-kind.ts";
+import { homothetyKind, homothetyKind, laurentKind, laurentKind, multiplicationKind, multiplicationKind, relationKind, secondRouteKind, secondRouteKind } from "./expansion-kind.ts";
 import { factorisationKind } from "./factorisation-kind.ts";
 import { figureKind } from "./figure-kind.ts";
 import { entry, type KindEntry, shape } from "./kind.ts";
-import { functionKind, latticeKind, torusPointKind } from "./lattice-kind.ts";
+import { formKind, functionKind, latticeKind, torusPointKind } from "./lattice-kind.ts";
 import { classPolynomialKind, jacobiKind, movedKind, qSeriesKind } from "./modular-kind.ts";
 import { morphismKind } from "./morphism-kind.ts";
 import { complexKind, realKind } from "./number-kind.ts";
@@ -60,6 +62,8 @@ export const KINDS: readonly KindEntry[] = [
   entry(Lattice, latticeKind),
   entry(EllipticFunction, functionKind),
   entry(QuasiPeriodicFunction, functionKind),
+  entry(SigmaForm, formKind),
+  entry(ZetaForm, formKind),
   entry(Point, pointKind),
   entry(Curve, curveKind),
   entry(EndomorphismRing, endomorphismKind),
@@ -78,6 +82,7 @@ export const KINDS: readonly KindEntry[] = [
   entry(Homothety, homothetyKind),
   entry(ComplexMultiplication, multiplicationKind),
   entry(SecondRoute, secondRouteKind),
+  entry(AlgebraicRelation, relationKind),
   entry(Jacobi, jacobiKind),
   entry(ClassPolynomial, classPolynomialKind),
   entry(QSeries, qSeriesKind),

@@ -1,5 +1,6 @@
 import type { Rational } from "../number/rational.ts";
 import type { EllipticFunction } from "../surface/elliptic-function.ts";
+import type { SigmaForm, ZetaForm } from "../surface/function-forms.ts";
 import type { Lattice } from "../surface/lattice.ts";
 import type { QuasiPeriodicFunction } from "../surface/quasi-periodic-function.ts";
 import type { TorusPoint } from "../surface/torus-point.ts";
@@ -78,6 +79,29 @@ export const functionKind: Kind<EllipticFunction | QuasiPeriodicFunction> = {
   conventions: (f) => f.conventions,
   data: (f) => ({ kind: "function", formula: String(f) }),
 };
+
+/** A function as a quotient of σ or a sum of ζ, whose arguments stand in the formula. */
+export const formKind: Kind<SigmaForm | ZetaForm> = {
+  text: (f) => `${f}, a function of z`,
+  tex: (f) => `z \\mapsto ${spelledTex(String(f))}`,
+  short: (f) => ({ text: String(f), tex: spelledTex(String(f)) }),
+  conventions: (f) => f.conventions,
+  data: (f) => ({ kind: "function", formula: String(f) }),
+};
+
+function spelledTex(text: string): string {
+  return text
+    .replace(new RegExp(`[${DIGITS}]+`, "g"), (raised) => `^{${[...raised].map((d) => DIGITS.indexOf(d)).join("")}}`)
+    .replace(/ω(\d+)/g, "\\omega_{$1}")
+    .replace(/\^\((\d+)\)/g, "^{($1)}")
+    .replaceAll("℘", "\\wp")
+    .replaceAll("′", "'")
+    .replaceAll("ζ", "\\zeta")
+    .replaceAll("σ", "\\sigma")
+    .replaceAll("...", "\\ldots ")
+    .replaceAll("·", "\\,")
+    .replaceAll("−", "-");
+}
 
 const DIGITS = "⁰¹²³⁴⁵⁶⁷⁸⁹";
 

@@ -11,15 +11,13 @@ import {
   isZeroElement,
   mulElements,
   negElement,
-  reflectElement,
   sameElement,
   wpElement,
 } from "../lattice/field/element.ts";
 import { type Expression, expressionOf, PLACE, VALUE, VALUE_AT_POINT } from "../lattice/field/operations.ts";
 import { exactOf } from "../lattice/field/scalar.ts";
-import { multipleElement } from "../lattice/field/substitute.ts";
 import { elementText } from "../lattice/field/text.ts";
-import { LOGARITHM, WEIERSTRASS } from "../lattice/operations.ts";
+import { WEIERSTRASS } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
 import { Rational } from "../number/rational.ts";
 import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
@@ -28,8 +26,12 @@ import { DomainError, UndecidedError } from "../proof/errors.ts";
 import { Callable } from "./callable.ts";
 import { constantValue, scalarOf } from "./constant.ts";
 import { rememberDivisorPoint } from "./divisor-points.ts";
+import { type SigmaForm, sigmaForm, type ZetaForm, zetaForm } from "./function-forms.ts";
 import { type LaurentExpansion, laurentExpansion, valueAtLatticePoint } from "./laurent-expansion.ts";
+import { multipleOf } from "./multiple.ts";
+import { type AlgebraicRelation, relationBetween } from "./relation.ts";
 import { TorusPoint } from "./torus-point.ts";
+import { type InverseChoice, inverseOfWp } from "./wp-inverse.ts";
 
 /** A zero or a pole: a point of the torus, with its multiplicity. */
 export interface FunctionPoint {
@@ -105,18 +107,26 @@ export class EllipticFunction extends Callable {
     return new EllipticFunction(element);
   }
 
-  /** f(nz) for an integer n other than 0, by the addition theorem, as an exact rational function of ℘ and ℘′. */
-  multiple(n: number): EllipticFunction {
-    if (!(Number.isSafeInteger(n) && n !== 0)) {
-      throw new DomainError({
-        subject: "multiple",
-        given: `n = ${n}`,
-        expected: "an integer other than 0",
-        argument: "n",
-      });
-    }
-    const element = multipleElement(this.element, Math.abs(n));
-    return new EllipticFunction(n < 0 ? reflectElement(element) : element);
+  /**
+   * f(nz) as an exact rational function of ℘ and ℘′.
+   *
+   * Domain   an integer n other than 0, or a complex multiplication α of the lattice (exact`1 + i` on the square lattice): an exact algebraic
+   *          integer with αΛ ⊂ Λ, for exact invariants.
+   * Error    none: by division polynomials, or a quotient of degree |α|² that is proved by its differential equation.
+   * Throws   DomainError for other numbers.
+   */
+  multiple(n: ComplexNumeric): EllipticFunction {
+    return new EllipticFunction(multipleOf(this.element, n));
+  }
+
+  /**
+   * The irreducible polynomial relation F(f, g) = 0 with another function of the lattice, proved.
+   *
+   * Domain   exact coefficients and invariants.
+   * @example L.wp.relation(L.wp.prime)   // Y² − 4X³ + 4X − 1 = 0
+   */
+  relation(g: EllipticFunction): AlgebraicRelation {
+    return relationBetween(this, g);
   }
 
   /**
@@ -168,16 +178,18 @@ export class EllipticFunction extends Callable {
 
   /** The coefficient of 1/(z − p). */
   residue(p: ComplexNumeric): Real | Complex {
-    return laurentExpansion(this.expression, p, 1).residue;
+    return this.laurent(p, 1).residue;
   }
 
   /**
    * z with ℘(z) = w; for ℘ only.
    *
-   * Branch   z modulo the lattice is fixed up to sign by w; `prime`, the value of ℘′ there, settles the sign. Without it ℘′ = −√(4w³ − g2 w − g3)
-   *          by the principal root, so that a large w > 0 has a small z > 0.
+   * Branch   z modulo the lattice is fixed up to sign by w. `prime`, the value of ℘′ there, settles it; for real w on a real lattice `sign` does,
+   *          the sign of ℘′ (of Im ℘′ where it is imaginary). Without both ℘′ = −√(4w³ − g2 w − g3) by the principal root, so that a large
+   *          w > 0 has a small z > 0. `component` ("identity", "bounded") and `line` ("real", "imaginary") say where z is to lie.
+   * Throws   DomainError where w has no solution on the component or line.
    */
-  inverse(w: ComplexNumeric, options: { readonly prime?: ComplexNumeric } = {}): Complex {
+  inverse(w: ComplexNumeric, choice: InverseChoice = {}): Complex {
     if (!sameElement(this.element, wpElement(this.element.field))) {
       throw new DomainError({
         subject: "inverse",
@@ -186,9 +198,43 @@ export class EllipticFunction extends Callable {
         hint: "Solve for ℘ first.",
       });
     }
-    const x = scalar(w, "inverse");
-    const prime = options.prime === undefined ? principalPrime(this, x) : scalar(options.prime, "inverse");
-    return Complex.from(apply(LOGARITHM, [this.lattice, x, prime]));
+    return inverseOfWp(this.lattice, w, (x) => principalRoot(this, x), choice);
+  }
+
+  /**
+   * The function in another of its three forms:
+   *     "rational"   (A(℘) + B(℘)℘′)/D(℘), which is this value itself
+   *     "sigma"      C Π σ(z − a)/Π σ(z − b) over zeros a and poles b with Σ a = Σ b
+   *     "zeta"       C + Σ c_1 ζ(z − p) + Σ c_k (−1)^k/(k−1)! ℘^(k−2)(z − p) over the principal parts
+   * Each form is a function again, gives its parts, and has `as` itself.
+   *
+   * Throws   DomainError for "sigma" of the function 0.
+   * Source   DLMF 23.2(iii); Whittaker and Watson 20.53 (σ), 20.52 (ζ).
+   */
+  as(form: "rational"): EllipticFunction;
+  as(form: "sigma"): SigmaForm;
+  as(form: "zeta"): ZetaForm;
+  as(form: "rational" | "sigma" | "zeta"): EllipticFunction | SigmaForm | ZetaForm;
+  as(form: "rational" | "sigma" | "zeta"): EllipticFunction | SigmaForm | ZetaForm {
+    if (form === "rational") return this;
+    if (form === "sigma") return sigmaForm(this);
+    if (form === "zeta") return this.zeta;
+    throw new DomainError({
+      subject: "as",
+      given: `"${form}"`,
+      expected: '"rational", "sigma" or "zeta"',
+      argument: "form",
+    });
+  }
+
+  /** See `as("zeta")`. */
+  protected get zeta(): ZetaForm {
+    return zetaForm(this, EllipticFunction.wp(this.lattice));
+  }
+
+  /** The first coefficient of the series at 0, by the degrees of the rational form. */
+  get leadingAtZero(): Real | Complex {
+    return laurentExpansion(this.expression, 0, 1).coefficients[0]!;
   }
 
   get element(): Element {
@@ -249,10 +295,10 @@ function pointOf(f: EllipticFunction, at: DivisorPoint): TorusPoint | Complex {
   return point;
 }
 
-function principalPrime(wp: EllipticFunction, x: Real | Complex): Real | Complex {
-  const square = wp.prime.pow(2);
-  const value = squareAt(square.element, x);
-  return (value instanceof Real && value.sign() !== -1 ? value.sqrt() : Complex.from(value).sqrt()).neg();
+/** √(4x³ − g2 x − g3), principal. */
+function principalRoot(wp: EllipticFunction, x: Real | Complex): Real | Complex {
+  const value = squareAt(wp.prime.pow(2).element, x);
+  return value instanceof Real && value.sign() !== -1 ? value.sqrt() : Complex.from(value).sqrt();
 }
 
 /** 4x³ − g2 x − g3 at a number. */

@@ -20,6 +20,9 @@ import { apply, type Complex, type ComplexNumeric, Real, scalar } from "../numbe
 import { DomainError } from "../proof/errors.ts";
 import { scalarOf } from "./constant.ts";
 import { EllipticFunction, type FunctionPoint } from "./elliptic-function.ts";
+import { isAmong, sigmaSeries, zetaSeries } from "./form-series.ts";
+import { onTorus, ZetaForm, type ZetaPart } from "./function-forms.ts";
+import type { LaurentExpansion } from "./laurent-expansion.ts";
 import { QuasiPeriodicFunction } from "./quasi-periodic-function.ts";
 import { TorusPoint } from "./torus-point.ts";
 
@@ -56,6 +59,17 @@ export class DivisorFunction extends EllipticFunction {
     return this.givenPoles;
   }
 
+  /** 1: the function is the one with z^k + ... at 0. */
+  override get leadingAtZero(): Real {
+    return Real.from(1);
+  }
+
+  /** At one of the given zeros and poles by the σ-quotient, in which its multiplicity stands. */
+  override laurent(p: ComplexNumeric, n = 8): LaurentExpansion {
+    if (!isAmong([...this.givenZeros, ...this.givenPoles], p)) return super.laurent(p, n);
+    return sigmaSeries(this.as("sigma"), onTorus(this.lattice, p), n);
+  }
+
   /**
    * The value by the quotient Π σ(z − a)/Π σ(z − b) with representatives of equal sum, scaled to the same leading term: a second route.
    */
@@ -74,9 +88,31 @@ export class DivisorFunction extends EllipticFunction {
   }
 }
 
-/** Whether z is one of the points, by exact coordinates. */
-function isAmong(list: readonly FunctionPoint[], z: ComplexNumeric): boolean {
-  return z instanceof TorusPoint && list.some(({ point }) => point instanceof TorusPoint && isOrigin(z.minus(point)));
+/** An elliptic function that was made from its principal parts, which it keeps. */
+export class PrincipalPartsFunction extends EllipticFunction {
+  private readonly constant: Real | Complex;
+  private readonly parts: readonly ZetaPart[];
+
+  constructor(element: Element, constant: Real | Complex, parts: readonly ZetaPart[]) {
+    super(element);
+    this.constant = constant;
+    this.parts = parts;
+  }
+
+  /** The ζ-sum of the given parts and constant. */
+  protected override get zeta(): ZetaForm {
+    return new ZetaForm(this, this.constant, this.parts, EllipticFunction.wp(this.lattice));
+  }
+
+  override get poles(): readonly FunctionPoint[] {
+    return this.parts.map(({ at, coefficients }) => ({ point: at, multiplicity: coefficients.length }));
+  }
+
+  /** At one of the given poles with the given principal part. */
+  override laurent(p: ComplexNumeric, n = 8): LaurentExpansion {
+    if (!isAmong(this.poles, p)) return super.laurent(p, n);
+    return zetaSeries(this.zeta, EllipticFunction.wp(this.lattice), onTorus(this.lattice, p), n);
+  }
 }
 
 /** See `Lattice.elliptic`. */
@@ -104,13 +140,6 @@ function weighted(lattice: PeriodLattice, p: Weighted): Weight {
     given: `the multiplicity ${multiplicity}`,
     expected: "an integer >= 1",
   });
-}
-
-function onTorus(lattice: PeriodLattice, p: ComplexNumeric): TorusPoint {
-  if (p instanceof TorusPoint && p.lattice === lattice) return p;
-  const number = scalar(p, "elliptic");
-  const zero = number.exact instanceof Rational && number.exact.sign() === 0;
-  return new TorusPoint(lattice, [Rational.zero, Rational.zero], zero ? undefined : number);
 }
 
 /** 0 of the torus, by exact coordinates and a remainder that is exactly 0. */
@@ -322,7 +351,28 @@ function fromPrincipalParts(
     const p = onTorus(lattice, at);
     f = addElements(f, partAt(lattice, p, residues[k]!, coefficients.slice(1)));
   }
-  return new EllipticFunction(f);
+  return new PrincipalPartsFunction(f, scalar(added, "elliptic"), keptParts(lattice, parts));
+}
+
+/** The parts as points with their coefficients, without zeros at the end; parts at one point must be given as one. */
+function keptParts(lattice: PeriodLattice, parts: readonly PrincipalPart[]): ZetaPart[] {
+  const kept = parts.map(({ at, coefficients }) => {
+    const list = coefficients.map((c) => scalar(c, "elliptic"));
+    while (list.length > 0 && isExactZero(list.at(-1)!)) list.pop();
+    return { at: onTorus(lattice, at), coefficients: list };
+  });
+  kept.forEach((part, k) => {
+    const twin = kept.findIndex((other) => isOrigin(other.at.minus(part.at)));
+    if (twin === k) return;
+    throw new DomainError({
+      subject: "elliptic",
+      given: `two principal parts at ${part.at.name}`,
+      expected: "one principal part a point",
+      hint: "Add their coefficients.",
+      argument: "principalParts",
+    });
+  });
+  return kept.filter(({ coefficients }) => coefficients.length > 0);
 }
 
 function partAt(

@@ -1,14 +1,12 @@
-import { LatticePointError } from "../function/weierstrass.ts";
-import { QUASI_PERIOD, WEIERSTRASS } from "../lattice/operations.ts";
+import { QUASI_PERIOD } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
-import { Rational } from "../number/rational.ts";
-import { apply, type Complex, type ComplexNumeric, type Real, scalar } from "../number/values.ts";
+import { apply, type Complex, type ComplexNumeric, type Real } from "../number/values.ts";
 import type { ConventionKey } from "../proof/conventions.ts";
 import { Callable } from "./callable.ts";
 import { EllipticFunction } from "./elliptic-function.ts";
 import type { LaurentExpansion } from "./laurent-expansion.ts";
 import { quasiExpansion } from "./quasi-expansion.ts";
-import { TorusPoint } from "./torus-point.ts";
+import { quasiValue } from "./quasi-value.ts";
 
 /** Weierstrass ζ or σ: a value that is called as f(z); not elliptic, but with a known change under each period. */
 export class QuasiPeriodicFunction extends Callable {
@@ -16,7 +14,7 @@ export class QuasiPeriodicFunction extends Callable {
   readonly kind: "zeta" | "sigma";
 
   constructor(lattice: PeriodLattice, kind: "zeta" | "sigma") {
-    super((z) => evaluate(lattice, kind, z));
+    super((z) => quasiValue(lattice, kind, z));
     this.lattice = lattice;
     this.kind = kind;
   }
@@ -53,14 +51,4 @@ export class QuasiPeriodicFunction extends Callable {
   override toString(): string {
     return this.kind === "zeta" ? "ζ" : "σ";
   }
-}
-
-function evaluate(lattice: PeriodLattice, kind: "zeta" | "sigma", z: ComplexNumeric): Real | Complex {
-  if (!(z instanceof TorusPoint && z.lattice === lattice)) {
-    return apply(WEIERSTRASS[kind].number, [lattice, scalar(z, kind)]);
-  }
-  const [m, n] = z.coordinates;
-  if (z.isLatticePoint && kind === "zeta") throw new LatticePointError(m.num, n.num, z.name, kind);
-  const rest = z.remainder ? [z.remainder] : [];
-  return apply(WEIERSTRASS[kind].point, [lattice, m, n, ...rest], z.isLatticePoint ? Rational.zero : undefined);
 }

@@ -44,5 +44,7 @@ function term(c: Scalar, name: string): string {
 }
 
 function signedBracket(text: string): string {
+  // Numbers of a quadratic field come in brackets of their own.
+  if (/^\((?:[^()]|\([^()]*\))*\)$/.test(text)) return text;
   return text.startsWith("−") && !/ [+−] /.test(text) ? `−(${text.slice(1)})` : `(${text})`;
 }

@@ -1,0 +1,77 @@
+// z with ℘(z) = w, and which of the solutions.
+
+import { LOGARITHM, ROOT } from "../lattice/operations.ts";
+import type { PeriodLattice } from "../lattice/period-lattice.ts";
+import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
+import { DomainError } from "../proof/errors.ts";
+
+/** Which solution of ℘(z) = w is meant; none: ℘′(z) = −√(4w³ − g2 w − g3) by the principal root. */
+export interface InverseChoice {
+  /** The value of ℘′ there. */
+  readonly prime?: ComplexNumeric;
+  /** The sign of ℘′ (of its imaginary part where ℘′ is imaginary), for real w on a real lattice. */
+  readonly sign?: 1 | -1;
+  /** Where ℘′ is real: the component of 0, z real, or the bounded one, z = ω2/2 + t; w has to lie over it. */
+  readonly component?: "identity" | "bounded";
+  /** The lines on which ℘ is real: "real" z = t or ω2/2 + t (℘′ real), "imaginary" z = it or ω1/2 + it (℘′ imaginary). */
+  readonly line?: "real" | "imaginary";
+}
+
+/** @param root √(4w³ − g2 w − g3) as a function of the lattice gives it. */
+export function inverseOfWp(
+  lattice: PeriodLattice,
+  w: ComplexNumeric,
+  root: (x: Real | Complex) => Real | Complex,
+  choice: InverseChoice,
+): Complex {
+  const x = scalar(w, "inverse");
+  if (choice.prime !== undefined) return Complex.from(apply(LOGARITHM, [lattice, x, scalar(choice.prime, "inverse")]));
+  const principal = root(x);
+  const asked = choice.sign !== undefined || choice.component !== undefined || choice.line !== undefined;
+  if (asked) checkChoice(lattice, x, principal, choice);
+  const prime = choice.sign === 1 ? principal : principal.neg();
+  return Complex.from(apply(LOGARITHM, [lattice, x, prime]));
+}
+
+function checkChoice(
+  lattice: PeriodLattice,
+  x: Real | Complex,
+  prime: Real | Complex,
+  { sign, component, line }: InverseChoice,
+): void {
+  if (sign !== undefined && sign !== 1 && sign !== -1) throw refused(`sign: ${sign}`, "1 or −1", "sign");
+  if (component !== undefined && component !== "identity" && component !== "bounded") {
+    throw refused(`component: "${component}"`, '"identity" or "bounded"', "component");
+  }
+  if (line !== undefined && line !== "real" && line !== "imaginary") {
+    throw refused(`line: "${line}"`, '"real" or "imaginary"', "line");
+  }
+  if (!lattice.components || !(x instanceof Real)) {
+    throw refused(
+      lattice.components ? `w = ${x}` : "a lattice that is not its own conjugate",
+      "a real w and a real lattice, for a sign, a component or a line",
+      "w",
+      "For others give { prime }.",
+    );
+  }
+  const real = prime instanceof Real;
+  const at = real ? "real" : "imaginary";
+  if (line && line !== at) throw refused(`w = ${x}, where ℘′ is ${at}`, `a value on the ${line} line`, "w");
+  if (!component) return;
+  const here = real ? (overBounded(lattice, x) ? "bounded" : "identity") : undefined;
+  if (here === component) return;
+  const range = component === "identity" ? "w >= e1" : lattice.components === 2 ? "e3 <= w <= e2" : "two components";
+  throw refused(`w = ${x}${here ? `, which lies over the ${here} component` : ", where ℘′ is not real"}`, range, "w");
+}
+
+/** Two components and a real ℘′: w <= e2, told from w >= e1 by their mean. */
+function overBounded(lattice: PeriodLattice, x: Real): boolean {
+  if (lattice.components === 1) return false;
+  const roots = ([1, 2, 3] as const).map((index) => apply(ROOT, [lattice, index]) as Real);
+  const [first, second] = roots.sort((p, q) => q.toDouble() - p.toDouble()) as [Real, Real, Real];
+  return x.minus(first.plus(second).div(2)).sign() === -1;
+}
+
+function refused(given: string, expected: string, argument: string, hint = ""): DomainError {
+  return new DomainError({ subject: "inverse", given, expected, hint, argument });
+}

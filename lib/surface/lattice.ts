@@ -36,7 +36,18 @@ export type LatticeInput =
   | { readonly tau: ComplexNumeric }
   | { readonly invariants: readonly [ComplexNumeric, ComplexNumeric] }
   | { readonly roots: readonly [ComplexNumeric, ComplexNumeric, ComplexNumeric] }
-  | { readonly j: ComplexNumeric };
+  | { readonly j: ComplexNumeric }
+  /** j/1728. */
+  | { readonly J: ComplexNumeric }
+  /** exp(πiτ), exp(2πiτ). */
+  | { readonly qTheta: ComplexNumeric }
+  | { readonly qMod: ComplexNumeric }
+  /** Refused with a word on why: q names two different nomes. */
+  | { readonly q: ComplexNumeric }
+  /** λ(τ) = m = k² = (e2 − e3)/(e1 − e3). */
+  | { readonly lambda: ComplexNumeric }
+  | { readonly m: ComplexNumeric }
+  | { readonly k: ComplexNumeric };
 
 /** A matrix [[a, b], [c, d]] that acts on τ: new τ = (aτ + b)/(cτ + d), (ω2′, ω1′) = (aω2 + bω1, cω2 + dω1). */
 export type IntegerMatrix = readonly [readonly [bigint, bigint], readonly [bigint, bigint]];

@@ -1,7 +1,11 @@
 import { pointText } from "../lattice/coordinates-text.ts";
+import { exactComplexOf } from "../lattice/field/exact-value.ts";
 import { POINT } from "../lattice/operations.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
+import type { Quantity } from "../lattice/quantity.ts";
 import { type Coordinates, nearestRepresentative } from "../lattice/torus.ts";
+import { combine } from "../number/exactness.ts";
+import type { Exact } from "../number/origin.ts";
 import { gcd, Rational } from "../number/rational.ts";
 import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
 
@@ -17,8 +21,7 @@ export class TorusPoint extends Complex {
 
   constructor(lattice: PeriodLattice, coordinates: Coordinates, remainder?: Real | Complex) {
     const operands = [lattice, ...coordinates, ...(remainder ? [remainder] : [])];
-    const zero = !remainder && coordinates.every((q) => q.sign() === 0);
-    const value = Complex.from(apply(POINT, operands, zero ? Rational.zero : undefined));
+    const value = Complex.from(apply(POINT, operands, remainder ? undefined : exactPoint(lattice, coordinates)));
     super(value.disc, { exact: value.exact, origin: value.origin, standing: value.standing });
     this.lattice = lattice;
     this.coordinates = coordinates;
@@ -96,6 +99,18 @@ export class TorusPoint extends Complex {
   override toString(): string {
     return `${this.name} = ${super.toString()}`;
   }
+}
+
+/** r ω1 + s ω2 exactly, where the periods were given exactly. */
+function exactPoint({ given }: PeriodLattice, [r, s]: Coordinates): Exact | undefined {
+  const part = (q: Rational, w: Quantity): Exact | undefined => {
+    const exact = exactComplexOf(w);
+    return q.sign() === 0 ? Rational.zero : exact && combine("times", exact, q);
+  };
+  if (r.sign() === 0 && s.sign() === 0) return Rational.zero;
+  if (given.kind !== "periods") return undefined;
+  const [x, y] = [part(r, given.w1), part(s, given.w2)];
+  return x && y && combine("plus", x, y);
 }
 
 function sum(x: Real | Complex, y: Real | Complex): Real | Complex {

@@ -1,8 +1,10 @@
 // Periods, ℘ with ℘′ and ζ, and the elliptic logarithm beside mpmath (periods by roots and agm, the functions by theta series with
-// derivatives, the logarithm by Carlson's RF), the same digits on both sides, rigour included on ours.
-//     npm run build && node test/bench/lattice.mjs [digits ...]
+// derivatives, the logarithm by Carlson's RF) and beside Arb (roots and agm; ℘ alone), the same digits on all sides, rigour included on ours.
+//     npm run build && node --single-threaded test/bench/lattice.mjs [digits ...]
 import { spawnSync } from "node:child_process";
-import { cpus } from "node:os";
+import { mkdtempSync, rmSync } from "node:fs";
+import { cpus, tmpdir } from "node:os";
+import { join } from "node:path";
 import { realPeriods } from "../../dist/lib/lattice/agm-periods.js";
 import { discriminant, latticeOfInvariants } from "../../dist/lib/lattice/build.js";
 import { cubicRoots } from "../../dist/lib/lattice/cubic.js";
@@ -13,7 +15,7 @@ import * as disc from "../../dist/lib/number/disc.js";
 import { Rational } from "../../dist/lib/number/rational.js";
 
 const digits = process.argv.slice(2).map(Number);
-const list = digits.length > 0 ? digits : [50, 200, 1000];
+const list = digits.length > 0 ? digits : [50, 200, 1000, 5000];
 const [g2, g3] = [Rational.of(4), Rational.of(-1)];
 
 /** Processor time of this process in microseconds: other load on the machine counts little. */
@@ -22,22 +24,22 @@ function clock() {
   return user + system;
 }
 
-/** Mean and deviation of the processor time of f in microseconds, in ten groups after a warm-up. */
-function timed(f, budget = 1500) {
+/** Best processor time of f in microseconds, of fifteen groups after a warm-up. */
+function timed(f, budget = 400_000) {
   const start = clock();
   let runs = 0;
-  while (clock() - start < budget * 500 || runs < 3) {
+  while (clock() - start < budget || runs < 2) {
     f();
     runs++;
   }
-  const size = Math.max(1, Math.round(runs / 5));
-  const groups = Array.from({ length: 10 }, () => {
+  const size = Math.max(1, runs >> 3);
+  let best = Infinity;
+  for (let k = 0; k < 15; k++) {
     const t = clock();
-    for (let k = 0; k < size; k++) f();
-    return (clock() - t) / size;
-  });
-  const mean = groups.reduce((a, b) => a + b) / groups.length;
-  return { mean, deviation: Math.sqrt(groups.reduce((s, x) => s + (x - mean) ** 2, 0) / groups.length) };
+    for (let l = 0; l < size; l++) f();
+    best = Math.min(best, (clock() - t) / size);
+  }
+  return best;
 }
 
 function ours(n) {
@@ -60,19 +62,32 @@ function ours(n) {
   };
 }
 
+/** 1,000 points of one lattice at 50 digits, the context made afresh, beside 1,000 evaluations in a known one. */
+function manyPoints() {
+  const prec = 175;
+  const points = Array.from({ length: 1000 }, (_, k) =>
+    disc.fromRational(Rational.of(k + 1, 1009), prec + 20, Rational.of(k + 3, 1013)),
+  );
+  const run = (L) => {
+    for (const z of points) weierstrassValues(L, z, prec, ["wp"]);
+  };
+  const known = latticeOfInvariants(g2, g3);
+  const fresh = timed(() => run(latticeOfInvariants(g2, g3)), 800_000);
+  return { fresh, known: timed(() => run(known), 800_000) };
+}
+
 const PYTHON = `
-import sys, time, math
-from mpmath import mp, mpf, mpc, polyroots, agm, sqrt, pi, jtheta, elliprf, exp
+import sys, time
+from mpmath import mp, mpc, polyroots, agm, sqrt, pi, jtheta, elliprf, exp
 def timed(f, budget=0.4):
     t=time.process_time(); runs=0
-    while time.process_time()-t<budget/2 or runs<3: f(); runs+=1
-    size=max(1,round(runs/5)); groups=[]
-    for _ in range(10):
+    while time.process_time()-t<budget or runs<2: f(); runs+=1
+    size=max(1,runs//8); best=1e9
+    for _ in range(15 if runs>8 else 3):
         t=time.process_time()
         for _ in range(size): f()
-        groups.append((time.process_time()-t)*1e6/size)
-    m=sum(groups)/10
-    return m, math.sqrt(sum((x-m)**2 for x in groups)/10)
+        best=min(best,(time.process_time()-t)*1e6/size)
+    return best
 for n in map(int, sys.argv[1:]):
     mp.dps=n
     def periods():
@@ -91,30 +106,58 @@ for n in map(int, sys.argv[1:]):
         return -eta/r1-c*c*(b[2]-b[1]**2), -c**3*(b[3]-3*b[2]*b[1]+2*b[1]**3), eta*z/r1+c*b[1]
     e=sorted([r.real for r in polyroots([4,0,-4,1],maxsteps=200,extraprec=200)],reverse=True)
     def logarithm(): return elliprf(2-e[0],2-e[1],2-e[2])
-    print(*[x for f in (periods,functions,logarithm) for x in timed(f)])
+    print(*[timed(f) for f in (periods,functions,logarithm)], flush=True)
 `;
 
-const python = spawnSync("python3", ["-c", PYTHON, ...list.map(String)], { encoding: "utf8" });
-const theirs =
-  python.status === 0
-    ? python.stdout
-        .trim()
-        .split("\n")
-        .map((line) => line.split(" ").map(Number))
-    : [];
-if (theirs.length === 0) console.log("python3 with mpmath is not here: our side only.");
+/** Lines of numbers that a program prints for each number of digits, or nothing if it is not here. */
+function lines(command, args) {
+  const { status, stdout } = spawnSync(command, args, { encoding: "utf8" });
+  if (status !== 0) return [];
+  return stdout
+    .trim()
+    .split("\n")
+    .map((line) => line.split(" ").map(Number));
+}
+
+/** mpmath with gmpy2 where Debian's Python has it. */
+function mpmath(n) {
+  const args = ["-c", PYTHON, String(n)];
+  return lines("/usr/bin/python3", args)[0] ?? lines("python3", args)[0] ?? [];
+}
+
+const folder = mkdtempSync(join(tmpdir(), "lattice-"));
+const program = join(folder, "yardstick");
+const source = new URL("lattice-yardstick.c", import.meta.url).pathname;
+const compiled = spawnSync("cc", ["-O2", source, "-o", program, "-lflint-arb", "-lflint", "-lm"]).status === 0;
+if (!compiled) console.log("no C compiler or no libflint-arb-dev: no column for ball arithmetic in C.");
+
+const FLOORS = {
+  periods: { mpmath: [0.04, 0.06, 0.1, 0.1], arb: [0.5, 0.5, 0.9, 0.8] },
+  functions: { mpmath: [0.08, 0.12, 0.16, 0.12], arb: [2, 1.6, 1.4, 1.3] },
+  logarithm: { mpmath: [0.13, 0.1, 0.12, 0.05], arb: [] },
+};
 
 console.log(
-  `Node ${process.version}, ${cpus()[0]?.model ?? "unknown processor"}; processor time in microseconds, mean ± deviation of ten groups\n`,
+  `Node ${process.version}, ${cpus()[0]?.model ?? "unknown processor"}; processor time in microseconds, best group\n`,
 );
-console.log("| digits | job | mpmath | halfperiod | ratio |");
-console.log("|---|---|---|---|---|");
-list.forEach((n, row) => {
+console.log("| digits | job | halfperiod | mpmath | ratio (floor) | Arb | ratio (floor) |");
+console.log("|---|---|---|---|---|---|---|");
+for (const n of list) {
+  const before = compiled ? lines(program, [String(n)])[0] : [];
   const times = ours(n);
-  Object.entries(times).forEach(([job, { mean, deviation }], k) => {
-    const other = theirs[row]?.slice(2 * k, 2 * k + 2);
-    const left = other ? `${other[0].toFixed(0)} ± ${other[1].toFixed(0)}` : "";
-    const ratio = other ? (mean / other[0]).toFixed(3) : "";
-    console.log(`| ${n} | ${job} | ${left} | ${mean.toFixed(0)} ± ${deviation.toFixed(0)} | ${ratio} |`);
+  const theirs = mpmath(n);
+  const after = compiled ? lines(program, [String(n)])[0] : [];
+  const at = [50, 200, 1000, 5000].indexOf(n);
+  Object.entries(times).forEach(([job, time], k) => {
+    const arb = before?.[k] && after?.[k] ? Math.min(before[k], after[k]) : undefined;
+    const beside = (other, floor) =>
+      other ? `${other.toFixed(0)} | ${(time / other).toFixed(3)}${floor ? ` (${floor})` : ""}` : " | ";
+    const { mpmath: first, arb: second } = FLOORS[job];
+    console.log(
+      `| ${n} | ${job} | ${time.toFixed(0)} | ${beside(theirs[k], first[at])} | ${beside(arb, second[at])} |`,
+    );
   });
-});
+}
+const { fresh, known } = manyPoints();
+console.log(`\n1,000 points at 50 digits: ${fresh.toFixed(0)} with a new lattice, ${known.toFixed(0)} in a known one.`);
+rmSync(folder, { recursive: true });

@@ -87,26 +87,137 @@ export function gridAffine(
   return out;
 }
 
-/** out = x/y, scaled by the larger part of y (Smith), so that no size overflows early. */
-export function gridDiv(x: Grid, y: Grid, out: Grid): Grid {
+/** out = p(x) for the polynomial with these coefficients as pairs, highest power first: Horner's rule with both parts in registers, two points at a time. */
+export function gridPolynomial(coefficients: readonly (readonly [number, number])[], x: Grid, out: Grid): Grid {
+  const length = out.re.length;
+  const count = coefficients.length;
+  const c = new Float64Array(2 * count);
+  coefficients.forEach(([re, im], k) => {
+    c[2 * k] = re;
+    c[2 * k + 1] = im;
+  });
+  const { re, im } = x;
+  let k = 0;
+  for (; k + 1 < length; k += 2) {
+    const a = re[k]!;
+    const b = im[k]!;
+    const d = re[k + 1]!;
+    const e = im[k + 1]!;
+    let u = c[0]!;
+    let v = c[1]!;
+    let s = u;
+    let t = v;
+    for (let j = 2; j < c.length; j += 2) {
+      const p = c[j]!;
+      const q = c[j + 1]!;
+      const w = u * a - v * b + p;
+      v = u * b + v * a + q;
+      u = w;
+      const r = s * d - t * e + p;
+      t = s * e + t * d + q;
+      s = r;
+    }
+    out.re[k] = u;
+    out.im[k] = v;
+    out.re[k + 1] = s;
+    out.im[k + 1] = t;
+  }
+  if (k < length) gridPolynomialAt(c, x, out, k);
+  return out;
+}
+
+function gridPolynomialAt(c: Float64Array, x: Grid, out: Grid, k: number): void {
+  const a = x.re[k]!;
+  const b = x.im[k]!;
+  let u = c[0]!;
+  let v = c[1]!;
+  for (let j = 2; j < c.length; j += 2) {
+    const w = u * a - v * b + c[j]!;
+    v = u * b + v * a + c[j + 1]!;
+    u = w;
+  }
+  out.re[k] = u;
+  out.im[k] = v;
+}
+
+/** Sizes of |z|² within which a plain quotient keeps its digits. */
+const SMALLEST = 1e-290;
+const LARGEST = 1e290;
+
+/** out = 1/x */
+export function gridInv(x: Grid, out: Grid): Grid {
+  const { re, im } = x;
   for (let k = 0; k < out.re.length; k++) {
-    const a = x.re[k]!;
-    const b = x.im[k]!;
+    const a = re[k]!;
+    const b = im[k]!;
+    const norm = a * a + b * b;
+    if (norm > SMALLEST && norm < LARGEST) {
+      const s = 1 / norm;
+      out.re[k] = a * s;
+      out.im[k] = -b * s;
+    } else gridDivAt(1, 0, a, b, out, k);
+  }
+  return out;
+}
+
+/** out = x/y; where |y|² is out of range by the larger part of y (Smith), so that no size overflows early. */
+export function gridDiv(x: Grid, y: Grid, out: Grid): Grid {
+  const { re, im } = x;
+  for (let k = 0; k < out.re.length; k++) {
+    const a = re[k]!;
+    const b = im[k]!;
     const c = y.re[k]!;
     const d = y.im[k]!;
-    if (Math.abs(c) >= Math.abs(d)) {
-      const r = d / c;
-      const s = 1 / (c + d * r);
-      out.re[k] = (a + b * r) * s;
-      out.im[k] = (b - a * r) * s;
-    } else {
-      const r = c / d;
-      const s = 1 / (c * r + d);
-      out.re[k] = (a * r + b) * s;
-      out.im[k] = (b * r - a) * s;
+    const norm = c * c + d * d;
+    if (norm > SMALLEST && norm < LARGEST) {
+      const s = 1 / norm;
+      out.re[k] = (a * c + b * d) * s;
+      out.im[k] = (b * c - a * d) * s;
+    } else gridDivAt(a, b, c, d, out, k);
+  }
+  return out;
+}
+
+function gridDivAt(a: number, b: number, c: number, d: number, out: Grid, k: number): void {
+  if (Math.abs(c) >= Math.abs(d)) {
+    const r = d / c;
+    const s = 1 / (c + d * r);
+    out.re[k] = (a + b * r) * s;
+    out.im[k] = (b - a * r) * s;
+  } else {
+    const r = c / d;
+    const s = 1 / (c * r + d);
+    out.re[k] = (a * r + b) * s;
+    out.im[k] = (b * r - a) * s;
+  }
+}
+
+/**
+ * out = e^z on the points of a window: a factor for each column and a turn for each row, so that a point costs two products. `gridExp` takes any points, at
+ * the cost of three library calls each.
+ */
+export function windowExp(window: Window, out: Grid): Grid {
+  const { columns, rows } = window;
+  const axes = axesOf(window);
+  const size = axes.re.map(Math.exp);
+  for (let row = 0, k = 0; row < rows; row++) {
+    const c = Math.cos(axes.im[row]!);
+    const s = Math.sin(axes.im[row]!);
+    for (let column = 0; column < columns; column++, k++) {
+      const r = size[column]!;
+      out.re[k] = r * c;
+      out.im[k] = r * s;
     }
   }
   return out;
+}
+
+/** The coordinates of the columns and of the rows of a window, as `gridOf` has them. */
+function axesOf({ re, im, columns, rows }: Window): Grid {
+  return {
+    re: Float64Array.from({ length: columns }, (_none, k) => re[0] + ((re[1] - re[0]) * k) / (columns - 1)),
+    im: Float64Array.from({ length: rows }, (_none, k) => im[1] + ((im[0] - im[1]) * k) / (rows - 1)),
+  };
 }
 
 /** out = x² */

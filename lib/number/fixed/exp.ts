@@ -1,12 +1,13 @@
 // exp in fixed point: arguments in [0, 1), results with an error under one unit.
 import { bitLength, shift } from "./bits.ts";
 import { boundedCache } from "./cache.ts";
-import { EXP_FACTOR, factorialSum } from "./series.ts";
+import { sqrtNear } from "./isqrt.ts";
+import { EXP_FACTOR, factorialSum, SIN_FACTOR } from "./series.ts";
 
 /**
  * exp(x/2^prec)·2^prec for 0 <= x < 2^prec.
  *
- * Method   up to 8000 bits: leading bits of x by table, six at a time, then the series. Beyond: the leading 24 bits by binary splitting, the rest
+ * Method   up to 40,000 bits: leading bits of x by table, six at a time, then the series. Beyond: the leading 24 bits by binary splitting, the rest
  *          halved k times, series, k squarings.
  * Error    under 1 unit; see the two routines.
  * Source   D. M. Smith, Efficient multiple-precision evaluation of elementary functions, Math. Comp. 52 (1989), 131-134.
@@ -15,21 +16,21 @@ export function expFixed(x: bigint, prec: number): bigint {
   return prec <= TABLES_UP_TO ? byTables(x, prec) : bySquarings(x, prec);
 }
 
-/** A table costs as much as a few evaluations to fill; above this its memory and filling do not pay (measured). */
-const TABLES_UP_TO = 8000;
+/** The entries that an argument uses cost as much as one or two evaluations to fill; above this their memory does not pay. */
+const TABLES_UP_TO = 40_000;
 
 /** Bits a level. */
 const STEP = 6;
 
 /** Levels that balance a product each against the terms they save (measured). */
 function levelsFor(prec: number): number {
-  return prec < 100 ? 2 : prec < 800 ? 3 : prec < 2000 ? 4 : 5;
+  return prec < 100 ? 2 : prec < 800 ? 3 : prec < 2000 ? 4 : prec < 8000 ? 5 : 7;
 }
 
 /**
- * With tables of exp(j/64^l): at most 5 factors.
- * Error    a table value errs by under 128 units relatively (see `entry`), a product by one more, the series by under 16 + 16√N < 400 units;
- *          12 guard bits hold 5·130 + 400 and the factor e of the result.
+ * With tables of exp(j/64^l): at most 7 factors.
+ * Error    a table value errs by under 128 units relatively (see `entry`), a product by one more, the series by under 16 + 16√N < 500 units;
+ *          12 guard bits hold 7·130 + 500 and the factor e of the result.
  */
 function byTables(x: bigint, prec: number): bigint {
   const work = (prec + 12 + 63) & ~63;
@@ -48,8 +49,18 @@ function byTables(x: bigint, prec: number): bigint {
     used++;
   }
   const t = BigInt.asUintN(work - STEP * levels, full);
-  const sum = factorialSum(t, work, STEP * levels, EXP_FACTOR);
+  const sum = prec < ROOT_FROM ? factorialSum(t, work, STEP * levels, EXP_FACTOR) : byRoot(t, work, STEP * levels);
   return (used === 0 ? sum : (y * sum) >> w) >> shift(work - prec);
+}
+
+/** From here on a root costs less than half of the series (measured). */
+const ROOT_FROM = 8000;
+
+/** exp t = s + √(1 + s²) for s = sinh t, whose series has half of the terms; for 0 <= t < 2^(work−r) the error of the root is a fraction of that of s. */
+function byRoot(t: bigint, work: number, r: number): bigint {
+  const w = shift(work);
+  const s = (t * factorialSum((t * t) >> w, work, 2 * r, SIN_FACTOR)) >> w;
+  return s + sqrtNear((1n << shift(2 * work)) + s * s);
 }
 
 /** exp(j/64^level) for one working precision, filled as asked for. */
@@ -58,7 +69,7 @@ interface Tables {
   readonly values: readonly (bigint | undefined)[][];
 }
 
-const tablesFor = boundedCache(8, (work): Tables => ({ work, values: Array.from({ length: 6 }, () => []) }));
+const tablesFor = boundedCache(8, (work): Tables => ({ work, values: Array.from({ length: 8 }, () => []) }));
 
 /** By halves from exp(1/64^level): the relative errors of the factors add, so that of entry j is under 2j units. */
 function entry(tables: Tables, level: number, j: number): bigint {

@@ -12,17 +12,17 @@ export interface SinCosFixed {
 /**
  * sin and cos of x/2^prec, times 2^prec, for 0 <= x < 2^prec; error of each under 1 unit.
  *
- * Method   up to 8000 bits: leading bits by tables, six at a time, the rest by series. Beyond: k halvings and doublings.
+ * Method   up to 40,000 bits: leading bits by tables, six at a time, the rest by series. Beyond: k halvings and doublings.
  */
 export function sinCosFixed(x: bigint, prec: number): SinCosFixed {
   return prec <= TABLES_UP_TO ? byTables(x, prec) : byDoublings(x, prec);
 }
 
-const TABLES_UP_TO = 8000;
+const TABLES_UP_TO = 40_000;
 const STEP = 6;
 
 function levelsFor(prec: number): number {
-  return prec < 400 ? 2 : prec < 1500 ? 3 : 4;
+  return prec < 400 ? 2 : prec < 1500 ? 3 : prec < 8000 ? 4 : 7;
 }
 
 /** From here on the root costs less than a second series (measured). */
@@ -39,8 +39,8 @@ function series(t: bigint, work: number, r: number): SinCosFixed {
 }
 
 /**
- * Error    a table pair errs by under 256 units (see `entry`); a rotation by a pair adds the errors of both and 2 units: with 4 levels and the series
- *          under 4·260 + 420 units, which 12 guard bits hold.
+ * Error    a table pair errs by under 256 units (see `entry`); a rotation by a pair adds the errors of both and 2 units: with 7 levels and the series
+ *          under 7·260 + 500 units, which 12 guard bits hold.
  */
 function byTables(x: bigint, prec: number): SinCosFixed {
   const work = (prec + 12 + 63) & ~63;
@@ -67,7 +67,7 @@ interface Tables {
   readonly values: readonly (SinCosFixed | undefined)[][];
 }
 
-const tablesFor = boundedCache(8, (work): Tables => ({ work, values: Array.from({ length: 5 }, () => []) }));
+const tablesFor = boundedCache(8, (work): Tables => ({ work, values: Array.from({ length: 8 }, () => []) }));
 
 /** The angle j/64^level by halves: errors add, so that of entry j is under 4j units. */
 function entry(tables: Tables, level: number, j: number): SinCosFixed {

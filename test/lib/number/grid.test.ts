@@ -15,8 +15,21 @@ const others = lane.gridOf({ re: [0.7, 3.1], im: [1.3, -2.2], columns: 23, rows:
 
 const at = (g: Grid, k: number): Disc => disc.fromBalls(ball.fromDouble(g.re[k]!), ball.fromDouble(g.im[k]!));
 
+const CUBIC: readonly (readonly [number, number])[] = [
+  [1, 0.25],
+  [0.3, -0.2],
+  [0, 1],
+  [5, 7],
+];
+const pair = ([re, im]: readonly [number, number]): Disc => disc.fromBalls(ball.fromDouble(re), ball.fromDouble(im));
+
 const ONE: Readonly<Record<string, readonly [(x: Grid, out: Grid) => Grid, (x: Disc) => Disc]>> = {
   sqr: [lane.gridSqr, (x) => disc.sqr(x, 80)],
+  inv: [lane.gridInv, (x) => disc.inv(x, 80)],
+  polynomial: [
+    (x, out) => lane.gridPolynomial(CUBIC, x, out),
+    (x) => CUBIC.map(pair).reduce((sum, c) => disc.add(disc.mul(sum, x, 80), c, 80)),
+  ],
   sqrt: [lane.gridSqrt, (x) => disc.sqrt(x, 80)],
   exp: [lane.gridExp, (x) => disc.exp(x, 80)],
   ln: [lane.gridLn, (x) => disc.ln(x, 80)],
@@ -52,6 +65,19 @@ describe("double-precision lane: relative error at most 1e-13 — oracle: the sa
       expect(worst(out, (k) => truth(at(points, k), at(others, k)))).toBeLessThan(1e-13);
     });
   }
+
+  it("exp on a window", () => {
+    const window = { re: [-2.3, 2.1], im: [-1.9, 2.2], columns: 23, rows: 19 } as const;
+    const out = lane.windowExp(window, lane.emptyGrid(points.re.length));
+    expect(worst(out, (k) => disc.exp(at(points, k), 80))).toBeLessThan(1e-13);
+  });
+
+  it("quotients at the ends of the range of doubles", () => {
+    const small = { re: Float64Array.of(1e-200, 3e200), im: Float64Array.of(-2e-200, 1e200) };
+    const inverse = lane.gridInv(small, lane.emptyGrid(2));
+    expect(worst(inverse, (k) => disc.inv(at(small, k), 80))).toBeLessThan(1e-13);
+    expect(worst(lane.gridDiv(small, small, lane.emptyGrid(2)), () => disc.one)).toBeLessThan(1e-13);
+  });
 
   it("affine steps in place are Horner's rule", () => {
     const z = lane.gridOf({ re: [0, 1], im: [0, 1], columns: 2, rows: 2 });

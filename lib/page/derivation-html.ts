@@ -15,7 +15,7 @@ const STYLE = {
   title: "margin:.4em 0 .5em;font-weight:600",
   list: "list-style:none;margin:0;padding:0",
   item: "margin:0 0 .55em;padding:0",
-  words: "cursor:pointer;padding-left:3.1em;text-indent:-3.1em",
+  words: "cursor:pointer;padding-left:0",
   value: "margin:.35em 0 .35em 2.6em;overflow-x:auto;overflow-y:hidden",
   notes: "margin:.15em 0 .3em 2.6em;font-size:.88em",
   note: "margin:.1em 0 .1em 1.2em",

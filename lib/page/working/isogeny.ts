@@ -59,7 +59,7 @@ function veluWorking(phi: Morphism, kernel: Univariate<Rational>): Derivation {
           "u(x)": inX([E.b[2], b4.times(2), b2, Rational.of(4)]),
         },
         source: VELU,
-        check: exactly(derivativeFits(E), "u'(x) = 2 t(x), and u(x) = 4 f(x) + (a1 x + a3)^2 for y^2 + ... = f(x)"),
+        check: exactly(derivativeFits(E), "the derivative of u is 2t, and u is 4 times the right side of the equation plus the square of a1 x + a3"),
         route: "by the derivative, and by completing the square",
         label: "functions",
       },
@@ -67,7 +67,7 @@ function veluWorking(phi: Morphism, kernel: Univariate<Rational>): Derivation {
   const summed = points
     ? head.step("their values; points of order two count half in $t$ and not in $u$", {
         value: points.table,
-        check: exactly(points.squares, "u(x) is the square of 2y + a1 x + a3 at the points, where they are rational"),
+        check: exactly(points.squares, "u is the square of 2y + a1 x + a3 at the points that are rational"),
         route: "from the ordinates, or from the equation where they are not rational",
         label: "points",
       })

@@ -59,7 +59,10 @@ function veluWorking(phi: Morphism, kernel: Univariate<Rational>): Derivation {
           "u(x)": inX([E.b[2], b4.times(2), b2, Rational.of(4)]),
         },
         source: VELU,
-        check: exactly(derivativeFits(E), "the derivative of u is 2t, and u is 4 times the right side of the equation plus the square of a1 x + a3"),
+        check: exactly(
+          derivativeFits(E),
+          "the derivative of u is 2t, and u is 4 times the right side of the equation plus the square of a1 x + a3",
+        ),
         route: "by the derivative, and by completing the square",
         label: "functions",
       },

@@ -15,9 +15,13 @@ import { DENOMINATOR, type DivisorData, NUMERATOR } from "../lattice/field/opera
 import { exactOf, exactScalar, type Scalar } from "../lattice/field/scalar.ts";
 import { difference, quotient } from "../lattice/field/substitute.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
+import { workingPrecision } from "../number/context.ts";
+import * as disc from "../number/disc.ts";
+import { asDisc } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
 import { apply, type Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
 import { DomainError } from "../proof/errors.ts";
+import type { Standing } from "../proof/standing.ts";
 import { scalarOf } from "./constant.ts";
 import { EllipticFunction, type FunctionPoint } from "./elliptic-function.ts";
 import { isAmong, sigmaSeries, zetaSeries } from "./form-series.ts";
@@ -57,6 +61,24 @@ export class DivisorFunction extends EllipticFunction {
 
   override get poles(): readonly FunctionPoint[] {
     return this.givenPoles;
+  }
+
+  /**
+   * How Abel's condition is known: proved where all zeros and poles are exact points of the torus; with numbers among them only that the
+   * sums agree within the enclosures, and then the function is one whose zeros and poles lie in these.
+   */
+  get abel(): Standing {
+    const sum = (list: readonly FunctionPoint[]) => total(this.lattice, list as readonly Weight[]);
+    const gap = sum(this.givenZeros).minus(sum(this.givenPoles));
+    const rest = gap.remainder;
+    if (!rest || isExactZero(rest)) {
+      return {
+        kind: "proved",
+        argument: `zeros and poles differ by ${gap.name}, a lattice point, in exact coordinates`,
+      };
+    }
+    const digits = Math.max(0, Math.floor(-disc.magnitude(asDisc(rest.enclosure)) * 0.30103));
+    return { kind: "certified", digits, bits: workingPrecision(), once: "the sums were given as numbers" };
   }
 
   /** 1: the function is the one with z^k + ... at 0. */

@@ -64,3 +64,11 @@ describe("cleaning HTML", () => {
     );
   });
 });
+
+it("steps of derivations keep their names, so that text elsewhere in the page reaches them", () => {
+  const html =
+    '<li id="step-torsion-bound"><details open><summary>(4)</summary><a href="#step-torsion-curve">(1)</a></details></li>';
+  expect(sanitise(`<ol>${html}</ol>`, { idPrefix: "o3-" })).toBe(
+    `<ol>${html.replace("<details open>", '<details open="">')}</ol>`,
+  );
+});

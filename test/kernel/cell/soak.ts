@@ -71,7 +71,7 @@ export async function soak(notebook: TestNotebook, { rounds, seed, hook }: SoakO
     let asked = 0;
     // The mark is printed when the cell begins: the delay is of its run, not of its check.
     const running = notebook.run(`process.stdout.write("begun"); ${code}`);
-    await notebook.begun();
+    await Promise.race([notebook.begun(), running]);
     setTimeout(() => {
       asked = Date.now();
       notebook.session.interrupt();

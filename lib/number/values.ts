@@ -22,9 +22,6 @@ import {
   enclosureOf,
   isDisc,
   jointStanding,
-  measuredInputs,
-  type Node,
-  type NumberStanding,
   type Operation,
   type Origin,
   refineEnclosure,
@@ -32,53 +29,12 @@ import {
 import { Quadratic } from "./quadratic.ts";
 import { primitive, Rational } from "./rational.ts";
 import { complexText, realText } from "./text.ts";
+import { Value } from "./value.ts";
 
 /** Everything that stands for a real number. */
 export type Numeric = Real | Rational | ForeignReal;
 /** Everything that stands for a complex number. */
 export type ComplexNumeric = Numeric | Complex | Quadratic | ForeignComplex;
-
-abstract class Value implements Node {
-  abstract readonly enclosure: Enclosure;
-  /** The record of how the value was built, if it has one. */
-  readonly origin: Origin | undefined;
-  // Shared between the many values of a chain, which is why the rest is read from it.
-  private readonly birth: Birth;
-
-  protected constructor(birth: Birth, origin: Origin | undefined) {
-    this.birth = birth;
-    this.origin = origin;
-  }
-
-  /** The exact value, if it is known. */
-  get exact(): Exact | undefined {
-    return this.birth.exact;
-  }
-
-  get standing(): NumberStanding {
-    return this.birth.standing;
-  }
-
-  /** The text of a measured input. */
-  get source(): string | undefined {
-    return this.birth.source;
-  }
-
-  /** Whether the record of how it was built is gone, because the chain was too deep. */
-  get dropped(): boolean {
-    return this.birth.dropped === true;
-  }
-
-  /** Digits that a display shows, if not those of the context. */
-  get asked(): number | undefined {
-    return this.birth.asked;
-  }
-
-  /** The measured inputs behind the value, as they were written. */
-  get inputs(): readonly string[] {
-    return measuredInputs(this);
-  }
-}
 
 /** A real number: exact, or an enclosure that more digits can be asked of. */
 export class Real extends Value {

@@ -145,6 +145,8 @@ describe("lattices from other data", () => {
 
   it("more than one kind of input is refused with the list of kinds", () => {
     const both = { tau: complex(0, 1), j: 1728 } as unknown as Parameters<typeof lattice>[0];
-    expect(() => lattice(both)).toThrow("exactly one of periods, halfPeriods, tau, qTheta, qMod, invariants, roots, lambda, m, k, j, J");
+    expect(() => lattice(both)).toThrow(
+      "exactly one of periods, halfPeriods, tau, qTheta, qMod, invariants, roots, lambda, m, k, j, J",
+    );
   });
 });

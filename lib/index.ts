@@ -81,6 +81,7 @@ export { PointRelations } from "./surface/relations.ts";
 export { routesOf, SecondRoute, secondRoute } from "./surface/second-route.ts";
 export { TorsionSubgroup } from "./surface/torsion.ts";
 export { TorusPoint } from "./surface/torus-point.ts";
+export type { LogarithmChoice } from "./surface/uniformise.ts";
 export { PlanePoint } from "./surface/variety.ts";
 
 // Integrals, Jacobi's functions, theta and modular functions

@@ -43,7 +43,7 @@ import { rationalPoints, type TorsionSubgroup, torsionOf } from "./torsion.ts";
 import { type TorsionPlace, torsionPlaces } from "./torsion-places.ts";
 import { fromInclusion } from "./torus-isogeny.ts";
 import type { TorusPoint } from "./torus-point.ts";
-import { exponentialOf, latticeOf, logarithmOf, noTorus } from "./uniformise.ts";
+import { chosenLogarithm, exponentialOf, type LogarithmChoice, latticeOf, logarithmOf, noTorus } from "./uniformise.ts";
 
 /** What a curve was read from, where that is not the long form itself. */
 export interface Reading<T> {
@@ -151,13 +151,15 @@ export class Curve<T = Rational> {
    *
    * Branch   z = r·ω1 + s·ω2 with r and s in (−1/2, 1/2]: a real point has a real z on the component of O and z = ω2/2 + t on the
    *          bounded one; points with 2y + a1x + a3 < 0 near O have small positive z. A torsion point over Q gives an exact point of
-   *          the torus, such as 3ω1/7.
-   * Throws   DomainError for a point of another curve, PrecisionError if its coordinates are too coarse.
+   *          the torus, such as 3ω1/7. `near` chooses another representative, the one nearest to a number in the coordinates of the
+   *          basis; `component` ("identity", "bounded") says where the point is to lie.
+   * Throws   DomainError for a point of another curve or another component, PrecisionError if its coordinates are too coarse.
    */
-  logarithm(P: AnyPoint): Real | Complex | TorusPoint {
+  logarithm(P: AnyPoint, choice: LogarithmChoice = {}): Real | Complex | TorusPoint {
     this.#analytic("logarithm");
     const Q = P.minus(this.origin) as Point<Coordinate>; // checks that the curve is the same
-    return remember(logarithmOf(this.lattice(), Q), { curve: this as unknown as Curve, point: P });
+    const z = remember(logarithmOf(this.lattice(), Q), { curve: this as unknown as Curve, point: P });
+    return chosenLogarithm(this.lattice(), z, choice);
   }
 
   /**

@@ -52,6 +52,48 @@ export function logarithmOf(L: Lattice, P: Point<Coordinate>): Real | Complex | 
   return bounded ? new TorusPoint(L.data, [Rational.zero, Rational.of(1, 2)], t) : t;
 }
 
+/** Which of the numbers z + Λ is meant, and on which component the point is expected. */
+export interface LogarithmChoice {
+  /** The representative nearest to this number, in the coordinates of the basis: on a line of the caller's choice, say ω2 + t or −ω2/2 + t. */
+  readonly near?: ComplexNumeric;
+  /** The component of the real curve that P has to lie on: that of O, or the bounded one. */
+  readonly component?: "identity" | "bounded";
+}
+
+/** The logarithm z as the caller chose it. */
+export function chosenLogarithm(
+  L: Lattice,
+  z: Real | Complex | TorusPoint,
+  { near, component }: LogarithmChoice,
+): Real | Complex | TorusPoint {
+  if (component !== undefined) requireComponent(L, z, component);
+  if (near === undefined) return z;
+  const nearest = L.locate(scalar(near, "logarithm").minus(Complex.from(z))).nearest;
+  if (nearest.isLatticePoint && nearest.coordinates.every((c) => c.sign() === 0)) return z;
+  const isReal = z instanceof Real && nearest.coordinates[1].sign() === 0;
+  return isReal ? z.plus(L.periods[0].re.times(nearest.coordinates[0])) : nearest.plus(z);
+}
+
+function requireComponent(L: Lattice, z: Real | Complex | TorusPoint, component: "identity" | "bounded"): void {
+  const here = componentOf(L, z);
+  if (here === component) return;
+  throw new DomainError({
+    subject: "logarithm",
+    given: here ? `a point on the ${here} component` : "a point that is not known to be real",
+    expected: `a point on the ${component} component`,
+    hint: L.realComponents === 1 ? "This curve has one real component, that of O." : "",
+    argument: "component",
+  });
+}
+
+function componentOf(L: Lattice, z: Real | Complex | TorusPoint): "identity" | "bounded" | undefined {
+  if (z instanceof Real) return "identity";
+  if (!(z instanceof TorusPoint) || !L.realComponents || (z.remainder && !(z.remainder instanceof Real)))
+    return undefined;
+  if (z.coordinates[1].sign() === 0) return "identity";
+  return L.realComponents === 2 ? "bounded" : undefined;
+}
+
 function isExactField(name: string): boolean {
   return name === "Q" || name.startsWith("Q(");
 }

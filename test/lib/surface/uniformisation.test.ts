@@ -1,7 +1,8 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { Rational } from "../../../lib/number/rational.ts";
-import { Complex, type Real } from "../../../lib/number/values.ts";
+import { Complex, Real } from "../../../lib/number/values.ts";
+import { DomainError } from "../../../lib/proof/errors.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
 import { TorusPoint } from "../../../lib/surface/torus-point.ts";
 import table from "../arithmetic/curves.json" with { type: "json" };
@@ -46,6 +47,30 @@ describe("a cubic with two components, y² = x³ − 189x − 999 — oracle: mp
     const { coordinates, remainder } = z as TorusPoint;
     expect(coordinates.map(String)).toEqual(["0", "1/2"]);
     expectDigits(remainder as Real, "0.1295991169362497281236462880949217184388", 39);
+  });
+
+  it("another representative and the component, as chosen — oracle: the same point, the difference a period by hand", () => {
+    const [w1, w2] = E.lattice().periods;
+    const z = Complex.from(E.logarithm(P));
+    const below = Complex.from(E.logarithm(P, { near: w2.div(-2) }));
+    expectDigits(below.im.neg(), "0.695746638643946019455907110593737307074", 37);
+    expectDigits(below.re, "0.1295991169362497281236462880949217184388", 39);
+    expectDigits(
+      Complex.from(E.logarithm(P, { near: z.plus(w1.times(3)) }))
+        .re.minus(z.re)
+        .div(w1.re),
+      "3",
+      30,
+    );
+    const Q = P.times(2); // on the component of O
+    const far = E.logarithm(Q, { near: w1.re.times(-5) });
+    expect(far).toBeInstanceOf(Real);
+    expectDigits((far as Real).minus(E.logarithm(Q) as Real).div(w1.re), "-5", 30);
+    expect(String(E.logarithm(P, { component: "bounded" }))).toBe(String(E.logarithm(P)));
+    expect(() => E.logarithm(P, { component: "identity" })).toThrow(
+      "a point on the bounded component; expected a point on the identity component",
+    );
+    expect(() => E.logarithm(Q, { component: "bounded" })).toThrow(DomainError);
   });
 
   it("a point with y > 0 near O has small negative z — oracle: the convention dx/2y = dz", () => {

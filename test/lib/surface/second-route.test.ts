@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { atDigits, complex, exact, i, lattice, rational, routesOf, secondRoute } from "../../../lib/index.ts";
+import { atDigits, complex, exact, i, lattice, rational, routesOf, secondRoute, π } from "../../../lib/index.ts";
 import type { Lattice } from "../../../lib/surface/lattice.ts";
 
 const LATTICES: Readonly<Record<string, () => Lattice>> = {
@@ -58,6 +58,6 @@ describe("refusals", () => {
     expect(() => secondRoute(L.wp(complex("0.3", "0.1")), "guess")).toThrow(
       'secondRoute: the route "guess"; expected "sum over rows", "lattice sum"',
     );
-    expect(() => secondRoute(lattice({ tau: i }).periods[1])).toThrow("no period of given invariants");
+    expect(() => secondRoute(lattice({ tau: π.times(i) }).periods[1])).toThrow("no period of given invariants");
   });
 });

@@ -126,7 +126,8 @@ export function mul(x: Ball, y: Ball, prec: number): Ball {
   }
   if (drop > 4 && m <= drop + 900 && n <= drop + 900) {
     const rad = (a * s * pow2(m - drop) + b * r * pow2(n - drop) + r * s * pow2(-drop) + 1) * UP;
-    if (r + s > 0 && rad <= MAX_RAD && exp < MAX_EXPONENT && exp > -MAX_EXPONENT) {
+    // The product with an exact 0 is an exact 0, which has no digits to drop.
+    if (man !== 0n && r + s > 0 && rad <= MAX_RAD && exp < MAX_EXPONENT && exp > -MAX_EXPONENT) {
       return { man: man >> shift(drop), exp: exp + drop, rad, lead: lead + pow2(-prec), size: prec };
     }
   }

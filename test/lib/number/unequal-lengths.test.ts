@@ -22,3 +22,14 @@ describe("a long inexact operand and a short exact one — limit: four bits lost
     });
   }
 });
+
+it("a long inexact number times an exact 0 is exactly 0, at any precision — oracle: arithmetic", () => {
+  const long = { man: (7n << 300n) + 1n, exp: -400, rad: 3 };
+  for (const zero of [ball.zero, { man: 0n, exp: -5, rad: 0 }, { man: 0n, exp: 50, rad: 0 }]) {
+    for (const prec of [16, 62, 200, 400]) {
+      expect(ball.isZero(ball.mul(long, zero, prec))).toBe(true);
+      expect(ball.isZero(ball.mul(zero, long, prec))).toBe(true);
+      expect(disc.isZero(disc.mul(disc.fromBall(long), disc.fromBall(zero), prec))).toBe(true);
+    }
+  }
+});

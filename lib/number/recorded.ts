@@ -21,13 +21,37 @@ export interface Recorded {
   readonly node: Node;
 }
 
+/** A number that may be any of its ball. What singles out one of them would make a constant of it, and of the proof a mistake. */
+class Anywhere extends Real {
+  override get midpoint(): Real {
+    throw singled("midpoint");
+  }
+
+  override get radius(): Real {
+    throw singled("radius");
+  }
+
+  override toDouble(): number {
+    throw singled("toDouble()");
+  }
+}
+
+function singled(member: string): DomainError {
+  return new DomainError({
+    subject: "zero",
+    given: `a function that asks x for its ${member}`,
+    expected: "a function made of the operations and functions of numbers",
+    hint: "x stands for every number of an interval at once.",
+  });
+}
+
 /**
  * Calls f once, with a number that may be any of the interval, and keeps the record of its result. A decision that f takes on the way (a
  * comparison, say) was then taken for all of them, or was an UndecidedError.
  * Throws   DomainError for a result that is not real, or was built by more operations than a record holds.
  */
 export function recordOn(f: (x: Real) => ComplexNumeric, interval: Ball): Recorded {
-  const leaf = new Real(interval, { standing: "measured", source: "the interval" });
+  const leaf = new Anywhere(interval, { standing: "measured", source: "the interval" });
   const recorded = { leaf, node: real(scalar(f(leaf), "zero")) };
   if (fixedInputs(recorded).every(({ source }) => source !== undefined)) return recorded;
   throw new DomainError({

@@ -55,6 +55,8 @@ describe("the zero of a function", () => {
     ["two zeros", (x) => x.pow(2).minus(4), -3, 3, "2 zeros between -3 and 3, at -2, 2"],
     ["none", (x) => x.pow(2).plus(4), -3, 3, "no zero between -3 and 3"],
     ["the ends swapped", (x) => x, 3, -3, "the smaller number first"],
+    ["a look at one number of the interval", (x) => real(x.toDouble()).minus(2), 1, 9, "asks x for its toDouble()"],
+    ["a midpoint taken for x", (x) => x.midpoint.minus(2), 1, 9, "asks x for its midpoint"],
     ["an unknown derivative", (x) => h.agm(x, 1).minus(2) as h.Real, 1, 9, "uses agm of x"],
   ])("%s is refused — oracle: the message names what is wrong", (_name, f, low, high, message) => {
     const attempt = () => zero(f, { between: [low, high] });

@@ -187,7 +187,7 @@ export class EllipticFunction extends Callable {
    * Branch   z modulo the lattice is fixed up to sign by w. `prime`, the value of ℘′ there, settles it; for real w on a real lattice `sign` does,
    *          the sign of ℘′ (of Im ℘′ where it is imaginary). Without both ℘′ = −√(4w³ − g2 w − g3) by the principal root, so that a large
    *          w > 0 has a small z > 0. `component` ("identity", "bounded") and `line` ("real", "imaginary") say where z is to lie.
-   * Throws   DomainError where w has no solution on the component or line.
+   * Throws   DomainError where w has no solution on the component or line, or `prime` is no value of ℘′ over w.
    */
   inverse(w: ComplexNumeric, choice: InverseChoice = {}): Complex {
     if (!sameElement(this.element, wpElement(this.element.field))) {

@@ -7,7 +7,7 @@ import { DomainError } from "../proof/errors.ts";
 
 /** Which solution of ℘(z) = w is meant; none: ℘′(z) = −√(4w³ − g2 w − g3) by the principal root. */
 export interface InverseChoice {
-  /** The value of ℘′ there. */
+  /** The value of ℘′ there: one of the two roots of 4w³ − g2 w − g3 or an enclosure of it; any other number is refused. */
   readonly prime?: ComplexNumeric;
   /** The sign of ℘′ (of its imaginary part where ℘′ is imaginary), for real w on a real lattice. */
   readonly sign?: 1 | -1;
@@ -25,12 +25,32 @@ export function inverseOfWp(
   choice: InverseChoice,
 ): Complex {
   const x = scalar(w, "inverse");
-  if (choice.prime !== undefined) return Complex.from(apply(LOGARITHM, [lattice, x, scalar(choice.prime, "inverse")]));
   const principal = root(x);
+  if (choice.prime !== undefined) {
+    return Complex.from(apply(LOGARITHM, [lattice, x, ofTheTwo(scalar(choice.prime, "inverse"), principal, x)]));
+  }
   const asked = choice.sign !== undefined || choice.component !== undefined || choice.line !== undefined;
   if (asked) checkChoice(lattice, x, principal, choice);
   const prime = choice.sign === 1 ? principal : principal.neg();
   return Complex.from(apply(LOGARITHM, [lattice, x, prime]));
+}
+
+/** Of ±root the one that `given` is; the root itself, so that a rough enclosure of ℘′ takes no digits from z. */
+function ofTheTwo(given: Real | Complex, root: Real | Complex, x: Real | Complex): Real | Complex {
+  const other = root.neg();
+  const chosen = overlap(given, root) ? root : other;
+  if (overlap(given, chosen)) return chosen;
+  throw new DomainError({
+    subject: "inverse",
+    given: `℘′ = ${given} where ℘ = ${x}`,
+    expected: `${root} or its negative, since ℘′² = 4℘³ − g2 ℘ − g3`,
+    hint: "Without { prime } the solution with the negative of this root is given; its negative is the other one.",
+    argument: "prime",
+  });
+}
+
+function overlap(a: Real | Complex, b: Real | Complex): boolean {
+  return Complex.from(a).overlaps(b);
 }
 
 function checkChoice(

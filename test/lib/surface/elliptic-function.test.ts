@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { complex } from "../../../lib/number/convert.ts";
+import { complex, enclose } from "../../../lib/number/convert.ts";
 import type { Complex } from "../../../lib/number/values.ts";
 import { PoleError } from "../../../lib/proof/errors.ts";
 import { lattice } from "../../../lib/surface/make-lattice.ts";
@@ -101,6 +101,14 @@ describe("real points on real lattices", () => {
 
   it("zeros of ℘ lie on ω2/2 + R: their imaginary part is that of ω2/2", () => {
     for (const { point } of L.wp.zeros) expect(point.im.overlaps(L.periods[1].im.div(2))).toBe(true);
+  });
+
+  it("{ prime } that is no value of ℘′ over w is refused, not used — oracle: ℘′² = 4·4³ − 28·4 − 24 = 120 for the roots 3, −1, −2", () => {
+    const T = lattice({ roots: [3, -1, -2] });
+    expect(() => T.wp.inverse(4, { prime: -1 })).toThrow(/℘′ = -1 where ℘ = 4; expected 10\.954451/);
+    const rough = T.wp.inverse(4, { prime: enclose("-10.95", "0.01") });
+    expect(`${rough.digits(30)}`).toBe(`${T.wp.inverse(4).digits(30)}`);
+    expect(T.wp.prime(rough).pow(2).overlaps(120)).toBe(true);
   });
 
   it("the inverse of a large number is a small positive real number", () => {

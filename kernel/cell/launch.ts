@@ -1,6 +1,7 @@
 // How the two processes of a session are started.
 import { type ChildProcess, spawn } from "node:child_process";
 import { join } from "node:path";
+import { withCertificates, withoutCertificates } from "./certificates.ts";
 import { BUILT, ROOT, usableSnapshot } from "./snapshot/file.ts";
 
 /** Flags of the cells' process: what interrupts need (see child/stop.ts), and two warnings less. */
@@ -23,6 +24,7 @@ export function launchCells(cwd: string, memoryLimit?: number): ChildProcess {
   const limit = memoryLimit === undefined ? [] : [`--max-old-space-size=${memoryLimit}`];
   return spawn(process.execPath, [...CELL_FLAGS, ...limit, CELLS_ENTRY, cwd], {
     cwd,
+    env: withCertificates(process.env),
     detached: process.platform !== "win32",
     stdio: ["ignore", "pipe", "pipe", "pipe", "pipe", "pipe"],
   });
@@ -61,6 +63,7 @@ function startTypes(cwd: string, snapshot: string | undefined, confined: boolean
     ["--disable-warning=ExperimentalWarning", ...start, cwd, ...(confined ? [CONFINED] : [])],
     {
       cwd,
+      env: withoutCertificates(process.env),
       // A snapshot that does not fit is refused with words that help nobody: the plain start follows.
       stdio: ["pipe", "pipe", snapshot === undefined ? "inherit" : "ignore"],
     },

@@ -5,6 +5,7 @@ import { mkdtemp, rm, writeFile } from "node:fs/promises";
 import net from "node:net";
 import os from "node:os";
 import path from "node:path";
+import { certificatesAside } from "../cell/certificates.ts";
 import { kernelEntry } from "../service/install/kernelspec.ts";
 import { CHANNELS, type Connection, parseConnection } from "../wire/connection.ts";
 
@@ -60,7 +61,13 @@ export async function launchKernel({
     const child = spawn(program, [...args, "-f", file], {
       cwd,
       // what a command runs is not what the user entered, so it stays out of the history
-      env: { ...process.env, HALFPERIOD_HISTORY: "off", ...env, JPY_PARENT_PID: String(process.pid) },
+      env: {
+        ...process.env,
+        ...certificatesAside(process.env),
+        HALFPERIOD_HISTORY: "off",
+        ...env,
+        JPY_PARENT_PID: String(process.pid),
+      },
       stdio: ["ignore", "ignore", "pipe"],
       // Its own group, so that a Ctrl-C meant for this program does not reach it first, and all of it can be ended.
       detached: process.platform !== "win32",

@@ -1,6 +1,7 @@
 // The kernelspec: the folder by which a front end knows the kernel and starts it.
 import { existsSync, readFileSync } from "node:fs";
 import path from "node:path";
+import { CERTIFICATES_ASIDE } from "../../cell/certificates.ts";
 import { KERNEL_NAME, LANGUAGE, packageRoot, packageVersion } from "../info.ts";
 
 export interface Kernelspec {
@@ -32,7 +33,7 @@ export function kernelspec(env: Readonly<Record<string, string>>): Kernelspec {
     display_name: "halfperiod (TypeScript)",
     language: LANGUAGE,
     interrupt_mode: "message",
-    env,
+    env: { ...CERTIFICATES_ASIDE, ...env },
     metadata: {
       debugger: false,
       supported_encryption: ["curve"],

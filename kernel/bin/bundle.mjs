@@ -31,6 +31,16 @@ const withCompiler = {
   },
 };
 
+/** ZeroMQ's own search for its addon takes longer than all the rest of it: load.cjs has kept what that found. */
+const ADDON = "zeromq/lib/load-addon.js";
+const addonOutside = {
+  name: "addon-outside",
+  load(id) {
+    if (!id.split(path.sep).join("/").endsWith(`/${ADDON}`)) return undefined;
+    return `module.exports = require("${ADDON}");`;
+  },
+};
+
 /** Which chunk a module goes to: stack traces tell the machinery from the library by the file. */
 const CHUNKS = [
   { name: "library", test: (id) => id.startsWith(path.join(dist, "lib")) || id.includes("node_modules") },
@@ -47,8 +57,8 @@ async function bundle(
     logLevel: "warn",
     root,
     publicDir: false,
-    plugins: [keepPlaces, ...plugins],
-    ssr: { noExternal: true, external: [...external, "zeromq"] },
+    plugins: [keepPlaces, addonOutside, ...plugins],
+    ssr: { noExternal: true, external: [...external, ADDON] },
     build: {
       ssr: true,
       outDir,

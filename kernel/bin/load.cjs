@@ -13,9 +13,27 @@ const caches = path.join(dist, "cache");
 
 const age = (file) => statSync(file, { throwIfNoEntry: false })?.mtimeMs ?? 0;
 
-/** Where the code cache of a file of the bundles is; a cache fits one version of Node on one architecture. */
+/** Something kept of an earlier run; it fits one version of Node on one architecture. */
+function kept(name) {
+  return path.join(caches, `${name}-${process.version}-${process.platform}-${process.arch}`);
+}
+
+/** Where the code cache of a file of the bundles is. */
 function cacheOf(name) {
-  return path.join(caches, `${name}-${process.version}-${process.platform}-${process.arch}.code`);
+  return `${kept(name)}.code`;
+}
+
+const ADDON = "zeromq/lib/load-addon.js";
+
+/** ZeroMQ's addon, from where its own search found it the last time. */
+function addon(outside) {
+  const place = kept("addon");
+  if (age(place) === 0) return outside(ADDON);
+  try {
+    return { __esModule: true, default: outside(readFileSync(place, "utf8")) };
+  } catch {
+    return outside(ADDON);
+  }
 }
 
 /** The cache, if it was made from this file; V8 itself refuses one of another version or with other flags. */
@@ -41,7 +59,10 @@ function run(name) {
   });
   scripts.set(name, script);
   const outside = createRequire(file);
-  const require = (wanted) => (wanted.startsWith("./") ? run(wanted.slice(2)) : outside(wanted));
+  const require = (wanted) => {
+    if (wanted === ADDON) return addon(outside);
+    return wanted.startsWith("./") ? run(wanted.slice(2)) : outside(wanted);
+  };
   script.runInThisContext().call(module.exports, module.exports, require, module, file, bundles);
   return module.exports;
 }
@@ -61,12 +82,15 @@ function start(name, module) {
 /** Keeps what V8 has compiled so far for the next start. */
 function keepCode() {
   mkdirSync(caches, { recursive: true });
-  for (const [name, script] of scripts) {
-    const cache = cacheOf(name);
-    const fresh = `${cache}.${process.pid}`;
-    writeFileSync(fresh, script.createCachedData());
-    renameSync(fresh, cache);
-  }
+  for (const [name, script] of scripts) keep(cacheOf(name), script.createCachedData());
+  const place = Object.keys(require.cache).find((file) => /zeromq[\\/].*\.node$/.test(file));
+  if (place !== undefined) keep(kept("addon"), place);
+}
+
+function keep(file, content) {
+  const fresh = `${file}.${process.pid}`;
+  writeFileSync(fresh, content);
+  renameSync(fresh, file);
 }
 
 // Set-up lets a kernel run some cells and then asks both of its processes for their code (prepare.mjs).

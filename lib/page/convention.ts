@@ -1,7 +1,7 @@
 // The conventions that a result used, as lines under it: the words come from the edition, the formulas in them are set.
 
 import { type ConventionKey, convention, conventionOrder } from "../proof/conventions.ts";
-import { escapeHtml } from "./html.ts";
+import { htmlFormulas } from "./plain-formula.ts";
 import { prose } from "./prose.ts";
 import { small, texProse } from "./tex.ts";
 
@@ -55,7 +55,7 @@ export function conventionProse(keys: readonly ConventionKey[]): string[] {
 
 /** The same as one quiet block of HTML; empty if nothing needs saying. */
 export function conventionHtml(keys: readonly ConventionKey[]): string {
-  const lines = conventionProse(keys).map((line) => `<div>${escapeHtml(line)}</div>`);
+  const lines = conventionProse(keys).map((line) => `<div>${htmlFormulas(line)}</div>`);
   return lines.length === 0 ? "" : `<div style="${NOTE}">${lines.join("")}</div>`;
 }
 

@@ -1,9 +1,11 @@
-// A table as HTML: digits are text set in figures of equal width, so they read without a mathematics renderer too, and
-// are copied ungrouped; formulas stand in $...$, which the front ends typeset.
+// A table as HTML that reads everywhere, in front ends too that typeset no formulas inside HTML: digits are text in figures of equal
+// width and are copied ungrouped; formulas are text with indices and powers.
 
 import { type Decimal, fractionGroups, inLines, integerGroups } from "./digits.ts";
+import { formulaHtml } from "./formula/write.ts";
 import { escapeHtml } from "./html.ts";
 import type { Cell, NumberCell, Show } from "./kind.ts";
+import { htmlFormulas } from "./plain-formula.ts";
 import type { Table } from "./table.ts";
 import { bothParts, type Column, type NumberWidths } from "./table-column.ts";
 import { SHORT_WORDS } from "./table-fit.ts";
@@ -22,7 +24,7 @@ const STYLE = {
 export function tableHtml(table: Table, show: Show): string {
   const { columns, rows, omitted, fits } = layout(table, show);
   const caption =
-    table.caption === "" ? "" : `<caption style="${STYLE.caption}">${escapeHtml(table.caption)}</caption>`;
+    table.caption === "" ? "" : `<caption style="${STYLE.caption}">${htmlFormulas(table.caption)}</caption>`;
   const named = columns.some(({ head }) => head !== "");
   const heads = columns.map(({ head }) => `<th scope="col" style="${STYLE.head}">${headHtml(head)}</th>`);
   const rowHeads = rows.length > 0 && rows.every((row) => row[0] && row[0].kind !== "number" && row[0].text !== "");
@@ -37,9 +39,8 @@ export function tableHtml(table: Table, show: Show): string {
 }
 
 function headHtml(head: string): string {
-  if (head.includes("$")) return escapeHtml(head);
-  const tex = texName(head);
-  return tex.startsWith("\\text") || head === "" ? escapeHtml(head) : `$${tex}$`;
+  if (head.includes("$")) return htmlFormulas(head);
+  return formulaHtml(texName(head)) ?? escapeHtml(head);
 }
 
 function cell(
@@ -52,18 +53,18 @@ function cell(
     const style = fits && text.length <= SHORT_WORDS ? `${STYLE.words};white-space:nowrap` : STYLE.words;
     return tableCell(wordsHtml(text), style, isHead);
   }
-  if (content.kind === "formula") return tableCell(`$${escapeHtml(content.tex)}$`, formulaStyle(content.text), isHead);
+  if (content.kind === "formula") return tableCell(formulaCell(content), STYLE.cell, isHead);
   return tableCell(numberHtml(content, column), STYLE.cell, isHead);
 }
 
-/** Front ends that break long formulas measure the cell while it is still empty, so it has to have its width by itself. */
-function formulaStyle(text: string): string {
-  return `${STYLE.cell};min-width:${Math.min([...text].length, 50)}ch`;
+/** A formula in a line; one that needs several, such as a matrix, stands as its text. */
+function formulaCell({ text, tex }: Extract<Cell, { kind: "formula" }>): string {
+  return formulaHtml(tex) ?? escapeHtml(text).replace(/\n/g, "<br>");
 }
 
 /** Words, with the digits behind a Greek letter as its index. */
 function wordsHtml(text: string): string {
-  return escapeHtml(text).replace(/(\p{Script=Greek})(\d+)/gu, "<i>$1</i><sub>$2</sub>");
+  return htmlFormulas(text).replace(/(\p{Script=Greek})(\d+)/gu, "<i>$1</i><sub>$2</sub>");
 }
 
 function tableCell(html: string, style: string, isHead: boolean): string {

@@ -102,7 +102,7 @@ describe("numbers on a page", () => {
     const breaks = (value: unknown) => html(value).match(/<br>/g)?.length ?? 0;
     expect(breaks(table([["z", z]]))).toBe(1);
     expect(html(table([["z", z]])).replace(/<[^>]*>/g, "")).toBe(
-      `${text(z).replace(" - ", "−").replace("z", "")}`.replace(/^/, "$z$"),
+      `${text(z).replace(" - ", "−").replace("z", "")}`.replace(/^/, "z"),
     );
     const two = table([[agm(1, 2), agm(1, 3)]]);
     expect(breaks(two)).toBeGreaterThanOrEqual(2);

@@ -27,7 +27,7 @@ describe("tables", () => {
   it("HTML: caption, header cells with their scope, escaped text, digits without breaks for copying", () => {
     const html = bundle(multiples)?.["text/html"] as string;
     expect(html.match(/<th scope="col"/g)?.length).toBe(3);
-    expect(html).toContain(">Multiples of $P$</caption>");
+    expect(html).toContain(">Multiples of <i>P</i></caption>");
     expect(html).toContain("&lt;i&gt;far&lt;/i&gt; &amp; 50%");
     expect(html.replace(/<[^>]*>/g, "")).toContain("−1234567");
   });

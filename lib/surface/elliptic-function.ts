@@ -198,7 +198,7 @@ export class EllipticFunction extends Callable {
         hint: "Solve for ℘ first.",
       });
     }
-    return inverseOfWp(this.lattice, w, (x) => principalRoot(this, x), choice);
+    return inverseOfWp(this.lattice, w, (x) => primeRoot(this, x), choice);
   }
 
   /**
@@ -296,7 +296,7 @@ function pointOf(f: EllipticFunction, at: DivisorPoint): TorusPoint | Complex {
 }
 
 /** √(4x³ − g2 x − g3), principal. */
-function principalRoot(wp: EllipticFunction, x: Real | Complex): Real | Complex {
+export function primeRoot(wp: EllipticFunction, x: Real | Complex): Real | Complex {
   const value = squareAt(wp.prime.pow(2).element, x);
   return value instanceof Real && value.sign() !== -1 ? value.sqrt() : Complex.from(value).sqrt();
 }

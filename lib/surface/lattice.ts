@@ -1,4 +1,5 @@
 import { complexMultiplication, rationalModulus } from "../lattice/complex-multiplication.ts";
+import { exactCoordinatesOf } from "../lattice/exact-coordinates.ts";
 import { exactInvariant } from "../lattice/exact-invariants.ts";
 import { rationalRoot } from "../lattice/exact-roots.ts";
 import {
@@ -7,7 +8,6 @@ import {
   DISCRIMINANT,
   INVARIANT,
   J,
-  LOGARITHM,
   QUASI_PERIOD,
   REDUCED_TAU,
   ROOT,
@@ -24,10 +24,11 @@ import { DomainError, UndecidedError } from "../proof/errors.ts";
 import { remember } from "./behind.ts";
 import { ComplexMultiplication } from "./complex-multiplication.ts";
 import { type EllipticData, ellipticFunction } from "./elliptic.ts";
-import { EllipticFunction } from "./elliptic-function.ts";
+import { EllipticFunction, primeRoot } from "./elliptic-function.ts";
 import { coordinatesIn, exactCoordinates, indexMatrices, overlapsInteger } from "./lattice-relations.ts";
 import { QuasiPeriodicFunction } from "./quasi-periodic-function.ts";
 import { TorusPoint } from "./torus-point.ts";
+import { inverseOfWp } from "./wp-inverse.ts";
 
 /** The ways to give a lattice; numbers of one pair or triple are given together. */
 export type LatticeInput =
@@ -200,8 +201,9 @@ export class Lattice {
   /** z in the coordinates of the basis, with a nearest lattice point. */
   locate(z: ComplexNumeric): Location {
     const number = scalar(z, "locate");
-    const r = apply(COORDINATE, [this.data, number, 1]) as Real;
-    const s = apply(COORDINATE, [this.data, number, 2]) as Real;
+    const exact = exactCoordinatesOf(this.data.given, number);
+    const r = apply(COORDINATE, [this.data, number, 1], exact?.[0]) as Real;
+    const s = apply(COORDINATE, [this.data, number, 2], exact?.[1]) as Real;
     const { a, b, c, d } = this.data.toReduced;
     const [m, n] = nearestByMidpoint(this, r, s);
     const nearest = this.at(d * m + b * n, c * m + a * n);
@@ -213,16 +215,20 @@ export class Lattice {
    *
    * Domain   y² = 4x³ − g2 x − g3; enclosures have to allow it.
    * Branch   a representative near the cell around 0 of the reduced basis; the sign of y settles that of z.
-   * Throws   PrecisionError if x and y fit no point.
+   * Throws   DomainError if x and y fit no point.
    */
   logarithm(x: ComplexNumeric, y: ComplexNumeric): Complex {
-    return Complex.from(apply(LOGARITHM, [this.data, scalar(x, "logarithm"), scalar(y, "logarithm")]));
+    return inverseOfWp(this.data, x, (w) => primeRoot(this.wp, w), { prime: y }, "logarithm");
   }
 
-  /** Whether z is a lattice point, by exact coordinates. Throws UndecidedError for a number that is near one. */
+  /**
+   * Whether z is a lattice point: yes by exact arithmetic, no also by enclosures.
+   * Throws UndecidedError for a number that cannot be told from one and has no exact coordinates.
+   */
   contains(z: ComplexNumeric): boolean {
     if (z instanceof TorusPoint && z.lattice === this.data && !z.remainder) return z.isLatticePoint;
-    const { rest, nearest } = this.locate(z);
+    const { r, s, rest, nearest } = this.locate(z);
+    if (r.exact instanceof Rational && s.exact instanceof Rational) return r.exact.isInteger() && s.exact.isInteger();
     if (!rest.overlaps(0)) return false;
     throw new UndecidedError({
       subject: "contains",

@@ -23,11 +23,12 @@ export function inverseOfWp(
   w: ComplexNumeric,
   root: (x: Real | Complex) => Real | Complex,
   choice: InverseChoice,
+  subject = "inverse",
 ): Complex {
-  const x = scalar(w, "inverse");
+  const x = scalar(w, subject);
   const principal = root(x);
   if (choice.prime !== undefined) {
-    return Complex.from(apply(LOGARITHM, [lattice, x, ofTheTwo(scalar(choice.prime, "inverse"), principal, x)]));
+    return Complex.from(apply(LOGARITHM, [lattice, x, ofTheTwo(scalar(choice.prime, subject), principal, x, subject)]));
   }
   const asked = choice.sign !== undefined || choice.component !== undefined || choice.line !== undefined;
   if (asked) checkChoice(lattice, x, principal, choice);
@@ -36,15 +37,15 @@ export function inverseOfWp(
 }
 
 /** Of ±root the one that `given` is; the root itself, so that a rough enclosure of ℘′ takes no digits from z. */
-function ofTheTwo(given: Real | Complex, root: Real | Complex, x: Real | Complex): Real | Complex {
+function ofTheTwo(given: Real | Complex, root: Real | Complex, x: Real | Complex, subject: string): Real | Complex {
   const other = root.neg();
   const chosen = overlap(given, root) ? root : other;
   if (overlap(given, chosen)) return chosen;
   throw new DomainError({
-    subject: "inverse",
+    subject,
     given: `℘′ = ${given} where ℘ = ${x}`,
     expected: `${root} or its negative, since ℘′² = 4℘³ − g2 ℘ − g3`,
-    hint: "Without { prime } the solution with the negative of this root is given; its negative is the other one.",
+    hint: "wp.inverse(w) without { prime } takes the negative of this root; the other solution is the negative of that one.",
     argument: "prime",
   });
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { complex, real } from "../../../lib/number/convert.ts";
+import { complex, enclose, exact, rational, real } from "../../../lib/number/convert.ts";
 import { Quadratic } from "../../../lib/number/quadratic.ts";
 import { Rational } from "../../../lib/number/rational.ts";
 import { Complex, Real } from "../../../lib/number/values.ts";
@@ -9,6 +9,29 @@ import type { TorusPoint } from "../../../lib/surface/torus-point.ts";
 
 const E = lattice({ invariants: [4, -1] });
 const [w1, w2] = E.periods;
+
+describe("exact numbers and lattices with exact periods", () => {
+  const L = lattice({ periods: [2, exact`1 + 3 i`] });
+
+  it("have exact coordinates — oracle: 3 + 2i = 7/6·2 + 2/3·(1 + 3i) by hand", () => {
+    const { r, s } = L.locate(exact`3 + 2 i`);
+    expect([`${r}`, `${s}`]).toEqual(["7/6", "2/3"]);
+    const over = L.overlattice(L.at(rational(1, 3), 0));
+    expect(`${over.locate(exact`3 + 3 i`).r}`).toBe("3");
+    const H = lattice({ periods: [1, exact`(1+√-3)/2`] });
+    expect([`${H.locate(exact`3 + √-3`).r}`, `${H.locate(exact`3 + √-3`).s}`]).toEqual(["2", "2"]);
+  });
+
+  it("are in the lattice, or not, by exact arithmetic — oracle: whole coordinates", () => {
+    expect([4, exact`3 + 3 i`].map((z) => L.contains(z))).toEqual([true, true]);
+    expect([3, exact`3 + 3 i + 1/10^500`].map((z) => L.contains(z))).toEqual([false, false]);
+    expect(() => L.contains(enclose("4", "1e-6"))).toThrow(UndecidedError);
+  });
+
+  it("x and y of no point have no logarithm — oracle: y² = 120 at x = 4 for the roots 3, −1, −2", () => {
+    expect(() => lattice({ roots: [3, -1, -2] }).logarithm(4, -1)).toThrow(/^logarithm: ℘′ = -1 where ℘ = 4/);
+  });
+});
 
 describe("a lattice with real invariants", () => {
   it("has exact Δ = 37 and j = 110592/37 — oracle: worked by hand", () => {

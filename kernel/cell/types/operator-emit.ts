@@ -1,5 +1,6 @@
 // Operators directed by types, second half: what runs. Native where both operands are proved plain, so that loops over
 // numbers cost nothing; dispatch where one is, or may be, a library value. Exact literals are found on the way.
+import { declaredTypes } from "./declared-type.ts";
 import { type Fraction, fractionText, isSafeInteger, literalValue } from "./literals.ts";
 import { type OperatorCall, operatorCall, unwrap } from "./operator-call.ts";
 import { COMPOUND_TOKENS, TOKENS } from "./operators.ts";
@@ -128,7 +129,11 @@ export function exactValue(
 ): Fraction | undefined {
   if (!startsLiteral(node, prefix)) return undefined;
   const value = literalValue(node, prefix);
-  return value && meetsLibrary(node, prefix, values, checker) ? value : undefined;
+  if (!value) return undefined;
+  if (meetsLibrary(node, prefix, values, checker)) return value;
+  // A safe integer is exact as it stands; for others the declaration may know more than what was inferred from the literal.
+  const declared = isSafeInteger(value) || operatorCall(node.parent, prefix) ? [] : declaredTypes(node, checker);
+  return declared.some((type) => values.takesRational(type)) ? value : undefined;
 }
 
 /** A maximal tree of literals that meets a library value: as an operand, or where a library number is taken. */

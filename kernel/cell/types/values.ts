@@ -78,7 +78,7 @@ export class Values {
 
   /** Whether a parameter of this type takes exact rational numbers. */
   takesRational(type: TS.Type): boolean {
-    return members(type).some((part) => part.symbol?.name === "Rational" && this.isLibrary(part));
+    return members(this.#known(type)).some((part) => part.symbol?.name === "Rational" && this.isLibrary(part));
   }
 
   /** "a point", "a number", "a value of type Date". */

@@ -32,6 +32,16 @@ const VALUES: readonly (readonly [title: string, code: string, expected: string]
   ["a literal with exponent", "1e-3 * x", "3/1000"],
   ["an argument that takes a library number", "real(1/3) - r", "0"],
   ["an argument of a named option", "((o: { by: Numeric }) => real(o.by))({ by: 1/3 }) - r", "0"],
+  // biome-ignore lint/suspicious/noTemplateCurlyInString: the slot is the cell's
+  ["a slot of a template", "curve`y^2 = x^3 + ${1/3} x - ${-0.25}`.a.join()", "0,0,0,1/3,1/4"],
+  // biome-ignore lint/suspicious/noTemplateCurlyInString: the slot is the cell's
+  ["a slot beside a variable", "const n4 = 4; curve`y^2 = x^3 + ${n4} x + ${(1/3)}`.a.join()", "0,0,0,4,1/3"],
+  [
+    "an element of a list that a generic function takes",
+    "curve({ a: [0, 0, 0, 1/3, r > 0 ? 0.5 : 1] }).a.join()",
+    "0,0,0,1/3,1/2",
+  ],
+  ["an option of a generic function", "curve({ j: 1/2 }).j", "1/2"],
   ["unary minus of a variable", "-r", "-1/3"],
   ["number | Real", "((v: number | Real) => v + 1)(2)", "3"],
   ["number | Real, the other one", "((v: number | Real) => v + 1)(x)", "4"],

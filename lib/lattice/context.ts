@@ -13,6 +13,7 @@ import { complexPeriods, type PeriodPair, realPeriods } from "./agm-periods.ts";
 import { discriminant } from "./build.ts";
 import { matrixBits, transformed } from "./canonical.ts";
 import { type CubicRoots, cubicRoots } from "./cubic.ts";
+import { fixedPeriods } from "./fixed-periods.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
 import { discOf, isRefinable } from "./quantity.ts";
 
@@ -81,6 +82,12 @@ function accuracy({ w1, w2 }: PeriodPair): number {
 }
 
 function meanPeriods(lattice: PeriodLattice, prec: number): PeriodPair {
+  const { given, components } = lattice;
+  if (components && given.kind === "invariants") {
+    const [g2, g3] = [discOf(given.g2, prec + 40), discOf(given.g3, prec + 40)];
+    const fixed = fixedPeriods(disc.real(g2), disc.real(g3), components, prec + 8);
+    if (fixed) return fixed;
+  }
   const roots = cubic(lattice, prec + 16);
   if (lattice.components) return realPeriods(roots, lattice.components, prec + 8);
   const pair = complexPeriods(roots, prec + 8);

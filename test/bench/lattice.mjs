@@ -5,9 +5,8 @@ import { spawnSync } from "node:child_process";
 import { mkdtempSync, rmSync } from "node:fs";
 import { cpus, tmpdir } from "node:os";
 import { join } from "node:path";
-import { realPeriods } from "../../dist/lib/lattice/agm-periods.js";
-import { discriminant, latticeOfInvariants } from "../../dist/lib/lattice/build.js";
-import { cubicRoots } from "../../dist/lib/lattice/cubic.js";
+import { latticeOfInvariants } from "../../dist/lib/lattice/build.js";
+import { fixedPeriods } from "../../dist/lib/lattice/fixed-periods.js";
 import { realLogarithm } from "../../dist/lib/lattice/real-logarithm.js";
 import { weierstrassValues } from "../../dist/lib/lattice/values.js";
 import * as ball from "../../dist/lib/number/ball.js";
@@ -46,15 +45,7 @@ function ours(n) {
   const prec = Math.ceil(n * 3.33) + 8;
   const L = latticeOfInvariants(g2, g3);
   const z = disc.fromRational(Rational.parse("0.41"), prec + 20, Rational.parse("0.27"));
-  const period = () => {
-    const roots = cubicRoots(
-      disc.fromRational(g2, prec),
-      disc.fromRational(g3, prec),
-      discriminant(g2, g3, prec),
-      prec,
-    );
-    return realPeriods(roots, 2, prec);
-  };
+  const period = () => fixedPeriods(ball.fromRational(g2, prec + 16), ball.fromRational(g3, prec + 16), 2, prec + 4);
   return {
     periods: timed(period),
     functions: timed(() => weierstrassValues(L, z, prec, ["wp", "prime", "zeta"])),

@@ -14,15 +14,11 @@ import { DomainError } from "../proof/errors.ts";
 import type { Curve } from "./curve.ts";
 import { type FieldInput, type InField, largerField, primeFieldOf, reducedTo } from "./extended.ts";
 import { carry } from "./fields.ts";
-import type { ExactInput } from "./input.ts";
 import { jacobianCurve } from "./jacobian.ts";
 import { joinedCurve } from "./joined.ts";
 import type { Morphism } from "./morphism.ts";
 import { requireSmooth } from "./smooth.ts";
-import { PlaneCurve, PlanePoint } from "./variety.ts";
-
-/** A point of the curve, or its coordinates by letter. */
-export type PointInput<T = Rational> = PlanePoint<T> | Readonly<Record<string, ExactInput | T>>;
+import { PlaneCurve, PlanePoint, type PointInput } from "./variety.ts";
 
 /** A curve of genus one with a point as an elliptic curve. */
 export interface ThroughPoint<C extends PlaneCurve<T>, T = Rational> {

@@ -18,7 +18,7 @@ import { Curve } from "./curve.ts";
 import type { Coordinate } from "./fields.ts";
 import type { IntegerMatrix } from "./lattice.ts";
 import { periodMatrixOf } from "./period-matrix.ts";
-import { type AnyVariety, coordinatesOn, type PointOf, pointOn } from "./space.ts";
+import { type AnyVariety, coordinatesOn, type PlaceOn, type PointOf, pointOn } from "./space.ts";
 
 /** What a map is made of. */
 export interface MorphismData<T> {
@@ -81,7 +81,7 @@ const OnPoints = Base as unknown as abstract new <A, B>(call: (P: A) => B) => (P
  * series. Immutable.
  */
 export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve> extends OnPoints<
-  PointOf<V>,
+  PlaceOn<V>,
   PointOf<W>
 > {
   readonly from: V;
@@ -171,7 +171,7 @@ export class Morphism<V extends AnyVariety = Curve, W extends AnyVariety = Curve
   }
 
   /** True if the formula itself cannot take the point (the map still can). */
-  isExceptional(P: PointOf<V>): boolean {
+  isExceptional(P: PlaceOn<V>): boolean {
     return isExceptional(this.data.map, coordinatesOn(this.from, P as never, "isExceptional"));
   }
 
@@ -273,7 +273,7 @@ function image<V extends AnyVariety, W extends AnyVariety>(
   from: V,
   to: W,
   data: MorphismData<unknown>,
-  P: PointOf<V>,
+  P: PlaceOn<V>,
 ): PointOf<W> {
   const coordinates = coordinatesOn(from, P as never, "a map");
   const { abscissa } = data;

@@ -10,14 +10,14 @@ import { bidegreeModel, pencilQuartic, quadricsModel, quadricsThrough } from "..
 import type { Coefficients } from "../curve/weierstrass.ts";
 import type { Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
-import type { PointInput, ThroughPoint } from "./cubic.ts";
+import type { ThroughPoint } from "./cubic.ts";
 import type { Curve } from "./curve.ts";
 import { type FieldInput, type InField, largerField, primeFieldOf, reducedTo } from "./extended.ts";
 import { carry } from "./fields.ts";
 import type { ExactInput } from "./input.ts";
 import { jacobianCurve } from "./jacobian.ts";
 import { joinedCurve } from "./joined.ts";
-import { PlaneCurve, PlanePoint } from "./variety.ts";
+import { PlaneCurve, PlanePoint, type PointInput } from "./variety.ts";
 
 type Pair<T> = readonly [Polynomial<T>, Polynomial<T>];
 

@@ -11,13 +11,13 @@ import type { Coordinates, Model } from "../curve/map/model.ts";
 import { type QuarticCoefficients, quarticModel, quarticThrough } from "../curve/map/quartic.ts";
 import type { Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
-import type { PointInput, ThroughPoint } from "./cubic.ts";
+import type { ThroughPoint } from "./cubic.ts";
 import type { Curve } from "./curve.ts";
 import { type FieldInput, type InField, largerField, primeFieldOf, reducedTo } from "./extended.ts";
 import { carry } from "./fields.ts";
 import { jacobianCurve } from "./jacobian.ts";
 import { joinedCurve } from "./joined.ts";
-import { PlaneCurve, PlanePoint } from "./variety.ts";
+import { PlaneCurve, PlanePoint, type PointInput } from "./variety.ts";
 
 /** The curve y² = a x⁴ + b x³ + c x² + d x + e without double roots, over Q, a quadratic field, F_p, R or C. Made by `quartic`. */
 export class Quartic<T = Rational> extends PlaneCurve<T> {

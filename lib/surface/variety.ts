@@ -10,6 +10,9 @@ import { primitive, Rational } from "../number/rational.ts";
 import { DomainError } from "../proof/errors.ts";
 import { type ExactInput, elementOf } from "./input.ts";
 
+/** A point of a plane curve, or its coordinates by letter. */
+export type PointInput<T = Rational> = PlanePoint<T> | Readonly<Record<string, ExactInput | T>>;
+
 /** A curve of genus one as it is written: in a plane, or as two quadrics in space. */
 export abstract class PlaneCurve<T = Rational> {
   readonly model: Model<T>;

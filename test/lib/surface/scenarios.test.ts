@@ -5,6 +5,7 @@ import { plainPolynomial } from "../../../lib/curve/equation/print.ts";
 import { Quadratic, quadratic } from "../../../lib/number/quadratic.ts";
 import { Rational } from "../../../lib/number/rational.ts";
 import { Complex, type Real } from "../../../lib/number/values.ts";
+import { DomainError } from "../../../lib/proof/errors.ts";
 import { cubic } from "../../../lib/surface/make-cubic.ts";
 import { curve } from "../../../lib/surface/make-curve.ts";
 
@@ -52,6 +53,12 @@ describe("a weighted cubic with an obvious point, u³ + 2v³ + 3w³ = 6uvw", () 
     expect(images).toEqual(["(143 : 113 : 71)", "(16307 : 9281 : 8747)", "(-282473 : 86392 : 114427)"]);
     expect(first.times(3).x.toString()).toBe("-85616/11025");
     expect(first.order()).toBe(Infinity);
+  });
+
+  it("a map takes coordinates as the curve does, and refuses a point off it — oracle: 1 + 2 + 3·8 − 6·2 = 15", () => {
+    expect(to({ u: 1, v: -2, w: 1 }).equals(first)).toBe(true);
+    expect(() => to({ u: 1, v: 1, w: 2 })).toThrow("is 15 there");
+    expect(() => to({ u: 1, v: 1, z: 2 })).toThrow(DomainError);
   });
 
   it("there is no other primitive solution up to 60", () => {

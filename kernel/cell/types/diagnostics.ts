@@ -16,21 +16,34 @@ export interface Finding {
 /** Codes that only annoy in a notebook: packages without types are `any`. */
 const IGNORED = new Set([7016, 80001, 80005, 80007]);
 
+const CONSTANT =
+  "'$1' is a constant of an earlier cell or a name of the library, and cannot be assigned. Declare it anew with let or const.";
+
+/** About a name whose declaration stands behind the user's text. */
+const OF_EARLIER_CELL = /^Cannot assign to '(.+?)' because it is a (?:constant|function)\.$/;
+
 const REWORDED: readonly (readonly [RegExp, string])[] = [
-  [
-    /Cannot assign to '(.+?)' because it is an import\./,
-    "'$1' is a constant of an earlier cell or a name of the library, and cannot be assigned. Declare it anew with let or const.",
-  ],
+  [/Cannot assign to '(.+?)' because it is an import\./, CONSTANT],
   [/import\("[^"]*halfperiod-cell-\d+"\)\./g, ""],
-  [/import\("[^"]*\/dist\/lib\/[^"]*"\)\./g, ""],
+  [/import\("[^"]*\/dist\/lib\/[^"]*"\)\.|\$+op_types\./g, ""],
   [/Module '"\.\/halfperiod-cell-\d+"'/g, "The notebook"],
 ];
 
-export function findings(diagnostics: readonly TS.Diagnostic[], edited: EditedText): Finding[] {
+/** `isEarlier` tells the names of earlier cells. */
+export function findings(
+  diagnostics: readonly TS.Diagnostic[],
+  edited: EditedText,
+  isEarlier: (name: string) => boolean = () => false,
+): Finding[] {
   return diagnostics
     .filter((one) => one.category === ts.DiagnosticCategory.Error && !IGNORED.has(one.code))
     .filter((one) => one.start === undefined || one.start <= endInEdited(edited))
-    .map((one) => finding(one, edited));
+    .map((one) => finding(one, edited))
+    .map((one) => {
+      const [, name] = OF_EARLIER_CELL.exec(one.message) ?? [];
+      if (name === undefined || !isEarlier(name)) return one;
+      return { ...one, message: one.message.replace(OF_EARLIER_CELL, CONSTANT) };
+    });
 }
 
 /** A finding in an edited text, at its place in the user's. */

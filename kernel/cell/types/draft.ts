@@ -2,7 +2,7 @@
 import { EditedText, inOrder } from "./edits.ts";
 import { exportEdits } from "./exports.ts";
 import { surroundings } from "./notebook.ts";
-import { operatorEdits, operatorImport, operatorPrefix } from "./operators.ts";
+import { operatorEdits, operatorImport, operatorPrefix, typesPrefix } from "./operators.ts";
 import { type Outline, outline } from "./outline.ts";
 import { CURRENT, type NotebookTypes } from "./service.ts";
 
@@ -21,7 +21,7 @@ export function draft(types: NotebookTypes, code: string): Draft {
   const operators = operatorPrefix(code);
   const edits = [...exportEdits(parsed.source).edits, ...operatorEdits(parsed.source, operators)];
   const edited = new EditedText(code, inOrder(edits));
-  const around = surroundings(() => true, parsed.declared, types.names, types.libraryNames());
+  const around = surroundings(() => true, parsed.declared, types.names, types.libraryNames(), typesPrefix(operators));
   types.host.setCell(CURRENT, `${edited.text}${around.text}\n${operatorImport(operators)}`, true);
   return { file: types.host.cellFile(CURRENT), edited, parsed, operators };
 }

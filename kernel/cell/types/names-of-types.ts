@@ -1,4 +1,4 @@
 /** A printed type without the files in which its names are declared. */
 export function withoutPlaces(text: string): string {
-  return text.replace(/import\("[^"]*"\)\./g, "");
+  return text.replace(/import\("[^"]*"\)\.|\$+op_types\./g, "");
 }

@@ -1,10 +1,13 @@
 // The names of the notebook as the checker sees them: which cell defined a name last, and how a later cell gets it.
+import { type Inlined, inlinable, inlinedText } from "./inlined.ts";
 import type { Declared, NameKind } from "./outline.ts";
 
 /** A name that a cell has defined. */
 export interface NotebookName extends Declared {
   /** Number of the cell whose file exports it. */
   readonly cell: number;
+  /** Its declaration, where that can stand in another cell. */
+  readonly inlined: Inlined | undefined;
 }
 
 /** Import specifier of the file of a cell; the host resolves it. */
@@ -34,8 +37,12 @@ export class NotebookNames {
     return this.#names.values();
   }
 
-  define(cell: number, declared: Iterable<Declared>): void {
-    for (const one of declared) if (one.kind !== "using") this.#names.set(one.name, { ...one, cell });
+  /** Takes over the names of a cell that ran; `text` are its declarations. */
+  define(cell: number, declared: readonly Declared[], text: string): void {
+    const inlined = inlinable(text, declared);
+    for (const one of declared) {
+      if (one.kind !== "using") this.#names.set(one.name, { ...one, cell, inlined: inlined.get(one.name) });
+    }
   }
 
   get size(): number {
@@ -69,27 +76,30 @@ export function seesLibrary(around: Surroundings, words: ReadonlySet<string>): b
 /**
  * Surroundings of a cell.
  *
- * `wanted` are the words of the cell (or every name, for completion); names that the cell declares are its own.
+ * `wanted` are the words of the cell (or every name, for completion); names that the cell declares are its own. `types` is
+ * a name for the library in declarations of earlier cells.
  */
 export function surroundings(
   wanted: (name: string) => boolean,
   own: ReadonlyMap<string, Declared>,
   notebook: NotebookNames,
   libraryNames: Iterable<string>,
+  types: string,
 ): Surroundings {
   const lines: string[] = ["", ";export {};"];
-  const used: NotebookName[] = [];
-  for (const name of notebook.values()) {
-    if (own.has(name.name) || !wanted(name.name)) continue;
-    used.push(name);
-    lines.push(importLine(name));
-  }
+  const used = [...notebook.values()].filter(({ name }) => !own.has(name) && wanted(name));
   const library = new Set<string>();
   for (const name of libraryNames) {
     if (!own.has(name) && !notebook.get(name) && wanted(name)) library.add(name);
   }
-  // Also when it is empty: a program is taken over if its root imports the same modules as before.
-  lines.push(`import { ${[...library].join(", ")} } from "${LIBRARY}";`);
+  const here = (name: string) => own.has(name) || library.has(name) || notebook.get(name) !== undefined;
+  for (const name of used) {
+    const { inlined } = name;
+    const fits = inlined !== undefined && ![...inlined.free].some(here);
+    lines.push(fits ? inlinedText(inlined, types) : importLine(name));
+  }
+  // Also when nothing is used: a program is taken over if its root imports the same modules as before.
+  lines.push(`import { ${[...library].join(", ")} } from "${LIBRARY}";`, `import * as ${types} from "${LIBRARY}";`);
   const exported = [...own.values()].filter((declared) => declared.kind !== "using").map((declared) => declared.name);
   if (exported.length > 0) lines.push(`export { ${exported.join(", ")} };`);
   return { text: lines.join("\n"), library, notebook: used };

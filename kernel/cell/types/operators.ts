@@ -48,6 +48,11 @@ export function operatorPrefix(text: string): string {
   return prefix;
 }
 
+/** A name for the library as a whole, by the name for the operators. */
+export function typesPrefix(prefix: string): string {
+  return `${prefix}_types`;
+}
+
 /** The line that brings the operators into a checked text. */
 export function operatorImport(prefix: string): string {
   return `import { operators as ${prefix} } from "${OPERATORS}";`;

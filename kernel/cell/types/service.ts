@@ -9,7 +9,7 @@ import { NotebookHost, type Places, registry } from "./host.ts";
 import { LIBRARY, NotebookNames, seesLibrary, surroundings } from "./notebook.ts";
 import { emitOperators } from "./operator-emit.ts";
 import { operatorFindings } from "./operator-findings.ts";
-import { hasOperators, OPERATORS, operatorEdits, operatorImport, operatorPrefix } from "./operators.ts";
+import { hasOperators, OPERATORS, operatorEdits, operatorImport, operatorPrefix, typesPrefix } from "./operators.ts";
 import { type Declared, type Outline, outline, syntaxErrors } from "./outline.ts";
 import { rewriteCell } from "./rewrite.ts";
 import { finalObjectEdits, loopNotices, textNotices, withHint } from "./slips.ts";
@@ -153,6 +153,7 @@ export class NotebookTypes {
       parsed.declared,
       this.names,
       this.#visibleLibrary(parsed),
+      typesPrefix(operatorPrefix(code)),
     );
     const directed = seesLibrary(around, parsed.texts) && hasOperators(parsed.source);
     const { library } = around;
@@ -172,13 +173,16 @@ export class NotebookTypes {
     };
   }
 
-  #findings(file: string, code: string, { edited, operators, library }: Prepared): Finding[] {
+  #findings(file: string, code: string, { edited, operators, library, uses }: Prepared): Finding[] {
+    // Of the program, not of the service: that would also find what cannot be written into declarations, which no cell needs.
+    const program = this.service.getProgram() as TS.Program;
+    const checked = program.getSourceFile(file);
     const found = findings(
-      [...this.service.getSyntacticDiagnostics(file), ...this.service.getSemanticDiagnostics(file)],
+      [...program.getSyntacticDiagnostics(checked), ...program.getSemanticDiagnostics(checked)],
       edited,
+      (name) => uses.some((use) => use.name === name),
     );
     if (operators === undefined && library.size === 0 && this.names.size === 0) return found;
-    const program = this.service.getProgram() as TS.Program;
     const values = new Values(program.getTypeChecker(), this.host.libraryFolder);
     const source = program.getSourceFile(file) as TS.SourceFile;
     const own = operatorFindings(source, operators ?? "", values, edited, code);
@@ -221,7 +225,7 @@ export class NotebookTypes {
   /** Takes over a committed cell, also from an earlier types process. */
   restore(cell: number, committed: CommittedCell): void {
     this.host.setCell(cell, committed.text, false);
-    this.names.define(cell, committed.names as readonly Declared[]);
+    this.names.define(cell, committed.names as readonly Declared[], committed.text);
   }
 
   /** Forgets every name: their values are lost. */

@@ -217,6 +217,55 @@ const CASES: readonly Case[] = [
     ["const cw = 1", "// @ts-ignore\ncw = 2"],
     "TypeError: Assignment to constant variable 'cw'.",
   ],
+  [
+    "a name of an earlier cell beside a class that hides a name of its type",
+    ["const mp = new Map([[1, 2]])", "class Map { own = 1 }; [mp.get(1), new Map().own]"],
+    "[2, 1]",
+  ],
+  [
+    "a function typed by another name of its cell",
+    [
+      "const base = { k: 1 }; const same: typeof base = base; function copy(b: typeof base = same) { return { ...b } }",
+      "copy().k + same.k",
+    ],
+    "2",
+  ],
+  [
+    "a value whose type is a class of its cell",
+    [
+      "class Own { #n = 1; get n() { return this.#n } }; const own = new Own(), owns: Own[] = [own]",
+      "owns.push(own); owns[1]!.n",
+    ],
+    "1",
+  ],
+  [
+    "a unique symbol keeps its identity",
+    ["const mark: unique symbol = Symbol('m'); const marked = { [mark]: 5 }", "marked[mark]"],
+    "5",
+  ],
+  [
+    "overloads and let of an earlier cell",
+    [
+      "function two(x: number): number; function two(x: string): string[]; function two(x: any): any { return typeof x === 'number' ? x : [x] }; let lt: string | undefined = undefined",
+      "lt = 'a'; [two(1) + 1, two(lt).length]",
+    ],
+    "[2, 1]",
+  ],
+  [
+    "an anonymous class with a private member",
+    ["const Anonymous = class { private n = 2; twice() { return this.n * 2 } }", "new Anonymous().twice()"],
+    "4",
+  ],
+  [
+    "a type that only an import of its cell knows",
+    ["import { Stats } from 'node:fs'; const st2: Stats[] = []", "st2.length"],
+    "0",
+  ],
+  [
+    "a library value typed by an import of its own",
+    ["import type { Real } from 'halfperiod'; const rr: Real[] = [real('0.5')]", "rr[0]! + 1"],
+    "3/2",
+  ],
   ["CR LF", ["const crlf = 1\r\ncrlf + 1"], "2"],
   ["a template literal keeps its lines", ["`a\n  b`"], '"a\\n  b"'],
   [

@@ -7,6 +7,7 @@ import { anchorOf, type Derivation, type Step } from "./derivation.ts";
 import { checkHead, formulaParts, standingOf, summary } from "./derivation-parts.ts";
 import { escapeHtml } from "./html.ts";
 import type { Show } from "./kind.ts";
+import { prose } from "./prose.ts";
 import { standingHead, standingProse } from "./standing.ts";
 import { Table } from "./table.ts";
 import { tableHtml } from "./table-html.ts";
@@ -75,6 +76,8 @@ function notesHtml(derivation: Derivation, step: Step): string {
 
 function wordsHtml(derivation: Derivation, text: string): string {
   return citedPieces(derivation, text)
-    .map((piece) => ("anchor" in piece ? `<a href="#${piece.anchor}">${piece.number}</a>` : escapeHtml(piece.text)))
+    .map((piece) =>
+      "anchor" in piece ? `<a href="#${piece.anchor}">${piece.number}</a>` : escapeHtml(prose(piece.text)),
+    )
     .join("");
 }

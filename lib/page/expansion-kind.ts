@@ -8,7 +8,7 @@ import type { SecondRoute } from "../surface/second-route.ts";
 import type { Kind, Show } from "./kind.ts";
 import { prose } from "./prose.ts";
 import { standingProse, standingText } from "./standing.ts";
-import { array, texWords } from "./tex.ts";
+import { array, texProse, texWords } from "./tex.ts";
 
 const MOST_TERMS = 12;
 
@@ -66,7 +66,17 @@ export const homothetyKind: Kind<Homothety> = {
 /** A sentence with its reason; its standing is part of it. */
 export const multiplicationKind: Kind<ComplexMultiplication> = {
   text: (cm) => String(cm),
-  tex: (cm) => texWords(String(cm)),
+  // The reason stands below, where both do not fit on a line.
+  tex: (cm) => {
+    const [head = "", ...reason] = String(cm).split(/(?<=:) /);
+    const words = [head, reason.join(" ")].filter((line) => line !== "").map((line) => texProse(prose(line)));
+    return String(cm).length > 60
+      ? array(
+          "l",
+          words.map((line) => [line]),
+        )
+      : words.join("\\;");
+  },
   prose: (cm) => prose(String(cm)),
   // What a claim compares: the discriminant where there is one, else whether there is any.
   short: ({ discriminant }) => {

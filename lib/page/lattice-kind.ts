@@ -37,7 +37,9 @@ export const torusPointKind: Kind<TorusPoint> = {
         ? show.tex(z.remainder)
         : `${name} + ${show.tex(z.remainder)}`.replace("+ -", "- ")
       : name;
-    return rest === "0" ? "0" : `${rest} = ${valueTex(z, show)}`;
+    if (rest === "0") return "0";
+    const value = valueTex(z, show);
+    return isLong(rest, value) ? array("l", [[rest], [`{} = ${value}`]]) : `${rest} = ${value}`;
   },
   cell: (z, show) => complexKind.cell!(z, show),
   conventions: (z) => numberConventions(z),
@@ -47,6 +49,13 @@ export const torusPointKind: Kind<TorusPoint> = {
     value: complexKind.data(z, show),
   }),
 };
+
+/** Digits of a name and a value that do not fit on one line of a page. */
+const MOST_DIGITS = 70;
+
+function isLong(...parts: readonly string[]): boolean {
+  return parts.join("").replace(/\D/g, "").length > MOST_DIGITS;
+}
 
 function valueTex(z: TorusPoint, show: Show): string {
   return complexKind.tex!(z, show);

@@ -17,12 +17,12 @@ function words(text: string): string {
   return text
     .replace(/\p{Cc}+/gu, " ")
     .split(/( +)/)
-    .map((word) => (SAFE.test(word) && !INDEXED.test(word) ? word : special(word)))
+    .map((word) => (SAFE.test(word) && !SYMBOL.test(word) ? word : special(word)))
     .join("");
 }
 
-/** b2, c4, g2 and the like, alone or with punctuation behind. */
-const INDEXED = /^[([]*[abceg]\d′*[.,;:)\]]*$/;
+/** b2, c4, g2 and the like, a variable, a minus sign, or a number with its sign; alone or with punctuation around. */
+const SYMBOL = /^[([]*(?:[abceg]\d′*|[b-z]|-\d*)[.,;:)\]]*$/;
 
 /** A word with its opening brackets and closing punctuation left outside the formula. */
 function special(word: string): string {
@@ -38,7 +38,15 @@ function wordTex(word: string): string {
   if (field !== undefined) return `\\mathbb{F}_{${field}}`;
   const [, letter, index, marks] = /^([abceg])(\d)(′*)$/.exec(word) ?? [];
   if (letter !== undefined) return `${letter}_{${index}}${"'".repeat(marks?.length ?? 0)}`;
-  if (!/^[\w^*+/().,=-]+$/.test(word) || !word.includes("^") || /\^(?![-\w])|[_]/.test(word)) return texWords(word);
-  const indexed = word.replace(/\b([a-z])(\d+)(?=\^)/gi, "$1_{$2}");
-  return indexed.replace(/\^(-?\w+)/g, "^{$1}").replace(/\*/g, " ");
+  if (/^(?:[b-z]|-\d*)$/.test(word)) return word;
+  if (!FORMULA.test(word) || !/\^|_\d/.test(word) || /\^(?![-\w])|_(?!\d)/.test(word)) return texWords(word);
+  return word
+    .replace(/(?<![\p{L}\d])([a-z])(\d+)(?=\^)/giu, "$1_{$2}")
+    .replace(/_(\d+)/g, "_{$1}")
+    .replace(/\^(-?\w+)/g, "^{$1}")
+    .replace(/\*/g, " ")
+    .replace(/\p{Script=Greek}/gu, (letter) => `${texWords(letter)} `);
 }
+
+/** Powers, products, quotients and indices of letters and numbers. */
+const FORMULA = /^[\w\p{Script=Greek}^*+/().,=-]+$/u;

@@ -62,9 +62,12 @@ function formulaCell({ text, tex }: Extract<Cell, { kind: "formula" }>): string 
   return formulaHtml(tex) ?? escapeHtml(text).replace(/\n/g, "<br>");
 }
 
-/** Words, with the digits behind a Greek letter as its index. */
+/** Words, with the digits behind a Greek letter as its index, fields and minus signs as in formulas. */
 function wordsHtml(text: string): string {
-  return htmlFormulas(text).replace(/(\p{Script=Greek})(\d+)/gu, "<i>$1</i><sub>$2</sub>");
+  return htmlFormulas(text)
+    .replace(/(\p{Script=Greek})(\d+)/gu, "<i>$1</i><sub>$2</sub>")
+    .replace(/\bE\(F_(\d+)\)/g, "<i>E</i>(<b>F</b><sub>$1</sub>)")
+    .replace(/(?<=[ (])-(?=\d)/g, "−");
 }
 
 function tableCell(html: string, style: string, isHead: boolean): string {

@@ -78,6 +78,9 @@ const PRINT = `
   .wide table { font-size: 6.9pt; }
   .wide :is(td, th) { padding-right: 1em !important; }
   .code, figure, table, .shown, .stated, .failure { break-inside: avoid; }
+  .shown:has(> section), :is(.shown, table):has(tr:nth-child(13)) { break-inside: auto; }
+  .shown section li, tr { break-inside: avoid; }
+  .shown section > p, .shown summary { break-after: avoid; }
   .code { break-after: avoid; }
   details::details-content { content-visibility: visible; }
   summary { list-style: none; }

@@ -15,6 +15,8 @@ interface Marks {
   face(text: string, face: "italic" | "bold"): string;
   low(part: string, base: string): string;
   high(part: string): string;
+  /** A fraction over two lines, where there may be two. */
+  stacked?(above: string, below: string): string;
 }
 
 const TEXT: Marks = {
@@ -35,6 +37,9 @@ const HTML: Marks = {
   face: (text, face) => (face === "italic" ? `<i>${escapeHtml(text)}</i>` : `<b>${escapeHtml(text)}</b>`),
   low: (part) => `<sub>${part}</sub>`,
   high: (part) => `<sup>${part}</sup>`,
+  // The stroke is copied, but not seen.
+  stacked: (above, below) =>
+    `<span style="display:inline-block;vertical-align:middle;text-align:center;line-height:1.3"><span style="display:block;border-bottom:1px solid currentColor">${above}</span><span style="font-size:0">/</span>${below}</span>`,
 };
 
 /** The formula as HTML; undefined where it does not go into a line. */
@@ -96,8 +101,9 @@ function signPiece(
 ): string {
   const { role, face } = node;
   const text = node.text === "−" ? marks.minus : node.text;
-  if (role === "letter" && /^\p{L}$/u.test(text))
-    return face === "bold" ? marks.face(text, "bold") : marks.face(text, "italic");
+  if (role === "letter" && face === "bold") return marks.face(text, "bold");
+  // Capital Greek letters are upright, as TeX has them.
+  if (role === "letter" && /^[A-Za-zα-ωϑ]$/.test(text)) return marks.face(text, "italic");
   if (role === "digit" && isThin(before)) return marks.group(text);
   if (role === "space") return node.text === "\u2009" && isDigit(after) ? "" : text;
   const shown = marks.text(text);
@@ -123,6 +129,13 @@ function scripts(
   return `${name && endsOperand(before) ? " " : ""}${plain}${below}${primes}${power}${startsOperand(after) ? gap : ""}`;
 }
 
+/** Characters above or below from which on a fraction is set over two lines. */
+const LONG_FRACTION = 12;
+
+function width(node: Node): number {
+  return line([node], TEXT).length;
+}
+
 function fraction(
   { above, below }: Extract<Node, { kind: "fraction" }>,
   before: Node | undefined,
@@ -131,6 +144,8 @@ function fraction(
 ): string {
   const part = (node: Node, alone: (node: Node) => boolean): string =>
     alone(node) ? line([node], marks) : `(${line([node], marks)})`;
+  if (marks.stacked && LONG_FRACTION < Math.max(width(above), width(below)))
+    return marks.stacked(line([above], marks), line([below], marks));
   const text = `${part(above, isProduct)}/${part(below, isSingle)}`;
   const beside = startsOperand(after) || isSign(after, ["open"]) || endsOperand(before);
   return beside ? `(${text})` : text;

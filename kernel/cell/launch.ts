@@ -19,10 +19,11 @@ export const CONFINED = "confined";
 /** Starts from a bundle where there is one. */
 const CELLS_ENTRY = join(ROOT, "kernel", "bin", "cells.cjs");
 
-/** Starts the process that runs the user's code, in a process group of its own. */
+/** Starts the process that runs the user's code, in a process group of its own; `memoryLimit` in MB. */
 export function launchCells(cwd: string, memoryLimit?: number): ChildProcess {
   const limit = memoryLimit === undefined ? [] : [`--max-old-space-size=${memoryLimit}`];
-  return spawn(process.execPath, [...CELL_FLAGS, ...limit, CELLS_ENTRY, cwd], {
+  const watched = memoryLimit === undefined ? [] : [String(memoryLimit)];
+  return spawn(process.execPath, [...CELL_FLAGS, ...limit, CELLS_ENTRY, cwd, ...watched], {
     cwd,
     env: withCertificates(process.env),
     detached: process.platform !== "win32",

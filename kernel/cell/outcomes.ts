@@ -3,20 +3,45 @@ import { constants } from "node:os";
 import type { Death } from "./cells-client.ts";
 import type { ErrorReport } from "./port.ts";
 
-const FRESH = "All variables are lost; a fresh session has been started, and the next cell runs.";
+/** Names that are told one by one. */
+const MOST_NAMES = 8;
 
 function report(ename: string, evalue: string): ErrorReport {
   return { ename, evalue, traceback: [`\u001b[31m${ename}\u001b[0m: ${evalue}`] };
 }
 
-/** The process of the cells has ended in the middle of a cell. */
-export function deathReport(death: Death, interrupted: boolean): ErrorReport {
-  return report("SessionEnded", `${cause(death, interrupted)}. ${FRESH}`);
+/** What is known when the process of the cells has ended in the middle of a cell. */
+export interface Loss {
+  readonly death: Death;
+  readonly interrupted: boolean;
+  /** Variables that are gone, in the order of their definition. */
+  readonly names: readonly string[];
+  /** Limit of the memory in MB. */
+  readonly memoryLimit: number | undefined;
 }
 
-function cause(death: Death, interrupted: boolean): string {
+/** The process of the cells has ended: why, what is lost, and how it goes on. */
+export function deathReport(loss: Loss): ErrorReport {
+  const lost = `All variables are lost${nameList(loss.names)}`;
+  return report(
+    "SessionEnded",
+    `${cause(loss)}. ${lost}; a fresh session has been started, and the next cell runs. Run the cells above again for what you need.`,
+  );
+}
+
+function nameList(names: readonly string[]): string {
+  if (names.length === 0) return "";
+  const more = names.length - MOST_NAMES;
+  return ` (${names.slice(0, MOST_NAMES).join(", ")}${more > 0 ? ` and ${more} more` : ""})`;
+}
+
+function cause({ death, interrupted, memoryLimit }: Loss): string {
   if (death.words) return death.words;
-  if (death.outOfMemory) return "the cell ran out of memory";
+  if (death.outOfMemory) {
+    const limit =
+      memoryLimit === undefined ? "HALFPERIOD_MEMORY sets" : `it may have ${memoryLimit} MB; HALFPERIOD_MEMORY sets`;
+    return `the cell ran out of memory (${limit} another limit)`;
+  }
   if (interrupted && death.signal === "SIGKILL")
     return "the cell could not be stopped in any other way than by ending its process";
   if (death.signal) return `the process of the cells was ended by ${death.signal}${meaning(death.signal)}`;

@@ -110,6 +110,6 @@ export interface CellSessionOptions {
   readonly onEvent: (event: CellEvent) => void | Promise<void>;
   /** Present: the cells have the language and the library alone, behind two fences (see confined/outer.ts), within limits. */
   readonly confined?: Partial<ConfinedLimits>;
-  /** Limit of the heap of the cells in MB; absent: Node's own. */
+  /** Limit of the memory of the cells in MB: of their heap, and of heap and buffers together. Absent: Node's own. */
   readonly memoryLimit?: number;
 }

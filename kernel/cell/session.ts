@@ -222,11 +222,14 @@ class NotebookSession implements CellSession {
 
   /** The process is gone with all variables: a fresh one takes its place. */
   async #bury(death: Death, current: Current): Promise<ExecuteOutcome> {
+    const { names } = this.#types;
+    const { interrupted } = current;
+    const { memoryLimit } = this.#options;
     if (!this.#closed) {
       await this.#types.reset().catch(() => {});
       this.#liveCells();
     }
-    return { status: "error", ...deathReport(death, current.interrupted) };
+    return { status: "error", ...deathReport({ death, interrupted, names, memoryLimit }) };
   }
 
   async #userExpressions(request: ExecuteRequest, current: Current): Promise<Record<string, UserExpression>> {

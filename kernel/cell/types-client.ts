@@ -84,6 +84,12 @@ export class TypesClient {
     if (committed) this.#committed.set(cell, committed);
   }
 
+  /** Names with a value that the cells have defined so far. */
+  get names(): readonly string[] {
+    const all = [...this.#committed.values()].flatMap((cell) => cell.names);
+    return [...new Set(all.filter(({ kind, ambient }) => kind !== "type" && !ambient).map(({ name }) => name))];
+  }
+
   /** Forgets every name. */
   reset(): Promise<null> {
     this.#committed.clear();

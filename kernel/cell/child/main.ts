@@ -21,6 +21,8 @@ import { guardTimers } from "./timers.ts";
 import { formatter } from "./value.ts";
 
 const cwd = process.argv[2] ?? process.cwd();
+/** Limit of the memory in MB, if there is one. */
+const memory = Number(process.argv[3] ?? Number.POSITIVE_INFINITY);
 const state = new SharedArrayBuffer(SHARED_LENGTH * Int32Array.BYTES_PER_ELEMENT);
 const shared = new Int32Array(state);
 const reporter = new Reporter(shared);
@@ -35,7 +37,7 @@ function startWatchdog(runner: Runner): void {
   if (watched) return;
   watched = true;
   const { port1, port2 } = new MessageChannel();
-  const data = { port: port2, state, group: process.platform !== "win32" };
+  const data = { port: port2, state, group: process.platform !== "win32", memory };
   // No execArgv of the main thread: its memory limit is not meant for this one.
   const worker = new Worker(new URL("./watchdog.js", import.meta.url), { workerData: data, transferList: [port2] });
   worker.unref();

@@ -1,4 +1,6 @@
-// The watchdog: a worker that stops the main thread when the kernel asks, and ends the group when the kernel is gone.
+// The watchdog: a worker that stops the main thread when the kernel asks, and ends the group when the kernel is gone or
+// its memory is used up.
+import { writeSync } from "node:fs";
 import { Session } from "node:inspector";
 import { Socket } from "node:net";
 import { type MessagePort, workerData } from "node:worker_threads";
@@ -16,7 +18,16 @@ const NOTE_TIME = 2000;
 const UNCONDITIONAL_AFTER = 3000;
 const KILL_AFTER = 5000;
 
-const { port, state, group } = workerData as { port: MessagePort; state: SharedArrayBuffer; group: boolean };
+/** What a process takes besides the heap and the buffers of the cells, in MB: Node itself, the library, this worker. */
+const OVERHEAD = 200;
+const LOOK_AT_MEMORY = 100;
+
+const { port, state, group, memory } = workerData as {
+  port: MessagePort;
+  state: SharedArrayBuffer;
+  group: boolean;
+  memory: number;
+};
 const shared = new Int32Array(state);
 let session: Session | undefined;
 let pings = 0;
@@ -112,6 +123,18 @@ function evaluate(expression: string): void {
   session.post("Runtime.evaluate", { expression, silent: true });
 }
 
+/** V8 limits its heap by itself; buffers and typed arrays lie outside it. */
+function limitMemory(): void {
+  const most = (memory + OVERHEAD) * 2 ** 20;
+  setInterval(() => {
+    if (process.memoryUsage.rss() <= most) return;
+    // In the words of V8, which the kernel knows.
+    writeSync(2, "FATAL ERROR: the cells have more memory than they may\n");
+    killAll();
+  }, LOOK_AT_MEMORY).unref();
+}
+
+if (Number.isFinite(memory)) limitMemory();
 const reader = new LineReader();
 const socket = new Socket({ fd: DESCRIPTOR, readable: true, writable: false });
 socket.on("data", (chunk: Buffer) => {

@@ -39,7 +39,12 @@ export class TestNotebook {
 
   /** Waits until the last cell has reported something. */
   async begun(): Promise<void> {
-    while (!this.events.some((event) => event.cell === this.#cell)) {
+    await this.until(() => this.events.some((event) => event.cell === this.#cell));
+  }
+
+  /** Resolves when something that events bring about is so. */
+  async until(condition: () => boolean): Promise<void> {
+    while (!condition()) {
       await new Promise<void>((resolve) => {
         this.#hear = resolve;
       });

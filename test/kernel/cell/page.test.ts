@@ -81,6 +81,45 @@ describe("ask", () => {
   });
 });
 
+describe("several questions of one cell", () => {
+  const asked = () => notebook.events.flatMap((event) => (event.type === "input" ? [event.prompt] : []));
+
+  it("come one after another, and each has its answer — oracle: the answers in the order of the questions", async () => {
+    const before = asked().length;
+    const running = notebook.run("(await Promise.all([ask('a'), ask('b'), ask('c')])).join(' ')", { allowStdin: true });
+    for (const [n, line] of ["1", "2", "3"].entries()) {
+      await notebook.until(() => asked().length > before + n);
+      expect(asked().slice(before)).toEqual(["a", "b", "c"].slice(0, n + 1));
+      notebook.session.answerInput(line);
+    }
+    expect(await running).toMatchObject({ status: "ok", result: { data: { "text/plain": '"1 2 3"' } } });
+  });
+
+  it("end with the interrupt, and the next cell asks its own — oracle: the questions put", async () => {
+    const before = asked().length;
+    const running = notebook.run("await Promise.all([ask('a'), ask('b')])", { allowStdin: true });
+    await notebook.begun();
+    notebook.session.interrupt();
+    expect(await running).toMatchObject({ status: "error", ename: "Interrupted" });
+    const next = notebook.run("await ask('c')", { allowStdin: true });
+    await notebook.begun();
+    notebook.session.answerInput("3");
+    expect(await next).toMatchObject({ status: "ok", result: { data: { "text/plain": '"3"' } } });
+    expect(asked().slice(before)).toEqual(["a", "c"]);
+  });
+
+  it("one that a cell left behind ends when a later cell asks — oracle: the end of the input", async () => {
+    const left = notebook.run("let end: unknown = 0; void ask('left').then((line) => { end = line ?? 'none' })", {
+      allowStdin: true,
+    });
+    expect(await left).toMatchObject({ status: "ok" });
+    const next = notebook.run("[await ask('now'), end].join(' ')", { allowStdin: true });
+    await notebook.begun();
+    notebook.session.answerInput("yes");
+    expect(await next).toMatchObject({ status: "ok", result: { data: { "text/plain": '"yes none"' } } });
+  });
+});
+
 describe("order", () => {
   it("what ran when, and what has been defined again since", async () => {
     const own = new TestNotebook();

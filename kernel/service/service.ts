@@ -31,6 +31,8 @@ export interface Answer {
   readonly metadata?: Json;
   /** Publish the reply on iopub too. */
   readonly copied?: boolean;
+  /** Send the reply when all output before it is with the socket: who reads slowly must not take it for the end. */
+  readonly afterOutput?: boolean;
   /** Runs after idle. */
   readonly afterIdle?: () => void;
 }

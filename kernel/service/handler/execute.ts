@@ -32,12 +32,12 @@ export const executeRequest: Handler = async (request, service) => {
   if (!options.silent) service.output.publish("execute_input", { code: options.code, execution_count: count }, run);
   const entry = options.stored ? (await service.history()).add(count, options.code) : undefined;
   const stopped = service.interruptions !== interruptions;
-  const outcome = stopped ? STOPPED : await runCell(options, run, count, service);
-  service.runs.close(run, outcome.status === "error");
-  if (!options.silent) publishOutcome(outcome, run, count, service);
+  const ran = stopped ? STOPPED : await runCell(options, run, count, service);
+  service.runs.close(run, ran.status === "error");
+  const outcome = options.silent ? ran : publishOutcome(ran, run, count, service);
   if (entry && outcome.status === "ok") entry.output = plainText(outcome);
   if (outcome.status === "error" && options.stopOnError && !options.silent) await service.abortQueued();
-  return { content: replyContent(outcome, count, run), metadata: { started } };
+  return { content: replyContent(outcome, count, run), metadata: { started }, afterOutput: true };
 };
 
 /** The answer to an execute request that is not run because a cell before it failed. */
@@ -86,14 +86,21 @@ async function runCell(options: Options, run: Run, executionCount: number, servi
   }
 }
 
-function publishOutcome(outcome: ExecuteOutcome, run: Run, count: number, { output }: Service): void {
+/** Publishes how the cell ended, and gives it: a result that cannot be written as JSON has become an error. */
+function publishOutcome(outcome: ExecuteOutcome, run: Run, count: number, service: Service): ExecuteOutcome {
+  const { output } = service;
   if (outcome.status === "error") {
     const { ename, evalue, traceback } = outcome;
     output.publish("error", { ename, evalue, traceback }, run);
   } else if (outcome.result) {
     const { data, metadata } = outcome.result;
-    output.publish("execute_result", { execution_count: count, data, metadata }, run);
+    try {
+      output.publish("execute_result", { execution_count: count, data, metadata }, run);
+    } catch (error) {
+      return publishOutcome(failure(error), run, count, service);
+    }
   }
+  return outcome;
 }
 
 function replyContent(outcome: ExecuteOutcome, count: number, { payload }: Run): Json {

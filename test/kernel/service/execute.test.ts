@@ -200,12 +200,13 @@ it("the interrupt ends the running cell and stops the queue — oracle: protocol
   expect((await test.client.execute("value 3")).reply.content.status).toBe("ok");
 });
 
-it("output that is no JSON costs its cell, not the kernel — oracle: an error reply, idle, the next cell", async () => {
+it("output that is no JSON costs its cell, not the kernel — oracle: one error, its reply with the counter, idle", async () => {
   const shown = await test.client.execute("oddly\nvalue 1");
   expect(shown.reply.content.status).toBe("ok");
   const result = await test.client.execute("odd");
-  expect(result.reply.content).toMatchObject({ status: "error", ename: "TypeError", traceback: [] });
-  expect(summary(result.published)).toEqual(["busy", "execute_input", "idle"]);
+  const count = shown.reply.content.execution_count + 1;
+  expect(result.reply.content).toMatchObject({ status: "error", ename: "TypeError", execution_count: count });
+  expect(summary(result.published)).toEqual(["busy", "execute_input", "error", "idle"]);
   expect((await test.client.execute("value 2")).reply.content.status).toBe("ok");
 });
 

@@ -8,7 +8,7 @@ type Cause = Pick<Parent, "headerBytes">;
 /** How long text may wait for more, in ms: quick enough to watch, slow enough for hosts that count messages. */
 const GATHER = 40;
 /** Text gathered up to here goes out at once; no message carries more. In UTF-16 units. */
-const FULL = 100_000;
+const FULL = 250_000;
 
 export interface Output {
   /** Publishes, after what was gathered so far. */

@@ -15,6 +15,7 @@ async function createCells(options: CellSessionOptions): Promise<CellSession> {
 }
 
 async function serve(file: string): Promise<void> {
+  const parent = process.ppid;
   // Else this signal would open a debugger's port in the kernel.
   process.on("SIGUSR1", () => {});
   // A fault in the kernel itself must not take the user's variables with it.
@@ -25,7 +26,7 @@ async function serve(file: string): Promise<void> {
   const historyFile = folder === undefined ? {} : { historyFile: createHistoryFile(folder) };
   const kernel = await startKernel(connection, { createCells, ...historyFile });
   handleSignals({ interrupt: kernel.interrupt, end: kernel.end });
-  watchParent(kernel.end);
+  watchParent(parent, kernel.end);
   await kernel.ended;
 }
 

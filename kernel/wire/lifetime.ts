@@ -6,11 +6,11 @@ const LOOK = 600;
 /**
  * Calls `onDeath` once when the process that started this one is gone. Watches only if the host set JPY_PARENT_PID:
  * a host that did not wants the kernel to outlive it. A changed parent is what counts, not parent 1: in a container the
- * host may be process 1, and an orphan may be adopted by another process than 1.
+ * host may be process 1, and an orphan may be adopted by another process than 1. `parent` is to be read as early as can
+ * be: a host may die while its kernel starts.
  */
-export function watchParent(onDeath: () => void): void {
+export function watchParent(parent: number, onDeath: () => void): void {
   if (!process.env.JPY_PARENT_PID) return;
-  const parent = process.ppid;
   const timer = setInterval(() => {
     if (process.ppid === parent && isAlive(parent)) return;
     clearInterval(timer);

@@ -8,8 +8,9 @@ import type { Ball } from "../number/ball.ts";
 import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
-import { BranchError, PoleError, PrecisionError } from "../proof/errors.ts";
-import { eighthRoot } from "./theta-multiplier.ts";
+import { PrecisionError } from "../proof/errors.ts";
+import { thirdKind } from "./carlson-quadrature.ts";
+import { integral } from "./quadrature.ts";
 
 type Four = readonly [Disc, Disc, Disc, Disc];
 
@@ -59,86 +60,17 @@ function undecided(): PrecisionError {
 
 /**
  * RJ to about `tolerance`: with t = s², 3∫_0^S s ds/(√(s²+x) √(s²+y) √(s²+z) (s²+p)) in pieces, and RJ of the arguments moved by T = S² beyond.
- *
- * Error    a piece of half width h by Gauss's rule with four nodes: at most h·(64/15) B r^−8/(1 − r^−2) < h·B·2^−29, where |f| <= B in the disc of radius 8h
- *          around the centre, which holds the ellipse with r = 8 + √63 > 15.9 (L. N. Trefethen, SIAM Review 50 (2008), theorem 4.5). Pieces are halved until
- *          the disc is clear of the singularities and the bound below 2^−10 of the tolerance.
+ * Pieces are halved until the disc around is clear of the singularities and the bound below 2^−10 of the tolerance.
  */
 function roughRJ(squares: Four, tolerance: Ball, far: (squares: Four, prec: number) => Disc): Disc {
   const top = Math.max(...squares.map((w) => disc.magnitude(w))) + 1;
   const reach = Math.ceil(top / 2);
   const move: Disc = { re: 1n, im: 0n, exp: 2 * reach, rad: 0, axis: "real" };
-  let sum = far(squares.map((w) => disc.add(w, move, BITS)) as unknown as Four, BITS);
+  const beyond = far(squares.map((w) => disc.add(w, move, BITS)) as unknown as Four, BITS);
+  const [x, y, z, p] = squares;
+  const { near } = thirdKind([x, y, z], p);
   const share = ball.ldexp(tolerance, -10);
-  let left = MOST_PIECES;
-  // A piece has the centre odd·2^exp and the half width 2^exp.
-  const open: [bigint, number][] = [[1n, reach - 1]];
-  while (open.length > 0) {
-    const [odd, exp] = open.pop()!;
-    if (left-- === 0) throw undecided();
-    const piece = pieceOf(squares, odd, exp, share);
-    if (piece) sum = disc.add(sum, piece, BITS);
-    else open.push([2n * odd - 1n, exp - 1], [2n * odd + 1n, exp - 1]);
-  }
-  return sum;
-}
-
-/** The integral over a piece, if its bound is good enough. */
-function pieceOf(squares: Four, odd: bigint, exp: number, share: Ball): Disc | undefined {
-  const wide: Disc = { re: odd, im: 0n, exp, rad: 8, axis: "plane" };
-  const bound = attempt(() => disc.abs(integrand(squares, wide), 32));
-  if (!bound) return undefined;
-  const error = ball.ldexp(ball.upper(bound), exp - 29);
-  if (ball.compare(error, share) !== -1) return undefined;
-  return attempt(() => {
-    let sum: Disc = disc.zero;
-    for (const [node, weight] of gauss()) {
-      for (const x of [node, ball.neg(node)]) {
-        const s = disc.fromBall(ball.ldexp(ball.add(ball.fromInt(odd), x, BITS), exp));
-        sum = disc.add(sum, disc.mulBall(integrand(squares, s), weight, BITS), BITS);
-      }
-    }
-    return disc.widenBy(disc.ldexp(sum, exp), error, BITS, false);
-  });
-}
-
-let rule: readonly (readonly [Ball, Ball])[] | undefined;
-
-/** Positive nodes √(3/7 ∓ (2/7)√(6/5)) with their weights (18 ± √30)/36. Source DLMF 3.5.21 for n = 4. */
-function gauss(): readonly (readonly [Ball, Ball])[] {
-  if (rule) return rule;
-  const root30 = ball.sqrt(ball.fromInt(30), BITS);
-  const node = (sign: Ball) =>
-    ball.sqrt(ball.div(ball.add(ball.fromInt(15), ball.mulInt(sign, 2, BITS), BITS), ball.fromInt(35), BITS), BITS);
-  const weight = (sign: Ball) => ball.div(ball.sub(ball.fromInt(18), sign, BITS), ball.fromInt(36), BITS);
-  rule = [ball.neg(root30), root30].map((sign) => [node(sign), weight(sign)] as const);
-  return rule;
-}
-
-function integrand([x, y, z, p]: Four, s: Disc): Disc {
-  const square = disc.sqr(s, BITS);
-  let top: Disc = disc.mulInt(s, 3, BITS);
-  let bottom = disc.add(square, p, BITS);
-  for (const w of [x, y, z]) {
-    // s/√(s²) is 1 on the way.
-    if (disc.isZero(w)) top = disc.fromBall(ball.fromInt(3));
-    else bottom = disc.mul(bottom, rootAlong(disc.add(square, w, BITS), w), BITS);
-  }
-  return disc.div(top, bottom, BITS);
-}
-
-/** √x for x = s² + w: it moves parallel to the real axis, so the cut of the root is turned to the side of the axis where w is not. */
-function rootAlong(x: Disc, w: Disc): Disc {
-  const low = w.im < 0n;
-  const turned = low ? disc.mulI(x) : disc.neg(disc.mulI(x));
-  return disc.mul(disc.sqrt(turned, BITS), eighthRoot(low ? 7 : 1, BITS), BITS);
-}
-
-function attempt<T>(f: () => T): T | undefined {
-  try {
-    return f();
-  } catch (error) {
-    if (error instanceof BranchError || error instanceof PoleError) return undefined;
-    throw error;
-  }
+  const until = integral(near, { reach, nodes: 4, around: 8, bits: BITS, share, mostPieces: MOST_PIECES });
+  if (!until) throw undecided();
+  return disc.add(beyond, disc.mulInt(until, 3, BITS), BITS);
 }

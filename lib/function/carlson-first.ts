@@ -84,22 +84,27 @@ export function rootOfMean(a: Disc, mean: Disc, wp: number): Disc {
  */
 export function carlsonRC(x: Disc, y: Disc, prec: number): Disc {
   refuseZeros("RC", [y], 0);
-  if (y.axis === "real" && y.re < 0n && !disc.containsZero(y)) return principalRC(x, disc.neg(y), prec);
+  if (isOnCut(y)) return principalRC(x, disc.neg(y), prec, carlsonRC);
   return isSpread([x, y]) ? rcByLogarithm(x, y, prec) : duplicatedRC(x, y, prec);
 }
 
-/** RC by Carlson's duplication, off the cut. */
+/** RC by Carlson's duplication; for y < 0 the principal value by its reflection. */
 export function duplicatedRC(x: Disc, y: Disc, prec: number): Disc {
+  if (isOnCut(y)) return principalRC(x, disc.neg(y), prec, duplicatedRC);
   const [a, b] = rootsOf("RC", [x, y], prec + 24) as [Disc, Disc];
   return rcOfRoots(a, b, prec, x, y);
 }
 
-function principalRC(x: Disc, y: Disc, prec: number): Disc {
+function isOnCut(y: Disc): boolean {
+  return y.axis === "real" && y.re < 0n && !disc.containsZero(y);
+}
+
+function principalRC(x: Disc, y: Disc, prec: number, method: typeof carlsonRC): Disc {
   if (disc.isZero(x)) return disc.zero;
   const wp = prec + 8;
   const sum = disc.add(x, y, wp);
   const factor = disc.div(rootsOf("RC", [x], wp)[0]!, disc.sqrt(sum, wp), wp);
-  return disc.mul(factor, carlsonRC(sum, y, wp), prec + 2);
+  return disc.mul(factor, method(sum, y, wp), prec + 2);
 }
 
 /** RC(a², b²) for roots a, b with positive real part, a = 0 allowed. */

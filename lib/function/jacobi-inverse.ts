@@ -24,23 +24,31 @@ const RECIPROCAL: Readonly<Record<string, Principal>> = { ns: "sn", cs: "sc", ds
  * Throws   DomainError where an argument of RF is a negative real number, BranchError for discs that meet the cut.
  * Source   DLMF 22.15(ii), 19.25.30.
  */
-export function jacobiInverse(name: JacobiName, x: Disc, k: Modulus, prec: number): Disc {
+export function jacobiInverse(name: JacobiName, x: Disc, k: Modulus, prec: number, by = CARLSON): Disc {
   const base = RECIPROCAL[name];
-  if (base) return principalInverse(base, disc.inv(x, prec + 16), k, prec);
-  return principalInverse(name as Principal, x, k, prec);
+  if (base) return principalInverse(base, disc.inv(x, prec + 16), k, prec, by);
+  return principalInverse(name as Principal, x, k, prec, by);
 }
 
-function principalInverse(name: Principal, x: Disc, k: Modulus, prec: number): Disc {
+/** The integrals that an inverse is made of. */
+export interface Integrals {
+  readonly rf: (x: Disc, y: Disc, z: Disc, prec: number) => Disc;
+  readonly quarter: (k: Modulus, prec: number) => Disc;
+}
+
+const CARLSON: Integrals = { rf: carlsonRF, quarter: completeK };
+
+function principalInverse(name: Principal, x: Disc, k: Modulus, prec: number, by: Integrals): Disc {
   const wp = prec + 16;
   const even = name === "cn" || name === "cd";
   if (even && x.re < 0n) {
-    const rest = principalInverse(name, disc.neg(x), k, wp);
-    return disc.sub(disc.ldexp(completeK(k, wp), 1), rest, prec + 2);
+    const rest = principalInverse(name, disc.neg(x), k, wp, by);
+    return disc.sub(disc.ldexp(by.quarter(k, wp), 1), rest, prec + 2);
   }
   const { front, squares } = parts(name, x, k, wp);
   if (disc.isZero(front)) return disc.zero;
   for (const s of squares) refuse(name, s);
-  return disc.mul(front, carlsonRF(...squares, wp), prec + 2);
+  return disc.mul(front, by.rf(...squares, wp), prec + 2);
 }
 
 interface Parts {

@@ -2,8 +2,11 @@
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { asDisc, type Operation } from "../number/origin.ts";
+import { DomainError } from "../proof/errors.ts";
+import { rfByQuadrature } from "./carlson-quadrature.ts";
 import { jacobiAmplitude } from "./jacobi-amplitude.ts";
-import { jacobiInverse } from "./jacobi-inverse.ts";
+import { type Integrals, jacobiInverse } from "./jacobi-inverse.ts";
+import { amplitudeByFourier, amplitudeByLogarithm, epsilonByFourier, zetaByFourier } from "./jacobi-routes.ts";
 import { jacobiEpsilon, jacobiZeta } from "./jacobi-second.ts";
 import { jacobiByTheta, jacobiSlope } from "./jacobi-theta.ts";
 import {
@@ -16,6 +19,7 @@ import {
 import type { Modulus } from "./legendre-complete.ts";
 import { completeE, completeK } from "./legendre-complete.ts";
 import { incompleteE } from "./legendre-incomplete.ts";
+import { completeByQuadrature } from "./legendre-routes.ts";
 import { type Evaluate, operationOf, settle } from "./operations.ts";
 
 const LETTERS: readonly JacobiLetter[] = ["s", "c", "d", "n"];
@@ -63,10 +67,18 @@ export const JACOBI = table("", (name) => ({
   },
 }));
 
+const QUADRATURE: Integrals = {
+  rf: rfByQuadrature,
+  quarter: (k, prec) => completeByQuadrature("F", k, prec),
+};
+
 /** Their inverses, with derivative 1/(pq)′. */
 export const JACOBI_INVERSE = table("arc", (name) => {
   const f: Evaluate = ([x, m, m1], _rest, prec) => jacobiInverse(name, x!, modulusOf(m!, m1!), prec);
   return operationOf(name, 3, f, {
+    routes: {
+      quadrature: ([x, m, m1], _rest, prec) => jacobiInverse(name, x!, modulusOf(m!, m1!), prec, QUADRATURE),
+    },
     partials: [
       (x, rest, prec) => disc.inv(jacobiSlope(name, f(x, rest, prec + 8), modulusOf(x[1]!, x[2]!), prec + 8), prec),
     ],
@@ -87,19 +99,41 @@ function integral(
   });
 }
 
-export const AMPLITUDE: Operation = integral("am", jacobiAmplitude, dn);
+const onModulus =
+  (f: (u: Disc, modulus: Modulus, prec: number) => Disc): Evaluate =>
+  ([u, m, m1], _rest, prec) =>
+    f(u!, modulusOf(m!, m1!), prec);
+
+/** E(am u | m) for real u and m < 1: elsewhere dn may be the other root of 1 − m sn². */
+function epsilonByAmplitude(u: Disc, modulus: Modulus, prec: number): Disc {
+  if (u.axis !== "real" || modulus.m1.axis !== "real" || modulus.m1.re <= 0n) {
+    throw new DomainError({
+      subject: "Jacobi epsilon by E of the amplitude",
+      given: "u or m that is not real, or m >= 1",
+      expected: "real u and m < 1, where dn is positive",
+      hint: 'The route "Fourier series" holds for all of them.',
+      argument: "u",
+    });
+  }
+  return incompleteE(jacobiAmplitude(u, modulus, prec + 8), modulus, prec);
+}
+
+export const AMPLITUDE: Operation = integral("am", jacobiAmplitude, dn, {
+  "logarithm of cn + i sn": onModulus(amplitudeByLogarithm),
+  "Fourier series": onModulus(amplitudeByFourier),
+});
 export const EPSILON: Operation = integral(
   "Jacobi epsilon",
   jacobiEpsilon,
   (u, modulus, prec) => disc.sqr(dn(u, modulus, prec), prec),
-  {
-    "E of the amplitude": ([u, m, m1], _rest, prec) => {
-      const modulus = modulusOf(m!, m1!);
-      return incompleteE(jacobiAmplitude(u!, modulus, prec + 8), modulus, prec);
-    },
-  },
+  { "Fourier series": onModulus(epsilonByFourier), "E of the amplitude": onModulus(epsilonByAmplitude) },
 );
-export const ZETA: Operation = integral("Jacobi zeta", jacobiZeta, (u, modulus, prec) => {
-  const mean = disc.div(completeE(modulus, prec), completeK(modulus, prec), prec);
-  return disc.sub(disc.sqr(dn(u, modulus, prec), prec), mean, prec);
-});
+export const ZETA: Operation = integral(
+  "Jacobi zeta",
+  jacobiZeta,
+  (u, modulus, prec) => {
+    const mean = disc.div(completeE(modulus, prec), completeK(modulus, prec), prec);
+    return disc.sub(disc.sqr(dn(u, modulus, prec), prec), mean, prec);
+  },
+  { "Fourier series": onModulus(zetaByFourier) },
+);

@@ -9,7 +9,7 @@ import { completeE, type Modulus } from "./legendre-complete.ts";
 import { cellPoint, cellSums } from "./theta-values.ts";
 
 /**
- * ε(u | m) = ∫_0^u dn²(t) dt = E(am u | m).
+ * ε(u | m) = ∫_0^u dn²(t) dt, which is E(am u | m) for real u and m < 1.
  *
  * Domain   u away from the poles of dn; m other than 0 and 1 is not needed: ε(u|0) = u, ε(u|1) = tanh u.
  * Branch   none: meromorphic, since dn² has no residues.

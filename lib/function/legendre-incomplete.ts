@@ -29,7 +29,7 @@ import { sidedRoot } from "./legendre-mean.ts";
 const THREE = { man: 3n, exp: 0, rad: 0 };
 
 /** φ = half-turns·π + rest with the sine, the cosine and Δ of the rest. */
-interface Amplitude {
+export interface Amplitude {
   readonly halfTurns: bigint;
   readonly s: Disc;
   readonly c: Disc;
@@ -40,7 +40,8 @@ interface Amplitude {
   readonly s2: Disc;
 }
 
-function amplitude(phi: Disc, k: Modulus, wp: number): Amplitude {
+/** The parts of φ. Throws DomainError for m sin²φ > 1 without a side. */
+export function amplitude(phi: Disc, k: Modulus, wp: number): Amplitude {
   const { rest, halfTurns } = reduced(phi, wp);
   const { sin: s, cos: c } = disc.sinCos(rest, wp);
   const [s2, c2] = [disc.sqr(s, wp), disc.sqr(c, wp)];

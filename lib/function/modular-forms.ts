@@ -153,7 +153,8 @@ export function eisensteinG(k: number, tau: Disc, prec: number): Disc {
   return disc.mulBall(eisensteinE(k, tau, prec + 8), twiceZeta(k, prec + 8), prec + 2);
 }
 
-function twiceZeta(k: number, wp: number): ball.Ball {
+/** 2ζ(k), even k. */
+export function twiceZeta(k: number, wp: number): ball.Ball {
   return ball.mul(ball.fromRational(zetaRatio(k / 2), wp), ball.pow(ball.pi(wp + 8), k, wp + 8), wp);
 }
 
@@ -166,9 +167,9 @@ export type Order = "rows" | "symmetric" | "columns";
  *
  * Source   DLMF 23.8; J.-P. Serre, A Course in Arithmetic, VII.4.4 (proposition 6 and the two orders).
  */
-export function eisensteinG2(order: Order, tau: Disc, prec: number): Disc {
+export function eisensteinG2(order: Order, tau: Disc, prec: number, e = eisensteinE): Disc {
   const wp = prec + 12;
-  const rows = disc.mulBall(eisensteinE(2, tau, wp), twiceZeta(2, wp), wp);
+  const rows = disc.mulBall(e(2, tau, wp), twiceZeta(2, wp), wp);
   if (order === "rows") return disc.round(rows, prec + 2);
   const pi = ball.pi(wp);
   if (order === "symmetric") {

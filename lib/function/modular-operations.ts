@@ -18,6 +18,18 @@ import {
   type WeberName,
   weber,
 } from "./modular-forms.ts";
+import {
+  deltaByTheta,
+  discriminantByRows,
+  eisensteinByDivisors,
+  eisensteinByRows,
+  etaByProduct,
+  etaByTheta,
+  jBySeries,
+  timesTwoPi12,
+  weberByProduct,
+  weberByTheta,
+} from "./modular-routes.ts";
 import { type Evaluate, operationOf } from "./operations.ts";
 
 /** [τ, real]: the flag says that the value is real by an exact argument. */
@@ -34,27 +46,56 @@ function flagged(
   return operationOf(name, 1, onFlag(f), { routes: flaggedRoutes });
 }
 
-export const ETA: Operation = flagged("Dedekind eta", dedekindEta);
-export const DELTA: Operation = flagged("normalised discriminant", deltaNormalised);
-export const LATTICE_DISCRIMINANT: Operation = flagged("discriminant", latticeDiscriminant);
+const onAxis =
+  (f: (tau: Disc, prec: number) => Disc) =>
+  (tau: Disc, prec: number): Disc =>
+    tau.axis === "imaginary" ? ontoReal(f(tau, prec)) : f(tau, prec);
+
+export const ETA: Operation = flagged("Dedekind eta", dedekindEta, {
+  "theta function at 3τ": onAxis(etaByTheta),
+  "product at τ itself": onAxis(etaByProduct),
+});
+export const DELTA: Operation = flagged("normalised discriminant", deltaNormalised, {
+  "theta functions": deltaByTheta,
+  "product at τ itself": (tau, prec) => disc.pow(etaByProduct(tau, prec + 12), 24, prec),
+});
+export const LATTICE_DISCRIMINANT: Operation = flagged("discriminant", latticeDiscriminant, {
+  "g2³ − 27 g3² by rows": (tau, prec) => discriminantByRows(tau, prec),
+  "theta functions": (tau, prec) => timesTwoPi12(deltaByTheta(tau, prec + 8), prec),
+});
 /** By theta series; the second route by Euler's series for η. */
 export const MODULAR_J: Operation = flagged("j", jInvariant, {
+  "Klein's quotient of series at τ itself": jBySeries,
   "E4³/η²⁴": (tau, prec) =>
     disc.div(disc.pow(eisensteinE(4, tau, prec + 16), 3, prec + 16), deltaNormalised(tau, prec + 16), prec),
 });
 
+type ByWeight = (k: number, tau: Disc, prec: number) => Disc;
+
+const onWeight =
+  (f: ByWeight): Evaluate =>
+  ([tau], [real, k], prec) =>
+    real ? ontoReal(f(k as number, tau!, prec)) : f(k as number, tau!, prec);
+
 /** [τ, real, k]. */
-export const EISENSTEIN_E: Operation = operationOf("Eisenstein E", 1, ([tau], [real, k], prec) =>
-  real ? ontoReal(eisensteinE(k as number, tau!, prec)) : eisensteinE(k as number, tau!, prec),
-);
-export const EISENSTEIN_G: Operation = operationOf("Eisenstein G", 1, ([tau], [real, k], prec) =>
-  real ? ontoReal(eisensteinG(k as number, tau!, prec)) : eisensteinG(k as number, tau!, prec),
-);
+export const EISENSTEIN_E: Operation = operationOf("Eisenstein E", 1, onWeight(eisensteinE), {
+  routes: { "divisor sums at τ itself": onWeight(eisensteinByDivisors) },
+});
+export const EISENSTEIN_G: Operation = operationOf("Eisenstein G", 1, onWeight(eisensteinG), {
+  routes: { "sum over rows at τ itself": onWeight(eisensteinByRows) },
+});
+
+const onOrder =
+  (e?: ByWeight): Evaluate =>
+  ([tau], [real, order], prec) => {
+    const value = eisensteinG2(order as Order, tau!, prec, e);
+    return real ? ontoReal(value) : value;
+  };
 
 /** [τ, real, order]. */
-export const EISENSTEIN_G2: Operation = operationOf("Eisenstein G2", 1, ([tau], [real, order], prec) =>
-  real ? ontoReal(eisensteinG2(order as Order, tau!, prec)) : eisensteinG2(order as Order, tau!, prec),
-);
+export const EISENSTEIN_G2: Operation = operationOf("Eisenstein G2", 1, onOrder(), {
+  routes: { "divisor sums at τ itself": onOrder(eisensteinByDivisors) },
+});
 
 /** [τ, "lambda" or "complement", real]. */
 export const LAMBDA: Operation = operationOf(
@@ -78,10 +119,15 @@ export const LAMBDA: Operation = operationOf(
   },
 );
 
+const onName =
+  (f: (name: WeberName, tau: Disc, prec: number) => Disc): Evaluate =>
+  ([tau], [name], prec) =>
+    onAxis((t, bits) => f(name as WeberName, t, bits))(tau!, prec);
+
 /** [τ, name]. */
-export const WEBER: Operation = operationOf("Weber function", 1, ([tau], [name], prec) =>
-  weber(name as WeberName, tau!, prec),
-);
+export const WEBER: Operation = operationOf("Weber function", 1, onName(weber), {
+  routes: { "theta functions": onName(weberByTheta), "product at τ itself": onName(weberByProduct) },
+});
 
 /** [τ, matrix]: (aτ + b)/(cτ + d). */
 export const MOVED: Operation = operationOf("modular action", 1, ([tau], [matrix], prec) =>

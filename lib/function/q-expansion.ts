@@ -37,7 +37,8 @@ export function eisensteinExpansion(k: number, count: number): QExpansion {
   return { name: `E${k}`, nome: "q_mod", first: Rational.zero, coefficients };
 }
 
-function divisorSums(power: number, count: number): bigint[] {
+/** σ_power(n) for n = 1 .. count − 1, and 0. */
+export function divisorSums(power: number, count: number): bigint[] {
   const sums: bigint[] = new Array(count).fill(0n);
   for (let d = 1; d < count; d++) {
     const term = BigInt(d) ** BigInt(power);

@@ -45,6 +45,13 @@ function derivative(more: number): Evaluate {
 /** [v, τ, label, order]: the derivative of ln θ(v|τ) in v of that order, from 1 on. */
 export const THETA_LOGARITHMIC: Operation = operationOf("theta logarithmic", 2, logarithmicDerivative(0), {
   partials: [logarithmicDerivative(1)],
+  routes: {
+    "the series at τ itself": ([v, tau], [label, order], prec) => {
+      const derivatives = (wp: number) =>
+        Array.from({ length: (order as number) + 1 }, (_, k) => plainTheta(label as ThetaLabel, v!, tau!, k, wp));
+      return logarithmicOf(label as ThetaLabel, derivatives, order as number, prec);
+    },
+  },
 });
 
 function logarithmicDerivative(more: number): Evaluate {
@@ -53,8 +60,12 @@ function logarithmicDerivative(more: number): Evaluate {
 }
 
 function logarithmicAt(label: ThetaLabel, v: Disc, tau: Disc, order: number, prec: number): Disc {
+  return logarithmicOf(label, (wp) => jet(label, v, tau, order, wp), order, prec);
+}
+
+function logarithmicOf(label: ThetaLabel, jetAt: (wp: number) => Disc[], order: number, prec: number): Disc {
   const wp = prec + 8 + 4 * order;
-  const derivatives = jet(label, v, tau, order, wp);
+  const derivatives = jetAt(wp);
   if (disc.containsZero(derivatives[0]!)) {
     throw new PoleError({
       subject: "theta",

@@ -158,7 +158,7 @@ export class Jacobi {
     return this.odd(AMPLITUDE, u);
   }
 
-  /** ε(u) = ∫_0^u dn² = E(am u | m). Throws PoleError at the poles of dn. Source DLMF 22.16(ii). */
+  /** ε(u) = ∫_0^u dn², meromorphic; E(am u | m) for real u and m < 1. Throws PoleError at the poles of dn. Source DLMF 22.16(ii). */
   epsilon(u: ComplexNumeric): Value {
     return this.odd(EPSILON, u);
   }

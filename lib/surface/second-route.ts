@@ -2,7 +2,7 @@ import { workingPrecision } from "../number/context.ts";
 import * as disc from "../number/disc.ts";
 import { asDisc, type Operation } from "../number/origin.ts";
 import { apply, type Complex, type Real } from "../number/values.ts";
-import { DomainError } from "../proof/errors.ts";
+import { DomainError, LibraryError } from "../proof/errors.ts";
 import type { Standing } from "../proof/standing.ts";
 
 /** A value beside the same value by another method. */
@@ -58,7 +58,8 @@ function otherRoutes(x: Real | Complex): readonly Operation[] {
  * The value computed again by another method from the same input: ℘ by sums over rows instead of a theta series, periods by Carlson's RF
  * instead of means, and so on.
  *
- * Domain   a value as a function gave it (L.wp(z), L.periods[0], L.invariants[0], ...), before sums and products; `routesOf(x)` lists the names.
+ * Domain   a value as a function gave it (L.wp(z), L.periods[0], L.invariants[0], ...), before sums and products; `routesOf(x)` lists the names. Without
+ *          a name the first of them that holds at the arguments is taken; a route that is named and does not hold there says why.
  * Error    enclosures on both sides, at the digits in force; that they meet is what the agreement says.
  * Cost     the second methods are for checking, and slower: a sum of about one term a digit and more.
  * Throws   DomainError if there is no other route, or none of that name.
@@ -66,10 +67,17 @@ function otherRoutes(x: Real | Complex): readonly Operation[] {
  */
 export function secondRoute(x: Real | Complex, name?: string): SecondRoute {
   const routes = otherRoutes(x);
-  const route = name === undefined ? routes[0] : routes.find((r) => r.name === name);
-  if (!route) throw noRoute(x, routes, name);
+  const wanted = name === undefined ? routes : routes.filter((r) => r.name === name);
+  if (wanted.length === 0) throw noRoute(x, routes, name);
   const { operation, operands } = x.origin!;
-  return new SecondRoute(operation.name, x, route.name, apply(route, operands));
+  for (const route of wanted) {
+    try {
+      return new SecondRoute(operation.name, x, route.name, apply(route, operands));
+    } catch (error) {
+      if (route === wanted.at(-1) || !(error instanceof LibraryError)) throw error;
+    }
+  }
+  throw noRoute(x, routes, name);
 }
 
 function noRoute(x: Real | Complex, routes: readonly Operation[], name: string | undefined): DomainError {

@@ -9,6 +9,7 @@ import { invariants } from "../context.ts";
 import { moving, persistent } from "../operations.ts";
 import type { PeriodLattice } from "../period-lattice.ts";
 import { standingOf } from "../quantity.ts";
+import { functionRoutes } from "../routes.ts";
 import { type Coordinates, valuesAtPoint } from "../torus.ts";
 import { weierstrassValues } from "../values.ts";
 import { discField } from "./disc-field.ts";
@@ -39,22 +40,38 @@ function real(d: Disc): Enclosure {
 function operation(
   name: string,
   evaluate: (element: Element, rest: readonly unknown[], at: At, prec: number) => Disc,
+  routes: readonly Operation[] = [],
 ): Operation {
   return {
     name,
     evaluate: ([e, ...rest], at, prec) => real(evaluate((e as Expression).element, rest, at, prec)),
+    routes,
   };
 }
 
 const PAIR = ["wp", "prime"] as const;
 
+/** The function of ℘ and ℘′ by sums over rows. */
+function byRows(place: "number" | "point"): readonly Operation[] {
+  const [first, second] = PAIR.map((wanted) => functionRoutes(wanted, place)[0]!) as [Operation, Operation];
+  return [
+    operation("℘ and ℘′ by sums over rows", (f, rest, at, prec) => {
+      const value = (by: Operation) => asDisc(by.evaluate([f.field.lattice, ...rest], at, prec + 16));
+      return valueAt(f, value(first), value(second), prec);
+    }),
+  ];
+}
+
 /** [expression, z]. */
 export const VALUE: Operation = moving(
-  operation("elliptic function", (f, [z], at, prec) =>
-    persistent(f.field.lattice, "elliptic function", z, at, prec, (x, bits) => {
-      const { wp, prime } = weierstrassValues(f.field.lattice, x, bits + 16, PAIR);
-      return valueAt(f, wp!, prime!, bits);
-    }),
+  operation(
+    "elliptic function",
+    (f, [z], at, prec) =>
+      persistent(f.field.lattice, "elliptic function", z, at, prec, (x, bits) => {
+        const { wp, prime } = weierstrassValues(f.field.lattice, x, bits + 16, PAIR);
+        return valueAt(f, wp!, prime!, bits);
+      }),
+    byRows("number"),
   ),
   1,
   ([f, ...place], at, prec) => VALUE.evaluate([derived(f), ...place], at, prec),
@@ -71,15 +88,19 @@ function derived(f: unknown): Expression {
 
 /** [expression, r, s] or [expression, r, s, number]. */
 export const VALUE_AT_POINT: Operation = moving(
-  operation("elliptic function", (f, [r, s, rest], at, prec) => {
-    const where = [r as Rational, s as Rational] as const;
-    const evaluate = (x: Disc | undefined, bits: number) => {
-      const { wp, prime } = valuesAtPoint(f.field.lattice, where, x, bits + 16, PAIR);
-      return valueAt(f, wp!, prime!, bits);
-    };
-    if (rest === undefined) return evaluate(undefined, prec);
-    return persistent(f.field.lattice, "elliptic function", rest, at, prec, evaluate);
-  }),
+  operation(
+    "elliptic function",
+    (f, [r, s, rest], at, prec) => {
+      const where = [r as Rational, s as Rational] as const;
+      const evaluate = (x: Disc | undefined, bits: number) => {
+        const { wp, prime } = valuesAtPoint(f.field.lattice, where, x, bits + 16, PAIR);
+        return valueAt(f, wp!, prime!, bits);
+      };
+      if (rest === undefined) return evaluate(undefined, prec);
+      return persistent(f.field.lattice, "elliptic function", rest, at, prec, evaluate);
+    },
+    byRows("point"),
+  ),
   3,
   ([f, ...place], at, prec) => VALUE_AT_POINT.evaluate([derived(f), ...place], at, prec),
 );

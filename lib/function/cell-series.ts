@@ -30,7 +30,7 @@ export interface CellSeries {
 }
 
 /** Most of |Y|; in the cell it is at most 1 + 2Q + Q². */
-const LARGEST = 1.5;
+export const LARGEST = 1.5;
 /** Bits that the terms from n = 1 on get beyond those of P: they are of size Q² in a tall cell, where values differ by them only. */
 const MOST_SPARE = 512;
 
@@ -113,7 +113,6 @@ function binomialTable(last: number): readonly (readonly bigint[])[] {
 export function cellSums(series: CellSeries, y: Disc, order: number): Disc[] {
   const Y = disc.ldexp(y, -series.k);
   const places = Math.max(64, Math.min(series.places, 64 - radiusMagnitude(Y)));
-  const cut = series.places - places;
   const point = toFixed(Y, places);
   const size = absUpper(point, places);
   if (!(size <= LARGEST)) {
@@ -122,19 +121,72 @@ export function cellSums(series: CellSeries, y: Disc, order: number): Disc[] {
       "an enclosure that is small beside the cell",
     );
   }
-  const terms = [trimmed(series.coefficients[0]!, cut)];
-  const powers = new Powers(point, size, places);
+  const real = series.real && y.axis === "real";
+  return pointSums(withPlaces(series, places), point, size, order, real).map((sum) => {
+    const whole = sumDisc(sum.re, sum.im, sum.err, places);
+    return real ? disc.fromBall(disc.real(whole)) : whole;
+  });
+}
+
+/** The series with fewer places. */
+export function withPlaces(series: CellSeries, places: number): CellSeries {
+  const cut = series.places - places;
+  if (cut === 0) return series;
+  return { ...series, places, coefficients: series.coefficients.map((c) => trimmed(c, cut)) };
+}
+
+/**
+ * The same at Y = 2^−k y with as many places as the series has. A long series is taken as A(Y²) + Y B(Y²), which spares half of the powers and costs a
+ * product for each sum.
+ * @param size at least |Y|, at most 1.5
+ * @param real whether coefficients and Y are real
+ */
+export function pointSums(series: CellSeries, point: Fixed, size: number, order: number, real: boolean): Fixed[] {
+  if (series.coefficients.length < LONG) return weighted(termsOf(series, point, size), order, real);
+  const { places } = series;
+  const { terms, bound } = termsOf(series, point, size, true);
+  const half = (parity: number) => terms.map((term, n) => (n % 2 === parity ? term : NOTHING));
+  const even = weighted({ terms: half(0), bound }, order, real);
+  const odd = weighted({ terms: half(1), bound: 0 }, order, real);
+  return even.map((sum, j) => {
+    const rest = product(odd[j]!, point, absUpper(odd[j]!, places), size, places);
+    return { re: sum.re + rest.re, im: sum.im + rest.im, err: (sum.err + rest.err) * UP };
+  });
+}
+
+/** From here on the split pays (measured). */
+const LONG = 40;
+const NOTHING: Fixed = { re: 0n, im: 0n, err: 0 };
+
+interface Terms {
+  readonly terms: readonly Fixed[];
+  /** In units, of the first term left out; those after it are counted too, as in the header. */
+  readonly bound: number;
+}
+
+/** B_n Y^n, or B_n Y^(n−1) for odd n of a split series. */
+function termsOf(series: CellSeries, point: Fixed, size: number, split = false): Terms {
+  const { places } = series;
+  const terms = [series.coefficients[0]!];
+  const step = split ? 2 : 1;
+  const powers = split
+    ? new Powers(square(point, size, places), size * size * UP, places)
+    : new Powers(point, size, places);
+  let reach = 1;
   for (let n = 1; ; n++) {
+    reach *= size * UP;
     const fall = series.falls[n]!;
-    const bound = powers.bound(n) * pow2(places - fall);
-    if (n === series.coefficients.length || bound < 2 ** -24) {
-      return weighted(terms, order, bound * UP, places, series.real && y.axis === "real");
+    const bound = reach * pow2(places - fall);
+    if (n === series.coefficients.length || bound < 2 ** -24) return { terms, bound: bound * UP };
+    const B = series.coefficients[n]!;
+    const k = Math.floor(n / step);
+    if (k === 0) {
+      terms.push(B);
+      continue;
     }
-    // The product with B_n needs no more places of Y^n than this.
-    const next = Math.max(16, places - fall);
-    const power = powers.next(n, next);
-    const B = trimmed(series.coefficients[n]!, cut);
-    terms.push(product(B, power, pow2(places - powers.places - fall), powers.bound(n), powers.places));
+    // The product with B_n needs no more places of the power than this.
+    const power = n % step === 0 ? powers.next(k, Math.max(16, places - fall)) : powers.last(k);
+    terms.push(product(B, power, pow2(places - powers.places - fall), powers.bound(k), powers.places));
   }
 }
 
@@ -173,6 +225,11 @@ class Powers {
     return power;
   }
 
+  /** Y^n again. */
+  last(n: number): Fixed {
+    return this.list[n - 1]!;
+  }
+
   private times(x: Fixed, y: Fixed, n: number, places: number): Fixed {
     return product(x, y, this.bound(n - 1), this.bound(1), places);
   }
@@ -191,7 +248,7 @@ function trimmed(x: Fixed, cut: number): Fixed {
  * From the last term on each running sum is added into the next one, which takes no product: R_0 = Σ T_n, R_1 = Σ n T_n,
  * R_2 = Σ n(n+1)/2 T_n, R_3 = Σ n(n+1)(n+2)/6 T_n.
  */
-function weighted(terms: readonly Fixed[], order: number, bound: number, places: number, real: boolean): Disc[] {
+function weighted({ terms, bound }: Terms, order: number, real: boolean): Fixed[] {
   const err = errors(terms, order, bound);
   const re = running(
     terms.map((t) => t.re),
@@ -203,10 +260,7 @@ function weighted(terms: readonly Fixed[], order: number, bound: number, places:
         terms.map((t) => t.im),
         order,
       );
-  return re.map((x, j) => {
-    if (!real) return sumDisc(x, im[j]!, err[j]!, places);
-    return disc.fromBall(disc.real(sumDisc(x, 0n, err[j]!, places)));
-  });
+  return re.map((x, j) => ({ re: x, im: real ? 0n : im[j]!, err: err[j]! }));
 }
 
 function running(terms: readonly bigint[], order: number): bigint[] {

@@ -79,3 +79,54 @@ export function square(x: Fixed, b: number, places: number): Fixed {
   if (x.im === 0n) return { re: (x.re * x.re) >> s, im: 0n, err };
   return { re: ((x.re - x.im) * (x.re + x.im)) >> s, im: (x.re * x.im) >> shiftBy(places - 1), err };
 }
+
+/** A number with a bound of its size, the stored one's and the true one's. */
+export interface Sized extends Fixed {
+  readonly size: number;
+}
+
+export function sized(x: Fixed, places: number): Sized {
+  return { re: x.re, im: x.im, err: x.err, size: absUpper(x, places) };
+}
+
+export function times(x: Sized, y: Sized, places: number): Sized {
+  const { re, im, err } = product(x, y, x.size, y.size, places);
+  return { re, im, err, size: x.size * y.size * UP };
+}
+
+export function squared(x: Sized, places: number): Sized {
+  const { re, im, err } = square(x, x.size, places);
+  return { re, im, err, size: x.size * x.size * UP };
+}
+
+export function plus(x: Sized, y: Sized): Sized {
+  return { re: x.re + y.re, im: x.im + y.im, err: (x.err + y.err) * UP, size: (x.size + y.size) * UP };
+}
+
+export function minus(x: Sized, y: Sized): Sized {
+  return { re: x.re - y.re, im: x.im - y.im, err: (x.err + y.err) * UP, size: (x.size + y.size) * UP };
+}
+
+/** 2^k·x, k >= 0. */
+export function doubled(x: Sized, k: number): Sized {
+  const by = shiftBy(k);
+  return { re: x.re << by, im: x.im << by, err: x.err * 2 ** k, size: x.size * 2 ** k };
+}
+
+/**
+ * 1/x = conj(x)/|x|² for 2^−20 <= |x|; nothing for smaller ones or ones that are not sharp.
+ *
+ * Error    with l a lower bound of |x| and of the stored number: err/l² from that of x, 1/l³ from the cut of |x|² to the places, at most √2 from
+ *          the quotients.
+ */
+export function inverse(x: Sized, places: number): Sized | undefined {
+  const s = shiftBy(places);
+  const norm = (x.re * x.re + x.im * x.im) >> s;
+  const n = Number(norm >> shiftBy(places - 60)) * 2 ** -60;
+  const low = Math.sqrt(Math.max(0, n - 2 ** -59)) * (1 - 2 ** -40) - x.err * pow2(-places);
+  if (!(low > 2 ** -20)) return undefined;
+  const re = (x.re << s) / norm;
+  const im = x.im === 0n ? 0n : -((x.im << s) / norm);
+  const err = ((x.err + 1 / low) / (low * low) + ROOT2) * UP;
+  return { re, im, err, size: (1 / low + err * pow2(-places)) * UP };
+}

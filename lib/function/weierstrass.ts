@@ -17,6 +17,7 @@ import * as disc from "../number/disc.ts";
 import { PoleError } from "../proof/errors.ts";
 import { type CellSeries, cellSeries, cellSums } from "./cell-series.ts";
 import { nearestInteger, radiusMagnitude } from "./enclosure.ts";
+import { fixedWeierstrass } from "./fixed-weierstrass.ts";
 import type { ReducedLattice } from "./reduced.ts";
 
 /** An argument z = rest + m1 r1 + m2 r2 with rest in or beside the cell around 0. */
@@ -70,7 +71,15 @@ export type WeierstrassValues = { readonly [K in Wanted]?: Disc };
  *          poles is wanted.
  */
 export function weierstrass(l: ReducedLattice, z: Disc, prec: number, wanted: readonly Wanted[]): WeierstrassValues {
+  if (withoutSigma(wanted)) {
+    const fixed = fixedWeierstrass(l, seriesOf(l), z, prec, wanted);
+    if (fixed) return fixed;
+  }
   return atCell(l, toCell(l, z, prec), prec, wanted);
+}
+
+function withoutSigma(wanted: readonly Wanted[]): wanted is readonly Exclude<Wanted, "sigma">[] {
+  return !wanted.includes("sigma");
 }
 
 /** The same for an argument that is in the cell already. */

@@ -1,7 +1,8 @@
-import { conventionTex, conventionText } from "./convention.ts";
+import { conventionTex, conventionText, noteHtml } from "./convention.ts";
+import { doublesNote, forgetDoubles } from "./doubles.ts";
 import { plainText } from "./plain.ts";
 import { conventionsOf, isPlainNumber, kindOf, partsOf, show } from "./show.ts";
-import { display } from "./tex.ts";
+import { display, small, texWords } from "./tex.ts";
 
 /** Representations of one thing by MIME type: strings, or unpacked JSON under types that end in +json. */
 export interface MimeBundle {
@@ -29,19 +30,28 @@ export function bundle(value: unknown): MimeBundle | undefined {
 
 function whole(value: unknown): MimeBundle {
   const rows = conventionsOf(value);
+  forgetDoubles();
   const text = show.text(value);
+  const doubles = doublesNote();
+  const under = doubles === undefined ? [] : [doubles];
   const out: Record<string, unknown> & { "text/plain": string } = {
-    "text/plain": [text, ...conventionText(rows)].join("\n"),
+    "text/plain": [withNote(text, doubles), ...conventionText(rows)].join("\n"),
   };
   const kind = kindOf(value);
   const svg = kind?.svg?.(value);
   if (svg !== undefined) out["image/svg+xml"] = svg;
   const html = kind?.html?.(value, show);
-  if (html !== undefined) out["text/html"] = html;
-  const latex = latexOf(value, conventionTex(rows));
+  if (html !== undefined) out["text/html"] = html + noteHtml(under);
+  const latex = latexOf(value, [...under.map((line) => small(texWords(line))), ...conventionTex(rows)]);
   if (latex !== undefined) out["text/latex"] = latex;
   if (kind || isNumber(value) || partsOf(value)) out[VALUE_TYPE] = show.data(value);
   return out;
+}
+
+/** Behind a text of one line, under a longer one. */
+function withNote(text: string, note: string | undefined): string {
+  if (note === undefined) return text;
+  return text.includes("\n") ? `${text}\n${note}` : `${text}   (${note})`;
 }
 
 function latexOf(value: unknown, notes: readonly string[]): string | undefined {

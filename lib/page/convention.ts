@@ -55,8 +55,12 @@ export function conventionProse(keys: readonly ConventionKey[]): string[] {
 
 /** The same as one quiet block of HTML; empty if nothing needs saying. */
 export function conventionHtml(keys: readonly ConventionKey[]): string {
-  const lines = conventionProse(keys).map((line) => `<div>${htmlFormulas(line)}</div>`);
-  return lines.length === 0 ? "" : `<div style="${NOTE}">${lines.join("")}</div>`;
+  return noteHtml(conventionProse(keys).map(htmlFormulas));
+}
+
+/** Lines of HTML in small type below a result; empty if there are none. */
+export function noteHtml(lines: readonly string[]): string {
+  return lines.length === 0 ? "" : `<div style="${NOTE}">${lines.map((line) => `<div>${line}</div>`).join("")}</div>`;
 }
 
 /** No wider than what it stands below, unless that is narrow: it must not push a table from its place. */

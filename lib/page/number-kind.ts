@@ -9,9 +9,10 @@ import { complexDecimal, decimal } from "../number/text.ts";
 import { Complex, type Real } from "../number/values.ts";
 import type { ConventionKey } from "../proof/conventions.ts";
 import { type Decimal, parseDecimal, texDecimal, texDecimalLine } from "./digits.ts";
+import { noteDouble } from "./doubles.ts";
 import type { Cell, Kind, Show } from "./kind.ts";
 import { numberConventions } from "./number-conventions.ts";
-import { array, small, texWords } from "./tex.ts";
+import { array } from "./tex.ts";
 
 type Number = Real | Complex;
 
@@ -20,7 +21,7 @@ export const realKind: Kind<Real> = {
   tex: (x, show) => {
     const digits = () => texDecimal(realDecimal(x));
     const exact = root(x);
-    return exactTex(x, show) ?? (exact ? `${show.tex(exact)} = ${digits()}` : `${digits()}${doubleTex(x)}`);
+    return exactTex(x, show) ?? (exact ? `${show.tex(exact)} = ${digits()}` : digits());
   },
   cell: (x, show) => exactCell(x, show) ?? { kind: "number", re: realDecimal(x) },
   conventions,
@@ -29,20 +30,15 @@ export const realKind: Kind<Real> = {
 
 export const complexKind: Kind<Complex> = {
   text: textOf,
-  tex: (z, show) => exactTex(z, show) ?? `${complexTex(z)}${doubleTex(z)}`,
+  tex: (z, show) => exactTex(z, show) ?? complexTex(z),
   cell: (z, show) => exactCell(z, show) ?? complexCell(z),
   conventions,
   data: (z) => ({ ...valueData(z) }),
 };
 
-const DOUBLE = "from a double that is assumed right to half a unit of its last place";
-
 function textOf(x: Number): string {
-  return x.standing === "double" ? `${x}   (${DOUBLE})` : String(x);
-}
-
-function doubleTex(x: Number): string {
-  return x.standing === "double" ? `\\quad ${small(texWords(`(${DOUBLE})`))}` : "";
+  noteDouble(x);
+  return String(x);
 }
 
 function digitsOf(x: Number): number {
@@ -69,6 +65,7 @@ function root(x: Real): Quadratic | undefined {
 
 /** A real number as its text has it, also where that is the text of a measured input; else from its digits. */
 function realDecimal(x: Real): Decimal {
+  noteDouble(x);
   return parseDecimal(String(x)) ?? read(decimal(x, digitsOf(x)));
 }
 
@@ -80,6 +77,7 @@ function read(parts: DecimalParts): Decimal {
 }
 
 function complexCell(z: Complex): Cell {
+  noteDouble(z);
   const { re, im, axis, radius } = complexDecimal(z, digitsOf(z));
   if (radius) return { kind: "formula", text: String(z), tex: complexTex(z) };
   return {

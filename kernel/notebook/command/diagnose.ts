@@ -6,7 +6,7 @@ import { historyFolder } from "../../service/history/file.ts";
 import { packageVersion } from "../../service/info.ts";
 import { thisMachine } from "../../service/install/folders.ts";
 import { kernelEntry } from "../../service/install/kernelspec.ts";
-import { type SearchedFolder, survey } from "../../service/install/survey.ts";
+import { type FoundKernel, type SearchedFolder, survey } from "../../service/install/survey.ts";
 import { type Execution, KernelClient } from "../client.ts";
 import { type Console, EXIT, readArguments } from "./console.ts";
 import { USAGE } from "./usage.ts";
@@ -51,16 +51,20 @@ async function historyFact(): Promise<string> {
 function folderFact({ data, exists, kernels }: SearchedFolder): Fact {
   if (!exists) return [data, "no such folder"];
   if (kernels.length === 0) return [data, "there, without halfperiod"];
-  return [
-    data,
-    kernels.map(({ folder, missing }) => `${folder}${missing ? `, broken: no ${missing}` : ""}`).join("; "),
-  ];
+  return [data, kernels.map(kernelWords).join("; ")];
+}
+
+function kernelWords({ folder, missing, hiddenBy }: FoundKernel): string {
+  return `${folder}${missing ? `, broken: no ${missing}` : ""}${hiddenBy ? `, hidden by ${hiddenBy}` : ""}`;
 }
 
 function installAdvice(folders: readonly SearchedFolder[]): string[] {
   const found = folders.flatMap(({ kernels }) => kernels);
   if (found.length === 0) return ["halfperiod install: no front end of this user knows the kernel yet"];
-  return found.flatMap(({ folder, missing }) => (missing ? [`halfperiod install: repairs ${folder}`] : []));
+  const repairs = found.flatMap(({ folder, repair, missing }) => (missing ? [`${repair}: repairs ${folder}`] : []));
+  if (found.some(({ hiddenBy }) => hiddenBy === undefined)) return repairs;
+  const foreign = found.map(({ folder, hiddenBy }) => `front ends find ${hiddenBy} before ${folder}`);
+  return [...repairs, `${foreign.join("; ")}: halfperiod install --name NAME gives ours another name`];
 }
 
 /** Starts the real kernel and uses it once, timing each step. */

@@ -31,12 +31,13 @@ export function readOptions(verb: "install" | "remove", args: readonly string[],
   const fault = (given: string, expected = "one of the forms below") =>
     new InstallError({ subject: verb, given, expected, hint: `\n${usage}` });
   const { at, everyone = false, name = KERNEL_NAME, set = [] } = parse(args, fault);
+  if (at === "") throw fault('--at ""', "--at DIR");
   if (at !== undefined && everyone) throw fault("both --at and --everyone", "one of them");
   if (verb === "remove" && set.length > 0) throw fault("--set", "no environment");
   if (!/^[A-Za-z0-9._-]+$/.test(name) || /^\.+$/.test(name)) {
     throw fault(`the name ${JSON.stringify(name)}`, "ASCII letters, digits, and - . _");
   }
-  const data = everyone ? sharedDataFolder(machine) : at === undefined ? userDataFolder(machine) : path.resolve(at);
+  const data = path.resolve(everyone ? sharedDataFolder(machine) : (at ?? userDataFolder(machine)));
   const env = Object.fromEntries(set.map((text) => variable(text, fault)));
   return { target: path.join(data, "kernels", name), everyone, env };
 }

@@ -65,15 +65,15 @@ function swap(fresh: string, target: string, aside: string): void {
  * Throws   InstallError if nothing is there, or nothing of ours, or if the disk refuses.
  */
 export function takeAway(target: string): { readonly left: readonly string[] } {
-  if (!exists(target)) {
-    throw new InstallError({
-      subject: "remove",
-      given: `nothing is installed in ${target}`,
-      expected: "an installed kernel",
-    });
-  }
-  if (lstatSync(target).isSymbolicLink() || !isOurs(target)) throw notOurs(target, "removed");
   try {
+    if (!exists(target) || isEmpty(target)) {
+      throw new InstallError({
+        subject: "remove",
+        given: `nothing is installed in ${target}`,
+        expected: "an installed kernel",
+      });
+    }
+    if (lstatSync(target).isSymbolicLink() || !isOurs(target)) throw notOurs(target, "removed");
     const left = readdirSync(target).filter((name) => !kernelspecNames.includes(name));
     // kernel.json last: without it a removal that was cut off could not be taken up again
     for (const name of [...kernelspecNames].reverse()) {
@@ -89,12 +89,23 @@ export function takeAway(target: string): { readonly left: readonly string[] } {
 
 function isReplaceable(target: string): boolean {
   if (lstatSync(target).isSymbolicLink()) return false;
+  if (isEmpty(target)) return true;
   const added = () => readdirSync(target).some((name) => !kernelspecNames.includes(name));
   return isOurs(target) && !added();
 }
 
+function isEmpty(target: string): boolean {
+  return lstatSync(target).isDirectory() && readdirSync(target).length === 0;
+}
+
+// A file where a folder should be on the way means the same: nothing is there.
 function exists(file: string): boolean {
-  return lstatSync(file, { throwIfNoEntry: false }) !== undefined;
+  try {
+    return lstatSync(file, { throwIfNoEntry: false }) !== undefined;
+  } catch (error) {
+    if ((error as NodeJS.ErrnoException).code === "ENOTDIR") return false;
+    throw error;
+  }
 }
 
 function notOurs(target: string, verb: string): InstallError {

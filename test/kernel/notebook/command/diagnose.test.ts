@@ -39,9 +39,28 @@ it("finds no kernel, then ours, then that its Node is gone; foreign ones do not 
   writeFileSync(path.join(data, "kernels", "other", "kernel.json"), '{"argv":["/gone"],"metadata":null}');
   expect(survey(machine)[0]?.kernels).toEqual([]);
   quietly(() => install([]));
-  expect(survey(machine)[0]?.kernels).toEqual([{ folder: path.dirname(kernelJson), missing: undefined }]);
+  const found = {
+    folder: path.dirname(kernelJson),
+    repair: "halfperiod install",
+    missing: undefined,
+    hiddenBy: undefined,
+  };
+  expect(survey(machine)[0]?.kernels).toEqual([found]);
   writeFileSync(kernelJson, readFileSync(kernelJson, "utf8").replace(process.execPath, "/gone/node"));
   expect(survey(machine)[0]?.kernels[0]?.missing).toBe("/gone/node");
+});
+
+it("tells what repairs each, and what front ends find first — oracle: the folders and their order", () => {
+  const first = path.join(data, "first place");
+  const foreign = path.join(first, "kernels", "HalfPeriod");
+  mkdirSync(foreign, { recursive: true });
+  writeFileSync(path.join(foreign, "kernel.json"), '{"argv":["x"],"display_name":"another","language":"y"}');
+  quietly(() => install(["--at", first, "--name", "second"]));
+  const [before, own] = survey({ ...machine, env: { ...machine.env, JUPYTER_PATH: first } });
+  expect(before?.kernels).toMatchObject([
+    { repair: `halfperiod install --at ${JSON.stringify(first)} --name second`, hiddenBy: undefined },
+  ]);
+  expect(own?.kernels).toMatchObject([{ repair: "halfperiod install", hiddenBy: foreign }]);
 });
 
 it("tries the real kernel and says how to repair the kernelspec — oracle: the broken path", async () => {

@@ -119,7 +119,7 @@ it("takes another name, and refuses one that hosts refuse — oracle: the rule f
   for (const name of ["a/b", "..", "", "é", "a b"]) expect(install(["--at", data, "--name", name])).toBe(1);
 });
 
-it.each([[["--what"]], [["x"]], [["--at"]], [["--set", "=1"]], [["--at", "d", "--everyone"]]])(
+it.each([[["--what"]], [["x"]], [["--at"]], [["--at", ""]], [["--set", "=1"]], [["--at", "d", "--everyone"]]])(
   "words %j: status 1 and the usage — oracle: the fault put in",
   (args) => {
     expect(install(args)).toBe(1);
@@ -133,6 +133,37 @@ it("a place that cannot be written to is one clear line — oracle: a file in th
   writeFileSync(file, "");
   expect(install(["--at", file])).toBe(1);
   expect(printed).toMatch(/cannot be written \((ENOTDIR|EEXIST)\); expected a folder that you may write to/);
+});
+
+it("a file in the way of what is to be removed: nothing is installed — oracle: the file stays", () => {
+  const file = path.join(fresh(), "file");
+  writeFileSync(file, "mine");
+  expect(remove(["--at", file])).toBe(1);
+  expect(printed).toContain("nothing is installed in");
+  expect(readFileSync(file, "utf8")).toBe("mine");
+});
+
+it("an empty folder of that name is taken, and is nothing to remove — oracle: the folder", () => {
+  const data = fresh();
+  mkdirSync(folder(data), { recursive: true });
+  expect(remove(["--at", data])).toBe(1);
+  expect(printed).toContain("nothing is installed in");
+  expect(install(["--at", data])).toBe(0);
+  expect(spec(data).language).toBe("typescript");
+});
+
+it("a relative place is told whole — oracle: the working folder", () => {
+  const place = path.relative(process.cwd(), fresh());
+  for (const tell of [() => install(["--at", place]), () => remove(["--at", place])]) {
+    printed = "";
+    expect(tell()).toBe(0);
+    expect(printed).toContain(path.resolve(place, "kernels"));
+  }
+  vi.stubEnv("JUPYTER_DATA_DIR", place);
+  printed = "";
+  expect(install([])).toBe(0);
+  vi.unstubAllEnvs();
+  expect(printed).toContain(path.resolve(place, "kernels"));
 });
 
 it.each([

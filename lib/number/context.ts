@@ -13,6 +13,18 @@ const MARGIN = 32;
 let settled: Context = { digits: 20, bits: 67 + MARGIN };
 let passing: Context | undefined;
 let fixed = false;
+// The bits of the context that holds now, in a variable of its own: every operation asks for them.
+let bits = settled.bits;
+
+function settle(context: Context): void {
+  settled = context;
+  bits = (passing ?? settled).bits;
+}
+
+function pass(context: Context | undefined): void {
+  passing = context;
+  bits = (passing ?? settled).bits;
+}
 
 /** How many proved digits a display has. */
 export function provedDigits(): number;
@@ -24,13 +36,13 @@ export function provedDigits(n: number): number;
 export function provedDigits(n?: number): number {
   if (n === undefined) return (passing ?? settled).digits;
   const digits = checkedDigits("provedDigits", n);
-  if (!fixed) settled = settledTo(digits);
+  if (!fixed) settle(settledTo(digits));
   return n;
 }
 
 /** Asks for n digits whatever `provedDigits` is told later: a reader's wish that goes before the author's. */
 export function fixDigits(n: number): void {
-  settled = settledTo(checkedDigits("fixDigits", n));
+  settle(settledTo(checkedDigits("fixDigits", n)));
   fixed = true;
 }
 
@@ -58,7 +70,7 @@ export function bitsOf(digits: number): number {
 
 /** Bits that new values are computed with: the proved digits and a margin, or what a running `atDigits` works with. */
 export function workingPrecision(): number {
-  return (passing ?? settled).bits;
+  return bits;
 }
 
 /** The most bits that are tried for n digits of one value. */
@@ -73,13 +85,13 @@ export function mostBits(digits: number): number {
 export function within<T>(context: { readonly digits: number; readonly bits: number }, f: () => T): T {
   const outer = passing;
   const mine: Context = context;
-  passing = mine;
+  pass(mine);
   queueMicrotask(() => {
-    if (passing === mine) passing = undefined;
+    if (passing === mine) pass(undefined);
   });
   try {
     return f();
   } finally {
-    passing = outer;
+    pass(outer);
   }
 }

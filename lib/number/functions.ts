@@ -10,44 +10,12 @@ import {
   ROOT_ACROSS,
   SQRT_ACROSS,
 } from "./continued.ts";
-import {
-  ACOS,
-  ACOSH,
-  AGM,
-  ASIN,
-  ASINH,
-  ATAN,
-  ATAN2,
-  ATANH,
-  COS,
-  COSH,
-  EXP,
-  GAMMA,
-  LN,
-  POW,
-  ROOT,
-  SIN,
-  SINH,
-  TAN,
-  TANH,
-} from "./elementary.ts";
+import { AGM, ATAN2, GAMMA, POW, ROOT } from "./elementary.ts";
 import { power as exactPower, rationalRootOf, root } from "./exactness.ts";
 import { ARG, SQRT } from "./operations.ts";
-import { accuracy, type Exact, mayPass, type Operation } from "./origin.ts";
+import { accuracy, type Exact, mayPass } from "./origin.ts";
 import { Rational } from "./rational.ts";
 import { apply, birthOf, Complex, type ComplexNumeric, type Numeric, Real, scalar } from "./values.ts";
-
-function one(operation: Operation, x: ComplexNumeric, exact?: (x: Rational) => Rational | undefined): Real | Complex {
-  const value = scalar(x, operation.name);
-  const known = exact && value.exact instanceof Rational ? exact(value.exact) : undefined;
-  const result = apply(operation, [value], known);
-  return known && value instanceof Complex && result instanceof Real ? Complex.from(result) : result;
-}
-
-const at =
-  (point: number, value: number) =>
-  (x: Rational): Rational | undefined =>
-    x.equals(point) ? Rational.of(value) : undefined;
 
 /**
  * The square root >= 0 of a real number >= 0; the principal root, real part >= 0, of a complex one.
@@ -70,7 +38,7 @@ export function sqrt(x: ComplexNumeric, options: Continued = {}): Real | Complex
 export function exp(x: Numeric): Real;
 export function exp(x: ComplexNumeric): Real | Complex;
 export function exp(x: ComplexNumeric): Real | Complex {
-  return one(EXP, x, at(0, 1));
+  return scalar(x, "exp").exp();
 }
 
 /**
@@ -84,70 +52,70 @@ export function ln(x: ComplexNumeric, options?: Continued): Real | Complex;
 export function ln(x: ComplexNumeric, options: Continued = {}): Real | Complex {
   const value = scalar(x, "ln");
   const side = value instanceof Complex ? continuedFrom(value, options) : undefined;
-  return side ? apply(LN_ACROSS, [value, side]) : one(LN, value, at(1, 0));
+  return side ? apply(LN_ACROSS, [value, side]) : value.ln();
 }
 
 /** sin x, x in radians. */
 export function sin(x: Numeric): Real;
 export function sin(x: ComplexNumeric): Real | Complex;
 export function sin(x: ComplexNumeric): Real | Complex {
-  return one(SIN, x, at(0, 0));
+  return scalar(x, "sin").sin();
 }
 
 /** cos x, x in radians. */
 export function cos(x: Numeric): Real;
 export function cos(x: ComplexNumeric): Real | Complex;
 export function cos(x: ComplexNumeric): Real | Complex {
-  return one(COS, x, at(0, 1));
+  return scalar(x, "cos").cos();
 }
 
 /** tan x, x in radians. Throws PoleError where the cosine cannot be told from 0. */
 export function tan(x: Numeric): Real;
 export function tan(x: ComplexNumeric): Real | Complex;
 export function tan(x: ComplexNumeric): Real | Complex {
-  return one(TAN, x, at(0, 0));
+  return scalar(x, "tan").tan();
 }
 
 /** Hyperbolic sine, entire; exactly real on a real argument. */
 export function sinh(x: Numeric): Real;
 export function sinh(x: ComplexNumeric): Real | Complex;
 export function sinh(x: ComplexNumeric): Real | Complex {
-  return one(SINH, x, at(0, 0));
+  return scalar(x, "sinh").sinh();
 }
 
 /** Hyperbolic cosine, entire; exactly real on a real argument. */
 export function cosh(x: Numeric): Real;
 export function cosh(x: ComplexNumeric): Real | Complex;
 export function cosh(x: ComplexNumeric): Real | Complex {
-  return one(COSH, x, at(0, 1));
+  return scalar(x, "cosh").cosh();
 }
 
 /** Hyperbolic tangent. Throws PoleError where the enclosure holds a pole iπ/2 + kiπ. */
 export function tanh(x: Numeric): Real;
 export function tanh(x: ComplexNumeric): Real | Complex;
 export function tanh(x: ComplexNumeric): Real | Complex {
-  return one(TANH, x, at(0, 0));
+  return scalar(x, "tanh").tanh();
 }
 
 /** asin x in [−π/2, π/2] for a real x of [−1, 1]; of a complex one with cuts along the real axis beyond ±1. */
 export function asin(x: Numeric): Real;
 export function asin(x: ComplexNumeric): Real | Complex;
 export function asin(x: ComplexNumeric): Real | Complex {
-  return one(ASIN, x, at(0, 0));
+  return scalar(x, "asin").asin();
 }
 
 /** acos x in [0, π] for a real x of [−1, 1]; of a complex one with cuts along the real axis beyond ±1. */
 export function acos(x: Numeric): Real;
 export function acos(x: ComplexNumeric): Real | Complex;
 export function acos(x: ComplexNumeric): Real | Complex {
-  return one(ACOS, x, at(1, 0));
+  return scalar(x, "acos").acos();
 }
 
 /** atan x in (−π/2, π/2) for a real x; of a complex one with cuts along the imaginary axis beyond ±i. */
 export function atan(x: Numeric): Real;
 export function atan(x: ComplexNumeric): Real | Complex;
 export function atan(x: ComplexNumeric): Real | Complex {
-  return one(ATAN, x, at(0, 0));
+  return scalar(x, "atan").atan();
 }
 
 /**
@@ -157,7 +125,7 @@ export function atan(x: ComplexNumeric): Real | Complex {
 export function asinh(x: Numeric): Real;
 export function asinh(x: ComplexNumeric): Real | Complex;
 export function asinh(x: ComplexNumeric): Real | Complex {
-  return one(ASINH, x, at(0, 0));
+  return scalar(x, "asinh").asinh();
 }
 
 /**
@@ -168,7 +136,7 @@ export function asinh(x: ComplexNumeric): Real | Complex {
 export function acosh(x: Numeric): Real;
 export function acosh(x: ComplexNumeric): Real | Complex;
 export function acosh(x: ComplexNumeric): Real | Complex {
-  return one(ACOSH, x, at(1, 0));
+  return scalar(x, "acosh").acosh();
 }
 
 /**
@@ -178,7 +146,7 @@ export function acosh(x: ComplexNumeric): Real | Complex {
 export function atanh(x: Numeric): Real;
 export function atanh(x: ComplexNumeric): Real | Complex;
 export function atanh(x: ComplexNumeric): Real | Complex {
-  return one(ATANH, x, at(0, 0));
+  return scalar(x, "atanh").atanh();
 }
 
 /** The angle of the point (x, y), in (−π, π]; of a negative x with exact y = 0 it is π. Throws BranchError where the enclosures meet the cut. */

@@ -12,6 +12,7 @@ import * as disc from "./disc.ts";
 import { combine, exactPart, type Field, isRealExact, power, root } from "./exactness.ts";
 import { firstEvaluation } from "./first.ts";
 import { type ForeignComplex, type ForeignReal, leafOf } from "./leaf.ts";
+import { Elementary, type ExactAt } from "./methods.ts";
 import { ABS, ARG, CONJ, DIV, IM, JOIN, MINUS, NEG, PLUS, POWER, RE, SQRT, TIMES } from "./operations.ts";
 import {
   asDisc,
@@ -29,7 +30,7 @@ import {
 import { Quadratic } from "./quadratic.ts";
 import { primitive, Rational } from "./rational.ts";
 import { complexText, realText } from "./text.ts";
-import { Value } from "./value.ts";
+import { bornOf, DEFINED, type Value } from "./value.ts";
 
 /** Everything that stands for a real number. */
 export type Numeric = Real | Rational | ForeignReal;
@@ -37,11 +38,18 @@ export type Numeric = Real | Rational | ForeignReal;
 export type ComplexNumeric = Numeric | Complex | Quadratic | ForeignComplex;
 
 /** A real number: exact, or an enclosure that more digits can be asked of. */
-export class Real extends Value {
-  protected readonly kept: Ball;
+export class Real extends Elementary<Real> {
+  declare readonly kept: Ball;
 
-  constructor(enclosure: Ball, birth: Birth, origin: Origin | undefined = birth.origin) {
-    super(birth, origin);
+  constructor(
+    enclosure: Ball,
+    birth: Birth,
+    made: Origin | Operation | undefined = birth.origin,
+    depth = made === undefined ? 0 : (made as Origin).depth,
+    left?: Value,
+    right?: Value,
+  ) {
+    super(birth, made, depth, left, right);
     this.kept = enclosure;
   }
 
@@ -65,7 +73,7 @@ export class Real extends Value {
   plus(other: Numeric): Real;
   plus(other: ComplexNumeric): Real | Complex;
   plus(other: ComplexNumeric): Real | Complex {
-    if (other instanceof Real && inexact(this, other)) {
+    if (joinable(this, other)) {
       return joined(ball.add(this.ball, other.ball, workingPrecision()), PLUS, this, other);
     }
     return arithmetic(PLUS, "plus", this, other);
@@ -74,7 +82,7 @@ export class Real extends Value {
   minus(other: Numeric): Real;
   minus(other: ComplexNumeric): Real | Complex;
   minus(other: ComplexNumeric): Real | Complex {
-    if (other instanceof Real && inexact(this, other)) {
+    if (joinable(this, other)) {
       return joined(ball.sub(this.ball, other.ball, workingPrecision()), MINUS, this, other);
     }
     return arithmetic(MINUS, "minus", this, other);
@@ -83,7 +91,7 @@ export class Real extends Value {
   times(other: Numeric): Real;
   times(other: ComplexNumeric): Real | Complex;
   times(other: ComplexNumeric): Real | Complex {
-    if (other instanceof Real && inexact(this, other)) {
+    if (joinable(this, other)) {
       return joined(ball.mul(this.ball, other.ball, workingPrecision()), TIMES, this, other);
     }
     return arithmetic(TIMES, "times", this, other);
@@ -114,6 +122,10 @@ export class Real extends Value {
   sqrt(): Real {
     const exact = root(this.exact);
     return realOf(apply(SQRT, [this], exact && isRealExact(exact) ? exact : undefined));
+  }
+
+  protected override mapped(operation: Operation, exact: ExactAt): Real {
+    return realOf(apply(operation, [this], this.exact instanceof Rational ? exact(this.exact) : undefined));
   }
 
   /** -1, 0, 1, or undefined if the enclosure, refined as far as a display would be, allows more than one. */
@@ -210,11 +222,11 @@ export class Real extends Value {
 }
 
 /** A complex number: exact, or an enclosure that more digits can be asked of. */
-export class Complex extends Value {
-  readonly disc: Disc;
+export class Complex extends Elementary<Complex> {
+  declare readonly disc: Disc;
 
   constructor(enclosure: Disc, birth: Birth, origin: Origin | undefined = birth.origin) {
-    super(birth, origin);
+    super(birth, origin, origin === undefined ? 0 : origin.depth);
     this.disc = enclosure;
   }
 
@@ -296,6 +308,10 @@ export class Complex extends Value {
   /** The principal root, real part >= 0; the cut (negative real axis) belongs to the upper side. */
   sqrt(): Complex {
     return complexOf(apply(SQRT, [this], root(this.exact)));
+  }
+
+  protected override mapped(operation: Operation, exact: ExactAt): Complex {
+    return complexOf(apply(operation, [this], this.exact instanceof Rational ? exact(this.exact) : undefined));
   }
 
   /** As for Real. */
@@ -417,17 +433,16 @@ function arithmetic(operation: Operation, field: Field, x: Real | Complex, other
 
 // What follows is for sums and products of real numbers, of which a loop makes many: no detour, few objects.
 
-function inexact(x: Real, y: Real): boolean {
-  return x.exact === undefined || y.exact === undefined;
+function joinable(x: Real, y: ComplexNumeric): y is Real {
+  // Two defined values are told by their fields, which costs less than asking for their class.
+  if (x.born === DEFINED && (y as Real)?.born === DEFINED && (y as Real).kept !== undefined) return true;
+  return y instanceof Real && (x.exact === undefined || y.exact === undefined);
 }
 
 function joined(enclosure: Ball, operation: Operation, x: Real, y: Real): Real {
-  const below = x.origin === undefined ? 0 : x.origin.depth;
-  const beside = y.origin === undefined ? 0 : y.origin.depth;
-  const depth = Math.max(below, beside) + 1;
-  const standing = both(x.standing, y.standing);
-  if (depth > DEEPEST) return new Real(enclosure, DROPPED[standing]);
-  return new Real(enclosure, BIRTHS[standing], { operation, operands: [x, y], depth });
+  const depth = Math.max(x.depth, y.depth) + 1;
+  if (depth > DEEPEST) return new Real(enclosure, DROPPED[both(x.standing, y.standing)]);
+  return new Real(enclosure, bornOf(x, y), operation, depth, x, y);
 }
 
 function checkedExponent(n: number): number {

@@ -1,5 +1,6 @@
 // Constants in fixed point, kept at the highest precision met. A cache is one object that is assigned when complete.
 import { shift } from "./bits.ts";
+import { boundedCache } from "./cache.ts";
 import { sqrtNear } from "./isqrt.ts";
 
 interface Kept {
@@ -17,6 +18,18 @@ export function keptConstant(compute: (prec: number) => bigint): (prec: number) 
     }
     return kept.value >> shift(kept.prec - prec);
   };
+}
+
+/** The same for several constants that share their series; the lists for a few precisions are kept, since cutting them costs as much as a product. */
+export function keptConstants(compute: (prec: number) => readonly bigint[]): (prec: number) => readonly bigint[] {
+  let kept: { readonly prec: number; readonly values: readonly bigint[] } = { prec: -1, values: [] };
+  return boundedCache(8, (prec) => {
+    if (kept.prec < prec) {
+      const enough = prec + 64 + (prec >> 4);
+      kept = { prec: enough, values: compute(enough) };
+    }
+    return kept.values.map((value) => value >> shift(kept.prec - prec));
+  });
 }
 
 /** π·2^prec within 2 units. */
@@ -67,26 +80,26 @@ const LN2: readonly (readonly [bigint, bigint])[] = [
 /** Σ c·artanh(1/x)·2^prec over pairs [c, x], error under one unit. */
 export function machin(prec: number, terms: readonly (readonly [bigint, bigint])[]): bigint {
   let sum = 0n;
-  for (const [c, x] of terms) sum += c * artanhInverse(x, prec + 24);
+  for (const [c, x] of terms) sum += c * oddInverse(x, prec + 24, 1n);
   return sum >> 24n;
 }
 
 /**
- * artanh(1/x)·2^prec = Σ 1/((2k+1) x^(2k+1)), x >= 2: error under 2 units.
+ * Σ s^k/((2k+1) x^(2k+1))·2^prec for x >= 2: artanh(1/x) for s = 1, atan(1/x) for s = −1; error under 2 units.
  * The tail after N terms is under x^(−2N)/3, with N = prec/(2 log2 x) + 1; one division by binary splitting.
  */
-function artanhInverse(x: bigint, prec: number): bigint {
+export function oddInverse(x: bigint, prec: number, s: 1n | -1n): bigint {
   const perTerm = 2 * (x.toString(2).length - 1);
-  const { q, t } = artanhSplit(x * x, 0, Math.floor(prec / perTerm) + 2);
+  const { q, t } = oddSplit(s * x * x, 0, Math.floor(prec / perTerm) + 2);
   return (t << shift(prec)) / (q * x);
 }
 
 // Σ_{a<=k<b} 1/((2k+1) y^(k−a)) = t/q.
-function artanhSplit(y: bigint, a: number, b: number): { q: bigint; t: bigint; power: bigint } {
+function oddSplit(y: bigint, a: number, b: number): { q: bigint; t: bigint; power: bigint } {
   if (b - a === 1) return { q: BigInt(2 * a + 1), t: 1n, power: y };
   const middle = (a + b) >> 1;
-  const left = artanhSplit(y, a, middle);
-  const right = artanhSplit(y, middle, b);
+  const left = oddSplit(y, a, middle);
+  const right = oddSplit(y, middle, b);
   // t/q = left + right/y^(middle−a)
   return {
     q: left.q * right.q * left.power,

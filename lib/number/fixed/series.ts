@@ -75,7 +75,7 @@ function made(work: number, factor: Factor): readonly bigint[] {
  *          the divisions under 1.2: under 16 units a row.
  */
 function columnSum(z: bigint, work: number, r: number, count: number, factor: Factor): bigint {
-  const m = Math.max(2, Math.round(1.3 * Math.sqrt(count)));
+  const m = Math.max(2, Math.round(0.85 * Math.sqrt(count)));
   const rows = Math.ceil(count / m);
   const powers = powersOf(z, m, work);
   const loss = rowLosses(rows, m, r, work, factor);

@@ -2,6 +2,7 @@
 import { bitLength, shift } from "./bits.ts";
 import { boundedCache } from "./cache.ts";
 import { sqrtNear } from "./isqrt.ts";
+import { byAngles } from "./primes.ts";
 import { COS_FACTOR, factorialSum, SIN_FACTOR } from "./series.ts";
 
 export interface SinCosFixed {
@@ -10,25 +11,49 @@ export interface SinCosFixed {
 }
 
 /**
- * sin and cos of x/2^prec, times 2^prec, for 0 <= x < 2^prec; error of each under 1 unit.
+ * sin and cos of x/2^prec, times 2^prec, for 0 <= x < 2^prec; error of each under 2 units: one of the last cut, and less than one of the two routines.
  *
- * Method   up to 40,000 bits: leading bits by tables, six at a time, the rest by series. Beyond: k halvings and doublings.
+ * Method   short: leading bits by tables, six at a time, the rest by series. Long: reduction by angles of Gaussian primes, the series of the sine, a root.
  */
 export function sinCosFixed(x: bigint, prec: number): SinCosFixed {
-  return prec <= TABLES_UP_TO ? byTables(x, prec) : byDoublings(x, prec);
+  return prec < PRIMES_FROM ? byTables(x, prec) : reducedByAngles(x, prec);
 }
 
-const TABLES_UP_TO = 40_000;
+/** From here on short integers cost less than tables (measured). */
+const PRIMES_FROM = 800;
+
+/** Levels of the reduction, as for exp. */
+function angleLevels(prec: number): number {
+  return prec < 1200 ? 1 : prec < 3000 ? 2 : prec < 12_000 ? 3 : prec < 25_000 ? 4 : 5;
+}
+
+/**
+ * sin and cos of the rest, turned by w²/|w|² and a quadrant.
+ * Error    the rest errs by under 2^16 units and moves both by no more; the series and the root add under 20 + 16√N < 2^14 for N < 2^18; a turn
+ *          multiplies the larger error by at most √2: under 2^17 in all, and 20 guard bits hold it.
+ */
+function reducedByAngles(x: bigint, prec: number): SinCosFixed {
+  const work = (prec + 20 + 63) & ~63;
+  const { rest, quadrant, re, im, norm } = byAngles(x << shift(work - prec), work, angleLevels(prec));
+  const { sin: s, cos: c } = series(rest, work, work - bitLength(rest, work));
+  const down = shift(work - prec);
+  const sin = ((s * re + c * im) >> down) / norm;
+  const cos = ((c * re - s * im) >> down) / norm;
+  if (quadrant === 0) return { sin, cos };
+  if (quadrant === 1) return { sin: cos, cos: -sin };
+  return quadrant === 2 ? { sin: -sin, cos: -cos } : { sin: -cos, cos: sin };
+}
+
 const STEP = 6;
 
 function levelsFor(prec: number): number {
-  return prec < 400 ? 2 : prec < 1500 ? 3 : prec < 8000 ? 4 : 7;
+  return prec < 400 ? 2 : 3;
 }
 
 /** From here on the root costs less than a second series (measured). */
 const ROOT_FROM = 900;
 
-/** sin t and cos t for 0 <= t < 2^(work−r), r >= 2: error under 20 + 16√N units each. */
+/** sin t and cos t for |t| < 2^(work−r), r >= 2: error under 20 + 16√N units each. */
 function series(t: bigint, work: number, r: number): SinCosFixed {
   const w = shift(work);
   const z = -((t * t) >> w);
@@ -39,8 +64,8 @@ function series(t: bigint, work: number, r: number): SinCosFixed {
 }
 
 /**
- * Error    a table pair errs by under 256 units (see `entry`); a rotation by a pair adds the errors of both and 2 units: with 7 levels and the series
- *          under 7·260 + 500 units, which 12 guard bits hold.
+ * Error    a table pair errs by under 256 units (see `entry`); a rotation by a pair adds the errors of both and 2 units: with 3 levels and the series
+ *          under 3·260 + 500 units, which 12 guard bits hold.
  */
 function byTables(x: bigint, prec: number): SinCosFixed {
   const work = (prec + 12 + 63) & ~63;
@@ -95,24 +120,4 @@ function ofPower(k: number, work: number): SinCosFixed {
     term = (term >> s) / shift(n + 1);
   }
   return { sin: odd >> 16n, cos: even >> 16n };
-}
-
-/**
- * t = x/2^k; then k doublings s' = 2sc, c' = 1 − 2s².
- * Error    |δs'| <= 2(|δs| + |δc|) + 1 and |δc'| <= 4|δs| + 2, so a doubling multiplies the larger error by at most 4; 2k + log2(prec) + 14
- *          guard bits hold 4^k·(40 + 16√N).
- */
-function byDoublings(x: bigint, prec: number): SinCosFixed {
-  const k = Math.max(6, Math.round(0.75 * Math.cbrt(prec)));
-  const guard = 2 * k + bitLength(BigInt(prec)) + 14;
-  const work = prec + guard;
-  const unit = 1n << shift(work);
-  let { sin, cos } = series((x << shift(guard)) >> shift(k), work, k);
-  const half = shift(work - 1);
-  for (let j = 0; j < k; j++) {
-    const product = sin * cos;
-    cos = unit - ((sin * sin) >> half);
-    sin = product >> half;
-  }
-  return { sin: sin >> shift(guard), cos: cos >> shift(guard) };
 }

@@ -4,6 +4,7 @@ import { Fraction } from "fraction.js";
 import { afterEach, describe, expect, it } from "vitest";
 import { provedDigits, workingPrecision } from "../../../lib/number/context.ts";
 import { complex, enclose, exact, rational, real } from "../../../lib/number/convert.ts";
+import * as functions from "../../../lib/number/functions.ts";
 import { agm, atDigits, cos, exp, gamma, ln, pow, sin, sqrt } from "../../../lib/number/functions.ts";
 import { operate, operatePower } from "../../../lib/number/operate.ts";
 import { DEEPEST } from "../../../lib/number/origin.ts";
@@ -235,5 +236,50 @@ describe("operators on scalars", () => {
     expect(π.div(agm(1, sqrt(2))).toString()).toBe("2.6220575542921198104...");
     expect(exp(i.times(π)).overlaps(-1)).toBe(true);
     expect(ln(exp(3)).contains(3)).toBe(true);
+  });
+});
+
+describe("functions as methods", () => {
+  const names = [
+    "exp",
+    "ln",
+    "sin",
+    "cos",
+    "tan",
+    "asin",
+    "acos",
+    "atan",
+    "sinh",
+    "cosh",
+    "tanh",
+    "asinh",
+    "atanh",
+  ] as const;
+
+  it.each(names)("x.%s() is the function of x, real and complex — oracle: the same construction", (name) => {
+    for (const x of [sqrt("1/3"), complex(sqrt("1/3"), "1/7")]) {
+      const y = x[name]();
+      expect(y.equals(functions[name](x))).toBe(true);
+      expect(y.origin?.operation.name).toBe(name);
+    }
+  });
+
+  it("acosh begins at 1; exact values stay exact", () => {
+    expect(real(2).acosh().toString()).toBe(functions.acosh(2).toString());
+    expect(real(0).cos().exact?.equals(1)).toBe(true);
+    expect(() => real("1/2").acosh()).toThrow(DomainError);
+  });
+});
+
+describe("the record of a sum or product", () => {
+  it("is made when it is read, once, with its operands", () => {
+    const x = sqrt(2);
+    const y = sqrt(3);
+    const z = x.plus(y).times(x);
+    expect(z.origin).toBe(z.origin);
+    expect(z.origin?.operation.name).toBe("times");
+    expect(z.origin?.depth).toBe(z.depth);
+    expect(z.depth).toBe(3);
+    expect(z.origin?.operands[1]).toBe(x);
   });
 });

@@ -4,7 +4,18 @@ import * as ball from "./ball.ts";
 import * as disc from "./disc.ts";
 import { exactOrder, oneField, sameExact } from "./exactness.ts";
 import { LADDER } from "./ladder.ts";
-import { asBall, asDisc, type Enclosure, evaluate, isDisc, isNode, mayPass, type Node, refinable } from "./origin.ts";
+import {
+  asBall,
+  asDisc,
+  type Enclosure,
+  evaluate,
+  isDisc,
+  isNode,
+  mayPass,
+  type Node,
+  refinable,
+  vanishes,
+} from "./origin.ts";
 import { plainParts, withRadius } from "./print.ts";
 import { Quadratic } from "./quadratic.ts";
 import { Rational } from "./rational.ts";
@@ -18,6 +29,7 @@ export function compareNodes(x: Node, y: Node | undefined): -1 | 0 | 1 | undefin
   const first = ball.compare(asBall(x.enclosure), y ? asBall(y.enclosure) : zero);
   if (first !== undefined && first !== 0) return first;
   if (!refinable(x) && !(y && refinable(y))) return first;
+  if (vanishes(x, y)) return 0;
   return climb((prec) => {
     const c = ball.compare(asBall(evaluate(x, prec)), y ? asBall(evaluate(y, prec)) : zero);
     return c === 0 ? undefined : c;
@@ -45,6 +57,8 @@ export function equalNodes(x: Node, y: Node): boolean {
   const apart = (a: Enclosure, b: Enclosure): true | undefined => (overlap(a, b) ? undefined : true);
   if (apart(x.enclosure, y.enclosure)) return false;
   if (x.enclosure.rad === 0 && y.enclosure.rad === 0) return true;
+  const same = vanishes(x, y);
+  if (same !== undefined) return same;
   const different =
     refinable(x) || refinable(y) ? climb((prec) => apart(evaluate(x, prec), evaluate(y, prec))) : undefined;
   if (different) return false;
@@ -83,6 +97,7 @@ export function undecided(x: Node, y: Node, relation: string): UndecidedError {
 }
 
 function shown(x: Node): string {
+  if (x.exact) return `${x.exact}`;
   const e = x.enclosure;
   if (!isDisc(e)) return plainParts(withRadius(e));
   return `(${plainParts(withRadius(ball.midpoint(disc.real(e))))} + ${plainParts(withRadius(disc.imag(e)))} i)`;

@@ -4,6 +4,7 @@ import * as disc from "./disc.ts";
 import { binary, DIV, MINUS, NEG, PLUS, SQRT, TIMES, unary, value } from "./operations.ts";
 import { asBall, type Enclosure, isDisc, type Operation } from "./origin.ts";
 import type { Rational } from "./rational.ts";
+import { growthOfRoot } from "./separation.ts";
 
 const plus = (x: Enclosure | number, y: Enclosure | number, prec: number) => value(PLUS, prec, x, y);
 const minus = (x: Enclosure | number, y: Enclosure | number, prec: number) => value(MINUS, prec, x, y);
@@ -96,6 +97,7 @@ export const ATAN2: Operation = {
 };
 export const ROOT: Operation = {
   name: "nthRoot",
+  growth: growthOfRoot,
   evaluate: ([x, n], at, prec) => {
     const z = at(x);
     return isDisc(z) ? disc.nthRoot(z, n as number, prec) : ball.nthRoot(z, n as number, prec);

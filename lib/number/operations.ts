@@ -5,6 +5,16 @@ import * as ball from "./ball.ts";
 import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
 import { asBall, asDisc, type Enclosure, isDisc, type Operation } from "./origin.ts";
+import {
+  type GrowthRule,
+  growthOfJoin,
+  growthOfPower,
+  growthOfProduct,
+  growthOfQuotient,
+  growthOfRoot,
+  growthOfSign,
+  growthOfSum,
+} from "./separation.ts";
 
 type RealFunction = (x: Ball, prec: number) => Ball;
 type ComplexFunction = (x: Disc, prec: number) => Disc;
@@ -54,23 +64,37 @@ function linear(operation: Operation): Operation {
   return { ...operation, differential: (operands, _at, d, prec) => operation.evaluate(operands, d, prec) };
 }
 
-export const PLUS: Operation = linear(binary("plus", ball.add, disc.add));
-export const MINUS: Operation = linear(binary("minus", ball.sub, disc.sub));
-export const TIMES: Operation = binary("times", ball.mul, disc.mul, ([x, y], at, d, prec) =>
-  value(PLUS, prec, value(TIMES, prec, d(x), at(y)), value(TIMES, prec, at(x), d(y))),
+/** The operation on algebraic numbers, with how its results grow. */
+export function algebraic(growth: GrowthRule, operation: Operation): Operation {
+  return { ...operation, growth };
+}
+
+export const PLUS: Operation = algebraic(growthOfSum, linear(binary("plus", ball.add, disc.add)));
+export const MINUS: Operation = algebraic(growthOfSum, linear(binary("minus", ball.sub, disc.sub)));
+export const TIMES: Operation = algebraic(
+  growthOfProduct,
+  binary("times", ball.mul, disc.mul, ([x, y], at, d, prec) =>
+    value(PLUS, prec, value(TIMES, prec, d(x), at(y)), value(TIMES, prec, at(x), d(y))),
+  ),
 );
 // d(x/y) = (dx − (x/y)·dy)/y
-export const DIV: Operation = binary("div", ball.div, disc.div, ([x, y], at, d, prec) => {
-  const quotient = value(DIV, prec, at(x), at(y));
-  return value(DIV, prec, value(MINUS, prec, d(x), value(TIMES, prec, quotient, d(y))), at(y));
-});
-export const NEG: Operation = linear(unary("neg", ball.neg, disc.neg));
+export const DIV: Operation = algebraic(
+  growthOfQuotient,
+  binary("div", ball.div, disc.div, ([x, y], at, d, prec) => {
+    const quotient = value(DIV, prec, at(x), at(y));
+    return value(DIV, prec, value(MINUS, prec, d(x), value(TIMES, prec, quotient, d(y))), at(y));
+  }),
+);
+export const NEG: Operation = algebraic(growthOfSign, linear(unary("neg", ball.neg, disc.neg)));
 export const CONJ: Operation = linear(unary("conj", (x) => x, disc.conj));
-export const SQRT: Operation = unary(
-  "sqrt",
-  ball.sqrt,
-  (x, prec) => disc.sqrt(x, prec),
-  (x, prec) => value(DIV, prec, ball.fromDouble(0.5), value(SQRT, prec, x)),
+export const SQRT: Operation = algebraic(
+  growthOfRoot,
+  unary(
+    "sqrt",
+    ball.sqrt,
+    (x, prec) => disc.sqrt(x, prec),
+    (x, prec) => value(DIV, prec, ball.fromDouble(0.5), value(SQRT, prec, x)),
+  ),
 );
 export const ABS: Operation = {
   name: "abs",
@@ -83,13 +107,17 @@ export const ARG: Operation = shadow("arg", (x, prec) => disc.arg(x, prec));
 export const RE: Operation = linear(shadow("re", disc.real));
 export const IM: Operation = linear(shadow("im", disc.imag));
 /** re + i·im of two real numbers. */
-export const JOIN: Operation = linear({
-  name: "complex",
-  evaluate: ([x, y], at, prec) => disc.fromBalls(asBall(at(x)), asBall(at(y)), prec),
-});
+export const JOIN: Operation = algebraic(
+  growthOfJoin,
+  linear({
+    name: "complex",
+    evaluate: ([x, y], at, prec) => disc.fromBalls(asBall(at(x)), asBall(at(y)), prec),
+  }),
+);
 /** x^n for an integer n, which stands as a plain operand. */
 export const POWER: Operation = {
   name: "pow",
+  growth: growthOfPower,
   evaluate: ([x, n], at, prec) => {
     return powerAt(at(x), n as number, prec);
   },

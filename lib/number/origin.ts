@@ -7,6 +7,7 @@ import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
 import { Quadratic } from "./quadratic.ts";
 import { Rational } from "./rational.ts";
+import { type GrowthRule, separation } from "./separation.ts";
 
 export type Enclosure = Ball | Disc;
 export type Exact = Rational | Quadratic;
@@ -26,6 +27,8 @@ export interface Operation {
    * operation has none that is known here.
    */
   differential?(operands: readonly unknown[], at: At, d: At, prec: number): Enclosure;
+  /** How the conjugates of a result grow from those of the operands; missing where algebraic numbers give others (separation.ts). */
+  readonly growth?: GrowthRule;
   /** Other ways to the same value from the same operands, by another method each; for second opinions. */
   readonly routes?: readonly Operation[];
 }
@@ -144,6 +147,7 @@ export function refineEnclosure(x: Node, prec: number, limit = 4 * prec + 4096):
     if (x.dropped && x.standing === "defined") throw recordDropped(x.enclosure, prec);
     return x.enclosure;
   }
+  if (accuracy(x.enclosure) < 1 && vanishes(x, undefined)) return isDisc(x.enclosure) ? disc.zero : ball.zero;
   let best = x.enclosure;
   let failure: LibraryError | undefined;
   for (let bits = prec + 32; ; bits = Math.min(2 * bits, limit)) {
@@ -165,6 +169,30 @@ export function refineEnclosure(x: Node, prec: number, limit = 4 * prec + 4096):
   if (failure) throw failure;
   if (restsOnDropped(x)) throw recordDropped(best, prec);
   throw tooNear(best, prec, limit);
+}
+
+/** Least sizes of differences beyond these bits are not waited for. */
+const FARTHEST = 16384;
+
+/**
+ * Whether x = y (x = 0 without y), for values built from exact numbers by + − × ÷ and roots: by the least size that a difference other than 0
+ * has. Undefined for other values, and where that size is under 2^−16384.
+ */
+export function vanishes(x: Node, y: Node | undefined): boolean | undefined {
+  const least = separation(x, y, FARTHEST);
+  if (least === undefined) return undefined;
+  const size = Math.max(0, ...[x, ...(y ? [y] : [])].map((node) => disc.magnitude(asDisc(node.enclosure))));
+  for (const spare of [64, 1024, 16384]) {
+    try {
+      const at = evaluator(least + size + spare);
+      const difference = disc.sub(asDisc(at(x)), y ? asDisc(at(y)) : disc.zero, least + size + spare);
+      if (!disc.containsZero(difference)) return false;
+      if (disc.magnitude(difference) <= -least) return true;
+    } catch (error) {
+      if (!mayPass(error)) throw error;
+    }
+  }
+  return undefined;
 }
 
 /** Whether x was built from a value whose record is gone. */

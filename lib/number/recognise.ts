@@ -6,7 +6,7 @@ import * as ball from "./ball.ts";
 import { bitsOf } from "./context.ts";
 import * as disc from "./disc.ts";
 import { absBig } from "./fixed/bits.ts";
-import { asBall, type Enclosure, type Exact, isDisc, refinable, refineEnclosure } from "./origin.ts";
+import { asBall, type Enclosure, type Exact, isDisc, refinable, refineEnclosure, vanishes } from "./origin.ts";
 import { heightOf, quadraticRelation, rootInside, simplestRational } from "./recognise/candidates.ts";
 import { type Complex, type ComplexNumeric, type Real, scalar } from "./values.ts";
 
@@ -24,7 +24,7 @@ export interface Recognition {
   readonly digits: number;
   /** Digits of agreement beyond what chance explains; Infinity if proved. */
   readonly spare: number;
-  /** proved if the value was exact all along, else conjectured with the evidence in words. */
+  /** proved if the value was exact all along or is built from exact numbers by radicals, else conjectured with the evidence in words. */
   readonly standing: Standing;
 }
 
@@ -32,7 +32,7 @@ export interface Recognition {
  * The rational number, or else the number of a quadratic field (Gaussian ones included), that a value agrees with.
  *
  * Domain   real or complex values; `height` >= 1. Defined values are refined until the digits suffice for the height.
- * Error    none proved: the answer is a conjecture. A random number would agree with some candidate with probability at most (number of
+ * Error    proved for values built by radicals alone (separation.ts); for others the answer is a conjecture. A random number would agree with some candidate with probability at most (number of
  *          candidates in reach)·(width of the enclosure); the spare digits are minus its logarithm.
  * Returns  undefined if no candidate of that height has the spare digits.
  * Throws   DomainError for a height below 1.
@@ -58,7 +58,12 @@ export function recognise(x: ComplexNumeric, options: RecogniseOptions = {}): Re
     };
   const enclosure = sharpened(value, height, spare);
   const found = asRational(enclosure, height, spare) ?? asQuadratic(enclosure, height, spare);
-  return remember(found, { argument: value });
+  return remember(found && vanishes(value, scalar(found.value, "recognise")) ? proved(found) : found, { argument: value });
+}
+
+function proved({ value }: Recognition): Recognition {
+  const argument = "built by radicals: a difference that is so small can only be 0";
+  return { value, digits: Infinity, spare: Infinity, standing: { kind: "proved", argument } };
 }
 
 /** An enclosure with the digits that quadratic candidates of the height take, and the spare ones twice. */

@@ -4,7 +4,17 @@ import * as ball from "./ball.ts";
 import { bitsOf } from "./context.ts";
 import type { Disc } from "./disc.ts";
 import * as disc from "./disc.ts";
-import { asBall, asDisc, displayLimit, type Enclosure, evaluate, mayPass, type Node, refinable } from "./origin.ts";
+import {
+  asBall,
+  asDisc,
+  displayLimit,
+  type Enclosure,
+  evaluate,
+  mayPass,
+  type Node,
+  refinable,
+  vanishes,
+} from "./origin.ts";
 import {
   aroundZero,
   atPlaces,
@@ -34,10 +44,18 @@ function byRadius(x: Node): boolean {
 export function decimal(x: Node, digits: number): DecimalParts {
   if (x.exact instanceof Rational) return rationalParts(x.exact, digits);
   if (byRadius(x)) return withRadius(asBall(x.enclosure));
+  if (isZero(x)) return NOTHING;
   const { shown, best } = risen(x, digits, (e) => significant(asBall(e), digits));
   if (shown) return shown;
   const last = asBall(best);
   return ball.containsZero(last) ? aroundZero(last) : withRadius(last);
+}
+
+const NOTHING: DecimalParts = { sign: "", digits: "0", exponent: 0, ellipsis: false };
+
+/** Whether a value that may be 0 is known to be. */
+function isZero(x: Node): boolean {
+  return disc.containsZero(asDisc(x.enclosure)) && vanishes(x, undefined) === true;
 }
 
 interface Risen<T> {
@@ -97,6 +115,7 @@ export interface ComplexParts {
 /** The decimals of a complex value: `digits` significant digits of |z|, both parts to the same place. */
 export function complexDecimal(x: Node, digits: number): ComplexParts {
   if (byRadius(x)) return measuredParts(asDisc(x.enclosure));
+  if (isZero(x)) return { re: NOTHING, im: NOTHING, axis: "real" };
   const { shown, best } = risen(x, digits, (e) => complexParts(asDisc(e), digits));
   return shown ?? measuredParts(asDisc(best));
 }
@@ -104,9 +123,8 @@ export function complexDecimal(x: Node, digits: number): ComplexParts {
 function complexParts(d: Disc, digits: number): ComplexParts | undefined {
   if (d.axis !== "plane") {
     const one = significant(disc.along(d), digits);
-    const none: DecimalParts = { sign: "", digits: "0", exponent: 0, ellipsis: false };
     if (!one) return undefined;
-    return d.axis === "real" ? { re: one, im: none, axis: "real" } : { re: none, im: one, axis: "imaginary" };
+    return d.axis === "real" ? { re: one, im: NOTHING, axis: "real" } : { re: NOTHING, im: one, axis: "imaginary" };
   }
   const size = significant(disc.abs(d, 64), 3);
   if (!size) return undefined;

@@ -15,6 +15,7 @@ import {
   mayPass,
   type Node,
   refinable,
+  vanishes,
 } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
 import { type Complex, Real } from "../number/values.ts";
@@ -23,11 +24,17 @@ import type { Relation } from "./claim-value.ts";
 
 type ClaimNumber = Real | Complex;
 
+const NO_SUCH_DIFFERENCE = "a difference of these radicals that is so small can only be 0";
+
 export const NUMBER_RELATIONS: readonly Relation[] = ["=", "≠", "<", "≤"];
 
 export function numberStanding(a: ClaimNumber, relation: Relation, b: ClaimNumber): Standing {
   if (a.exact && b.exact && (relation === "=" || relation === "≠")) {
     return exactStanding(a, relation, sameExact(a.exact, b.exact), b);
+  }
+  if (vanishes(a, b)) {
+    if (relation === "=" || relation === "≤") return { kind: "proved", argument: NO_SUCH_DIFFERENCE };
+    return { kind: "refuted", evidence: `the sides are equal: ${NO_SUCH_DIFFERENCE}` };
   }
   switch (relation) {
     case "=":

@@ -85,7 +85,7 @@ describe("zeros and axes", () => {
   });
 
   it("a hidden zero ends in PrecisionError that says how near, at the cap of bits", () => {
-    const hidden = sqrt(2).plus(sqrt(3)).pow(2).minus(5).minus(sqrt(24));
+    const hidden = exp(ln(real(2))).minus(2);
     expect(() => hidden.digits(30)).toThrow(PrecisionError);
     expect(() => hidden.digits(30)).toThrow(/cannot be told from 0 at 10\^-1\d\d\d/);
   });
@@ -226,11 +226,11 @@ describe("decisions", () => {
   });
 
   it("a comparison of equal numbers that no exact argument settles shows both sides", () => {
-    const a = sqrt(2).plus(sqrt(3)).pow(2);
-    const b = sqrt(24).plus(5);
+    const a = exp(ln(real("98/10")));
+    const b = real("98/10");
     expect(a.compare(b)).toBeUndefined();
     expect(() => a.equals(b)).toThrow(UndecidedError);
-    expect(() => a.equals(b)).toThrow(/9\.898979485566.* = 9\.898979485566.*4096 bits/);
+    expect(() => a.equals(b)).toThrow(/9\.7999.* ± .* = 49\/5 stays open after working with 4096 bits/);
     expect(() => a.lessThan(b)).toThrow(UndecidedError);
   });
 });

@@ -246,7 +246,7 @@ describe("working of other values", () => {
   });
 
   it("a recognised number is a conjecture in its derivation too", () => {
-    const found = recognise(real(2).sqrt().times(real(3).sqrt()).times(real(6).sqrt()).div(18))!;
+    const found = recognise(exp(ln(real(3)).neg()))!;
     expect(working(found).checks.map(({ kind }) => kind)).toEqual(["certified", "certified", "conjectured"]);
   });
 

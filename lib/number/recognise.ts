@@ -58,7 +58,9 @@ export function recognise(x: ComplexNumeric, options: RecogniseOptions = {}): Re
     };
   const enclosure = sharpened(value, height, spare);
   const found = asRational(enclosure, height, spare) ?? asQuadratic(enclosure, height, spare);
-  return remember(found && vanishes(value, scalar(found.value, "recognise")) ? proved(found) : found, { argument: value });
+  return remember(found && vanishes(value, scalar(found.value, "recognise")) ? proved(found) : found, {
+    argument: value,
+  });
 }
 
 function proved({ value }: Recognition): Recognition {

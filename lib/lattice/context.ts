@@ -13,6 +13,8 @@ import { complexPeriods, type PeriodPair, realPeriods } from "./agm-periods.ts";
 import { discriminant } from "./build.ts";
 import { matrixBits, transformed } from "./canonical.ts";
 import { type CubicRoots, cubicRoots } from "./cubic.ts";
+import { fixedCubic } from "./fixed-cubic.ts";
+import { CHAIN_GUARD, type LogarithmChain, logarithmChain } from "./fixed-logarithm.ts";
 import { fixedPeriods } from "./fixed-periods.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
 import { discOf, isRefinable } from "./quantity.ts";
@@ -99,6 +101,18 @@ function cubic(lattice: PeriodLattice, prec: number): CubicRoots {
   if (given.kind !== "invariants") throw new TypeError("the cubic of a lattice that was given by periods");
   const [g2, g3] = [discOf(given.g2, prec + 24), discOf(given.g3, prec + 24)];
   return cubicRoots(g2, g3, discriminant(given.g2, given.g3, prec + 24), prec);
+}
+
+/** The chain for logarithms of real points with so many bits, if there is one in fixed point. */
+export function chainOf(lattice: PeriodLattice, prec: number): LogarithmChain | undefined {
+  const { given, components } = lattice;
+  if (given.kind !== "invariants" || !components) return undefined;
+  const W = rounded(prec + CHAIN_GUARD);
+  return cached(lattice, `chain ${W}`, () => {
+    const [g2, g3] = [discOf(given.g2, W + 24), discOf(given.g3, W + 24)];
+    const fixed = fixedCubic(disc.real(g2), disc.real(g3), components, W);
+    return { chain: fixed && logarithmChain(fixed) };
+  }).chain;
 }
 
 /** The matrix from `basis` to the basis that the anchor shows, of the same lattice. */

@@ -6,7 +6,8 @@ import * as ball from "../number/ball.ts";
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { PrecisionError } from "../proof/errors.ts";
-import { periods, roots } from "./context.ts";
+import { chainOf, periods, roots } from "./context.ts";
+import { fixedLogarithm } from "./fixed-logarithm.ts";
 import type { PeriodLattice } from "./period-lattice.ts";
 import { planeLogarithm } from "./values.ts";
 
@@ -22,10 +23,13 @@ export interface RealLogarithm {
  * Domain   a lattice in its real basis (given by real invariants), x and y real.
  * Branch   the representative nearest to 0 or to ω2/2; y < 0 for small t > 0.
  * Error    an enclosure of t, about 2^−prec relative to it where x and y have the digits.
- * Cost     that of `planeLogarithm`.
+ * Cost     about log2(prec) square roots and an arc tangent; near points of order two or four that of `planeLogarithm`.
  * Throws   PrecisionError if the enclosures do not tell the component or fit no point.
  */
 export function realLogarithm(lattice: PeriodLattice, x: Ball, y: Ball, prec: number): RealLogarithm {
+  const chain = chainOf(lattice, prec);
+  const fixed = chain && fixedLogarithm(chain, x, y);
+  if (fixed && ball.bits(fixed.t) >= prec - 4) return { ...fixed, t: ball.round(fixed.t, prec) };
   const component = componentOf(lattice, x, prec);
   const point = { x: disc.fromBall(x), y: disc.fromBall(y) };
   let wp = prec;

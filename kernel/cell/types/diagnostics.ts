@@ -74,7 +74,10 @@ function reword(message: string): string {
 
 /** Findings as the error of a cell that was not run. */
 export function typeScriptError(code: string, executionCount: number, found: readonly Finding[]): ErrorReport {
-  const shown = [...found].sort((a, b) => a.start - b.start).slice(0, 5);
+  // What the compiler says of one place in several ways is said once.
+  const places = [...found].sort((a, b) => a.start - b.start);
+  const distinct = places.filter((one, at) => places.findIndex((other) => other.start === one.start) === at);
+  const shown = distinct.slice(0, 5);
   const traceback: string[] = [];
   for (const one of shown) {
     const at = positionAt(code, one.start);
@@ -85,7 +88,7 @@ export function typeScriptError(code: string, executionCount: number, found: rea
     traceback.push(`  in cell ${executionCount}, line ${at.line}, column ${at.column}`);
     traceback.push(...codeFrame(code, at, Math.max(1, Math.min(one.length, room))));
   }
-  if (found.length > shown.length) traceback.push("", `and ${found.length - shown.length} more`);
+  if (distinct.length > shown.length) traceback.push("", `and ${distinct.length - shown.length} more`);
   const first = shown[0] as Finding;
   return { ename: "TypeScriptError", evalue: `${first.code}: ${first.message}`, traceback };
 }

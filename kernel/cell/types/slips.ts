@@ -25,7 +25,7 @@ function hintFor({ code: name, message, start, length }: Finding, code: string):
   if (name === "TS1351")
     return `A product needs its sign: ${code.slice(0, start).match(/[\d.]+$/)?.[0] ?? "2"}*${rest.slice(0, length)}.`;
   const word = rest.slice(0, length);
-  if (name === "TS2304" && /^\s*=(?![=>])/.test(rest.slice(length)))
+  if (name === "TS2304" && /^\s*=(?![=>])/.test(rest.slice(length)) && beginsStatement(code, start))
     return `Write const ${word} = ... to give it a value.`;
   if (name === "TS2322" && /^\s*(?:\*\*|[-+*/])=/.test(rest.slice(length)) && /type 'number'/.test(message))
     return `${word} was given a number first. Begin with a library value: let ${word} = real(0).`;
@@ -33,6 +33,10 @@ function hintFor({ code: name, message, start, length }: Finding, code: string):
     return "This line begins with a bracket and joins the one above: end that one with a semicolon.";
   }
   return undefined;
+}
+
+function beginsStatement(code: string, offset: number): boolean {
+  return /(?:^|[;\n{}])\s*$/.test(code.slice(0, offset));
 }
 
 /** Codes that follow when a bracket joins two lines: not callable, no such index, not a function ... */

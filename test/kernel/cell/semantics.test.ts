@@ -21,6 +21,14 @@ beforeAll(() => {
   );
   writeFileSync(join(notebook.cwd, "deep.ts"), "export const deep: number = 100;");
   writeFileSync(join(notebook.cwd, "edited.ts"), "export const version = 1;");
+  writeFileSync(
+    join(notebook.cwd, "numbers.ts"),
+    'import { type Real, real, π } from "halfperiod";\nexport const half: Real = real("0.5");\nexport const circle = (r: Real): Real => r.pow(2).times(π);\n',
+  );
+  writeFileSync(join(notebook.cwd, "plain.mjs"), 'import { real } from "halfperiod"; export const two = real(2);');
+  writeFileSync(join(notebook.cwd, "outer.ts"), 'export { inner as outer } from "./inner.ts";');
+  writeFileSync(join(notebook.cwd, "inner.ts"), "export const inner = 1;");
+  writeFileSync(join(notebook.cwd, "table.json"), '{"n": 10}');
   writeFileSync(join(notebook.cwd, "data.json"), '{"rank": 1}');
 });
 afterAll(() => notebook.session.shutdown());
@@ -171,6 +179,17 @@ const CASES: readonly Case[] = [
   ["dynamic import", ["(await import('node:path')).sep"], '"/"'],
   ["a package beside the notebook", ["import shout0, { shout } from 'neighbour'", "shout('a') + shout0"], '"A42"'],
   ["JSON beside the notebook", ["import data from './data.json'", "data.rank"], "1"],
+  [
+    "a library value from TypeScript beside the notebook",
+    ["import { half, circle } from './numbers.ts'", "[half + 1, circle(half) > half]"],
+    "[3/2, true]",
+  ],
+  [
+    "a library value from JavaScript beside the notebook",
+    ["import { two } from './plain.mjs'", "two instanceof (real(1).constructor as any)"],
+    "true",
+  ],
+  ["require of the library", ["const hp: typeof import('halfperiod') = require('halfperiod'); hp.real(2) + 1"], "3"],
   ["TypeScript beside the notebook", ["import { sized } from './helper.ts'", "sized(2)"], "106"],
   [
     "an edit of a module beside the notebook is seen, by the checker and at run time",
@@ -180,6 +199,15 @@ const CASES: readonly Case[] = [
       "import { version } from './edited.ts'; version.length",
     ],
     "3",
+  ],
+  [
+    "an edit of what such a module imports, and of JSON, is seen too",
+    [
+      "import { outer } from './outer.ts'; import table from './table.json'; [outer, table.n]",
+      "import { writeFileSync } from 'node:fs'; writeFileSync('inner.ts', 'export const inner = 2;'); writeFileSync('table.json', '{\"n\": 20}')",
+      "import { outer } from './outer.ts'; import table from './table.json'; [outer, table.n]",
+    ],
+    "[2, 20]",
   ],
   ["require", ["require('node:path').sep"], '"/"'],
   ["import.meta", ["typeof import.meta.url"], '"string"'],

@@ -3,10 +3,11 @@
 import { citedPieces } from "./citation.ts";
 import { conventionProse } from "./convention.ts";
 import { anchorOf, type Derivation, type Step } from "./derivation.ts";
-import { checkHead, formulaTex, standingOf, summary } from "./derivation-parts.ts";
+import { checkHead, formulaParts, standingOf, summary } from "./derivation-parts.ts";
 import type { Show } from "./kind.ts";
 import { prose } from "./prose.ts";
 import { standingProse } from "./standing.ts";
+import { array } from "./tex.ts";
 
 export function derivationLatex(derivation: Derivation, show: Show): string {
   const { title, steps, conventions } = derivation;
@@ -24,7 +25,7 @@ function itemLatex(derivation: Derivation, step: Step, index: number, show: Show
   const { level } = derivation;
   const head = `\\item\\label{${anchorOf(derivation, step.label ?? index + 1)}} ${wordsLatex(derivation, step.text)}`;
   if (level === "outline") return head;
-  const whole = formulaTex(step, show);
+  const whole = shownFormula(step, show);
   const formula = whole === "" ? "" : `:\n\\[ ${whole} \\]`;
   if (level === "steps") return `${head}${formula}`;
   const standing = standingOf(step);
@@ -34,6 +35,19 @@ function itemLatex(derivation: Derivation, step: Step, index: number, show: Show
     : "";
   const notes = source + check === "" ? "" : `\n{\\small ${source}${check}\\par}`;
   return `${head}${formula}${notes}`;
+}
+
+/** Digits from which on a value stands below its formula. */
+const LONG_VALUE = 36;
+
+function shownFormula(step: Step, show: Show): string {
+  const parts = formulaParts(step, show);
+  const digits = (parts[1] ?? "").replace(/\D/g, "").length;
+  if (digits <= LONG_VALUE || (step.formula ?? "").length < 8) return parts.join(" ");
+  return array(
+    "l",
+    parts.map((part) => [`\\displaystyle ${part.startsWith("=") ? "{}" : ""}${part}`]),
+  );
 }
 
 function wordsLatex(derivation: Derivation, text: string): string {

@@ -43,7 +43,6 @@ function hardNotebook(file: string): void {
 const absent = missing(
   { program: "/usr/bin/pdflatex", debianPackage: "texlive-latex-base" },
   { program: "/usr/bin/xelatex", debianPackage: "texlive-xetex" },
-  { program: "/usr/bin/rsvg-convert", debianPackage: "librsvg2-bin" },
   { program: "/usr/bin/pdftotext", debianPackage: "poppler-utils" },
 );
 if (absent) console.warn(`skipped, ${absent}`);

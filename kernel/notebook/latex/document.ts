@@ -1,12 +1,15 @@
 // A notebook as the LaTeX source of a short paper. It compiles with pdfTeX, XeTeX and LuaTeX and needs what any
 // installation has; figures are files beside it.
+import { prose } from "../../../lib/page/prose.ts";
 import { type Cell, type CodeCell, isCode, type Notebook, type Output } from "../format.ts";
 import { splitFormulas } from "../page/mathematics.ts";
 import { plainText } from "../page/terminal.ts";
 import { sourcesOf } from "../sources.ts";
 import { VALUE_TYPE } from "../values.ts";
 import { formulaTex, textTex } from "./characters.ts";
+import { type Drawing, readDrawing } from "./drawing.ts";
 import { breakable, displayTex, sentenceTex } from "./formulas.ts";
+import { labelsTex } from "./labels.ts";
 import { codeLines, markdownTex } from "./markdown.ts";
 import { PREAMBLE } from "./preamble.ts";
 
@@ -16,6 +19,8 @@ export interface Picture {
   readonly mime: "image/svg+xml" | "image/png" | "image/jpeg";
   /** SVG text, or base64. */
   readonly data: string;
+  /** A figure of ours, whose labels stand in the paper itself. */
+  readonly drawing?: Drawing;
 }
 
 export interface LatexPaper {
@@ -128,7 +133,12 @@ class PaperWriter {
 
   #picture(mime: Picture["mime"], data: string, alt: string): string {
     const name = `${this.#name.replace(/[^\w-]+/g, "-")}-figure-${this.pictures.length + 1}`;
-    this.pictures.push({ name, mime, data });
+    const drawing = mime === "image/svg+xml" ? readDrawing(data) : undefined;
+    this.pictures.push({ name, mime, data, ...(drawing ? { drawing } : {}) });
+    if (drawing) {
+      const { width, height } = drawing;
+      return `\\drawing{${name}}{${sentenceTex(splitFormulas(prose(alt)))}}{${width}}{${height}}{%\n${labelsTex(drawing)}}`;
+    }
     return `\\picturefile{${name}}{${textTex(alt)}}`;
   }
 

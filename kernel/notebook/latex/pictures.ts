@@ -1,11 +1,12 @@
-// Pictures of a paper as files that TeX can take in: SVG becomes vector PDF by rsvg-convert, which is free on every
-// system; where it is missing the SVG itself is put beside, with what to do.
+// Pictures of a paper as files that TeX can take in. Our own figures become vector PDF here; any other SVG does by rsvg-convert,
+// which is free on every system; where that is missing the SVG itself is put beside, with what to do.
 import { spawnSync } from "node:child_process";
 import { mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import os from "node:os";
 import path from "node:path";
 import { sanitise } from "../page/sanitise.ts";
 import type { Picture } from "./document.ts";
+import { drawingPdf } from "./vector.ts";
 
 /** The program that makes a PDF of an SVG. */
 export const CONVERTER = "rsvg-convert";
@@ -25,7 +26,11 @@ export interface PictureFiles {
 export function pictureFiles(pictures: readonly Picture[], converter: string | undefined = undefined): PictureFiles {
   const files: PictureFile[] = [];
   const left: string[] = [];
-  for (const { name, mime, data } of pictures) {
+  for (const { name, mime, data, drawing } of pictures) {
+    if (drawing) {
+      files.push({ name: `${name}.pdf`, bytes: drawingPdf(drawing) });
+      continue;
+    }
     if (mime !== "image/svg+xml") {
       files.push({ name: `${name}.${mime === "image/png" ? "png" : "jpg"}`, bytes: Buffer.from(data, "base64") });
       continue;

@@ -26,7 +26,7 @@ export const PREAMBLE = String.raw`\documentclass[11pt,a4paper]{article}
 \emergencystretch=3em
 \raggedbottom
 % Code: a line may break behind a blank and goes on with an indent.
-\newenvironment{code}{\par\smallskip\begingroup\small\ttfamily\setlength{\parskip}{0pt}\raggedright\frenchspacing}{\par\endgroup\smallskip}
+\newenvironment{code}{\par\addvspace{0.4\baselineskip}\begingroup\small\ttfamily\setlength{\parskip}{0pt}\raggedright\frenchspacing}{\par\endgroup\smallskip}
 \newcommand{\codeline}[1]{\hangindent=3em\hangafter=1\noindent\strut #1\par}
 \newcommand{\codeindent}[1]{\hspace*{#1\dimexpr 0.525em\relax}}
 \newenvironment{said}{\begingroup\footnotesize\leftskip=2em}{\par\endgroup}
@@ -43,5 +43,11 @@ export const PREAMBLE = String.raw`\documentclass[11pt,a4paper]{article}
   \IfFileExists{#1.pdf}{\includegraphics[width=0.82\linewidth]{#1.pdf}}{%
   \IfFileExists{#1.png}{\includegraphics[width=0.82\linewidth]{#1.png}}{%
   \IfFileExists{#1.jpg}{\includegraphics[width=0.82\linewidth]{#1.jpg}}{\fbox{\texttt{\detokenize{#1}.svg}}}}}\\[4pt]
+  {\small #2}\end{center}}
+% A drawing with its labels over it: name, what it shows, width, height, labels.
+\newcommand{\drawing}[5]{\begin{center}%
+  \resizebox{0.82\linewidth}{!}{\setlength{\unitlength}{1bp}\begin{picture}(#3,#4)%
+  \put(0,0){\includegraphics[width=#3bp]{#1.pdf}}%
+  #5\end{picture}}\\[4pt]
   {\small #2}\end{center}}
 `;

@@ -14,7 +14,7 @@ import { table } from "../table.ts";
 import { curveCheck, exactly, factorTex, jointly, legendreCheck, plainNumber } from "./parts.ts";
 import { wpByExpansion } from "./wp-expansion.ts";
 
-const SILVERMAN = "common practice; Silverman AEC, III.1 (from memory)";
+const SILVERMAN = "Silverman AEC, III.1";
 
 /** The usual quantities of a long Weierstrass form over Q. */
 export function curveWorking(E: Curve): Derivation {
@@ -113,7 +113,7 @@ function orderCheck(P: Point, order: number | bigint) {
         `${order}P = O, and nP is not O for ${order}/ℓ, ℓ prime`,
       ),
       route: "by the divisors of the order",
-      source: "common practice; Silverman AEC, III.2 (group law) (from memory)",
+      source: "Silverman AEC, III.2.3 (group law algorithm)",
     };
   }
   const first = Array.from({ length: MOST_MULTIPLES }, (_, k) => P.times(k + 1));
@@ -126,7 +126,7 @@ function orderCheck(P: Point, order: number | bigint) {
       ...byReduction(P),
     ),
     route: "the multiples, and the orders of the reductions modulo small primes",
-    source: "common practice; Mazur's theorem, Silverman AEC, VIII.7.5 (from memory)",
+    source: "Mazur's theorem, Silverman AEC, VIII.7.5",
   };
 }
 

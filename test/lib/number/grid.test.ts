@@ -72,6 +72,55 @@ describe("double-precision lane: relative error at most 1e-13 — oracle: the sa
     expect(worst(out, (k) => disc.exp(at(points, k), 80))).toBeLessThan(1e-13);
   });
 
+  // Rows, lone points, short runs, and sizes beyond the tables.
+  const mixed: Grid = {
+    re: Float64Array.of(
+      1.5,
+      -3.25,
+      0,
+      0.1,
+      0.2,
+      0.3,
+      0.4,
+      0.5,
+      699.9,
+      -600,
+      709.5,
+      3,
+      0.25,
+      1e-300,
+      -1e-9,
+      0.1,
+      0.2,
+      0.3,
+      0.4,
+      0.5,
+    ),
+    im: Float64Array.of(0.5, -1e4, 3, 1, 1, 1, 1, 1, 2.5, 99_999, 0.5, 1e9, -0.75, 0, 1e-9, 2, 2, 2, 2, 2),
+  };
+
+  it("exp at scattered points, short rows and large sizes; in place the same to the bit", () => {
+    const out = lane.gridExp(mixed, lane.emptyGrid(mixed.re.length));
+    expect(worst(out, (k) => disc.exp(at(mixed, k), 120))).toBeLessThan(1e-13);
+    const copy: Grid = { re: mixed.re.slice(), im: mixed.im.slice() };
+    expect(lane.gridExp(copy, copy)).toEqual(out);
+    const apart: Grid = { re: points.im, im: points.re };
+    expect(worst(lane.gridExp(apart, lane.emptyGrid(apart.re.length)), (k) => disc.exp(at(apart, k), 80))).toBeLessThan(
+      1e-14,
+    );
+  });
+
+  it("in place the same to the bit, for a number of points that is no multiple of four", () => {
+    for (const f of [lane.gridMul, lane.gridDiv]) {
+      const copy: Grid = { re: points.re.slice(), im: points.im.slice() };
+      expect(f(copy, others, copy)).toEqual(f(points, others, lane.emptyGrid(points.re.length)));
+    }
+    for (const f of [lane.gridInv, lane.gridSqrt]) {
+      const copy: Grid = { re: points.re.slice(), im: points.im.slice() };
+      expect(f(copy, copy)).toEqual(f(points, lane.emptyGrid(points.re.length)));
+    }
+  });
+
   it("quotients at the ends of the range of doubles", () => {
     const small = { re: Float64Array.of(1e-200, 3e200), im: Float64Array.of(-2e-200, 1e200) };
     const inverse = lane.gridInv(small, lane.emptyGrid(2));

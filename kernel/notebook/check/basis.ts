@@ -1,6 +1,6 @@
 // Two pairs of periods: another basis of the same lattice is named as such.
 import type { Rational } from "../../../lib/number/rational.ts";
-import { type Enclosed, enclosed, type NumberData, overlaps } from "./number-data.ts";
+import { type Enclosed, enclosedTogether, type NumberData, overlaps } from "./number-data.ts";
 
 /** Coefficients that are tried: bases that programs choose between differ by small ones. */
 const REACH = 3;
@@ -12,7 +12,7 @@ type Row = readonly [number, number];
  * span different lattices.
  */
 export function basisChange(stored: readonly NumberData[], fresh: readonly NumberData[]): string | undefined {
-  const [a, b, c, d] = [...stored, ...fresh].map(enclosed);
+  const [a, b, c, d] = enclosedTogether([...stored, ...fresh]);
   if (stored.length !== 2 || fresh.length !== 2 || !a || !b || !c || !d) return undefined;
   const [first, second] = [rowOf(c, a, b), rowOf(d, a, b)];
   if (!first || !second || Math.abs(first[0] * second[1] - first[1] * second[0]) !== 1) return undefined;

@@ -1,6 +1,7 @@
 // Stored numbers compared as what they are: exact ones equal or not, enclosures apart or overlapping. All of it in exact
 // rational arithmetic on the decimals of the file.
 import { Rational } from "../../../lib/number/rational.ts";
+import { type StoredDecimal, storedDecimal, storedPlace } from "../../../lib/number/stored.ts";
 import { SAME, type Verdict, verdict } from "./verdict.ts";
 
 /** A number's data: its kind and strings. */
@@ -32,7 +33,8 @@ export function isNumberData(data: unknown): data is NumberData {
  */
 export function compareNumbers(stored: NumberData, fresh: NumberData, where: string, digits = Infinity): Verdict {
   if (sameFields(stored, fresh)) return SAME;
-  const [before, now] = [enclosed(stored), enclosed(fresh)];
+  // Vast and tiny numbers are compared in a unit of their own size.
+  const [before, now] = enclosedTogether([stored, fresh]);
   const bothQuadratic = stored.kind === "quadratic" && fresh.kind === "quadratic";
   if (!before || !now || bothQuadratic) return verdict("differs", `${where}: was ${show(stored)}, is ${show(fresh)}`);
   if (!overlaps(before, now))
@@ -54,18 +56,45 @@ export function digitsOf(data: NumberData): number {
   return value ? accuracy(value) : Number.POSITIVE_INFINITY;
 }
 
-/** The disc of a number's data; undefined for what is no number after all. */
-export function enclosed(data: NumberData): Enclosed | undefined {
-  const part = (field: string) => Rational.parse(String(data[field]));
+/** Numbers up to 10^±10000 are read as they are: no quadratic number is stored that is longer. */
+const SHORT = 10_000;
+
+/** The place of the leading digit of the largest part, or 0 where exact rationals are short enough. */
+function unitOf(...all: readonly NumberData[]): number {
+  const places = all.flatMap((data) =>
+    ["value", "middle", "re", "im", "radius"].flatMap((field) =>
+      data[field] === undefined ? [] : (storedPlace(String(data[field])) ?? []),
+    ),
+  );
+  const most = Math.max(...places);
+  return places.some((place) => Math.abs(place) > SHORT) && Number.isSafeInteger(most) ? most : 0;
+}
+
+/** The disc of a number's data in units of 10^unit; undefined for what is no number after all. */
+export function enclosed(data: NumberData, unit = unitOf(data)): Enclosed | undefined {
+  const part = (field: string) => storedDecimal(String(data[field]), unit);
   try {
-    if (data.kind === "rational") return { re: part("value"), im: ZERO, radius: ZERO };
-    if (data.kind === "real") return { re: part("middle"), im: ZERO, radius: part("radius") };
-    if (data.kind === "quadratic") return enclosedQuadratic(part("a"), part("b"), BigInt(String(data.d)));
-    if (data.kind === "complex") return { re: part("re"), im: part("im"), radius: part("radius") };
+    if (data.kind === "rational") return { re: part("value").value, im: ZERO, radius: part("value").cut };
+    if (data.kind === "real") return around(part("middle"), { value: ZERO, cut: ZERO }, part("radius"));
+    if (data.kind === "quadratic" && unit === 0)
+      return enclosedQuadratic(part("a").value, part("b").value, BigInt(String(data.d)));
+    if (data.kind === "complex") return around(part("re"), part("im"), part("radius"));
   } catch {
     return undefined;
   }
   return undefined;
+}
+
+/** The discs of several numbers' data in one unit. */
+export function enclosedTogether(all: readonly NumberData[]): readonly (Enclosed | undefined)[] {
+  const unit = unitOf(...all);
+  return all.map((data) => enclosed(data, unit));
+}
+
+/** What is cut from a part far below the others goes into the radius. */
+function around(re: StoredDecimal, im: StoredDecimal, radius: StoredDecimal): Enclosed {
+  const cut = re.cut.plus(im.cut).plus(radius.cut);
+  return { re: re.value, im: im.value, radius: radius.value.plus(cut) };
 }
 
 /** Decimals to which a root is enclosed: far more than is ever stored of a value. */

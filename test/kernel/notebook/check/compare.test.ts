@@ -29,6 +29,30 @@ describe("numbers compared by what they are", () => {
     expect(finding(real("5e-1", "1e-30"), rational("1/2"))).toBe("same");
   });
 
+  it.each([43429448190, -43429448190, 3_000_000, -1_000_001])(
+    "numbers of size 10^%i as any others: same, weaker, differs, sign, factor two — oracle: the digits",
+    (e) => {
+      const at = (digits: string, radius: string) => real(`${digits}e${e}`, `${radius}e${e}`);
+      expect(finding(at("2114", "1"), at("2115", "1"))).toBe("same");
+      expect(finding(at("2114", "1"), at("2117", "1"))).toBe("differs");
+      expect(finding(at("2114000000", "1"), at("2114500000", "900000"))).toBe("weaker");
+      expect(notes(at("2114", "1"), at("-2114", "1"))).toContain("the sign changed");
+      expect(notes(at("2114", "1"), at("4228", "1"))).toContain("it is twice as large");
+      expect(finding(at("2114", "1"), real("2114", "1"))).toBe("differs");
+      expect(finding(at("2114", "1"), rational("1/3"))).toBe("differs");
+      const pair = (re: string, im: string) => complex(`${re}e${e}`, `${im}e${e}`, `1e${e}`);
+      expect(finding(pair("2114", "-5"), pair("2115", "-5"))).toBe("same");
+      expect(notes(pair("2114", "-5"), pair("2114", "5"))).toContain("it is the complex conjugate");
+    },
+  );
+
+  it("a part far below the other one counts within the radius", () => {
+    const x = complex("1e0", "1e-43429448190", "0");
+    expect(finding(x, complex("1e0", "0", "0"))).toBe("same");
+    expect(finding(x, complex("2e0", "1e-43429448190", "0"))).toBe("differs");
+    expect(finding(real("1e", "1"), real("1e5", "1"))).toBe("differs");
+  });
+
   it("same: a quadratic number whose fields the file keeps in another order", () => {
     const [stored, fresh] = [
       { a: "0", b: "1/5", d: "35", kind: "quadratic" },

@@ -60,7 +60,7 @@ function fixedLattice(l: ReducedLattice, series: CellSeries, W: number): FixedLa
   let sharp = true;
   const at = (d: Disc, k: number) => {
     const x = sized(toFixed(disc.ldexp(d, k * t), W), W);
-    sharp &&= x.err <= SHARP;
+    sharp &&= isSharp(x, W);
     return x;
   };
   const constants = {
@@ -85,14 +85,17 @@ function fixedLattice(l: ReducedLattice, series: CellSeries, W: number): FixedLa
 
 const contexts = new WeakMap<ReducedLattice, (W: number) => FixedLattice>();
 
-/** Places beyond the bits that are asked for: errors of the counted steps, at most 2^16 units, and the loss at |y| = 2^−8. */
-const GUARD = 40;
-/** The largest sizes of coordinates that are subtracted here, of |y| and of 1/|y|. */
+/** Places beyond the bits that are asked for, where the series has them: the counted errors, and a part that 1/y may lose. */
+const GUARD = 44;
+const COUNTED = 20;
+/** The largest coordinates that are subtracted here, the largest and the least |y|: 1/y has relative errors of some units over |y|. */
 const FARTHEST = 2 ** 20;
 const HIGHEST = 2 ** 8;
-const NEAREST = 2 ** -6;
-/** Arguments and lattices off by more units than this are left to the enclosures; W >= 96 makes it 2^−40. */
-const SHARP = 2 ** 56;
+const NEAREST = 2 ** -18;
+/** Whether x is off by at most 2^−40, and by units that leave room in the doubles; what is not is left to the enclosures. */
+function isSharp(x: Fixed, W: number): boolean {
+  return x.err <= 2 ** 300 && x.err * pow2(-W) <= 2 ** -40;
+}
 
 /** ℘, ℘′ and ζ, those that are wanted. */
 export interface FixedValues {
@@ -117,7 +120,7 @@ export function fixedWeierstrass(
   wanted: readonly (keyof FixedValues)[],
 ): FixedValues | undefined {
   const W = Math.min(series.places, 32 * Math.ceil((prec + GUARD) / 32));
-  if (W < 96 || W < prec + 20) return undefined;
+  if (W < 96 || W < prec + COUNTED) return undefined;
   let at = contexts.get(l);
   if (!at) {
     at = boundedCache(6, (places) => fixedLattice(l, series, places));
@@ -128,7 +131,7 @@ export function fixedWeierstrass(
   const cell = c.sharp && (real || z.axis === "plane") ? toUpperCell(c, z) : undefined;
   if (!cell) return undefined;
   const order = wanted.includes("prime") ? 3 : wanted.includes("wp") ? 2 : 1;
-  const found = derivatives(c, cell.v, order, real);
+  const found = derivatives(c, cell.v, order, real, pow2(prec + COUNTED - W));
   if (!found) return undefined;
   const out: FixedValues = {};
   const value = (x: Sized, power: number, odd: boolean) => finished(x, c, power, odd && cell.down, prec, real);
@@ -174,7 +177,7 @@ function toUpperCell(c: FixedLattice, z: Disc): Cell | undefined {
   const { W, tau } = c;
   if (!(disc.magnitude(z) - c.t < 20)) return undefined;
   const point = toFixed(disc.ldexp(z, -c.t), W);
-  if (!(point.err <= SHARP)) return undefined;
+  if (!isSharp(point, W)) return undefined;
   const v = times(sized(point, W), c.over, W);
   const [x, height] = c.slope;
   const m2 = Math.round(toDouble(v.im, W) / height);
@@ -205,10 +208,16 @@ interface Derivatives {
   readonly third?: Sized;
 }
 
-function derivatives(c: FixedLattice, v: Sized, order: 1 | 2 | 3, real: boolean): Derivatives | undefined {
+function derivatives(
+  c: FixedLattice,
+  v: Sized,
+  order: 1 | 2 | 3,
+  real: boolean,
+  nearest: number,
+): Derivatives | undefined {
   const { W, series } = c;
   const circle = sineCosine(c, v, real);
-  if (!circle) return undefined;
+  if (!circle || !(circle.y.size >= nearest)) return undefined;
   const { sin, y } = circle;
   const Y = lowered(y, series.k);
   const size = absUpper(Y, W);

@@ -5,11 +5,13 @@ import { spawnSync } from "node:child_process";
 import { mkdtempSync, rmSync } from "node:fs";
 import { cpus, tmpdir } from "node:os";
 import { join } from "node:path";
+import { complex, lattice, provedDigits } from "../../dist/lib/index.js";
 import { latticeOfInvariants } from "../../dist/lib/lattice/build.js";
 import { fixedPeriods } from "../../dist/lib/lattice/fixed-periods.js";
 import { realLogarithm } from "../../dist/lib/lattice/real-logarithm.js";
 import { weierstrassValues } from "../../dist/lib/lattice/values.js";
 import * as ball from "../../dist/lib/number/ball.js";
+import { workingPrecision } from "../../dist/lib/number/context.js";
 import * as disc from "../../dist/lib/number/disc.js";
 import { Rational } from "../../dist/lib/number/rational.js";
 
@@ -53,18 +55,32 @@ function ours(n) {
   };
 }
 
-/** 1,000 points of one lattice at 50 digits, the context made afresh, beside 1,000 evaluations in a known one. */
+/**
+ * 1,000 points of one lattice at 50 digits: evaluations in a known lattice, the same with the context made afresh, and as a cell writes them, L.wp(z) of a
+ * new lattice with numbers made before.
+ */
 function manyPoints() {
-  const prec = 175;
-  const points = Array.from({ length: 1000 }, (_, k) =>
-    disc.fromRational(Rational.of(k + 1, 1009), prec + 20, Rational.of(k + 3, 1013)),
-  );
+  provedDigits(50);
+  const prec = workingPrecision();
+  const places = Array.from({ length: 1000 }, (_, k) => [Rational.of(k + 1, 1009), Rational.of(k + 3, 1013)]);
+  const points = places.map(([x, y]) => disc.fromRational(x, prec + 20, y));
   const run = (L) => {
     for (const z of points) weierstrassValues(L, z, prec, ["wp"]);
   };
   const known = latticeOfInvariants(g2, g3);
-  const fresh = timed(() => run(latticeOfInvariants(g2, g3)), 800_000);
-  return { fresh, known: timed(() => run(known), 800_000) };
+  const fresh = timed(() => run(latticeOfInvariants(g2, g3)), 1_500_000);
+  const numbers = places.map(([x, y]) => complex(x, y));
+  const written = timed(() => {
+    const L = lattice({ invariants: [4, -1] });
+    for (const z of numbers) L.wp(z);
+  }, 1_500_000);
+  return { known: timed(() => run(known), 1_500_000), fresh, written };
+}
+
+/** Exponents of growth from 1,000 to 10,000 digits: log10 of the ratio of the times. */
+function growth() {
+  const [small, large] = [ours(1000), ours(10_000)];
+  return Object.keys(small).map((job) => [job, Math.log10(large[job] / small[job]), large[job]]);
 }
 
 const PYTHON = `
@@ -149,6 +165,10 @@ for (const n of list) {
     );
   });
 }
-const { fresh, known } = manyPoints();
-console.log(`\n1,000 points at 50 digits: ${fresh.toFixed(0)} with a new lattice, ${known.toFixed(0)} in a known one.`);
+const { known, fresh, written } = manyPoints();
+const over = (time) => `${time.toFixed(0)} (${(time / known).toFixed(2)})`;
+console.log(`\n1,000 points at 50 digits, in one known lattice: ${known.toFixed(0)}`);
+console.log(`  in a new lattice: ${over(fresh)}; as L.wp(z) of a new lattice: ${over(written)}`);
+console.log("\nGrowth from 1,000 to 10,000 digits, as a power of the digits (at most 1.8), and the time at 10,000:");
+for (const [job, power, time] of growth()) console.log(`  ${job}: ${power.toFixed(2)}, ${(time / 1000).toFixed(1)} ms`);
 rmSync(folder, { recursive: true });

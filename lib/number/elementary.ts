@@ -1,7 +1,9 @@
 // The elementary functions as operations that a value records, with their differentials.
+
+import { growthOfCosine, growthOfSine, growthOfUnit } from "./angles.ts";
 import * as ball from "./ball.ts";
 import * as disc from "./disc.ts";
-import { binary, DIV, MINUS, NEG, PLUS, SQRT, TIMES, unary, value } from "./operations.ts";
+import { algebraic, binary, DIV, MINUS, NEG, PLUS, SQRT, TIMES, unary, value } from "./operations.ts";
 import { asBall, type Enclosure, isDisc, type Operation } from "./origin.ts";
 import type { Rational } from "./rational.ts";
 import { growthOfRoot } from "./separation.ts";
@@ -14,24 +16,33 @@ const neg = (x: Enclosure, prec: number) => value(NEG, prec, x);
 const root = (x: Enclosure, prec: number) => value(SQRT, prec, x);
 const square = (x: Enclosure, prec: number) => times(x, x, prec);
 
-export const EXP: Operation = unary("exp", ball.exp, disc.exp, (x, prec) => value(EXP, prec, x));
+export const EXP: Operation = algebraic(
+  growthOfUnit,
+  unary("exp", ball.exp, disc.exp, (x, prec) => value(EXP, prec, x)),
+);
 export const LN: Operation = unary(
   "ln",
   ball.ln,
   (x, prec) => disc.ln(x, prec),
   (x, prec) => over(1, x, prec),
 );
-export const SIN: Operation = unary(
-  "sin",
-  ball.sin,
-  (x, prec) => disc.sinCos(x, prec).sin,
-  (x, prec) => value(COS, prec, x),
+export const SIN: Operation = algebraic(
+  growthOfSine,
+  unary(
+    "sin",
+    ball.sin,
+    (x, prec) => disc.sinCos(x, prec).sin,
+    (x, prec) => value(COS, prec, x),
+  ),
 );
-export const COS: Operation = unary(
-  "cos",
-  ball.cos,
-  (x, prec) => disc.sinCos(x, prec).cos,
-  (x, prec) => neg(value(SIN, prec, x), prec),
+export const COS: Operation = algebraic(
+  growthOfCosine,
+  unary(
+    "cos",
+    ball.cos,
+    (x, prec) => disc.sinCos(x, prec).cos,
+    (x, prec) => neg(value(SIN, prec, x), prec),
+  ),
 );
 export const TAN: Operation = unary("tan", ball.tan, disc.tan, (x, prec) =>
   plus(1, square(value(TAN, prec, x), prec), prec),

@@ -1,4 +1,5 @@
 // The elementary functions as methods of a number: x.cos() is cos(x).
+import { type ExactOn, exactCosine, exactExponential, exactSine, exactTangent } from "./angles.ts";
 import { ACOS, ACOSH, ASIN, ASINH, ATAN, ATANH, COS, COSH, EXP, LN, SIN, SINH, TAN, TANH } from "./elementary.ts";
 import type { Operation } from "./origin.ts";
 import { Rational } from "./rational.ts";
@@ -17,12 +18,12 @@ const ONE_TO_ZERO = at(1, 0);
 
 /** What Real and Complex share; domain, branch and errors are those of the function of the same name. */
 export abstract class Elementary<Own> extends Value {
-  /** The value of an operation of one number. */
-  protected abstract mapped(operation: Operation, exact: ExactAt): Own;
+  /** The value of an operation of one number; `multiple` has its exact values at multiples of π. */
+  protected abstract mapped(operation: Operation, exact: ExactAt, multiple?: ExactOn): Own;
 
-  /** e^x; exactly 1 for x = 0. */
+  /** e^x; exactly 1 for x = 0, and exact at such multiples of iπ as quadratic fields hold. */
   exp(): Own {
-    return this.mapped(EXP, ZERO_TO_ONE);
+    return this.mapped(EXP, ZERO_TO_ONE, exactExponential);
   }
 
   /** The natural logarithm of a positive number, or the principal one of a complex number; see the function `ln`. */
@@ -30,19 +31,19 @@ export abstract class Elementary<Own> extends Value {
     return this.mapped(LN, ONE_TO_ZERO);
   }
 
-  /** sin x, x in radians. */
+  /** sin x, x in radians; exact at the multiples of π/6 and π/4. */
   sin(): Own {
-    return this.mapped(SIN, ZERO_TO_ZERO);
+    return this.mapped(SIN, ZERO_TO_ZERO, exactSine);
   }
 
-  /** cos x, x in radians. */
+  /** cos x, x in radians; exact at the multiples of π/6 and π/4. */
   cos(): Own {
-    return this.mapped(COS, ZERO_TO_ONE);
+    return this.mapped(COS, ZERO_TO_ONE, exactCosine);
   }
 
-  /** tan x, x in radians. Throws PoleError where the cosine cannot be told from 0. */
+  /** tan x, x in radians; exact at the multiples of π/12. Throws PoleError where the cosine cannot be told from 0. */
   tan(): Own {
-    return this.mapped(TAN, ZERO_TO_ZERO);
+    return this.mapped(TAN, ZERO_TO_ZERO, exactTangent);
   }
 
   /** asin x in [−π/2, π/2] for a real x of [−1, 1]; see the function `asin`. */

@@ -69,6 +69,8 @@ export function algebraic(growth: GrowthRule, operation: Operation): Operation {
   return { ...operation, growth };
 }
 
+/** The circle number. */
+export const PI: Operation = { name: "π", evaluate: (_none, _at, prec) => ball.pi(prec) };
 export const PLUS: Operation = algebraic(growthOfSum, linear(binary("plus", ball.add, disc.add)));
 export const MINUS: Operation = algebraic(growthOfSum, linear(binary("minus", ball.sub, disc.sub)));
 export const TIMES: Operation = algebraic(

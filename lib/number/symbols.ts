@@ -3,6 +3,7 @@
 import type { Ball } from "./ball.ts";
 import * as ball from "./ball.ts";
 import { workingPrecision } from "./context.ts";
+import { PI } from "./operations.ts";
 import type { Operation } from "./origin.ts";
 import { Quadratic } from "./quadratic.ts";
 import { Complex, Real } from "./values.ts";
@@ -23,7 +24,7 @@ function noOperand(): never {
 }
 
 /** The circle number 3.14159... */
-export const π: Real = new Constant({ name: "π", evaluate: (_none, _at, prec) => ball.pi(prec) });
+export const π: Real = new Constant(PI);
 
 /** Euler's constant 0.57721... */
 export const eulerGamma: Real = new Constant({ name: "γ", evaluate: (_none, _at, prec) => ball.eulerGamma(prec) });

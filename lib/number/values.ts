@@ -1,6 +1,7 @@
 // The numbers a user holds: Real and Complex, immutable enclosures that know how they were built.
 // The data is in `ball` and `disc` (a Complex has `re` and `im` as values, so it cannot itself be a Disc).
 import { DomainError } from "../proof/errors.ts";
+import type { ExactOn } from "./angles.ts";
 import type { Ball } from "./ball.ts";
 import * as ball from "./ball.ts";
 import { BIRTHS, type Birth, both, DROPPED } from "./birth.ts";
@@ -124,8 +125,8 @@ export class Real extends Elementary<Real> {
     return realOf(apply(SQRT, [this], exact && isRealExact(exact) ? exact : undefined));
   }
 
-  protected override mapped(operation: Operation, exact: ExactAt): Real {
-    return realOf(apply(operation, [this], this.exact instanceof Rational ? exact(this.exact) : undefined));
+  protected override mapped(operation: Operation, exact: ExactAt, multiple?: ExactOn): Real {
+    return realOf(apply(operation, [this], this.exact instanceof Rational ? exact(this.exact) : multiple?.(this)));
   }
 
   /** -1, 0, 1, or undefined if the enclosure, refined as far as a display would be, allows more than one. */
@@ -310,8 +311,8 @@ export class Complex extends Elementary<Complex> {
     return complexOf(apply(SQRT, [this], root(this.exact)));
   }
 
-  protected override mapped(operation: Operation, exact: ExactAt): Complex {
-    return complexOf(apply(operation, [this], this.exact instanceof Rational ? exact(this.exact) : undefined));
+  protected override mapped(operation: Operation, exact: ExactAt, multiple?: ExactOn): Complex {
+    return complexOf(apply(operation, [this], this.exact instanceof Rational ? exact(this.exact) : multiple?.(this)));
   }
 
   /** As for Real. */

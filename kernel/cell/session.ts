@@ -15,6 +15,7 @@ import type {
   MimeBundle,
   UserExpression,
 } from "./port.ts";
+import { codeBlock } from "./types/documentation.ts";
 import { TypesClient } from "./types-client.ts";
 
 /** After this time brackets alone decide whether a cell is complete. */
@@ -32,7 +33,8 @@ export function createCellSession(options: CellSessionOptions): CellSession {
 function withValue(data: MimeBundle, value: string): MimeBundle {
   const plain = `${data["text/plain"]}\n\n= ${value}`;
   const markdown = `${data["text/markdown"]}\n\n\`\`\`text\n= ${value}\n\`\`\``;
-  return { ...data, "text/plain": plain, "text/markdown": markdown };
+  const html = `${data["text/html"]}\n${codeBlock(`= ${value}`)}`;
+  return { ...data, "text/plain": plain, "text/html": html, "text/markdown": markdown };
 }
 
 /** One cell on its way. */

@@ -228,8 +228,9 @@ export class Runner {
   peek(id: number, name: string): void {
     const { boxes, bundle, reporter } = this.#parts;
     const { v } = boxes.get(name, "notebook");
-    const text = v === undefined ? "undefined" : String(bundle(v).data["text/plain"]);
-    reporter.send({ kind: "peeked", id, text: text.slice(0, LONGEST_PEEK) });
+    const data = v === undefined ? { "text/plain": "undefined" } : bundle(v).data;
+    const text = String(data["text/plain"]);
+    reporter.send({ kind: "peeked", id, text: `${text.slice(0, LONGEST_PEEK)}${standingOf(data)}` });
   }
 
   /** First step of an interrupt, from the watchdog: rejects what the cell awaits. */
@@ -263,4 +264,19 @@ export function interruptReport(place: readonly Frame[]): ErrorReport {
     evalue,
     traceback: [`\u001b[31mInterrupted\u001b[0m: ${evalue}`, ...frameLines(place)],
   };
+}
+
+/** How a number is known, in words behind it. */
+const STANDINGS: Readonly<Record<string, string>> = {
+  exact: "exact",
+  defined: "defined by exact input: more digits can be asked for",
+  measured: "measured: no more digits than these",
+  double: "from a double",
+};
+
+function standingOf(data: Readonly<Record<string, unknown>>): string {
+  const value = data["application/vnd.halfperiod.value+json"] as { kind?: unknown; standing?: unknown } | undefined;
+  const exact = value?.kind === "rational" || value?.kind === "quadratic";
+  const words = exact ? STANDINGS.exact : STANDINGS[String(value?.standing)];
+  return words === undefined ? "" : `\n  ${words}`;
 }

@@ -1,5 +1,6 @@
 // Inspection: signature and documentation of what stands at the cursor.
 import type { MimeBundle } from "../port.ts";
+import { codeBlock, inspectionHtml } from "./documentation.ts";
 import { draft } from "./draft.ts";
 import { withoutPlaces } from "./names-of-types.ts";
 import type { NotebookTypes } from "./service.ts";
@@ -53,7 +54,8 @@ function bundle(types: NotebookTypes, file: string, at: number, info: TS.QuickIn
   const source = detail === 1 ? sourceOf(types, file, at) : undefined;
   const plain = [signature, documentation, ...tags, source];
   const markdown = [fenced(signature), sections(documentation), ...tags.map(example), source && fenced(source)];
-  return { "text/plain": joined(plain), "text/markdown": joined(markdown) };
+  const html = [inspectionHtml(signature, documentation, tags), source && codeBlock(source)];
+  return { "text/plain": joined(plain), "text/html": joined(html), "text/markdown": joined(markdown) };
 }
 
 function joined(parts: readonly (string | undefined)[]): string {
@@ -67,7 +69,7 @@ function signatureOf(info: TS.QuickInfo): string {
     .split("\n")
     .filter((line) => !line.startsWith("import "))
     .join("\n")
-    .replace(/^\(alias\) /, "");
+    .replace(/^\((?:alias|property|method|getter|setter)\) /, "");
 }
 
 function fenced(code: string): string {

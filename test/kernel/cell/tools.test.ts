@@ -97,6 +97,24 @@ describe("inspection", () => {
     expect(await inspected("countUp|", 1)).toContain("function countUp(from: number)");
   });
 
+  it("as HTML: parts of the docstring one by one, letters and indices set — oracle: the docstring read by hand", async () => {
+    const marked = "legendre.K|";
+    const bundle = await notebook.session.inspect("legendre.K", marked.indexOf("|"), 0);
+    const html = String(bundle?.["text/html"]);
+    expect(html).toContain("The complete integral <i>K</i>(<i>m</i>).");
+    expect(html).toContain("<b>Domain</b> <i>m</i> ≠ 1.</div>");
+    expect(html).toContain("{ <i>m</i><sub>1</sub> } keeps all digits");
+    expect(html).not.toMatch(/<script|on\w+=/);
+  });
+
+  it("the value of a variable with its standing — oracle: √2 and 1/3 are exact, the fourth root of 2 defined, an enclosure measured", async () => {
+    await notebook.run("const third = 1/3 * real(1), seen = enclose('1.25', '1e-6'), root = sqrt(real(2).sqrt())");
+    expect(await inspected("w|")).toMatch(/1\.414\d*\.\.\.\n {2}exact/);
+    expect(await inspected("third|")).toMatch(/= 1\/3\n {2}exact/);
+    expect(await inspected("root|")).toMatch(/= 1\.189\d*\.\.\.\n {2}defined by exact input/);
+    expect(await inspected("seen|")).toContain("1.25 ± 1e-6\n  measured");
+  });
+
   it("nothing known is nothing found", async () => {
     expect(await notebook.session.inspect("   ", 1, 0)).toBeUndefined();
   });

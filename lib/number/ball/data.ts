@@ -95,7 +95,7 @@ export function fromDouble(x: number): Ball {
   if (Number.isSafeInteger(x)) return { man: BigInt(x), exp: 0, rad: 0 };
   let exp = Math.max(exponent(x) - 53, -1074);
   // Two steps, since 2^-exp may itself be out of range.
-  const whole = exp < -1000 ? x * 2 ** 1000 * 2 ** (-exp - 1000) : x * 2 ** -exp;
+  const whole = exp < -1000 ? x * 2 ** 1000 * pow2(-exp - 1000) : x * pow2(-exp);
   const man = BigInt(whole);
   const spare = trailingZeros(man);
   exp += spare;

@@ -1,5 +1,5 @@
 // exp in fixed point: arguments in [0, 1), results with an error under one unit.
-import { bitLength, scaled, shift } from "./bits.ts";
+import { bitLength, pow2, scaled, shift } from "./bits.ts";
 import { boundedCache } from "./cache.ts";
 import { sqrtNear } from "./isqrt.ts";
 import { byPrimes } from "./primes.ts";
@@ -59,7 +59,7 @@ function byTables(x: bigint, prec: number): bigint {
   let used = 0;
   const lead = Number(full >> shift(work - STEP * levels));
   for (let level = 1; level <= levels; level++) {
-    const j = Math.floor(lead / 2 ** (STEP * (levels - level))) % 64;
+    const j = Math.floor(lead / pow2(STEP * (levels - level))) % 64;
     if (j === 0) continue;
     const e = entry(tables, level, j);
     y = used === 0 ? e : (y * e) >> w;

@@ -1,4 +1,4 @@
-import { bitLength, shift } from "./bits.ts";
+import { bitLength, pow2, shift } from "./bits.ts";
 
 /**
  * Square root of a nonnegative integer: |result − √n| < 2. Callers that need the floor correct it.
@@ -28,7 +28,7 @@ function bySeries(n: bigint, wanted: number): bigint {
   // In units of 1/16.
   const h = ((n >> shift(e - 3)) - ((s * s) << shift(e + 3))) / s;
   const square = ((h * h) >> shift(e + 5)) / s;
-  const cube = (Number(square) * Number(h)) / (16 * Number(s) * 2 ** e);
+  const cube = (Number(square) * Number(h)) / (16 * Number(s) * pow2(e));
   return ((s << shift(e + 4)) + h - square + BigInt(Math.floor(cube)) + 8n) >> 4n;
 }
 

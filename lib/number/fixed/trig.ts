@@ -1,5 +1,5 @@
 // sin and cos in fixed point.
-import { bitLength, shift } from "./bits.ts";
+import { bitLength, pow2, shift } from "./bits.ts";
 import { boundedCache } from "./cache.ts";
 import { sqrtNear } from "./isqrt.ts";
 import { byAngles } from "./primes.ts";
@@ -75,7 +75,7 @@ function byTables(x: bigint, prec: number): SinCosFixed {
   const lead = Number(full >> shift(work - STEP * levels));
   let y = series(BigInt.asUintN(work - STEP * levels, full), work, STEP * levels);
   for (let level = levels; level > 0; level--) {
-    const j = Math.floor(lead / 2 ** (STEP * (levels - level))) % 64;
+    const j = Math.floor(lead / pow2(STEP * (levels - level))) % 64;
     if (j > 0) y = rotated(y, entry(tables, level, j), work);
   }
   const down = shift(work - prec);

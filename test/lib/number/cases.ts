@@ -54,7 +54,7 @@ export function resized(p: Pointed, size: number): Pointed {
 
 export const precision = fc.oneof(
   fc.integer({ min: 10, max: 200 }),
-  fc.constantFrom(53, 64, 176, 700, 1000, 1100),
+  fc.constantFrom(53, 64, 176, 700, 1000, 1100, 2600),
   fc.integer({ min: 200, max: 1500 }),
 );
 

@@ -15,7 +15,7 @@ const invariants = fc
     c: fc.integer({ min: -25, max: 25 }),
     near: fc.boolean(),
     scale: fc.constantFrom(0, 0, 1, 7, 100, -1, -7, -100),
-    prec: fc.constantFrom(40, 64, 100, 175, 250, 674, 1500),
+    prec: fc.constantFrom(40, 64, 100, 175, 674, 1500, 4000),
   })
   .map(({ a, c, near, scale, prec }) => {
     const t = Rational.of(a);
@@ -54,9 +54,9 @@ describe("periods of real invariants in fixed point", () => {
           expect(disc.bits(found[name])).toBeGreaterThan(prec - 8);
         }
       }),
-      { numRuns: 300, seed: 4 },
+      { numRuns: 200, seed: 4 },
     );
-    expect(taken).toBeGreaterThan(100);
+    expect(taken).toBeGreaterThan(70);
   });
 
   it("a wide coefficient is left to the enclosures — oracle: none is sharper than the input", () => {

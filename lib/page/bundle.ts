@@ -1,7 +1,8 @@
 import { conventionTex, conventionText, noteHtml } from "./convention.ts";
 import { doublesNote, forgetDoubles } from "./doubles.ts";
 import { plainText } from "./plain.ts";
-import { conventionsOf, isPlainNumber, kindOf, partsOf, show } from "./show.ts";
+import { isPlainNumber } from "./plain-number.ts";
+import { conventionsOf, kindOf, partsOf, show } from "./show.ts";
 import { display, small, texWords } from "./tex.ts";
 
 /** Representations of one thing by MIME type: strings, or unpacked JSON under types that end in +json. */

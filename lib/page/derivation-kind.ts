@@ -5,8 +5,10 @@ import type { Derivation, Step } from "./derivation.ts";
 import { derivationHtml } from "./derivation-html.ts";
 import { derivationLatex } from "./derivation-latex.ts";
 import { checkHead, formulaTex, standingOf, summary } from "./derivation-parts.ts";
+import { formulaText } from "./formula/write.ts";
 import type { Kind, Show } from "./kind.ts";
 import { plainFormulas } from "./plain-formula.ts";
+import { isPlainNumber } from "./plain-number.ts";
 import { standingTex, standingText } from "./standing.ts";
 import { array, small, texProse, texWords } from "./tex.ts";
 
@@ -40,7 +42,7 @@ function stepText(derivation: Derivation, step: Step, index: number, show: Show)
   const { level } = derivation;
   const head = `(${index + 1}) ${plainFormulas(citedText(derivation, step.text))}`;
   if (level === "outline") return head;
-  const value = step.value === undefined ? [] : [`    ${show.text(step.value).replace(/\n/g, "\n    ")}`];
+  const value = valueText(step, show);
   if (level === "steps") return [head, ...value].join("\n");
   const source = step.source ? [`    source: ${plainFormulas(step.source)}`] : [];
   const standing = standingOf(step);
@@ -48,6 +50,23 @@ function stepText(derivation: Derivation, step: Step, index: number, show: Show)
     ? [`    ${plainFormulas(citedText(derivation, checkHead(step)))}${standingText(standing)}`]
     : [];
   return [head, ...value, ...source, ...check].join("\n");
+}
+
+/** "formula = value" in lines of their own; a formula that does not go into a line is left out. */
+function valueText(step: Step, show: Show): string[] {
+  const { value } = step;
+  const formula = step.formula === undefined ? undefined : formulaText(step.formula);
+  if (value === undefined) return formula === undefined ? [] : [`    ${formula}`];
+  const text = isPlainNumber(value) ? plainNumber(value) : show.text(value);
+  const lines = text.split("\n");
+  const joined =
+    formula !== undefined && lines.length === 1 ? [`${formula} = ${text}`] : [...(formula ? [formula] : []), ...lines];
+  return joined.map((line) => `    ${line}`);
+}
+
+/** A count, and the order of a point. */
+function plainNumber(value: bigint | number): string {
+  return value === Number.POSITIVE_INFINITY ? "∞" : String(value);
 }
 
 function stepRows(derivation: Derivation, step: Step, index: number, show: Show): string[][] {

@@ -5,6 +5,7 @@ import { type Decimal, parseDecimal, texInteger } from "./digits.ts";
 import type { Cell, Data, Kind, Show } from "./kind.ts";
 import { KINDS } from "./kinds.ts";
 import { plainText } from "./plain.ts";
+import { isPlainNumber } from "./plain-number.ts";
 import { isRecord } from "./table.ts";
 import { array, texName, texProse } from "./tex.ts";
 
@@ -91,12 +92,6 @@ export const show: Show = {
     return dataOf(value, 0);
   },
 };
-
-/** A bigint, an integer that a double holds exactly, or an infinity, such as the order of a point. */
-export function isPlainNumber(value: unknown): value is bigint | number {
-  if (typeof value === "bigint") return true;
-  return typeof value === "number" && (Number.isSafeInteger(value) || Math.abs(value) === Number.POSITIVE_INFINITY);
-}
 
 function plainNumberTex(value: bigint | number): string {
   if (value === Number.POSITIVE_INFINITY) return "\\infty";

@@ -57,7 +57,11 @@ export function working(value: unknown, { name }: { readonly name?: string } = {
 
 function derived(value: unknown): Derivation {
   const made = typeof value === "object" && value !== null ? behind(value) : undefined;
-  const steps = ofNumber(value, made) ?? ofCurve(value, made) ?? ofLattice(value, made) ?? ofAnswer(value, made);
+  // A map is a function that has parts.
+  const isValue = (typeof value === "object" && value !== null) || typeof value === "function";
+  const steps = isValue
+    ? (ofNumber(value, made) ?? ofCurve(value, made) ?? ofLattice(value, made) ?? ofAnswer(value, made))
+    : undefined;
   if (steps) return steps;
   throw new TypeError(
     `working: ${described(value)} has no derivation: no record is kept of how it was made. Expected a number with a record, a curve, a point or a lattice, a map, or the result of E.torsion(), E.minimal(), E.logarithm(P), C.through(P), L.complexMultiplication(), homothety(L, M), jacobi({ m }) and the like. For steps of your own: derivation("...").step(...)`,
@@ -69,7 +73,8 @@ function described(value: unknown): string {
   if (Array.isArray(value)) return "a list";
   if (typeof value === "function") return "a function";
   if (typeof value !== "object" || value === null)
-    return `the plain ${value === null ? "null" : typeof value} ${String(value)}`;
+    return value === null || value === undefined ? String(value) : `the plain ${typeof value} ${String(value)}`;
+  if (value instanceof Curve) return `a curve over ${value.field.name} (over Q there is one)`;
   const { name = "" } = (value.constructor as { readonly name?: string } | undefined) ?? {};
   return name === "" || name === "Object" ? "this record" : `a value of the class ${name}`;
 }
@@ -84,7 +89,7 @@ function ofNumber(value: unknown, made: Behind | undefined): Derivation | undefi
   return at ? wpWorking(value, at.L, at.z) : numberWorking(value);
 }
 
-function ofCurve(value: unknown, made: Behind | undefined): Derivation | undefined {
+function ofCurve(value: object, made: Behind | undefined): Derivation | undefined {
   if (isThroughPoint(value)) return throughWorking(value);
   if (isMinimal(value)) return minimalWorking(value);
   if (value instanceof Morphism) return morphismWorking(value);
@@ -93,7 +98,7 @@ function ofCurve(value: unknown, made: Behind | undefined): Derivation | undefin
   if (value instanceof Point && made?.curve && made.argument)
     return exponentialWorking(value, made.curve, made.argument);
   if (value instanceof Point && value.curve.field.name === "Q") return pointWorking(value as Point);
-  if (isPolynomial(value as object) && made?.curve?.field.name === "Q" && made.index !== undefined)
+  if (isPolynomial(value) && made?.curve?.field.name === "Q" && made.index !== undefined)
     return divisionWorking(value as never, made.curve, made.index);
   return undefined;
 }

@@ -9,7 +9,7 @@ export interface Sign {
 }
 
 const GREEK =
-  "alpha α beta β gamma γ delta δ epsilon ε varepsilon ε zeta ζ eta η theta θ vartheta ϑ kappa κ lambda λ mu μ nu ν xi ξ pi π rho ρ sigma σ tau τ phi φ varphi φ chi χ psi ψ omega ω Gamma Γ Delta Δ Theta Θ Lambda Λ Xi Ξ Pi Π Sigma Σ Phi Φ Psi Ψ Omega Ω wp ℘ ell ℓ infty ∞ partial ∂ nabla ∇ emptyset ∅ forall ∀ exists ∃ sum Σ prod ∏ int ∫ ldots ... dots ... cdots ⋯ hbar ℏ";
+  "alpha α beta β gamma γ delta δ epsilon ε varepsilon ε zeta ζ eta η theta θ vartheta ϑ kappa κ lambda λ mu μ nu ν xi ξ pi π rho ρ sigma σ tau τ phi φ varphi φ chi χ psi ψ omega ω Gamma Γ Delta Δ Theta Θ Lambda Λ Xi Ξ Pi Π Sigma Σ Phi Φ Psi Ψ Omega Ω wp ℘ ell ℓ infty ∞ partial ∂ nabla ∇ emptyset ∅ forall ∀ exists ∃ ldots ... dots ... cdots ⋯ hbar ℏ";
 const RELATIONS =
   "le ≤ leq ≤ ge ≥ geq ≥ ne ≠ neq ≠ approx ≈ equiv ≡ cong ≅ sim ∼ simeq ≃ in ∈ notin ∉ subset ⊂ subseteq ⊆ supset ⊃ mid | to → rightarrow → mapsto ↦ iff ⇔ implies ⇒ bmod mod";
 const OPERATORS = "pm ± mp ∓ times × cdot · oplus ⊕ otimes ⊗ circ ∘ cup ∪ cap ∩ wedge ∧ setminus ∖ backslash \\";
@@ -22,6 +22,7 @@ export const SIGNS: ReadonlyMap<string, Sign> = new Map<string, Sign>([
   ...pairs(RELATIONS, "relation"),
   ...pairs(OPERATORS, "operator"),
   ...NAMES.split(" ").map((name): [string, Sign] => [name, { text: name, role: "name" }]),
+  ...pairs("sum Σ prod ∏ int ∫", "name"),
   ["langle", { text: "⟨", role: "open" }],
   ["rangle", { text: "⟩", role: "close" }],
   ["lvert", { text: "|", role: "open" }],

@@ -4,6 +4,8 @@
 import { escapeHtml } from "../html.ts";
 import { type Node, readFormula } from "./read.ts";
 
+const OVERLINE = "\u0304";
+
 /** How the parts of a formula are marked. */
 interface Marks {
   readonly minus: string;
@@ -60,7 +62,7 @@ export function formulaText(tex: string): string | undefined {
 }
 
 function bracketed(part: string): string {
-  return /^-?[\p{L}\p{N}]+$|^[-+]$/u.test(part) ? part : `(${part})`;
+  return /^-?[\p{L}\p{N}]+$|^[-+*∞]$/u.test(part) ? part : `(${part})`;
 }
 
 function line(nodes: readonly Node[], marks: Marks, tight = false): string {
@@ -153,9 +155,10 @@ function fraction(
 
 function accent({ body, mark }: Extract<Node, { kind: "accent" }>, marks: Marks): string {
   const text = line([body], TEXT);
-  return /^\p{L}$/u.test(text)
-    ? marks.face(`${text}${mark}`.normalize("NFC"), "italic")
-    : `(${marks.text(text)})${mark}`;
+  if (/^\p{L}$/u.test(text)) return marks.face(`${text}${mark}`.normalize("NFC"), "italic");
+  const inside = line([body], marks);
+  // A line over several signs is a conjugate.
+  return mark === OVERLINE ? `conj(${inside})` : `(${inside})${mark}`;
 }
 
 /** A part that needs no brackets wherever it stands: a number, a letter, one with its index. */
@@ -182,6 +185,7 @@ const isSpace = (node: Node | undefined): boolean => isSign(node, ["space"]);
 const isThin = (node: Node | undefined): boolean => isSpace(node) && (node as SignNode).text === "\u2009";
 
 function endsOperand(node: Node | undefined): boolean {
+  if (node?.kind === "scripts" && isSign(node.base, ["name"])) return false;
   if (!node || node.kind === "words") return false;
   return node.kind !== "sign" || isSign(node, ["letter", "digit", "close"]) || /[′!|]/.test(node.text);
 }

@@ -256,11 +256,14 @@ function byTraces(E: Curve, kernel: Univariate<Rational>): [Rational, Rational] 
 
 function plainWorking(phi: Morphism<AnyVariety, AnyVariety>): Derivation {
   const { change, from, to } = phi;
-  const start = new Derivation(`A ${phi.title}`, { name: "map" }).step("from", {
-    value: from,
-    ...smooth(from),
-    label: "from",
-  });
+  const start = new Derivation(`${/^[aeiou]/.test(phi.title) ? "An" : "A"} ${phi.title}`, { name: "map" }).step(
+    "from",
+    {
+      value: from,
+      ...smooth(from),
+      label: "from",
+    },
+  );
   const changed = change
     ? start.step("the change $x = u^2x' + r$, $y = u^3y' + su^2x' + t$", {
         value: change,

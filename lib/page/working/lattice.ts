@@ -1,6 +1,5 @@
 // The period lattice of a cubic as a derivation: roots, arithmetic-geometric means, the canonical basis, the reduced one.
 
-import { provedDigits } from "../../number/context.ts";
 import { Rational } from "../../number/rational.ts";
 import { i, π } from "../../number/symbols.ts";
 import { Complex, Real } from "../../number/values.ts";
@@ -13,7 +12,7 @@ import { curve } from "../../surface/make-curve.ts";
 import { lattice } from "../../surface/make-lattice.ts";
 import { modular } from "../../surface/modular.ts";
 import { Derivation } from "../derivation.ts";
-import { table } from "../table.ts";
+import { mean } from "./mean.ts";
 import { curveCheck, exactly, jointly, legendreCheck, plainNumber } from "./parts.ts";
 import { reductionSteps } from "./reduced.ts";
 
@@ -194,45 +193,6 @@ function oneComponent(L: Lattice): readonly [Mean, Mean] {
       b: twice.minus(triple).sqrt(),
     },
   ];
-}
-
-/** a and b of each step of the mean until they agree to the digits asked for. */
-function steps(a: Real, b: Real): (readonly [number, Real, Real])[] {
-  const rows: (readonly [number, Real, Real])[] = [[0, a, b]];
-  const least = -(provedDigits() * Math.log2(10)) - 4;
-  for (let n = 1; n < 60; n++) {
-    const [, x, y] = rows.at(-1)!;
-    const [p, q] = [x.plus(y).div(2), x.times(y).sqrt()];
-    rows.push([n, p, q]);
-    // The next pair differs by about (p − q)²/8p.
-    const gap = Math.abs(p.minus(q).toDouble() / p.toDouble());
-    if (gap === 0 || Math.log2(gap) < least / 2) {
-      rows.push([n + 1, p.plus(q).div(2), p.times(q).sqrt()]);
-      break;
-    }
-  }
-  return rows;
-}
-
-/**
- * The table of a mean with c_n, c_n² = a_n² − b_n², by its own recursion c_(n+1) = c_n²/4a_(n+1): the rows are checked by the
- * identity, which no step of the mean uses.
- */
-function mean({ a, b }: Mean) {
-  const rows = steps(a, b);
-  const c = [a.pow(2).minus(b.pow(2)).sqrt()];
-  for (const [, next] of rows.slice(1)) c.push(c.at(-1)!.pow(2).div(next.times(4)));
-  const checks = rows.map(([, p, q], n) => standingOf(q.pow(2).plus(c[n]!.pow(2)), "=", p.pow(2)));
-  return {
-    value: table(
-      // The differences need few digits.
-      rows.map(([n, p, q], k) => [n, p, q, c[k]!.exact ? c[k] : c[k]!.digits(8)]),
-      { columns: ["$n$", "$a_n$", "$b_n$", "$c_n$"] },
-    ),
-    trace: true,
-    check: jointly(...checks),
-    route: "$a_n^2 = b_n^2 + c_n^2$ in every row, with $c_{n+1} = c_n^2/4a_{n+1}$ by itself",
-  };
 }
 
 function complexPeriods(working: Derivation, L: Lattice): Derivation {

@@ -3,17 +3,19 @@
 import { isNode, type Node } from "../../number/origin.ts";
 import { Quadratic } from "../../number/quadratic.ts";
 import { Rational } from "../../number/rational.ts";
-import { type Complex, Real } from "../../number/values.ts";
+import { Complex, Real } from "../../number/values.ts";
 import { standingOf } from "../../surface/claim-parts.ts";
 import { Derivation } from "../derivation.ts";
 import { quadraticTex, rationalTex } from "../exact-kind.ts";
+import { mean } from "./mean.ts";
+import { NAMED } from "./named.ts";
 import { secondRoute } from "./second-route.ts";
 
 /** Longer records are cut at their beginning: the last steps are the ones that a reader asks for. */
 const MOST_STEPS = 60;
 
 export function numberWorking(x: Real | Complex): Derivation {
-  const title = `Working of a ${x instanceof Real ? "real" : "complex"} number`;
+  const title = `Working of a ${x instanceof Real || x.disc.axis === "real" ? "real" : "complex"} number`;
   if (!x.origin) {
     const words = x.exact ? "an exact number, as given" : "an enclosure, as given";
     return new Derivation(title, { name: "number" }).step(words, {
@@ -28,19 +30,51 @@ export function numberWorking(x: Real | Complex): Derivation {
   return nodes.reduce(
     (working, node) => {
       const { operation, operands } = node.origin!;
-      const formula = formulaOf(
-        operation.name,
-        operands.map((operand) => operandTex(operand, places)),
+      const parts = operands.map((operand) => operandTex(operand, places));
+      const named = NAMED[operation.name];
+      return (nodes.length === 1 ? meanBefore(working, node) : working).step(
+        named?.words ?? WORDS[operation.name] ?? operation.name,
+        {
+          formula: named?.formula(parts.map(bare)) ?? formulaOf(operation.name, parts),
+          ...(named?.source ? { source: named.source } : {}),
+          value: node,
+          ...secondRoute(node as Real | Complex),
+          label: `s${places.get(node)}`,
+        },
       );
-      return working.step(WORDS[operation.name] ?? operation.name, {
-        formula,
-        value: node,
-        ...secondRoute(node as Real | Complex),
-        label: `s${places.get(node)}`,
-      });
     },
     new Derivation(title, { name: "number" }),
   );
+}
+
+/** Without the brackets that it needs beside other operands. */
+function bare(operand: string | undefined): string | undefined {
+  return operand?.replace(/^\\left\(((?:(?!\\left).)*)\\right\)$/s, "$1");
+}
+
+/** The table of the mean that a value is made of, where its two numbers are positive. */
+function meanBefore(working: Derivation, { origin }: Node): Derivation {
+  const [a, b] = origin?.operands ?? [];
+  const { name } = origin!.operation;
+  const pair = name === "agm" ? [a, b] : name === "complete K" ? [1, sqrtOf(b)] : [];
+  const [x, y] = pair.map((part) =>
+    isNode(part) || part instanceof Rational || part === 1 ? Complex.from(part as Real) : undefined,
+  );
+  if (!x || !y || !isPositive(x) || !isPositive(y)) return working;
+  return working.step("the two means, until they agree to the digits asked for", {
+    ...(y.re.minus(x.re).sign() === 1 ? mean({ a: y.re, b: x.re }) : mean({ a: x.re, b: y.re })),
+    label: "mean",
+  });
+}
+
+function sqrtOf(m1: unknown): Complex | undefined {
+  const x = isNode(m1) ? Complex.from(m1 as Real) : undefined;
+  return x && isPositive(x) ? Complex.from(x.re.sqrt()) : undefined;
+}
+
+function isPositive(x: Complex): boolean {
+  const { axis } = x.disc;
+  return axis === "real" && x.re.sign() === 1;
 }
 
 /** The nodes with a record, each once, operands first. */

@@ -14,6 +14,7 @@ import { jacobi } from "../../surface/jacobi.ts";
 import { Lattice } from "../../surface/lattice.ts";
 import { legendre } from "../../surface/legendre.ts";
 import { modular } from "../../surface/modular.ts";
+import { secondRoute as anotherMethod } from "../../surface/second-route.ts";
 import { theta } from "../../surface/theta.ts";
 import { plainNumber } from "./parts.ts";
 import { placeOf, wpByExpansion } from "./wp-expansion.ts";
@@ -31,6 +32,9 @@ export function secondRoute(x: Scalar): Route {
   try {
     const found = ROUTES[name]?.(x, ...(x.origin!.operands as never[]));
     if (found) return found;
+    // Many operations carry another method of their own.
+    const { other, route } = anotherMethod(x);
+    return agree(x, other, route);
   } catch {
     // An inverse that is not defined there (a quotient by 0, a cut) leaves the plain repetition.
   }
@@ -66,7 +70,7 @@ const ROUTES: Readonly<Record<string, (x: Scalar, ...operands: never[]) => Route
   sin: (x, a) => agree(x, number(halfTurn(a, -1)).div(2).div(i), "by the exponential function"),
   cos: (x, a) => agree(x, number(halfTurn(a, 1)).div(2), "by the exponential function"),
   π: (x) => agree(x, number(ln(Complex.of(-1, 0))).div(i), "ln(−1)/i"),
-  "elliptic RF": (x, a, b, c) => agree(carlson.RF(four(a), four(b), four(c)), number(x).div(2), "homogeneity"),
+  RF: (x, a, b, c) => agree(carlson.RF(four(a), four(b), four(c)), number(x).div(2), "homogeneity"),
   point: (x, data, r, s, rest) => {
     const [w1, w2] = on(data).periods.map(plainNumber) as [Complex, Complex];
     const base = w1.times(r as Rational).plus(w2.times(s as Rational));
@@ -199,6 +203,7 @@ const ROUTES: Readonly<Record<string, (x: Scalar, ...operands: never[]) => Route
       .times(sin(π.times(q)));
     return agree(reflected, π, "reflection: Γ(q) Γ(1 − q) sin πq = π");
   },
+  "incomplete F": (x, phi, m) => agree(jacobi({ m }).sn(x), sin(phi), "sn F(φ | m) = sin φ"),
   "complete K": (x, _m, m1) => agree(carlson.RF(0, m1, 1), x, "R_F(0, m1, 1) by duplication"),
   "complete E": (x, m, m1) =>
     agree(

@@ -22,7 +22,7 @@ describe("derivations of one's own", () => {
     expect(text(double.show("outline"))).toBe(
       "Doubling P\n(1) the tangent at P has slope -1\n(2) the double\n1 of 2 steps checked; together proved",
     );
-    expect(text(double)).toContain("(2) the double\n    (1, 0)");
+    expect(text(double)).toContain("(2) the double\n    2P = (1, 0)");
     expect(text(double)).not.toContain("Silverman");
     expect(text(double.show("all"))).toContain("source: Silverman AEC III.2.3");
     expect(text(double.show("all"))).toContain("check: proved (exact arithmetic)");

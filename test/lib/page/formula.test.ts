@@ -79,3 +79,9 @@ it("the rows of the conventions read without a mathematics renderer", () => {
   ];
   for (const key of keys) expect(conventionHtml([key])).toMatch(/^<div.*<i>[^$\\]*$/);
 });
+
+it("integrals, sums and conjugates — oracle: written by hand", () => {
+  expect(formulaText("\\int_0^\\infty \\frac{dt}{\\sqrt{t + x}}")).toBe("∫_0^∞ dt/(√(t + x))");
+  expect(formulaText("\\sum_{n \\ge 1} n q^n")).toBe("Σ_(n≥1) nq^n");
+  expect(formulaText("\\operatorname{Im}(\\overline{\\omega_1}\\, \\omega_2)")).toBe("Im(conj(ω1) ω2)");
+});

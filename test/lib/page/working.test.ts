@@ -1,8 +1,9 @@
 import temml from "temml";
 import { describe, expect, it } from "vitest";
 import { complex, exact, rational, real } from "../../../lib/number/convert.ts";
-import { agm, atDigits, cos, exp, gamma, ln, sin } from "../../../lib/number/functions.ts";
+import { agm, atDigits, cos, exp, gamma, ln, sin, sqrt } from "../../../lib/number/functions.ts";
 import { recognise } from "../../../lib/number/recognise.ts";
+import { zero } from "../../../lib/number/zero.ts";
 import { bundle } from "../../../lib/page/bundle.ts";
 import type { Derivation } from "../../../lib/page/derivation.ts";
 import { plainFormulas } from "../../../lib/page/plain-formula.ts";
@@ -10,6 +11,7 @@ import type { Table } from "../../../lib/page/table.ts";
 import { tex } from "../../../lib/page/typeset.ts";
 import { working } from "../../../lib/page/working.ts";
 import type { Standing } from "../../../lib/proof/standing.ts";
+import { carlson } from "../../../lib/surface/carlson.ts";
 import { factor } from "../../../lib/surface/factorisation.ts";
 import { homothety } from "../../../lib/surface/homothety.ts";
 import { jacobi } from "../../../lib/surface/jacobi.ts";
@@ -268,4 +270,40 @@ it("formulas in sentences are readable as plain text", () => {
   expect(plainFormulas("points over $\\mathbb{F}_p$, $T^n: \\tau + n$, $\\operatorname{Re} \\omega_2 = 0$")).toBe(
     "points over F_p, T^n: τ + n, Re ω2 = 0",
   );
+});
+
+describe("workings of single function values: their formula with the numbers put in, its source, a second route", () => {
+  it.each([
+    [
+      "K",
+      () => legendre.K({ m: "1/3" }),
+      "K(1/3) = π/(2 M(1, √(2/3))) = 1.7339168852579350250...",
+      /R_F\(0, m1, 1\) by duplication/,
+    ],
+    ["F", () => legendre.F({ phi: 1, m: "1/2" }), "1.0832167728451687504...", /sn F\(φ \| m\) = sin φ/],
+    ["RF", () => carlson.RF(1, 2, 3), "R_F(1, 2, 3) = ", /homogeneity/],
+    ["agm", () => agm(1, sqrt(2)), "M(1, √2) = 1.1981402347355922074...", /R_F\(0, a², b²\)/],
+    [
+      "inverse of ℘",
+      () => curve`y^2 + y = x^3 - x`.lattice().wp.inverse(2),
+      "℘^-1(2) = R_F(2 - e1, 2 - e2, 2 - e3) = 0.7249122149096230677",
+      /Carlson RF/,
+    ],
+    ["zero", () => zero((x) => cos(x).minus(x), { between: [0, 1] }), "0.73908513321516064165...", /twice the bits/],
+  ])("%s — oracle: values of a general-purpose library", (_, value, line, route) => {
+    const text = String(bundle(working(value()).show("all"))?.["text/plain"]);
+    expect(text).toContain(line);
+    expect(text).toMatch(route);
+    expect(text).not.toMatch(/refuted|undecided/);
+  });
+
+  it("a mean shows its rows, which meet its value — oracle: the value itself", () => {
+    const [mean, value] = working(agm(1, sqrt(2))).steps;
+    const rows = (mean!.value as Table).rows;
+    expect(String(rows.at(-1)![1]).slice(0, 20)).toBe(String(value!.value).slice(0, 20));
+  });
+
+  it.each([undefined, null, 5, "word"])("%s has none, and says so", (value) => {
+    expect(() => working(value)).toThrow(/^working: .*has no derivation/);
+  });
 });

@@ -9,12 +9,15 @@ export interface Form {
   readonly c: bigint;
 }
 
+/** Beyond this the forms alone take more than half a minute. */
+const LARGEST = 100_000_000n;
+
 /**
  * The primitive reduced forms of a negative discriminant, −a < b <= a < c or 0 <= b <= a = c, by rising a and then |b|, b > 0 first.
  *
  * Domain   D < 0, D ≡ 0 or 1 mod 4.
  * Cost     about |D| / 6 steps.
- * Throws   DomainError for another D.
+ * Throws   DomainError for another D, and for |D| over 10^8.
  * Source   H. Cohen, A Course in Computational Algebraic Number Theory, 5.3.1 and algorithm 5.3.5.
  */
 export function reducedForms(discriminant: bigint): Form[] {
@@ -37,7 +40,16 @@ export function reducedForms(discriminant: bigint): Form[] {
 
 function refuseDiscriminant(discriminant: bigint): void {
   const rest = ((discriminant % 4n) + 4n) % 4n;
-  if (discriminant < 0n && rest <= 1n) return;
+  if (discriminant < 0n && rest <= 1n) {
+    if (-discriminant <= LARGEST) return;
+    throw new DomainError({
+      subject: "class polynomial",
+      given: `the discriminant ${discriminant}`,
+      expected: `|D| up to ${LARGEST}`,
+      hint: "The forms are found in |D|/6 steps, and coefficients grow like exp(π√|D|).",
+      argument: "discriminant",
+    });
+  }
   throw new DomainError({
     subject: "class polynomial",
     given: `the discriminant ${discriminant}`,

@@ -22,7 +22,7 @@ import type { PeriodLattice } from "../lattice/period-lattice.ts";
 import { Rational } from "../number/rational.ts";
 import { apply, Complex, type ComplexNumeric, Real, scalar } from "../number/values.ts";
 import type { ConventionKey } from "../proof/conventions.ts";
-import { DomainError, UndecidedError } from "../proof/errors.ts";
+import { DomainError, PoleError, UndecidedError } from "../proof/errors.ts";
 import { Callable } from "./callable.ts";
 import { constantValue, scalarOf } from "./constant.ts";
 import { rememberDivisorPoint } from "./divisor-points.ts";
@@ -317,12 +317,31 @@ function evaluate(expression: Expression, z: ComplexNumeric): Real | Complex {
       const origin = new TorusPoint(lattice, [Rational.zero, Rational.zero]);
       return valueAtLatticePoint(expression, origin, kind ?? "elliptic function");
     }
-    return kind ? apply(WEIERSTRASS[kind].number, [lattice, number]) : apply(VALUE, [expression, number]);
+    return kind
+      ? apply(WEIERSTRASS[kind].number, [lattice, number])
+      : away(z, () => apply(VALUE, [expression, number]));
   }
   if (z.isLatticePoint) return valueAtLatticePoint(expression, z, kind ?? "elliptic function");
   const at = [...z.coordinates, ...(z.remainder ? [z.remainder] : [])];
   if (kind) return apply(WEIERSTRASS[kind].point, [lattice, ...at], exactValue(z, kind));
-  return apply(VALUE_AT_POINT, [expression, ...at]);
+  return away(z, () => apply(VALUE_AT_POINT, [expression, ...at]));
+}
+
+/** Names the argument where a value has met a pole. */
+function away(z: ComplexNumeric, value: () => Real | Complex): Real | Complex {
+  try {
+    return value();
+  } catch (error) {
+    if (!(error instanceof PoleError)) throw error;
+    const place = z instanceof TorusPoint ? `${z.name}, with coordinates (${z.coordinates.join(", ")})` : `${z}`;
+    throw new PoleError({
+      subject: "elliptic function",
+      given: `the argument ${place}${z instanceof TorusPoint && z.remainder ? " and a remainder" : ""}, which is, or cannot be told from, a pole`,
+      expected: "an argument away from the poles",
+      hint: "f.poles lists them, f.laurent(p, n) describes the function there.",
+      argument: "z",
+    });
+  }
 }
 
 /** ℘ and ℘′ themselves have operations of their own. */

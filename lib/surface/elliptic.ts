@@ -3,7 +3,6 @@
 import {
   addElements,
   constantElement,
-  deriveElement,
   type Element,
   fieldOf,
   mulElements,
@@ -11,9 +10,10 @@ import {
   wpElement,
 } from "../lattice/field/element.ts";
 import { type Condition, numerator, productOfLinear } from "../lattice/field/interpolation.ts";
-import { DENOMINATOR, type DivisorData, NUMERATOR } from "../lattice/field/operations.ts";
+import { DENOMINATOR, type DivisorData, expressionOf, NUMERATOR } from "../lattice/field/operations.ts";
 import { exactOf, exactScalar, type Scalar } from "../lattice/field/scalar.ts";
 import { difference, quotient } from "../lattice/field/substitute.ts";
+import { isExactElement } from "../lattice/field/valuation.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
 import { workingPrecision } from "../number/context.ts";
 import * as disc from "../number/disc.ts";
@@ -25,8 +25,9 @@ import type { Standing } from "../proof/standing.ts";
 import { scalarOf } from "./constant.ts";
 import { EllipticFunction, type FunctionPoint } from "./elliptic-function.ts";
 import { isAmong, sigmaSeries, zetaSeries } from "./form-series.ts";
-import { onTorus, ZetaForm, type ZetaPart } from "./function-forms.ts";
+import { onTorus, ZetaForm } from "./function-forms.ts";
 import type { LaurentExpansion } from "./laurent-expansion.ts";
+import { elementOfParts, type TorusPart, zerosBeside } from "./principal-parts.ts";
 import { QuasiPeriodicFunction } from "./quasi-periodic-function.ts";
 import { TorusPoint } from "./torus-point.ts";
 
@@ -113,9 +114,9 @@ export class DivisorFunction extends EllipticFunction {
 /** An elliptic function that was made from its principal parts, which it keeps. */
 export class PrincipalPartsFunction extends EllipticFunction {
   private readonly constant: Real | Complex;
-  private readonly parts: readonly ZetaPart[];
+  private readonly parts: readonly TorusPart[];
 
-  constructor(element: Element, constant: Real | Complex, parts: readonly ZetaPart[]) {
+  constructor(element: Element, constant: Real | Complex, parts: readonly TorusPart[]) {
     super(element);
     this.constant = constant;
     this.parts = parts;
@@ -128,6 +129,18 @@ export class PrincipalPartsFunction extends EllipticFunction {
 
   override get poles(): readonly FunctionPoint[] {
     return this.parts.map(({ at, coefficients }) => ({ point: at, multiplicity: coefficients.length }));
+  }
+
+  /** With coefficients that are not exact the zeros are those beside the known poles, and have to be simple. */
+  override get zeros(): readonly FunctionPoint[] {
+    if (isExactElement(this.element) || this.parts.length === 0) return super.zeros;
+    return zerosBeside(expressionOf(this.element), this.parts);
+  }
+
+  /** The leading coefficient of the part at 0, or the value there. */
+  override get leadingAtZero(): Real | Complex {
+    const own = this.parts.find(({ at }) => isOrigin(at));
+    return own ? own.coefficients.at(-1)! : this.zeta(0);
   }
 
   /** At one of the given poles with the given principal part. */
@@ -349,10 +362,7 @@ function sameSum(
   return [[...list, last.plus(shift)], repeated(b)];
 }
 
-/**
- * Σ over the parts of c_1 ζ(z − p) + Σ_{k>=2} c_k (−1)^k/(k−1)! ℘^(k−2)(z − p), plus the constant; with the residues adding up to 0
- * ζ(z − p) may be replaced by ½(℘′(z) + ℘′(p))/(℘(z) − ℘(p)) − ζ(p)   (DLMF 23.10.2).
- */
+/** Σ over the parts of c_1 ζ(z − p) + Σ_{k>=2} c_k (−1)^k/(k−1)! ℘^(k−2)(z − p), plus the constant; the residues add up to 0. */
 function fromPrincipalParts(
   lattice: PeriodLattice,
   parts: readonly PrincipalPart[],
@@ -368,16 +378,13 @@ function fromPrincipalParts(
       argument: "principalParts",
     });
   }
-  let f = constant(lattice, scalar(added, "elliptic"));
-  for (const [k, { at, coefficients }] of parts.entries()) {
-    const p = onTorus(lattice, at);
-    f = addElements(f, partAt(lattice, p, residues[k]!, coefficients.slice(1)));
-  }
-  return new PrincipalPartsFunction(f, scalar(added, "elliptic"), keptParts(lattice, parts));
+  const kept = keptParts(lattice, parts);
+  const constantTerm = scalar(added, "elliptic");
+  return new PrincipalPartsFunction(elementOfParts(lattice, kept, constantTerm), constantTerm, kept);
 }
 
 /** The parts as points with their coefficients, without zeros at the end; parts at one point must be given as one. */
-function keptParts(lattice: PeriodLattice, parts: readonly PrincipalPart[]): ZetaPart[] {
+function keptParts(lattice: PeriodLattice, parts: readonly PrincipalPart[]): TorusPart[] {
   const kept = parts.map(({ at, coefficients }) => {
     const list = coefficients.map((c) => scalar(c, "elliptic"));
     while (list.length > 0 && isExactZero(list.at(-1)!)) list.pop();
@@ -385,7 +392,7 @@ function keptParts(lattice: PeriodLattice, parts: readonly PrincipalPart[]): Zet
   });
   kept.forEach((part, k) => {
     const twin = kept.findIndex((other) => isOrigin(other.at.minus(part.at)));
-    if (twin === k) return;
+    if (twin < 0 || twin >= k) return;
     throw new DomainError({
       subject: "elliptic",
       given: `two principal parts at ${part.at.name}`,
@@ -395,44 +402,4 @@ function keptParts(lattice: PeriodLattice, parts: readonly PrincipalPart[]): Zet
     });
   });
   return kept.filter(({ coefficients }) => coefficients.length > 0);
-}
-
-function partAt(
-  lattice: PeriodLattice,
-  p: TorusPoint,
-  residue: Real | Complex,
-  higher: readonly ComplexNumeric[],
-): Element {
-  const field = fieldOf(lattice);
-  let f = constantElement(field, field.ring.zero);
-  if (!isOrigin(p) && !isExactZero(residue)) {
-    const wp = EllipticFunction.wp(lattice);
-    const half = constantElement(field, exactScalar(Rational.of(1, 2)));
-    const top = addElements(primeElement(field), constant(lattice, wp.prime(p.reduced)));
-    const zeta = new QuasiPeriodicFunction(lattice, "zeta")(p);
-    const shifted = difference(mulElements(half, quotient(top, vertical(lattice, p))), constant(lattice, zeta));
-    f = mulElements(constant(lattice, residue), shifted);
-  }
-  let derivative = higher.length > 0 ? translatedWp(lattice, p) : f;
-  let factor = Rational.one;
-  for (const [k, c] of higher.entries()) {
-    // c_(k+2): the sign (−1)^(k+2) over (k+1)!.
-    factor = factor.div(k + 1);
-    const weight = constant(lattice, scalar(c, "elliptic").times(k % 2 === 0 ? factor : factor.neg()));
-    f = addElements(f, mulElements(weight, derivative));
-    if (k + 1 < higher.length) derivative = deriveElement(derivative);
-  }
-  return f;
-}
-
-/** ℘(z − p). */
-function translatedWp(lattice: PeriodLattice, p: TorusPoint): Element {
-  const field = fieldOf(lattice);
-  if (isOrigin(p)) return wpElement(field);
-  const wp = EllipticFunction.wp(lattice);
-  const x = constant(lattice, wp(p.reduced));
-  const top = addElements(primeElement(field), constant(lattice, wp.prime(p.reduced)));
-  const slope = quotient(top, difference(wpElement(field), x));
-  const quarter = constantElement(field, exactScalar(Rational.of(1, 4)));
-  return difference(mulElements(quarter, mulElements(slope, slope)), addElements(wpElement(field), x));
 }

@@ -182,7 +182,11 @@ export function pow(x: ComplexNumeric, y: ComplexNumeric, options?: Continued): 
 export function pow(x: ComplexNumeric, y: ComplexNumeric, options: Continued = {}): Real | Complex {
   const base = scalar(x, "pow");
   const exponent = scalar(y, "pow");
-  if (exponent.exact instanceof Rational && exponent.exact.den === 1n) return base.pow(Number(exponent.exact.num));
+  if (exponent.exact instanceof Rational && exponent.exact.den === 1n) {
+    const n = Number(exponent.exact.num);
+    // A longer one leaves the range of exponents, and the exponential says so.
+    if (Number.isSafeInteger(n)) return base.pow(n);
+  }
   const side = base instanceof Complex ? continuedFrom(base, options) : undefined;
   if (side) return apply(POW_ACROSS, [base, exponent, side]);
   return apply(POW, [base, exponent], fractionalPower(base.exact, exponent.exact));

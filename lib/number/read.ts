@@ -32,10 +32,22 @@ export function readNumber(text: string, subject: string): Leaf {
 }
 
 function measured(middle: string, radius: string, text: string, subject: string): Leaf {
-  const centre = readExact([middle], subject);
-  const r = readExact([radius], subject);
+  const centre = readPart(text, 0, middle.length, subject);
+  const r = readPart(text, text.length - radius.length, text.length, subject);
   if (!(r instanceof Rational) || r.num < 0n) fail(subject, [text], middle.length + 1, "a radius that is not negative");
   return { enclosure: widened(centre, r as Rational, hasUnit(middle)), standing: "measured", source: text.trim() };
+}
+
+/** A part of the text, refused with its position in the whole. */
+function readPart(text: string, from: number, to: number, subject: string): Exact {
+  const padded = " ".repeat(from) + text.slice(from, to);
+  try {
+    return readExact([padded], subject);
+  } catch (error) {
+    if (!(error instanceof DomainError)) throw error;
+    const given = error.given.replace(JSON.stringify(padded), () => JSON.stringify(text));
+    throw new DomainError({ subject, given, expected: error.expected, hint: error.hint, argument: "text" });
+  }
 }
 
 /** "3.14..." stands for any number within one unit of its last place; in "1.5... + 0.2... i" each part does. */

@@ -3,6 +3,7 @@ import { agmFixed } from "../fixed/agm.ts";
 import { bitLength, exponent, pow2, scaled, size, sizePower, UP } from "../fixed/bits.ts";
 import { add, hull, ldexp, mul, sqrt } from "./arithmetic.ts";
 import { type Ball, finish, isZero, lowerPositive, sign, sizeBelow, upper, zero } from "./data.ts";
+import { shown } from "./shown.ts";
 
 /**
  * Arithmetic-geometric mean of two numbers >= 0; agm(x, 0) = 0.
@@ -16,7 +17,7 @@ export function agm(a: Ball, b: Ball, prec: number): Ball {
   if (sign(a) === -1 || sign(b) === -1) {
     throw new DomainError({
       subject: "agm",
-      given: "a negative number",
+      given: `the negative number ${shown(sign(a) === -1 ? a : b)}`,
       expected: "two numbers that are not negative",
     });
   }
@@ -92,7 +93,11 @@ function height(x: Ball, prec: number): number {
 /** The mean grows with both arguments, so its values at the ends enclose it. */
 function agmWide(a: Ball, b: Ball): Ball {
   if (sign(a) !== 1 || sign(b) !== 1) {
-    throw new BranchError({ subject: "agm", given: "an enclosure that holds 0", expected: "positive numbers" });
+    throw new BranchError({
+      subject: "agm",
+      given: `${shown(sign(a) === 1 ? b : a)}, which holds 0`,
+      expected: "positive numbers",
+    });
   }
   return hull(agm(lowerPositive(a), lowerPositive(b), 40), agm(upper(a), upper(b), 40), 40);
 }

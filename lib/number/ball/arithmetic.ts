@@ -1,5 +1,5 @@
 // Sums, products, quotients and roots of balls. Inputs are any balls, results have about prec bits (see `finish`).
-import { BranchError, DomainError, PoleError } from "../../proof/errors.ts";
+import { BranchError, DomainError } from "../../proof/errors.ts";
 import {
   bitLength,
   DOWN,
@@ -14,7 +14,7 @@ import {
   UP,
 } from "../fixed/bits.ts";
 import { sqrtNear } from "../fixed/isqrt.ts";
-import { binaryPower } from "../fixed/power.ts";
+import { integerPower, type PowerField } from "../fixed/power.ts";
 import {
   type Ball,
   containsZero,
@@ -31,6 +31,7 @@ import {
   span,
   zero,
 } from "./data.ts";
+import { divisorZero, shown } from "./shown.ts";
 
 export function neg(x: Ball): Ball {
   return x.lead === undefined
@@ -196,13 +197,7 @@ export function mulInt(x: Ball, n: bigint | number, prec: number): Ball {
  */
 export function div(x: Ball, y: Ball, prec: number): Ball {
   if (containsZero(y)) {
-    throw new PoleError({
-      subject: "div",
-      given: isZero(y) ? "the divisor 0" : "a divisor whose enclosure holds 0",
-      expected: "a divisor away from 0",
-      hint: isZero(y) ? "" : "A sharper divisor may do.",
-      argument: "divisor",
-    });
+    throw divisorZero(shown(y), isZero(y));
   }
   if (isZero(x)) return zero;
   const exact = x.rad === 0 && y.rad === 0;
@@ -234,11 +229,7 @@ function quotientWide(x: Ball, y: Ball, prec: number): Ball {
   const farthest = y.man > 0n ? high : low;
   // An integer end may touch 0 though the ball does not: half an ulp of the true distance is not known then.
   if (nearest === 0n) {
-    throw new PoleError({
-      subject: "div",
-      given: "a divisor whose enclosure nearly holds 0",
-      expected: "a divisor away from 0",
-    });
+    throw divisorZero(shown(y), false, "which nearly holds 0");
   }
   const first = div(x, { man: nearest, exp: y.exp, rad: 0 }, prec);
   const second = div(x, { man: farthest, exp: y.exp, rad: 0 }, prec);
@@ -316,14 +307,14 @@ function sqrtAtZero(x: Ball, prec: number): Ball {
   if (top >= 0n) {
     throw new BranchError({
       subject: "sqrt",
-      given: "an enclosure that holds 0 and negative numbers",
+      given: `${shown(x)}, which holds 0 and negative numbers`,
       expected: "numbers of one sign",
       hint: "A sharper argument may do.",
     });
   }
   throw new DomainError({
     subject: "sqrt",
-    given: "a negative number",
+    given: `the negative number ${shown(x)}`,
     expected: "a number that is not negative",
     hint: "The root of a complex number is taken by complex(x).sqrt().",
   });
@@ -348,21 +339,11 @@ function doubleRadius(r: number): Ball {
   return { man, exp: r * 2 ** 60 < Infinity ? -60 : 0, rad: 0 };
 }
 
+const FIELD: PowerField<Ball> = { one, square, mul, inv, round };
+
 /** x^n for an integer n; x^0 is exactly 1. Throws PoleError for n < 0 if x holds 0. */
 export function pow(x: Ball, n: number, prec: number): Ball {
-  if (!Number.isSafeInteger(n)) {
-    throw new DomainError({ subject: "pow", given: `the exponent ${n}`, expected: "a safe integer" });
-  }
-  if (n < 0) return inv(pow(x, -n, prec + 8), prec);
-  if (n === 0) return one;
-  const work = prec + 4 + 2 * bitLength(BigInt(n));
-  const power = binaryPower(
-    x,
-    n,
-    (y) => square(y, work),
-    (y, z) => mul(y, z, work),
-  );
-  return round(power, prec);
+  return integerPower(x, n, prec, FIELD);
 }
 
 /** x², which is not negative even where x has no sign. */

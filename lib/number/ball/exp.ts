@@ -6,6 +6,7 @@ import { expFixed } from "../fixed/exp.ts";
 import { lnFixed } from "../fixed/log.ts";
 import { add, div, hull, ldexp, mul, round, sub, widenBy } from "./arithmetic.ts";
 import { type Ball, finish, isZero, lower, lowerPositive, magnitude, one, sign, upper, zero } from "./data.ts";
+import { shown } from "./shown.ts";
 
 /** Exponent of the radius: it is under 2^this; -Infinity if exact. */
 export function radiusExponent(x: { readonly exp: number; readonly rad: number }): number {
@@ -58,14 +59,14 @@ export function ln(x: Ball, prec: number): Ball {
   if (s === undefined) {
     throw new BranchError({
       subject: "ln",
-      given: "an enclosure that holds 0",
+      given: `${shown(x)}, which holds 0`,
       expected: "positive numbers",
       hint: "A sharper argument may do.",
     });
   }
   throw new DomainError({
     subject: "ln",
-    given: s === 0 ? "0" : "a negative number",
+    given: s === 0 ? "0" : `the negative number ${shown(x)}`,
     expected: "a positive number",
     hint: s === 0 ? "" : "ln(complex(x)) takes others.",
   });

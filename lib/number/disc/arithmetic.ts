@@ -1,9 +1,8 @@
-// Field operations of discs. A disc on an axis goes through the real operations, so that the axis is kept exactly.
-import { DomainError, PoleError } from "../../proof/errors.ts";
 import * as real from "../ball/arithmetic.ts";
 import { type Ball, fromInt } from "../ball/data.ts";
+import { divisorZero, shownPair } from "../ball/shown.ts";
 import { bitLength, DOWN, scaledRadius, shift, UP } from "../fixed/bits.ts";
-import { binaryPower } from "../fixed/power.ts";
+import { integerPower, type PowerField } from "../fixed/power.ts";
 import {
   along,
   below,
@@ -15,9 +14,11 @@ import {
   fromBall,
   fromBalls,
   hypotSize,
+  imag,
   imaginary,
   isZero,
   one,
+  real as realPart,
   zero,
 } from "./data.ts";
 
@@ -144,13 +145,7 @@ export function sqr(x: Disc, prec: number): Disc {
  */
 export function div(x: Disc, y: Disc, prec: number): Disc {
   if (containsZero(y)) {
-    throw new PoleError({
-      subject: "div",
-      given: isZero(y) ? "the divisor 0" : "a divisor whose enclosure holds 0",
-      expected: "a divisor away from 0",
-      hint: isZero(y) ? "" : "A sharper divisor may do.",
-      argument: "divisor",
-    });
+    throw divisorZero(shownPair(realPart(y), imag(y)), isZero(y));
   }
   if (isZero(x)) return zero;
   if (y.axis !== "plane") {
@@ -193,11 +188,7 @@ function divPlane(x: Disc, y: Disc, prec: number): Disc {
   const bound = hypotSize(y.re, y.im, prec);
   const low = (below(bound.d) - scaledRadius(y.rad, -bound.e)) * DOWN;
   if (!(low > bound.d * 2 ** -30)) {
-    throw new PoleError({
-      subject: "div",
-      given: "a divisor whose enclosure nearly holds 0",
-      expected: "a divisor away from 0",
-    });
+    throw divisorZero(shownPair(realPart(y), imag(y)), false, "which nearly holds 0");
   }
   const q = hypotSize(qr, qi, prec);
   // In units of 2^unit: r_x·2^up/|y| and (|q| + 2) r_y/|y|.
@@ -211,21 +202,11 @@ export function inv(x: Disc, prec: number): Disc {
   return div(one, x, prec);
 }
 
+const FIELD: PowerField<Disc> = { one, square: sqr, mul, inv, round };
+
 /** x^n for an integer n; x^0 is exactly 1. Throws PoleError for n < 0 if x holds 0. */
 export function pow(x: Disc, n: number, prec: number): Disc {
-  if (!Number.isSafeInteger(n)) {
-    throw new DomainError({ subject: "pow", given: `the exponent ${n}`, expected: "a safe integer" });
-  }
-  if (n < 0) return inv(pow(x, -n, prec + 8), prec);
-  if (n === 0) return one;
-  const work = prec + 4 + 2 * bitLength(BigInt(n));
-  const power = binaryPower(
-    x,
-    n,
-    (y) => sqr(y, work),
-    (y, z) => mul(y, z, work),
-  );
-  return round(power, prec);
+  return integerPower(x, n, prec, FIELD);
 }
 
 /** x with its radius raised by an upper bound of |r|, in all directions (along the axis for an axis value if `axial`). */

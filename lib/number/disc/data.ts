@@ -1,5 +1,4 @@
 // Complex enclosures as data: construction, outward rounding in one place, and what can be read off.
-import { DomainError } from "../../proof/errors.ts";
 import { add, spread, sqrt } from "../ball/arithmetic.ts";
 import * as compareBall from "../ball/compare.ts";
 import {
@@ -7,7 +6,9 @@ import {
   toDouble as ballDouble,
   fromRational as ballRational,
   finish as finishBall,
+  MAX_EXPONENT,
   MAX_RAD,
+  overflow,
 } from "../ball/data.ts";
 import {
   absBig,
@@ -58,8 +59,6 @@ export function along(d: Disc): Ball {
   return { man: d.axis === "imaginary" ? d.im : d.re, exp: d.exp, rad: d.rad };
 }
 
-const MAX_EXPONENT = 2 ** 45;
-
 /** The disc of centre (re + i·im)·2^exp and radius err ulps on the plane, rounded outward to about prec bits of the larger part. */
 export function finish(re: bigint, im: bigint, exp: number, err: number, prec: number): Disc {
   if (err === 0) {
@@ -67,11 +66,7 @@ export function finish(re: bigint, im: bigint, exp: number, err: number, prec: n
     if (re === 0n) return imaginary(finishBall(im, exp, 0, prec));
   }
   if (!(exp < MAX_EXPONENT && exp > -MAX_EXPONENT && err < Infinity)) {
-    throw new DomainError({
-      subject: "number",
-      given: `a result with the binary exponent ${exp}`,
-      expected: "an exponent within ±2^45",
-    });
+    throw overflow(exp);
   }
   let drop = Math.max(bitLength(re, prec), bitLength(im, prec)) - prec;
   if (err > MAX_RAD) drop = Math.max(drop, exponent(err) - 30);

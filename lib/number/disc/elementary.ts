@@ -4,6 +4,7 @@ import * as real from "../ball/arithmetic.ts";
 import { type Ball, containsZero as ballContainsZero, sign } from "../ball/data.ts";
 import { exp as ballExp, radiusExponent } from "../ball/exp.ts";
 import { sinhCosh } from "../ball/hyperbolic.ts";
+import { shownPair } from "../ball/shown.ts";
 import { sinCos as ballSinCos } from "../ball/trig.ts";
 import { absBig, bitLength, DOWN, scaledRadius, shift, size, sizePower, UP } from "../fixed/bits.ts";
 import { complexSqrt } from "../fixed/complex-sqrt.ts";
@@ -21,6 +22,7 @@ import {
   imag,
   imaginary,
   isZero,
+  real as realPart,
   zero,
 } from "./data.ts";
 
@@ -71,7 +73,7 @@ export function meetsCut(x: Disc): boolean {
 export function onCut(subject: string, x: Disc): BranchError {
   return new BranchError({
     subject,
-    given: containsZero(x) ? "an enclosure that holds 0" : "an enclosure that meets the negative real axis",
+    given: `${shownPair(realPart(x), imag(x))}, which ${containsZero(x) ? "holds 0" : "meets the negative real axis"}`,
     expected: "one that is away from the cut",
     hint: 'Give a sharper argument, or { cut: "continuous" } to go on across the cut from the midpoint.',
   });

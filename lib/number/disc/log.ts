@@ -44,8 +44,8 @@ export function arg(x: Disc, prec: number, options: CutOptions = {}): Ball {
 export function ln(x: Disc, prec: number, options: CutOptions = {}): Disc {
   if (isZero(x)) throw new DomainError({ subject: "ln", given: "0", expected: "a number other than 0" });
   if (x.axis === "real" && sign(along(x)) === 1) return fromBall(ballLn(along(x), prec));
-  const angle = arg({ ...x, rad: x.axis === "real" ? x.rad : 0 }, prec + 4, options);
   if (containsZero(x) || (options.cut === undefined && meetsCut(x))) throw onCut("ln", x);
+  const angle = arg({ ...x, rad: x.axis === "real" ? x.rad : 0 }, prec + 4, options);
   const norm: Ball = { man: x.re * x.re + x.im * x.im, exp: 2 * x.exp, rad: 0 };
   const middle = fromBalls(real.ldexp(ballLn(norm, prec + 4), -1), angle, prec + 4);
   if (x.rad === 0) return round(middle, prec);

@@ -54,7 +54,7 @@ const kernel = await startKernel(readConnection(argv[argv.indexOf("-f") + 1]), {
   createCells: async (o) => createCells(o),
 });
 handleSignals({ interrupt: kernel.interrupt, end: argv.includes("--stubborn") ? () => {} : kernel.end });
-watchParent(kernel.end);
+watchParent(process.ppid, kernel.end);
 if (argv.includes("--stubborn")) setInterval(() => {}, 1000);
 await kernel.ended;
 if (!argv.includes("--stubborn")) process.exit(0);

@@ -169,8 +169,13 @@ it("what a cell shows aside and proposes is in the reply, one proposal at most â
 });
 
 it("late text goes to the cell that started it, with no new busy â€” oracle: protocol", async () => {
-  const starter = await test.client.execute("later 60 tick");
-  const other = await test.client.execute("sleep 120\nprint own");
+  const before = test.cells.requests.length;
+  const starter = await test.client.execute("later tick");
+  const id = await test.client.send("shell", "execute_request", { code: "hold\nprint own" });
+  await hasBegun(before + 2);
+  await test.cells.timers();
+  test.cells.release();
+  const other = await test.client.exchange(id);
   expect(texts(test.client.of(starter.id), "stdout")).toEqual(["tick"]);
   expect(texts(test.client.of(other.id), "stdout")).toEqual(["own"]);
   expect(summary(test.client.of(starter.id))).toEqual(["busy", "execute_input", "idle", "stream"]);

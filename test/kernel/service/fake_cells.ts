@@ -9,10 +9,8 @@ import type {
   MimeBundle,
 } from "../../../kernel/cell/port.ts";
 
-const sleep = (ms: number) => new Promise<void>((resolve) => setTimeout(resolve, ms));
-
 /**
- * print TEXT | warn TEXT | show TEXT | update ID TEXT | clear | page TEXT | propose TEXT | replace TEXT | oddly (a bundle that is no JSON) | odd (such a value) | value TEXT | fail TEXT | sleep MS | hang | hold (until `release`) | later MS TEXT |
+ * print TEXT | warn TEXT | show TEXT | update ID TEXT | clear | page TEXT | propose TEXT | replace TEXT | oddly (a bundle that is no JSON) | odd (such a value) | value TEXT | fail TEXT | hang | hold (until `release`) | later TEXT (at `timers`) |
  * ask PROMPT; TEXT is read as a JSON string if it is one.
  */
 export class FakeCells implements CellSession {
@@ -22,6 +20,7 @@ export class FakeCells implements CellSession {
   private readonly options: CellSessionOptions;
   /** Lets the cell that holds go on. */
   release: () => void = () => {};
+  private readonly late: (() => Promise<void>)[] = [];
   private stop: (() => void) | undefined;
   private answer: ((value: string | null) => void) | undefined;
 
@@ -39,6 +38,11 @@ export class FakeCells implements CellSession {
     const outcome = await Promise.race([this.run(request), stopped]);
     this.stop = undefined;
     return outcome;
+  }
+
+  /** What cells have put off happens now. */
+  async timers(): Promise<void> {
+    for (const act of this.late.splice(0)) await act();
   }
 
   answerInput(value: string | null): void {
@@ -100,9 +104,7 @@ export class FakeCells implements CellSession {
     if (verb === "page") await onEvent({ type: "page", cell, data });
     if (verb === "propose") await onEvent({ type: "propose", cell, code: text, replace: false });
     if (verb === "replace") await onEvent({ type: "propose", cell, code: text, replace: true });
-    if (verb === "sleep") await sleep(Number(text));
-    if (verb === "later")
-      void sleep(Number(text.split(" ")[0])).then(() => this.act(cell, "print", text.split(" ")[1]!));
+    if (verb === "later") this.late.push(() => this.act(cell, "print", text));
   }
 
   private held(): Promise<void> {

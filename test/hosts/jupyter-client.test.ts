@@ -77,6 +77,6 @@ describe.skipIf(absent !== "")("Python's jupyter_client", () => {
   it("shuts down by itself and leaves no process", () => {
     expect(facts.family_size).toBeGreaterThan(1);
     expect(facts.shutdown_status).toBe(0);
-    expect(facts.left_alive).toEqual([]);
+    expect(facts.all_gone).toBe(true);
   });
 });

@@ -2,28 +2,12 @@
 import json
 import os
 import sys
-import time
 from queue import Empty
 
 from jupyter_client.manager import KernelManager
 
-
-def descendants(pid):
-    try:
-        with open(f"/proc/{pid}/task/{pid}/children") as file:
-            children = [int(word) for word in file.read().split()]
-    except FileNotFoundError:
-        return []
-    return children + [below for child in children for below in descendants(child)]
-
-
-def alive(pid):
-    try:
-        with open(f"/proc/{pid}/stat") as file:
-            return file.read().rsplit(")", 1)[1].split()[0] != "Z"
-    except FileNotFoundError:
-        return False
-
+sys.path.insert(0, os.path.join(os.path.dirname(os.path.abspath(__file__)), "protocol"))
+from common import descendants, gone, hears  # noqa: E402
 
 class Session:
     def __init__(self):
@@ -69,13 +53,9 @@ class Session:
         }
 
     def interrupt(self, code):
-        """Starts endless code, interrupts it, and tells how it ended."""
+        """Starts endless code, interrupts it when it has printed, and tells how it ended."""
         msg_id = self.client.execute(code)
-        while True:
-            message = self.client.get_iopub_msg(timeout=30)
-            if message["msg_type"] == "execute_input" and message["parent_header"].get("msg_id") == msg_id:
-                break
-        time.sleep(1.0)
+        hears(self.client, msg_id, "stream")
         self.manager.interrupt_kernel()
         reply = self.client.get_shell_msg(timeout=30)
         heard = self.outputs(msg_id)
@@ -103,9 +83,11 @@ def main():
         facts["type_error"] = session.execute('const wrong: number = "a"')
         facts["thrown"] = session.execute('\nthrow new RangeError("deliberate")')
         facts["after_error"] = session.execute("let kept = 41; kept + 1")
-        facts["interrupt_loop"] = session.interrupt("while (true) {}")
-        facts["interrupt_wait"] = session.interrupt("await new Promise(() => {})")
-        facts["interrupt_timer"] = session.interrupt("setTimeout(() => { while (true) {} }, 10); await new Promise(() => {})")
+        facts["interrupt_loop"] = session.interrupt('console.log("begun"); while (true) {}')
+        facts["interrupt_wait"] = session.interrupt('console.log("begun"); await new Promise(() => {})')
+        facts["interrupt_timer"] = session.interrupt(
+            'setTimeout(() => { console.log("begun"); while (true) {} }, 10); await new Promise(() => {})'
+        )
         facts["after_interrupt"] = session.execute("kept")
         emoji = 'const party = "🎉🎉"; latt'
         facts["completion"] = session.complete(emoji, len(emoji))
@@ -127,10 +109,7 @@ def main():
         session.manager.shutdown_wait_time = 60  # it is to go by itself: no signal before
         session.manager.shutdown_kernel(now=False)
         facts["shutdown_status"] = process.returncode
-        deadline = time.monotonic() + 30
-        while any(alive(pid) for pid in family) and time.monotonic() < deadline:
-            time.sleep(0.05)
-        facts["left_alive"] = [pid for pid in family if alive(pid)]
+        facts["all_gone"] = gone(family, 30)
     except Empty:
         facts["timed_out"] = True
     finally:

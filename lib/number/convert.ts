@@ -9,6 +9,7 @@ import { type Enclosure, type Exact, isDisc } from "./origin.ts";
 import { Quadratic } from "./quadratic.ts";
 import { Rational } from "./rational.ts";
 import { type Piece, readExact, widened } from "./read.ts";
+import { i } from "./symbols.ts";
 import { Complex, type ComplexNumeric, type Numeric, Real, scalar } from "./values.ts";
 
 /** A real value from anything that stands for one. Throws TypeError for complex input, DomainError for unreadable text, NaN and infinities. */
@@ -35,6 +36,9 @@ export function real(x: Numeric): Real {
 export function complex(re: ComplexNumeric, im?: Numeric): Complex {
   return im === undefined ? Complex.from(re) : Complex.of(Real.from(re as Numeric), im);
 }
+
+/** The imaginary unit, also where i is a name of the user's own. */
+complex.i = i;
 
 /**
  * rational("22/7"), rational("0.125"), rational(3n, 4n): an exact rational number.

@@ -1,6 +1,7 @@
 // Runs cells one after another: the part before the first await inside the boundary that a signal breaks, the rest
 // as promises. Reports one outcome a cell, whatever becomes of it.
 import { join } from "node:path";
+import { setImmediate } from "node:timers";
 import { constants, Script } from "node:vm";
 import type { CellRun } from "../../../lib/page/host.ts";
 import type { ChildCommand } from "../messages.ts";
@@ -48,6 +49,9 @@ interface Running {
   readonly execution: Execution;
   readonly owner: Owner;
   interruptedAt: number;
+  /** Reports how it ended; there as soon as that is known. */
+  report?: () => void;
+  reported: boolean;
 }
 
 /** The part of a cell before its first await: it threw, it is all, or a promise of the rest. */
@@ -90,7 +94,7 @@ export class Runner {
     const { modules, boxes, shared } = this.#parts;
     const execution = new Execution(modules);
     const owner = { cell, allowStdin: command.allowStdin, stopped: false };
-    const running: Running = { command, execution, owner, interruptedAt: 0 };
+    const running: Running = { command, execution, owner, interruptedAt: 0, reported: false };
     this.#running = running;
     Atomics.store(shared, CELL, cell);
     if (this.#interruptEarly === cell || this.#parts.stops.stopped === cell) {
@@ -194,11 +198,22 @@ export class Runner {
     return interruptReport(noted === running.command.cell ? place : []);
   }
 
-  /** Reports the outcome of a cell, once. */
+  /** Ends a cell, once. */
   #finish(running: Running, error?: ErrorReport, result?: Shown): void {
     if (running.execution.closed) return;
     running.execution.closed = true;
     running.owner.stopped = error?.ename === INTERRUPTED;
+    running.report = () => this.#report(running, error, result);
+    // What an interrupted cell left in the queue of ticks would keep the next one from beginning. So it counts as ended when
+    // the event loop has gone round; until then the watchdog goes on.
+    if (running.owner.stopped) setImmediate(running.report);
+    else running.report();
+  }
+
+  /** Reports the outcome of a cell, once. */
+  #report(running: Running, error?: ErrorReport, result?: Shown): void {
+    if (running.reported) return;
+    running.reported = true;
     const { shared, reporter } = this.#parts;
     // A stop that unwound the boundary has left Node without its handler: the next signal would end the process.
     if (process.listenerCount("SIGINT") === 0) process.on("SIGINT", () => {});
@@ -249,7 +264,9 @@ export class Runner {
     const running = this.#running;
     const { stopped } = this.#parts.stops;
     if (!running || running.command.cell !== cell) return;
-    if (stopped === cell) this.#finish(running, this.#interrupted(running));
+    // A stop may have torn the turn of the event loop that was to report.
+    if (running.report) setImmediate(running.report);
+    else if (stopped === cell) this.#finish(running, this.#interrupted(running));
     else if (running.interruptedAt && Date.now() - running.interruptedAt > GRACE) {
       this.#finish(running, this.#interrupted(running));
     }

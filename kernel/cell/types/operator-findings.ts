@@ -37,6 +37,8 @@ const BITWISE = new Set([
   ts.SyntaxKind.GreaterThanGreaterThanGreaterThanToken,
 ]);
 
+/** Methods of a Map or a Set that take a key. */
+const KEYED = new Set(["get", "has", "set", "add", "delete"]);
 const SEARCHES = new Set(["includes", "indexOf", "lastIndexOf"]);
 
 const EQUALS_HINT = "Two library values are told apart by a.equals(b), which answers yes, no, or that it is undecided.";
@@ -150,6 +152,7 @@ function checkPlain(node: TS.Node, values: Values, report: Report): void {
     checkTruth(node.expression, values, report);
   } else if (ts.isConditionalExpression(node)) checkTruth(node.condition, values, report);
   else if (ts.isCallExpression(node)) checkSearch(node, values, report);
+  else if (ts.isNewExpression(node)) checkKeys(node, values, report);
 }
 
 function checkBinary(node: TS.BinaryExpression, values: Values, report: Report): void {
@@ -216,6 +219,14 @@ function checkTruth(node: TS.Expression, values: Values, report: Report): void {
 function checkSearch(node: TS.CallExpression, values: Values, report: Report): void {
   const callee = node.expression;
   const [sought] = node.arguments;
+  if (ts.isPropertyAccessExpression(callee) && KEYED.has(callee.name.text) && sought) {
+    const holder = values.typeOf(callee.expression);
+    if (values.keysOf(holder).length > 0 && values.mayBeLibrary(values.typeOf(sought))) {
+      const name = holder.symbol.name.replace("Readonly", "");
+      report(callee.name.getStart(), callee.name.end, `${keyed(`a ${name}`)} ${EQUALS_HINT}`);
+    }
+    return;
+  }
   if (!ts.isPropertyAccessExpression(callee) || !SEARCHES.has(callee.name.text) || !sought) return;
   const list = values.typeOf(callee.expression);
   if (values.isLibrary(list) || !values.mayBeLibrary(values.typeOf(sought))) return;
@@ -224,4 +235,16 @@ function checkSearch(node: TS.CallExpression, values: Values, report: Report): v
     callee.name.end,
     `${callee.name.text} compares with ===. Write list.some((x) => x.equals(...)). ${EQUALS_HINT}`,
   );
+}
+
+/** `new Map([[P, 1]])`: what is looked up by === is never found again. */
+function checkKeys(node: TS.NewExpression, values: Values, report: Report): void {
+  const [key] = values.keysOf(values.typeOf(node));
+  if (!key || !values.isLibrary(key)) return;
+  const name = node.expression.getText();
+  report(node.expression.getStart(), node.expression.end, `${keyed(name)} ${EQUALS_HINT}`);
+}
+
+function keyed(name: string): string {
+  return `${name} finds what it holds by ===. Use a text for each value, such as String(x), or a list with some((x) => x.equals(...)).`;
 }

@@ -9,7 +9,7 @@ import type { Values } from "./values.ts";
 
 /** Letters of the library that a name of the notebook is easily given. */
 const HIDDEN: Readonly<Record<string, string>> = {
-  i: "the imaginary unit; complex(0, 1) still is it",
+  i: "the imaginary unit; complex.i still is it",
   π: "the number π",
 };
 

@@ -49,6 +49,12 @@ export class Values {
     return members(known).every((part) => (part.flags & PLAIN) !== 0);
   }
 
+  /** What a Map or a Set is looked up by; none of any other type. Weak ones are meant to go by the object. */
+  keysOf(type: TS.Type): readonly TS.Type[] {
+    if (!/^(?:Readonly)?(?:Map|Set)$/.test(type.symbol?.name ?? "")) return [];
+    return this.#checker.getTypeArguments(type as TS.TypeReference).slice(0, 1);
+  }
+
   isText(type: TS.Type): boolean {
     return members(this.#known(type)).every((part) => (part.flags & ts.TypeFlags.StringLike) !== 0);
   }

@@ -15,6 +15,10 @@ describe("errors with a hint", () => {
     ["2π", "A product needs its sign: 2*π."],
     ["F = 3", "Write const F = ... to give it a value."],
     ["w ^ 2", "A power is written **."],
+    ["new Map([[w, 2]])", "Map finds what it holds by ===. Use a text for each value"],
+    ["new Set([w])", "Set finds what it holds by ==="],
+    ["const seen = new Set<unknown>(); seen.has(w)", "a Set finds what it holds by ==="],
+    ["const table = new Map<unknown, number>(); table.set(w, 1)", "a Map finds what it holds by ==="],
     ["let s = 0; for (const k of list) s += k * w", "Begin with a library value: let s = real(0)."],
     ["const q = a\n[list]", "This line begins with a bracket and joins the one above"],
     ["const q = a\n(w)", "This line begins with a bracket and joins the one above"],
@@ -28,16 +32,20 @@ describe("notices", () => {
     ["2^10", "2^10 is 8, the exclusive or of the bits; a power is written 2**10."],
     ["1n / 3n", "1n / 3n is 0n: bigints divide without the fraction. Write rational(1, 3)."],
     ["{ const π = 3 }; let i = 5", "From here on i is your own value and hides the imaginary unit"],
+    ["{ let i = 2; void i }; const i = 5; complex.i ** 2", "complex.i still is it"],
     ["let s = w; for (let i = 0; i < 3; i++) s += i * w", "Inside the loop i is its counter"],
   ])("%j", async (code, notice) => {
     await notebook.value(code);
     expect(notebook.output("stderr", notebook.last)).toContain(notice);
   });
 
-  it.each(["6n / 3n", "a ^ 3", "for (let i = 0; i < 3; i++) list.push(i * 2)"])("none for %j", async (code) => {
-    await notebook.value(code);
-    expect(notebook.output("stderr", notebook.last)).toBe("");
-  });
+  it.each(["6n / 3n", "a ^ 3", "for (let i = 0; i < 3; i++) list.push(i * 2)", "new Map([['w', w]]).get('w')"])(
+    "none for %j",
+    async (code) => {
+      await notebook.value(code);
+      expect(notebook.output("stderr", notebook.last)).toBe("");
+    },
+  );
 });
 
 describe("a final { a, b } is an object", () => {

@@ -53,8 +53,17 @@ export function writtenCell(cell: CellToWrite): WrittenCell {
   return { statements: written, after, library: libraryUses(cell), helpers: writer.helpers };
 }
 
+/** Names that are reached through a value or belong to a type, never by themselves. */
+const MEMBER =
+  ts.SymbolFlags.Property |
+  ts.SymbolFlags.Method |
+  ts.SymbolFlags.Accessor |
+  ts.SymbolFlags.EnumMember |
+  ts.SymbolFlags.TypeParameter;
+
 /** Declared outside every function and block of the cell, or brought in behind it. */
 function isTop(symbol: TS.Symbol, source: TS.SourceFile): boolean {
+  if (symbol.flags & MEMBER) return false;
   return (symbol.declarations ?? []).some((declaration) => {
     if (declaration.getSourceFile() !== source) return false;
     for (let up: TS.Node = declaration; ; up = up.parent) {

@@ -56,6 +56,11 @@ describe("operators written out", { timeout: 60_000 }, () => {
     expect(script).toContain("const a2 = 2;\nconst f = (a: number) => a;");
     expect(script).toContain("const { a: a3, b } = t;\nshow([a3, b, t.a, f(a3), { a: a3 }]);");
     expect(script).toContain("const curve = 3;\nshow(curve);");
+    const members = written(
+      "const a = 1",
+      "const a = 2;\nconst t = { a: 5 };\ntype T = { a: number };\nt.a + a + ({ a: 1 } as T).a",
+    );
+    expect(members).toContain("show(t.a + a2 + ({ a: 1 } as T).a);");
     expect(written("curve`y^2 = x^3 - x`", "const curve = 3;\ncurve")).toContain("const curve2 = 3;\nshow(curve2);");
   });
 

@@ -5,7 +5,7 @@ import * as ball from "../number/ball.ts";
 import * as disc from "../number/disc.ts";
 import type { NumberStanding } from "../number/origin.ts";
 import type { Rational } from "../number/rational.ts";
-import { DomainError, UndecidedError } from "../proof/errors.ts";
+import { DomainError, PrecisionError, UndecidedError } from "../proof/errors.ts";
 import { complexPeriods, type PeriodPair, realPeriods } from "./agm-periods.ts";
 import {
   type Canonical,
@@ -24,6 +24,7 @@ import {
   exactComplex,
   exactRational,
   isReal,
+  isRefinable,
   type Quantity,
   standingOf,
 } from "./quantity.ts";
@@ -176,17 +177,30 @@ export function latticeOfInvariants(g2: Quantity, g3: Quantity): PeriodLattice {
   const given = { kind: "invariants", g2, g3 } as const;
   if (isReal(g2) && isReal(g3)) return realInvariants(g2, g3);
   let basis: PeriodPair | undefined;
-  let prec = 64;
-  for (prec of BOUNDARY_LADDER) {
+  let reached = 64;
+  for (const prec of BOUNDARY_LADDER) {
     const delta = discriminant(g2, g3, prec);
     if (disc.isZero(delta)) throw degenerate();
     if (disc.containsZero(delta)) continue;
-    basis = complexPeriods(cubicRoots(discOf(g2, prec + 32), discOf(g3, prec + 32), delta, prec), prec);
+    const found = basisAt(g2, g3, delta, prec);
+    if (!found) continue;
+    basis = found;
+    reached = prec;
     const canonical = canonicalFrom(basis, prec, false);
     if (canonical) return anchored(given, basis, canonical, prec);
   }
   if (!basis) throw singularOrNot();
-  return anchored(given, basis, canonicalUndecided(basis, prec), prec);
+  return anchored(given, basis, canonicalUndecided(basis, reached), reached);
+}
+
+/** A basis by means of enclosures with so many bits, or nothing where the roots are too near each other for these. */
+function basisAt(g2: Quantity, g3: Quantity, delta: disc.Disc, prec: number): PeriodPair | undefined {
+  try {
+    return complexPeriods(cubicRoots(discOf(g2, prec + 32), discOf(g3, prec + 32), delta, prec), prec);
+  } catch (error) {
+    if (error instanceof PrecisionError && prec < BOUNDARY_LADDER.at(-1)!) return undefined;
+    throw error;
+  }
 }
 
 function anchored(
@@ -220,7 +234,7 @@ function realInvariants(g2: Quantity, g3: Quantity): PeriodLattice {
     return { given, standing, ...canonicalReal(delta, s2 ?? 1, s3), conjugation, components };
   }
   const prec = 256;
-  const enclosed = discriminant(g2, g3, prec);
+  const enclosed = sharpDiscriminant(g2, g3, prec);
   const basis = realPeriods(cubicRoots(discOf(g2, prec), discOf(g3, prec), enclosed, prec), components, prec);
   const canonical = canonicalFrom(basis, prec, false) ?? canonicalUndecided(basis, prec);
   return { given, standing, ...canonical, conjugation, components };
@@ -241,6 +255,14 @@ export function discriminant(g2: Quantity, g3: Quantity, prec: number): disc.Dis
   const [x, y] = [discOf(g2, prec + 8), discOf(g3, prec + 8)];
   const cube = disc.mul(disc.sqr(x, prec + 8), x, prec + 8);
   return disc.sub(cube, disc.mulInt(disc.sqr(y, prec + 8), 27n, prec + 8), prec);
+}
+
+/** Δ with about prec bits of its own where the invariants have them: near a double root most bits of g2³ and 27 g3² cancel. */
+export function sharpDiscriminant(g2: Quantity, g3: Quantity, prec: number): disc.Disc {
+  let delta = discriminant(g2, g3, prec);
+  if (!isRefinable(g2) || !isRefinable(g3)) return delta;
+  for (let wp = 2 * prec; disc.bits(delta) < prec - 8 && wp <= prec + 32_768; wp *= 2) delta = discriminant(g2, g3, wp);
+  return delta;
 }
 
 function degenerate(): DomainError {

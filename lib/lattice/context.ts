@@ -10,7 +10,7 @@ import * as disc from "../number/disc.ts";
 import type { Rational } from "../number/rational.ts";
 import { PrecisionError } from "../proof/errors.ts";
 import { complexPeriods, type PeriodPair, realPeriods } from "./agm-periods.ts";
-import { discriminant } from "./build.ts";
+import { sharpDiscriminant } from "./build.ts";
 import { matrixBits, transformed } from "./canonical.ts";
 import { type CubicRoots, cubicRoots } from "./cubic.ts";
 import { fixedCubic } from "./fixed-cubic.ts";
@@ -65,12 +65,23 @@ function computePeriods(lattice: PeriodLattice, prec: number): PeriodPair {
   }
   if (given.kind === "periods") return { w1: discOf(given.w1, prec), w2: discOf(given.w2, prec) };
   const refinable = isRefinable(given.g2) && isRefinable(given.g3);
-  let pair = meanPeriods(lattice, prec);
+  let pair = meansWith(lattice, prec, refinable);
   // Roots near each other cost bits; exact input has them.
-  for (let wp = 2 * prec; refinable && accuracy(pair) < prec && wp <= 64 * prec + 4096; wp *= 2) {
-    pair = meanPeriods(lattice, wp);
+  for (let wp = 2 * prec; refinable && !(pair && accuracy(pair) >= prec) && wp <= 64 * prec + 4096; wp *= 2) {
+    pair = meansWith(lattice, wp, true);
   }
+  pair ??= meanPeriods(lattice, prec);
   return { w1: disc.round(pair.w1, prec), w2: disc.round(pair.w2, prec) };
+}
+
+/** The periods with that many bits; nothing where they do not do and there are more. */
+function meansWith(lattice: PeriodLattice, wp: number, more: boolean): PeriodPair | undefined {
+  try {
+    return meanPeriods(lattice, wp);
+  } catch (error) {
+    if (more && error instanceof PrecisionError) return undefined;
+    throw error;
+  }
 }
 
 /** q·w for a rational q. */
@@ -100,7 +111,7 @@ function cubic(lattice: PeriodLattice, prec: number): CubicRoots {
   const { given } = lattice;
   if (given.kind !== "invariants") throw new TypeError("the cubic of a lattice that was given by periods");
   const [g2, g3] = [discOf(given.g2, prec + 24), discOf(given.g3, prec + 24)];
-  return cubicRoots(g2, g3, discriminant(given.g2, given.g3, prec + 24), prec);
+  return cubicRoots(g2, g3, sharpDiscriminant(given.g2, given.g3, prec + 24), prec);
 }
 
 /** The chain for logarithms of real points with so many bits, if there is one in fixed point. */

@@ -1,6 +1,7 @@
 // Real and complex enclosures against mpmath (with gmpy2) and Arb, side by side. Yardsticks that are not installed are left out.
 //   node --single-threaded test/bench/number.mjs [digits,digits,...] [seconds a measurement]
 // (single-threaded, so that the processor time is that of the calculation and not of the collector's helpers beside it)
+// Constants (π, logarithms of primes, ...) are warm on all sides: each keeps its own between calls.
 // Same inputs and the same number of bits on all sides; every time is processor time, the best of many rounds after a warm-up.
 import { execFileSync, spawnSync } from "node:child_process";
 import { mkdtempSync } from "node:fs";
@@ -92,7 +93,8 @@ const program = compiledArb();
 const arb = (digits) =>
   program ? parsed(execFileSync(program, [String(digits), String(budget)], { encoding: "utf8" })) : new Map();
 
-const ROUNDS = 4;
+// More where a call takes long, so that the best of them does not hang on a busy moment.
+const rounds = (digits) => (digits >= 5000 ? 8 : 4);
 
 function keepLeast(kept, fresh) {
   for (const [name, ns] of fresh) kept.set(name, Math.min(ns, kept.get(name) ?? Infinity));
@@ -114,7 +116,7 @@ const growth = new Map();
 for (const digits of digitList) {
   // The three take turns, so that a busy moment of the machine does not fall on one of them alone.
   const [mine, theirs, ball_] = [new Map(), new Map(), new Map()];
-  for (let round = 0; round < ROUNDS; round++) {
+  for (let round = 0; round < rounds(digits); round++) {
     keepLeast(mine, ours(digits));
     keepLeast(theirs, mpmath(digits));
     keepLeast(ball_, arb(digits));

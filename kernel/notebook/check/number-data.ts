@@ -18,6 +18,10 @@ export interface Enclosed {
 /** Digits by which the accuracy of one value may vary from run to run: its radius is rounded, its size is counted roughly. */
 const SLACK = 2;
 
+/** A stored number with fewer digits than FEW, where ENOUGH more are proved now, is no number to compare with. */
+const FEW = 3;
+const ENOUGH = 7;
+
 const ZERO = Rational.zero;
 const KINDS = new Set(["rational", "quadratic", "real", "complex"]);
 
@@ -40,6 +44,12 @@ export function compareNumbers(stored: NumberData, fresh: NumberData, where: str
   if (!overlaps(before, now))
     return verdict("differs", `${where}: was ${show(stored)}, is ${show(fresh)}${relation(before, now)}`);
   const [had, has] = [accuracy(before), accuracy(now)];
+  // An enclosure around a proved number that holds hardly a digit agrees with anything near: nothing was confirmed.
+  if (stored.standing === "defined" && had < FEW && has >= FEW + ENOUGH)
+    return verdict(
+      "weaker",
+      `${where}: ${has} digits are proved, the stored enclosure is so wide that it can only overlap`,
+    );
   if (has >= Math.min(had, digits) - SLACK) return SAME;
   return verdict("weaker", `${where}: ${has} digits are proved, ${had} were`);
 }

@@ -82,6 +82,8 @@ describe("numbers compared by what they are", () => {
 
   it("weaker, not same: an enclosure so wide that it can only overlap — unless fewer digits were asked for", () => {
     expect(finding(x, real("1e-1", "1e-1"))).toBe("weaker");
+    expect(finding({ ...real("1e-1", "1e-1"), standing: "defined" }, x)).toBe("weaker");
+    expect(finding({ ...real("0", "1e-40"), standing: "defined" }, real("0", "1e-80"))).toBe("same");
     expect(finding(x, real("1234567890e-10", "1e-10"))).toBe("weaker");
     expect(finding(x, real("1234567890e-10", "1e-10"), 10)).toBe("same");
     expect(finding(rational("1/2"), real("5e-1", "1e-30"))).toBe("weaker");

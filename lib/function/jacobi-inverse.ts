@@ -4,7 +4,7 @@
 import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { DomainError } from "../proof/errors.ts";
-import { carlsonRF } from "./carlson-first.ts";
+import { carlsonRF, duplicatedRF } from "./carlson-first.ts";
 import type { JacobiName } from "./jacobi-values.ts";
 import { completeK, type Modulus } from "./legendre-complete.ts";
 
@@ -18,7 +18,8 @@ const RECIPROCAL: Readonly<Record<string, Principal>> = { ns: "sn", cs: "sc", ds
  * sn, sc, sd and their reciprocals, in [0, 2K] for cn and cd and theirs, in [0, K] for dn and nd.
  *
  * Domain   x and m such that the three arguments of RF stay off the negative real axis.
- * Branch   principal roots; f(−x) = −f(x) for the odd ones, f(−x) = 2K − f(x) for cn, cd and Re x < 0.
+ * Branch   principal roots; f(−x) = −f(x) for the odd ones, f(−x) = 2K − f(x) for cn, cd and Re x < 0. Cuts where an argument of RF is negative; for cn and cd
+ *          the imaginary axis near 0 is none.
  * Error    enclosure, relative where no root is near its zero.
  * Cost     an RF, and K for Re x < 0 in cn and cd.
  * Throws   DomainError where an argument of RF is a negative real number, BranchError for discs that meet the cut.
@@ -47,6 +48,13 @@ function principalInverse(name: Principal, x: Disc, k: Modulus, prec: number, by
   }
   const { front, squares } = parts(name, x, k, wp);
   if (disc.isZero(front)) return disc.zero;
+  // cn and cd are analytic across the imaginary axis, where the first argument of RF is negative but its root x (or k′x) lies on the rim that duplications take.
+  if (even && x.axis === "imaginary" && !disc.isZero(x)) {
+    for (const s of squares.slice(1)) refuse(name, s);
+    const [second, third] = squares.slice(1).map((s) => disc.sqrt(s, wp)) as [Disc, Disc];
+    const first = name === "cn" ? x : disc.mul(x, disc.sqrt(k.m1, wp), wp);
+    return disc.mul(front, duplicatedRF([first, second, third], wp, squares), prec + 2);
+  }
   for (const s of squares) refuse(name, s);
   return disc.mul(front, by.rf(...squares, wp), prec + 2);
 }

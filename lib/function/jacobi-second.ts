@@ -4,6 +4,7 @@ import type { Disc } from "../number/disc.ts";
 import * as disc from "../number/disc.ts";
 import { PoleError } from "../proof/errors.ts";
 import { ontoImaginary, ontoReal } from "./enclosure.ts";
+import { nearestZero } from "./jacobi-poles.ts";
 import { type JacobiContext, jacobiContext } from "./jacobi-values.ts";
 import { completeE, type Modulus } from "./legendre-complete.ts";
 import { cellPoint, cellSums } from "./theta-values.ts";
@@ -64,8 +65,8 @@ function logDerivative(context: JacobiContext, u: Disc): Disc {
   if (disc.containsZero(s0)) {
     throw new PoleError({
       subject: "epsilon",
-      given: "an argument that is a pole of dn, or cannot be told from one",
-      expected: "an argument away from the poles",
+      given: `an argument that is, or cannot be told from, the pole ${nearestZero("n", u, context.quarter, context.coQuarter)}`,
+      expected: "an argument away from the poles of dn",
       argument: "u",
     });
   }

@@ -148,19 +148,22 @@ function partB({ s, c, delta, c2, delta2, s2 }: Amplitude, { m1 }: Modulus, wp: 
  * E(φ | m) = ∫_0^φ √(1 − m sin²θ) dθ.
  *
  * Domain, Branch, Cost, Throws   as F with an RD; m = 1 allowed everywhere.
- * Error    enclosure; for real m <= 1 nothing cancels: E = F − m D for m <= 0, else B + m1 D.
+ * Error    enclosure; E = F − m D cancels nothing for real m <= 0, and 4 bits for 0 < m < 1 and Δ > 1/4, where Δ φ <= E and F <= φ/Δ make E/F >= Δ²
+ *          (Δ falls on the way). For other m, B + m1 D where Δ is not small.
  * Source   DLMF 19.2.5, 19.25.9–19.25.11.
  */
 export function incompleteE(phi: Disc, k: Modulus, prec: number): Disc {
   if (disc.isZero(phi)) return disc.zero;
-  const wp = prec + 16;
+  const wp = prec + 20;
   const a = amplitude(phi, k, wp);
   return continued(a, partE(a, k, wp), () => completeE(k, wp), prec);
 }
 
 function partE(a: Amplitude, k: Modulus, wp: number): Disc {
   if (disc.isZero(k.m1)) return a.s;
-  const byB = lowMagnitude(a.delta) > -2 && !(k.m.axis === "real" && k.m.re <= 0n);
+  // Real m < 1: F has a mean, so that F and D cost less than B and D.
+  const below = k.m.axis === "real" && k.m1.axis === "real" && k.m1.re > 0n && !disc.containsZero(k.m1);
+  const byB = lowMagnitude(a.delta) > -2 && !below;
   if (!byB) return disc.sub(partF(a, wp), disc.mul(k.m, partD(a, wp), wp), wp);
   return disc.add(partB(a, k, wp), disc.mul(k.m1, partD(a, wp), wp), wp);
 }

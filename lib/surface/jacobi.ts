@@ -150,9 +150,16 @@ export class Jacobi {
   }
 
   /**
-   * The amplitude am(u) = ∫_0^u dn along the segment from 0 to u, with sn = sin am and cn = cos am.
-   * Domain   any u and m for which no pole of dn lies on the segment. Branch cuts run from the poles outward, away from 0; across one am jumps by 2π.
-   * Error    proved. Throws DomainError, with the pole named, where the segment meets one. Source DLMF 22.16(i).
+   * The amplitude am(u) = ∫_0^u dn along the segment from 0 to u, with sn = sin am and cn = cos am; odd.
+   *
+   * Domain   any u and m for which no pole of dn lies on the segment.
+   * Branch   cuts run from each pole (iK′ modulo 2K and 2iK′) outward, away from 0, along the ray from 0 through it; across one am jumps by 2π. On the cut
+   *          itself am has no value here, from neither side: it is refused, with the pole named. An argument beside it says the side. For real u and
+   *          m < 1 there is no cut: am(u + 2K) = am(u) + π; for real m > 1 am stays between ± arcsin(1/√m).
+   * Error    proved. An enclosure of u is followed from its midpoint; one that a cut may pass through has the value of that side, and where it
+   *          holds a pole sn and cn have none, which is refused.
+   * Throws   DomainError where the segment meets a pole. Source DLMF 22.16(i).
+   * @example jacobi({ m: "1/3" }).am(1)   // 0.95476267676528002382...
    */
   am(u: ComplexNumeric): Value {
     return this.odd(AMPLITUDE, u);
@@ -168,7 +175,10 @@ export class Jacobi {
     return this.odd(ZETA, u);
   }
 
-  // The inverses throw DomainError for a real x that the function does not take on the real line. Source DLMF 22.15(ii).
+  // The inverses are pq⁻¹(x) = front·RF(..) with principal roots (DLMF 22.15(ii), 19.25.30). Their cuts lie where an argument of RF is negative: for 0 < m < 1
+  // on the real line outside of the values that pq takes there (arcsn: |x| > 1), and for the odd ones also along the imaginary axis beyond its branch points.
+  // On a cut a real x is refused with DomainError, neither side being preferred; an x beside it has the value of its side; an enclosure that meets a cut throws
+  // BranchError.
 
   /** A u with sn(u) = x: in [−K, K] for real x and 0 < m < 1, by principal roots elsewhere. */
   arcsn(x: ComplexNumeric): Value {

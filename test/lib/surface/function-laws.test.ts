@@ -124,6 +124,29 @@ describe("Jacobi's and Legendre's functions", () => {
     );
   });
 
+  it("arccn and arccd go on across the imaginary axis — oracle: the function back, and values beside", () => {
+    fc.assert(
+      fc.property(parameter, between(0.01, 0.99), fc.boolean(), (m, part, down) => {
+        const J = jacobi({ m });
+        // Below the branch points ik′/k of arccn and i/k (further out) of arccd.
+        const y = complex(Rational.one.minus(m).div(m), 0)
+          .sqrt()
+          .times(part)
+          .times(down ? -1 : 1);
+        const [x, beside] = [y.times(i), y.times(i).plus("1e-9")];
+        for (const [f, back] of [
+          [J.arccn(x), J.cn(J.arccn(x))],
+          [J.arccd(x), J.cd(J.arccd(x))],
+        ] as const) {
+          same(back, x);
+          const near = [J.arccn(beside), J.arccd(beside)].map((v) => Complex.from(v).minus(f).abs().toDouble());
+          expect(Math.min(...near)).toBeLessThan(1e-5);
+        }
+      }),
+      RUNS,
+    );
+  });
+
   it("Legendre's relation, and K′ of m is K of 1 − m — oracle: DLMF 19.7.1", () => {
     fc.assert(
       fc.property(parameter, (m) => {

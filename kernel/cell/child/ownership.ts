@@ -22,3 +22,8 @@ export function own<T>(owner: Owner, body: () => T): T {
 export function currentOwner(): Owner {
   return storage.getStore() ?? latest;
 }
+
+/** The cell that started the running code, undefined where that is not known. */
+export function knownOwner(): Owner | undefined {
+  return storage.getStore();
+}

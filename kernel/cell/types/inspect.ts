@@ -18,7 +18,7 @@ export function inspect(types: NotebookTypes, code: string, offset: number, deta
   for (const place of places(code, offset)) {
     const at = edited.toEdited(place);
     const found = types.service.getQuickInfoAtPosition(file, at);
-    if (!found) continue;
+    if (!found || isNothing(found)) continue;
     const text = code.slice(
       edited.toUser(found.textSpan.start),
       edited.toUser(found.textSpan.start + found.textSpan.length),
@@ -27,6 +27,11 @@ export function inspect(types: NotebookTypes, code: string, offset: number, deta
     return { data: bundle(types, file, at, found, detail), ...(known && { name: text }) };
   }
   return undefined;
+}
+
+// A name that is declared nowhere: the service gives it the type any, and no kind.
+function isNothing({ kind, displayParts = [] }: TS.QuickInfo): boolean {
+  return kind === "" && displayParts.map(({ text }) => text).join("") === "any";
 }
 
 function isMember(code: string, start: number): boolean {

@@ -1,6 +1,7 @@
 import type { ExecuteOutcome } from "../../cell/port.ts";
 import type { Json } from "../../wire/message.ts";
 import { flag, requiredText, textEntries } from "../fields.ts";
+import { onePage } from "../pages.ts";
 import type { Run } from "../runs.ts";
 import { type Answer, failure, type Handler, type Service } from "../service.ts";
 
@@ -108,7 +109,7 @@ function replyContent(outcome: ExecuteOutcome, count: number, { payload }: Run):
     const { ename, evalue, traceback } = outcome;
     return { status: "error", execution_count: count, ename, evalue, traceback };
   }
-  return { status: "ok", execution_count: count, payload, user_expressions: outcome.userExpressions };
+  return { status: "ok", execution_count: count, payload: onePage(payload), user_expressions: outcome.userExpressions };
 }
 
 function plainText(outcome: ExecuteOutcome & { status: "ok" }): string | null {

@@ -84,8 +84,9 @@ class Requests(Shared):
                 content = self.ask("inspect_request", {"code": code, "cursor_pos": position, "detail_level": 0}).content
                 self.assertTrue(content["found"])
                 self.assertIn("hypot", content["data"]["text/plain"])
-        nothing = self.ask("inspect_request", {"code": "   ", "cursor_pos": 1, "detail_level": 1}).content
-        self.assertEqual((nothing["found"], nothing["data"]), (False, {}))
+        for code in ("   ", "no_such_name"):
+            nothing = self.ask("inspect_request", {"code": code, "cursor_pos": 1, "detail_level": 1}).content
+            self.assertEqual((nothing["found"], nothing["data"]), (False, {}))
 
     def test_is_complete(self):
         """is_complete parses only, and answers within a second"""

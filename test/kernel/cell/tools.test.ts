@@ -82,6 +82,12 @@ async function inspected(marked: string, detail: 0 | 1 = 0): Promise<string> {
 }
 
 describe("inspection", () => {
+  it("finds nothing of a name that is declared nowhere — oracle: no declaration", async () => {
+    for (const code of ["no_such_name", "no_such_name(1, "]) {
+      expect(await notebook.session.inspect(code, code.length, 0)).toBeUndefined();
+    }
+  });
+
   it("signature, documentation and current value of a variable", async () => {
     const text = await inspected("w|");
     expect(text).toContain("w: Real");

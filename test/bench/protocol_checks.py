@@ -285,7 +285,7 @@ def replayed_messages(k):
     assert k.value("kept") == "42", k.value("kept")
 
 
-def half_messages(k):
+def half_messages_on_every_socket(k):
     for channel in ("shell", "control", "stdin", "iopub", "hb"):
         for data in half_messages():
             with socket.create_connection(("127.0.0.1", k.connection[channel + "_port"])) as connected:

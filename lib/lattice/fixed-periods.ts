@@ -9,9 +9,10 @@ import * as disc from "../number/disc.ts";
 import { agmFixed } from "../number/fixed/agm.ts";
 import { bitLength, pow2, UP } from "../number/fixed/bits.ts";
 import { sqrtNear } from "../number/fixed/isqrt.ts";
+import { LONG } from "../number/fixed/means-series.ts";
 import type { PeriodPair } from "./agm-periods.ts";
 import { type Counted, fixedCubic, toDouble } from "./fixed-cubic.ts";
-import { LONG, reciprocalMean } from "./reciprocal-mean.ts";
+import { reciprocalMean } from "./reciprocal-mean.ts";
 
 /** Guard bits: the mean of the kernel is off by up to 2^12 units, and the rest is less. */
 const GUARD = 16;

@@ -443,7 +443,8 @@ function joinable(x: Real, y: ComplexNumeric): y is Real {
 function joined(enclosure: Ball, operation: Operation, x: Real, y: Real): Real {
   const depth = Math.max(x.depth, y.depth) + 1;
   if (depth > DEEPEST) return new Real(enclosure, DROPPED[both(x.standing, y.standing)]);
-  return new Real(enclosure, bornOf(x, y), operation, depth, x, y);
+  const born = x.born === DEFINED && y.born === DEFINED ? DEFINED : bornOf(x, y);
+  return new Real(enclosure, born, operation, depth, x, y);
 }
 
 function checkedExponent(n: number): number {

@@ -1,5 +1,5 @@
 // What the record of a value's origin costs: a chain of 1,000 operations at 50 digits, as values and as bare enclosures.
-//   node test/bench/number-chain.mjs
+//   node --single-threaded test/bench/number-chain.mjs
 import { cpus } from "node:os";
 
 const ball = await import("../../dist/lib/number/ball.js");

@@ -2,6 +2,7 @@
 import { bitLength, pow2, scaled, shift, UP } from "./bits.ts";
 import { boundedCache } from "./cache.ts";
 import { sqrtNear } from "./isqrt.ts";
+import { LONG, MOST_TERMS, reciprocalCoefficient, seriesOfMeans } from "./means-series.ts";
 
 /** agm(1+x, 1−x) = 1 − Σ b_n x^(2n): b_1 .. b_7 times 2^28. */
 const TAIL: readonly bigint[] = [67108864n, 20971520n, 11534336n, 7684096n, 5648384n, 4409088n, 3584064n];
@@ -33,11 +34,24 @@ export function agmFixed(a: bigint, b: bigint, work: number): bigint {
       if (fourth * fourth * fourth * fourth * UP < enough) return closedShort(sum, difference, square, work);
     } else {
       const lost = work - 1 - bitLength(difference, work);
+      if (work >= LONG && 2 * MOST_TERMS * lost >= work) return closedLong(sum, difference, work);
       if (2 * (LONG_TERMS + 1) * lost > work) return closed(sum, difference, lost, work);
     }
     b = sqrtNear(a * b);
     a = sum >> 1n;
   }
+}
+
+/**
+ * The same for long numbers: sum/2·(1 − Σ b_n z^(2n)), z and the sum in units of 2^−work of which the sum is off by 20 (means-series.ts), the last product cut by
+ * one of the result's, which has at least work − 3 bits: a relative error under 2^(8 − work).
+ */
+function closedLong(sum: bigint, difference: bigint, work: number): bigint {
+  const w = shift(work);
+  const z = (difference << w) / sum;
+  const lost = bitLength(sum, work) - 1 - bitLength(difference, work);
+  const series = seriesOfMeans((z * z) >> w, lost, work, reciprocalCoefficient);
+  return (sum - ((sum * series) >> w)) >> 1n;
 }
 
 /** The coefficients in units of 2^-work. */

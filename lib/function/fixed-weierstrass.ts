@@ -265,9 +265,9 @@ function lowered(x: Fixed, k: number): Fixed {
 /**
  * sin 2πv and y = 2 − 2 cos 2πv.
  *
- * Error    Re v − n/4 is at most 1/8 and a little, so the angle is below 1 and off by 2 units (π by 2, times 1/4, and a cut), sine and cosine by 3.
+ * Error    Re v − n/4 is at most 1/8 and a little, so the angle is below 1 and off by 2 units (π by 2, times 1/4, and a cut), sine and cosine, whose own error is under 2, by 4.
  *          b = 2π Im v = m ln 2 + r is off by 2(2·Im v + m) + 2 units at most, m <= 9, e^r by twice that and 2, e^b by 2^m times that. e^−b is below 1 and
- *          off by no more. So cosh b and sinh b are off by E = 2^m (4(2 Im v + m) + 7), and each part of the products by 3 cosh b + E + 1 (and the
+ *          off by no more. So cosh b and sinh b are off by E = 2^m (4(2 Im v + m) + 7), and each part of the products by 4 cosh b + E + 1 (and the
  *          product of the errors, which is nothing). An error of v moves sine and cosine by at most 2π (1 + 2^−20) cosh(b) times it.
  */
 function sineCosine(c: FixedLattice, v: Sized, real: boolean): { readonly sin: Sized; readonly y: Sized } | undefined {
@@ -292,7 +292,7 @@ function sineCosine(c: FixedLattice, v: Sized, real: boolean): { readonly sin: S
   const low = (1n << shift(2 * W)) / up;
   const [cosh, sinh] = [(up + low) >> 1n, (up - low) >> 1n];
   const height = (toDouble(cosh, W) + 2 ** -30) * UP;
-  const each = 3 * height + 2 ** m * (4 * (2 * v.size + m) + 7) + 2;
+  const each = 4 * height + 2 ** m * (4 * (2 * v.size + m) + 7) + 2;
   const err = (ROOT2 * each + 6.3 * height * v.err) * UP;
   const sin: Sized = { re: (sine * cosh) >> w, im: (cosine * sinh) >> w, err, size: (height + 1) * UP };
   const re = (1n << shift(W + 1)) - ((cosine * cosh) >> shift(W - 1));

@@ -3,12 +3,12 @@ import { oddSeries } from "./series.ts";
 import { sinCosFixed } from "./trig.ts";
 
 /**
- * atan(t/2^prec)·2^prec for 0 <= t <= 2^prec; error under 1 unit.
+ * atan(t/2^prec)·2^prec for 0 <= t <= 2^prec; error under 2 units: one of the last cut, and far less than one of the rest.
  *
  * Method   θ0 ≈ atan t from a fraction of the precision (at the bottom a double), s and c its sine and cosine,
  *          w = (t·c − s)/(c + t·s), atan t = θ0 + atan w.
- * Error    the identity holds for any θ0 near, so the start needs no bound. c and s err by a unit each, which moves w by at
- *          most 3; the series for w errs by under N + 1 units; 16 guard bits hold all of it.
+ * Error    the identity holds for any θ0 near, so the start needs no bound. c and s err by two units each, which moves w by at
+ *          most 6; the series for w errs by under N + 1 units; 16 guard bits hold all of it.
  */
 export function atanFixed(t: bigint, prec: number): bigint {
   const work = prec + 16;

@@ -1,4 +1,4 @@
-// exp in fixed point: arguments in [0, 1), results with an error under one unit.
+// exp in fixed point: arguments in [0, 1), results with an error under two units.
 import { bitLength, pow2, scaled, shift } from "./bits.ts";
 import { boundedCache } from "./cache.ts";
 import { sqrtNear } from "./isqrt.ts";

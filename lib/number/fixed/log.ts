@@ -4,11 +4,11 @@ import { expFixed } from "./exp.ts";
 import { oddSeries } from "./series.ts";
 
 /**
- * ln(y/2^prec)·2^prec for 2^prec <= y < 2^(prec+1); error under 1 unit.
+ * ln(y/2^prec)·2^prec for 2^prec <= y < 2^(prec+1); error under 2 units: one of the last cut, and far less than one of the rest.
  *
  * Method   L0 ≈ ln y from a fraction of the precision (at the bottom a double), E = exp(L0), z = (y − E)/(y + E),
  *          ln y = L0 + 2 artanh z.
- * Error    the identity holds for any L0, so the start needs no bound: only |z| enters, and is looked at. E errs by a unit
+ * Error    the identity holds for any L0, so the start needs no bound: only |z| enters, and is looked at. E errs by two units
  *          of a number >= 1, the series by under N + 3; 16 guard bits hold all of it.
  */
 export function lnFixed(y: bigint, prec: number): bigint {

@@ -1,4 +1,5 @@
 // What a cell shows aside, as front ends take it: the classic notebook shows one page a reply, its HTML or else its text.
+import { escapeHtml } from "../../lib/page/html.ts";
 import type { MimeBundle } from "../cell/port.ts";
 import type { Json } from "../wire/message.ts";
 
@@ -20,14 +21,10 @@ function withFigure(data: MimeBundle): MimeBundle {
 function joined(bundles: readonly MimeBundle[]): MimeBundle {
   const text = bundles.map(textOf).join("\n\n");
   if (bundles.every((data) => data["text/html"] === undefined)) return { "text/plain": text };
-  const html = bundles.map((data) => `<div>${data["text/html"] ?? `<pre>${escaped(textOf(data))}</pre>`}</div>`);
+  const html = bundles.map((data) => `<div>${data["text/html"] ?? `<pre>${escapeHtml(textOf(data))}</pre>`}</div>`);
   return { "text/plain": text, "text/html": html.join("\n") };
 }
 
 function textOf(data: MimeBundle): string {
   return String(data["text/plain"] ?? "");
-}
-
-function escaped(text: string): string {
-  return text.replaceAll("&", "&amp;").replaceAll("<", "&lt;").replaceAll(">", "&gt;");
 }

@@ -15,6 +15,7 @@ import type { Expression } from "../lattice/field/operations.ts";
 import { exactScalar } from "../lattice/field/scalar.ts";
 import { difference } from "../lattice/field/substitute.ts";
 import type { PeriodLattice } from "../lattice/period-lattice.ts";
+import { sameExact } from "../number/exactness.ts";
 import { asDisc, refineEnclosure } from "../number/origin.ts";
 import { Rational } from "../number/rational.ts";
 import { apply, Complex, type Real } from "../number/values.ts";
@@ -52,7 +53,11 @@ function isOwnMirror(p: TorusPoint): boolean {
 function isSame(p: TorusPoint, q: TorusPoint): boolean {
   const gap = p.minus(q);
   if (!gap.coordinates.every((r) => r.isInteger())) return false;
-  return !gap.remainder || `${gap.remainder.exact ?? "?"}` === "0";
+  return !gap.remainder || isExactZero(gap.remainder);
+}
+
+function isExactZero({ exact }: Real | Complex): boolean {
+  return exact !== undefined && sameExact(exact, Rational.zero);
 }
 
 /** The factors of the denominator, one for p and −p together. */
@@ -160,7 +165,7 @@ function isEven(parts: readonly TorusPart[]): boolean {
     if (mirror?.coefficients.length !== coefficients.length) return false;
     return coefficients.every((c, k) => {
       const gap = k % 2 === 1 ? c.minus(mirror.coefficients[k]!) : c.plus(mirror.coefficients[k]!);
-      return gap.exact !== undefined && `${gap.exact}` === "0";
+      return isExactZero(gap);
     });
   });
 }

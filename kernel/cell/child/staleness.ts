@@ -1,5 +1,6 @@
 // Which results speak of values that are no longer there, because the cell they came from has been edited or run again.
 import type { CellRun } from "../../../lib/page/host.ts";
+import { escapeHtml } from "../../../lib/page/html.ts";
 
 /** A run with what tells whether a later one is of the same cell. */
 export interface TracedRun extends CellRun {
@@ -64,6 +65,6 @@ function listed(cells: readonly number[]): string {
 /** The lines as something to be displayed: small and grey where the front end shows HTML. */
 export function staleNote(lines: readonly string[]): { readonly "text/plain": string; readonly "text/html": string } {
   const text = lines.join("\n");
-  const escaped = lines.map((line) => line.replaceAll("&", "&amp;").replaceAll("<", "&lt;"));
+  const escaped = lines.map(escapeHtml);
   return { "text/plain": text, "text/html": `<small style="opacity: 0.7">${escaped.join("<br>")}</small>` };
 }

@@ -75,6 +75,7 @@ function code(text: string): string {
   return `<code>${escaped(bare)}</code>`;
 }
 
-export function escaped(text: string): string {
+/** Quotation marks stay: the mathematics is read from the escaped text, where an apostrophe tells a word from a letter. */
+function escaped(text: string): string {
   return text.replace(/&/g, "&amp;").replace(/</g, "&lt;").replace(/>/g, "&gt;");
 }

@@ -71,8 +71,9 @@ def at_best(seconds, attempt, tries=3):
     assert min(took) <= seconds, f"{took} s, expected {seconds} s"
 
 
-def start(kernel_name="halfperiod", **options):
-    manager = KernelManager(kernel_name=kernel_name)
+def start(kernel_name="halfperiod", manager=None, **options):
+    """A kernel that is ready, with a client. `manager` is one with settings of its own; `options` are those of the start."""
+    manager = manager or KernelManager(kernel_name=kernel_name)
     manager.start_kernel(**options)
     client = manager.client()
     client.start_channels()

@@ -145,11 +145,7 @@ class Process(unittest.TestCase):
     def test_path_with_spaces(self):
         """the connection file may have spaces and letters in its path, and other ipc or tcp endpoints"""
         folder = tempfile.mkdtemp(prefix="half périod ")
-        manager = KernelManager(kernel_name="halfperiod", connection_file=os.path.join(folder, "k 1.json"))
-        manager.start_kernel()
-        client = manager.client()
-        client.start_channels()
-        client.wait_for_ready(timeout=SLOW)
+        manager, client = start(manager=KernelManager(kernel_name="halfperiod", connection_file=os.path.join(folder, "k 1.json")))
         self.assertEqual(Exchange(client, client.execute("1")).content["status"], "ok")
         client.stop_channels()
         manager.shutdown_kernel()
@@ -176,11 +172,7 @@ class Process(unittest.TestCase):
 
     def test_every_address(self):
         """a host that asks for all addresses of the machine gets them, and the kernel serves as ever"""
-        manager = KernelManager(kernel_name="halfperiod", ip="0.0.0.0")
-        manager.start_kernel()
-        client = manager.client()
-        client.start_channels()
-        client.wait_for_ready(timeout=SLOW)
+        manager, client = start(manager=KernelManager(kernel_name="halfperiod", ip="0.0.0.0"))
         self.assertEqual(Exchange(client, client.execute("1")).content["status"], "ok")
         client.stop_channels()
         manager.shutdown_kernel()
@@ -231,11 +223,7 @@ print("lived", reply["content"]["status"])
     def test_ipc(self):
         """the transport ipc works, and no socket file is left"""
         folder = tempfile.mkdtemp()
-        manager = KernelManager(kernel_name="halfperiod", transport="ipc", ip=os.path.join(folder, "k"))
-        manager.start_kernel()
-        client = manager.client()
-        client.start_channels()
-        client.wait_for_ready(timeout=SLOW)
+        manager, client = start(manager=KernelManager(kernel_name="halfperiod", transport="ipc", ip=os.path.join(folder, "k")))
         self.assertEqual(Exchange(client, client.execute("1")).content["status"], "ok")
         client.stop_channels()
         manager.shutdown_kernel()

@@ -1,5 +1,6 @@
 // Rational multiples of π, and what the circular functions are there: exact numbers at the twelfths that a quadratic field holds, and
 // half sums of roots of unity elsewhere.
+import { PoleError } from "../proof/errors.ts";
 import { DIV, JOIN, MINUS, NEG, PI, PLUS, TIMES } from "./operations.ts";
 import { type Exact, isNode } from "./origin.ts";
 import { Quadratic } from "./quadratic.ts";
@@ -107,7 +108,6 @@ export const exactCosine: ExactOn = (x) => {
   return q && sine(q.plus(HALF));
 };
 
-/** Where the cosine is 0 the tangent is left to its pole. */
 export const exactTangent: ExactOn = (x) => {
   const q = halfTurns(x);
   const [s, c] = q ? [sine(q.times(2)), sine(q.times(2).plus(HALF))] : [];
@@ -115,11 +115,21 @@ export const exactTangent: ExactOn = (x) => {
   // sin 2x/(1 + cos 2x) = (1 − cos 2x)/sin 2x; where one is irrational the other is rational.
   if (c instanceof Rational) {
     const below = c.plus(1);
-    if (below.sign() === 0) return undefined;
+    if (below.sign() === 0) throw tangentPole(q!);
     return s instanceof Rational ? s.div(below) : s.div(s.withRational(below));
   }
   return s instanceof Rational ? c.withRational(Rational.one).minus(c).div(c.withRational(s)) : undefined;
 };
+
+function tangentPole(q: Rational): PoleError {
+  return new PoleError({
+    subject: "tan",
+    given: `${q}·π, where the cosine is 0`,
+    expected: "a number away from π/2 + kπ",
+    hint: "1/tan x is cos x/sin x, which is 0 there.",
+    argument: "x",
+  });
+}
 
 /** e^x at imaginary x: 1, −1, ±i and the primitive third and sixth roots of unity. */
 export const exactExponential: ExactOn = (x) => {

@@ -1,12 +1,13 @@
 // Enclosures in the words of an error: a few digits, enough to see what is wrong.
 import { PoleError } from "../../proof/errors.ts";
-import { type Ball, magnitude, toDouble } from "./data.ts";
+import { type Ball, containsZero, magnitude, toDouble } from "./data.ts";
 
-/** "0 ± 0.001", or "about 2^-99999" for what no double is. */
+/** "0 ± 0.001", or "0 ± 2^-99999" and "about −2^-99999" for what no double is. */
 export function shown(x: Ball): string {
   const middle = toDouble(x);
   if (!Number.isFinite(middle) || (middle === 0 && x.man !== 0n)) {
-    return `${x.man < 0n ? "−" : ""}about 2^${magnitude(x)}`;
+    if (containsZero(x)) return `0 ± 2^${magnitude(x)}`;
+    return `about ${x.man < 0n ? "−" : ""}2^${magnitude(x)}`;
   }
   const radius = radiusOf(x);
   return radius === 0 ? short(middle) : `${short(middle)} ± ${short(radius)}`;

@@ -4,6 +4,7 @@ import { exact, rational } from "../../../lib/number/convert.ts";
 import { cos, exp, sin, sqrt, tan } from "../../../lib/number/functions.ts";
 import { i, π } from "../../../lib/number/symbols.ts";
 import { Complex, type Real } from "../../../lib/number/values.ts";
+import { PoleError } from "../../../lib/proof/errors.ts";
 
 const at = (n: number, d: number) => π.times(n).div(d);
 
@@ -39,6 +40,11 @@ describe("multiples of π", () => {
     expect(exp(at(2, 3).times(i)).equals(exact`-1/2 + √-3/2`)).toBe(true);
     expect(`${exp(at(1, 2).times(i).plus(i.times(π)))}`).toBe("-i");
     expect(`${exp(i.times(π).times(rational(5, 2)))}`).toBe("i");
+  });
+
+  it("tan has its poles named — oracle: cos π/2 = cos(−3π/2) = 0", () => {
+    expect(() => tan(at(1, 2))).toThrow(/^tan: 1\/2·π, where the cosine is 0; expected a number away from/);
+    expect(() => tan(at(-3, 2))).toThrow(PoleError);
   });
 
   it("a number near one is none", () => {
